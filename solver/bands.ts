@@ -1,0 +1,141 @@
+import { BOLTZMANN, ELECTRON_MASS, ELEMENTARY_CHARGE, PLANCK } from './constants.ts';
+import { narrowing } from './narrowing.ts';
+import { isAlloy, type AlloyMaterial, type Assumptions, type CrystalMaterial, type GapLaw, type MassPolynomial, type Material, type NarrowingLaw } from './stack.ts';
+
+/** The bands at one point of a layer: everything that the carriers there depend on besides the Fermi level. */
+export interface LocalBands {
+  /** K */ T: number;
+  /** eV */ kT: number;
+  /** eV, narrowed when narrowing is on */ gap: number;
+  /** eV, narrowed likewise */ affinity: number;
+  /** cm^-3, band edge; 0 in an insulator */ nc: number;
+  nv: number;
+  /** static, relative */ permittivity: number;
+  permittivityHighFrequency: number;
+  insulator: boolean;
+  /** Kane's alpha, 1/eV; 0 = parabolic */ kaneN: number;
+  kaneP: number;
+  statistics: 'fermi-dirac' | 'boltzmann';
+}
+
+/** Reference temperature of affinities, K. */
+const T_AFFINITY = 300;
+
+export function materialId(m: Material): string {
+  return m.id;
+}
+
+/** Gap by Varshni's law, eV; Varshni, Physica 34, 149 (1967), eq. (1). @param T  K, > 0 */
+export function gapAt(law: GapLaw, T: number): number {
+  return law.zeroK - (law.alpha * T * T) / (T + law.beta);
+}
+
+/**
+ * Effective density of states, cm^-3: 2 (2 pi m k T/h^2)^(3/2); e.g. Sze and Ng, Physics of Semiconductor Devices (2007), section 1.4.
+ *
+ * @param mass  density-of-states mass, m0, valleys included
+ * @param T     K
+ */
+export function densityOfStates(mass: number, T: number): number {
+  // kT in J, h in J s: per m^3, then per cm^3.
+  const perM2 = (2 * Math.PI * mass * ELECTRON_MASS * BOLTZMANN * ELEMENTARY_CHARGE * T) / (PLANCK * PLANCK);
+  return 2e-6 * perM2 * Math.sqrt(perM2);
+}
+
+/**
+ * Bands of a material at composition x and temperature T.
+ *
+ * @param x       share of the alloy's `second`, 0..1; ignored for a crystal
+ * @param T       K, > 0
+ * @param doping  sums of all active donors and acceptors, cm^-3; only narrowing uses them
+ * @throws {RangeError} T not positive, x outside 0..1, a semiconductor without masses, or a gap that is not positive
+ *
+ * An alloy's rule P(x) = (1 - x) P_A + x P_B - x (1 - x) b holds for each valley's gap at T, for chi at 300 K, for the share kappa, for masses and
+ * permittivities. A further valley counts in the alloy only where both ends know it. chi(x, T) follows from the alloy's own gap:
+ * chi = chi(x, 300 K) + kappa [Eg(x, 300 K) - Eg(x, T)].
+ */
+export function localBands(material: Material, x: number, T: number, a: Assumptions, doping: { donors: number; acceptors: number }): LocalBands {
+  if (!(T > 0) || !Number.isFinite(T)) throw new RangeError(`temperature must be positive and finite: ${T}`);
+  const alloy = isAlloy(material) ? material : null;
+  if (alloy && !(x >= 0 && x <= 1)) throw new RangeError(`composition must lie in 0..1: ${x}`);
+  const A = isAlloy(material) ? material.first : material;
+  const B = isAlloy(material) ? material.second : material;
+  const share = alloy ? x : 0;
+  const mix = (first: number, second: number, bowing = 0): number => (1 - share) * first + share * second - share * (1 - share) * bowing;
+  const bowing: AlloyMaterial['bowing'] = alloy ? alloy.bowing : {};
+
+  const now = lowestValley(A, B, share, T, alloy);
+  const at300 = T === T_AFFINITY ? now : lowestValley(A, B, share, T_AFFINITY, alloy);
+  let gap = now.gap;
+  const kappa = mix(A.affinityShare, B.affinityShare);
+  let affinity = mix(A.affinity, B.affinity, bowing.affinity) + kappa * (at300.gap - now.gap);
+  if (a.narrowing) {
+    const fall = (law: NarrowingLaw | undefined): number => (law ? narrowing(law, doping.donors, doping.acceptors) : 0);
+    const fallA = fall(A.narrowing);
+    const fallB = fall(B.narrowing);
+    gap -= mix(fallA, fallB);
+    affinity += mix(fallA * (A.narrowing?.conductionShare ?? 0), fallB * (B.narrowing?.conductionShare ?? 0));
+  }
+  if (!(gap > 0)) throw new RangeError(`the gap of ${material.id} is not positive at ${T} K: ${gap} eV`);
+
+  const insulator = A.insulator || (share > 0 && B.insulator);
+  let nc = 0;
+  let nv = 0;
+  if (!insulator) {
+    nc = densityOfStates(mix(massAt(now.massA, T, A.id), massAt(now.massB, T, B.id), bowing.electronMass), T);
+    nv = densityOfStates(mix(massAt(A.holeMass, T, A.id), massAt(B.holeMass, T, B.id), bowing.holeMass), T);
+  }
+  return {
+    T,
+    kT: BOLTZMANN * T,
+    gap,
+    affinity,
+    nc,
+    nv,
+    permittivity: mix(A.permittivity, B.permittivity, bowing.permittivity),
+    permittivityHighFrequency: mix(A.permittivityHighFrequency, B.permittivityHighFrequency, bowing.permittivity),
+    insulator,
+    kaneN: a.nonParabolic ? mix(A.nonParabolicity?.electron ?? 0, B.nonParabolicity?.electron ?? 0) : 0,
+    kaneP: a.nonParabolic ? mix(A.nonParabolicity?.hole ?? 0, B.nonParabolicity?.hole ?? 0) : 0,
+    statistics: a.statistics,
+  };
+}
+
+interface Valley {
+  gap: number;
+  massA: MassPolynomial | undefined;
+  massB: MassPolynomial | undefined;
+}
+
+function lowestValley(A: CrystalMaterial, B: CrystalMaterial, x: number, T: number, alloy: AlloyMaterial | null): Valley {
+  const rule = (a: GapLaw, b: GapLaw, bow: number): number => (1 - x) * gapAt(a, T) + x * gapAt(b, T) - x * (1 - x) * bow;
+  let lowest: Valley = { gap: rule(A.gap, B.gap, polynomial(alloy?.bowing.gap ?? 0, x)), massA: A.electronMass, massB: B.electronMass };
+  for (const valley of A.otherValleys ?? []) {
+    // At x = 0 the other end has no say, so its valley is not needed.
+    const partner = x === 0 ? valley : B.otherValleys?.find((v) => v.name === valley.name);
+    if (!partner) continue;
+    const gap = rule(valley.gap, partner.gap, alloy?.valleyBowing?.[valley.name] ?? 0);
+    if (gap < lowest.gap) lowest = { gap, massA: valley.electronMass, massB: partner.electronMass };
+  }
+  if (x === 1) {
+    for (const valley of B.otherValleys ?? []) {
+      const gap = gapAt(valley.gap, T);
+      if (gap < lowest.gap) lowest = { gap, massA: valley.electronMass, massB: valley.electronMass };
+    }
+  }
+  return lowest;
+}
+
+function polynomial(c: number | readonly number[], x: number): number {
+  if (typeof c === 'number') return c;
+  let sum = 0;
+  for (let i = c.length - 1; i >= 0; i--) sum = sum * x + c[i];
+  return sum;
+}
+
+function massAt(mass: MassPolynomial | undefined, T: number, id: string): number {
+  if (!mass) throw new RangeError(`${id} has no density-of-states mass`);
+  const m = polynomial(mass, T);
+  if (!(m > 0)) throw new RangeError(`the density-of-states mass of ${id} is not positive at ${T} K: ${m}`);
+  return m;
+}

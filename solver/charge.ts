@@ -1,0 +1,124 @@
+import { localBands, type LocalBands } from './bands.ts';
+import { carrierLog, type CarrierLog } from './carriers.ts';
+import { levelInForce, logNeutralShare } from './dopants.ts';
+import { profileAt } from './profile.ts';
+import type { Assumptions, Layer } from './stack.ts';
+
+/** One level at one point. */
+export interface LocalLevel {
+  donor: boolean;
+  /** active, cm^-3 */ density: number;
+  /** b */ bound: number;
+  /** below Ec (donor) or above Ev (acceptor), eV */ depth: number;
+  /** ln g */ logG: number;
+  /** index of the layer's dopant row; -1 for the compensating charge of a row */ row: number;
+}
+
+/** Everything of one point that its charge depends on besides the Fermi level. */
+export interface LocalCharge {
+  bands: LocalBands;
+  levels: LocalLevel[];
+  /** further charge that nothing moves, +q, cm^-3 */ fixed: number;
+}
+
+/** All cm^-3. */
+export interface ChargeValues {
+  n: number;
+  p: number;
+  /** ionised, compensating charge included */ donors: number;
+  acceptors: number;
+  /** p - n + N_D+ - N_A- */ net: number;
+  /** d net/d(Ec - EF), eV^-1 cm^-3, >= 0 */ slope: number;
+}
+
+/**
+ * Bands and levels at one depth of a layer.
+ *
+ * @param z  from the layer's top, cm
+ * @param T  K, > 0
+ * @throws {RangeError} a concentration that is negative or not finite, or what `localBands` refuses
+ *
+ * A compensation ratio theta leaves the row all its N and adds theta N of the opposite kind, always ionised.
+ */
+export function localCharge(layer: Layer, z: number, T: number, a: Assumptions): LocalCharge {
+  const levels: LocalLevel[] = [];
+  let donors = 0;
+  let acceptors = 0;
+  layer.dopants.forEach((d, row) => {
+    const density = profileAt(d.concentration, z, layer.thickness) * d.activation;
+    if (!(density >= 0) || !Number.isFinite(density)) throw new RangeError(`concentration must be finite and not negative: ${density}`);
+    if (density === 0) return;
+    const donor = d.kind === 'donor';
+    const { depth, bound } = levelInForce(d, density);
+    if (donor) donors += density;
+    else acceptors += density;
+    levels.push({ donor, density, bound, depth, logG: Math.log(d.degeneracy), row });
+    if (d.compensation > 0) levels.push({ donor: !donor, density: density * d.compensation, bound: 0, depth: 0, logG: 0, row: -1 });
+  });
+  const x = profileAt(layer.x, z, layer.thickness);
+  return { bands: localBands(layer.material, x, T, a, { donors, acceptors }), levels, fixed: 0 };
+}
+
+/** All donors less all acceptors, charged or not, with fixed charge: what is left when every level is charged, cm^-3. */
+export function netDoping(c: LocalCharge): number {
+  let donors = 0;
+  let acceptors = 0;
+  for (const level of c.levels) {
+    if (level.donor) donors += level.density;
+    else acceptors += level.density;
+  }
+  return donors - acceptors + c.fixed;
+}
+
+/** How far, in kT, the level lies on its charged side of EF. */
+export function distance(bands: LocalBands, level: LocalLevel, ecMinusEf: number): number {
+  return (level.donor ? ecMinusEf - level.depth : bands.gap - ecMinusEf - level.depth) / bands.kT;
+}
+
+const electrons: CarrierLog = { log: 0, slope: 0 };
+const holes: CarrierLog = { log: 0, slope: 0 };
+
+/**
+ * Charge at a given Fermi level, into `out` (nothing is allocated). An insulator carries none: all zero, whatever is in it.
+ *
+ * @param ecMinusEf  eV, any size
+ *
+ * `net` is summed as (p + neutral acceptors) - (n + neutral donors) + net doping, so that equal donors and acceptors cancel exactly.
+ */
+export function chargeAt(c: LocalCharge, ecMinusEf: number, out: ChargeValues): void {
+  const b = c.bands;
+  out.n = out.p = out.donors = out.acceptors = out.net = out.slope = 0;
+  if (b.insulator) return;
+  const boltzmann = b.statistics === 'boltzmann';
+  carrierLog(-ecMinusEf / b.kT, b.kaneN * b.kT, boltzmann, electrons);
+  carrierLog((ecMinusEf - b.gap) / b.kT, b.kaneP * b.kT, boltzmann, holes);
+  // Only Boltzmann statistics can overflow, far inside a band where they mean nothing; kept finite for the iteration's sake.
+  out.n = b.nc * Math.exp(Math.min(electrons.log, 600));
+  out.p = b.nv * Math.exp(Math.min(holes.log, 600));
+  let slope = out.n * electrons.slope + out.p * holes.slope;
+  let neutralDonors = 0;
+  let neutralAcceptors = 0;
+  let donors = 0;
+  let acceptors = 0;
+  for (let i = 0; i < c.levels.length; i++) {
+    const level = c.levels[i];
+    if (level.donor) donors += level.density;
+    else acceptors += level.density;
+    let charged = level.density;
+    if (level.bound > 0) {
+      const u = distance(b, level, ecMinusEf);
+      const neutral = Math.exp(logNeutralShare(u, level.logG));
+      // Computed for itself: near freeze-out one minus the filled share has no digits left.
+      const empty = Math.exp(logNeutralShare(-u, -level.logG));
+      charged = level.density * (1 - level.bound + level.bound * empty);
+      const held = level.density * level.bound * neutral;
+      if (level.donor) neutralDonors += held;
+      else neutralAcceptors += held;
+      slope += held * empty;
+    }
+    if (level.donor) out.donors += charged;
+    else out.acceptors += charged;
+  }
+  out.net = out.p + neutralAcceptors - (out.n + neutralDonors) + (donors - acceptors + c.fixed);
+  out.slope = slope / b.kT;
+}

@@ -1,0 +1,182 @@
+import { chargeAt, distance, localCharge, netDoping, type ChargeValues, type LocalCharge } from './charge.ts';
+import { ELEMENTARY_CHARGE, EPSILON_0 } from './constants.ts';
+import { carrierLog, type CarrierLog } from './carriers.ts';
+import { logNeutralShare } from './dopants.ts';
+import { neutralLevel } from './fermi-level.ts';
+import { carrierMobility } from './mobility.ts';
+import { isUniform, profileAt } from './profile.ts';
+import type { IonisedRow, LayerFigures, Regime } from './solution.ts';
+import type { Assumptions, Layer } from './stack.ts';
+
+/** EF closer to its band than this, in kT, is degenerate (common practice, no source). */
+const DEGENERATE_WITHIN = 3;
+/** Majority carriers below this share of the net doping: freeze-out (common practice, no source). */
+const FROZEN_BELOW = 0.9;
+/** Minority over majority above this: intrinsic (common practice, no source). */
+const INTRINSIC_ABOVE = 0.1;
+/** Cells of the depth integral of a graded layer's conductance. */
+const CONDUCTANCE_CELLS = 64;
+
+const blank = (): ChargeValues => ({ n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 });
+
+/**
+ * Figures of one layer by itself, from charge neutrality at its middle.
+ *
+ * @param T              K, > 0
+ * @param fullyDepleted  found by the solution of the whole stack; passed through
+ *
+ * n_i = sqrt(Nc Nv) exp(-Eg/2kT) whatever the statistics. Debye length sqrt(eps/(q d(n - p)/dEF)), both carriers (e.g. Ashcroft and
+ * Mermin, Solid State Physics, 1976, eq. 17.55 for the degenerate form). Sheet resistance of a graded layer: one over its conductance,
+ * integrated over depth with the carriers of local neutrality.
+ */
+export function layerFigures(layer: Layer, T: number, a: Assumptions, fullyDepleted: boolean): LayerFigures {
+  const z = layer.thickness / 2;
+  const c = localCharge(layer, z, T, a);
+  const b = c.bands;
+  const { ecMinusEf } = neutralLevel(c);
+  const v = blank();
+  chargeAt(c, ecMinusEf, v);
+  const mobilities = mobilitiesAt(layer, z, c);
+  const sigma = b.insulator ? null : conductivity(v, mobilities);
+  const sheet = b.insulator ? null : sheetConductance(layer, T, a, sigma);
+  return {
+    name: layer.name,
+    gap: b.gap,
+    affinity: b.affinity,
+    nc: b.nc,
+    nv: b.nv,
+    ecMinusEf,
+    efMinusEv: b.gap - ecMinusEf,
+    n: v.n,
+    p: v.p,
+    ni: b.insulator ? 0 : Math.exp(0.5 * (Math.log(b.nc) + Math.log(b.nv) - b.gap / b.kT)),
+    ionised: ionisedRows(layer, z, c, ecMinusEf),
+    regime: regimeOf(c, ecMinusEf, v),
+    type: typeOf(c, v),
+    debyeLength: b.insulator ? null : debyeLength(c, ecMinusEf),
+    mobilityN: mobilities.n,
+    mobilityP: mobilities.p,
+    resistivity: sigma === null ? null : 1 / sigma,
+    sheetResistance: sheet === null ? null : 1 / sheet,
+    fullyDepleted,
+    boltzmann: textbook(c),
+    insulator: b.insulator,
+  };
+}
+
+function ionisedRows(layer: Layer, z: number, c: LocalCharge, ecMinusEf: number): IonisedRow[] {
+  return layer.dopants.map((d, row) => {
+    const level = c.levels.find((l) => l.row === row);
+    if (!level) {
+      return { dopant: d.id, kind: d.kind, concentration: profileAt(d.concentration, z, layer.thickness) * d.activation, ionised: 0, fraction: 1, fractionDepleted: 1, depth: d.depth };
+    }
+    const fraction = c.bands.insulator ? 0 : chargedShare(c, level, ecMinusEf);
+    return {
+      dopant: d.id,
+      kind: d.kind,
+      concentration: level.density,
+      ionised: fraction * level.density,
+      fraction,
+      fractionDepleted: c.bands.insulator ? 0 : chargedShare(c, level, level.donor ? c.bands.gap : 0),
+      depth: level.depth,
+    };
+  });
+}
+
+/** Charged share; near freeze-out summed without cancellation. */
+function chargedShare(c: LocalCharge, level: LocalCharge['levels'][number], ecMinusEf: number): number {
+  if (level.bound === 0) return 1;
+  return 1 - level.bound + level.bound * Math.exp(logNeutralShare(-distance(c.bands, level, ecMinusEf), -level.logG));
+}
+
+/** Degenerate before all: a degenerate layer conducts like a metal whatever its dopants hold. */
+function regimeOf(c: LocalCharge, ecMinusEf: number, v: ChargeValues): Regime {
+  const b = c.bands;
+  if (b.insulator) return 'intrinsic';
+  const reach = DEGENERATE_WITHIN * b.kT;
+  if (ecMinusEf < reach || b.gap - ecMinusEf < reach) return 'degenerate';
+  const majority = Math.max(v.n, v.p);
+  if (Math.min(v.n, v.p) > INTRINSIC_ABOVE * majority || majority === 0) return 'intrinsic';
+  return majority < FROZEN_BELOW * Math.abs(netDoping(c)) ? 'freeze-out' : 'extrinsic';
+}
+
+/** By the carrier that is more than the other; by the doping where both underflow. */
+function typeOf(c: LocalCharge, v: ChargeValues): 'n' | 'p' | 'i' {
+  if (c.bands.insulator) return 'i';
+  const net = netDoping(c);
+  const majority = Math.max(v.n, v.p);
+  if (majority === 0) return net > 0 ? 'n' : net < 0 ? 'p' : 'i';
+  if (Math.min(v.n, v.p) > INTRINSIC_ABOVE * majority) return 'i';
+  return v.n > v.p ? 'n' : 'p';
+}
+
+const electrons: CarrierLog = { log: 0, slope: 0 };
+const holes: CarrierLog = { log: 0, slope: 0 };
+
+/** cm; in logarithms, since at low temperature both carriers may be below the smallest number. */
+function debyeLength(c: LocalCharge, ecMinusEf: number): number | null {
+  const b = c.bands;
+  const boltzmann = b.statistics === 'boltzmann';
+  carrierLog(-ecMinusEf / b.kT, b.kaneN * b.kT, boltzmann, electrons);
+  carrierLog((ecMinusEf - b.gap) / b.kT, b.kaneP * b.kT, boltzmann, holes);
+  const ln = Math.log(b.nc * electrons.slope) + electrons.log;
+  const lp = Math.log(b.nv * holes.slope) + holes.log;
+  const logSum = Math.max(ln, lp) + Math.log1p(Math.exp(-Math.abs(ln - lp)));
+  const length = Math.exp(0.5 * (Math.log((b.permittivity * EPSILON_0 * b.kT) / ELEMENTARY_CHARGE) - logSum));
+  return Number.isFinite(length) ? length : null;
+}
+
+interface Mobilities {
+  n: number | null;
+  p: number | null;
+}
+
+function mobilitiesAt(layer: Layer, z: number, c: LocalCharge): Mobilities {
+  if (c.bands.insulator) return { n: null, p: null };
+  let total = 0;
+  for (const level of c.levels) if (level.row >= 0) total += level.density;
+  const x = profileAt(layer.x, z, layer.thickness);
+  return { n: carrierMobility(layer.material, 'electron', x, total), p: carrierMobility(layer.material, 'hole', x, total) };
+}
+
+/** 1/(ohm cm); null when the mobility of a carrier that counts is unknown, or when nothing conducts. */
+function conductivity(v: ChargeValues, m: Mobilities): number | null {
+  const majority = Math.max(v.n, v.p);
+  // A minority below a millionth may lack its mobility: no mobility ratio makes it count.
+  if ((m.n === null && v.n > 1e-6 * majority) || (m.p === null && v.p > 1e-6 * majority)) return null;
+  const sigma = ELEMENTARY_CHARGE * (v.n * (m.n ?? 0) + v.p * (m.p ?? 0));
+  return sigma > 0 && Number.isFinite(1 / sigma) ? sigma : null;
+}
+
+/** 1/ohm. */
+function sheetConductance(layer: Layer, T: number, a: Assumptions, middle: number | null): number | null {
+  if (isUniform(layer)) return middle === null ? null : middle * layer.thickness;
+  const v = blank();
+  let sum = 0;
+  // Midpoints: the ends of a profile may be zero, where nothing conducts.
+  for (let k = 0; k < CONDUCTANCE_CELLS; k++) {
+    const z = (layer.thickness * (k + 0.5)) / CONDUCTANCE_CELLS;
+    const c = localCharge(layer, z, T, a);
+    chargeAt(c, neutralLevel(c).ecMinusEf, v);
+    const sigma = conductivity(v, mobilitiesAt(layer, z, c));
+    if (sigma === null) {
+      if (Math.max(v.n, v.p) > 0) return null;
+      continue;
+    }
+    sum += (sigma * layer.thickness) / CONDUCTANCE_CELLS;
+  }
+  return sum > 0 && Number.isFinite(1 / sum) ? sum : null;
+}
+
+/** The same point with Boltzmann statistics and every dopant charged, deep ones too. */
+function textbook(c: LocalCharge): { ecMinusEf: number; n: number; p: number } {
+  const plain: LocalCharge = {
+    bands: { ...c.bands, statistics: 'boltzmann', kaneN: 0, kaneP: 0 },
+    levels: c.levels.map((l) => ({ ...l, bound: 0 })),
+    fixed: c.fixed,
+  };
+  const { ecMinusEf } = neutralLevel(plain);
+  const v = blank();
+  chargeAt(plain, ecMinusEf, v);
+  return { ecMinusEf, n: v.n, p: v.p };
+}

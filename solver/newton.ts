@@ -1,0 +1,125 @@
+import type { PoissonSystem } from './poisson-system.ts';
+import { ACCEPTANCE } from './quality.ts';
+
+export interface NewtonResult {
+  converged: boolean;
+  updates: number;
+  /** V */ lastUpdate: number;
+  reason: 'small update' | 'singular matrix' | 'no progress' | 'too many updates' | 'not finite';
+}
+
+const MOST_UPDATES = 200;
+const SMALLEST_STEP = 1e-7;
+
+/**
+ * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place.
+ *
+ * Steps are accepted by the natural monotonicity test on the same factors (Deuflhard, Numer. Math. 22, 289, 1974; Newton
+ * Methods for Nonlinear Problems, 2004, algorithm NLEQ-RES/ERR). Should it stall, the problem's convexity gives a second way: the
+ * residual is the gradient of a convex functional (charge never grows with psi), so a search on the directional derivative along a
+ * Newton direction always makes progress (Bank and Rose, Numer. Math. 37, 279, 1981).
+ */
+export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
+  const n = psi.length;
+  const step = new Float64Array(n);
+  const next = new Float64Array(n);
+  const trial = new Float64Array(n);
+  let updates = 0;
+  let lambda = 1;
+  let lastUpdate = Infinity;
+  let convex = false;
+  system.evaluate(psi, true);
+  while (updates < MOST_UPDATES) {
+    if (!system.factor()) return { converged: false, updates, lastUpdate, reason: 'singular matrix' };
+    for (let i = 0; i < n; i++) step[i] = -system.residual[i];
+    system.factors.solve(step);
+    const size = largest(step);
+    updates++;
+    if (!Number.isFinite(size)) return { converged: false, updates, lastUpdate: size, reason: 'not finite' };
+    // The update itself decides, and it is taken in full: near the end Newton's error is far below its last step.
+    if (size < ACCEPTANCE.update) {
+      for (let i = 0; i < n; i++) psi[i] += step[i];
+      system.evaluate(psi, false);
+      return { converged: true, updates, lastUpdate: size, reason: 'small update' };
+    }
+    if (!convex) {
+      const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda));
+      if (found > 0) lambda = found;
+      else {
+        // The factors were of this very matrix, but the residual is of the last trial: back to psi before the second way.
+        convex = true;
+        system.evaluate(psi, true);
+      }
+    }
+    if (convex) {
+      lambda = convexStep(system, psi, step, trial, dot(step, system.residual));
+      if (!(lambda > 0)) return { converged: false, updates, lastUpdate: size, reason: 'no progress' };
+      for (let i = 0; i < n; i++) trial[i] = psi[i] + lambda * step[i];
+      system.evaluate(trial, true);
+    }
+    psi.set(trial);
+    lastUpdate = lambda * size;
+  }
+  return { converged: false, updates, lastUpdate, reason: 'too many updates' };
+}
+
+/**
+ * Step length that passes the natural monotonicity test, 0 when none above SMALLEST_STEP does. Leaves the accepted point in
+ * `trial` and its residual and matrix in the system (the factors stay those of the step).
+ */
+function monotoneStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, next: Float64Array, first: number): number {
+  const n = psi.length;
+  const stepNorm = Math.sqrt(dot(step, step));
+  for (let lambda = first; lambda > SMALLEST_STEP; ) {
+    for (let i = 0; i < n; i++) trial[i] = psi[i] + lambda * step[i];
+    system.evaluate(trial, true);
+    for (let i = 0; i < n; i++) next[i] = -system.residual[i];
+    system.factors.solve(next);
+    const nextNorm = Math.sqrt(dot(next, next));
+    if (nextNorm <= (1 - lambda / 4) * stepNorm) return lambda;
+    let difference = 0;
+    for (let i = 0; i < n; i++) difference += (next[i] - (1 - lambda) * step[i]) ** 2;
+    const predicted = (0.5 * stepNorm * lambda * lambda) / Math.sqrt(difference);
+    lambda = Number.isFinite(predicted) ? Math.max(Math.min(predicted, lambda / 2), lambda / 10) : lambda / 10;
+  }
+  return 0;
+}
+
+/** Step length at which the directional derivative has fallen to half or less in size (bracketing, then regula falsi with halving). */
+function convexStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, slope0: number): number {
+  const slopeAt = (lambda: number): number => {
+    for (let i = 0; i < psi.length; i++) trial[i] = psi[i] + lambda * step[i];
+    system.evaluate(trial, false);
+    return dot(step, system.residual);
+  };
+  let low = 0;
+  let high = 1;
+  for (let tries = 0; tries < 60; tries++) {
+    const slope = slopeAt(high);
+    if (Math.abs(slope) <= 0.5 * Math.abs(slope0)) return high;
+    if (slope * slope0 > 0) {
+      if (high >= 1) return high;
+      low = high;
+      high = Math.min(1, low + 0.5 * (1 - low));
+    } else {
+      high = 0.5 * (low + high);
+    }
+    if (high - low < 1e-14) return low;
+  }
+  return low;
+}
+
+function largest(v: Float64Array): number {
+  let m = 0;
+  for (let i = 0; i < v.length; i++) {
+    const a = Math.abs(v[i]);
+    if (!(a <= m)) m = a;
+  }
+  return m;
+}
+
+function dot(a: Float64Array, b: Float64Array): number {
+  let s = 0;
+  for (let i = 0; i < a.length; i++) s += a[i] * b[i];
+  return s;
+}

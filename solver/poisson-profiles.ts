@@ -1,0 +1,47 @@
+import { chargeAt, type ChargeValues } from './charge.ts';
+import type { PoissonSystem } from './poisson-system.ts';
+import type { Profiles } from './solution.ts';
+
+/**
+ * Profiles by side from a solved potential. The field at a node is the displacement that the box scheme itself carries there (the
+ * cell's flux plus the charge of the half box between), so Gauss's law holds for the printed fields too.
+ *
+ * @param psi  [nodes], V
+ */
+export function profilesOf(system: PoissonSystem, psi: Float64Array): Profiles {
+  const { mesh, conductance, charges } = system;
+  const sides = mesh.nodes + mesh.local.length - 1;
+  const array = (): Float64Array => new Float64Array(sides);
+  const profiles: Profiles = {
+    z: array(), layer: new Int32Array(sides), ec: array(), ev: array(), psi: array(), field: array(),
+    n: array(), p: array(), ionisedDonors: array(), ionisedAcceptors: array(), charge: array(),
+  };
+  const out: ChargeValues = { n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 };
+  let top = 0;
+  mesh.local.forEach((z, l) => {
+    const first = mesh.first[l];
+    for (let k = 0; k < z.length; k++) {
+      const i = first + k;
+      const s = i + l;
+      profiles.z[s] = top + z[k];
+      profiles.layer[s] = l;
+      profiles.psi[s] = psi[i];
+      profiles.ec[s] = system.ecFlat[s] - psi[i];
+      profiles.ev[s] = profiles.ec[s] - system.gap[s];
+      chargeAt(charges[s], profiles.ec[s], out);
+      profiles.n[s] = out.n;
+      profiles.p[s] = out.p;
+      profiles.ionisedDonors[s] = out.donors;
+      profiles.ionisedAcceptors[s] = out.acceptors;
+      profiles.charge[s] = out.net;
+      const q = system.density[s];
+      // Below the node where there is a cell below, else above it.
+      const displacement = k + 1 < z.length
+        ? -conductance[i] * (psi[i + 1] - psi[i]) - 0.5 * (z[k + 1] - z[k]) * q
+        : -conductance[i - 1] * (psi[i] - psi[i - 1]) + 0.5 * (z[k] - z[k - 1]) * q;
+      profiles.field[s] = displacement / system.permittivity[s];
+    }
+    top += z[z.length - 1];
+  });
+  return profiles;
+}
