@@ -83,7 +83,7 @@ const holes: CarrierLog = { log: 0, slope: 0 };
  *
  * @param ecMinusEf  eV, any size
  *
- * `net` is summed as (p + neutral acceptors) - (n + neutral donors) + net doping, so that equal donors and acceptors cancel exactly.
+ * `net` keeps its digits in exact compensation and in freeze-out alike (see the sum).
  */
 export function chargeAt(c: LocalCharge, ecMinusEf: number, out: ChargeValues): void {
   const b = c.bands;
@@ -96,14 +96,13 @@ export function chargeAt(c: LocalCharge, ecMinusEf: number, out: ChargeValues): 
   out.n = b.nc * Math.exp(Math.min(electrons.log, 600));
   out.p = b.nv * Math.exp(Math.min(holes.log, 600));
   let slope = out.n * electrons.slope + out.p * holes.slope;
-  let neutralDonors = 0;
-  let neutralAcceptors = 0;
-  let donors = 0;
-  let acceptors = 0;
+  // Levels on their charged side enter as N less what they hold, the others by their charge itself: equal donors and acceptors
+  // cancel exactly, and near freeze-out no digit is lost to N - (N - small).
+  let whole = c.fixed;
+  let small = 0;
   for (let i = 0; i < c.levels.length; i++) {
     const level = c.levels[i];
-    if (level.donor) donors += level.density;
-    else acceptors += level.density;
+    const sign = level.donor ? 1 : -1;
     let charged = level.density;
     if (level.bound > 0) {
       const u = distance(b, level, ecMinusEf);
@@ -112,13 +111,15 @@ export function chargeAt(c: LocalCharge, ecMinusEf: number, out: ChargeValues): 
       const empty = Math.exp(logNeutralShare(-u, -level.logG));
       charged = level.density * (1 - level.bound + level.bound * empty);
       const held = level.density * level.bound * neutral;
-      if (level.donor) neutralDonors += held;
-      else neutralAcceptors += held;
+      if (held < charged) {
+        whole += sign * level.density;
+        small -= sign * held;
+      } else small += sign * charged;
       slope += held * empty;
-    }
+    } else whole += sign * level.density;
     if (level.donor) out.donors += charged;
     else out.acceptors += charged;
   }
-  out.net = out.p + neutralAcceptors - (out.n + neutralDonors) + (donors - acceptors + c.fixed);
+  out.net = out.p - out.n + small + whole;
   out.slope = slope / b.kT;
 }

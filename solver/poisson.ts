@@ -21,6 +21,10 @@ const RICHARDSON = 1 / 3;
 /** One such estimate can be optimistic on graded meshes, so it is quoted four times as large. */
 const SAFETY = 4;
 const MOST_ROUNDS = 14;
+/** Below this sheet charge, cm^-2 (a field of some 15 V/cm), Gauss's law is held against this instead: a flat stack has no charge of its own. */
+const LEAST_SHEET = 1e8;
+/** Sums of charge are rounded at some 1e-14 of the doping that they contain; no finer balance can be asked of a flat stack. */
+const ROUNDING_SHARE = 1e-8;
 
 /**
  * Potential of the whole stack at thermal equilibrium, EF = 0 throughout, Ec = ecFlat - psi.
@@ -200,6 +204,7 @@ function gaussError(system: PoissonSystem, psi: Float64Array): number {
   const { mesh, conductance, density } = system;
   let open = 0;
   let largest = 0;
+  let doped = 0;
   mesh.local.forEach((z, l) => {
     const first = mesh.first[l];
     const last = first + z.length - 1;
@@ -208,6 +213,7 @@ function gaussError(system: PoissonSystem, psi: Float64Array): number {
     for (let k = 1; k + 1 < z.length; k++) {
       const q = density[first + l + k] * 0.5 * (z[k + 1] - z[k - 1]);
       inner += q;
+      for (const level of system.charges[first + l + k].levels) doped += ELEMENTARY_CHARGE * level.density * 0.5 * (z[k + 1] - z[k - 1]);
       absolute += Math.abs(q);
     }
     // Displacement (-eps dpsi/dz) in the first and the last cell of the layer encloses its inner boxes.
@@ -220,7 +226,7 @@ function gaussError(system: PoissonSystem, psi: Float64Array): number {
   let stack = 0;
   for (let i = 1; i + 1 < mesh.nodes; i++) stack += system.residual[i];
   open = Math.max(open, Math.abs(stack));
-  return largest > ELEMENTARY_CHARGE ? open / largest : open / ELEMENTARY_CHARGE;
+  return open / Math.max(largest, ELEMENTARY_CHARGE * LEAST_SHEET, ROUNDING_SHARE * doped);
 }
 
 function meshOfProfiles(profiles: Profiles, layers: number): Mesh {

@@ -1,0 +1,52 @@
+import { describe, expect, it } from 'vitest';
+import { fermiHalf, fermiMinusHalf, fermiThreeHalves, inverseFermiHalf } from '../../solver/fermi-integral.ts';
+// 25-digit values of the normalised integrals, two independent routes of multi-precision arithmetic (the file's own meta says how).
+import table from '../fixtures/fermi-dirac.json' with { type: 'json' };
+
+/** The accuracy asked of the routines over eta in [-700, 1e4]. */
+const RELATIVE = 1e-13;
+
+describe('Fermi-Dirac integrals', () => {
+  const orders = [['-1/2', fermiMinusHalf], ['1/2', fermiHalf], ['3/2', fermiThreeHalves]] as const;
+  for (const [order, f] of orders) {
+    it(`of order ${order} agree with 25-digit values`, () => {
+      for (const row of table.forward) expect(Math.abs(f(Number(row.eta)) / Number(row[order]) - 1), `eta = ${row.eta}`).toBeLessThan(RELATIVE);
+    });
+    it(`of order ${order} join without a step where the method changes`, () => {
+      for (const eta of [-38, -2, 0, 7, 40]) expect(Math.abs(f(eta - 1e-13) / f(eta) - 1)).toBeLessThan(5e-13);
+    });
+  }
+
+  it('tend to exp(eta) far below', () => {
+    for (const eta of [-700, -300, -100]) expect(Math.abs(fermiHalf(eta) / Math.exp(eta) - 1)).toBeLessThan(RELATIVE);
+  });
+
+  it('tend to Sommerfeld\'s form far above', () => {
+    // A. Sommerfeld, Z. Phys. 47, 1 (1928): 4/(3 sqrt(pi)) eta^1.5 [1 + pi^2/(8 eta^2) + 7 pi^4/(640 eta^4)]; the next term is below 1e-15 here.
+    const eta = 1e4;
+    const form = (4 / (3 * Math.sqrt(Math.PI))) * eta ** 1.5 * (1 + Math.PI ** 2 / (8 * eta ** 2) + (7 * Math.PI ** 4) / (640 * eta ** 4));
+    expect(Math.abs(fermiHalf(eta) / form - 1)).toBeLessThan(RELATIVE);
+  });
+
+  it('of order 1/2 inverts to 1e-13', () => {
+    for (const row of table.inverse_half) expect(Math.abs(inverseFermiHalf(Number(row.y)) - Number(row.eta)), `y = ${row.y}`).toBeLessThan(1e-13 * Math.max(1, Math.abs(Number(row.eta))));
+  });
+
+  it('of order 1/2 meets the value known at zero', () => {
+    // (1 - 2^(-1/2)) zeta(3/2); McDougall and Stoner, Phil. Trans. R. Soc. A 237, 67 (1938) tabulate 0.678094 = sqrt(pi)/2 of it.
+    expect(Math.abs(fermiHalf(0) / 0.765147024625 - 1)).toBeLessThan(1e-11);
+  });
+
+  it('has derivatives one order below', () => {
+    // Dingle, Appl. Sci. Res. B 6, 225 (1957): dF_j/deta = F_(j-1). A central difference of 1e-4 is good to about 1e-9.
+    for (const eta of [-3, 0.5, 6, 50]) {
+      const h = 1e-4;
+      expect(Math.abs((fermiHalf(eta + h) - fermiHalf(eta - h)) / (2 * h) / fermiMinusHalf(eta) - 1)).toBeLessThan(1e-8);
+      expect(Math.abs((fermiThreeHalves(eta + h) - fermiThreeHalves(eta - h)) / (2 * h) / fermiHalf(eta) - 1)).toBeLessThan(1e-8);
+    }
+  });
+
+  it('refuses to invert what is no value of the integral', () => {
+    for (const y of [0, -1, NaN, Infinity]) expect(() => inverseFermiHalf(y)).toThrow(RangeError);
+  });
+});
