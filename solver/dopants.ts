@@ -13,7 +13,7 @@ export interface LevelInForce {
  *
  * - "dilute": depth as given, b = 1.
  * - "merging": dE = dE0/[1 + (N/Nref)^c], b = 1/[1 + (N/Nb)^d]; Altermatt, Schenk et al., J. Appl. Phys. 100, 113714 and 113715 (2006).
- * - "screened": dE = max(0, dE0 - a N^(1/3)), Pearson and Bardeen, Phys. Rev. 75, 865 (1949); b = 1/[1 + (N/N_Mott)^d], the form of
+ * - "screened": dE = max(0, dE0 - a N^(1/3)), Pearson and Bardeen, Phys. Rev. 75, 865 (1949; from memory); b = 1/[1 + (N/N_Mott)^d], the form of
  *   Altermatt et al. put at the Mott density.
  * - "complete": b = 0.
  * A row that asks for a model without its parameters is taken as dilute.

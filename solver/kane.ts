@@ -41,10 +41,12 @@ export function kaneIntegral(eta: number, a: number, boltzmann: boolean, out: Ca
     return;
   }
   // Poles at t^2 = eta +- i pi, branch points at t = +-i/sqrt(a).
-  const pole = boltzmann || eta < -REACH ? Math.sqrt(TARGET) / 2 : Math.sqrt(0.5 * poleDepth(eta));
-  const h = (2 * Math.PI * Math.min(pole, 1 / Math.sqrt(a))) / TARGET;
+  // On the line Im t = c the integrand grows as exp(c^2), so the rule's error is exp(c^2 - 2 pi c/h) for the largest useful c.
+  const pole = boltzmann ? Infinity : Math.sqrt(0.5 * poleDepth(eta));
+  const strip = Math.min(pole, 1 / Math.sqrt(a), Math.sqrt(TARGET));
+  const h = (2 * Math.PI * strip) / (TARGET + strip * strip);
   const tail = boltzmann ? -Infinity : eta;
-  const end = Math.max(eta > 0 && !boltzmann ? eta : 0, 0) + REACH + 4;
+  const end = Math.max(tail, 0) + REACH + 4;
   let sum = 0;
   let slope = 0;
   for (let t = h; t * t < end; t += h) {

@@ -14,8 +14,10 @@ const DEGENERATE_WITHIN = 3;
 const FROZEN_BELOW = 0.9;
 /** Minority over majority above this: intrinsic (common practice, no source). */
 const INTRINSIC_ABOVE = 0.1;
-/** Cells of the depth integral of a graded layer's conductance. */
-const CONDUCTANCE_CELLS = 64;
+/** Cells of the depth integral of a graded layer's conductance: doubled from the first until the integral settles, or no figure. */
+const FIRST_CELLS = 32;
+const MOST_CELLS = 2048;
+const CONDUCTANCE_TOLERANCE = 1e-3;
 
 const blank = (): ChargeValues => ({ n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 });
 
@@ -96,8 +98,11 @@ function regimeOf(c: LocalCharge, ecMinusEf: number, v: ChargeValues): Regime {
   const reach = DEGENERATE_WITHIN * b.kT;
   if (ecMinusEf < reach || b.gap - ecMinusEf < reach) return 'degenerate';
   const majority = Math.max(v.n, v.p);
-  if (Math.min(v.n, v.p) > INTRINSIC_ABOVE * majority || majority === 0) return 'intrinsic';
-  return majority < FROZEN_BELOW * Math.abs(netDoping(c)) ? 'freeze-out' : 'extrinsic';
+  if (Math.min(v.n, v.p) > INTRINSIC_ABOVE * majority) return 'intrinsic';
+  const net = Math.abs(netDoping(c));
+  // Both carriers may be below the smallest number: then the doping decides.
+  if (majority === 0 && net === 0) return 'intrinsic';
+  return majority < FROZEN_BELOW * net ? 'freeze-out' : 'extrinsic';
 }
 
 /** By the carrier that is more than the other; by the doping where both underflow. */
@@ -151,21 +156,30 @@ function conductivity(v: ChargeValues, m: Mobilities): number | null {
 /** 1/ohm. */
 function sheetConductance(layer: Layer, T: number, a: Assumptions, middle: number | null): number | null {
   if (isUniform(layer)) return middle === null ? null : middle * layer.thickness;
+  let last = sliced(layer, T, a, FIRST_CELLS);
+  for (let cells = 2 * FIRST_CELLS; last !== null && cells <= MOST_CELLS; cells *= 2) {
+    const next = sliced(layer, T, a, cells);
+    // The midpoint rule's error is a third of the last change or less on a smooth profile.
+    if (next !== null && Math.abs(next - last) <= CONDUCTANCE_TOLERANCE * next) return next > 0 && Number.isFinite(1 / next) ? next : null;
+    last = next;
+  }
+  return null;
+}
+
+/** Conductance by the midpoint rule, 1/ohm; midpoints, since the ends of a profile may be zero, where nothing conducts. */
+function sliced(layer: Layer, T: number, a: Assumptions, cells: number): number | null {
   const v = blank();
   let sum = 0;
-  // Midpoints: the ends of a profile may be zero, where nothing conducts.
-  for (let k = 0; k < CONDUCTANCE_CELLS; k++) {
-    const z = (layer.thickness * (k + 0.5)) / CONDUCTANCE_CELLS;
+  for (let k = 0; k < cells; k++) {
+    const z = (layer.thickness * (k + 0.5)) / cells;
     const c = localCharge(layer, z, T, a);
     chargeAt(c, neutralLevel(c).ecMinusEf, v);
-    const sigma = conductivity(v, mobilitiesAt(layer, z, c));
-    if (sigma === null) {
-      if (Math.max(v.n, v.p) > 0) return null;
-      continue;
-    }
-    sum += (sigma * layer.thickness) / CONDUCTANCE_CELLS;
+    const m = mobilitiesAt(layer, z, c);
+    const sigma = conductivity(v, m);
+    if (sigma !== null) sum += (sigma * layer.thickness) / cells;
+    else if (Math.max(v.n, v.p) > 0 && (m.n === null || m.p === null)) return null;
   }
-  return sum > 0 && Number.isFinite(1 / sum) ? sum : null;
+  return sum;
 }
 
 /** The same point with Boltzmann statistics and every dopant charged, deep ones too. */

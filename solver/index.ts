@@ -1,0 +1,8 @@
+/** The solver's public names. Units: units.ts; what goes in: stack.ts; what comes out: solution.ts. */
+export { solveStack } from './solve-stack.ts';
+export { layerFigures } from './layer.ts';
+export { isRefusal } from './solution.ts';
+export { isAlloy } from './stack.ts';
+export { fermiHalf, fermiMinusHalf, fermiThreeHalves, inverseFermiHalf } from './fermi-integral.ts';
+export type * from './stack.ts';
+export type * from './solution.ts';
