@@ -10,6 +10,8 @@ export interface NewtonResult {
 
 const MOST_UPDATES = 200;
 const SMALLEST_STEP = 1e-7;
+/** A frozen layer's matrix can ask for 1e9 V; no sensible stack moves by more than this at once. */
+const MOST_VOLTS = 2;
 
 /**
  * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place.
@@ -43,7 +45,7 @@ export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
       return { converged: true, updates, lastUpdate: size, reason: 'small update' };
     }
     if (!convex) {
-      const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda));
+      const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda), Math.min(1, MOST_VOLTS / size));
       if (found > 0) lambda = found;
       else {
         // The factors were of this very matrix, but the residual is of the last trial: back to psi before the second way.
@@ -67,10 +69,10 @@ export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
  * Step length that passes the natural monotonicity test, 0 when none above SMALLEST_STEP does. Leaves the accepted point in
  * `trial` and its residual and matrix in the system (the factors stay those of the step).
  */
-function monotoneStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, next: Float64Array, first: number): number {
+function monotoneStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, next: Float64Array, first: number, cap: number): number {
   const n = psi.length;
   const stepNorm = Math.sqrt(dot(step, step));
-  for (let lambda = first; lambda > SMALLEST_STEP; ) {
+  for (let lambda = Math.min(first, cap); lambda > SMALLEST_STEP * cap; ) {
     for (let i = 0; i < n; i++) trial[i] = psi[i] + lambda * step[i];
     system.evaluate(trial, true);
     for (let i = 0; i < n; i++) next[i] = -system.residual[i];

@@ -48,6 +48,7 @@ export function solvePoisson(problem: PoissonProblem, options: SolveOptions = {}
     psi = neutralGuess(problem, coarse);
   }
   setEnds(problem, psi);
+  if (!options.warmStart) shiftToBalance(problem, coarse, psi);
   let updates = 0;
   let threshold = Infinity;
   let quality: Quality | null = null;
@@ -154,6 +155,29 @@ function fillStraight(psi: Float64Array, known: Uint8Array): void {
 function setEnds(problem: PoissonProblem, psi: Float64Array): void {
   if (problem.top.kind === 'potential') psi[0] = problem.top.psi;
   if (problem.bottom.kind === 'potential') psi[psi.length - 1] = problem.bottom.psi;
+}
+
+/**
+ * With both ends open the carriers alone fix the level: shifts the guess evenly until the whole stack is neutral. The total falls with
+ * psi, so bisection finds the place even where frozen layers leave Newton no slope.
+ */
+function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array): void {
+  if (problem.top.kind === 'potential' || problem.bottom.kind === 'potential') return;
+  const system = new PoissonSystem(problem, mesh);
+  const start = Float64Array.from(psi);
+  const total = (shift: number): number => {
+    for (let i = 0; i < psi.length; i++) psi[i] = start[i] + shift;
+    system.evaluate(psi, false);
+    // Fluxes cancel in the sum: what is left is all charge and both sheets.
+    return system.residual.reduce((a, b) => a + b, 0);
+  };
+  let [low, high] = [-20, 20];
+  for (let i = 0; i < 50; i++) {
+    const middle = 0.5 * (low + high);
+    if (total(middle) > 0) low = middle;
+    else high = middle;
+  }
+  total(0.5 * (low + high));
 }
 
 /**

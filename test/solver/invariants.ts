@@ -1,0 +1,51 @@
+import { expect } from 'vitest';
+import { ELEMENTARY_CHARGE, EPSILON_0 } from '../../solver/constants.ts';
+import { localCharge } from '../../solver/charge.ts';
+import { ACCEPTANCE } from '../../solver/quality.ts';
+import { isRefusal, type Refusal, type Solution } from '../../solver/solution.ts';
+import { polarisationSheets } from '../../solver/polarisation.ts';
+
+/** What any accepted solution must satisfy, however it came about. Throws the reason of a refusal. */
+export function expectSound(answer: Solution | Refusal, accuracy: number = ACCEPTANCE.meshError): Solution {
+  if (isRefusal(answer)) throw new Error(`refused: ${answer.reason}`);
+  const { quality, profiles, stack } = answer;
+  expect(quality.converged).toBe(true);
+  expect(quality.lastUpdate).toBeLessThan(1e-9);
+  expect(quality.gaussError).toBeLessThan(1e-6);
+  expect(quality.meshError).toBeLessThanOrEqual(accuracy);
+  for (const values of [profiles.ec, profiles.ev, profiles.psi, profiles.field, profiles.n, profiles.p, profiles.charge]) {
+    for (const v of values) expect(Number.isFinite(v)).toBe(true);
+  }
+  const eps = Array.from(profiles.z, (z, s) => {
+    const layer = stack.layers[profiles.layer[s]];
+    const top = profiles.z[profiles.layer.indexOf(profiles.layer[s])];
+    return localCharge(layer, z - top, stack.temperature, stack.assumptions).bands.permittivity * EPSILON_0;
+  });
+  // Gauss's law by a sum of its own over the printed profiles (trapezoids), each layer, as a share of the charge that is there.
+  const sheets = polarisationSheets(stack);
+  for (const row of stack.interfaces) sheets[row.index] += row.sheetCharge;
+  for (let l = 0; l < stack.layers.length; l++) {
+    const first = profiles.layer.indexOf(l);
+    const last = profiles.layer.lastIndexOf(l);
+    let charge = 0;
+    let size = ELEMENTARY_CHARGE * 1e8;
+    let doped = 0;
+    for (let s = first; s < last; s++) {
+      const h = profiles.z[s + 1] - profiles.z[s];
+      charge += (ELEMENTARY_CHARGE * h * (profiles.charge[s] + profiles.charge[s + 1])) / 2;
+      size += (ELEMENTARY_CHARGE * h * (Math.abs(profiles.charge[s]) + Math.abs(profiles.charge[s + 1]))) / 2;
+      doped += ELEMENTARY_CHARGE * h * (profiles.ionisedDonors[s] + profiles.ionisedAcceptors[s]);
+    }
+    const out = eps[last] * profiles.field[last] - eps[first] * profiles.field[first];
+    // Fields are differences of potentials near 4 V, good to 1e-15 of them over the cell: allowed beside the 1e-6.
+    const rounding = 4e-15 * (eps[first] / (profiles.z[first + 1] - profiles.z[first]) + eps[last] / (profiles.z[last] - profiles.z[last - 1])) + 1e-13 * doped;
+    expect(Math.abs(out - charge), `Gauss over layer ${l}`).toBeLessThan(1e-6 * size + rounding);
+    // Displacement steps by the sheet between the layers and by nothing else.
+    if (l > 0) {
+      const step = eps[first] * profiles.field[first] - eps[first - 1] * profiles.field[first - 1] - ELEMENTARY_CHARGE * sheets[l - 1];
+      expect(Math.abs(step), `displacement at interface ${l - 1}`).toBeLessThan(1e-6 * (size + Math.abs(ELEMENTARY_CHARGE * sheets[l - 1])) + 1e4 * rounding);
+      expect(profiles.psi[first]).toBe(profiles.psi[first - 1]);
+    }
+  }
+  return answer;
+}
