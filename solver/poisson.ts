@@ -182,7 +182,7 @@ function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array):
 
 /**
  * Where to divide: a cell's quadrature error in volts is about h^2 q |rho(a) - 2 rho(m) + rho(b)|/(8 eps), read off the halved mesh.
- * Cells above a threshold are cut so that they fall below it; the threshold falls with the distance from the goal.
+ * It falls with h^4 and the error of psi with h^2, so the threshold falls with the square of the distance from the goal.
  */
 function refinement(system: PoissonSystem, coarse: Mesh, fine: Mesh, accuracy: number, meshError: number, threshold: number): { mesh: Mesh; threshold: number } {
   const bends: Float64Array[] = [];
@@ -197,11 +197,11 @@ function refinement(system: PoissonSystem, coarse: Mesh, fine: Mesh, accuracy: n
     }
     bends.push(b);
   });
-  let goal = Math.min(threshold, worst) * Math.max(1 / 16, Math.min(0.7, (0.5 * accuracy) / meshError));
+  let goal = Math.min(threshold, worst) * Math.max(1 / 256, Math.min(0.5, ((0.7 * accuracy) / meshError) ** 2));
   if (!(goal > 0)) goal = 0;
   const pieces = bends.map((b) => {
     const p = new Int32Array(b.length);
-    for (let c = 0; c < b.length; c++) p[c] = b[c] > goal && goal > 0 ? Math.min(4, Math.ceil(Math.sqrt(b[c] / goal))) : 1;
+    for (let c = 0; c < b.length; c++) p[c] = b[c] > goal && goal > 0 ? Math.min(4, Math.ceil((b[c] / goal) ** 0.25)) : 1;
     return p;
   });
   smoothPieces(coarse, pieces);

@@ -16,12 +16,13 @@ console.log('Types');
 count(run('node', ['node_modules/typescript/bin/tsc', '--noEmit']) === 0);
 
 const report = join(mkdtempSync(join(tmpdir(), 'halfmark-')), 'vitest.json');
-run('node', ['node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile=${report}`]);
+const status = run('node', ['node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile=${report}`]);
 try {
   const json = JSON.parse(readFileSync(report, 'utf8'));
   passed += json.numPassedTests;
   failed += json.numFailedTests + json.testResults.filter((f) => f.status === 'failed' && f.assertionResults.length === 0).length;
-  if (json.numTotalTests === 0) failed++;
+  // An error outside any test fails the run without failing a test.
+  if (json.numTotalTests === 0 || (status !== 0 && failed === 0)) failed++;
 } catch (error) {
   console.error(`vitest left no report: ${error.message}`);
   failed++;
