@@ -139,6 +139,61 @@ describe('a polar stack', () => {
   });
 });
 
+describe('graded layers and insulators', () => {
+  const silica: CrystalMaterial = { ...CRYSTAL, id: 'oxide', insulator: true, gap: { zeroK: 8.9, alpha: 0, beta: 1 }, affinity: 0.95, permittivity: 3.9, permittivityHighFrequency: 2.1, electronMass: undefined, holeMass: undefined };
+  const wide: CrystalMaterial = { ...CRYSTAL, id: 'wide', gap: { zeroK: 1.8, alpha: 4.73e-4, beta: 636 }, affinity: 3.7, permittivity: 11 };
+  const alloy: Layer['material'] = { id: 'graded', first: CRYSTAL, second: wide, bowing: { gap: 0.2 } };
+
+  it('an implanted profile keeps its dose', () => {
+    const implanted = { ...doped('acceptor', 0, 0, 'complete'), concentration: { kind: 'implant', peak: 8e17, depth: 250e-7, straggle: 40e-7, background: 0 } as const };
+    const s = expectSound(solveStack(stackOf([layer('well', 600, [implanted, doped('donor', 1e16)]), layer('bulk', 2000, [doped('donor', 1e16)])])));
+    const { z, ionisedAcceptors, layer: of } = s.profiles;
+    let dose = 0;
+    for (let i = 0; i + 1 < z.length; i++) if (of[i + 1] === 0) dose += ((z[i + 1] - z[i]) * (ionisedAcceptors[i] + ionisedAcceptors[i + 1])) / 2;
+    // The whole Gaussian lies in the layer: sqrt(2 pi) straggle peak.
+    expect(Math.abs(dose / (Math.sqrt(2 * Math.PI) * 40e-7 * 8e17) - 1)).toBeLessThan(1e-3);
+  });
+
+  it('a graded alloy keeps a flat Fermi level and no step of psi at its ends', () => {
+    for (const T of [20, 300, 600]) {
+      const s = expectSound(solveStack(stackOf([layer('a', 100, [doped('donor', 1e17)]), { ...layer('g', 80, [doped('donor', 1e17)]), material: alloy, x: { kind: 'linear', from: 0, to: 0.8 } }, { ...layer('w', 200, [doped('donor', 1e17)]), material: alloy, x: { kind: 'constant', value: 0.8 } }], { T })));
+      expect(Math.abs(s.junctions[0].deltaEc)).toBeLessThan(1e-12);
+      expect(Math.abs(s.junctions[1].deltaEc)).toBeLessThan(1e-12);
+    }
+  });
+
+  it('an oxide under a metal carries one field from end to end', () => {
+    const top: Boundary = { kind: 'barrier', source: { from: 'workFunction', workFunction: 4.1, slope: 1 }, metal: null, imageForce: false };
+    for (const T of [77, 300]) {
+      const s = expectSound(solveStack(stackOf([layer('oxide', 2, [], silica), layer('p', 2000, [doped('acceptor', 1e17)])], { T, top })));
+      const last = s.profiles.layer.indexOf(1) - 1;
+      expect(Math.abs(s.profiles.field[last] / s.profiles.field[0] - 1)).toBeLessThan(1e-6);
+      // Displacement: the field drops by the ratio of permittivities.
+      expect(Math.abs((s.profiles.field[last] * 3.9) / (s.profiles.field[last + 1] * 11.7) - 1)).toBeLessThan(1e-6);
+      expect(s.layers[0].insulator).toBe(true);
+      expect(s.junctions[0].builtIn).toBeNull();
+    }
+  });
+
+  it('refuses a neutral contact on an oxide, in words', () => {
+    expect(() => solveStack(stackOf([layer('oxide', 5, [], silica), layer('p', 200, [doped('acceptor', 1e17)])]))).toThrow(/insulator/);
+  });
+
+  it('a 1 nm layer on a 500 um substrate', () => {
+    expectSound(solveStack(stackOf([layer('delta', 1, [doped('donor', 1e21)]), layer('substrate', 5e5, [doped('acceptor', 1e13)])], { top: barrier(0.6) })));
+  });
+});
+
+describe('a re-solve from an earlier solution', () => {
+  it('gives the same answer as a cold start', () => {
+    const make = (n: number) => stackOf([layer('cap', 50, [doped('donor', n)]), layer('base', 400, [doped('acceptor', 1e16)]), layer('sub', 900, [doped('donor', 1e17)])], { top: barrier(0.6) });
+    const cold = expectSound(solveStack(make(1.2e18), { accuracy: 1e-5 }), 1e-5);
+    const warm = expectSound(solveStack(make(1.2e18), { accuracy: 1e-5, warmStart: expectSound(solveStack(make(1e18), { accuracy: 1e-5 }), 1e-5).profiles }), 1e-5);
+    const at = (s: typeof cold, l: number): number => s.profiles.ec[s.profiles.layer.indexOf(l)];
+    for (const l of [1, 2]) expect(Math.abs(at(cold, l) - at(warm, l))).toBeLessThan(2e-5);
+  });
+});
+
 describe('random sensible stacks', () => {
   const boundary = (inner: fc.Arbitrary<number>): fc.Arbitrary<Boundary> =>
     fc.oneof(
