@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { dopants, metals, sources } from '../../presets/index.ts';
+import { densityOfStates } from '../../solver/bands.ts';
+import { dopants, materials, metals, sources } from '../../presets/index.ts';
 
 interface Provenance { source: string; checked: string; confidence?: string }
 const QUANTITY: Record<string, RegExp> = {
@@ -62,5 +63,38 @@ describe('the presets of metals', () => {
       }
     }
     expect(count).toBeGreaterThan(100);
+  });
+});
+
+describe('the presets of materials', () => {
+  it('give every value a source that is listed, and how it was checked', () => {
+    for (const m of materials) {
+      const skipped = ['id', 'name', 'insulator', 'source', 'sources'];
+      const flat = (o: object, prefix: string): string[] => Object.entries(o).flatMap(([k, v]) => (typeof v === 'object' ? flat(v, `${prefix}${k}.`) : [`${prefix}${k}`]));
+      // The scale of a natural edge is a name, no value.
+      const values = flat(Object.fromEntries(Object.entries(m).filter(([k]) => !skipped.includes(k))), '').filter((k) => k !== 'naturalValence.scale');
+      expect(Object.keys(m.sources).sort(), m.id).toEqual(values.sort());
+      for (const [key, entry] of Object.entries(m.sources as unknown as Record<string, Provenance>)) expectSourced(entry, `${m.id} ${key}`);
+    }
+  });
+
+  it('are named once and have what a design needs', () => {
+    expect(new Set(materials.map((m) => m.id)).size).toBe(materials.length);
+    for (const m of materials) {
+      expect(m.permittivity, m.id).toBeGreaterThan(1);
+      if ('insulator' in m) continue;
+      expect('electronMass' in m && 'holeMass' in m, m.id).toBe(true);
+    }
+  });
+
+  it('give silicon the measured intrinsic density at 300 K', () => {
+    // 9.7e9 cm^-3, Misiakos and Tsamakis, J. Appl. Phys. 74, 3293 (1993), stated to some 5 %; 1.08e10, Green, J. Appl. Phys. 67, 2944 (1990).
+    const si = materials.find((m) => m.id === 'Si');
+    if (!si || typeof si.gap === 'string' || !('electronMass' in si)) throw new Error('no silicon');
+    const T = 300;
+    const gap = Number.parseFloat(si.gap.zeroK) - (Number.parseFloat(si.gap.alpha) * T * T) / (T + Number.parseFloat(si.gap.beta));
+    const ni = Math.sqrt(densityOfStates(si.electronMass, T) * densityOfStates(si.holeMass, T)) * Math.exp(-gap / (2 * 8.617333262e-5 * T));
+    expect(ni).toBeGreaterThan(9.2e9);
+    expect(ni).toBeLessThan(1.1e10);
   });
 });
