@@ -25,6 +25,10 @@ import { warningsOf } from './warnings.ts';
 export function solveStack(stack: Stack, options: SolveOptions = {}): Solution | Refusal {
   if (stack.layers.length === 0) throw new RangeError('a stack needs at least one layer');
   for (const layer of stack.layers) if (!(layer.thickness > 0)) throw new RangeError(`the thickness of ${layer.name} must be positive`);
+  // A typed array would swallow a charge put beyond its end without a word.
+  for (const row of stack.interfaces) {
+    if (!Number.isInteger(row.index) || row.index < 0 || row.index >= stack.layers.length - 1) throw new RangeError(`there is no interface ${row.index} in a stack of ${stack.layers.length} layers`);
+  }
   const alignment = align(stack);
   const sheets = polarisationSheets(stack);
   for (const row of stack.interfaces) sheets[row.index] += row.sheetCharge;

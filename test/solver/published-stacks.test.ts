@@ -8,7 +8,7 @@ import type { CrystalMaterial, Solution } from '../../solver/index.ts';
 import { CRYSTAL } from './poisson-fixtures.ts';
 import { expectSound } from './invariants.ts';
 import { barrier, doped, layer, stackOf } from './stack-fixtures.ts';
-// Sources, inputs and tolerances stand in the data, check by check.
+// Sources and inputs stand in the data, check by check; the tolerances here are those of the solved fields (1e-4 where the check says so).
 import data from '../fixtures/checks-stacks.json' with { type: 'json' };
 
 interface Check {
