@@ -1,0 +1,158 @@
+/**
+ * The design document, version 1, as a person writes it: quantities are strings with a unit, exactly as typed, or expressions over the design's
+ * variables. Nothing here is in solver units; stack.ts turns a checked document into the solver's stack.
+ */
+export const DESIGN_FORMAT = 'halfmark-design/1';
+
+/** A quantity or an expression, as typed. */
+export type Text = string;
+/** A pure number may be a JSON number or a string. */
+export type Pure = number | string;
+
+/** A value through the depth of a layer, as typed; `V` is a string with a unit, or a pure number for a composition. */
+export type Graded<V extends Pure> =
+  | V
+  | { from: V; to: V; shape: 'linear' | 'gaussian' | 'erfc' }
+  | { points: [Text, V][] };
+export type Implanted = { peak: Text; depth: Text; straggle: Text; shape: 'gaussian'; background?: Text };
+
+export interface Variable {
+  name: string;
+  value: Text;
+  tolerance?: Text;
+  range?: [Text, Text];
+  note?: string;
+}
+
+export interface Conditions {
+  temperature: Text;
+  temperatureRange?: [Text, Text];
+  bias?: Text;
+}
+
+export interface AssumptionsInput {
+  statistics?: 'fermi-dirac' | 'boltzmann';
+  alignment?: 'offsets' | 'affinity';
+  narrowing?: boolean;
+  nonParabolic?: boolean;
+  transmission?: 'wkb' | 'kemble' | 'exact';
+}
+
+export type ContactInput =
+  | { kind: 'neutral' }
+  | { kind: 'barrier'; metal?: string; barrier?: Text; carrier?: 'n' | 'p'; pinning?: 'material' | 'none' | 'full' | Pure; imageForce?: boolean }
+  | { kind: 'pinned'; level: Text }
+  | { kind: 'open'; sheetCharge?: Text };
+
+export type DopantModel = 'dilute' | 'merging' | 'screened' | 'complete';
+
+export interface DopantRow {
+  /** id of a preset or custom dopant in this host */ dopant?: string;
+  /** given outright: kind, depth and degeneracy instead of `dopant` */ kind?: 'donor' | 'acceptor';
+  depth?: Text;
+  degeneracy?: Pure;
+  concentration: Graded<Text> | Implanted;
+  model?: DopantModel;
+  activation?: Pure;
+  compensation?: Pure;
+}
+
+export interface LayerInput {
+  name: string;
+  material: string;
+  x?: Graded<Pure>;
+  thickness: Text;
+  dopants?: DopantRow[];
+}
+
+export interface InterfaceInput {
+  above: string;
+  sheetCharge?: Text;
+  dEc?: Text;
+  dEv?: Text;
+}
+
+export interface Requirement {
+  quantity: string;
+  of: string;
+  max?: Text | boolean;
+  min?: Text | boolean;
+  over?: 'temperature' | 'temperatureRange';
+}
+
+export interface CrystalInput {
+  face: 'metal' | 'N';
+  strain: 'relaxed' | 'pseudomorphic';
+  template?: string;
+}
+
+export type GapInput =
+  | Text
+  | { zeroK: Text; alpha: Text; beta: Text };
+
+export type MobilityInput = Text | { min: Text; max: Text; reference: Text; exponent: Pure };
+
+export interface MaterialInput {
+  id: string;
+  name?: string;
+  insulator?: boolean;
+  alloy?: { first: string; second: string; bowing?: Record<string, Text | Pure> };
+  gap?: GapInput;
+  affinity?: Text;
+  affinityShare?: Pure;
+  permittivity?: Pure;
+  permittivityHighFrequency?: Pure;
+  electronMass?: Pure | Pure[];
+  holeMass?: Pure | Pure[];
+  nonParabolicity?: { electron?: Text; hole?: Text };
+  tunnellingMass?: { electron?: Pure; hole?: Pure };
+  richardson?: { electron?: Text; hole?: Text };
+  mobility?: { electron?: MobilityInput; hole?: MobilityInput };
+  narrowing?: { law: 'slotboom'; energy: Text; reference: Text; constant: Pure; conductionShare: Pure };
+  neutralityLevel?: Text;
+  pinningSlope?: Pure;
+  polarisation?: { spontaneous: Text; e31?: Text; e33?: Text; c13?: Text; c33?: Text; lattice?: Text };
+  source: unknown;
+}
+
+export interface DopantInput {
+  id: string;
+  name?: string;
+  host: string;
+  kind: 'donor' | 'acceptor';
+  depth: Text;
+  degeneracy?: Pure;
+  merging?: { depthReference: Text; depthExponent: Pure; boundReference: Text; boundExponent: Pure };
+  screened?: { coefficient: Text; mottDensity: Text; boundExponent?: Pure };
+  source: unknown;
+}
+
+export interface MetalInput {
+  id: string;
+  name?: string;
+  workFunction?: Text;
+  barriers?: { material: string; carrier: 'n' | 'p'; height: Text; source: unknown }[];
+  source: unknown;
+}
+
+export interface Custom {
+  materials?: MaterialInput[];
+  dopants?: DopantInput[];
+  metals?: MetalInput[];
+}
+
+export interface Design {
+  format: typeof DESIGN_FORMAT;
+  title: string;
+  notes?: string;
+  variables?: Variable[];
+  conditions: Conditions;
+  assumptions?: AssumptionsInput;
+  crystal?: CrystalInput;
+  top: ContactInput;
+  layers: LayerInput[];
+  interfaces?: InterfaceInput[];
+  bottom: ContactInput;
+  requirements?: Requirement[];
+  custom?: Custom;
+}
