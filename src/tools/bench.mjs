@@ -1,10 +1,4 @@
-// `npm run bench`: bundles test/bench/bench.ts and runs it.
-import { build } from 'esbuild';
-import { mkdirSync } from 'node:fs';
-import { pathToFileURL } from 'node:url';
-import { resolve } from 'node:path';
+// `npm run bench`: speed of the kernels, test/bench/bench.ts.
+import { runBundled } from './bundled.mjs';
 
-const out = resolve('node_modules/.cache/bench.mjs');
-mkdirSync(resolve('node_modules/.cache'), { recursive: true });
-await build({ entryPoints: ['test/bench/bench.ts'], bundle: true, platform: 'node', format: 'esm', outfile: out, logLevel: 'error' });
-await import(pathToFileURL(out).href);
+await runBundled('bench', 'test/bench/bench.ts', ['test/bench', 'src', 'solver', 'presets']);

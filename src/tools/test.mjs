@@ -1,31 +1,64 @@
-// `npm test`: installs what is missing, then types and tests; ends with the count alone on the last line.
+// `npm test`: installs what is missing, then types, tests in Node, tests in a browser, the production build with its size, and scenarios against that
+// build. Counts come from the runners' own reports; the last line is the count alone.
 import { spawnSync } from 'node:child_process';
-import { existsSync, mkdtempSync, readFileSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { installMissing } from './install.mjs';
+import { ROOT } from './root.mjs';
 
-const npm = process.platform === 'win32' ? 'npm.cmd' : 'npm';
-const run = (command, args) => spawnSync(command, args, { stdio: 'inherit', shell: process.platform === 'win32' }).status ?? 1;
-
-if (!existsSync('node_modules/vitest') && run(npm, ['ci']) !== 0) process.exit(1);
+installMissing();
+const reports = mkdtempSync(join(tmpdir(), 'halfmark-'));
 let passed = 0;
 let failed = 0;
-const count = (ok) => (ok ? passed++ : failed++);
 
-console.log('Types');
-count(run('node', ['node_modules/typescript/bin/tsc', '--noEmit']) === 0);
-
-const report = join(mkdtempSync(join(tmpdir(), 'halfmark-')), 'vitest.json');
-const status = run('node', ['node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile=${report}`]);
-try {
-  const json = JSON.parse(readFileSync(report, 'utf8'));
-  passed += json.numPassedTests;
-  failed += json.numFailedTests + json.testResults.filter((f) => f.status === 'failed' && f.assertionResults.length === 0).length;
-  // An error outside any test fails the run without failing a test.
-  if (json.numTotalTests === 0 || (status !== 0 && failed === 0)) failed++;
-} catch (error) {
-  console.error(`vitest left no report: ${error.message}`);
-  failed++;
+/** Runs a script of Node's. @returns {boolean} whether it ended well */
+function run(title, script, args = [], env = {}) {
+  console.log(`\n== ${title}`);
+  return spawnSync(process.execPath, [join(ROOT, script), ...args], { cwd: ROOT, stdio: 'inherit', env: { ...process.env, ...env } }).status === 0;
 }
+
+/** A step that counts as one test. */
+function step(title, script, args) {
+  const ok = run(title, script, args);
+  if (ok) passed++;
+  else failed++;
+  return ok;
+}
+
+/** A runner that leaves a report; `read` takes the counts out of it. */
+function suite(title, script, args, env, report, read) {
+  const ok = run(title, script, args, env);
+  let counts;
+  try {
+    counts = read(JSON.parse(readFileSync(report, 'utf8')));
+  } catch (error) {
+    console.error(`${title}: left no report (${error.message})`);
+    counts = { passed: 0, failed: 1 };
+  }
+  // A run without tests, or one that ended badly although no test failed, is a failure as well.
+  if (counts.failed === 0 && (!ok || counts.passed === 0)) counts.failed = 1;
+  passed += counts.passed;
+  failed += counts.failed;
+}
+
+step('Types', 'node_modules/typescript/bin/tsc', ['--noEmit']);
+
+const vitest = join(reports, 'vitest.json');
+suite('Tests in Node', 'node_modules/vitest/vitest.mjs', ['run', '--reporter=default', '--reporter=json', `--outputFile=${vitest}`], {}, vitest, (json) => ({
+  passed: json.numPassedTests,
+  failed: json.numFailedTests + json.testResults.filter((file) => file.status === 'failed' && file.assertionResults.length === 0).length,
+}));
+
+const browser = join(reports, 'browser.json');
+suite('Tests in a browser', 'node_modules/@web/test-runner/dist/bin.js', [], { BROWSER_REPORT: browser }, browser, (json) => json);
+
+if (step('Production build', 'src/tools/build.mjs')) {
+  step('Size of the first load', 'src/tools/size.mjs');
+  const e2e = join(reports, 'e2e.json');
+  suite('Scenarios against the production build', 'src/tools/e2e.mjs', [], { E2E_REPORT: e2e }, e2e, (json) => json);
+}
+
+rmSync(reports, { recursive: true, force: true });
 console.log(`${passed} passed, ${failed} failed`);
-process.exit(failed > 0 ? 1 : 0);
+process.exitCode = failed > 0 ? 1 : 0;
