@@ -1,0 +1,56 @@
+import { didYouMean, quoted } from './wording.ts';
+import { evaluate, ExpressionError, NO_NAMES, type Scope } from './expression.ts';
+import { KINDS, type KindName } from './kinds.ts';
+import { normalise } from './normalise.ts';
+import { inUnit, UNIT_NAMES, type Value } from './units.ts';
+
+export type Reading = { ok: true; value: number } | { ok: false; message: string };
+
+/**
+ * Reads what a person typed as a quantity of one kind.
+ *
+ * @param text   a string with a unit or an expression; for kind "number" a JSON number as well
+ * @returns      the value in the solver's unit of that kind (KINDS), finite; or a sentence with the mend
+ */
+export function readQuantity(text: unknown, kind: KindName, scope: Scope = NO_NAMES): Reading {
+  const wanted = KINDS[kind];
+  const fail = (message: string): Reading => ({ ok: false, message });
+  if (typeof text === 'number') {
+    if (kind !== 'number') return fail(`${text} has no unit; ${wanted.words} is wanted here, as text, such as "${wanted.example}"`);
+    return Number.isFinite(text) ? { ok: true, value: text } : fail(`${text} is no finite number`);
+  }
+  if (typeof text !== 'string') return fail(`${quoted(text)} is no text; ${wanted.words} is wanted here, such as "${wanted.example}"`);
+  const share = kind === 'number' ? /^\s*([-+]?(?:\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?)\s*%\s*$/.exec(text) : null;
+  if (share) return { ok: true, value: Number(share[1]) / 100 };
+  // "25C" is a temperature where a temperature is asked for, a charge elsewhere.
+  const typed = kind === 'temperature' ? text.replace(/^(\s*[-+\u2212]?[\d.]+)\s*C\s*$/, '$1 degC') : text;
+  let value: Value;
+  try {
+    value = evaluate(typed, scope);
+  } catch (error) {
+    if (!(error instanceof ExpressionError)) throw error;
+    return fail(mistyped(text, kind, scope) ?? `${quoted(text)} ${error.message}`);
+  }
+  const number = inUnit(value, wanted.unit);
+  if (number !== null) return { ok: true, value: number };
+  if (typeof value === 'number') return fail(`${quoted(text)} has no unit; ${wanted.words} is wanted here, such as "${wanted.example}"`);
+  const other = kindOf(value);
+  const found = other ? `is ${KINDS[other].words}, not ${wanted.words}` : `is not ${wanted.words}`;
+  return fail(`${quoted(text)} ${found}; ${wanted.unit === '' ? 'write it without a unit' : 'write it'} such as "${wanted.example}"`);
+}
+
+/** "200 mn": one number with one unknown word; says which unit was meant. */
+function mistyped(text: string, kind: KindName, scope: Scope): string | null {
+  const found = /^[-+]?[\d.]+(?:[eE][-+]?\d+)?\s*([A-Za-z_]+)/.exec(normalise(text));
+  if (!found || UNIT_NAMES.includes(found[1]) || scope.names.includes(found[1]) || found[1] === 'degC') return null;
+  const words = KINDS[kind].words.replace(/^an? /, '');
+  const simple = KINDS[kind].units.filter((u) => /^[A-Za-z]+$/.test(u));
+  const mend = didYouMean(found[1], simple) || didYouMean(found[1], [...scope.names, ...UNIT_NAMES]) || `; write it such as "${KINDS[kind].example}"`;
+  return `${quoted(text)} is no ${words}${mend}`;
+}
+
+/** The kind that a value with a unit belongs to, for messages. */
+function kindOf(value: Value): KindName | null {
+  for (const name of Object.keys(KINDS) as KindName[]) if (KINDS[name].unit !== '' && inUnit(value, KINDS[name].unit) !== null) return name;
+  return null;
+}
