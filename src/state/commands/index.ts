@@ -1,0 +1,26 @@
+/** Every change of a design that a person can make: pure functions (design, ...) -> next design, whose result is frozen and shares what did not change. */
+export { addDopant } from './add-dopant.ts';
+export { addVariable } from './add-variable.ts';
+export { freeName } from './free-name.ts';
+export { insertLayer } from './insert-layer.ts';
+export { moveLayer } from './move-layer.ts';
+export type { Side } from './parts.ts';
+export { removeDopant } from './remove-dopant.ts';
+export { removeLayer } from './remove-layer.ts';
+export { removeVariable } from './remove-variable.ts';
+export { renameLayer } from './rename-layer.ts';
+export { renameVariable } from './rename-variable.ts';
+export { setAssumption } from './set-assumption.ts';
+export { setBias } from './set-bias.ts';
+export { setComposition } from './set-composition.ts';
+export { setConcentration } from './set-concentration.ts';
+export { setContact } from './set-contact.ts';
+export { setDopant } from './set-dopant.ts';
+export { setInterface } from './set-interface.ts';
+export { setMaterial, type MaterialChange } from './set-material.ts';
+export { setNotes } from './set-notes.ts';
+export { setTemperature } from './set-temperature.ts';
+export { setTemperatureRange } from './set-temperature-range.ts';
+export { setThickness } from './set-thickness.ts';
+export { setTitle } from './set-title.ts';
+export { setVariable } from './set-variable.ts';
