@@ -40,6 +40,7 @@ export function browserReport(file) {
       const { passed, failed, complaints } = countSessions(sessions);
       if (file) writeFileSync(file, JSON.stringify({ passed, failed }));
       for (const text of complaints) console.error(text);
+      console.log(`${passed} browser tests passed, ${failed} failed`);
       if (failed > 0) process.on('exit', () => (process.exitCode = 1));
     },
   };

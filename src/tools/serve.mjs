@@ -22,15 +22,15 @@ const TYPES = {
   '.pdf': 'application/pdf',
 };
 
-/** @returns {{path: string, size: number} | undefined} the file an address names; none outside dist/ */
-function find(address) {
+/** @returns {{path: string, size: number} | undefined} the file of `folder` an address names; none outside it */
+function find(address, folder) {
   let path;
   try {
-    path = normalize(join(DIST, decodeURIComponent(new URL(address, 'http://localhost').pathname)));
+    path = normalize(join(folder, decodeURIComponent(new URL(address, 'http://localhost').pathname)));
   } catch {
     return undefined;
   }
-  if ((path !== DIST && !path.startsWith(DIST + sep)) || path.includes('\0')) return undefined;
+  if (!`${path}${sep}`.startsWith(`${folder}${sep}`) || path.includes('\0')) return undefined;
   for (const candidate of [path, join(path, 'index.html')]) {
     const stat = statSync(candidate, { throwIfNoEntry: false });
     if (stat?.isFile()) return { path: candidate, size: stat.size };
@@ -38,7 +38,7 @@ function find(address) {
   return undefined;
 }
 
-function answer(request, response) {
+function answer(request, response, folder) {
   const headers = {
     'Content-Security-Policy': SERVER_POLICY,
     'X-Content-Type-Options': 'nosniff',
@@ -48,7 +48,7 @@ function answer(request, response) {
     'Cache-Control': 'no-cache',
   };
   if (request.method !== 'GET' && request.method !== 'HEAD') return response.writeHead(405, { ...headers, Allow: 'GET, HEAD' }).end();
-  const file = find(request.url);
+  const file = find(request.url, folder);
   if (!file) return response.writeHead(404, { ...headers, 'Content-Type': TYPES['.txt'] }).end('Not found\n');
   response.writeHead(200, { ...headers, 'Content-Type': TYPES[extname(file.path)] ?? 'application/octet-stream', 'Content-Length': file.size });
   if (request.method === 'HEAD') return response.end();
@@ -56,12 +56,13 @@ function answer(request, response) {
 }
 
 /**
- * Serves dist/ to this machine alone.
+ * Serves a folder to this machine alone.
  * @param {number} port first port tried, each next one if it is taken; 0 for any free one
+ * @param {string} folder absolute path, without a separator at its end
  * @returns {Promise<{url: string, close: () => Promise<void>}>}
  */
-export async function serve(port) {
-  const server = createServer(answer);
+export async function serve(port, folder = DIST) {
+  const server = createServer((request, response) => answer(request, response, folder));
   for (let at = port; ; at++) {
     const error = await new Promise((done) => {
       server.once('error', done);

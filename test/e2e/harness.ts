@@ -1,7 +1,7 @@
 /**
  * Scenarios against the built page in a real browser. A file `*.e2e.ts` registers them with `scenario`; src/tools/e2e.mjs runs each in a fresh
- * browser profile on a local server and fails it on anything the page was not asked to do: an error, a console error or warning of the security policy,
- * a request that fails, a request to another server.
+ * browser profile on a local server and fails it on anything the page was not asked to do: an error, a console error (breaches of the security
+ * policy are among them), a request that fails, a request to another server.
  */
 import type { Page } from 'puppeteer-core';
 
