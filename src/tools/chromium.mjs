@@ -1,5 +1,6 @@
 // Finds a Chromium for the browser tests, the end-to-end tests and the pictures: CHROME_PATH if set; on Linux x64 the headless shell carried inside
 // @sparticuz/chromium; otherwise an installed Chrome or Chromium.
+import { spawnSync } from 'node:child_process';
 import { chmodSync, createReadStream, createWriteStream, existsSync, mkdirSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { dirname, join } from 'node:path';
@@ -12,9 +13,9 @@ const FONTS = join(ROOT, 'node_modules/dejavu-fonts-ttf/ttf');
 
 /** @returns {Promise<{executablePath: string, env: Record<string, string | undefined>, args: string[], headless: boolean | 'shell'}>} options for puppeteer's launch */
 export async function chromium() {
-  const asRoot = process.getuid?.() === 0;
-  // The sandbox needs user namespaces, which root and most CI containers do not have.
-  const args = [...(asRoot || process.env.CI ? ['--no-sandbox'] : []), '--font-render-hinting=none', '--disable-dev-shm-usage'];
+  // Chromium refuses its sandbox to root, and most CI containers cannot give it one.
+  const unsandboxed = process.getuid?.() === 0 || process.env.CI ? ['--no-sandbox'] : [];
+  const args = [...unsandboxed, '--font-render-hinting=none', '--disable-dev-shm-usage'];
   if (process.env.CHROME_PATH) {
     if (!existsSync(process.env.CHROME_PATH)) throw new Error(`CHROME_PATH names no file: ${process.env.CHROME_PATH}`);
     return { executablePath: process.env.CHROME_PATH, env: { ...process.env }, args, headless: true };
@@ -23,7 +24,9 @@ export async function chromium() {
     const folder = await inflated();
     const libraries = [join(folder, 'al2023/lib'), process.env.LD_LIBRARY_PATH].filter(Boolean).join(':');
     const env = { ...process.env, LD_LIBRARY_PATH: libraries, FONTCONFIG_FILE: fontconfig() };
-    return { executablePath: join(folder, 'chromium'), env, args: [...args, '--disable-gpu'], headless: 'shell' };
+    // It has no setuid helper: where user namespaces are closed, as on some desktops, there is no sandbox for it. It only ever opens our own pages.
+    const open = unsandboxed.length > 0 || spawnSync('unshare', ['--user', 'true']).status === 0;
+    return { executablePath: join(folder, 'chromium'), env, args: [...args, ...(open ? [] : ['--no-sandbox']), '--disable-gpu'], headless: 'shell' };
   }
   const executablePath = installed().find((path) => existsSync(path));
   if (!executablePath) throw new Error('No Chrome or Chromium found: install one, or set CHROME_PATH to it.');
