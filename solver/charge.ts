@@ -1,6 +1,7 @@
 import { localBands, type LocalBands } from './bands.ts';
 import { carrierLog, type CarrierLog } from './carriers.ts';
-import { levelInForce, logNeutralShare } from './dopants.ts';
+import { levelInForce } from './dopants.ts';
+import { fermiHalfInto } from './fermi-integral.ts';
 import { profileAt } from './profile.ts';
 import type { Assumptions, Layer } from './stack.ts';
 
@@ -75,8 +76,21 @@ export function distance(bands: LocalBands, level: LocalLevel, ecMinusEf: number
   return (level.donor ? ecMinusEf - level.depth : bands.gap - ecMinusEf - level.depth) / bands.kT;
 }
 
-const electrons: CarrierLog = { log: 0, slope: 0 };
-const holes: CarrierLog = { log: 0, slope: 0 };
+const carrier: CarrierLog = { log: 0, slope: 0 };
+/** F_1/2 and its derivative. */
+const pair = new Float64Array(2);
+/** Boltzmann statistics can overflow, far inside a band where they mean nothing; kept finite for the iteration's sake. */
+const LARGEST_EXPONENT = 600;
+
+/** F = density over density of states into pair[0], dF/deta into pair[1]. */
+function carriersInto(eta: number, a: number, boltzmann: boolean): void {
+  if (a > 0) {
+    carrierLog(eta, a, boltzmann, carrier);
+    pair[0] = Math.exp(Math.min(carrier.log, LARGEST_EXPONENT));
+    pair[1] = pair[0] * carrier.slope;
+  } else if (boltzmann) pair[0] = pair[1] = Math.exp(Math.min(eta, LARGEST_EXPONENT));
+  else fermiHalfInto(eta, pair);
+}
 
 /**
  * Charge at a given Fermi level, into `out` (nothing is allocated). An insulator carries none: all zero, whatever is in it.
@@ -90,35 +104,43 @@ export function chargeAt(c: LocalCharge, ecMinusEf: number, out: ChargeValues): 
   out.n = out.p = out.donors = out.acceptors = out.net = out.slope = 0;
   if (b.insulator) return;
   const boltzmann = b.statistics === 'boltzmann';
-  carrierLog(-ecMinusEf / b.kT, b.kaneN * b.kT, boltzmann, electrons);
-  carrierLog((ecMinusEf - b.gap) / b.kT, b.kaneP * b.kT, boltzmann, holes);
-  // Only Boltzmann statistics can overflow, far inside a band where they mean nothing; kept finite for the iteration's sake.
-  out.n = b.nc * Math.exp(Math.min(electrons.log, 600));
-  out.p = b.nv * Math.exp(Math.min(holes.log, 600));
-  let slope = out.n * electrons.slope + out.p * holes.slope;
+  carriersInto(-ecMinusEf / b.kT, b.kaneN * b.kT, boltzmann);
+  out.n = b.nc * pair[0];
+  let slope = b.nc * pair[1];
+  carriersInto((ecMinusEf - b.gap) / b.kT, b.kaneP * b.kT, boltzmann);
+  out.p = b.nv * pair[0];
+  slope += b.nv * pair[1];
   // Levels on their charged side enter as N less what they hold, the others by their charge itself: equal donors and acceptors
   // cancel exactly, and near freeze-out no digit is lost to N - (N - small).
   let whole = c.fixed;
   let small = 0;
   for (let i = 0; i < c.levels.length; i++) {
     const level = c.levels[i];
-    const sign = level.donor ? 1 : -1;
     let charged = level.density;
+    let signed = charged;
     if (level.bound > 0) {
-      const u = distance(b, level, ecMinusEf);
-      const neutral = Math.exp(logNeutralShare(u, level.logG));
-      // Computed for itself: near freeze-out one minus the filled share has no digits left.
-      const empty = Math.exp(logNeutralShare(-u, -level.logG));
-      charged = level.density * (1 - level.bound + level.bound * empty);
-      const held = level.density * level.bound * neutral;
-      if (held < charged) {
-        whole += sign * level.density;
-        small -= sign * held;
-      } else small += sign * charged;
-      slope += held * empty;
-    } else whole += sign * level.density;
-    if (level.donor) out.donors += charged;
-    else out.acceptors += charged;
+      // The larger share is 1/(1 + e), the smaller e/(1 + e): each computed for itself, since near freeze-out one minus the other has no
+      // digits left, with one exponential for both.
+      const v = distance(b, level, ecMinusEf) - level.logG;
+      const e = Math.exp(v > 0 ? -v : v);
+      const larger = 1 / (1 + e);
+      const smaller = e * larger;
+      charged = level.density * (1 - level.bound + level.bound * (v > 0 ? larger : smaller));
+      const held = level.density * level.bound * (v > 0 ? smaller : larger);
+      if (held < charged) small -= level.donor ? held : -held;
+      else {
+        small += level.donor ? charged : -charged;
+        signed = 0;
+      }
+      slope += level.density * level.bound * larger * smaller;
+    }
+    if (level.donor) {
+      whole += signed;
+      out.donors += charged;
+    } else {
+      whole -= signed;
+      out.acceptors += charged;
+    }
   }
   out.net = out.p - out.n + small + whole;
   out.slope = slope / b.kT;
