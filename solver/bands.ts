@@ -25,8 +25,15 @@ export function materialId(m: Material): string {
   return m.id;
 }
 
-/** Gap by Varshni's law, eV; Varshni, Physica 34, 149 (1967), eq. (1). @param T  K, > 0 */
+/**
+ * Gap by the law that the material names, eV. @param T  K, > 0
+ *
+ * Varshni, Physica 34, 149 (1967), eq. (1); O'Donnell and Chen, Appl. Phys. Lett. 58, 2924 (1991), eq. (3) (equation number from memory).
+ */
 export function gapAt(law: GapLaw, T: number): number {
+  if (law.law === 'linear') return law.at300K - law.slope * (T - 300);
+  // coth(u/2) - 1 = 2/(e^u - 1): the difference itself would lose its digits where the phonons freeze.
+  if (law.law === 'odonnell-chen') return law.zeroK - (2 * law.coupling * law.phonon) / Math.expm1(law.phonon / (BOLTZMANN * T));
   return law.zeroK - (law.alpha * T * T) / (T + law.beta);
 }
 

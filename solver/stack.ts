@@ -5,11 +5,30 @@
  * Frame: z = 0 at the top contact, growing into the stack. Layers run from the top down.
  */
 
-/** Band gap against temperature. Varshni, Physica 34, 149 (1967): Eg = zeroK - alpha T^2/(T + beta). */
-export interface GapLaw {
+/** Band gap against temperature; without `law` it is Varshni's. */
+export type GapLaw = VarshniGap | LinearGap | ODonnellChenGap;
+
+/** Eg = zeroK - alpha T^2/(T + beta); Varshni, Physica 34, 149 (1967), eq. (1). */
+export interface VarshniGap {
+  law?: 'varshni';
   /** gap at 0 K, eV */ zeroK: number;
   /** eV/K */ alpha: number;
   /** K */ beta: number;
+}
+
+/** Eg = at300K - slope (T - 300 K); common practice where only a temperature coefficient is published, no source. */
+export interface LinearGap {
+  law: 'linear';
+  /** gap at 300 K, eV */ at300K: number;
+  /** fall per kelvin, eV/K */ slope: number;
+}
+
+/** Eg = zeroK - coupling phonon [coth(phonon/2kT) - 1]; O'Donnell and Chen, Appl. Phys. Lett. 58, 2924 (1991), eq. (3). */
+export interface ODonnellChenGap {
+  law: 'odonnell-chen';
+  /** gap at 0 K, eV */ zeroK: number;
+  /** S, dimensionless */ coupling: number;
+  /** mean phonon energy, eV, > 0 */ phonon: number;
 }
 
 /** A mass, m0, as a polynomial in T/K, lowest power first; one coefficient is a constant mass. */

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { densityOfStates, gapAt, localBands } from '../../solver/bands.ts';
+import { BOLTZMANN } from '../../solver/constants.ts';
 import { layerFigures } from '../../solver/layer.ts';
 import type { AlloyMaterial, CrystalMaterial } from '../../solver/stack.ts';
 import checks from '../fixtures/checks-b.json';
@@ -15,6 +16,24 @@ describe('gap and intrinsic density against published figures (sources in checks
     const gaas = { zeroK: 1.519, alpha: 0.0005405, beta: 204 };
     holdAgainst(checks, 'eg-varshni-gaas', 'Eg(300 K)', gapAt(gaas, 300));
     holdAgainst(checks, 'eg-varshni-gaas', 'Eg(77 K)', gapAt(gaas, 77));
+  });
+
+  it('the law of O\'Donnell and Chen starts flat and ends straight', () => {
+    const law = { law: 'odonnell-chen', zeroK: 5.482, coupling: 2.31, phonon: 0.094 } as const;
+    const coth = (u: number): number => 1 / Math.tanh(u);
+    for (const T of [200, 300, 600, 1500]) expect(gapAt(law, T)).toBeCloseTo(5.482 - 2.31 * 0.094 * (coth(0.094 / (2 * BOLTZMANN * T)) - 1), 12);
+    // Diamond: 5.47 eV at 300 K, Landolt-Boernstein.
+    expect(gapAt(law, 300)).toBeCloseTo(5.47, 2);
+    expect(gapAt(law, 1)).toBe(5.482);
+    // Far above the phonon's temperature the slope is -2 S k, as in the paper.
+    expect((gapAt(law, 2e5) - gapAt(law, 1.9e5)) / (1e4 * -2 * 2.31 * BOLTZMANN)).toBeCloseTo(1, 5);
+  });
+
+  it('a straight law turns about its value at 300 K', () => {
+    const law = { law: 'linear', at300K: 2.42, slope: 4.1e-4 } as const;
+    expect(gapAt(law, 300)).toBe(2.42);
+    expect(gapAt(law, 100)).toBeCloseTo(2.502, 12);
+    expect(gapAt({ law: 'varshni', zeroK: 1.519, alpha: 0.0005405, beta: 204 }, 300)).toBe(gapAt({ zeroK: 1.519, alpha: 0.0005405, beta: 204 }, 300));
   });
 
   it('the intrinsic density follows from stated densities of states', () => {
