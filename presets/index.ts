@@ -25,6 +25,7 @@ import inInN from './dopants/InN.json' with { type: 'json' };
 import inInP from './dopants/InP.json' with { type: 'json' };
 import inSi from './dopants/Si.json' with { type: 'json' };
 import inSiGe from './dopants/SiGe.json' with { type: 'json' };
+import inSiGeonSi from './dopants/SiGe-on-Si.json' with { type: 'json' };
 import inZnO from './dopants/ZnO.json' with { type: 'json' };
 import indiamond from './dopants/diamond.json' with { type: 'json' };
 import material4HSiC from './materials/4H-SiC.json' with { type: 'json' };
@@ -42,6 +43,7 @@ import materialGaN from './materials/GaN.json' with { type: 'json' };
 import materialGaP from './materials/GaP.json' with { type: 'json' };
 import materialGaSb from './materials/GaSb.json' with { type: 'json' };
 import materialGe from './materials/Ge.json' with { type: 'json' };
+import materialGeonSi from './materials/Ge-on-Si.json' with { type: 'json' };
 import materialHfO2 from './materials/HfO2.json' with { type: 'json' };
 import materialInAlAs from './materials/InAlAs.json' with { type: 'json' };
 import materialInAs from './materials/InAs.json' with { type: 'json' };
@@ -53,6 +55,7 @@ import materialInP from './materials/InP.json' with { type: 'json' };
 import materialSi from './materials/Si.json' with { type: 'json' };
 import materialSi3N4 from './materials/Si3N4.json' with { type: 'json' };
 import materialSiGe from './materials/SiGe.json' with { type: 'json' };
+import materialSiGeonSi from './materials/SiGe-on-Si.json' with { type: 'json' };
 import materialSiO2 from './materials/SiO2.json' with { type: 'json' };
 import materialZnO from './materials/ZnO.json' with { type: 'json' };
 import materialdiamond from './materials/diamond.json' with { type: 'json' };
@@ -67,14 +70,16 @@ export type * from './types.ts';
 /** Crystals and alloys. */
 export const materials = [
   material4HSiC, material6HSiC, materialAl2O3, materialAlAs, materialAlGaAs, materialAlGaN, materialAlN, materialCdS, materialCdTe, materialGa2O3,
-  materialGaAs, materialGaN, materialGaP, materialGaSb, materialGe, materialHfO2, materialInAlAs, materialInAs, materialInGaAs, materialInGaN,
-  materialInGaP, materialInN, materialInP, materialSi, materialSi3N4, materialSiGe, materialSiO2, materialZnO, materialdiamond,
+  materialGaAs, materialGaN, materialGaP, materialGaSb, materialGe, materialGeonSi, materialHfO2, materialInAlAs, materialInAs, materialInGaAs,
+  materialInGaN, materialInGaP, materialInN, materialInP, materialSi, materialSi3N4, materialSiGe, materialSiGeonSi, materialSiO2, materialZnO,
+  materialdiamond,
 ] as unknown as readonly MaterialPreset[];
 
 /** Dopants of every host, one row a level. */
 export const dopants = [
   ...in4HSiC, ...in6HSiC, ...inAlAs, ...inAlGaAs, ...inAlGaN, ...inAlN, ...inCdS, ...inCdTe, ...inGa2O3, ...inGaAs, ...inGaN, ...inGaP, ...inGaSb,
-  ...inGe, ...inInAlAs, ...inInAs, ...inInGaAs, ...inInGaN, ...inInGaP, ...inInN, ...inInP, ...inSi, ...inSiGe, ...inZnO, ...indiamond,
+  ...inGe, ...inInAlAs, ...inInAs, ...inInGaAs, ...inInGaN, ...inInGaP, ...inInN, ...inInP, ...inSi, ...inSiGe, ...inSiGeonSi, ...inZnO,
+  ...indiamond,
 ] as unknown as readonly DopantPreset[];
 
 /** Metals, nitrides and silicides with their measured barriers. */

@@ -63,6 +63,12 @@ interface SurfacePreset {
   /** S */ pinningSlope?: number;
 }
 
+/** Where the laws were measured or fitted: lowest and highest. */
+export interface ValidityPreset {
+  temperature?: [string, string];
+  /** sum of all active dopants */ doping?: [string, string];
+}
+
 export interface CrystalPreset extends Entry, SurfacePreset {
   insulator?: boolean;
   /** Gap of the valley that goes with `electronMass`. It is the lowest one but where `otherValleys` holds a lower: AlAs (Gamma first), Ge (Delta first). */
@@ -80,6 +86,7 @@ export interface CrystalPreset extends Entry, SurfacePreset {
   mobility?: ByCarrier<MobilityPreset>;
   narrowing?: NarrowingPreset;
   polarisation?: { spontaneous: string; e31?: string; e33?: string; c13?: string; c33?: string; lattice?: string };
+  validity?: ValidityPreset;
   /** valence edge on a named scale; edges of two scales cannot be compared */ naturalValence?: { scale: string; edge: string };
 }
 
@@ -98,6 +105,7 @@ export interface AlloyPreset extends Entry, SurfacePreset {
     /** of the gaps of the ends' `otherValleys`, by name; 0 where absent */ valleyBowing?: Record<string, string>;
   };
   mobility?: ByCarrier<MobilityPreset>;
+  validity?: ValidityPreset;
 }
 
 export type MaterialPreset = CrystalPreset | AlloyPreset;

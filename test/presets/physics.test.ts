@@ -143,11 +143,20 @@ describe('band offsets and polarisation', () => {
   });
 
   it('the steps at silicon are those of its gate oxides: both carriers confined', () => {
-    for (const o of offsets.filter((row) => row.first === 'Si')) {
+    const oxides = offsets.filter((o) => o.first === 'Si' && bands(o.second, 0, 300).insulator);
+    expect(oxides.length).toBe(4);
+    for (const o of oxides) {
       const dEc = read(o.deltaEc?.constant as string);
       expect(dEc, o.second).toBeGreaterThan(1);
       expect(gap(o.second) - gap('Si') - dEc, o.second).toBeGreaterThan(1);
     }
+  });
+
+  it('strained SiGe on silicon takes the step of its gap almost wholly in the valence band', () => {
+    // Robbins et al. (1992) for the gap; People and Bean (1986): the conduction step stays below 20 meV.
+    expect(gap('SiGe-on-Si', 0.2, 4)).toBeCloseTo(gap('Si', 0, 4) - 0.896 * 0.2 + 0.396 * 0.04, 9);
+    const perX = read(offsets.find((o) => o.second === 'SiGe-on-Si')?.deltaEv?.perX as string);
+    expect(Math.abs(perX * 0.2 + gap('SiGe-on-Si', 0.2) - gap('Si'))).toBeLessThan(0.02);
   });
 
   it('strained Al0.3Ga0.7N on GaN carries the published sheet charge', () => {

@@ -30,6 +30,7 @@ const FORMS: [RegExp, RegExp | 'number'][] = [
   [/^(solubility|mottDensity|screened\.mottDensity|merging\.(depth|bound)Reference)$/, quantity('cm^-3')],
   [/^(merging\.(depth|bound)|screened\.bound)Exponent$/, 'number'],
   [/^screened\.coefficient$/, quantity('eV cm')],
+  [/^validity\.temperature$/, quantity('K')],
   [/^delta(Ev|Ec)\.(constant|perX)$/, ENERGY],
 ];
 const WORDS = ['id', 'name', 'host', 'kind', 'centre', 'insulator', 'barriers', 'source', 'sources', 'first', 'second'];
