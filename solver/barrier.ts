@@ -9,12 +9,19 @@ export interface BarrierHeights {
   source: 'given' | 'measured' | 'pinned' | 'ideal';
 }
 
-/** Linear mixture of a property of an alloy's ends unless the alloy has its own; undefined where an end lacks it. */
-function surfaceProperty(material: Material, x: number, key: 'neutralityLevel' | 'pinningSlope'): number | undefined {
-  if (!isAlloy(material)) return material[key];
-  if (material[key] !== undefined) return material[key];
-  const a = material.first[key];
-  const b = material.second[key];
+/** S of a material: straight between an alloy's ends unless it has its own; 1 where none is known, so an alloy equals its crystals at both ends. */
+export function pinningSlope(material: Material, x: number): number {
+  if (material.pinningSlope !== undefined || !isAlloy(material)) return material.pinningSlope ?? 1;
+  return (1 - x) * (material.first.pinningSlope ?? 1) + x * (material.second.pinningSlope ?? 1);
+}
+
+/** E_CNL above Ev, eV: straight between an alloy's ends unless it has its own; undefined where an end that counts lacks it. */
+function neutralityLevel(material: Material, x: number): number | undefined {
+  if (material.neutralityLevel !== undefined || !isAlloy(material)) return material.neutralityLevel;
+  const a = material.first.neutralityLevel;
+  const b = material.second.neutralityLevel;
+  if (x === 0) return a;
+  if (x === 1) return b;
   return a === undefined || b === undefined ? undefined : (1 - x) * a + x * b;
 }
 
@@ -30,10 +37,10 @@ export function barrierHeights(source: Extract<Boundary, { kind: 'barrier' }>['s
     const barrierN = source.carrier === 'n' ? source.height : bands.gap - source.height;
     return { barrierN, barrierP: bands.gap - barrierN, source: source.from };
   }
-  const slope = source.slope === 'material' ? (surfaceProperty(material, x, 'pinningSlope') ?? 1) : source.slope;
+  const slope = source.slope === 'material' ? pinningSlope(material, x) : source.slope;
   let barrierN = source.workFunction - bands.affinity;
   if (slope !== 1) {
-    const level = surfaceProperty(material, x, 'neutralityLevel');
+    const level = neutralityLevel(material, x);
     if (level === undefined) throw new RangeError(`${material.id} has no charge neutrality level to pin to; give the barrier outright or set pinning to "none"`);
     const phiCnl = bands.gap - level;
     barrierN = slope * (source.workFunction - bands.affinity - phiCnl) + phiCnl;
@@ -42,7 +49,7 @@ export function barrierHeights(source: Extract<Boundary, { kind: 'barrier' }>['s
 }
 
 /**
- * Image-force lowering, eV: sqrt(q E/(4 pi eps)). Sze and Ng, Physics of Semiconductor Devices (2007), eq. (3.27).
+ * Image-force lowering, eV: sqrt(q E/(4 pi eps)). Sze and Ng, Physics of Semiconductor Devices (2007), section 3.2.4.
  *
  * @param field                      size of the surface field, V/cm, >= 0
  * @param permittivityHighFrequency  relative
@@ -52,7 +59,7 @@ export function imageForceLowering(field: number, permittivityHighFrequency: num
 }
 
 /**
- * Characteristic tunnelling energy E00 = (q hbar/2) sqrt(N/(m eps)), eV. Padovani and Stratton, Solid-State Electron. 9, 695 (1966), eq. (5).
+ * Characteristic tunnelling energy E00 = (q hbar/2) sqrt(N/(m eps)), eV. Padovani and Stratton, Solid-State Electron. 9, 695 (1966).
  *
  * @param density       charged doping at the metal, cm^-3
  * @param mass          tunnelling mass, m0

@@ -1,6 +1,6 @@
 import { barrierHeights, imageForceLowering, transportRegime, tunnellingEnergy } from './barrier.ts';
 import { localCharge, netDoping } from './charge.ts';
-import { depletionFrom } from './depletion.ts';
+import { depletionFrom, type SpaceCharge } from './depletion.ts';
 import { profileAt } from './profile.ts';
 import type { ContactFigures, Profiles } from './solution.ts';
 import { isAlloy, type Material, type Stack } from './stack.ts';
@@ -17,7 +17,7 @@ export function tunnellingMass(material: Material, x: number, carrier: 'electron
  * Figures of one end of the stack. E00 takes N = |net active doping| at the metal, where all of it is charged, the static permittivity and the
  * majority's tunnelling mass; the lowering is quoted only where the field depletes the majority (an accumulated surface has no barrier top inside).
  */
-export function contactFigures(stack: Stack, profiles: Profiles, side: 'top' | 'bottom'): ContactFigures {
+export function contactFigures(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 'top' | 'bottom'): ContactFigures {
   const boundary = stack[side];
   const index = side === 'top' ? 0 : stack.layers.length - 1;
   const layer = stack.layers[index];
@@ -28,7 +28,7 @@ export function contactFigures(stack: Stack, profiles: Profiles, side: 'top' | '
   const surfaceField = profiles.field[node];
   const figures: ContactFigures = {
     side, kind: boundary.kind, barrierN: null, barrierP: null, barrierSource: null, lowering: null, surfaceField,
-    e00: null, transport: null, depletion: c.bands.insulator ? null : depletionFrom(stack, profiles, index, side),
+    e00: null, transport: null, depletion: depletionFrom(stack, profiles, space, index, side),
   };
   if (boundary.kind === 'pinned') {
     figures.barrierN = boundary.level;

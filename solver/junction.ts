@@ -1,7 +1,8 @@
 import type { Alignment } from './alignment.ts';
+import { junctionCapacitance } from './capacitance.ts';
 import { localCharge, netDoping } from './charge.ts';
 import { ELEMENTARY_CHARGE, EPSILON_0 } from './constants.ts';
-import { depletionFrom, layerRanges } from './depletion.ts';
+import { depletionFrom, type SpaceCharge } from './depletion.ts';
 import { neutralLevel } from './fermi-level.ts';
 import type { JunctionFigures, Profiles } from './solution.ts';
 import type { Stack } from './stack.ts';
@@ -16,18 +17,17 @@ function neutralPsi(stack: Stack, alignment: Alignment, layer: number, z: number
  * Figures of the interface below layer `index`, with the values at the interface.
  *
  * Depletion approximation of an abrupt junction: W = sqrt(2 eps Vbi .../q), with the permittivity of each side (Sze and Ng, Physics of Semiconductor
- * Devices, 2007, eqs. 2.15 and 2.103); only where the two sides are doped oppositely. Capacitance: both solved depletion widths in
- * series, eps/W each.
+ * Devices, 2007, sections 2.2 and 2.7; from memory); only where the two sides are doped oppositely.
  */
-export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, sheets: ArrayLike<number>, index: number): JunctionFigures {
+export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, space: SpaceCharge, sheets: ArrayLike<number>, index: number): JunctionFigures {
   const above = stack.layers[index];
   const chargeAbove = localCharge(above, above.thickness, stack.temperature, stack.assumptions);
   const chargeBelow = localCharge(stack.layers[index + 1], 0, stack.temperature, stack.assumptions);
   const psiAbove = neutralPsi(stack, alignment, index, above.thickness);
   const psiBelow = neutralPsi(stack, alignment, index + 1, 0);
   const builtIn = psiAbove === null || psiBelow === null ? null : psiBelow - psiAbove;
-  const depletionAbove = psiAbove === null ? null : depletionFrom(stack, profiles, index, 'bottom');
-  const depletionBelow = psiBelow === null ? null : depletionFrom(stack, profiles, index + 1, 'top');
+  const depletionAbove = psiAbove === null ? null : depletionFrom(stack, profiles, space, index, 'bottom');
+  const depletionBelow = psiBelow === null ? null : depletionFrom(stack, profiles, space, index + 1, 'top');
 
   const nA = netDoping(chargeAbove);
   const nB = netDoping(chargeBelow);
@@ -42,27 +42,43 @@ export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Pr
     approximateAbove = Math.sqrt((common * b) / a);
     approximateBelow = Math.sqrt((common * a) / b);
   }
-  const capacitance = depletionAbove && depletionBelow ? 1 / (depletionAbove / epsA + depletionBelow / epsB) : null;
   const { deltaEc, deltaEv, class: kind, source } = alignment.interfaces[index];
   return {
     index, builtIn, deltaEc, deltaEv, class: kind, alignment: source,
     sheetCharge: sheets[index],
-    peakField: peakField(stack, profiles, index),
+    peakField: peakField(profiles, space, index),
     depletionAbove, depletionBelow,
     depletionApproximationAbove: approximateAbove,
     depletionApproximationBelow: approximateBelow,
-    capacitance,
+    capacitance: junctionCapacitance(stack, profiles, space, index),
   };
 }
 
-/** Largest field, V/cm, in the halves of the two layers that lie towards the interface (the others belong to their neighbours). */
-function peakField(stack: Stack, profiles: Profiles, index: number): number {
-  const ranges = layerRanges(profiles, stack.layers.length);
-  const z0 = profiles.z[ranges[index][1]];
-  let peak = 0;
-  for (const l of [index, index + 1]) {
-    const reach = stack.layers[l].thickness / 2;
-    for (let s = ranges[l][0]; s <= ranges[l][1]; s++) if (Math.abs(profiles.z[s] - z0) <= reach) peak = Math.max(peak, Math.abs(profiles.field[s]));
+/** Net charge below this share of the largest met on the way ends a junction's own space charge. */
+const SPENT = 0.01;
+
+/** Largest field, V/cm, in the junction's own space charge on both sides. */
+function peakField(profiles: Profiles, space: SpaceCharge, index: number): number {
+  const above = space.ranges[index];
+  const below = space.ranges[index + 1];
+  return Math.max(peakFrom(profiles, above[1], above[0]), peakFrom(profiles, below[0], below[1]));
+}
+
+/**
+ * From the interface at node `start` into its layer, which ends at `end`: as far as the space charge keeps its sign and its size and the field its
+ * direction. Space charge that fills the layer to its far end is shared with the junction there; the field along it runs
+ * one way, so that a larger one than at this interface is the other junction's.
+ */
+function peakFrom(profiles: Profiles, start: number, end: number): number {
+  const { charge, field } = profiles;
+  const step = end > start ? 1 : -1;
+  let peak = Math.abs(field[start]);
+  let most = Math.abs(charge[start]);
+  for (let s = start + step; step * (end - s) >= 0; s += step) {
+    most = Math.max(most, Math.abs(charge[s]));
+    if (field[s] * field[start] <= 0) return peak;
+    peak = Math.max(peak, Math.abs(field[s]));
+    if (charge[s] * charge[start] <= 0 || Math.abs(charge[s]) < SPENT * most) return peak;
   }
-  return peak;
+  return Math.abs(field[start]);
 }

@@ -37,7 +37,7 @@ export interface LayerFigures {
   mobilityP: number | null;
   /** ohm cm; null when a needed mobility is missing */ resistivity: number | null;
   /** ohm */ sheetResistance: number | null;
-  fullyDepleted: boolean;
+  /** no part of a doped layer is neutral; false in an undoped one */ fullyDepleted: boolean;
   boltzmann: { ecMinusEf: number; n: number; p: number };
   insulator: boolean;
 }
@@ -52,12 +52,12 @@ export interface JunctionFigures {
   class: 'straddling' | 'staggered' | 'broken';
   alignment: AlignmentSource;
   /** all fixed charge on it, polarisation included, +q, cm^-2 */ sheetCharge: number;
-  /** largest |field| within the two neighbouring layers' depletion, V/cm */ peakField: number;
-  depletionAbove: number | null;
+  /** largest |field| in the junction's own space charge, V/cm (junction.ts) */ peakField: number;
+  /** from the interface to where the net charge falls to half of the dopants', cm; null without doping */ depletionAbove: number | null;
   depletionBelow: number | null;
   depletionApproximationAbove: number | null;
   depletionApproximationBelow: number | null;
-  /** F/cm^2 */ capacitance: number | null;
+  /** zero bias, dQ/dV of the solved charge, F/cm^2; null where it has no meaning (capacitance.ts) */ capacitance: number | null;
 }
 
 export interface ContactFigures {

@@ -3,7 +3,7 @@ import { barrierHeights } from './barrier.ts';
 import { localCharge } from './charge.ts';
 import { EPSILON_0 } from './constants.ts';
 import { contactFigures } from './contact.ts';
-import { isFullyDepleted } from './depletion.ts';
+import { isFullyDepleted, spaceChargeOf } from './depletion.ts';
 import { neutralLevel } from './fermi-level.ts';
 import { junctionFigures } from './junction.ts';
 import { layerFigures } from './layer.ts';
@@ -35,11 +35,12 @@ export function solveStack(stack: Stack, options: SolveOptions = {}): Solution |
   const answer = solvePoisson(poissonProblem(stack, alignment, sheets), options);
   if (isRefusal(answer)) return answer;
   const { profiles, quality } = answer;
-  const layers = stack.layers.map((layer, l) => layerFigures(layer, stack.temperature, stack.assumptions, isFullyDepleted(stack, profiles, l)));
+  const space = spaceChargeOf(stack, profiles);
+  const layers = stack.layers.map((layer, l) => layerFigures(layer, stack.temperature, stack.assumptions, isFullyDepleted(stack, profiles, space, l)));
   const solution: Solution = {
     stack, profiles, quality, layers,
-    junctions: alignment.interfaces.map((_, i) => junctionFigures(stack, alignment, profiles, sheets, i)),
-    contacts: [contactFigures(stack, profiles, 'top'), contactFigures(stack, profiles, 'bottom')],
+    junctions: alignment.interfaces.map((_, i) => junctionFigures(stack, alignment, profiles, space, sheets, i)),
+    contacts: [contactFigures(stack, profiles, space, 'top'), contactFigures(stack, profiles, space, 'bottom')],
     warnings: [],
   };
   solution.warnings = warningsOf(solution);

@@ -65,6 +65,12 @@ export interface Polarisation {
   lattice?: number;
 }
 
+/** Where a material's laws were measured or fitted; beyond it they are extrapolated, which is said and not refused. */
+export interface Validity {
+  /** lowest and highest, K */ temperature?: readonly [number, number];
+  /** lowest and highest sum of all active dopants, cm^-3 */ doping?: readonly [number, number];
+}
+
 /** A material that is no alloy. Every law holds at every T; values outside a source's range are the reader's business to warn of. */
 export interface CrystalMaterial {
   id: string;
@@ -91,6 +97,7 @@ export interface CrystalMaterial {
   polarisation?: Polarisation;
   /** valence edge on a named scale of natural offsets, eV, unstrained */
   naturalValence?: { scale: string; edge: number };
+  validity?: Validity;
 }
 
 /** P(x) = (1 - x) first + x second - x (1 - x) bowing, for each property that has a bowing (0 else). */
@@ -106,6 +113,7 @@ export interface AlloyMaterial {
   mobility?: { electron?: MobilityLaw; hole?: MobilityLaw };
   neutralityLevel?: number;
   pinningSlope?: number;
+  /** of the alloy's own laws; those of its ends count as well */ validity?: Validity;
 }
 
 export type Material = CrystalMaterial | AlloyMaterial;
@@ -136,6 +144,9 @@ export interface Dopant {
   merging?: { depthReference: number; depthExponent: number; boundReference: number; boundExponent: number };
   /** coefficient in eV cm */
   screened?: { coefficient: number; mottDensity: number; boundExponent: number };
+  /** of the metal-insulator transition, cm^-3; by default that of `screened` */ mottDensity?: number;
+  /** highest published active concentration, cm^-3 */ solubility?: number;
+  /** Rows of one layer with the same name are levels of one and the same centre. */ centre?: string;
 }
 
 export interface Layer {
