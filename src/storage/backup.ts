@@ -1,0 +1,55 @@
+import { sha256 } from '@noble/hashes/sha2';
+import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils';
+import { recordFault, type ProjectRecord } from './record.ts';
+
+/**
+ * All projects in one file that a person can keep: JSON, each project with a check over its own text, so that a file cut short or altered is noticed
+ * project by project and the others still come back.
+ */
+export const BACKUP_FORMAT = 'halfmark-backup/1';
+
+type Kept = Omit<ProjectRecord, 'id' | 'revision'>;
+interface BackupEntry extends Kept {
+  check: string;
+}
+
+export type BackupReading =
+  | { ok: true; projects: Kept[]; refused: { name: string; why: string }[] }
+  | { ok: false; message: string };
+
+/** @param written  ms since 1970 */
+export function writeBackup(records: readonly ProjectRecord[], written: number): string {
+  const projects = records.map(({ id: _id, revision: _revision, ...kept }): BackupEntry => ({ ...kept, check: checkOf(kept) }));
+  return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects }, null, 1)}\n`;
+}
+
+/** Reads a backup. What is whole is given back, what is not is named with the reason. */
+export function readBackup(text: string): BackupReading {
+  let file: unknown;
+  try {
+    file = JSON.parse(text.replace(/^\ufeff/, ''));
+  } catch {
+    return { ok: false, message: 'This is no backup file: it is not JSON, or it was cut short.' };
+  }
+  if (typeof file !== 'object' || file === null) return { ok: false, message: 'This is no backup file.' };
+  const { format, projects } = file as { format?: unknown; projects?: unknown };
+  const version = typeof format === 'string' ? /^halfmark-backup\/(\d+)$/.exec(format) : null;
+  if (version === null) return { ok: false, message: 'This is no backup file: it does not say "halfmark-backup" as its format.' };
+  if (format !== BACKUP_FORMAT) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads version 1. Reload the page to get its newest version.` };
+  if (!Array.isArray(projects)) return { ok: false, message: 'This backup holds no list of projects.' };
+  const good: Kept[] = [];
+  const refused: { name: string; why: string }[] = [];
+  for (const [i, entry] of projects.entries()) {
+    const fault = recordFault(typeof entry === 'object' && entry !== null ? { ...entry, id: '', revision: 1 } : entry);
+    const { check, ...kept } = (entry ?? {}) as BackupEntry;
+    const name = typeof kept.name === 'string' ? kept.name : `number ${i + 1}`;
+    if (fault !== null) refused.push({ name, why: fault });
+    else if (check !== checkOf(kept)) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
+    else good.push(kept);
+  }
+  return { ok: true, projects: good, refused };
+}
+
+function checkOf({ name, created, changed, binned, designText, history, view }: Kept): string {
+  return `sha256:${bytesToHex(sha256(utf8ToBytes(JSON.stringify([name, created, changed, binned, designText, history, view]))))}`;
+}

@@ -1,0 +1,42 @@
+import { openDB, type DBSchema, type IDBPDatabase, type IDBPTransaction } from 'idb';
+import { to1 } from './migrations/to-1.ts';
+
+/** What stands in the database. Records are read with care: what is written here is what they should be, not what a damaged disk gives back. */
+export interface HalfmarkDB extends DBSchema {
+  projects: { key: string; value: unknown };
+  /** set aside, never thrown away by the program */ damaged: { key: number; value: { found: number; why: string; text: string } };
+  settings: { key: string; value: unknown };
+}
+
+export type Database = IDBPDatabase<HalfmarkDB>;
+type UpgradeTransaction = IDBPTransaction<HalfmarkDB, ('projects' | 'damaged' | 'settings')[], 'versionchange'>;
+/** Brings the database one version further, inside the upgrade's own transaction. */
+export type Migration = (db: Database, transaction: UpgradeTransaction) => void;
+
+/** MIGRATIONS[n] leads from version n to n + 1. */
+export const MIGRATIONS: readonly Migration[] = [to1];
+
+/** The moments in the life of a database that a person has to hear of. */
+export type DatabaseMoment =
+  /** another tab holds an older version open and ours waits */ | 'blocked'
+  /** another tab waits for us: this connection is closed now */ | 'blocking'
+  /** the browser cut the connection */ | 'terminated';
+
+/**
+ * Opens the database, climbing from whatever version it has, one at a time.
+ * @throws {DOMException} VersionError when a newer page has written it; others when the browser keeps nothing for this page
+ */
+export function openDatabase(name: string, told: (moment: DatabaseMoment) => void, migrations: readonly Migration[] = MIGRATIONS): Promise<Database> {
+  return openDB<HalfmarkDB>(name, migrations.length, {
+    upgrade(db, from, to, transaction) {
+      for (let version = from; version < (to ?? migrations.length); version++) migrations[version](db, transaction);
+    },
+    blocked: () => told('blocked'),
+    blocking(_current, _wanted, event) {
+      // Whoever waits gets the database at once; what is unsaved here is still in memory.
+      (event.target as IDBDatabase).close();
+      told('blocking');
+    },
+    terminated: () => told('terminated'),
+  });
+}
