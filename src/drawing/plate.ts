@@ -1,0 +1,142 @@
+import type { Result } from '../result/types.ts';
+import type { DepthAxis, DepthMode } from './depth-axis.ts';
+import { describe } from './describe.ts';
+import { dimensionsOf } from './dimensions.ts';
+import type { EnergyAxis } from './energy-axis.ts';
+import { plateFrame, type Frame, type FrameOptions } from './frame.ts';
+import { axes, endLabels } from './marks/axes.ts';
+import { bandEdges, fermiLevel, interfaces, vacuumLevel } from './marks/band-edges.ts';
+import { caption, captionSentences, heading, staleNotice, wrapped } from './marks/caption.ts';
+import { carrierShading } from './marks/carriers.ts';
+import { dimensionLine } from './marks/dimension-lines.ts';
+import { dopantLevels } from './marks/dopant-levels.ts';
+import { metals } from './marks/metals.ts';
+import { occupancyShading } from './marks/occupancy.ts';
+import { strip } from './marks/strip.ts';
+import { placeDimensions, type Box, type Obstacles } from './place-dimensions.ts';
+import type { Drawing, Gradient, Shape } from './shapes.ts';
+import { styleOf, type StyleName } from './styles.ts';
+import { traceOf, visibleSpans, type LayerSpan } from './traces.ts';
+
+export interface PlateOptions {
+  /** px */ width: number;
+  height: number;
+  depth: DepthMode;
+  /** zoom, nm */ window?: [number, number];
+  /** zoom, eV */ energyWindow?: [number, number];
+  /** eV, where several plates share one energy axis; `energyWindow` wins */ energyDomain?: [number, number];
+  shading: 'occupancy' | 'carriers' | 'none';
+  style: StyleName;
+  vacuum: boolean;
+  levels: boolean;
+  /** ids of dimension lines put away */ hidden?: string[];
+  /** dragged dimension lines: offset in px from where they would stand */ moved?: Record<string, [number, number]>;
+  /** the result is of an earlier input */ stale?: boolean;
+  /** full: with strip of layer names, title and caption, for export. bare: the page draws the strip itself */ frame?: 'bare' | 'full';
+  /** of the ids in this drawing; give each of several drawings on a page its own */ prefix?: string;
+}
+
+export interface PlateDimension {
+  id: string;
+  /** "qVbi" */ label: string;
+  /** "0.853 eV" */ value: string;
+  /** what it measures, in words */ meaning: string;
+  /** middle of the figure, px; of no use while not drawn */ x: number;
+  y: number;
+  /** the figure's box, for a handle to drag it by; null while not drawn */ box: Box | null;
+  hidden: boolean;
+  /** wanted, but there is no room for it */ crowded: boolean;
+}
+
+export interface Plate extends Drawing {
+  axes: { depth: DepthAxis; energy: EnergyAxis; area: { left: number; right: number; top: number; bottom: number } };
+  dimensions: PlateDimension[];
+}
+
+export const PLATE_DEFAULTS = {
+  width: 960, height: 540, depth: 'even', shading: 'occupancy', style: 'light', vacuum: false, levels: true, frame: 'bare', prefix: 'plate',
+} as const satisfies Partial<PlateOptions>;
+
+/** Opacity of everything that belongs to an earlier input. */
+const STALE = 0.4;
+
+/**
+ * The band diagram of one result: bands, Fermi level, shading, dopant levels, metals, dimension lines, axes.
+ *
+ * @throws {RangeError} unknown style or depth mode; an empty window; less room than a plate needs
+ */
+export function drawPlate(result: Result, options: Partial<PlateOptions>): Plate {
+  const given = Object.fromEntries(Object.entries(options).filter(([, value]) => value !== undefined)) as Partial<PlateOptions>;
+  const o = { ...PLATE_DEFAULTS, ...given };
+  const style = styleOf(o.style);
+  const full = o.frame === 'full';
+  const frameOf = (captionLines: number): Frame => {
+    const asked: FrameOptions = { ...o, full, captionLines };
+    return plateFrame(result, style, asked);
+  };
+  let frame = frameOf(1);
+  let lines: string[] = [];
+  if (full) {
+    // The caption's length decides the height left for the plate; its words depend on widths alone.
+    lines = wrapped(captionSentences(frame, o.shading), frame.small, o.width - 2.4 * frame.text);
+    frame = frameOf(lines.length);
+  }
+  const spans = visibleSpans(result, frame.depth);
+  const shading = shadingOf(frame, spans, o.shading);
+  const { shapes: dimensionShapes, dimensions } = dimensionMarks(frame, spans, o.hidden ?? [], o.moved ?? {});
+  const inked: Shape[] = [
+    ...shading.shapes,
+    ...interfaces(frame),
+    ...metals(frame),
+    ...(o.levels ? dopantLevels(frame, spans) : []),
+    ...(o.vacuum ? vacuumLevel(frame, spans) : []),
+    ...fermiLevel(frame, spans),
+    ...bandEdges(frame, spans),
+    ...dimensionShapes,
+    ...endLabels(frame, o.vacuum),
+  ];
+  const { area } = frame;
+  return {
+    width: o.width, height: o.height, background: style.ground, font: style.font,
+    shapes: [
+      ...(o.stale ? inked.map((shape) => ({ ...shape, opacity: STALE * (shape.opacity ?? 1) })) : inked),
+      ...strip(frame), ...axes(frame), ...(full ? [...heading(frame), ...caption(frame, lines)] : []), ...(o.stale ? staleNotice(frame) : []),
+    ],
+    gradients: shading.gradients,
+    clips: [{ id: frame.areaClip, x: area.left, y: area.top, w: area.right - area.left, h: area.bottom - area.top }],
+    title: result.title === '' ? 'Band diagram' : `Band diagram: ${result.title}`,
+    description: describe(result),
+    axes: { depth: frame.depth, energy: frame.energy, area },
+    dimensions,
+  };
+}
+
+function shadingOf(frame: Frame, spans: LayerSpan[], kind: PlateOptions['shading']): { shapes: Shape[]; gradients: Gradient[] } {
+  switch (kind) {
+    case 'occupancy': return occupancyShading(frame, spans);
+    case 'carriers': return { shapes: carrierShading(frame, spans), gradients: [] };
+    case 'none': return { shapes: [], gradients: [] };
+    default: throw new RangeError(`unknown shading: ${String(kind)}`);
+  }
+}
+
+function dimensionMarks(frame: Frame, spans: LayerSpan[], hidden: string[], moved: Record<string, [number, number]>): { shapes: Shape[]; dimensions: PlateDimension[] } {
+  const { profile } = frame.result;
+  const all = dimensionsOf(frame);
+  const shown = all.filter((d) => !hidden.includes(d.id));
+  const obstacles: Obstacles = {
+    curves: spans.flatMap((span) => [profile.ec_eV, profile.ev_eV, profile.ef_eV].map((values) => traceOf(span, values, frame.energy.y))),
+    boxes: [],
+    uprights: frame.depth.edges,
+  };
+  const placed = placeDimensions(frame, shown, obstacles, moved);
+  const dimensions = all.map((d): PlateDimension => {
+    const at = placed[shown.indexOf(d)] ?? null;
+    const { box } = at ?? { box: null };
+    return {
+      id: d.id, label: d.label, value: d.value, meaning: d.meaning, x: box ? box.x + box.w / 2 : d.places[0], y: box ? box.y + box.h / 2 : frame.energy.y((d.low + d.high) / 2), box,
+      hidden: hidden.includes(d.id), crowded: !hidden.includes(d.id) && at === null,
+    };
+  });
+  return { shapes: placed.flatMap((at) => (at ? dimensionLine(frame, at) : [])), dimensions };
+}
