@@ -3,6 +3,8 @@ export { solveStack } from './solve-stack.ts';
 export { layerFigures } from './layer.ts';
 export { isRefusal } from './solution.ts';
 export { isAlloy } from './stack.ts';
+export { bandsAt } from './layer-bands.ts';
+export { profileAt } from './profile.ts';
 export { fermiHalf, fermiMinusHalf, fermiThreeHalves, inverseFermiHalf } from './fermi-integral.ts';
 export type * from './stack.ts';
 export type * from './solution.ts';

@@ -9,7 +9,7 @@ import type { Layer, Profile } from './stack.ts';
  *
  * With u = z/thickness: "linear" from + (to - from) u; "gaussian" from (to/from)^(u^2); "erfc" from erfc(u erfc^-1(to/from)), the last two
  * with the peak at the end of the larger value. "implant": peak exp[-(z - depth)^2/(2 straggle^2)] + background. "points": straight
- * between them, the nearest value beyond them.
+ * between them (in the logarithm on a "log" scale, where both values are positive), the nearest value beyond them.
  */
 export function profileAt(profile: Profile, z: number, thickness: number): number {
   switch (profile.kind) {
@@ -28,7 +28,7 @@ export function profileAt(profile: Profile, z: number, thickness: number): numbe
       return profile.peak * Math.exp(-0.5 * u * u) + profile.background;
     }
     case 'points':
-      return between(profile.z, profile.value, z);
+      return between(profile.z, profile.value, z, profile.scale === 'log');
   }
 }
 
@@ -43,7 +43,7 @@ function falling(kind: 'gaussian' | 'erfc', from: number, to: number, u: number)
   return kind === 'gaussian' ? from * Math.pow(ratio, v * v) : from * erfc(v * inverseErfc(ratio));
 }
 
-function between(zs: readonly number[], values: readonly number[], z: number): number {
+function between(zs: readonly number[], values: readonly number[], z: number, logarithmic: boolean): number {
   const last = zs.length - 1;
   if (last < 0) throw new RangeError('a profile of points needs at least one');
   if (!(z > zs[0])) return values[0];
@@ -55,7 +55,9 @@ function between(zs: readonly number[], values: readonly number[], z: number): n
     if (zs[middle] <= z) low = middle;
     else high = middle;
   }
-  return values[low] + ((values[high] - values[low]) * (z - zs[low])) / (zs[high] - zs[low]);
+  const u = (z - zs[low]) / (zs[high] - zs[low]);
+  if (logarithmic && values[low] > 0 && values[high] > 0) return values[low] * Math.pow(values[high] / values[low], u);
+  return values[low] + (values[high] - values[low]) * u;
 }
 
 /** Whether nothing in the layer moves with depth. */

@@ -40,7 +40,7 @@ export interface AssumptionsInput {
 
 export type ContactInput =
   | { kind: 'neutral' }
-  | { kind: 'barrier'; metal?: string; barrier?: Text; carrier?: 'n' | 'p'; pinning?: 'material' | 'none' | 'full' | Pure; imageForce?: boolean }
+  | { kind: 'barrier'; metal?: string; barrier?: Text; carrier?: 'n' | 'p'; /** "material", "none", "full" or S */ pinning?: Pure; imageForce?: boolean }
   | { kind: 'pinned'; level: Text }
   | { kind: 'open'; sheetCharge?: Text };
 
@@ -88,31 +88,55 @@ export interface CrystalInput {
 
 export type GapInput =
   | Text
-  | { zeroK: Text; alpha: Text; beta: Text };
+  | { law?: 'varshni'; zeroK: Text; alpha: Text; beta: Text }
+  | { law: 'linear'; at300K: Text; slope: Text }
+  | { law: 'odonnell-chen'; zeroK: Text; coupling: Pure; phonon: Text };
 
 export type MobilityInput = Text | { min: Text; max: Text; reference: Text; exponent: Pure };
+export type MassInput = Pure | Pure[];
+export type NarrowingInput =
+  | { law: 'slotboom'; energy: Text; reference: Text; constant: Pure; conductionShare: Pure }
+  | { law: 'jain-roulston'; donor: NarrowingTerms; acceptor: NarrowingTerms; conductionShare: Pure };
+/** factors of (N/1e18 cm^-3) to the powers 1/3, 1/4, 1/2 */
+export interface NarrowingTerms {
+  third: Text;
+  quarter: Text;
+  half: Text;
+}
 
+export interface AlloyInput {
+  /** x = 0 */ first: string;
+  /** x = 1 */ second: string;
+  bowing?: { gap?: Text | Text[]; affinity?: Text; permittivity?: Pure; electronMass?: Pure; holeMass?: Pure; naturalValence?: Text };
+  valleyBowing?: Record<string, Text>;
+}
+
+/** Presets and custom entries alike. */
 export interface MaterialInput {
   id: string;
   name?: string;
   insulator?: boolean;
-  alloy?: { first: string; second: string; bowing?: Record<string, Text | Pure> };
+  alloy?: AlloyInput;
   gap?: GapInput;
+  otherValleys?: { name: string; gap: GapInput; electronMass: MassInput }[];
   affinity?: Text;
   affinityShare?: Pure;
   permittivity?: Pure;
   permittivityHighFrequency?: Pure;
-  electronMass?: Pure | Pure[];
-  holeMass?: Pure | Pure[];
+  electronMass?: MassInput;
+  holeMass?: MassInput;
   nonParabolicity?: { electron?: Text; hole?: Text };
   tunnellingMass?: { electron?: Pure; hole?: Pure };
   richardson?: { electron?: Text; hole?: Text };
   mobility?: { electron?: MobilityInput; hole?: MobilityInput };
-  narrowing?: { law: 'slotboom'; energy: Text; reference: Text; constant: Pure; conductionShare: Pure };
+  narrowing?: NarrowingInput;
   neutralityLevel?: Text;
   pinningSlope?: Pure;
   polarisation?: { spontaneous: Text; e31?: Text; e33?: Text; c13?: Text; c33?: Text; lattice?: Text };
+  naturalValence?: { scale: string; edge: Text };
+  /** where the laws were measured */ validity?: { temperature?: [Text, Text]; doping?: [Text, Text] };
   source: unknown;
+  sources?: Record<string, unknown>;
 }
 
 export interface DopantInput {
@@ -120,19 +144,25 @@ export interface DopantInput {
   name?: string;
   host: string;
   kind: 'donor' | 'acceptor';
-  depth: Text;
+  /** in an alloy against x: straight between the points, the nearest value beyond them */ depth: Text | { points: [Pure, Text][] };
   degeneracy?: Pure;
   merging?: { depthReference: Text; depthExponent: Pure; boundReference: Text; boundExponent: Pure };
   screened?: { coefficient: Text; mottDensity: Text; boundExponent?: Pure };
+  mottDensity?: Text;
+  solubility?: Text;
+  centre?: string;
   source: unknown;
+  sources?: Record<string, unknown>;
 }
 
 export interface MetalInput {
   id: string;
   name?: string;
+  kind?: string;
   workFunction?: Text;
-  barriers?: { material: string; carrier: 'n' | 'p'; height: Text; source: unknown }[];
+  barriers?: { material: string; carrier: 'n' | 'p'; height: Text; source: unknown; checked?: string; confidence?: string; note?: string }[];
   source: unknown;
+  sources?: Record<string, unknown>;
 }
 
 export interface Custom {

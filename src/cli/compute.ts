@@ -1,0 +1,19 @@
+import { parseArguments } from './arguments.ts';
+import { EXIT, type Command } from './command.ts';
+import { readDesignFile } from './design-file.ts';
+import { solved } from './solved.ts';
+
+const usage = 'compute FILE [--set NAME=VALUE ...]';
+
+/** Solves a design and prints the result as JSON. */
+export const compute: Command = {
+  usage,
+  summary: 'solve the stack, print the result as JSON',
+  async run(args, streams) {
+    const { file, set } = parseArguments(args, usage);
+    const result = solved(await readDesignFile(file, streams), set, streams);
+    if (result === null) return EXIT.noAnswer;
+    streams.out(`${JSON.stringify(result, null, 1)}\n`);
+    return EXIT.done;
+  },
+};

@@ -1,0 +1,7 @@
+/** The library's public names: read a design, solve it, draw it, write it. */
+export { readDesign, checkDesign, type DesignReading } from './design/read.ts';
+export { writeDesign } from './design/write.ts';
+export { complaintLine, type Complaint } from './design/complaint.ts';
+export { solveDesign, type SolveDesignOptions, type SolvedAnswer } from './result/solve-design.ts';
+export type { Design } from './design/types.ts';
+export type { Answer, Result } from './result/types.ts';
