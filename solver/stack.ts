@@ -127,7 +127,7 @@ export type Profile =
   | { kind: 'constant'; value: number }
   | { kind: 'linear' | 'gaussian' | 'erfc'; from: number; to: number }
   | { kind: 'implant'; peak: number; depth: number; straggle: number; background: number }
-  | { kind: 'points'; z: readonly number[]; value: readonly number[] };
+  | { kind: 'points'; z: readonly number[]; value: readonly number[]; /** between the points straight, or straight in the logarithm where both values are positive; "linear" by default */ scale?: 'linear' | 'log' };
 
 export type IonisationModel = 'dilute' | 'merging' | 'screened' | 'complete';
 
