@@ -15,8 +15,11 @@ export function profileAt(profile: Profile, z: number, thickness: number): numbe
   switch (profile.kind) {
     case 'constant':
       return profile.value;
-    case 'linear':
-      return profile.from + (profile.to - profile.from) * (z / thickness);
+    case 'linear': {
+      // Rounding may put the end of a layer a hair outside; a composition must not leave its range there.
+      const u = Math.min(1, Math.max(0, z / thickness));
+      return profile.from * (1 - u) + profile.to * u;
+    }
     case 'gaussian':
     case 'erfc': {
       const { from, to, kind } = profile;

@@ -46,3 +46,24 @@ describe('erfc', () => {
     for (const y of [0.999, 0.5, 0.1, 1e-3, 1e-8, 1e-30]) expect(Math.abs(erfc(inverseErfc(y)) / y - 1), `${y}`).toBeLessThan(1e-11);
   });
 });
+
+describe('the ends of a profile', () => {
+  it('are met exactly, whatever the rounding of the depth', () => {
+    const grade = { kind: 'linear', from: 0.95, to: 0 } as const;
+    for (const thickness of [5e-6, 1e-7, 3.3e-6, 0.05]) {
+      expect(profileAt(grade, thickness, thickness)).toBe(0);
+      expect(profileAt(grade, 0, thickness)).toBe(0.95);
+      expect(profileAt(grade, thickness * (1 + 1e-15), thickness)).toBe(0);
+    }
+  });
+});
+
+describe('points on a logarithmic scale', () => {
+  const measured = { kind: 'points', z: [0, 1e-5, 2e-5], value: [1e20, 1e16, 0], scale: 'log' } as const;
+  it('go straight in the logarithm between positive values', () => {
+    expect(profileAt(measured, 5e-6, 1)).toBeCloseTo(1e18, -6);
+  });
+  it('go straight to a value of zero, which has no logarithm', () => {
+    expect(profileAt(measured, 1.5e-5, 1)).toBeCloseTo(5e15, -3);
+  });
+});
