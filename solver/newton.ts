@@ -34,7 +34,7 @@ export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
   while (updates < MOST_UPDATES) {
     if (!system.factor()) return { converged: false, updates, lastUpdate, reason: 'singular matrix' };
     for (let i = 0; i < n; i++) step[i] = -system.residual[i];
-    system.factors.solve(step);
+    system.solve(step);
     const size = largest(step);
     updates++;
     if (!Number.isFinite(size)) return { converged: false, updates, lastUpdate: size, reason: 'not finite' };
@@ -76,7 +76,7 @@ function monotoneStep(system: PoissonSystem, psi: Float64Array, step: Float64Arr
     for (let i = 0; i < n; i++) trial[i] = psi[i] + lambda * step[i];
     system.evaluate(trial, true);
     for (let i = 0; i < n; i++) next[i] = -system.residual[i];
-    system.factors.solve(next);
+    system.solve(next);
     const nextNorm = Math.sqrt(dot(next, next));
     if (nextNorm <= (1 - lambda / 4) * stepNorm) return lambda;
     let difference = 0;

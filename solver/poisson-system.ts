@@ -1,6 +1,7 @@
 import { chargeAt, type ChargeValues, type LocalCharge } from './charge.ts';
 import { ELEMENTARY_CHARGE } from './constants.ts';
 import type { Mesh } from './mesh.ts';
+import { compactDefects, compactEnd, compactRow } from './poisson-weights.ts';
 import { TridiagonalFactors } from './tridiagonal.ts';
 
 /** One layer as Poisson's equation sees it. Functions take the depth from the top of the layer, cm. */
@@ -24,46 +25,71 @@ export interface PoissonProblem {
 }
 
 /**
- * The box scheme (finite volumes) of Poisson's equation on one mesh: at every node
- *   flux below - flux above + q (charge of the node's box + sheet) = 0,   flux = eps dpsi/dz between nodes.
- * It closes Gauss's law box by box, and its Jacobian is an M-matrix whatever the mesh, since the charge falls with psi
- * (Selberherr, Analysis and Simulation of Semiconductor Devices, 1984, section 6.1).
+ * A compact row keeps the sign of its neighbours' entries while h^2 |drho/dpsi|/eps < 12. Inside a layer the loss is harmless: such cells lie in neutral
+ * layers, where the matrix stays diagonally dominant and a disturbance dies by a factor of ten a cell, or they will be refined. But the far entry
+ * of a layer's end is eliminated with the row beside it, so the two rows at each end give way to box rows beyond this limit.
+ */
+const END_LIMIT = 6;
+
+/**
+ * Poisson's equation on one mesh, box or compact (poisson-weights.ts): at every node
+ *   flux below - flux above + q (weighted charge + sheet) = 0,   flux = eps dpsi/dz between nodes.
+ * The Jacobian is tridiagonal. With the box scheme it is an M-matrix whatever the mesh, since the charge falls with psi (Selberherr, Analysis and
+ * Simulation of Semiconductor Devices, 1984, section 6.1). The compact rows of a layer's ends reach one node farther: that entry is
+ * eliminated with the neighbouring row before the matrix is factored, and right-hand sides are treated alike in `solve`.
  */
 export class PoissonSystem {
   readonly mesh: Mesh;
+  readonly scheme: 'compact' | 'box';
   /** eps/h of every cell, F/cm^2 [nodes - 1] */
   readonly conductance: Float64Array;
   /** residual, C/cm^2 [nodes] */
   readonly residual: Float64Array;
   /** q times the net charge by side, C/cm^3 [nodes + layers - 1] */
   readonly density: Float64Array;
+  /** its derivative by psi, <= 0 */
+  readonly slope: Float64Array;
   readonly ecFlat: Float64Array;
   readonly gap: Float64Array;
   readonly permittivity: Float64Array;
   readonly charges: LocalCharge[];
+  /** three weights of each side's row, cm, for the three nodes around it within the layer [3 sides] */
+  readonly weights: Float64Array;
+  /** rows of sides that are of the box scheme [sides] */
+  readonly lumped: Uint8Array;
   private readonly lower: Float64Array;
   private readonly diagonal: Float64Array;
   private readonly upper: Float64Array;
-  readonly factors: TridiagonalFactors;
+  /** how much of the neighbouring row is taken off the row of a layer's first and last node [layers] */
+  private readonly takenFirst: Float64Array;
+  private readonly takenLast: Float64Array;
+  private readonly factors: TridiagonalFactors;
   private readonly problem: PoissonProblem;
   private readonly out: ChargeValues = { n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 };
 
-  constructor(problem: PoissonProblem, mesh: Mesh) {
+  constructor(problem: PoissonProblem, mesh: Mesh, scheme: 'compact' | 'box' = 'box') {
     this.problem = problem;
     this.mesh = mesh;
+    this.scheme = scheme;
     const n = mesh.nodes;
-    const sides = n + mesh.local.length - 1;
+    const layers = mesh.local.length;
+    const sides = n + layers - 1;
     this.conductance = new Float64Array(n - 1);
     this.residual = new Float64Array(n);
     this.lower = new Float64Array(n);
     this.diagonal = new Float64Array(n);
     this.upper = new Float64Array(n);
+    this.takenFirst = new Float64Array(layers);
+    this.takenLast = new Float64Array(layers);
     this.factors = new TridiagonalFactors(n);
     this.density = new Float64Array(sides);
+    this.slope = new Float64Array(sides);
     this.ecFlat = new Float64Array(sides);
     this.gap = new Float64Array(sides);
     this.permittivity = new Float64Array(sides);
     this.charges = new Array<LocalCharge>(sides);
+    this.weights = new Float64Array(3 * sides);
+    this.lumped = new Uint8Array(sides);
     mesh.local.forEach((z, l) => {
       const layer = problem.layers[l];
       const first = mesh.first[l];
@@ -83,6 +109,7 @@ export class PoissonSystem {
         this.ecFlat[s] = ecFlat;
         this.gap[s] = gap;
         this.permittivity[s] = eps;
+        this.weigh(z, k, s, scheme === 'box');
         if (k > 0) {
           const middle = layer.uniform ? eps : layer.permittivity(0.5 * (z[k - 1] + z[k]));
           this.conductance[first + k - 1] = middle / (z[k] - z[k - 1]);
@@ -91,39 +118,113 @@ export class PoissonSystem {
     });
   }
 
+  /** Sets the weights of node k of a layer. */
+  private weigh(z: Float64Array, k: number, s: number, box: boolean): void {
+    const w = this.weights;
+    const m = z.length - 1;
+    this.lumped[s] = box ? 1 : 0;
+    if (box) {
+      w[3 * s] = w[3 * s + 1] = w[3 * s + 2] = 0;
+      const own = 0.5 * ((k > 0 ? z[k] - z[k - 1] : 0) + (k < m ? z[k + 1] - z[k] : 0));
+      w[3 * s + (k === 0 ? 0 : k === m ? 2 : 1)] = own;
+    } else if (k === 0) compactEnd(z[1] - z[0], z[2] - z[1], true, w, 3 * s);
+    else if (k === m) compactEnd(z[m] - z[m - 1], z[m - 1] - z[m - 2], false, w, 3 * s);
+    else compactRow(z[k] - z[k - 1], z[k + 1] - z[k], w, 3 * s);
+  }
+
+  /**
+   * Chooses box rows where the compact ones would lose their signs at `psi` [nodes], V. Leaves residual and matrix of `psi`.
+   *
+   * @returns number of rows whose kind changed
+   */
+  chooseRows(psi: Float64Array): number {
+    if (this.scheme === 'box') {
+      this.evaluate(psi, true);
+      return 0;
+    }
+    this.charge(psi);
+    let changed = 0;
+    const { mesh, slope, permittivity, lumped } = this;
+    for (let l = 0; l < mesh.local.length; l++) {
+      const z = mesh.local[l];
+      const m = z.length - 1;
+      const s0 = mesh.first[l] + l;
+      for (const [end, from] of [[0, 0], [m, m - 2]]) {
+        const s = s0 + from;
+        const h = Math.max(z[from + 1] - z[from], z[from + 2] - z[from + 1]);
+        const box = h * h * Math.max(-slope[s], -slope[s + 1], -slope[s + 2]) > END_LIMIT * permittivity[s];
+        if (box === (lumped[s0 + end] === 1)) continue;
+        this.weigh(z, end, s0 + end, box);
+        this.weigh(z, from + 1, s + 1, box);
+        changed++;
+      }
+    }
+    this.assemble(psi, true);
+    return changed;
+  }
+
   /** Residual at `psi` [nodes], V; with `jacobian` also the matrix d residual/d psi. */
   evaluate(psi: Float64Array, jacobian: boolean): void {
-    const { mesh, problem, residual, diagonal, lower, upper, conductance, density, ecFlat, charges, out } = this;
+    this.charge(psi);
+    this.assemble(psi, jacobian);
+  }
+
+  private charge(psi: Float64Array): void {
+    const { mesh, density, slope, ecFlat, charges, out } = this;
     const q = ELEMENTARY_CHARGE;
-    residual.fill(0);
-    if (jacobian) diagonal.fill(0);
+    for (let l = 0; l < mesh.local.length; l++) {
+      const from = mesh.first[l] + l;
+      const to = from + mesh.local[l].length;
+      if (charges[from].bands.insulator) continue;
+      for (let s = from; s < to; s++) {
+        chargeAt(charges[s], ecFlat[s] - psi[s - l], out);
+        density[s] = q * out.net;
+        slope[s] = -q * out.slope;
+      }
+    }
+  }
+
+  private assemble(psi: Float64Array, jacobian: boolean): void {
+    const { mesh, problem, residual, diagonal, lower, upper, conductance, density, slope, weights, takenFirst, takenLast } = this;
     const layers = mesh.local.length;
     for (let l = 0; l < layers; l++) {
-      const z = mesh.local[l];
-      const first = mesh.first[l];
-      for (let k = 0; k < z.length; k++) {
-        const i = first + k;
-        const s = i + l;
-        chargeAt(charges[s], ecFlat[s] - psi[i], out);
-        const rho = q * out.net;
-        density[s] = rho;
-        const box = 0.5 * ((k > 0 ? z[k] - z[k - 1] : 0) + (k + 1 < z.length ? z[k + 1] - z[k] : 0));
-        residual[i] += rho * box;
-        if (jacobian) diagonal[i] -= q * out.slope * box;
-        if (k + 1 < z.length) {
-          const a = conductance[i];
-          const flux = a * (psi[i + 1] - psi[i]);
-          residual[i] += flux;
-          residual[i + 1] -= flux;
-          if (jacobian) {
-            diagonal[i] -= a;
-            diagonal[i + 1] -= a;
-            upper[i] = a;
-            lower[i + 1] = a;
-          }
+      const m = mesh.local[l].length - 1;
+      const i0 = mesh.first[l];
+      const s0 = i0 + l;
+      const last = i0 + m;
+      // The two ends' half rows: the upper layer's last and this one's first add up on the interface.
+      const w = 3 * s0;
+      const v = 3 * (s0 + m);
+      const top = conductance[i0] * (psi[i0 + 1] - psi[i0]) + weights[w] * density[s0] + weights[w + 1] * density[s0 + 1] + weights[w + 2] * density[s0 + 2];
+      residual[i0] = l === 0 ? top : residual[i0] + top + ELEMENTARY_CHARGE * problem.sheets[l - 1];
+      residual[last] =
+        -conductance[last - 1] * (psi[last] - psi[last - 1]) + weights[v] * density[s0 + m - 2] + weights[v + 1] * density[s0 + m - 1] + weights[v + 2] * density[s0 + m];
+      for (let k = 1; k < m; k++) {
+        const i = i0 + k;
+        const s = s0 + k;
+        const above = conductance[i - 1];
+        const below = conductance[i];
+        const w0 = weights[3 * s];
+        const w1 = weights[3 * s + 1];
+        const w2 = weights[3 * s + 2];
+        residual[i] = below * (psi[i + 1] - psi[i]) - above * (psi[i] - psi[i - 1]) + w0 * density[s - 1] + w1 * density[s] + w2 * density[s + 1];
+        if (jacobian) {
+          lower[i] = above + w0 * slope[s - 1];
+          diagonal[i] = -above - below + w1 * slope[s];
+          upper[i] = below + w2 * slope[s + 1];
         }
       }
-      if (l > 0) residual[first] += q * problem.sheets[l - 1];
+      if (!jacobian) continue;
+      // Far entries are eliminated with the neighbouring rows, which are inner ones.
+      const down = (weights[w + 2] * slope[s0 + 2]) / upper[i0 + 1];
+      const up = (weights[v] * slope[s0 + m - 2]) / lower[last - 1];
+      takenFirst[l] = down;
+      takenLast[l] = up;
+      const own = -conductance[i0] + weights[w] * slope[s0] - down * lower[i0 + 1];
+      diagonal[i0] = l === 0 ? own : diagonal[i0] + own;
+      upper[i0] = conductance[i0] + weights[w + 1] * slope[s0 + 1] - down * diagonal[i0 + 1];
+      diagonal[last] = -conductance[last - 1] + weights[v + 2] * slope[s0 + m] - up * upper[last - 1];
+      lower[last] = conductance[last - 1] + weights[v + 1] * slope[s0 + m - 1] - up * diagonal[last - 1];
     }
     this.end(problem.top, 0, psi, jacobian);
     this.end(problem.bottom, mesh.nodes - 1, psi, jacobian);
@@ -139,8 +240,8 @@ export class PoissonSystem {
     this.residual[i] = -scale * (psi[i] - end.psi);
     if (jacobian) {
       this.diagonal[i] = -scale;
-      if (i === 0) this.upper[0] = 0;
-      else this.lower[i] = 0;
+      if (i === 0) this.upper[0] = this.takenFirst[0] = 0;
+      else this.lower[i] = this.takenLast[this.takenLast.length - 1] = 0;
     }
   }
 
@@ -148,4 +249,68 @@ export class PoissonSystem {
   factor(): boolean {
     return this.factors.factor(this.lower, this.diagonal, this.upper);
   }
+
+  /** Solves Jacobian x = rhs with the last factors, in place [nodes]. */
+  solve(rhs: Float64Array): void {
+    const { mesh, takenFirst, takenLast } = this;
+    for (let l = 0; l < mesh.local.length; l++) {
+      const first = mesh.first[l];
+      const last = first + mesh.local[l].length - 1;
+      rhs[first] -= takenFirst[l] * rhs[first + 1];
+      rhs[last] -= takenLast[l] * rhs[last - 1];
+    }
+    this.factors.solve(rhs);
+  }
+
+  /**
+   * Charge that each row misses, C/cm^2 [nodes], at the last evaluated `psi`, from fourth differences of the charge (poisson-weights.ts); box rows count
+   * what they leave out of the parabola too. Layers need at least five nodes. Ends of given potential miss nothing.
+   *
+   * An inversion charge rises towards an interface as exp(-psi/kT). Differences taken from its foot see (1 - exp(-x))^4 of its fourth derivative in place of
+   * x^4, x = step of psi/kT over a cell: at the ends, where differences are one-sided, this is put right.
+   */
+  defects(psi: Float64Array): Float64Array {
+    const { mesh, problem, density, weights, lumped } = this;
+    const out = new Float64Array(mesh.nodes);
+    const compact = new Float64Array(3);
+    mesh.local.forEach((z, l) => {
+      const first = mesh.first[l];
+      const s0 = first + l;
+      const m = z.length - 1;
+      if (this.charges[s0].bands.insulator) return;
+      const own = new Float64Array(m + 1);
+      compactDefects(z, density.subarray(s0, s0 + m + 1), own);
+      const { kT } = this.charges[s0].bands;
+      const top = steepening((psi[first + 1] - psi[first]) / kT);
+      const bottom = steepening((psi[first + m] - psi[first + m - 1]) / kT);
+      own[0] *= top;
+      own[1] *= top;
+      own[m - 1] *= bottom;
+      own[m] *= bottom;
+      for (let k = 0; k <= m; k++) {
+        if (lumped[s0 + k]) {
+          if (k === 0) compactEnd(z[1] - z[0], z[2] - z[1], true, compact, 0);
+          else if (k === m) compactEnd(z[m] - z[m - 1], z[m - 1] - z[m - 2], false, compact, 0);
+          else compactRow(z[k] - z[k - 1], z[k + 1] - z[k], compact, 0);
+          const from = s0 + Math.min(Math.max(k - 1, 0), m - 2);
+          for (let j = 0; j < 3; j++) own[k] += (compact[j] - weights[3 * (s0 + k) + j]) * density[from + j];
+        }
+        out[first + k] += own[k];
+      }
+    });
+    if (problem.top.kind === 'potential') out[0] = 0;
+    if (problem.bottom.kind === 'potential') out[mesh.nodes - 1] = 0;
+    return out;
+  }
+
+  /** Diagonal of the inverse Jacobian: how far a charge put on a node moves that node, V cm^2/C [nodes], positive. */
+  response(): Float64Array {
+    return this.factors.inverseDiagonal().map(Math.abs);
+  }
+}
+
+/** [x/(1 - exp(-x))]^4 for x = |step|. */
+function steepening(step: number): number {
+  const x = Math.abs(step);
+  return x < 1e-3 ? 1 : (x / -Math.expm1(-x)) ** 4;
 }

@@ -44,4 +44,16 @@ export class TridiagonalFactors {
     rhs[size - 1] *= pivotInverse[size - 1];
     for (let i = size - 2; i >= 0; i--) rhs[i] = (rhs[i] - upper[i] * rhs[i + 1]) * pivotInverse[i];
   }
+
+  /**
+   * Diagonal of the inverse [n], of the matrix factored last. From the last row upwards
+   * inverse(i, i) = 1/pivot(i) + upper(i) multiplier(i + 1) inverse(i + 1, i + 1)/pivot(i).
+   */
+  inverseDiagonal(): Float64Array {
+    const { size, pivotInverse, multiplier, upper } = this;
+    const out = new Float64Array(size);
+    out[size - 1] = pivotInverse[size - 1];
+    for (let i = size - 2; i >= 0; i--) out[i] = pivotInverse[i] * (1 + upper[i] * multiplier[i + 1] * out[i + 1]);
+    return out;
+  }
 }

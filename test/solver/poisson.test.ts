@@ -1,9 +1,10 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { chargeAt, localCharge, type ChargeValues } from '../../solver/charge.ts';
 import { ELEMENTARY_CHARGE, EPSILON_0 } from '../../solver/constants.ts';
 import { neutralLevel } from '../../solver/fermi-level.ts';
 import { fermiThreeHalves } from '../../solver/fermi-integral.ts';
-import { halved, meshOf } from '../../solver/mesh.ts';
+import { halved, interpolated, meshOf, type Mesh } from '../../solver/mesh.ts';
 import { newton } from '../../solver/newton.ts';
 import { solvePoisson, type PoissonEnd, type PoissonProblem } from '../../solver/poisson.ts';
 import { PoissonSystem } from '../../solver/poisson-system.ts';
@@ -76,7 +77,7 @@ describe('Poisson over one homogeneous layer', () => {
     expect(Math.abs(s.profiles.field[0] / expected - 1)).toBeLessThan(1e-3);
   });
 
-  it('falls to a quarter of its mesh error when every cell is halved', () => {
+  it('with the box scheme falls to a quarter of its mesh error when every cell is halved', () => {
     const p = problem([{ thickness: 1e-4, dopants: [completeDonor(1e16)] }], 300, (psi) => ({ kind: 'potential', psi: psi - 0.3 }));
     let mesh = meshOf([Float64Array.from({ length: 101 }, (_, k) => (k * 1e-4) / 100)]);
     const middle: number[] = [];
@@ -93,6 +94,93 @@ describe('Poisson over one homogeneous layer', () => {
     expect(ratio).toBeGreaterThan(3.7);
     expect(ratio).toBeLessThan(4.3);
   });
+});
+
+describe('the compact scheme', () => {
+  /** A p-n step with a sheet charge on it; both rows of the interface, and an open end, take part. */
+  const step = (bottom?: PoissonEnd): PoissonProblem => {
+    const p = problem([{ thickness: 1e-5, dopants: [{ ...completeDonor(1e17), kind: 'acceptor' }] }, { thickness: 2e-5, dopants: [completeDonor(4e16)] }], 300, (psi) => ({ kind: 'potential', psi }), [3e11]);
+    return bottom ? { ...p, bottom } : p;
+  };
+  /** Unevenly spaced, finer towards both ends of each layer. */
+  const meshFor = (p: PoissonProblem, cells: number) =>
+    meshOf(p.layers.map((l) => Float64Array.from({ length: cells + 1 }, (_, k) => (l.thickness * (1 - Math.cos((Math.PI * k) / cells))) / 2)));
+
+  for (const [label, bottom] of [['between contacts', undefined], ['with an open end', { kind: 'sheet', charge: 2e11 }]] as const) {
+    it(`falls to a sixteenth of its mesh error when every cell is halved, ${label}`, () => {
+      const p = step(bottom);
+      let mesh = meshFor(p, 80);
+      const at: number[][] = [];
+      let psi: Float64Array = new Float64Array(mesh.nodes).fill(p.top.kind === 'potential' ? p.top.psi : 0);
+      if (p.bottom.kind === 'potential') psi[mesh.nodes - 1] = p.bottom.psi;
+      for (let level = 0; level < 4; level++) {
+        const system = new PoissonSystem(p, mesh, 'compact');
+        system.chooseRows(psi);
+        newton(system, psi);
+        // Rows that were box rows at the poor first guess become compact ones at the solution.
+        system.chooseRows(psi);
+        expect(newton(system, psi).converged).toBe(true);
+        expect(system.lumped.some((v) => v === 1)).toBe(false);
+        at.push([psi[mesh.first[1]], psi[mesh.first[1] - 20 * 2 ** level], psi[mesh.nodes - 1 - 20 * 2 ** level]]);
+        const finer = halved(mesh);
+        psi = interpolated(mesh, psi, finer);
+        mesh = finer;
+      }
+      for (let i = 0; i < 3; i++) {
+        const ratio = (at[1][i] - at[2][i]) / (at[2][i] - at[3][i]);
+        expect(ratio, `place ${i}`).toBeGreaterThan(14);
+        expect(ratio, `place ${i}`).toBeLessThan(18);
+      }
+    });
+  }
+
+  it('estimates its own error by what its rows miss', () => {
+    const p = step();
+    for (const cells of [20, 40, 80]) {
+      const solvedOn = (mesh: Mesh): { psi: Float64Array; estimate: Float64Array } => {
+        const psi = new Float64Array(mesh.nodes).fill(p.top.kind === 'potential' ? p.top.psi : 0);
+        if (p.bottom.kind === 'potential') psi[mesh.nodes - 1] = p.bottom.psi;
+        const system = new PoissonSystem(p, mesh, 'compact');
+        expect(newton(system, psi).converged).toBe(true);
+        system.evaluate(psi, true);
+        expect(system.factor()).toBe(true);
+        const estimate = system.defects(psi);
+        system.solve(estimate);
+        return { psi, estimate };
+      };
+      const mesh = meshFor(p, cells);
+      const coarse = solvedOn(mesh);
+      const fine = solvedOn(halved(halved(mesh)));
+      const at = mesh.first[1];
+      const error = fine.psi[4 * at] - coarse.psi[at];
+      expect(Math.abs(coarse.estimate[at] / error)).toBeGreaterThan(0.5);
+      expect(Math.abs(coarse.estimate[at] / error)).toBeLessThan(3);
+    }
+  });
+
+  it('agrees with the box scheme within both estimates on random stacks', () => {
+    const unit = fc.double({ min: 0, max: 1, noNaN: true });
+    const rows = fc.array(fc.record({ t: unit, n: unit, donor: fc.boolean(), bound: fc.boolean() }), { minLength: 1, maxLength: 6 });
+    fc.assert(
+      fc.property(rows, unit, unit, unit, (list, t, bend, sheet) => {
+        const p = problem(
+          list.map((r) => ({ thickness: 2e-7 * 1e3 ** r.t, dopants: [{ ...completeDonor(1e14 * 1e6 ** r.n), kind: r.donor ? 'donor' : 'acceptor', model: r.bound ? 'dilute' : 'complete' } as Dopant] })),
+          10 * 60 ** t, (psi) => ({ kind: 'potential', psi: psi + (bend - 0.5) }), list.slice(1).map(() => (sheet - 0.5) * 2e12),
+        );
+        const compact = solved(p, 1e-5);
+        expect(compact.quality.method).toBe('compact');
+        // Layers that are said to be graded go the other way.
+        const box = solved({ ...p, layers: p.layers.map((l) => ({ ...l, uniform: false })) }, 1e-5);
+        expect(box.quality.method).toBe('box');
+        list.forEach((_, l) => {
+          const [i, k] = [compact.profiles.layer.indexOf(l), box.profiles.layer.indexOf(l)];
+          // Newton's last digits, V, beside the two estimates.
+          expect(Math.abs(compact.profiles.psi[i] - box.profiles.psi[k]), `layer ${l}`).toBeLessThan(compact.quality.meshError + box.quality.meshError + 1e-12);
+        });
+      }),
+      { numRuns: 60, seed: 20261202 },
+    );
+  }, 60000);
 });
 
 describe('Poisson over a stack', () => {

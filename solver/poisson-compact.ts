@@ -1,0 +1,118 @@
+import { halved, type Mesh } from './mesh.ts';
+import { newton, type NewtonResult } from './newton.ts';
+import { gaussError } from './poisson-balance.ts';
+import { setEnds } from './poisson-guess.ts';
+import { profilesOf } from './poisson-profiles.ts';
+import { bent, equidistributed, rowErrors } from './poisson-remesh.ts';
+import { PoissonSystem, type PoissonProblem } from './poisson-system.ts';
+import type { PoissonGoal, PoissonSolution, PoissonStart } from './poisson.ts';
+import { refusalReason } from './quality.ts';
+import type { Quality } from './solution.ts';
+
+/** Halving a mesh cuts the compact scheme's error to a sixteenth. */
+const CONTRACTION = 1 / 16;
+/** One estimate can be optimistic, so it is quoted four times as large, and a second one of another kind has its say. */
+const SAFETY = 4;
+/** Two estimates of the coarse error that differ by more than this do not agree. */
+const AGREEMENT = 1.5;
+const SAFETY_OF_SECOND = 2;
+const MOST_ROUNDS = 10;
+/** A coarse mesh of this error leaves the halved one well within the accuracy. */
+const COARSE_SHARE = 2;
+/** Share of the goal that a single row may miss, at first. */
+const ROW_SHARE = 1 / 6;
+
+interface Solved {
+  system: PoissonSystem;
+  run: NewtonResult;
+  /** V [nodes] */ errors: Float64Array;
+  /** largest error of psi by the linear response to what the rows miss, V */ estimate: number;
+}
+
+/**
+ * The compact scheme: a coarse box solution shows where the charge bends; meshes of even row errors follow until the estimate is small enough; then
+ * every cell is halved, and the difference gives the estimate that the answer quotes.
+ *
+ * @param start  mesh and potential to begin with; the potential is changed in place
+ * @returns no solution where Newton's iteration or the meshes do not settle: the box scheme's turn
+ */
+export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goal: PoissonGoal): { solution: PoissonSolution | null; updates: number } {
+  let { mesh, psi } = start;
+  let updates = 0;
+  let target = COARSE_SHARE * goal.accuracy;
+  let share = ROW_SHARE;
+  const solve = (on: Mesh, values: Float64Array, scheme: 'compact' | 'box'): Solved | null => {
+    const system = new PoissonSystem(problem, on, scheme);
+    system.chooseRows(values);
+    let run = newton(system, values);
+    updates += run.updates;
+    // Rows were chosen at the guess; where the solution lies elsewhere, once more.
+    if (run.converged && system.chooseRows(values) > 0) {
+      run = newton(system, values);
+      updates += run.updates;
+      system.evaluate(values, true);
+    }
+    if (!run.converged || !system.factor()) return null;
+    const missed = system.defects(values);
+    const errors = rowErrors(missed, system.response());
+    system.solve(missed);
+    return { system, run, errors, estimate: missed.reduce((most, v) => Math.max(most, Math.abs(v)), 0) };
+  };
+  const carryTo = (from: Solved, values: Float64Array): void => {
+    mesh = equidistributed(from.system, from.errors, share * target);
+    psi = bent(from.system, values, mesh);
+    setEnds(problem, psi);
+  };
+  if (!start.warm) {
+    const first = solve(mesh, psi, 'box');
+    if (!first) return { solution: null, updates };
+    carryTo(first, psi);
+  }
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    if (2 * mesh.nodes > goal.maxNodes) break;
+    const coarse = solve(mesh, psi, 'compact');
+    if (!coarse) break;
+    if (!(coarse.estimate <= target)) {
+      if (round > 0 || start.warm) share *= Math.min(0.8, Math.max(0.05, (0.7 * target) / coarse.estimate));
+      carryTo(coarse, psi);
+      continue;
+    }
+    const halfMesh = halved(mesh);
+    const finePsi = bent(coarse.system, psi, halfMesh);
+    const fine = solve(halfMesh, finePsi, 'compact');
+    if (!fine) break;
+    let difference = 0;
+    for (let l = 0; l < mesh.local.length; l++) {
+      for (let k = 0; k < mesh.local[l].length; k++) {
+        const d = Math.abs(psi[mesh.first[l] + k] - finePsi[halfMesh.first[l] + 2 * k]);
+        if (!(d <= difference)) difference = d;
+      }
+    }
+    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY_OF_SECOND * fine.estimate);
+    (globalThis as any).DBG = { d: difference, dc: coarse.estimate, df: fine.estimate, lump: fine.system.lumped.reduce((a: number, b: number) => a + b, 0), lumpc: coarse.system.lumped.reduce((a: number, b: number) => a + b, 0) };
+    const quality: Quality = {
+      converged: true,
+      newtonUpdates: updates,
+      lastUpdate: fine.run.lastUpdate,
+      meshNodes: halfMesh.nodes,
+      meshError,
+      gaussError: gaussError(fine.system, finePsi),
+      method: 'compact',
+    };
+    if (refusalReason(quality, goal.accuracy) === null) return { solution: { profiles: profilesOf(fine.system, finePsi), quality }, updates };
+    target *= Math.min(0.5, Math.max(0.02, (0.5 * goal.accuracy) / meshError));
+    carryTo(coarse, psi);
+  }
+  return { solution: null, updates };
+}
+
+/**
+ * Error of the finer of two solutions, V, from their difference. With the contraction c that both meshes' own estimates show (never better than a
+ * sixteenth) it is c/(1 - c) of the difference. Where the difference is larger than what the coarse mesh said of itself the meshes are too coarse for either
+ * estimate, and the difference stands whole.
+ */
+function halvingError(difference: number, coarseEstimate: number, fineEstimate: number): number {
+  if (!(difference <= AGREEMENT * coarseEstimate)) return 2 * difference;
+  const c = Math.min(0.5, Math.max(CONTRACTION, fineEstimate / Math.max(coarseEstimate, 1e-30)));
+  return (SAFETY * difference * c) / (1 - c);
+}

@@ -1,0 +1,99 @@
+import { meshOf, type Mesh } from './mesh.ts';
+import type { PoissonSystem } from './poisson-system.ts';
+
+/** How steeply the cell size may grow along a layer: neighbouring cells stay alike within about this share, on which the fourth order rests. */
+const GRADING = 0.3;
+/** Cells change by no more than this from one mesh to the next: the differences that ask for it are themselves only rough. */
+const FINER = 1 / 8;
+const COARSER = 2.5;
+/** Least cells of a layer; the estimate takes five nodes. */
+const LEAST_CELLS = 6;
+/** What a row misses grows with the fifth power of its cells. */
+const POWER = 1 / 5;
+
+/** Rows' shares in the error of psi: the charge that each misses times the response of its own node, V [nodes]. */
+export function rowErrors(defects: Float64Array, response: Float64Array): Float64Array {
+  return defects.map((d, i) => Math.abs(d) * response[i]);
+}
+
+/**
+ * A new mesh on which every row misses the same: cell sizes in proportion to (goal/row's error)^(1/5), smoothed so that they grow evenly, and nodes
+ * set where the integral of 1/size passes whole steps (de Boor, Lect. Notes Math. 363, 12, 1974; Pereyra and Sewell, Numer. Math. 23, 261, 1975).
+ *
+ * @param errors  of the rows of `system`, V [nodes]
+ * @param aim     wished error of a row, V
+ */
+export function equidistributed(system: PoissonSystem, errors: Float64Array, aim: number): Mesh {
+  const { mesh } = system;
+  return meshOf(
+    mesh.local.map((z, l) => {
+      const m = z.length - 1;
+      if (system.charges[mesh.first[l] + l].bands.insulator) return Float64Array.from({ length: 5 }, (_, k) => (z[m] * k) / 4);
+      const first = mesh.first[l];
+      const most = z[m] / LEAST_CELLS;
+      const size = new Float64Array(m + 1);
+      for (let k = 0; k <= m; k++) {
+        const h = 0.5 * (z[Math.min(m, k + 1)] - z[Math.max(0, k - 1)]) * (k === 0 || k === m ? 2 : 1);
+        // A difference may pass through zero on one node: the neighbours speak for it.
+        let error = errors[first + k];
+        if (k > 0) error = Math.max(error, errors[first + k - 1]);
+        if (k < m) error = Math.max(error, errors[first + k + 1]);
+        size[k] = Math.min(most, h * Math.min(COARSER, Math.max(FINER, (aim / error) ** POWER)));
+      }
+      for (let k = 1; k <= m; k++) size[k] = Math.min(size[k], size[k - 1] + GRADING * (z[k] - z[k - 1]));
+      for (let k = m - 1; k >= 0; k--) size[k] = Math.min(size[k], size[k + 1] + GRADING * (z[k + 1] - z[k]));
+      return placed(z, size);
+    }),
+  );
+}
+
+/** Nodes at even steps of Int dz/size, size straight between the old nodes. */
+function placed(z: Float64Array, size: Float64Array): Float64Array {
+  const m = z.length - 1;
+  const count = new Float64Array(m + 1);
+  // Int dz/size over a cell: h ln(1 + r)/(r s0), r = s1/s0 - 1.
+  for (let k = 0; k < m; k++) {
+    const r = size[k + 1] / size[k] - 1;
+    count[k + 1] = count[k] + ((z[k + 1] - z[k]) / size[k]) * (Math.abs(r) < 1e-6 ? 1 - r / 2 : Math.log1p(r) / r);
+  }
+  const cells = Math.max(LEAST_CELLS, Math.ceil(count[m]));
+  const out = new Float64Array(cells + 1);
+  let k = 0;
+  for (let j = 1; j < cells; j++) {
+    const c = (count[m] * j) / cells;
+    while (k + 1 < m && count[k + 1] < c) k++;
+    const r = size[k + 1] / size[k] - 1;
+    const x = ((c - count[k]) * size[k]) / (z[k + 1] - z[k]);
+    out[j] = z[k] + (z[k + 1] - z[k]) * Math.min(1, Math.abs(r) < 1e-6 ? x : Math.expm1(r * x) / r);
+  }
+  out[cells] = z[m];
+  return out;
+}
+
+/**
+ * Carries a solved potential to another mesh of the same stack: straight between nodes plus the bend that Poisson's equation itself gives there,
+ * psi'' = -rho/eps with the charge straight between nodes. Where that bend would make psi turn within a cell it is cut back.
+ *
+ * @param psi  as last evaluated in `system`, V [nodes]
+ */
+export function bent(system: PoissonSystem, psi: Float64Array, to: Mesh): Float64Array {
+  const { mesh: from, density, permittivity } = system;
+  const out = new Float64Array(to.nodes);
+  for (let l = 0; l < to.local.length; l++) {
+    const a = from.local[l];
+    const b = to.local[l];
+    let c = 0;
+    for (let k = 0; k < b.length; k++) {
+      while (c + 2 < a.length && a[c + 1] < b[k]) c++;
+      const h = a[c + 1] - a[c];
+      const u = Math.min(1, Math.max(0, (b[k] - a[c]) / h));
+      const i = from.first[l] + c;
+      const s = i + l;
+      const rise = psi[i + 1] - psi[i];
+      const bend = ((h * h) / (6 * permittivity[s])) * (density[s] * (2 - u) + density[s + 1] * (1 + u));
+      const most = Math.abs(rise);
+      out[to.first[l] + k] = psi[i] + u * rise + u * (1 - u) * Math.max(-most, Math.min(most, bend));
+    }
+  }
+  return out;
+}
