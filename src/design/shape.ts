@@ -8,7 +8,7 @@ import { DESIGN_FORMAT } from './types.ts';
  */
 const text = v.string();
 /** A quantity with its unit, as text. What belongs here is the message: a bare number is answered with the unit that would fit. */
-const quantity = (kind: KindName) => v.string(`${KINDS[kind].words} with its unit, as text, such as "${KINDS[kind].example.split(' or ')[0]}",`);
+const quantity = (kind: KindName) => v.pipe(v.string(`${KINDS[kind].words} with its unit, as text, such as "${KINDS[kind].example.split(' or ')[0]}",`), v.description(`${KINDS[kind].words} with its unit, e.g. "${KINDS[kind].example}", or an expression`));
 const [length, energy, density, sheetDensity, temperature, voltage] = [quantity('length'), quantity('energy'), quantity('density'), quantity('sheetDensity'), quantity('temperature'), quantity('potential')];
 const name = v.pipe(v.string(), v.minLength(1), v.maxLength(200));
 const pure = v.union([v.number(), v.string()]);

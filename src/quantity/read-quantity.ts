@@ -24,6 +24,8 @@ export function readQuantity(text: unknown, kind: KindName, scope: Scope = NO_NA
   if (share) return { ok: true, value: Number(share[1]) / 100 };
   // "25C" is a temperature where a temperature is asked for, a charge elsewhere.
   const typed = kind === 'temperature' ? text.replace(/^(\s*[-+\u2212]?[\d.]+)\s*C\s*$/, '$1 degC') : text;
+  const plain = plainQuantity(typed, kind);
+  if (plain !== null) return Number.isFinite(plain) ? { ok: true, value: plain } : fail(`${quoted(text)} is not a finite number`);
   let value: Value;
   try {
     value = evaluate(typed, scope);
@@ -37,6 +39,26 @@ export function readQuantity(text: unknown, kind: KindName, scope: Scope = NO_NA
   const other = kindOf(value);
   const found = other ? `is ${KINDS[other].words}, not ${wanted.words}` : `is not ${wanted.words}`;
   return fail(`${quoted(text)} ${found}; ${wanted.unit === '' ? 'write it without a unit' : 'write it'} such as "${wanted.example}"`);
+}
+
+/** Powers of ten from a unit to the solver's unit of the kind. */
+const DECIMAL: Partial<Record<KindName, Readonly<Record<string, number>>>> = {
+  length: { nm: -7, um: -4, mm: -1, cm: 0, m: 2, pm: -10, angstrom: -8 },
+  energy: { eV: 0, meV: -3, ueV: -6 },
+  density: { 'cm^-3': 0, 'm^-3': -6 },
+  sheetDensity: { 'cm^-2': 0, 'm^-2': -4 },
+};
+
+/**
+ * One number with one unit, by far the most common text: the decimal point is moved in the text itself, so that "0.36 eV" and "200 nm" are
+ * the nearest doubles and not one rounding beside them. Null for anything else.
+ */
+function plainQuantity(text: string, kind: KindName): number | null {
+  const found = /^([-+]?(?:\d+\.?\d*|\.\d+))(?:[eE]([-+]?\d{1,4}))?\s*(\S.*)$/.exec(text.length > 60 ? '' : normalise(text));
+  if (!found) return null;
+  const [, digits, exponent = '0', unit] = found;
+  const shift = unit === KINDS[kind].unit ? 0 : DECIMAL[kind] && Object.hasOwn(DECIMAL[kind], unit) ? DECIMAL[kind][unit] : null;
+  return shift === null ? null : Number(`${digits}e${Number(exponent) + shift}`);
 }
 
 /** "200 mn": one number with one unknown word; says which unit was meant. */

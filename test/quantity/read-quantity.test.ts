@@ -30,6 +30,15 @@ describe('reading a quantity', () => {
     for (const [text, kind, expected] of cases) expect(Math.abs(value(text, kind) / expected - 1), `${text} is ${value(text, kind)}`).toBeLessThan(1e-15);
   });
 
+  it('reads the nearest double, not one rounding beside it', () => {
+    expect(value('0.36 eV', 'energy')).toBe(0.36);
+    expect(value('45.5 meV', 'energy')).toBe(0.0455);
+    expect(value('200 nm', 'length')).toBe(2e-5);
+    expect(value('0.35um', 'length')).toBe(3.5e-5);
+    expect(value('1e24 m^-3', 'density')).toBe(1e18);
+    expect(value('2.5e-1 eV', 'energy')).toBe(0.25);
+  });
+
   it('calculates with variables and units', () => {
     const names = { Ncap: '1e19 cm^-3', tcap: '40 nm' };
     expect(value('2*Ncap', 'density', names)).toBe(2e19);
