@@ -23,7 +23,7 @@ export default {
   // Full Chromium with two pages at once times out on pointer drags and screenshots; the headless shell does not.
   concurrency: headless === 'shell' ? 2 : 1,
   browsers: [chromeLauncher({ launchOptions: { executablePath, env, args, headless } })],
-  plugins: [await prebundled(['mathjs', 'axe-core']), watchErrors, esbuildPlugin({ ts: true, target: 'esnext', tsconfig: join(ROOT, 'tsconfig.json') })],
+  plugins: [await prebundled(['mathjs', 'axe-core', 'immer']), watchErrors, esbuildPlugin({ ts: true, target: 'esnext', tsconfig: join(ROOT, 'tsconfig.json') })],
   reporters: [defaultReporter({ reportTestResults: true, reportTestProgress: process.stdout.isTTY === true }), browserReport(process.env.BROWSER_REPORT)],
   testFramework: { config: { timeout: 10_000 } },
   testsFinishTimeout: 240_000,

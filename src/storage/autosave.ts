@@ -63,6 +63,12 @@ export class Autosave {
     await this.#running;
   }
 
+  /** Another tab was heard to have saved: nothing more is written until the person has chosen. */
+  meet(other: ProjectRecord | null): void {
+    clearTimeout(this.#timer);
+    this.#become({ kind: 'conflict', other });
+  }
+
   /** Another project is open now, or the conflict is settled: nothing is owed any more. */
   reset(): void {
     clearTimeout(this.#timer);

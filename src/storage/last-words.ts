@@ -8,24 +8,25 @@ export interface LastWords {
   designText: string;
 }
 
-const KEY = 'halfmark:unsaved';
+/** One place a project, so that two tabs that close together do not talk over each other. */
+const keyOf = (id: string): string => `halfmark:unsaved:${id}`;
 
 /** @returns whether it was kept; a browser may refuse */
 export function leaveLastWords(words: LastWords, store: Storage = localStorage): boolean {
   try {
-    store.setItem(KEY, JSON.stringify(words));
+    store.setItem(keyOf(words.id), JSON.stringify(words));
     return true;
   } catch {
     return false;
   }
 }
 
-/** Reads and removes them. @returns null when there are none, or none that can be read */
-export function takeLastWords(store: Storage = localStorage): LastWords | null {
+/** Reads and removes those of one project. @returns null when there are none, or none that can be read */
+export function takeLastWords(project: string, store: Storage = localStorage): LastWords | null {
   try {
-    const text = store.getItem(KEY);
+    const text = store.getItem(keyOf(project));
     if (text === null) return null;
-    store.removeItem(KEY);
+    store.removeItem(keyOf(project));
     const { id, revision, designText } = JSON.parse(text) as Partial<LastWords>;
     return typeof id === 'string' && typeof revision === 'number' && typeof designText === 'string' ? { id, revision, designText } : null;
   } catch {

@@ -16,16 +16,17 @@ describe('what was not saved when the page went away', () => {
     const store = shelf();
     const words = { id: 'a', revision: 3, designText: '{}' };
     expect(leaveLastWords(words, store)).toBe(true);
-    expect(takeLastWords(store)).toEqual(words);
-    expect(takeLastWords(store)).toBeNull();
+    expect(takeLastWords('b', store)).toBeNull();
+    expect(takeLastWords('a', store)).toEqual(words);
+    expect(takeLastWords('a', store)).toBeNull();
   });
 
   it('is given up without harm when the browser refuses or gives back something else', () => {
     expect(leaveLastWords({ id: 'a', revision: 3, designText: '{}' }, shelf(true))).toBe(false);
     const store = shelf();
     for (const bad of ['nonsense', 'null', '{"id":1}']) {
-      store.setItem('halfmark:unsaved', bad);
-      expect(takeLastWords(store)).toBeNull();
+      store.setItem('halfmark:unsaved:a', bad);
+      expect(takeLastWords('a', store)).toBeNull();
     }
   });
 });
