@@ -1,0 +1,160 @@
+import { css } from 'lit';
+
+export const styles = css`
+  .bar {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: baseline;
+    gap: 4px 8px;
+    margin: 12px 0 4px;
+  }
+  section:first-of-type .bar {
+    margin-top: 0;
+  }
+  h3 {
+    font-size: 0.9375rem;
+    font-weight: 600;
+    margin: 0;
+    margin-inline-end: auto;
+  }
+  .scroll {
+    overflow-x: auto;
+    border-block: 1px solid var(--ink);
+    /* Keeps the first column's shadow and long words inside the region. */
+    max-width: 100%;
+  }
+  table {
+    border-collapse: collapse;
+    width: 100%;
+  }
+  th,
+  td {
+    text-align: start;
+    vertical-align: baseline;
+    padding: 3px 10px;
+    font-weight: 400;
+  }
+  thead th {
+    border-bottom: 1px solid var(--line);
+    vertical-align: bottom;
+    line-height: 1.2;
+    padding-block: 0;
+  }
+  thead button {
+    border: 0;
+    background: none;
+    padding: 4px 0;
+    text-align: inherit;
+    font-weight: 600;
+    line-height: 1.2;
+  }
+  thead .unit {
+    display: block;
+    font-weight: 400;
+    color: var(--faint);
+    white-space: nowrap;
+  }
+  .arrow {
+    display: inline-block;
+    width: 1em;
+    text-align: center;
+  }
+  th.figure,
+  td.figure {
+    text-align: end;
+    white-space: nowrap;
+  }
+  th:first-child {
+    position: sticky;
+    inset-inline-start: 0;
+    background: var(--ground);
+    z-index: 1;
+  }
+  tbody th button {
+    border: 0;
+    background: none;
+    padding: 0;
+    text-align: start;
+    overflow-wrap: anywhere;
+  }
+  tbody th {
+    min-width: 6rem;
+  }
+  tbody tr + tr > * {
+    border-top: 1px solid var(--line);
+  }
+  tbody tr.chosen > * {
+    background: color-mix(in srgb, var(--choice) 12%, var(--ground));
+  }
+  tbody tr.chosen th {
+    box-shadow: inset 3px 0 0 var(--choice);
+  }
+  td.words {
+    min-width: 7rem;
+  }
+  td span {
+    display: block;
+  }
+  td .note {
+    color: var(--faint);
+    font-size: 0.8125em;
+  }
+  td.asks {
+    cursor: help;
+  }
+  td.asks:hover span:first-child {
+    text-decoration: underline dotted;
+  }
+  fieldset {
+    flex-basis: 100%;
+    display: flex;
+    flex-wrap: wrap;
+    gap: 2px 14px;
+    border: 1px solid var(--line);
+    margin: 0 0 4px;
+    padding: 4px 8px;
+  }
+  legend {
+    padding: 0 4px;
+    color: var(--faint);
+  }
+  fieldset label {
+    display: inline-flex;
+    align-items: center;
+    gap: 5px;
+    min-height: 24px;
+  }
+  fieldset input {
+    width: 16px;
+    height: 16px;
+    min-height: 0;
+    accent-color: var(--ink);
+  }
+  .quality {
+    margin: 10px 0 0;
+    color: var(--faint);
+  }
+  .stale-mark {
+    color: var(--ink);
+    border-inline-start: 3px solid var(--choice);
+    padding-inline-start: 6px;
+    margin: 0 0 6px;
+  }
+  :host([stale]) .scroll,
+  :host([stale]) .quality {
+    opacity: 0.55;
+  }
+  .empty {
+    color: var(--faint);
+    margin: 0;
+  }
+  @media (max-width: 40rem) {
+    th:first-child {
+      max-width: 8rem;
+    }
+    th,
+    td {
+      padding-inline: 7px;
+    }
+  }
+`;

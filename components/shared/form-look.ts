@@ -1,0 +1,69 @@
+import { css } from 'lit';
+
+/** Fields in a row that wraps; labels above; a complaint under its field. */
+export const formLook = css`
+  .row {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: flex-start;
+    gap: 8px 12px;
+  }
+  .row + .row {
+    margin-top: 10px;
+  }
+  .select {
+    display: inline-flex;
+    flex-direction: column;
+    gap: 1px;
+    max-width: 100%;
+  }
+  .label {
+    color: var(--faint);
+    font-size: 0.8125rem;
+  }
+  select {
+    max-width: 16rem;
+    min-height: 28px;
+  }
+  select[aria-invalid] {
+    border-color: var(--trouble);
+    border-width: 2px;
+  }
+  .complaint {
+    color: var(--trouble);
+    font-size: 0.8125rem;
+    max-width: 22rem;
+  }
+  .complaint::before {
+    content: '▲ ';
+  }
+  .check {
+    display: inline-flex;
+    align-items: center;
+    gap: 6px;
+    min-height: 28px;
+    margin-top: 1.15rem;
+  }
+  .check input {
+    width: 16px;
+    height: 16px;
+    min-height: 0;
+    accent-color: var(--ink);
+  }
+  .press {
+    min-height: 28px;
+    margin-top: 1.15rem;
+  }
+  fieldset {
+    border: 0;
+    border-top: 1px solid var(--line);
+    margin: 10px 0 0;
+    padding: 4px 0 0;
+    min-width: 0;
+  }
+  legend {
+    padding: 0 8px 0 0;
+    color: var(--faint);
+    font-size: 0.8125rem;
+  }
+`;
