@@ -41,7 +41,7 @@ interface Expected {
   quantity: string;
   value?: number;
   range?: number[];
-  tolerance?: { abs?: number; rel?: number };
+  tolerance?: { abs?: number; rel?: number; factor?: number };
 }
 
 interface Check {
@@ -49,7 +49,7 @@ interface Check {
   expected: Expected[];
 }
 
-/** Holds a figure against a published one, with that one's own tolerance (either of abs and rel is enough). */
+/** Holds a figure against a published one, with that one's own tolerance (any one of abs, rel and factor is enough). */
 export function holdAgainst(file: { checks: unknown[] }, id: string, quantity: string, got: number): void {
   const check = (file.checks as Check[]).find((c) => c.id === id);
   const e = check?.expected.find((x) => x.quantity === quantity);
@@ -60,6 +60,10 @@ export function holdAgainst(file: { checks: unknown[] }, id: string, quantity: s
     return;
   }
   const value = e.value ?? NaN;
+  if (e.tolerance?.factor !== undefined) {
+    expect(Math.abs(Math.log(got / value)), `${id}: ${quantity}: got ${got}, expected ${value} within a factor of ${e.tolerance.factor}`).toBeLessThanOrEqual(Math.log(e.tolerance.factor));
+    return;
+  }
   const allowed = Math.max(e.tolerance?.abs ?? 0, (e.tolerance?.rel ?? 0) * Math.abs(value));
   expect(Math.abs(got - value), `${id}: ${quantity}: got ${got}, expected ${value} within ${allowed}`).toBeLessThanOrEqual(allowed);
 }
