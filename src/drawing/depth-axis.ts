@@ -19,15 +19,16 @@ export interface DepthAxis {
 
 /** Above this span a true axis counts in um. */
 const LONGEST_IN_NM = 2000;
-const TICK_SIZE = 11;
-const TICK_GAP = 10;
+/** Between two tick labels, of the font size. */
+const TICK_GAP = 0.9;
 
 /**
  * @param options.range   px of the top and of the bottom of the window; the first must be the smaller
  * @param options.window  the part to show, nm from the top; by default the whole stack. Held within the stack, at least 1e-3 nm wide.
+ * @param options.textSize of the tick labels, px: larger ones leave room for fewer
  */
-export function depthAxis(result: Result, options: { mode: DepthMode; range: [number, number]; window?: [number, number] }): DepthAxis {
-  const { mode, range } = options;
+export function depthAxis(result: Result, options: { mode: DepthMode; range: [number, number]; window?: [number, number]; textSize?: number }): DepthAxis {
+  const { mode, range, textSize = 11 } = options;
   if (mode !== 'true' && mode !== 'even') throw new RangeError(`unknown depth mode: ${String(mode)}`);
   const edges_nm = layerEdges(result);
   const total = edges_nm[edges_nm.length - 1];
@@ -41,7 +42,7 @@ export function depthAxis(result: Result, options: { mode: DepthMode; range: [nu
   const inMicrometres = mode === 'true' && window[1] - window[0] > LONGEST_IN_NM;
   const title = mode === 'even' ? 'depth (nm), even-handed' : inMicrometres ? 'depth (µm)' : 'depth (nm)';
   const axis: DepthAxis = { mode, range, window, x, depth, edges: edges_nm.map(x), ticks: [], title };
-  axis.ticks = mode === 'even' ? evenTicks(axis, edges_nm, zones.z) : trueTicks(axis, inMicrometres);
+  axis.ticks = mode === 'even' ? evenTicks(axis, edges_nm, zones.z, textSize) : trueTicks(axis, inMicrometres, textSize);
   return axis;
 }
 
@@ -67,29 +68,29 @@ function piecewise(from: number[], to: number[], value: number): number {
   return to[i] + ((value - from[i]) * (to[i + 1] - to[i])) / (from[i + 1] - from[i]);
 }
 
-function trueTicks(axis: DepthAxis, inMicrometres: boolean): DepthAxis['ticks'] {
+function trueTicks(axis: DepthAxis, inMicrometres: boolean, textSize: number): DepthAxis['ticks'] {
   const unit = inMicrometres ? 1000 : 1;
   const [from, to] = axis.window.map((z) => z / unit);
-  const wanted = Math.max(2, Math.floor((axis.range[1] - axis.range[0]) / 90));
+  const wanted = Math.max(2, Math.floor((axis.range[1] - axis.range[0]) / (8 * textSize)));
   return niceTicks(from, to, wanted).map((value) => ({ x: axis.x(value * unit), label: plainNumber(value) }));
 }
 
 /** Boundaries first, then round depths of each zone where there is room: on an uneven axis the reader needs the figures most at the layers' ends. */
-function evenTicks(axis: DepthAxis, edges_nm: number[], zones: number[]): DepthAxis['ticks'] {
+function evenTicks(axis: DepthAxis, edges_nm: number[], zones: number[], textSize: number): DepthAxis['ticks'] {
   const [from, to] = axis.window;
   const inner: number[] = [];
   for (let i = 0; i + 1 < zones.length; i++) {
     const a = Math.max(zones[i], from);
     const b = Math.min(zones[i + 1], to);
-    if (b > a) inner.push(...niceTicks(a, b, Math.floor((axis.x(b) - axis.x(a)) / 60)));
+    if (b > a) inner.push(...niceTicks(a, b, Math.floor((axis.x(b) - axis.x(a)) / (5.5 * textSize))));
   }
   const candidates = [from, to, ...edges_nm, ...inner].filter((z) => z >= from && z <= to);
   const placed: { x: number; label: string; half: number }[] = [];
   for (const z of candidates) {
     const label = depthLabel(z);
-    const half = textWidth(label, TICK_SIZE) / 2;
+    const half = textWidth(label, textSize) / 2;
     const x = axis.x(z);
-    if (placed.every((other) => Math.abs(other.x - x) >= other.half + half + TICK_GAP)) placed.push({ x, label, half });
+    if (placed.every((other) => Math.abs(other.x - x) >= other.half + half + TICK_GAP * textSize)) placed.push({ x, label, half });
   }
   return placed.sort((a, b) => a.x - b.x).map(({ x, label }) => ({ x, label }));
 }

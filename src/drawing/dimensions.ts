@@ -20,6 +20,8 @@ export interface Dimension {
 
 /** Below this an offset or a bending is no more than the rounding of its inputs, eV. */
 const LEAST = 5e-4;
+/** How near to its neutral value Ec has to come, eV: a share of the built-in potential, held between two bounds. */
+const NEUTRAL = { share: 0.02, least: 1e-4, most: 0.01 };
 
 /** All dimension lines that the result calls for, the most wanted first. */
 export function dimensionsOf(frame: Frame): Dimension[] {
@@ -74,20 +76,21 @@ function barriers(frame: Frame, contact: ContactResult): Dimension[] {
 }
 
 /**
- * q Vbi against Ec: from the neutral Ec of the layer above, carried over the offset, to the neutral Ec of the layer below. Only where both layers have a
- * neutral part to which the figure refers.
+ * q Vbi against Ec: from the neutral Ec of the layer above, carried over the offset, to the neutral Ec of the layer below. Only where Ec comes to
+ * its neutral value in both: a layer that is depleted throughout has no level in the picture to measure from.
  */
 function builtIn(frame: Frame, junction: JunctionResult, i: number): Dimension[] {
   const { result, depth } = frame;
   const [above, below] = [result.layers[i], result.layers[i + 1]];
-  if (junction.builtin_V === null || above.fully_depleted || below.fully_depleted || above.insulator || below.insulator) return [];
+  if (junction.builtin_V === null || above.insulator || below.insulator) return [];
   const ef = result.profile.ef_eV[0] ?? 0;
   const end = ef + below.ec_minus_ef_eV;
   const start = end + junction.builtin_V;
-  const startX = nearestAt(frame, i, ef + above.ec_minus_ef_eV, 'last') ?? depth.edges[i + 1];
+  const startX = nearestAt(frame, i, ef + above.ec_minus_ef_eV, junction.builtin_V, 'last');
+  const endX = nearestAt(frame, i + 1, end, junction.builtin_V, 'first');
+  if (startX === null || endX === null) return [];
   // Beyond an offset the level of the layer above stands on no curve of its own: its extension starts at the interface.
   const edgeX = Math.abs(junction.delta_ec_eV) < LEAST ? startX : depth.edges[i + 1];
-  const endX = nearestAt(frame, i + 1, end, 'first') ?? depth.edges[i + 1];
   const places = within(frame, i + 1, [0.5, 0.65, 0.35, 0.8, 0.2]);
   const rises = start > end;
   return [
@@ -105,7 +108,9 @@ function offsets(frame: Frame, junction: JunctionResult, i: number): Dimension[]
   const x = depth.edges[i + 1];
   if (x < frame.area.left || x > frame.area.right) return [];
   const nodes = nodesOfLayers(result);
-  const places = [16, -16, 30, -30, 48, -48, 70, -70].map((dx) => x + dx).filter((at) => at > frame.area.left + 4 && at < frame.area.right - 4);
+  // Beyond the next interface it would seem to belong to that one.
+  const [left, right] = [Math.max(frame.area.left, depth.edges[i]), Math.min(frame.area.right, depth.edges[i + 2])];
+  const places = [16, -16, 30, -30, 48, -48, 70, -70].map((dx) => x + dx).filter((at) => at > left + 4 && at < right - 4);
   const [a, b] = [nodes[i][1], nodes[i + 1][0]];
   const one = (id: string, label: string, sub: string, edges: number[], words: string): Dimension => ({
     id, label, value: energyText(Math.abs(edges[b] - edges[a])), symbol: symbol('E', sub, 'Δ'),
@@ -138,13 +143,14 @@ function within(frame: Frame, layer: number, shares: number[]): number[] {
   return right - left < 24 ? [] : shares.map((share) => left + share * (right - left));
 }
 
-/** px of the node nearest to the interface (the last or the first of the layer) at which Ec has come to within half a px of a level; null where it never does. */
-function nearestAt(frame: Frame, layer: number, level: number, from: 'first' | 'last'): number | null {
-  const { result, depth, energy } = frame;
+/** px of the node nearest to the interface (the last or the first of the layer) at which Ec has come to its neutral level; null where it never does. */
+function nearestAt(frame: Frame, layer: number, level: number, builtIn: number, from: 'first' | 'last'): number | null {
+  const { result, depth } = frame;
+  const near = Math.min(NEUTRAL.most, Math.max(NEUTRAL.least, NEUTRAL.share * Math.abs(builtIn)));
   const [first, last] = nodesOfLayers(result)[layer];
   const step = from === 'first' ? 1 : -1;
   for (let i = from === 'first' ? first : last; i >= first && i <= last; i += step) {
-    if (Math.abs(energy.y(result.profile.ec_eV[i]) - energy.y(level)) < 0.5) return depth.x(result.profile.z_nm[i]);
+    if (Math.abs(result.profile.ec_eV[i] - level) < near) return depth.x(result.profile.z_nm[i]);
   }
   return null;
 }

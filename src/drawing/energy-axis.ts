@@ -13,8 +13,8 @@ export interface EnergyAxis {
 
 /** Room above and below the curves, as a share of their span. */
 const MARGIN = 0.08;
-/** How far an insulator's edges may stretch the axis on each side, as a share of the semiconductors' span. */
-const INSULATOR_STRETCH = 0.8;
+/** How far an insulator's edges may stretch the axis up and down, as shares of the semiconductors' span: more for the barrier of electrons, the one asked for most. */
+const INSULATOR_STRETCH = { up: 1.7, down: 0.6 };
 
 /**
  * @param options.range    [px of the lowest energy, px of the highest]
@@ -64,8 +64,8 @@ function ownDomain(result: Result, vacuum: boolean): [number, number] {
   }
   const span = high - low || highest - lowest || 1;
   // An oxide's 9 eV gap would press the semiconductor's bands together: its edges may run out of the picture.
-  low = Math.max(lowest, low - INSULATOR_STRETCH * span);
-  high = Math.min(highest, high + INSULATOR_STRETCH * span);
+  low = Math.max(lowest, low - INSULATOR_STRETCH.down * span);
+  high = Math.min(highest, high + INSULATOR_STRETCH.up * span);
   if (vacuum) for (const e of vacuum_eV) high = Math.max(high, e);
   for (const e of ef_eV) [low, high] = [Math.min(low, e), Math.max(high, e)];
   const room = MARGIN * (high - low || 1);

@@ -1,6 +1,7 @@
 import type { Result } from '../result/types.ts';
 import { depthAxis, type DepthAxis, type DepthMode } from './depth-axis.ts';
 import { energyAxis, type EnergyAxis } from './energy-axis.ts';
+import { textWidth } from './glyph-widths.ts';
 import type { Style } from './styles.ts';
 
 /** px */
@@ -49,10 +50,11 @@ export function plateFrame(result: Result, style: Style, options: FrameOptions):
   const narrow = width < NARROW * (style.textSize / 12);
   const small = narrow ? style.smallSize - 1 : style.smallSize;
   const text = narrow ? style.textSize - 1 : style.textSize;
-  const lane = (narrow ? 4.2 : 5) * text;
+  // A barrier's figure has to fit in.
+  const lane = textWidth('0.000 eV', small) + 10;
   const metal = (side: 'top' | 'bottom'): boolean => result.contacts.some((c) => c.side === side && c.kind === 'barrier');
   const lanes = { top: metal('top') ? lane : 0, bottom: metal('bottom') ? lane : 0 };
-  const strip = options.full ? 4.6 * text : 0;
+  const strip = options.full ? 5 * text : 0;
   const area = {
     left: 2.6 * text + 2.9 * small + lanes.top,
     right: width - 3 * text - lanes.bottom,
@@ -60,7 +62,7 @@ export function plateFrame(result: Result, style: Style, options: FrameOptions):
     bottom: height - strip - 2.1 * small - 1.6 * text - (options.full ? options.captionLines * 1.4 * small + 0.6 * text : 0),
   };
   if (!(area.right - area.left >= 40 && area.bottom - area.top >= 40)) throw new RangeError(`no room for a plate: ${width} by ${height} px`);
-  const depth = depthAxis(result, { mode: options.depth, range: [area.left, area.right], window: options.window });
+  const depth = depthAxis(result, { mode: options.depth, range: [area.left, area.right], window: options.window, textSize: small });
   const energy = energyAxis(result, { range: [area.bottom, area.top], window: options.energyWindow, domain: options.energyDomain, vacuum: options.vacuum });
   return { result, style, width, height, area, lanes, depth, energy, text, small, strip, prefix: options.prefix, areaClip: `${options.prefix}-area` };
 }

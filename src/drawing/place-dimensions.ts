@@ -26,8 +26,10 @@ export interface Obstacles {
 
 /** Costs of a place; only their order counts. A place above LIMIT is no place. */
 const COST = { rank: 1, side: 0.6, shift: 0.8, curve: 14, upright: 5, line: 60, outside: 1000, label: 1000 };
-const LIMIT = 90;
+const LIMIT = 20;
 const GAP = 3;
+/** Between the symbol and its value on one line, of the font size. */
+export const SYMBOL_GAP = 0.5;
 
 /**
  * Finds each dimension line its place, in the order given: of all its lines and positions of the figure the one that covers the least. One that finds none is
@@ -38,13 +40,15 @@ const GAP = 3;
 export function placeDimensions(frame: Frame, wanted: Dimension[], obstacles: Obstacles, moved: Record<string, [number, number]>): (PlacedDimension | null)[] {
   const placed: PlacedDimension[] = [];
   return wanted.map((dimension) => {
-    let best: PlacedDimension | null = null;
+    let found: Candidate | null = null;
     let least = Infinity;
-    for (const candidate of candidates(frame, dimension)) {
-      if (candidate.cost >= least) continue;
-      const cost = candidate.cost + cover(frame, candidate.at, obstacles, placed);
-      if (cost < least) [least, best] = [cost, candidate.at];
-    }
+    eachCandidate(frame, dimension, (candidate) => {
+      if (candidate.cost >= least) return;
+      const cost = candidate.cost + cover(frame, dimension, candidate, obstacles, placed, least);
+      if (cost < least) [least, found] = [cost, { ...candidate }];
+    });
+    const chosen = found as Candidate | null;
+    let best: PlacedDimension | null = chosen && { ...dimension, x: chosen.lineX, stacked: chosen.stacked, box: { x: chosen.x, y: chosen.y, w: chosen.w, h: chosen.h } };
     const offset = Object.hasOwn(moved, dimension.id) ? moved[dimension.id] : undefined;
     if (!best || (least > LIMIT && !offset)) return null;
     if (offset) {
@@ -56,18 +60,35 @@ export function placeDimensions(frame: Frame, wanted: Dimension[], obstacles: Ob
   });
 }
 
-/** Figure beside, on, above and below each line that the dimension may take. */
-function candidates(frame: Frame, d: Dimension): { at: PlacedDimension; cost: number }[] {
+/** A place that a figure may take, with the px of its line. */
+interface Candidate extends Box {
+  lineX: number;
+  stacked: boolean;
+  cost: number;
+}
+
+/**
+ * Figure beside, on, above and below each line that the dimension may take. There are some hundred for each dimension line and the picture is redrawn while a value is
+ * dragged, so one object is lent to `consider` again and again.
+ */
+function eachCandidate(frame: Frame, d: Dimension, consider: (candidate: Candidate) => void): void {
   const { energy, small } = frame;
   const top = energy.y(d.high);
   const bottom = energy.y(d.low);
   const symbolWidth = runsWidth(d.symbol, small);
   const valueWidth = textWidth(d.value, small);
-  const one = { w: symbolWidth + 0.4 * small + valueWidth, h: 1.35 * small };
+  const one = { w: symbolWidth + SYMBOL_GAP * small + valueWidth, h: 1.35 * small };
   const two = { w: Math.max(symbolWidth, valueWidth), h: 2.45 * small };
-  const found: { at: PlacedDimension; cost: number }[] = [];
+  const lent: Candidate = { lineX: 0, stacked: false, cost: 0, x: 0, y: 0, w: 0, h: 0 };
   const add = (x: number, size: { w: number; h: number }, boxX: number, boxY: number, stacked: boolean, cost: number): void => {
-    found.push({ at: { ...d, x, stacked, box: { x: boxX, y: boxY, ...size } }, cost });
+    lent.lineX = x;
+    lent.x = boxX;
+    lent.y = boxY;
+    lent.w = size.w;
+    lent.h = size.h;
+    lent.stacked = stacked;
+    lent.cost = cost;
+    consider(lent);
   };
   d.places.forEach((x, rank) => {
     for (const [stacked, size] of [[false, one], [true, two]] as const) {
@@ -86,33 +107,39 @@ function candidates(frame: Frame, d: Dimension): { at: PlacedDimension; cost: nu
       add(x, size, x - size.w / 2, bottom + past, stacked, rankCost + 2 * COST.shift);
     }
   });
-  return found;
 }
 
-function cover(frame: Frame, at: PlacedDimension, obstacles: Obstacles, placed: PlacedDimension[]): number {
+/** What a place would cover. Stops counting beyond `enough`. */
+function cover(frame: Frame, d: Dimension, at: Candidate, obstacles: Obstacles, placed: PlacedDimension[], enough: number): number {
   const { area, lanes, energy } = frame;
-  const { box } = at;
-  let cost = 0;
-  if (box.x < area.left - lanes.top + 1 || box.x + box.w > area.right + lanes.bottom - 1 || box.y < area.top + 1 || box.y + box.h > area.bottom - 1) cost += COST.outside;
-  const inLane = at.x < area.left || at.x > area.right;
+  const { lineX } = at;
   // A metal's figures stay in its lane, the others out of it.
-  if (!inLane && (box.x < area.left + 1 || box.x + box.w > area.right - 1)) cost += COST.outside;
-  for (const other of obstacles.boxes) if (overlap(box, other, GAP)) cost += COST.label;
-  const own = span(energy.y(at.high), energy.y(at.low), at.x);
+  const inLane = lineX < area.left || lineX > area.right;
+  const [left, right] = !inLane ? [area.left, area.right] : lineX < area.left ? [area.left - lanes.top, area.left] : [area.right, area.right + lanes.bottom];
+  if (at.x < left + 1 || at.x + at.w > right - 1 || at.y < area.top + 1 || at.y + at.h > area.bottom - 1) return COST.outside;
+  let cost = at.cost;
+  for (const other of obstacles.boxes) if (overlap(at, other, GAP)) return COST.label;
+  const own = span(energy.y(d.high), energy.y(d.low), lineX);
   for (const other of placed) {
-    if (overlap(box, other.box, GAP)) cost += COST.label;
+    if (overlap(at, other.box, GAP)) return COST.label;
     const line = span(energy.y(other.high), energy.y(other.low), other.x);
-    if (overlap(box, line, GAP)) cost += COST.line;
+    if (overlap(at, line, GAP)) cost += COST.line;
     if (overlap(own, other.box, GAP)) cost += COST.line;
     if (overlap(own, line, GAP)) cost += COST.line;
+    if (cost >= enough) return cost;
   }
-  for (const x of obstacles.uprights) if (x > box.x - 1 && x < box.x + box.w + 1) cost += COST.upright;
-  for (const curve of obstacles.curves) cost += COST.curve * crossings(curve, box);
-  return cost;
+  for (const x of obstacles.uprights) if (x > at.x - 1 && x < at.x + at.w + 1) cost += COST.upright;
+  for (const curve of obstacles.curves) {
+    if (cost >= enough) return cost;
+    cost += COST.curve * crossings(curve, at);
+  }
+  return cost - at.cost;
 }
 
+/** A line with its arrows. Cut at the ends, since two lines that meet at one level, as phi_Bn and phi_Bp do, are not in each other's way. */
 function span(top: number, bottom: number, x: number): Box {
-  return { x: x - 3, y: top, w: 6, h: bottom - top };
+  const cut = Math.min(4, (bottom - top) / 2);
+  return { x: x - 3, y: top + cut, w: 6, h: bottom - top - 2 * cut };
 }
 
 export function overlap(a: Box, b: Box, gap: number): boolean {
@@ -121,6 +148,8 @@ export function overlap(a: Box, b: Box, gap: number): boolean {
 
 /** Share of a box's width that a curve runs through, 0..1, from five upright cuts. */
 function crossings(curve: Points, box: Box): number {
+  const n = curve.x.length;
+  if (n === 0 || box.x > curve.x[n - 1] || box.x + box.w < curve.x[0]) return 0;
   let hits = 0;
   for (let i = 0; i < 5; i++) {
     const y = curveAt(curve, box.x + (i / 4) * box.w);

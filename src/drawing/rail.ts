@@ -5,8 +5,9 @@ import { polyline, thinned, type Points } from './curve.ts';
 import { layerEdges } from './depth-axis.ts';
 import type { EnergyAxis } from './energy-axis.ts';
 import { energyText, lengthText, powerOfTen, spoken } from './figures.ts';
+import { runsWidth, textWidth } from './glyph-widths.ts';
 import { fermi } from './marks/occupancy.ts';
-import { px, type Drawing, type Shape, type TextRun } from './shapes.ts';
+import { px, type Drawing, type Shape, type TextRun, type TextShape } from './shapes.ts';
 import { mixed, styleOf, type Style, type StyleName } from './styles.ts';
 import { valueAt } from './traces.ts';
 
@@ -156,29 +157,45 @@ function fermiMark(r: Rail, here: Here): Shape[] {
   const ink = { stroke: style.ink, width: style.thinWidth } as const;
   const x = r.right - 4;
   const bracket = `M${px(x - 5)},${px(y - half)}L${px(x)},${px(y - half)}L${px(x)},${px(y + half)}L${px(x - 5)},${px(y + half)}`;
-  const note = (runs: TextRun[], dy: number): Shape => ({ kind: 'text', role: 'rail-width-figure', x: x - 8, y: y - half - 5 + dy, size: small, anchor: 'end', runs, fill: style.ink });
+  // In the gap where it has room for two lines, so that the figure stands clear of the carriers; above EF where neither side has.
+  const height = 2.7 * small;
+  const above = Math.min(y - half, r.energy.y(here.ev));
+  const under = Math.max(y + half, r.energy.y(here.ec));
+  const [up, down] = [above - r.energy.y(here.ec), r.energy.y(here.ev) - under];
+  const first = down > height && down > up ? under + 1.3 * small : Math.max(above, r.top + height) - height + 1.1 * small;
+  const width = textWidth('90…10 %: 4.39 kT', small);
+  const note = (runs: TextRun[], dy: number): Shape => ({ kind: 'text', role: 'rail-width-figure', x: x - 8, y: first + dy, size: small, anchor: 'end', runs, fill: style.ink });
   return [
     { kind: 'line', role: 'rail-fermi-level', title: 'Fermi level', x1: r.left, x2: r.right, y1: y, y2: y, stroke: style.ink, width: style.fermiWidth, dash: style.fermiDash },
     { kind: 'path', role: 'rail-half', title: 'half of the states filled', d: `M${px(middle)},${px(y - 5)}L${px(middle + 5)},${px(y)}L${px(middle)},${px(y + 5)}L${px(middle - 5)},${px(y)}Z`, fill: style.ground, stroke: style.choice, width: 2 },
     { kind: 'path', role: 'rail-thermal-width', title: `from 90 % to 10 % filled: 4.39 kT, ${energyText(2 * TENTHS * here.kT)}`, d: bracket, ...ink },
-    note([{ text: '90…10 %: 4.39 ' }, { text: 'kT', italic: true }], -1.2 * small),
-    note([{ text: `= ${energyText(2 * TENTHS * here.kT)}` }], 0),
+    { kind: 'rect', role: 'rail-width-ground', x: x - 10 - width, y: first - 1.05 * small, w: width + 4, h: 2.6 * small, fill: style.ground, opacity: 0.85 },
+    note([{ text: '90…10 %: 4.39 ' }, { text: 'kT', italic: true }], 0),
+    note([{ text: `= ${energyText(2 * TENTHS * here.kT)}` }], 1.2 * small),
   ];
 }
 
 /** Scale of f, the depth, and the integrals of the two areas. */
 function figures(r: Rail, here: Here, z: number, height: number): Shape[] {
   const { style, small } = r;
-  const text = (role: string, x: number, y: number, anchor: 'start' | 'middle' | 'end', runs: TextRun[], fill = style.ink): Shape => ({ kind: 'text', role, x, y, size: small, anchor, runs, fill });
+  const text = (role: string, x: number, y: number, anchor: 'start' | 'middle' | 'end', runs: TextRun[], fill = style.ink): TextShape => ({ kind: 'text', role, x, y, size: small, anchor, runs, fill });
   const density = (letter: string, value: number): TextRun[] => [{ text: letter, italic: true }, { text: ' ' }, ...powerOfTen(value), { text: ' cm' }, { text: '−3', script: 'super' }];
+  const grounded = (shape: TextShape): Shape[] => {
+    const w = runsWidth(shape.runs, small) + 4;
+    return [{ kind: 'rect', role: 'rail-figure-ground', x: shape.x - w + 2, y: shape.y - 1.1 * small, w, h: 1.4 * small, fill: style.ground, opacity: 0.85 }, shape];
+  };
   const below = r.bottom + 1.3 * small;
-  const shapes = [
+  const shapes: Shape[] = [
     text('rail-scale', r.left, below, 'start', [{ text: '0' }]),
     text('rail-scale', (r.left + r.right) / 2, below, 'middle', [{ text: 'f', italic: true }, { text: '(' }, { text: 'E', italic: true }, { text: ')' }], style.occupancy),
     text('rail-scale', r.right, below, 'end', [{ text: '1' }]),
-    text('rail-electrons-figure', r.right - 6, r.top + 1.3 * small, 'end', density('n', here.n), style.conduction),
-    text('rail-holes-figure', r.right - 6, r.bottom - 0.6 * small, 'end', density('p', here.p), style.valence),
+    ...grounded(text('rail-electrons-figure', r.right - 6, r.top + 1.3 * small, 'end', density('n', here.n), style.conduction)),
+    ...grounded(text('rail-holes-figure', r.right - 6, r.bottom - 0.6 * small, 'end', density('p', here.p), style.valence)),
   ];
-  if (height - below > 1.3 * small) shapes.push(text('rail-depth', (r.left + r.right) / 2, below + 1.4 * small, 'middle', [{ text: `at ${lengthText(z)}` }]));
+  const rows: TextRun[][] = [[{ text: 'lines ' }, { text: 'g', italic: true }, { text: ', areas ' }, { text: 'g f', italic: true }], [{ text: `at ${lengthText(z)}` }]];
+  rows.forEach((runs, i) => {
+    const y = below + (i + 1) * 1.4 * small;
+    if (y < height - 2) shapes.push(text(i === 0 ? 'rail-key' : 'rail-depth', (r.left + r.right) / 2, y, 'middle', runs));
+  });
   return shapes;
 }

@@ -22,8 +22,8 @@ export interface Style {
   font: string;
 }
 
-/** No font is loaded: the system's own, DejaVu and Liberation where a bare machine has no other. */
-const FONT = "system-ui, -apple-system, 'Segoe UI', Roboto, 'DejaVu Sans', 'Liberation Sans', Arial, sans-serif";
+/** No font is loaded: the system's own by their names, since readers of SVG files do not know `system-ui`. */
+const FONT = "-apple-system, 'Segoe UI', Roboto, 'Helvetica Neue', Arial, 'Liberation Sans', 'DejaVu Sans', sans-serif";
 
 const LIGHT: Style = {
   ground: '#FBFAF6', ink: '#1F2430', faint: '#6B6F78', conduction: '#0B6E75', valence: '#A4502B', occupancy: '#5B3FA8', choice: '#B47A00', trouble: '#B3261E',

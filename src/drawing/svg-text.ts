@@ -8,7 +8,7 @@ import { px, type Drawing, type Paint, type Shape, type TextRun, type TextShape 
 export function svgText(d: Drawing): string {
   const [w, h] = [px(d.width), px(d.height)];
   const lines = [
-    `<svg xmlns="http://www.w3.org/2000/svg" width="${w}" height="${h}" viewBox="0 0 ${w} ${h}" role="img" font-family="${escaped(d.font)}">`,
+    `<svg xmlns="http://www.w3.org/2000/svg" width="${w}" height="${h}" viewBox="0 0 ${w} ${h}" role="img" text-rendering="geometricPrecision" font-family="${escaped(d.font)}">`,
     `<title>${escaped(d.title)}</title>`,
     `<desc>${escaped(d.description)}</desc>`,
   ];

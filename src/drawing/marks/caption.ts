@@ -8,6 +8,7 @@ export function heading(frame: Frame): Shape[] {
   const { style, text, width, result } = frame;
   const size = 1.25 * text;
   const left = 1.2 * text;
+  if (result.title === '') return [];
   return [{ kind: 'text', role: 'heading', x: left, y: 1.9 * text, size, anchor: 'start', weight: 'bold', runs: [{ text: fitted(result.title, size * 1.1, width - 2 * left) }], fill: style.ink }];
 }
 

@@ -1,10 +1,10 @@
 import type { Frame } from '../frame.ts';
 import { runsWidth } from '../glyph-widths.ts';
-import type { PlacedDimension } from '../place-dimensions.ts';
+import { SYMBOL_GAP, type PlacedDimension } from '../place-dimensions.ts';
 import { px, type Shape } from '../shapes.ts';
 
-/** Length and half width of an arrow head, px. */
-const HEAD = { length: 6, half: 2.2 };
+/** Length and half width of an arrow head, of the font size. */
+const HEAD = { length: 0.55, half: 0.2 };
 /** Lines shorter than this carry their arrows outside, pointing in, as on a mechanical drawing, px. */
 const SHORT = 26;
 
@@ -22,7 +22,7 @@ export function dimensionLine(frame: Frame, d: PlacedDimension): Shape[] {
   const short = bottom - top < SHORT;
   const lines = short ? upright(d.x, top - 12, top) + upright(d.x, bottom, bottom + 12) : upright(d.x, top, bottom);
   shapes.push({ kind: 'path', role: 'dimension-line', id, title: `${d.meaning}: ${d.value}`, d: lines, ...ink });
-  shapes.push({ kind: 'path', role: 'dimension-arrow', d: head(d.x, top, short ? -1 : 1) + head(d.x, bottom, short ? 1 : -1), fill: style.ink });
+  shapes.push({ kind: 'path', role: 'dimension-arrow', d: head(d.x, top, (short ? -1 : 1) * frame.small) + head(d.x, bottom, (short ? 1 : -1) * frame.small), fill: style.ink });
   shapes.push({ kind: 'rect', role: 'dimension-ground', x: d.box.x - 2, y: d.box.y, w: d.box.w + 4, h: d.box.h, fill: style.ground, opacity: 0.88 });
   shapes.push(...figure(frame, d));
   return shapes;
@@ -32,10 +32,11 @@ function upright(x: number, from: number, to: number): string {
   return `M${px(x)},${px(from)}L${px(x)},${px(to)}`;
 }
 
-/** A filled head with its tip at y; direction 1 points up. */
-function head(x: number, y: number, direction: 1 | -1): string {
-  const base = px(y + direction * HEAD.length);
-  return `M${px(x)},${px(y)}L${px(x - HEAD.half)},${base}L${px(x + HEAD.half)},${base}Z`;
+/** A filled head with its tip at y, for a font size; a positive size points up, a negative one down. */
+function head(x: number, y: number, size: number): string {
+  const base = px(y + size * HEAD.length);
+  const half = Math.abs(size) * HEAD.half;
+  return `M${px(x)},${px(y)}L${px(x - half)},${base}L${px(x + half)},${base}Z`;
 }
 
 function figure(frame: Frame, d: PlacedDimension): Shape[] {
@@ -51,6 +52,6 @@ function figure(frame: Frame, d: PlacedDimension): Shape[] {
   // Two texts: the symbol's width differs between fonts, and the value must keep its place.
   return [
     { ...common, x, y: y + 1.0 * small, anchor: 'start', runs: d.symbol },
-    { ...common, x: x + runsWidth(d.symbol, small) + 0.4 * small, y: y + 1.0 * small, anchor: 'start', runs: [{ text: d.value }] },
+    { ...common, x: x + runsWidth(d.symbol, small) + SYMBOL_GAP * small, y: y + 1.0 * small, anchor: 'start', runs: [{ text: d.value }] },
   ];
 }

@@ -13,13 +13,12 @@ export function strip(frame: Frame): Shape[] {
     const left = Math.max(depth.edges[i], area.left);
     const right = Math.min(depth.edges[i + 1], area.right);
     const room = right - left - 6;
-    if (room < 6) return;
     const common = { kind: 'text', x: (left + right) / 2, anchor: 'middle', fill: style.ink } as const;
     const line = (n: number): number => area.bottom + 1.15 * text + (n * (frame.strip - 0.4 * text)) / 4;
     // A number where the name would lose its sense; the caption says which it is.
     const name = isNumbered(frame, i) ? String(i + 1) : layer.name;
     const rows: { runs: TextRun[]; size: number; bold?: boolean }[] = [
-      { runs: [{ text: fitted(name, 0.95 * text, room / BOLD) }], size: 0.95 * text, bold: true },
+      { runs: isNumbered(frame, i) ? whole([{ text: name }], small, right - left) : [{ text: fitted(name, 0.95 * text, room / BOLD) }], size: isNumbered(frame, i) ? small : 0.95 * text, bold: true },
       { runs: [{ text: fitted(materialText(layer), small, room) }], size: small },
       { runs: whole([{ text: lengthText(layer.thickness_nm) }], small, room), size: small },
       { runs: whole(dopingRuns(layer), small, room), size: small },
