@@ -40,54 +40,74 @@ export function junctionCapacitance(stack: Stack, profiles: Profiles, space: Spa
   const levelN = space.net[below] > 0 ? 1 : 0;
 
   const step = space.ranges[index][1];
-  const sides = Array.from({ length: below - above + 1 }, (_, k) => above + k);
-  const fine = movedCharge(stack, profiles, space, index, sides, levelN);
+  const answers = answersOf(stack, profiles, space, index, above, below);
+  const fine = movedCharge(profiles, step, answers, above, below, 1, levelN);
   // Meshes are halved ones: every other node is a mesh too, and from both the second-order rule gives a fourth-order figure.
-  const every = sides.filter((s) => (s - space.ranges[s <= step ? index : index + 1][0]) % 2 === 0);
-  if (!every.includes(step)) return fine;
-  const coarse = movedCharge(stack, profiles, space, index, every, levelN);
+  if ((step - above) % 2 !== 0) return fine;
+  const coarse = movedCharge(profiles, step, answers, above, below, 2, levelN);
   return fine === null || coarse === null ? fine : fine + (fine - coarse) / 3;
 }
 
-/** The linear problem on the given sides of nodes, both sides of the interface among them; the moved charge over dV, F/cm^2. */
-function movedCharge(stack: Stack, profiles: Profiles, space: SpaceCharge, index: number, sides: number[], levelN: number): number | null {
+/** Responses and permittivity (F/cm) of the sides `above` to `below` of the profiles [sides]. */
+interface Answers {
+  n: Float64Array;
+  p: Float64Array;
+  eps: Float64Array;
+}
+
+function answersOf(stack: Stack, profiles: Profiles, space: SpaceCharge, index: number, above: number, below: number): Answers {
+  const sides = below - above + 1;
+  const out: Answers = { n: new Float64Array(sides), p: new Float64Array(sides), eps: new Float64Array(sides) };
+  const step = space.ranges[index][1];
+  let uniform: LocalCharge | null = null;
+  for (let s = above; s <= below; s++) {
+    const l = s <= step ? index : index + 1;
+    const layer = stack.layers[l];
+    if (s === above || s === step + 1) uniform = isUniform(layer) ? localCharge(layer, 0, stack.temperature, stack.assumptions) : null;
+    const c = uniform ?? localCharge(layer, profiles.z[s] - profiles.z[space.ranges[l][0]], stack.temperature, stack.assumptions);
+    const { n, p } = responseAt(c, profiles.ec[s]);
+    out.n[s - above] = n;
+    out.p[s - above] = p;
+    out.eps[s - above] = c.bands.permittivity * EPSILON_0;
+  }
+  return out;
+}
+
+/** The linear problem on every `stride`-th node from `above` to `below`, both sides of the interface among them; the moved charge over dV, F/cm^2. */
+function movedCharge(profiles: Profiles, step: number, answers: Answers, above: number, below: number, stride: number, levelN: number): number | null {
   const levelP = 1 - levelN;
-  const nodes = sides.length - 1; // the interface stands in the profiles twice
+  const nodes = (step - above) / stride + Math.floor((below - step - 1) / stride) + 1; // the interface stands in the profiles twice
   const lower = new Float64Array(nodes);
   const diagonal = new Float64Array(nodes);
   const upper = new Float64Array(nodes);
   const psi = new Float64Array(nodes);
   const holes = new Float64Array(nodes);
-  const step = space.ranges[index][1];
-  let left: Response & { eps: number } = { n: 0, p: 0, eps: 0 };
-  let uniform: LocalCharge | null = null;
-  for (let k = 0; k < sides.length; k++) {
-    const s = sides[k];
-    const l = s <= step ? index : index + 1;
-    const layer = stack.layers[l];
-    if (k === 0 || s === step + 1) uniform = isUniform(layer) ? localCharge(layer, 0, stack.temperature, stack.assumptions) : null;
-    const c = uniform ?? localCharge(layer, profiles.z[s] - profiles.z[space.ranges[l][0]], stack.temperature, stack.assumptions);
-    const here = { ...responseAt(c, profiles.ec[s]), eps: c.bands.permittivity * EPSILON_0 };
-    if (k > 0 && s !== step + 1) {
-      const i = k - (s > step ? 1 : 0);
-      const h = profiles.z[s] - profiles.z[sides[k - 1]];
-      const conductance = (left.eps + here.eps) / (2 * h);
-      upper[i - 1] = lower[i] = -conductance;
-      const half = (ELEMENTARY_CHARGE * h) / 2;
-      for (const [at, r] of [[i - 1, left], [i, here]] as const) {
-        diagonal[at] += conductance + half * (r.n + r.p);
-        psi[at] += half * (r.n * levelN + r.p * levelP);
-        holes[at] += half * r.p;
-      }
-    }
-    left = here;
+  const { n, p, eps } = answers;
+  const add = (i: number, side: number, half: number): void => {
+    diagonal[i] += half * (n[side] + p[side]);
+    psi[i] += half * (n[side] * levelN + p[side] * levelP);
+    holes[i] += half * p[side];
+  };
+  let left = above;
+  for (let i = 1; i < nodes; i++) {
+    if (left === step) left = step + 1;
+    const s = left + stride;
+    const h = profiles.z[s] - profiles.z[left];
+    const conductance = (eps[left - above] + eps[s - above]) / (2 * h);
+    upper[i - 1] = lower[i] = -conductance;
+    diagonal[i - 1] += conductance;
+    diagonal[i] += conductance;
+    const half = (ELEMENTARY_CHARGE * h) / 2;
+    add(i - 1, left - above, half);
+    add(i, s - above, half);
+    left = s;
   }
-  // Both neutral sides follow their own majority.
+  // Both neutral sides follow their own majority: with the voltage counted so that the lower side takes it, 0 above and 1 below.
   const last = nodes - 1;
   upper[0] = lower[last] = 0;
   diagonal[0] = diagonal[last] = 1;
-  psi[0] = space.net[sides[0]] > 0 ? levelN : levelP;
-  psi[last] = space.net[sides[nodes]] > 0 ? levelN : levelP;
+  psi[0] = 0;
+  psi[last] = 1;
   const factors = new TridiagonalFactors(nodes);
   if (!factors.factor(lower, diagonal, upper)) return null;
   factors.solve(psi);

@@ -14,14 +14,17 @@ const SMALLEST_STEP = 1e-7;
 const MOST_VOLTS = 2;
 
 /**
- * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place.
+ * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place. On return the system's residual and density are
+ * those of `psi` when it converged.
+ *
+ * @param evaluated  residual and matrix in the system are already those of `psi`
  *
  * Steps are accepted by the natural monotonicity test on the same factors (Deuflhard, Numer. Math. 22, 289, 1974; Newton
  * Methods for Nonlinear Problems, 2004, algorithm NLEQ-RES/ERR). Should it stall, the problem's convexity gives a second way: the
  * residual is the gradient of a convex functional (charge never grows with psi), so a search on the directional derivative along a
  * Newton direction always makes progress (Bank and Rose, Numer. Math. 37, 279, 1981).
  */
-export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
+export function newton(system: PoissonSystem, psi: Float64Array, evaluated = false): NewtonResult {
   const n = psi.length;
   const step = new Float64Array(n);
   const next = new Float64Array(n);
@@ -30,7 +33,7 @@ export function newton(system: PoissonSystem, psi: Float64Array): NewtonResult {
   let lambda = 1;
   let lastUpdate = Infinity;
   let convex = false;
-  system.evaluate(psi, true);
+  if (!evaluated) system.evaluate(psi, true);
   while (updates < MOST_UPDATES) {
     if (!system.factor()) return { converged: false, updates, lastUpdate, reason: 'singular matrix' };
     for (let i = 0; i < n; i++) step[i] = -system.residual[i];

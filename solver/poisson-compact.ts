@@ -43,12 +43,13 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
   let share = ROW_SHARE;
   const solve = (on: Mesh, values: Float64Array, scheme: 'compact' | 'box'): Solved | null => {
     const system = new PoissonSystem(problem, on, scheme);
-    system.chooseRows(values);
-    let run = newton(system, values);
+    system.chooseRows(values, false);
+    let run = newton(system, values, true);
     updates += run.updates;
+    if (!run.converged) return null;
     // Rows were chosen at the guess; where the solution lies elsewhere, once more.
-    if (run.converged && system.chooseRows(values) > 0) {
-      run = newton(system, values);
+    if (system.chooseRows(values, true) > 0) {
+      run = newton(system, values, true);
       updates += run.updates;
       system.evaluate(values, true);
     }

@@ -135,17 +135,14 @@ export class PoissonSystem {
   /**
    * Chooses box rows where the compact ones would lose their signs at `psi` [nodes], V. Leaves residual and matrix of `psi`.
    *
-   * @returns number of rows whose kind changed
+   * @param charged  density and slope are already those of `psi`
+   * @returns number of layer ends whose rows changed
    */
-  chooseRows(psi: Float64Array): number {
-    if (this.scheme === 'box') {
-      this.evaluate(psi, true);
-      return 0;
-    }
-    this.charge(psi);
+  chooseRows(psi: Float64Array, charged: boolean): number {
+    if (!charged) this.charge(psi);
     let changed = 0;
     const { mesh, slope, permittivity, lumped } = this;
-    for (let l = 0; l < mesh.local.length; l++) {
+    for (let l = 0; this.scheme === 'compact' && l < mesh.local.length; l++) {
       const z = mesh.local[l];
       const m = z.length - 1;
       const s0 = mesh.first[l] + l;

@@ -54,10 +54,11 @@ export function compactDefects(z: Float64Array, rho: Float64Array, out: Float64A
   for (let k = 1; k + 1 < n; k++) {
     const h1 = z[k] - z[k - 1];
     const h2 = z[k + 1] - z[k];
-    const m1 = (h2 * h2 - h1 * h1) / 6;
-    const m2 = (h1 ** 3 + h2 ** 3) / 12;
-    const m3 = (h2 ** 4 - h1 ** 4) / 20;
-    const m4 = (h1 ** 5 + h2 ** 5) / 30;
+    const [a, b] = [h1 * h1, h2 * h2];
+    const m1 = (b - a) / 6;
+    const m2 = (a * h1 + b * h2) / 12;
+    const m3 = (b * b - a * a) / 20;
+    const m4 = (a * a * h1 + b * b * h2) / 30;
     // Moments of the hat with t (t + h1)(t - h2), and with that times (t - s), s the place of the fourth node.
     const cubic = m3 + (h1 - h2) * m2 - h1 * h2 * m1;
     const below = k + 2 < n;

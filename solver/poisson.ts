@@ -41,8 +41,8 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
   const warm = options.warmStart ? warmStart(problem, options.warmStart) : null;
   let updates = 0;
   if (problem.layers.every((layer) => layer.uniform)) {
-    for (const start of warm ? [warm, coldStart(problem)] : [coldStart(problem)]) {
-      const compact = solveByCompact(problem, start, goal);
+    for (const first of warm ? [warm, null] : [null]) {
+      const compact = solveByCompact(problem, first ?? coldStart(problem), goal);
       updates += compact.updates;
       if (compact.solution) {
         compact.solution.quality.newtonUpdates = updates;
