@@ -12,9 +12,30 @@ export interface HalfmarkEvents {
   'hm-choose': { kind: 'layer' | 'interface' | 'contact'; index: number } | null;
   /** a change of the view, not of the design: never undone */
   'hm-view': { change: Record<string, unknown> };
+  /** one of the page's own acts, from a button or a menu */
+  'hm-act': { act: PageAct };
+  /** another name for the open project */
+  'hm-rename': { name: string };
+  /** an act on one of the projects in the list, or on all of them */
+  'hm-project': ProjectAct;
+  /** open a starter as a project of its own */
+  'hm-starter': { id: string };
   /** something that the page should say: politely, or at once */
   'hm-say': { text: string; urgent?: boolean };
 }
+
+export type PageAct =
+  | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'about' | 'open-file'
+  /** stop the running solve */ | 'cancel'
+  /** solve once more */ | 'again'
+  /** after another tab saved the same project */ | 'keep-mine' | 'take-other';
+
+export type ProjectAct =
+  | { act: 'open' | 'copy' | 'bin' | 'restore' | 'delete'; id: string }
+  | { act: 'rename'; id: string; name: string }
+  | { act: 'new' | 'backup' }
+  | { act: 'restore-backup'; text: string }
+  | { act: 'rescue' | 'forget'; /** of a damaged record */ key: number };
 
 /** The one way an element speaks. */
 export function tell<K extends keyof HalfmarkEvents>(from: EventTarget, name: K, detail: HalfmarkEvents[K]): void {

@@ -1,0 +1,58 @@
+import { css } from 'lit';
+
+export const styles = css`
+  h2 {
+    font-size: 0.9375rem;
+    font-weight: 600;
+    margin: 0;
+  }
+  p {
+    margin: 0.2rem 0;
+  }
+  ul {
+    margin: 0.2rem 0;
+    padding-inline-start: 1.1rem;
+  }
+  li {
+    overflow-wrap: anywhere;
+  }
+  .trouble {
+    border: 1px solid var(--trouble);
+    border-inline-start-width: 5px;
+    border-radius: 2px;
+    padding: 0.4rem 0.7rem;
+    margin-bottom: 0.5rem;
+  }
+  .trouble h2::before {
+    content: '▲ ';
+    color: var(--trouble);
+  }
+  .place {
+    font-weight: 600;
+  }
+  .long {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 0.5rem;
+  }
+  progress {
+    width: 8rem;
+    accent-color: var(--choice);
+  }
+  summary {
+    cursor: pointer;
+    min-height: 24px;
+  }
+  .remark:empty {
+    margin: 0;
+    /* Stays in the accessibility tree: what is put in later is spoken. */
+    min-height: 0;
+  }
+  .remark {
+    color: var(--faint);
+  }
+  .urgent {
+    color: var(--trouble);
+  }
+`;
