@@ -60,24 +60,27 @@ function lowerNode(z: readonly number[], at: number): number {
 
 export interface ReadingPart {
   symbol: string;
-  text: string;
+  figure: string;
+  unit: string;
 }
 
 export function depthText(z_nm: number): string {
   return z_nm >= 1e4 ? `${figureText(z_nm / 1000, 4)} µm` : `${decimalText(z_nm, z_nm < 100 ? 2 : 1)} nm`;
 }
 
+const KV_PER_V = 1e-3;
+
 export function readingParts(r: Reading): ReadingPart[] {
   return [
-    { symbol: 'Ec − EF', text: `${decimalText(r.ec_minus_ef_eV)} eV` },
-    { symbol: 'EF − Ev', text: `${decimalText(r.ef_minus_ev_eV)} eV` },
-    { symbol: 'n', text: `${figureText(r.n_cm3)} cm⁻³` },
-    { symbol: 'p', text: `${figureText(r.p_cm3)} cm⁻³` },
-    { symbol: 'ψ', text: `${decimalText(r.potential_V)} V` },
-    { symbol: 'field', text: `${figureText(r.field_V_cm / 1000)} kV/cm` },
+    { symbol: 'Ec − EF', figure: decimalText(r.ec_minus_ef_eV), unit: 'eV' },
+    { symbol: 'EF − Ev', figure: decimalText(r.ef_minus_ev_eV), unit: 'eV' },
+    { symbol: 'n', figure: figureText(r.n_cm3), unit: 'cm⁻³' },
+    { symbol: 'p', figure: figureText(r.p_cm3), unit: 'cm⁻³' },
+    { symbol: 'ψ', figure: decimalText(r.potential_V), unit: 'V' },
+    { symbol: 'field', figure: figureText(r.field_V_cm * KV_PER_V), unit: 'kV/cm' },
   ];
 }
 
 export function readingSentence(r: Reading, layer: string): string {
-  return [`${depthText(r.z_nm)}, ${layer}`, ...readingParts(r).map((p) => `${p.symbol} ${p.text}`)].join('; ');
+  return [`${depthText(r.z_nm)}, ${layer}`, ...readingParts(r).map((p) => `${p.symbol} ${p.figure} ${p.unit}`)].join('; ');
 }

@@ -1,0 +1,163 @@
+import { css } from 'lit';
+
+export const styles = css`
+  .tools {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 4px 18px;
+    margin-bottom: 4px;
+    font-size: 0.8125rem;
+  }
+  .set {
+    display: inline-flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 3px;
+  }
+  .of {
+    color: var(--faint);
+    margin-inline-end: 2px;
+  }
+  .picture {
+    position: relative;
+  }
+  svg {
+    display: block;
+    width: 100%;
+    overflow: hidden;
+  }
+  .surface {
+    position: absolute;
+    inset: 0;
+    touch-action: pan-y;
+    cursor: crosshair;
+  }
+  .surface.held {
+    cursor: grabbing;
+  }
+  .surface.on-figure {
+    cursor: move;
+  }
+  .surface:focus-visible {
+    outline-offset: -2px;
+  }
+  .reading {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 2px 14px;
+    min-height: 1.4rem;
+    margin: 2px 0 0;
+    padding: 0;
+  }
+  .reading dt,
+  .reading dd {
+    display: inline;
+    margin: 0;
+    white-space: nowrap;
+  }
+  .reading dt {
+    color: var(--faint);
+  }
+  .reading .where {
+    font-weight: 600;
+    white-space: normal;
+    overflow-wrap: anywhere;
+  }
+  .hint {
+    color: var(--faint);
+    margin: 2px 0 0;
+    min-height: 1.4rem;
+  }
+  .empty {
+    display: grid;
+    place-content: center;
+    border: 1px dashed var(--edge);
+    color: var(--faint);
+    text-align: center;
+    padding: 16px;
+  }
+  .notice {
+    border-inline-start: 3px solid var(--trouble);
+    padding-inline-start: 8px;
+    margin: 0 0 6px;
+  }
+  .notice.late {
+    border-color: var(--choice);
+  }
+  .data p {
+    max-width: 70rem;
+    margin: 8px 0;
+  }
+  .scroll {
+    overflow: auto;
+    max-height: 22rem;
+    border-block: 1px solid var(--ink);
+  }
+  table {
+    border-collapse: collapse;
+  }
+  th,
+  td {
+    padding: 2px 10px;
+    text-align: start;
+    font-weight: 400;
+    white-space: nowrap;
+  }
+  thead th {
+    position: sticky;
+    top: 0;
+    background: var(--ground);
+    font-weight: 600;
+    vertical-align: bottom;
+  }
+  .figure {
+    text-align: end;
+  }
+  .unit {
+    display: block;
+    color: var(--faint);
+    font-weight: 400;
+  }
+  .dimensions {
+    border: 1px solid var(--line);
+    margin: 6px 0;
+    padding: 4px 10px 8px;
+  }
+  .dimensions legend {
+    color: var(--faint);
+    padding: 0 4px;
+  }
+  .dimensions ul {
+    list-style: none;
+    margin: 0 0 6px;
+    padding: 0;
+  }
+  .dimensions li {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 0 12px;
+    min-height: 28px;
+  }
+  .dimensions label {
+    display: inline-flex;
+    gap: 6px;
+    align-items: center;
+    min-width: 9rem;
+    min-height: 24px;
+  }
+  .dimensions input {
+    width: 16px;
+    height: 16px;
+    min-height: 0;
+    accent-color: var(--ink);
+  }
+  .meaning,
+  .none {
+    color: var(--faint);
+    margin: 0;
+  }
+  .moves {
+    margin-inline-start: auto;
+  }
+`;

@@ -1,0 +1,93 @@
+import { LitElement, html, type TemplateResult } from 'lit';
+import type { EnergyAxis } from '../../src/drawing/energy-axis.ts';
+import { drawRail } from '../../src/drawing/rail.ts';
+import type { StyleName } from '../../src/drawing/styles.ts';
+import type { Result } from '../../src/result/types.ts';
+import { drawn } from '../shared/drawn.ts';
+import { look } from '../shared/look.ts';
+import { styles } from './hm-rail.styles.ts';
+
+/** A page not laid out yet, px. */
+const LEAST_WIDTH = 60;
+
+let rails = 0;
+
+/**
+ * f(E), g(E) and their product at the depth that is read on the plate, on the plate's energy axis. While nothing is read it keeps the last depth, or shows the middle
+ * of the stack.
+ */
+export class HmRail extends LitElement {
+  static override styles = [look, styles];
+  static override properties = {
+    result: { attribute: false },
+    energy: { attribute: false },
+    height: { type: Number },
+    depth_nm: { attribute: false },
+    styleName: {},
+    stale: { type: Boolean, reflect: true },
+    width: { state: true },
+    dark: { state: true },
+  };
+
+  declare result: Result | null;
+  /** the plate's */ declare energy: EnergyAxis | null;
+  /** the plate's, px */ declare height: number;
+  /** null: nothing is read just now */ declare depth_nm: number | null;
+  /** style of the drawing; by default light or dark as the page */ declare styleName: StyleName | undefined;
+  declare stale: boolean;
+  declare private width: number;
+  declare private dark: boolean;
+
+  private kept_nm: number | null = null;
+  private readonly ids = `rail-${++rails}`;
+  private readonly watch = new ResizeObserver(([entry]) => (this.width = Math.round(entry.contentRect.width)));
+  private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
+  private readonly followDarkness = (): void => void (this.dark = this.darkness.matches);
+
+  constructor() {
+    super();
+    this.result = null;
+    this.energy = null;
+    this.height = 400;
+    this.depth_nm = null;
+    this.stale = false;
+    this.width = 0;
+    this.dark = false;
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.watch.observe(this);
+    this.followDarkness();
+    this.darkness.addEventListener('change', this.followDarkness);
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.watch.disconnect();
+    this.darkness.removeEventListener('change', this.followDarkness);
+  }
+
+  protected override willUpdate(): void {
+    if (this.depth_nm !== null) this.kept_nm = this.depth_nm;
+  }
+
+  override render(): TemplateResult {
+    const { result, energy } = this;
+    if (!result || !energy || this.width < LEAST_WIDTH) return html`<div class="empty">Occupancy at a depth stands here.</div>`;
+    const total = result.layers.reduce((sum, layer) => sum + layer.thickness_nm, 0);
+    // A depth kept from a thicker stack may lie outside of this one.
+    const depth = Math.min(this.kept_nm ?? total / 2, total);
+    const drawing = drawRail(result, depth, { width: this.width, height: this.height, energy, style: this.styleName ?? (this.dark ? 'dark' : 'light'), prefix: this.ids });
+    return html`<svg width=${drawing.width} height=${drawing.height} viewBox="0 0 ${drawing.width} ${drawing.height}" role="img" aria-label=${drawing.title} aria-describedby="words">${drawn(drawing)}</svg>
+      <p class="spoken" id="words">${drawing.description}</p>`;
+  }
+}
+
+customElements.define('hm-rail', HmRail);
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'hm-rail': HmRail;
+  }
+}
