@@ -1,9 +1,9 @@
 import { bisectRight, ticks as niceTicks } from 'd3-array';
 import type { Result } from '../result/types.ts';
 import { textWidth } from './glyph-widths.ts';
-import { layerZones } from './layer-zones.ts';
+import { depthRoom } from './depth-room.ts';
 
-/** true: nm are even. even: "even-handed", each layer gets room by the bending that it holds, see layer-zones.ts. */
+/** true: nm are even. even: "even-handed", each layer gets room by the bending that it holds, see depth-room.ts. */
 export type DepthMode = 'true' | 'even';
 
 export interface DepthAxis {
@@ -21,6 +21,8 @@ export interface DepthAxis {
 const LONGEST_IN_NM = 2000;
 /** Between two tick labels, of the font size. */
 const TICK_GAP = 0.9;
+/** Gap between two tick labels that gets another between them, of the font size. */
+const DIVIDED = 9;
 
 /**
  * @param options.range   px of the top and of the bottom of the window; the first must be the smaller
@@ -33,16 +35,16 @@ export function depthAxis(result: Result, options: { mode: DepthMode; range: [nu
   const edges_nm = layerEdges(result);
   const total = edges_nm[edges_nm.length - 1];
   const window = heldWindow(options.window, total);
-  const zones = mode === 'even' ? layerZones(result) : { z: [0, total], room: [0, 1] };
-  const start = piecewise(zones.z, zones.room, window[0]);
-  const span = piecewise(zones.z, zones.room, window[1]) - start;
+  const table = mode === 'even' ? depthRoom(result) : { z: [0, total], room: [0, 1] };
+  const start = piecewise(table.z, table.room, window[0]);
+  const span = piecewise(table.z, table.room, window[1]) - start;
   const scale = (range[1] - range[0]) / span;
-  const x = (z: number): number => range[0] + (piecewise(zones.z, zones.room, z) - start) * scale;
-  const depth = (at: number): number => piecewise(zones.room, zones.z, start + (at - range[0]) / scale);
+  const x = (z: number): number => range[0] + (piecewise(table.z, table.room, z) - start) * scale;
+  const depth = (at: number): number => piecewise(table.room, table.z, start + (at - range[0]) / scale);
   const inMicrometres = mode === 'true' && window[1] - window[0] > LONGEST_IN_NM;
   const title = mode === 'even' ? 'depth (nm), even-handed' : inMicrometres ? 'depth (µm)' : 'depth (nm)';
   const axis: DepthAxis = { mode, range, window, x, depth, edges: edges_nm.map(x), ticks: [], title };
-  axis.ticks = mode === 'even' ? evenTicks(axis, edges_nm, zones.z, textSize) : trueTicks(axis, inMicrometres, textSize);
+  axis.ticks = mode === 'even' ? evenTicks(axis, edges_nm, textSize) : trueTicks(axis, inMicrometres, textSize);
   return axis;
 }
 
@@ -75,24 +77,46 @@ function trueTicks(axis: DepthAxis, inMicrometres: boolean, textSize: number): D
   return niceTicks(from, to, wanted).map((value) => ({ x: axis.x(value * unit), label: plainNumber(value) }));
 }
 
-/** Boundaries first, then round depths of each zone where there is room: on an uneven axis the reader needs the figures most at the layers' ends. */
-function evenTicks(axis: DepthAxis, edges_nm: number[], zones: number[], textSize: number): DepthAxis['ticks'] {
+/**
+ * Ends and boundaries first, where the reader of an uneven axis needs the figures most; then, between each two, the roundest depth near the middle of the gap,
+ * as long as there is room.
+ */
+function evenTicks(axis: DepthAxis, edges_nm: number[], textSize: number): DepthAxis['ticks'] {
   const [from, to] = axis.window;
-  const inner: number[] = [];
-  for (let i = 0; i + 1 < zones.length; i++) {
-    const a = Math.max(zones[i], from);
-    const b = Math.min(zones[i + 1], to);
-    if (b > a) inner.push(...niceTicks(a, b, Math.floor((axis.x(b) - axis.x(a)) / (5.5 * textSize))));
-  }
-  const candidates = [from, to, ...edges_nm, ...inner].filter((z) => z >= from && z <= to);
-  const placed: { x: number; label: string; half: number }[] = [];
-  for (const z of candidates) {
+  const placed: { z: number; x: number; label: string; half: number }[] = [];
+  const place = (z: number): boolean => {
     const label = depthLabel(z);
     const half = textWidth(label, textSize) / 2;
     const x = axis.x(z);
-    if (placed.every((other) => Math.abs(other.x - x) >= other.half + half + TICK_GAP * textSize)) placed.push({ x, label, half });
-  }
+    if (placed.some((other) => Math.abs(other.x - x) < other.half + half + TICK_GAP * textSize)) return false;
+    placed.push({ z, x, label, half });
+    return true;
+  };
+  for (const z of [from, to, ...edges_nm]) if (z >= from && z <= to) place(z);
+  const divide = (a: number, b: number): void => {
+    const gap = axis.x(b) - axis.x(a);
+    if (gap < DIVIDED * textSize) return;
+    const z = roundest(axis.depth(axis.x(a) + 0.35 * gap), axis.depth(axis.x(b) - 0.35 * gap));
+    if (!place(z)) return;
+    divide(a, z);
+    divide(z, b);
+  };
+  const first = [...placed].sort((a, b) => a.x - b.x);
+  for (let i = 0; i + 1 < first.length; i++) divide(first[i].z, first[i + 1].z);
   return placed.sort((a, b) => a.x - b.x).map(({ x, label }) => ({ x, label }));
+}
+
+/** The number with the fewest digits between two depths: a multiple of the largest 1, 2 or 5 times a power of ten that has one there, nearest to their middle. */
+function roundest(low: number, high: number): number {
+  for (let power = Math.ceil(Math.log10(high)); power > -8; power--) {
+    for (const step of [5, 2, 1]) {
+      // Divided by a whole power where the step is below 1, so that 0.3 stays 0.3.
+      const multiple = (n: number): number => (power < 0 ? (n * step) / 10 ** -power : n * step * 10 ** power);
+      const n = Math.round((low + high) / 2 / multiple(1));
+      if (multiple(n) >= low && multiple(n) <= high) return multiple(n);
+    }
+  }
+  return (low + high) / 2;
 }
 
 /** nm, or um with its unit written where nm would have five digits and more. */

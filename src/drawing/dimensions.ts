@@ -1,7 +1,7 @@
 import type { ContactResult, JunctionResult, Result } from '../result/types.ts';
 import { energyText } from './figures.ts';
 import type { Frame } from './frame.ts';
-import { nodesOfLayers } from './layer-zones.ts';
+import { nodesOfLayers } from './layer-nodes.ts';
 import type { TextRun } from './shapes.ts';
 
 /** A measured distance between two energies, before it has found its place. */
@@ -20,6 +20,8 @@ export interface Dimension {
 
 /** Below this an offset or a bending is no more than the rounding of its inputs, eV. */
 const LEAST = 5e-4;
+/** Shorter lines cannot be read, px; zoomed in they come. */
+const SHORTEST = 4;
 /** How near to its neutral value Ec has to come, eV: a share of the built-in potential, held between two bounds. */
 const NEUTRAL = { share: 0.02, least: 1e-4, most: 0.01 };
 
@@ -37,7 +39,7 @@ export function dimensionsOf(frame: Frame): Dimension[] {
 
 function inView(frame: Frame, d: Dimension): boolean {
   const [low, high] = frame.energy.domain;
-  return d.low >= low && d.high <= high && d.places.length > 0;
+  return d.low >= low && d.high <= high && d.places.length > 0 && frame.energy.y(d.low) - frame.energy.y(d.high) >= SHORTEST;
 }
 
 function symbol(letter: string, sub: string, before = ''): TextRun[] {
@@ -86,6 +88,8 @@ function builtIn(frame: Frame, junction: JunctionResult, i: number): Dimension[]
   const ef = result.profile.ef_eV[0] ?? 0;
   const end = ef + below.ec_minus_ef_eV;
   const start = end + junction.builtin_V;
+  // In graded layers the figure refers to values at the interface, the neutral level to the middle: no line in the picture is that long.
+  if (Math.abs(ef + above.ec_minus_ef_eV + junction.delta_ec_eV - start) > NEUTRAL.most) return [];
   const startX = nearestAt(frame, i, ef + above.ec_minus_ef_eV, junction.builtin_V, 'last');
   const endX = nearestAt(frame, i + 1, end, junction.builtin_V, 'first');
   if (startX === null || endX === null) return [];

@@ -2,7 +2,7 @@ import { bisectLeft } from 'd3-array';
 import type { Result } from '../result/types.ts';
 import type { Points } from './curve.ts';
 import type { DepthAxis } from './depth-axis.ts';
-import { nodesOfLayers } from './layer-zones.ts';
+import { nodesOfLayers } from './layer-nodes.ts';
 
 /** The nodes of one layer that lie in the window, one more on each side where there is one. */
 export interface LayerSpan {

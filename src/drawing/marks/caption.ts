@@ -18,7 +18,7 @@ export function captionSentences(frame: Frame, shading: 'occupancy' | 'carriers'
   const sentences = [`${Number(result.conditions.temperature_K.toPrecision(4))} K, ${result.conditions.bias_V === 0 ? 'equilibrium' : `${result.conditions.bias_V} V`}.`];
   if (shading === 'occupancy') sentences.push('Tint of the bands: share of states filled, f(E).');
   if (shading === 'carriers') sentences.push('Tint of the bands: carriers per volume and energy; contours at 1/2, 1/10, 1/100, ... of the densest spot.');
-  if (depth.mode === 'even') sentences.push('Depth is even-handed: room by bending held.');
+  if (depth.mode === 'even') sentences.push('Depth is even-handed: each layer has room by the bending it holds.');
   const numbered = result.layers.flatMap((layer, i) => (isNumbered(frame, i) && isVisible(frame, i) ? [`${i + 1} ${layer.name}`] : []));
   if (numbered.length > 0) sentences.push(`Layers: ${numbered.join(', ')}.`);
   sentences.push('Estimates of an ideal one-dimensional structure, to be confirmed by measurement.');
