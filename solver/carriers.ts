@@ -1,4 +1,4 @@
-import { fermiHalf, fermiMinusHalf } from './fermi-integral.ts';
+import { fermiHalfInto } from './fermi-integral.ts';
 import { kaneIntegral } from './kane.ts';
 
 /** One carrier's density over its band's density of states, as a logarithm, with its logarithmic slope. */
@@ -6,6 +6,9 @@ export interface CarrierLog {
   /** ln F */ log: number;
   /** d ln F/d eta, 0..1 for a parabolic band */ slope: number;
 }
+
+/** F_1/2 and its derivative. */
+const pair = new Float64Array(2);
 
 /** Below this F_1/2 = exp(eta) to double precision: the next term is exp(2 eta)/2^1.5. */
 const NONDEGENERATE = -38;
@@ -29,7 +32,7 @@ export function carrierLog(eta: number, a: number, boltzmann: boolean, out: Carr
     out.slope = 1;
     return;
   }
-  const f = fermiHalf(eta);
-  out.log = Math.log(f);
-  out.slope = fermiMinusHalf(eta) / f;
+  fermiHalfInto(eta, pair);
+  out.log = Math.log(pair[0]);
+  out.slope = pair[1] / pair[0];
 }
