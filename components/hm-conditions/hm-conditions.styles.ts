@@ -5,7 +5,7 @@ export const styles = css`
     display: flex;
     flex-wrap: wrap;
     align-items: flex-end;
-    gap: 0.4rem 1.5rem;
+    gap: 0.4rem 1.25rem;
     border-bottom: 1px solid var(--ink);
     padding: 0.4rem 0 0.5rem;
   }
@@ -32,7 +32,7 @@ export const styles = css`
     background: linear-gradient(to top, var(--occupancy) 50%, transparent 50%);
   }
   .project {
-    --field-width: 12rem;
+    --field-width: 11.5rem;
   }
   .saving {
     grid-column: 1 / -1;
@@ -57,7 +57,7 @@ export const styles = css`
     margin: 0;
     font-size: 0.875rem;
     line-height: 1.2;
-    max-width: 9rem;
+    max-width: 8rem;
   }
   .bias span,
   .bias small {
@@ -74,8 +74,7 @@ export const styles = css`
     gap: 0.4rem;
     margin-inline-start: auto;
   }
-  .acts button,
-  select {
+  .acts button {
     min-height: 30px;
   }
   .pair {
@@ -83,11 +82,24 @@ export const styles = css`
     gap: 0.2rem;
     margin-inline-end: 0.4rem;
   }
-  .theme {
-    display: inline-flex;
+  fieldset {
+    border: 1px solid var(--ink);
+    border-radius: 2px;
+    padding: 0.5rem 0.75rem;
+    color: var(--ink);
+    background: var(--ground);
+  }
+  fieldset label {
+    display: flex;
     align-items: center;
-    gap: 0.3rem;
-    color: var(--faint);
+    gap: 0.5rem;
+    min-height: 28px;
+  }
+  fieldset input {
+    width: 18px;
+    height: 18px;
+    min-height: 0;
+    accent-color: var(--choice);
   }
   @media (max-width: 640px) {
     .who,
@@ -96,8 +108,7 @@ export const styles = css`
       width: 100%;
       margin: 0;
     }
-    .acts button,
-    select {
+    .acts button {
       min-height: 36px;
     }
   }

@@ -10,6 +10,12 @@ import type { Theme } from '../shared/theme.ts';
 import '../hm-field/hm-field.ts';
 import { styles } from './hm-conditions.styles.ts';
 
+const THEMES: [Theme, string][] = [
+  ['auto', 'as the system'],
+  ['light', 'light'],
+  ['dark', 'dark'],
+];
+
 /**
  * The head of the page: the project's name and how it stands with saving; the temperature with its range, and the bias; undo and redo; the ways to projects,
  * starters, files and exports; light or dark.
@@ -83,16 +89,19 @@ export class HmConditions extends LitElement {
         <button type="button" @click=${() => this.act('starters')}>Starters</button>
         <button type="button" @click=${() => this.act('open-file')}>Open file</button>
         <button type="button" @click=${() => this.act('leave')}>Take away</button>
-        <label class="theme">Light
-          <select .value=${this.theme} @change=${(e: Event) => tell(this, 'hm-view', { change: { theme: (e.target as HTMLSelectElement).value } })}>
-            <option value="auto" ?selected=${this.theme === 'auto'}>as the system</option>
-            <option value="light" ?selected=${this.theme === 'light'}>light</option>
-            <option value="dark" ?selected=${this.theme === 'dark'}>dark</option>
-          </select>
-        </label>
+        ${this.renderView()}
         <button type="button" @click=${() => this.act('about')}>About</button>
       </div>
     `;
+  }
+
+  /** A menu of its own over the page, closed by Escape or a press elsewhere. */
+  private renderView(): TemplateResult {
+    return html`<button type="button" popovertarget="view">View</button>
+      <fieldset id="view" popover>
+        <legend>Light or dark</legend>
+        ${THEMES.map(([theme, words]) => html`<label><input type="radio" name="theme" .checked=${this.theme === theme} @change=${() => tell(this, 'hm-view', { change: { theme } })} />${words}</label>`)}
+      </fieldset>`;
   }
 
   private renderConditions({ conditions }: Design): TemplateResult {
@@ -112,7 +121,7 @@ export class HmConditions extends LitElement {
     if (said !== null) {
       return html`<hm-field label="Bias" unit="V" .value=${bias ?? '0 V'} .complaint=${said} @field-accept=${(e: CustomEvent<string>) => tell(this, 'hm-edit', { next: setBias(this.design!, e.detail), label: 'bias' })}></hm-field>`;
     }
-    return html`<p class="bias"><span>Bias</span> <strong>${bias ?? '0 V'}</strong> <small>thermal equilibrium is what is solved</small></p>`;
+    return html`<p class="bias"><span>Bias</span> <strong>${bias ?? '0 V'}</strong> <small>only equilibrium is solved</small></p>`;
   }
 }
 

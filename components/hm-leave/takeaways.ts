@@ -1,5 +1,6 @@
 import type { Design } from '../../src/design/types.ts';
-import type { PlateOptions } from '../../src/drawing/plate.ts';
+import { writeDesign } from '../../src/design/write.ts';
+import { drawPlate, type PlateOptions } from '../../src/drawing/plate.ts';
 import type { StyleName } from '../../src/drawing/styles.ts';
 import type { Result } from '../../src/result/types.ts';
 
@@ -9,9 +10,9 @@ export type PlateLook = Partial<Pick<PlateOptions, 'depth' | 'window' | 'energyW
 /** px of the exported plate, for a slide of 16 to 9, and for one column of a journal. */
 const SIZES: Record<StyleName, [width: number, height: number]> = { light: [1280, 720], dark: [1280, 720], slide: [1280, 720], journal: [720, 540] };
 
-/** What makes the files is fetched when the first one is asked for: the page opens without it. */
+/** What makes the files, and is not on the page already, is fetched when the first one is asked for: the page opens without it. */
 export async function plateSvg(result: Result, look: PlateLook, style: StyleName): Promise<string> {
-  const [{ drawPlate }, { svgText }] = await Promise.all([import('../../src/drawing/plate.ts'), import('../../src/drawing/svg-text.ts')]);
+  const { svgText } = await import('../../src/drawing/svg-text.ts');
   const [width, height] = SIZES[style];
   // Dragged figures keep the places they were dragged to, which are px of the page's own plate.
   return svgText(drawPlate(result, { ...look, moved: {}, style, width, height, frame: 'full' }));
@@ -38,6 +39,5 @@ export async function tsvBlob(result: Result): Promise<Blob> {
 }
 
 export async function designBlob(design: Design): Promise<Blob> {
-  const { writeDesign } = await import('../../src/design/write.ts');
   return new Blob([writeDesign(design)], { type: 'application/json' });
 }

@@ -1,0 +1,363 @@
+import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
+import { blankDesign } from '../../src/state/blank-design.ts';
+import { setTitle } from '../../src/state/commands/index.ts';
+import { Session } from '../../src/state/session.ts';
+import { Keeper } from '../../src/storage/keeper.ts';
+import { ProjectStore } from '../../src/storage/project-store.ts';
+import { SolverClient } from '../../src/workers/client.ts';
+import { startSolveWorker } from '../../src/workers/start-worker.ts';
+import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
+import type { HmLeave } from '../hm-leave/hm-leave.ts';
+import type { HmPlate, PlateAxes } from '../hm-plate/hm-plate.ts';
+import type { PlateView } from '../hm-plate/plate-view.ts';
+import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
+import type { HalfmarkEvents, PageAct } from '../shared/events.ts';
+import { look } from '../shared/look.ts';
+import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
+import '../hm-about/hm-about.ts';
+import '../hm-conditions/hm-conditions.ts';
+import '../hm-dialog/hm-dialog.ts';
+import '../hm-leave/hm-leave.ts';
+import '../hm-ledger/hm-ledger.ts';
+import '../hm-messages/hm-messages.ts';
+import '../hm-plate/hm-plate.ts';
+import '../hm-projects/hm-projects.ts';
+import '../hm-rail/hm-rail.ts';
+import '../hm-starters/hm-starters.ts';
+import '../hm-strip/hm-strip.ts';
+import { choicesFor, fetchStarters, starterCards, type Choices } from './choices.ts';
+import { styles } from './hm-app.styles.ts';
+import { IncomingController } from './incoming.ts';
+import { pageKey } from './keys.ts';
+import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
+
+type On<K extends keyof HalfmarkEvents> = CustomEvent<HalfmarkEvents[K]>;
+/** Showing, or about to show: methods that every dialog of the page has. */
+type Showing = HTMLElement & { show(): void };
+
+/** A result that is stale for less than this is not dimmed: while something is dragged the next one is already on its way, ms. */
+const DIM_AFTER_MS = 150;
+
+/**
+ * The page. It alone knows the open session, the store of projects and the solver; every other element gets values and tells wishes.
+ *
+ * @attr database  name of the browser's database; tests give their own
+ */
+export class HmApp extends LitElement {
+  static override styles = [look, styles];
+  static override properties = {
+    database: {},
+    ready: { state: true },
+    axes: { state: true },
+    choices: { state: true },
+    remark: { state: true },
+    dim: { state: true },
+    theme: { state: true },
+    regardless: { state: true },
+  };
+
+  declare database: string;
+  /** a project is on the page */ declare private ready: boolean;
+  /** of the plate, for the rail and the strip */ declare private axes: PlateAxes | null;
+  declare private choices: Choices;
+  declare private remark: HalfmarkEvents['hm-say'] | null;
+  declare private dim: boolean;
+  declare private theme: Theme;
+  /** what was asked for and waits, because something is not saved */ declare private regardless: (() => Promise<DeskOutcome>) | null;
+
+  private readonly solver = new SolverClient(startSolveWorker);
+  private readonly session = new Session(blankDesign(''), (design) => this.solver.solve(design));
+  private store!: ProjectStore;
+  private keeper!: Keeper;
+  private desk!: ProjectDesk;
+  private dimTimer: ReturnType<typeof setTimeout> | undefined;
+  private customShown: unknown = this;
+  private failed = false;
+  private readonly incoming = new IncomingController(this, (text) => void this.settle(this.desk.take(text)), (text) => this.say(text, true));
+  private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
+  private readonly redraw = (): void => this.requestUpdate();
+  private readonly hide = (): void => void (document.visibilityState === 'hidden' && this.ready && void this.keeper.flush());
+
+  constructor() {
+    super();
+    this.database = 'halfmark';
+    this.ready = false;
+    this.axes = null;
+    this.choices = { materials: [], dopants: [], metals: [] };
+    this.remark = null;
+    this.dim = false;
+    this.theme = readTheme();
+    this.regardless = null;
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    setTheme(this.theme);
+    this.store = new ProjectStore((moment) => this.storeSays(moment), this.database);
+    this.keeper = new Keeper(this.session, this.store, this.database);
+    this.desk = new ProjectDesk(this.store, this.keeper);
+    for (const what of ['design', 'view', 'moment']) this.session.addEventListener(what, this.redraw);
+    this.session.addEventListener('findings', () => this.found());
+    for (const what of ['project', 'saving']) this.keeper.addEventListener(what, this.redraw);
+    this.darkness.addEventListener('change', this.redraw);
+    document.addEventListener('visibilitychange', this.hide);
+    addEventListener('pagehide', this.hide);
+    // Before any element sees the key: fields keep keys to themselves.
+    addEventListener('keydown', this.key, { capture: true });
+    void this.start();
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.darkness.removeEventListener('change', this.redraw);
+    document.removeEventListener('visibilitychange', this.hide);
+    removeEventListener('pagehide', this.hide);
+    removeEventListener('keydown', this.key, { capture: true });
+    clearTimeout(this.dimTimer);
+    this.keeper.close();
+    this.solver.close();
+    void this.store.close();
+  }
+
+  private async start(): Promise<void> {
+    const opened = await this.keeper.openLast();
+    if (opened.ok) {
+      if (opened.recovered) this.say('Changes that the last visit had no time to save were taken up; undo takes them back.');
+    } else {
+      // An empty page is no welcome.
+      const [first] = await fetchStarters();
+      await this.keeper.create(first.title, first.design);
+    }
+    this.ready = true;
+  }
+
+  protected override willUpdate(_: PropertyValues): void {
+    const { custom } = this.session.design;
+    if (!this.ready || custom === this.customShown) return;
+    this.customShown = custom;
+    void choicesFor(custom).then((choices) => (this.choices = choices));
+  }
+
+  protected override updated(): void {
+    // One energy axis: the rail's picture begins where the plate's does.
+    const plate = this.renderRoot.querySelector<HmPlate>('hm-plate');
+    const rail = this.renderRoot.querySelector<HTMLElement>('hm-rail');
+    const picture = plate?.renderRoot?.querySelector('svg');
+    if (!plate || !rail || !picture) return;
+    const beside = Math.abs(plate.getBoundingClientRect().top - rail.parentElement!.getBoundingClientRect().top) < 1;
+    rail.style.marginTop = beside ? `${picture.getBoundingClientRect().top - plate.getBoundingClientRect().top}px` : '0';
+  }
+
+  // What the page hears.
+
+  private found(): void {
+    const { status, stale, refusal, complaints } = this.session.findings;
+    clearTimeout(this.dimTimer);
+    if (!stale) this.dim = false;
+    else if (status === 'error') this.dim = true;
+    else this.dimTimer = setTimeout(() => (this.dim = true), DIM_AFTER_MS);
+    const fails = refusal !== null || complaints.length > 0;
+    if (status === 'error' && !this.failed) this.say('The design has no result as it stands; the reason is above the plate.');
+    if (status === 'complete' && this.failed) this.say('Solved.');
+    if (status !== 'pending') this.failed = fails;
+    this.requestUpdate();
+  }
+
+  private storeSays(moment: 'blocked' | 'blocking' | 'terminated'): void {
+    const sentence = {
+      blocked: 'An older version of this page is open in another tab and holds the projects. Close that tab, and this one goes on.',
+      blocking: 'A newer version of this page was opened in another tab. Reload this one to go on saving; what is on it is still here.',
+      terminated: 'The browser cut the connection to its storage. Saving is tried again at the next change.',
+    }[moment];
+    this.say(sentence, true);
+  }
+
+  private say(text: string, urgent = false): void {
+    // An equal sentence is spoken only if the region changes.
+    this.remark = { text: this.remark?.text === text ? `${text} ` : text, urgent };
+  }
+
+  private show(name: string): void {
+    this.renderRoot.querySelector<Showing>(name)!.show();
+  }
+
+  private async settle(work: Promise<DeskOutcome>): Promise<void> {
+    const outcome = await work;
+    this.regardless = outcome.regardless ?? null;
+    if (this.regardless !== null) return void this.renderRoot.querySelector<HmDialog>('#unsaved')!.show();
+    if (outcome.opened) {
+      const projects = this.renderRoot.querySelector('hm-projects');
+      projects?.close();
+    }
+    this.say(outcome.said, outcome.urgent);
+  }
+
+  private readonly key = (event: KeyboardEvent): void => {
+    const asked = pageKey(event);
+    if (asked === null || !this.ready) return;
+    event.preventDefault();
+    event.stopPropagation();
+    if (asked === 'save-design') void this.renderRoot.querySelector<HmLeave>('hm-leave')!.saveDesign().then((said) => this.say(said));
+    else this.act(asked);
+  };
+
+  private act(act: PageAct): void {
+    switch (act) {
+      case 'undo':
+      case 'redo': {
+        const label = this.session[act]();
+        return this.say(label === null ? `Nothing to ${act}.` : `${act === 'undo' ? 'Taken back' : 'Done again'}: ${label}.`);
+      }
+      case 'projects':
+        void this.desk.look().then(() => this.requestUpdate(), () => this.say('The list of projects cannot be read.', true));
+        return this.show('hm-projects');
+      case 'starters':
+        void fetchStarters().then((starters) => (this.renderRoot.querySelector('hm-starters')!.starters = starterCards(starters)));
+        return this.show('hm-starters');
+      case 'leave':
+        return this.show('hm-leave');
+      case 'about':
+        return this.show('hm-about');
+      case 'open-file':
+        return this.incoming.pick();
+      case 'cancel':
+        return this.solver.cancel();
+      case 'again':
+        return this.session.askAgain();
+      case 'keep-mine':
+        return void this.keeper.keepMineAsCopy().then(() => this.say(`Kept as ${this.keeper.project.name}.`), () => this.say('The copy could not be saved: take the design away as a file.', true));
+      case 'take-other':
+        return void this.keeper.takeTheOther().then((opened) => this.say(opened.ok ? 'This is what the other tab saved.' : opened.why, !opened.ok));
+    }
+  }
+
+  private edit({ detail }: On<'hm-edit'>): void {
+    this.session.edit(detail.next, detail.label, detail.join);
+  }
+
+  private view({ detail }: On<'hm-view'>): void {
+    const { theme, workings: _, ...change } = detail.change;
+    if (isTheme(theme)) {
+      this.theme = theme;
+      setTheme(theme);
+    }
+    if (Object.keys(change).length > 0) this.session.changeView(change);
+  }
+
+  private rename({ detail }: On<'hm-rename'>): void {
+    void this.keeper.rename(detail.name);
+    this.session.edit(setTitle(this.session.design, detail.name.trim()), 'title');
+  }
+
+  private async starter({ detail }: On<'hm-starter'>): Promise<void> {
+    const starter = (await fetchStarters()).find(({ id }) => id === detail.id);
+    if (starter !== undefined) await this.settle(this.desk.open(starter.title, starter.design));
+  }
+
+  private async project({ detail }: On<'hm-project'>): Promise<void> {
+    await this.settle(this.desk.act(detail));
+    this.requestUpdate();
+  }
+
+  private letGo(): void {
+    const { regardless } = this;
+    this.renderRoot.querySelector<HmDialog>('#unsaved')!.close();
+    if (regardless !== null) void this.settle(regardless());
+  }
+
+  override render(): TemplateResult {
+    const { session, keeper } = this;
+    return html`<div
+      class="page"
+      @hm-edit=${this.edit}
+      @hm-view=${this.view}
+      @hm-act=${({ detail }: On<'hm-act'>) => this.act(detail.act)}
+      @hm-depth=${({ detail }: On<'hm-depth'>) => session.changeMoment(detail)}
+      @hm-choose=${({ detail }: On<'hm-choose'>) => session.changeMoment({ chosen: detail })}
+      @hm-say=${({ detail }: On<'hm-say'>) => this.say(detail.text, detail.urgent)}
+      @hm-rename=${this.rename}
+      @hm-starter=${this.starter}
+      @hm-project=${this.project}
+    >
+      <header>
+        <hm-conditions
+          .project=${keeper?.project.name ?? ''}
+          .design=${this.ready ? session.design : null}
+          .complaints=${session.findings.complaints}
+          .saving=${keeper?.saving ?? { kind: 'saved' }}
+          .undoLabel=${session.undoLabel}
+          .redoLabel=${session.redoLabel}
+          .theme=${this.theme}
+        ></hm-conditions>
+      </header>
+      <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remark} .layers=${session.design.layers.map((layer) => layer.name)}></hm-messages>
+      ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${this.renderDialogs()}
+      ${this.incoming.over ? html`<p class="drop">Let go to open the file</p>` : nothing}
+    </div>`;
+  }
+
+  private renderWork(): TemplateResult {
+    const { session, axes, choices } = this;
+    const { result, status } = session.findings;
+    const { chosen, depth_nm } = session.moment;
+    const view = session.view as PlateView & { ledger?: LedgerView };
+    const style = isDark(this.theme) ? 'dark' : 'light';
+    return html`<main>
+      <div class="diagram">
+        <hm-plate
+          .result=${result}
+          .view=${{ ...view, style }}
+          .stale=${this.dim}
+          .notice=${status === 'error' ? 'This design cannot be solved as it stands.' : null}
+          .depth_nm=${depth_nm}
+          @plate-drawn=${({ detail }: CustomEvent<PlateAxes>) => (this.axes = detail)}
+        ></hm-plate>
+      </div>
+      <div class="beside"><hm-rail .result=${result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${this.dim}></hm-rail></div>
+      <div class="under">
+        <h2 class="spoken">Layer stack</h2>
+        <hm-strip
+          .design=${session.design}
+          .result=${result}
+          .axis=${(axes?.depth ?? null) as DepthAxis | null}
+          .chosen=${chosen}
+          .complaints=${session.findings.complaints}
+          .materials=${choices.materials}
+          .dopants=${choices.dopants}
+          .metals=${choices.metals}
+        ></hm-strip>
+      </div>
+      <div class="figures">
+        <h2 class="spoken">Ledger</h2>
+        <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.dim}></hm-ledger>
+      </div>
+    </main>`;
+  }
+
+  private renderDialogs(): TemplateResult {
+    const { session, keeper, desk } = this;
+    const { result, stale } = session.findings;
+    return html`
+      <hm-projects .entries=${desk?.entries ?? []} .damaged=${desk?.damaged ?? []} .openId=${keeper?.project.id ?? null} .remark=${this.remark?.text ?? ''}></hm-projects>
+      <hm-starters></hm-starters>
+      <hm-leave .design=${session.design} .result=${result} .stale=${stale} .plateLook=${session.view as PlateView}></hm-leave>
+      <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>
+      <hm-dialog id="unsaved" heading="Not saved" @hm-closed=${() => (this.regardless = null)}>
+        <p>What is on this page could not be saved. Opening another project now would lose it.</p>
+        <p class="row">
+          <button type="button" @click=${() => void this.renderRoot.querySelector<HmLeave>('hm-leave')!.saveDesign().then((said) => this.say(said))}>Take it away as a file</button>
+          <button type="button" @click=${this.letGo}>Open the other and lose it</button>
+        </p>
+      </hm-dialog>
+    `;
+  }
+}
+
+customElements.define('hm-app', HmApp);
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'hm-app': HmApp;
+  }
+}

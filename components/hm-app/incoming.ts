@@ -1,0 +1,93 @@
+import type { ReactiveController, ReactiveControllerHost } from 'lit';
+
+/** A text that came to the page, and what it came as. */
+export interface Incoming {
+  text: string;
+  /** name of the file; empty for a text that was pasted */ name: string;
+}
+
+/** Files above this are not even read: the reader refuses them anyway. Bytes. */
+const LARGEST = 50e6;
+
+/**
+ * Files dropped on the page, texts pasted into it (not into a field), and files chosen by a picker.
+ */
+export class IncomingController implements ReactiveController {
+  readonly #host: ReactiveControllerHost;
+  readonly #take: (incoming: Incoming) => void;
+  readonly #refuse: (sentence: string) => void;
+  /** something is being dragged over the page */ over = false;
+
+  constructor(host: ReactiveControllerHost, take: (incoming: Incoming) => void, refuse: (sentence: string) => void) {
+    this.#host = host;
+    this.#take = take;
+    this.#refuse = refuse;
+    host.addController(this);
+  }
+
+  hostConnected(): void {
+    addEventListener('dragover', this.#dragOver);
+    addEventListener('dragleave', this.#dragLeave);
+    addEventListener('drop', this.#drop);
+    addEventListener('paste', this.#paste);
+  }
+
+  hostDisconnected(): void {
+    removeEventListener('dragover', this.#dragOver);
+    removeEventListener('dragleave', this.#dragLeave);
+    removeEventListener('drop', this.#drop);
+    removeEventListener('paste', this.#paste);
+  }
+
+  /** Lets the person pick a file. */
+  pick(): void {
+    const input = document.createElement('input');
+    input.type = 'file';
+    input.accept = '.json,application/json';
+    input.addEventListener('change', () => void this.#read(input.files?.[0]));
+    input.click();
+  }
+
+  readonly #dragOver = (event: DragEvent): void => {
+    if (!event.dataTransfer?.types.includes('Files')) return;
+    event.preventDefault();
+    if (!this.over) {
+      this.over = true;
+      this.#host.requestUpdate();
+    }
+  };
+
+  readonly #dragLeave = (event: DragEvent): void => {
+    // The pointer left the window, not just one element for the next.
+    if (event.relatedTarget !== null) return;
+    this.over = false;
+    this.#host.requestUpdate();
+  };
+
+  readonly #drop = (event: DragEvent): void => {
+    this.over = false;
+    this.#host.requestUpdate();
+    const file = event.dataTransfer?.files[0];
+    if (file === undefined) return;
+    event.preventDefault();
+    void this.#read(file);
+  };
+
+  readonly #paste = (event: ClipboardEvent): void => {
+    const target = event.composedPath()[0];
+    if (target instanceof HTMLInputElement || target instanceof HTMLTextAreaElement) return;
+    const text = event.clipboardData?.getData('text/plain') ?? '';
+    // Anything else on the clipboard was meant for another place.
+    if (text.trimStart().startsWith('{')) this.#take({ text, name: '' });
+  };
+
+  async #read(file: File | undefined): Promise<void> {
+    if (file === undefined) return;
+    if (file.size > LARGEST) return this.#refuse(`${file.name} has ${Math.round(file.size / 1e6)} MB: that is no design and no backup.`);
+    try {
+      this.#take({ text: await file.text(), name: file.name });
+    } catch (error) {
+      this.#refuse(`${file.name} could not be read (${error instanceof Error ? error.message : String(error)}).`);
+    }
+  }
+}
