@@ -28,6 +28,8 @@ try {
       { name: 'prefers-reduced-motion', value: 'reduce' },
     ]);
     await page.goto(url, { waitUntil: 'networkidle0' });
+    // The diagram comes from a worker, after the page is quiet on a slow machine.
+    await page.waitForFunction(() => document.querySelector('hm-app')?.shadowRoot?.querySelector('hm-plate')?.shadowRoot?.querySelector('svg path'));
     await page.evaluate(async () => {
       await document.fonts.ready;
       await new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done)));
