@@ -6,7 +6,7 @@ const EVEN_SHARE = 0.5;
 /** Most of a layer's room that is dealt out by its field instead of its length. */
 const FIELD_SHARE = 0.6;
 /** A layer that bends by this much, V, gets half of FIELD_SHARE: what bends less is drawn to scale. */
-const SLIGHT = 1e-3;
+const SLIGHT = 0.01;
 
 /** Depths, nm, and the room used up to each of them, 0..1. Both rise strictly; straight in between. */
 export interface DepthRoom {

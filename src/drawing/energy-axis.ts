@@ -54,20 +54,20 @@ function ownDomain(result: Result, vacuum: boolean): [number, number] {
   let [low, high] = [Infinity, -Infinity];
   let [lowest, highest] = [Infinity, -Infinity];
   for (let i = 0; i < layer.length; i++) {
+    // A node without a value does not count.
+    if (!Number.isFinite(ec_eV[i] + ev_eV[i] + ef_eV[i])) continue;
     lowest = Math.min(lowest, ev_eV[i]);
     highest = Math.max(highest, ec_eV[i]);
-    low = Math.min(low, ef_eV[i]);
-    high = Math.max(high, ef_eV[i]);
-    if (result.layers[layer[i]].insulator) continue;
-    low = Math.min(low, ev_eV[i]);
-    high = Math.max(high, ec_eV[i]);
+    const insulator = result.layers[layer[i]].insulator;
+    low = Math.min(low, ef_eV[i], insulator ? Infinity : ev_eV[i]);
+    high = Math.max(high, ef_eV[i], insulator ? -Infinity : ec_eV[i]);
   }
-  const span = high - low || highest - lowest || 1;
+  if (!(highest > lowest)) throw new RangeError('no energy window: the profile has no band edges');
+  const span = high - low || highest - lowest;
   // An oxide's 9 eV gap would press the semiconductor's bands together: its edges may run out of the picture.
   low = Math.max(lowest, low - INSULATOR_STRETCH.down * span);
   high = Math.min(highest, high + INSULATOR_STRETCH.up * span);
-  if (vacuum) for (const e of vacuum_eV) high = Math.max(high, e);
-  for (const e of ef_eV) [low, high] = [Math.min(low, e), Math.max(high, e)];
-  const room = MARGIN * (high - low || 1);
+  if (vacuum) for (const e of vacuum_eV) if (e > high) high = e;
+  const room = MARGIN * (high - low);
   return [low - room, high + room];
 }
