@@ -41,7 +41,8 @@ export const styles = css`
     display: block;
     color: var(--trouble);
     font-size: 0.8125rem;
-    max-width: 22rem;
+    width: 0;
+    min-width: max(100%, 15rem);
   }
   .complaint::before {
     content: '▲ ';

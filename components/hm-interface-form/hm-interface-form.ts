@@ -40,7 +40,7 @@ export class HmInterfaceForm extends LitElement {
     const place = this.design.interfaces?.findIndex((row) => row.above === above.name) ?? -1;
     const row = place < 0 ? undefined : this.design.interfaces![place];
     const path = `interfaces[${place}]`;
-    return html`<div class="row">
+    return html`<div class="row wide">
       ${FIELDS.map((f) => html`<hm-field .label=${f.label} .value=${row?.[f.key] ?? ''} .unit=${f.unit} .hint=${f.hint} .complaint=${complaintAt(this.complaints, `${path}.${f.key}`)} @field-accept=${(e: CustomEvent<string>) => this.accept(f.key, f.label, e.detail)}></hm-field>`)}
       ${complaintsWithin(this.complaints, path, FIELDS.map((f) => `${path}.${f.key}`)).map((text) => html`<span class="complaint">${text}</span>`)}
     </div>`;

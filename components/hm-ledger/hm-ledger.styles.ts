@@ -78,7 +78,7 @@ export const styles = css`
     overflow-wrap: anywhere;
   }
   tbody th {
-    min-width: 6rem;
+    min-width: 8.5rem;
   }
   tbody tr + tr > * {
     border-top: 1px solid var(--line);
@@ -89,8 +89,17 @@ export const styles = css`
   tbody tr.chosen th {
     box-shadow: inset 3px 0 0 var(--choice);
   }
+  thead th.figure {
+    white-space: normal;
+    min-width: 4.5rem;
+  }
+  thead th.figure button {
+    text-align: end;
+  }
+  th.words:not(:first-child),
   td.words {
-    min-width: 7rem;
+    min-width: 9rem;
+    padding-inline-start: 18px;
   }
   td span {
     display: block;
@@ -149,6 +158,9 @@ export const styles = css`
     margin: 0;
   }
   @media (max-width: 40rem) {
+    tbody th {
+      min-width: 5rem;
+    }
     th:first-child {
       max-width: 8rem;
     }

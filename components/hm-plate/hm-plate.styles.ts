@@ -18,8 +18,28 @@ export const styles = css`
     color: var(--faint);
     margin-inline-end: 2px;
   }
+  .beside {
+    display: grid;
+    grid-template-columns: minmax(0, 1fr) auto;
+    gap: 8px;
+    align-items: start;
+  }
   .picture {
     position: relative;
+  }
+  ::slotted([slot='rail']) {
+    width: var(--hm-rail-width, 13rem);
+  }
+  .empty {
+    min-height: 18rem;
+  }
+  @media (max-width: 48rem) {
+    .beside {
+      grid-template-columns: minmax(0, 1fr);
+    }
+    ::slotted([slot='rail']) {
+      width: auto;
+    }
   }
   svg {
     display: block;
@@ -49,14 +69,11 @@ export const styles = css`
     margin: 2px 0 0;
     padding: 0;
   }
-  .reading dt,
-  .reading dd {
-    display: inline;
-    margin: 0;
-    white-space: nowrap;
-  }
-  .reading dt {
+  .symbol {
     color: var(--faint);
+  }
+  .part {
+    white-space: nowrap;
   }
   .reading .where {
     font-weight: 600;

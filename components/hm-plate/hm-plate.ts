@@ -31,6 +31,7 @@ let plates = 0;
  * The band diagram. The pointer or the arrow keys read it at a depth; dragging, the wheel (with Ctrl, or over an axis) and the keys + − 0 look at a part of it;
  * figures of dimension lines are dragged, put away and put back.
  *
+ * @slot rail  stands beside the picture, its top in line with the picture's; below it where there is no room
  * @fires hm-depth     the reading cursor moved; null when the pointer left
  * @fires hm-view      { change } with keys of PlateView
  * @fires plate-drawn  detail PlateAxes, does not bubble: the axes have changed; told of drawings, not of acts, for the strip and the rail to stand in line
@@ -85,7 +86,7 @@ export class HmPlate extends LitElement {
 
   override connectedCallback(): void {
     super.connectedCallback();
-    this.watch.observe(this);
+    this.watchFrame();
     this.followDarkness();
     this.darkness.addEventListener('change', this.followDarkness);
   }
@@ -94,6 +95,15 @@ export class HmPlate extends LitElement {
     super.disconnectedCallback();
     this.watch.disconnect();
     this.darkness.removeEventListener('change', this.followDarkness);
+  }
+
+  protected override firstUpdated(): void {
+    this.watchFrame();
+  }
+
+  private watchFrame(): void {
+    const frame = this.renderRoot?.querySelector('.frame');
+    if (frame) this.watch.observe(frame);
   }
 
   /** Of the picture as it stands; null while there is none. */
@@ -132,6 +142,7 @@ export class HmPlate extends LitElement {
 
   override render(): TemplateResult {
     const { plate, result } = this;
+    const reading = result && this.depth_nm !== null ? readingAt(result, this.depth_nm) : null;
     const input: ToolsInput = {
       view: this.view, dimensions: plate?.dimensions ?? [], open: this.open, zoomedIn: this.view.window !== undefined || this.view.energyWindow !== undefined,
       change: (change) => this.change(change), zoom: (factor) => this.zoom(factor), whole: () => this.whole(), toggle: (panel) => (this.open = { ...this.open, [panel]: !this.open[panel] }),
@@ -140,7 +151,11 @@ export class HmPlate extends LitElement {
       ${result ? tools(input) : nothing}
       ${this.renderNotice()}
       ${this.open.dimensions && result ? dimensionPanel(input) : nothing}
-      ${plate && result ? this.renderPicture(plate, result) : html`<div class="empty">${result ? '' : 'No band diagram yet: it is drawn as soon as the stack is solved.'}</div>`}
+      <div class="beside">
+        <div class="frame">${plate && result ? this.renderPicture(plate, result, reading) : html`<div class="empty">${result ? '' : 'No band diagram yet: it is drawn as soon as the stack is solved.'}</div>`}</div>
+        <slot name="rail"></slot>
+      </div>
+      ${plate && result ? this.renderReading(result, reading) : nothing}
       ${this.open.table && plate && result ? plateTable(result, plate.axes.depth, plate.description) : nothing}
     `;
   }
@@ -150,8 +165,7 @@ export class HmPlate extends LitElement {
     return nothing;
   }
 
-  private renderPicture(plate: Plate, result: Result): TemplateResult {
-    const reading = this.depth_nm === null ? null : readingAt(result, this.depth_nm);
+  private renderPicture(plate: Plate, result: Result, reading: Reading | null): TemplateResult {
     const words = reading ? readingSentence(reading, result.layers[reading.layer].name) : 'not reading; press an arrow key';
     return html`<div class="picture" @pointerleave=${this.pointerLeft}>
         <svg width=${plate.width} height=${plate.height} viewBox="0 0 ${plate.width} ${plate.height}" role="img" aria-label=${plate.title} aria-describedby="words">
@@ -176,10 +190,15 @@ export class HmPlate extends LitElement {
           @pointercancel=${this.pointerUp}
         ></div>
       </div>
-      <p class="spoken" id="words">${plate.description}</p>
-      ${reading
-        ? html`<dl class="reading"><dd class="where">${depthText(reading.z_nm)} in ${result.layers[reading.layer].name}</dd>${readingParts(reading).map((p) => html`<div><dt>${p.symbol}</dt> <dd>${p.figure} ${p.unit}</dd></div>`)}</dl>`
-        : html`<p class="hint">Point at a depth, or press an arrow key on the picture, to read the figures there.</p>`}`;
+      <p class="spoken" id="words">${plate.description}</p>`;
+  }
+
+  private renderReading(result: Result, reading: Reading | null): TemplateResult {
+    if (!reading) return html`<p class="hint">Point at a depth, or press an arrow key on the picture, to read the figures there.</p>`;
+    return html`<p class="reading" aria-hidden="true">
+      <span class="where">${depthText(reading.z_nm)} in ${result.layers[reading.layer].name}</span>
+      ${readingParts(reading).map((p) => html`<span class="part"><span class="symbol">${p.symbol}</span> ${p.figure} ${p.unit}</span>`)}
+    </p>`;
   }
 
   /** The reading cursor: an upright line, with a ring on each band edge. */

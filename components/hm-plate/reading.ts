@@ -1,4 +1,4 @@
-import { decimalText, figureText } from '../../src/result/figure-text.ts';
+import { decimalText, fieldText, figureText } from '../../src/result/figure-text.ts';
 import type { ProfileResult, Result } from '../../src/result/types.ts';
 
 /** What the diagram says at one depth. Energies eV, densities cm^-3. */
@@ -68,8 +68,6 @@ export function depthText(z_nm: number): string {
   return z_nm >= 1e4 ? `${figureText(z_nm / 1000, 4)} µm` : `${decimalText(z_nm, z_nm < 100 ? 2 : 1)} nm`;
 }
 
-const KV_PER_V = 1e-3;
-
 export function readingParts(r: Reading): ReadingPart[] {
   return [
     { symbol: 'Ec − EF', figure: decimalText(r.ec_minus_ef_eV), unit: 'eV' },
@@ -77,7 +75,7 @@ export function readingParts(r: Reading): ReadingPart[] {
     { symbol: 'n', figure: figureText(r.n_cm3), unit: 'cm⁻³' },
     { symbol: 'p', figure: figureText(r.p_cm3), unit: 'cm⁻³' },
     { symbol: 'ψ', figure: decimalText(r.potential_V), unit: 'V' },
-    { symbol: 'field', figure: figureText(r.field_V_cm * KV_PER_V), unit: 'kV/cm' },
+    { symbol: 'field', figure: fieldText(r.field_V_cm), unit: 'kV/cm' },
   ];
 }
 

@@ -1,6 +1,10 @@
 import type { ContactInput, DopantRow, LayerInput } from '../../src/design/types.ts';
 import type { ContactResult } from '../../src/result/types.ts';
+import { textWidth } from '../../src/drawing/glyph-widths.ts';
+import { decimalText } from '../../src/result/figure-text.ts';
+import { writeNumber } from '../../src/quantity/write-quantity.ts';
 import { shortText } from '../shared/graded.ts';
+import { unitOf } from '../shared/typed-text.ts';
 
 /** Units as they are read, not as they are typed: cm^-3 gives cm⁻³. */
 export function readable(text: string): string {
@@ -21,14 +25,39 @@ export function dopantText(row: DopantRow): string {
   return `${dopantName(row)} ${readable(shortText(row.concentration))}`;
 }
 
-/** Two short lines for a contact: what it is, and its barrier where the result has one. */
-export function contactText(contact: ContactInput, solved: ContactResult | undefined): string[] {
+/** An expression says what it comes to: "2*Ncap" gives " = 2e18 cm⁻³". Plain values and shapes give nothing. */
+export function worth(text: unknown, solved: number | null | undefined, unit: string): string {
+  if (typeof text !== 'string' || solved === null || solved === undefined || !Number.isFinite(solved)) return '';
+  return /[a-z_]\w*/i.test(text) && unitOf(text) === null && Number.isNaN(Number(text)) ? ` = ${writeNumber(solved, 3)}${unit === '' ? '' : ` ${unit}`}` : '';
+}
+
+/** One or two short lines for a contact: what it is, and its barrier for the majority carrier of the layer beside it, where the result has one. */
+export function contactText(contact: ContactInput, solved: ContactResult | undefined, type: 'n' | 'p' | 'i' = 'n'): string[] {
   if (contact.kind === 'neutral') return ['neutral'];
   if (contact.kind === 'pinned') return ['pinned', readable(contact.level)];
   if (contact.kind === 'open') return contact.sheetCharge === undefined ? ['open'] : ['open', readable(contact.sheetCharge)];
   if (contact.barrier !== undefined) return ['barrier', readable(contact.barrier)];
-  const barrier = solved?.kind === 'barrier' && solved.metal === contact.metal ? solved.barrier_n_eV : null;
-  return [contact.metal ?? 'metal', ...(barrier === null || barrier === undefined ? [] : [`φBn ${barrier.toFixed(2)} eV`])];
+  if (solved?.kind !== 'barrier' || solved.metal !== contact.metal) return [contact.metal ?? 'metal'];
+  const [symbol, barrier] = type === 'p' ? ['φBp', solved.barrier_p_eV] : ['φBn', solved.barrier_n_eV];
+  return [contact.metal ?? 'metal', ...(barrier === null ? [] : [`${symbol} ${decimalText(barrier, 2)}\u00a0eV`])];
+}
+
+/** Sizes of the strip's text and most lines of a column, for the decision where a layer is written. */
+const TEXT = 14;
+const PADDING = 12;
+const MOST_LINES = 6;
+
+/** A layer's lines in words, as its column shows them. */
+export function layerLines(layer: LayerInput, i: number): string[] {
+  const dopants = (layer.dopants ?? []).map(dopantText);
+  return [`${i + 1} ${layer.name}`, materialText(layer), layer.thickness, ...(dopants.length === 0 ? ['undoped'] : dopants)];
+}
+
+/** Whether the lines of a column can be read in it. An upper bound of their widths serves: no page is measured. */
+export function fitsColumn(lines: readonly string[], width: number): boolean {
+  const room = width - PADDING;
+  if (lines.some((line) => line.split(' ').some((word) => textWidth(word, TEXT) > room))) return false;
+  return lines.reduce((sum, line) => sum + Math.ceil(textWidth(line, TEXT) / room), 0) <= MOST_LINES;
 }
 
 /** A layer in one sentence, for readers who cannot see the column. */

@@ -63,8 +63,10 @@ export const styles = css`
   .column.contact {
     border-block-color: transparent;
     color: var(--faint);
+    font-size: 0.8125rem;
   }
   .column.contact.top {
+    grid-column: 2;
     text-align: end;
   }
   .column.slim {
@@ -99,6 +101,11 @@ export const styles = css`
   }
   .column.wrong {
     box-shadow: inset 0 0 0 2px var(--trouble);
+  }
+  .column.column.gone {
+    padding: 0;
+    border-width: 0;
+    box-shadow: none;
   }
   .column.lifted {
     opacity: 0.5;

@@ -2,7 +2,7 @@ import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
 import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
-import type { Result } from '../../src/result/types.ts';
+import type { LayerResult, Result } from '../../src/result/types.ts';
 import { setConcentration, setThickness, type Side } from '../../src/state/commands/index.ts';
 import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
@@ -15,11 +15,12 @@ import '../hm-contact-form/hm-contact-form.ts';
 import '../hm-field/hm-field.ts';
 import '../hm-interface-form/hm-interface-form.ts';
 import '../hm-layer-form/hm-layer-form.ts';
-import { contactText, dopantName, dopantText, layerSentence, materialText, readable } from './column-text.ts';
+import { contactText, dopantName, fitsColumn, layerLines, layerSentence } from './column-text.ts';
+import { columnValues, dopingKind } from './column-values.ts';
 import { scaledThickness } from './edge-drag.ts';
 import { styles } from './hm-strip.styles.ts';
 import { copied, inserted, moved, removed, type StackAct } from './strip-acts.ts';
-import { cards, NARROWEST } from './strip-cards.ts';
+import { cards } from './strip-cards.ts';
 import { stripGeometry, type Span, type StripGeometry } from './strip-geometry.ts';
 import { meaningOf } from './strip-keys.ts';
 import { insertLane, interfaceLane } from './strip-lanes.ts';
@@ -28,6 +29,9 @@ import { StripPointer, type StripSurface } from './strip-pointer.ts';
 type Choice = HalfmarkEvents['hm-choose'];
 /** A value being typed over its place in the column. */
 type InPlace = { layer: number; what: 'thickness' } | { layer: number; what: 'doping'; row: number };
+
+/** Narrower than this a contact's words stand upright, px. */
+const CONTACT_ROOM = 66;
 
 /**
  * The stack as its own editor: a column a layer under its place on the plate's depth axis, the contacts at both ends, and the chosen one's form below.
@@ -44,6 +48,7 @@ export class HmStrip extends LitElement implements StripSurface {
     result: { attribute: false },
     axis: { attribute: false },
     chosen: { attribute: false },
+    stale: { type: Boolean },
     complaints: { attribute: false },
     materials: { attribute: false },
     dopants: { attribute: false },
@@ -56,6 +61,7 @@ export class HmStrip extends LitElement implements StripSurface {
   /** the last one solved; its thicknesses are what an edge drags */ declare result: Result | null;
   /** of the plate above */ declare axis: DepthAxis | null;
   declare chosen: Choice;
+  /** the result is of the stack before the last change */ declare stale: boolean;
   declare complaints: readonly Complaint[];
   declare materials: readonly MaterialChoice[];
   declare dopants: readonly DopantChoice[];
@@ -73,6 +79,7 @@ export class HmStrip extends LitElement implements StripSurface {
     this.result = null;
     this.axis = null;
     this.chosen = null;
+    this.stale = false;
     this.complaints = [];
     this.materials = [];
     this.dopants = [];
@@ -99,9 +106,9 @@ export class HmStrip extends LitElement implements StripSurface {
       columns.style.gridTemplateColumns = widths.map((w) => `${w}px`).join(' ');
     }
     // Through the style sheet's object model, which a strict content security policy allows; style attributes it does not.
-    for (const item of this.renderRoot.querySelectorAll<HTMLElement>('[data-left]')) item.style.left = `${item.dataset.left}px`;
-    for (const item of this.renderRoot.querySelectorAll<HTMLElement>('[data-width]')) item.style.width = `${item.dataset.width}px`;
-    for (const item of this.renderRoot.querySelectorAll<HTMLElement>('[data-shift]')) item.style.marginLeft = `${item.dataset.shift}px`;
+    for (const [key, property] of [['left', 'left'], ['width', 'width'], ['shift', 'margin-left']]) {
+      for (const item of this.renderRoot.querySelectorAll<HTMLElement>(`[data-${key}]`)) item.style.setProperty(property, `${item.dataset[key]}px`);
+    }
     this.placeField();
     const focus = this.focusNext;
     this.focusNext = null;
@@ -129,7 +136,7 @@ export class HmStrip extends LitElement implements StripSurface {
         ${this.renderInPlace()}
       </div>
       ${interfaceLane(design, g.edges, this.width, this.chosen?.kind === 'interface' ? this.chosen.index : null, this.complaints, (index) => this.choose({ kind: 'interface', index }, 'form'))}
-      ${cards(g.layers, this.width, this.chosen?.kind === 'layer' ? this.chosen.index : null, (i) => this.renderValues(i), this.pressed)}
+      ${cards(g.layers, this.slim(g), this.width, this.chosen?.kind === 'layer' ? this.chosen.index : null, (i) => this.renderValues(i), this.pressed)}
       ${this.renderEditor()}
     `;
   }
@@ -138,11 +145,12 @@ export class HmStrip extends LitElement implements StripSurface {
     const index = side === 'top' ? 0 : 1;
     const isChosen = this.chosen?.kind === 'contact' && this.chosen.index === index;
     const span = g[side];
-    const lines = contactText(this.design![side], this.result?.contacts.find((c) => c.side === side));
+    const beside = this.result?.layers.at(side === 'top' ? 0 : -1)?.type;
+    const lines = contactText(this.design![side], this.result?.contacts.find((c) => c.side === side), beside);
     const wrong = complaintsWithin(this.complaints, side);
     return html`<div
       role="option"
-      class="column contact ${side} ${span.right - span.left < NARROWEST ? 'slim' : ''} ${wrong.length > 0 ? 'wrong' : ''}"
+      class="column contact ${side} ${span.right - span.left < CONTACT_ROOM ? 'slim' : ''} ${wrong.length > 0 ? 'wrong' : ''}"
       data-contact=${index}
       aria-selected=${isChosen}
       aria-label="${side} contact: ${[...lines, ...wrong].join(', ')}"
@@ -159,38 +167,35 @@ export class HmStrip extends LitElement implements StripSurface {
     const inReach = isChosen || (this.chosen?.kind === 'interface' ? this.chosen.index === i : this.chosen === null && i === 0);
     const wrong = complaintsWithin(this.complaints, `layers[${i}]`);
     const width = g.layers[i].right - g.layers[i].left;
-    const kind = this.dopingKind(i);
+    const fits = this.fits(i, g);
+    const kind = dopingKind(layers[i], this.solved(i), this.dopants);
     return html`<div
       role="option"
-      class="column layer ${kind} ${i === layers.length - 1 ? 'last' : ''} ${width < NARROWEST ? 'slim' : ''} ${wrong.length > 0 ? 'wrong' : ''} ${this.pointer.lifted?.from === i ? 'lifted' : ''}"
+      class="column layer ${kind} ${i === layers.length - 1 ? 'last' : ''} ${width < 1.5 ? 'gone' : fits ? '' : 'slim'} ${wrong.length > 0 ? 'wrong' : ''} ${this.pointer.lifted?.from === i ? 'lifted' : ''}"
       data-layer=${i}
       aria-selected=${isChosen}
       aria-label=${layerSentence(layers[i], i, layers.length, wrong)}
       tabindex=${inReach ? 0 : -1}
     >
-      ${width >= NARROWEST ? this.renderValues(i) : width >= 12 ? html`<span class="number">${i + 1}</span>` : nothing}
+      ${fits ? this.renderValues(i) : width >= 12 ? html`<span class="number">${i + 1}</span>` : nothing}
     </div>`;
   }
 
   private renderValues(i: number): TemplateResult {
-    const layer = this.design!.layers[i];
-    const wrong = (path: string): string => (complaintsWithin(this.complaints, `layers[${i}].${path}`).length > 0 ? 'wrong' : '');
-    const dopants = layer.dopants ?? [];
-    return html`<span class="name"><span class="number">${i + 1}</span> ${layer.name}</span>
-      <span class="value ${wrong('material')} ${wrong('x')}" data-value="material">${materialText(layer)}</span>
-      <span class="value ${wrong('thickness')}" data-value="thickness">${readable(layer.thickness)}</span>
-      ${dopants.length === 0 ? html`<span class="value" data-value="add">undoped</span>` : dopants.map((row, r) => html`<span class="value ${wrong(`dopants[${r}]`)}" data-value="doping ${r}">${dopantText(row)}</span>`)}`;
+    return columnValues(this.design!, i, this.stale ? undefined : this.solved(i), this.complaints);
   }
 
-  /** What the net doping of a column is drawn as; the first row of it decides where the result is not there yet. */
-  private dopingKind(i: number): 'donor' | 'acceptor' | 'undoped' {
-    const layer = this.design!.layers[i];
-    const rows = layer.dopants ?? [];
-    if (rows.length === 0) return 'undoped';
-    const type = this.result?.layers.length === this.design!.layers.length ? this.result.layers[i].type : null;
-    if (type === 'n' || type === 'p') return type === 'n' ? 'donor' : 'acceptor';
-    const first = rows[0];
-    return first.kind ?? this.dopants.find((d) => d.host === layer.material && d.id === first.dopant)?.kind ?? 'undoped';
+  /** The layer as solved, where the result is of as many layers as the design. */
+  private solved(i: number): LayerResult | undefined {
+    return this.result?.layers.length === this.design!.layers.length ? this.result.layers[i] : undefined;
+  }
+
+  private slim(g: StripGeometry): Set<number> {
+    return new Set(g.layers.flatMap((s, i) => (s.right - s.left >= 1.5 && !this.fits(i, g) ? [i] : [])));
+  }
+
+  private fits(i: number, g: StripGeometry): boolean {
+    return fitsColumn(layerLines(this.design!.layers[i], i), g.layers[i].right - g.layers[i].left);
   }
 
   private renderInPlace(): TemplateResult | typeof nothing {
@@ -248,8 +253,6 @@ export class HmStrip extends LitElement implements StripSurface {
     </section>`;
   }
 
-  // Acts.
-
   private choose(choice: Choice, focus: HmStrip['focusNext'] = null): void {
     this.chosen = choice;
     this.focusNext = focus;
@@ -266,8 +269,7 @@ export class HmStrip extends LitElement implements StripSurface {
 
   /** nm: as typed where that is a plain length, else as solved; null while the result is of another stack. */
   private thickness(i: number): number | null {
-    const { result, design } = this;
-    return plainThickness(design!.layers[i].thickness) ?? (result?.layers.length === design!.layers.length ? result.layers[i].thickness_nm : null);
+    return plainThickness(this.design!.layers[i].thickness) ?? this.solved(i)?.thickness_nm ?? null;
   }
 
   private acceptInPlace(at: InPlace, text: string): void {
@@ -305,8 +307,6 @@ export class HmStrip extends LitElement implements StripSurface {
     this.focusNext = 'column';
     this.requestUpdate();
   }
-
-  // Pointer.
 
   private pressed(event: MouseEvent): void {
     if (this.pointer.swallowsClick()) return;
@@ -360,8 +360,6 @@ export class HmStrip extends LitElement implements StripSurface {
     const { from, to } = this.pointer.lifted!;
     return to <= from ? g.layers[to].left : g.layers[to].right;
   }
-
-  // Keys.
 
   private key(event: KeyboardEvent): void {
     if (event.ctrlKey || event.metaKey) return;

@@ -1,17 +1,18 @@
 import { html, nothing, svg, type TemplateResult } from 'lit';
 import { spread, type Span } from './strip-geometry.ts';
 
-/** Columns and cards narrower than this hold no text, px. */
-export const NARROWEST = 60;
-const CARD = 112;
+/** Most and least room of a card, px. */
+const CARD = 150;
+const NARROWEST = 60;
 
 /**
  * Layers too narrow for their text, written under the strip with a line to their column; where even that has no room, a sentence.
  *
+ * @param slim     which layers
  * @param content  what a column of that layer would hold
  */
-export function cards(spans: readonly Span[], width: number, chosen: number | null, content: (layer: number) => TemplateResult, onClick: (event: MouseEvent) => void): TemplateResult | typeof nothing {
-  const slim = spans.map((s, i) => ({ x: (s.left + s.right) / 2, w: s.right - s.left, i })).filter((s) => s.w > 0 && s.w < NARROWEST);
+export function cards(spans: readonly Span[], slimLayers: ReadonlySet<number>, width: number, chosen: number | null, content: (layer: number) => TemplateResult, onClick: (event: MouseEvent) => void): TemplateResult | typeof nothing {
+  const slim = spans.flatMap((s, i) => (slimLayers.has(i) ? [{ x: (s.left + s.right) / 2, i }] : []));
   if (slim.length === 0) return nothing;
   const size = Math.min(CARD, Math.floor(width / slim.length));
   const places = size < NARROWEST ? null : spread(slim.map((s) => s.x), size, size / 2, width - size / 2);

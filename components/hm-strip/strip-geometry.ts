@@ -14,7 +14,7 @@ export interface StripGeometry {
 }
 
 /** Most room for the column of a contact, px. */
-const CONTACT = 76;
+const CONTACT = 88;
 /** Room left and right where there is no axis yet, px. */
 const MARGIN = 64;
 

@@ -11,6 +11,9 @@ export const formLook = css`
   .row + .row {
     margin-top: 10px;
   }
+  .wide {
+    --field-width: 11rem;
+  }
   .select {
     display: inline-flex;
     flex-direction: column;
@@ -32,7 +35,8 @@ export const formLook = css`
   .complaint {
     color: var(--trouble);
     font-size: 0.8125rem;
-    max-width: 22rem;
+    width: 0;
+    min-width: max(100%, 15rem);
   }
   .complaint::before {
     content: '▲ ';

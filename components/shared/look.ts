@@ -21,7 +21,7 @@ export const look = css`
     display: block;
     color: var(--ink);
     background: var(--ground);
-    font-family: system-ui, sans-serif;
+    font-family: var(--hm-font, -apple-system, 'Segoe UI', Roboto, 'Helvetica Neue', Arial, 'Liberation Sans', 'DejaVu Sans', sans-serif);
     font-size: 0.875rem;
     line-height: 1.35;
     font-variant-numeric: tabular-nums;

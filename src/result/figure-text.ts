@@ -23,6 +23,19 @@ export function decimalText(value: number | null, decimals = 3): string {
   return withMinus(Number(text) === 0 ? text.replace('-', '') : text);
 }
 
+/** V/cm */
+const LEAST_FIELD = 0.1;
+
+/**
+ * A field in kV/cm. What is below a tenth of a volt per centimetre is the mesh's error (0.1 mV over 10 µm), not a field.
+ *
+ * @param field_V_cm  any sign, or null
+ */
+export function fieldText(field_V_cm: number | null, digits = 3): string {
+  if (field_V_cm !== null && Math.abs(field_V_cm) < LEAST_FIELD) return '≈ 0';
+  return figureText(field_V_cm === null ? null : field_V_cm / 1000, digits);
+}
+
 /** A share as percent: enough digits near 0 and near 100 % to tell "almost all" from "all". */
 export function percentText(share: number | null): string {
   if (share === null || !Number.isFinite(share)) return '–';
