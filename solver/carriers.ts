@@ -20,7 +20,7 @@ const NONDEGENERATE = -38;
  * @param a     Kane's alpha times kT, >= 0; 0 = parabolic
  * @param boltzmann  exp(eta) in place of the Fermi-Dirac integral
  *
- * F = F_1/2 normalised by Gamma(3/2) (e.g. Blakemore, Solid-State Electron. 25, 1067, 1982, eq. 6), or Kane's integral.
+ * F = F_1/2 normalised by Gamma(3/2) (e.g. Blakemore, Solid-State Electron. 25, 1067, 1982, eq. 6; number from memory), or Kane's integral.
  */
 export function carrierLog(eta: number, a: number, boltzmann: boolean, out: CarrierLog): void {
   if (a > 0) {

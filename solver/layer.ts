@@ -28,7 +28,7 @@ const blank = (): ChargeValues => ({ n: 0, p: 0, donors: 0, acceptors: 0, net: 0
  * @param fullyDepleted  found by the solution of the whole stack; passed through
  *
  * n_i = sqrt(Nc Nv) exp(-Eg/2kT) whatever the statistics. Debye length sqrt(eps/(q d(n - p)/dEF)), both carriers (e.g. Ashcroft and
- * Mermin, Solid State Physics, 1976, eq. 17.55 for the degenerate form). Sheet resistance of a graded layer: one over its conductance,
+ * Mermin, Solid State Physics, 1976, chapter 17, Thomas-Fermi screening, for the degenerate form). Sheet resistance of a graded layer: one over its conductance,
  * integrated over depth with the carriers of local neutrality.
  */
 export function layerFigures(layer: Layer, T: number, a: Assumptions, fullyDepleted: boolean): LayerFigures {

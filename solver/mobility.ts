@@ -5,7 +5,7 @@ import { isAlloy, type Material, type MobilityLaw } from './stack.ts';
  *
  * @param N  sum of all active dopants, cm^-3, >= 0
  *
- * min + (max - min)/[1 + (N/reference)^exponent]: Caughey and Thomas, Proc. IEEE 55, 2192 (1967), eq. (1).
+ * min + (max - min)/[1 + (N/reference)^exponent]: Caughey and Thomas, Proc. IEEE 55, 2192 (1967), eq. (1) (number from memory).
  */
 export function mobility(law: MobilityLaw, N: number): number {
   if (typeof law === 'number') return law;

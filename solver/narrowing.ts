@@ -14,7 +14,8 @@ const JAIN_REFERENCE = 1e18;
  * each kind's share of that sum, so that a layer graded from one kind to the other meets no step.
  *
  * Sources: Slotboom and de Graaff, Solid-State Electron. 19, 857 (1976), eq. (9); Jain and Roulston, Solid-State Electron. 34, 453
- * (1991), closed form in powers 1/3, 1/4 and 1/2 (equation numbers from memory).
+ * (1991), closed form in powers 1/3, 1/4 and 1/2 (equation numbers from memory). The first is an apparent narrowing, fitted with Boltzmann statistics;
+ * the second is the true one, to be used with Fermi-Dirac. Checked: test/solver/narrowing.test.ts.
  */
 export function narrowing(law: NarrowingLaw, donors: number, acceptors: number): number {
   const total = donors + acceptors;

@@ -14,7 +14,8 @@ export function polarisationOf(material: Material, x: number): Polarisation | nu
 
 /**
  * Polarisation along the metal-face direction, C/cm^2: spontaneous plus, when strained to a lattice a0,
- * P = 2 (a0 - a)/a (e31 - e33 c13/c33). Ambacher et al., J. Appl. Phys. 85, 3222 (1999), eqs. (4)-(6).
+ * P = 2 (a0 - a)/a (e31 - e33 c13/c33). Ambacher et al., J. Appl. Phys. 85, 3222 (1999), eqs. (4)-(6)
+ * (numbers from memory).
  *
  * @throws {RangeError} a strained layer without the constants it takes
  */
@@ -35,7 +36,7 @@ export function polarisationAlongMetalFace(material: Material, x: number, crysta
  * Sheet charge of polarisation at each inner interface, +q, cm^-2 [layers - 1].
  *
  * sigma = P(below) - P(above), projected on the growth axis, which points out of the top: on the metal face that is the metal-face direction
- * itself. So a strained AlGaN above GaN gets a positive charge there. Ambacher et al. (1999), eq. (7).
+ * itself. So a strained AlGaN above GaN gets a positive charge there. Ambacher et al. (1999), eq. (7) (number from memory).
  */
 export function polarisationSheets(stack: Stack): Float64Array {
   const sheets = new Float64Array(Math.max(0, stack.layers.length - 1));

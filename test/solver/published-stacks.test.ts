@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { densityOfStates } from '../../solver/bands.ts';
 import { imageForceLowering, tunnellingEnergy } from '../../solver/barrier.ts';
-import { EPSILON_0 } from '../../solver/constants.ts';
+import { ELEMENTARY_CHARGE, EPSILON_0 } from '../../solver/constants.ts';
 import { polarisationSheets } from '../../solver/polarisation.ts';
 import { solveStack } from '../../solver/solve-stack.ts';
 import type { CrystalMaterial, Solution } from '../../solver/index.ts';
@@ -78,6 +78,13 @@ describe('published and exact results for whole stacks', () => {
   it('debye-linear: the surface field of a small bending', () => {
     const s = halfSpace(withNi(1e10, 11.7), donors(1e16), 1500, 0.001 / KT, BOLTZMANN);
     near(Math.abs(s.profiles.field[0]), value(check('debye-linear'), 'E_s'), 1e-3);
+    // Three Debye lengths in: between the two nodes on either side, straight in the logarithm.
+    const bulk = s.profiles.psi[s.profiles.psi.length - 1];
+    const depth = 3 * (s.layers[0].debyeLength as number);
+    const k = s.profiles.z.findIndex((z) => z > depth);
+    const [low, high] = [k - 1, k].map((i) => Math.log(Math.abs(s.profiles.psi[i] - bulk)));
+    const u = (depth - s.profiles.z[k - 1]) / (s.profiles.z[k] - s.profiles.z[k - 1]);
+    near(Math.exp(low + u * (high - low)) / Math.abs(s.profiles.psi[0] - bulk), value(check('debye-linear'), 'psi at 3 L_D / psi_s'), 0.02);
   });
 
   it('pn-exact-sym: half the potential on each side and the exact peak field', () => {
@@ -87,6 +94,8 @@ describe('published and exact results for whole stacks', () => {
     const at = s.profiles.layer.indexOf(1);
     expect(Math.abs(s.profiles.psi[s.profiles.psi.length - 1] - s.profiles.psi[at] - value(c, 'drop on the n side'))).toBeLessThan(1e-6);
     near(s.junctions[0].peakField, value(c, 'E_peak'), 1e-4);
+    const approximate = (ELEMENTARY_CHARGE * 1e16 * (s.junctions[0].depletionApproximationBelow as number)) / (11.7 * EPSILON_0);
+    near(approximate / s.junctions[0].peakField, value(c, 'E_peak depletion approximation / exact'), 1e-5);
   });
 
   it('vbi-fd-n+p: the built-in potential with Fermi-Dirac statistics', () => {
@@ -100,6 +109,8 @@ describe('published and exact results for whole stacks', () => {
     const bulk = sound(stackOf([layer('n', 1000, donors(1e17), m)], { assumptions: BOLTZMANN })).layers[0].ecMinusEf;
     const s = sound(stackOf([layer('n', 1000, donors(1e17), m)], { assumptions: BOLTZMANN, top: barrier(0.6 + bulk) }));
     near(s.profiles.field[0] / -1, value(check('schottky-exact'), 'E_max exact'), 1e-4);
+    const approximate = Math.sqrt((2 * ELEMENTARY_CHARGE * 1e17 * 0.6) / (11.7 * EPSILON_0));
+    near(approximate / Math.abs(s.profiles.field[0]), value(check('schottky-exact'), 'E_max depletion approximation / exact'), 1e-4);
   });
 
   it('highlow-limit: drop and field of an n+/n step', () => {

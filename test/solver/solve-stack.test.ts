@@ -43,7 +43,7 @@ describe('a p-n junction', () => {
   });
 
   it('comes close to the depletion approximation where the built-in potential is many kT', () => {
-    // W = sqrt(2 eps (Vbi - 2kT/q) (1/N + 1/N)/q), both sides (Sze and Ng 2007, eq. 2.15); the half-charge edges lie within a Debye length each.
+    // W = sqrt(2 eps (Vbi - 2kT/q) (1/N + 1/N)/q), both sides (Sze and Ng 2007, section 2.2; from memory); the half-charge edges lie within a Debye length each.
     const N = 1e17;
     const s = expectSound(solveStack(stackOf([layer('p', 500, [doped('acceptor', N, 0, 'complete')]), layer('n', 500, [doped('donor', N, 0, 'complete')])])));
     const j = s.junctions[0];
