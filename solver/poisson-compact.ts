@@ -60,7 +60,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     return { system, run, errors, estimate: missed.reduce((most, v) => Math.max(most, Math.abs(v)), 0) };
   };
   const carryTo = (from: Solved, values: Float64Array): void => {
-    mesh = equidistributed(from.system, from.errors, share * target);
+    mesh = equidistributed(problem, from.system, from.errors, share * target);
     psi = bent(from.system, values, mesh);
     setEnds(problem, psi);
   };

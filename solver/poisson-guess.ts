@@ -1,11 +1,21 @@
 import { chargeAt, type ChargeValues } from './charge.ts';
 import { ELEMENTARY_CHARGE } from './constants.ts';
 import { neutralLevel } from './fermi-level.ts';
-import { gradedLayer, type Mesh } from './mesh.ts';
+import { gradedLayer, meshOf, type Mesh } from './mesh.ts';
 import { PoissonSystem, type PoissonLayer, type PoissonProblem } from './poisson-system.ts';
+import type { PoissonStart } from './poisson.ts';
+
+/** Local neutrality on a coarse mesh. */
+export function coldStart(problem: PoissonProblem): PoissonStart {
+  const mesh = meshOf(problem.layers.map(firstLayerMesh));
+  const psi = neutralGuess(problem, mesh);
+  setEnds(problem, psi);
+  shiftToBalance(problem, mesh, psi);
+  return { mesh, psi, warm: false };
+}
 
 /** Coarse cells graded by the layer's own Debye length at neutrality. */
-export function firstLayerMesh(layer: PoissonLayer): Float64Array {
+function firstLayerMesh(layer: PoissonLayer): Float64Array {
   const middle = layer.charge(layer.thickness / 2);
   if (middle.bands.insulator) return gradedLayer(layer.thickness, layer.thickness / 4, layer.thickness / 4);
   const out: ChargeValues = { n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 };
@@ -17,7 +27,7 @@ export function firstLayerMesh(layer: PoissonLayer): Float64Array {
 }
 
 /** psi [nodes] from local neutrality; straight across insulators. */
-export function neutralGuess(problem: PoissonProblem, mesh: Mesh): Float64Array {
+function neutralGuess(problem: PoissonProblem, mesh: Mesh): Float64Array {
   const psi = new Float64Array(mesh.nodes);
   const known = new Uint8Array(mesh.nodes);
   mesh.local.forEach((z, l) => {
@@ -58,7 +68,7 @@ export function setEnds(problem: PoissonProblem, psi: Float64Array): void {
  * With both ends open the carriers alone fix the level: shifts the guess evenly until the whole stack is neutral. The total falls with
  * psi, so bisection finds the place even where frozen layers leave Newton no slope.
  */
-export function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array): void {
+function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array): void {
   if (problem.top.kind === 'potential' || problem.bottom.kind === 'potential') return;
   const system = new PoissonSystem(problem, mesh);
   const start = Float64Array.from(psi);

@@ -1,13 +1,14 @@
 import { meshOf, type Mesh } from './mesh.ts';
-import type { PoissonSystem } from './poisson-system.ts';
+import type { PoissonProblem, PoissonSystem } from './poisson-system.ts';
 
 /** How steeply the cell size may grow along a layer: neighbouring cells stay alike within about this share, on which the fourth order rests. */
 const GRADING = 0.3;
 /** Cells change by no more than this from one mesh to the next: the differences that ask for it are themselves only rough. */
 const FINER = 1 / 8;
 const COARSER = 2.5;
-/** Least cells of a layer; the estimate takes five nodes. */
+/** Least cells of a layer; the estimate takes five nodes, and a graded profile must not hide between them. */
 const LEAST_CELLS = 6;
+const LEAST_CELLS_GRADED = 48;
 /** What a row misses grows with the fifth power of its cells. */
 const POWER = 1 / 5;
 
@@ -23,14 +24,15 @@ export function rowErrors(defects: Float64Array, response: Float64Array): Float6
  * @param errors  of the rows of `system`, V [nodes]
  * @param aim     wished error of a row, V
  */
-export function equidistributed(system: PoissonSystem, errors: Float64Array, aim: number): Mesh {
+export function equidistributed(problem: PoissonProblem, system: PoissonSystem, errors: Float64Array, aim: number): Mesh {
   const { mesh } = system;
   return meshOf(
     mesh.local.map((z, l) => {
       const m = z.length - 1;
       if (system.charges[mesh.first[l] + l].bands.insulator) return Float64Array.from({ length: 5 }, (_, k) => (z[m] * k) / 4);
       const first = mesh.first[l];
-      const most = z[m] / LEAST_CELLS;
+      const least = problem.layers[l].uniform ? LEAST_CELLS : LEAST_CELLS_GRADED;
+      const most = z[m] / least;
       const size = new Float64Array(m + 1);
       for (let k = 0; k <= m; k++) {
         const h = 0.5 * (z[Math.min(m, k + 1)] - z[Math.max(0, k - 1)]) * (k === 0 || k === m ? 2 : 1);
@@ -42,13 +44,13 @@ export function equidistributed(system: PoissonSystem, errors: Float64Array, aim
       }
       for (let k = 1; k <= m; k++) size[k] = Math.min(size[k], size[k - 1] + GRADING * (z[k] - z[k - 1]));
       for (let k = m - 1; k >= 0; k--) size[k] = Math.min(size[k], size[k + 1] + GRADING * (z[k + 1] - z[k]));
-      return placed(z, size);
+      return placed(z, size, least);
     }),
   );
 }
 
 /** Nodes at even steps of Int dz/size, size straight between the old nodes. */
-function placed(z: Float64Array, size: Float64Array): Float64Array {
+function placed(z: Float64Array, size: Float64Array, least: number): Float64Array {
   const m = z.length - 1;
   const count = new Float64Array(m + 1);
   // Int dz/size over a cell: h ln(1 + r)/(r s0), r = s1/s0 - 1.
@@ -56,7 +58,7 @@ function placed(z: Float64Array, size: Float64Array): Float64Array {
     const r = size[k + 1] / size[k] - 1;
     count[k + 1] = count[k] + ((z[k + 1] - z[k]) / size[k]) * (Math.abs(r) < 1e-6 ? 1 - r / 2 : Math.log1p(r) / r);
   }
-  const cells = Math.max(LEAST_CELLS, Math.ceil(count[m]));
+  const cells = Math.max(least, Math.ceil(count[m]));
   const out = new Float64Array(cells + 1);
   let k = 0;
   for (let j = 1; j < cells; j++) {

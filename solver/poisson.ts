@@ -1,7 +1,7 @@
 import { interpolated, meshOf, type Mesh } from './mesh.ts';
 import { solveByBox } from './poisson-box.ts';
 import { solveByCompact } from './poisson-compact.ts';
-import { firstLayerMesh, neutralGuess, setEnds, shiftToBalance } from './poisson-guess.ts';
+import { coldStart, setEnds } from './poisson-guess.ts';
 import type { PoissonLayer, PoissonProblem } from './poisson-system.ts';
 import { ACCEPTANCE } from './quality.ts';
 import type { Profiles, Quality, Refusal } from './solution.ts';
@@ -30,8 +30,8 @@ export interface PoissonStart {
 /**
  * Potential of the whole stack at thermal equilibrium, EF = 0 throughout, Ec = ecFlat - psi.
  *
- * Starts from local neutrality on a coarse graded mesh, or from an earlier solution. Stacks of uniform layers take the compact scheme of fourth order;
- * should it not settle, and where a layer is graded, the box scheme answers. `quality.method` says which.
+ * Starts from local neutrality on a coarse graded mesh, or from an earlier solution. The compact scheme of fourth order takes every stack whose layers have an even
+ * permittivity, graded doping included; should it not settle, and where the permittivity is graded, the box scheme answers. `quality.method` says which.
  *
  * @returns the profiles with their quality, or a refusal that says what was missed. A refusal carries no figures.
  */
@@ -40,7 +40,7 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
   const goal: PoissonGoal = { accuracy: options.accuracy ?? ACCEPTANCE.meshError, maxNodes: options.maxNodes ?? 40000 };
   const warm = options.warmStart ? warmStart(problem, options.warmStart) : null;
   let updates = 0;
-  if (problem.layers.every((layer) => layer.uniform)) {
+  if (problem.layers.every(evenPermittivity)) {
     for (const first of warm ? [warm, null] : [null]) {
       const compact = solveByCompact(problem, first ?? coldStart(problem), goal);
       updates += compact.updates;
@@ -54,20 +54,17 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
   return solveByBox(problem, warm ?? coldStart(problem), goal, updates);
 }
 
+/** The compact rows take charge that varies with depth as it is, but not a permittivity that does. */
+function evenPermittivity(layer: PoissonLayer): boolean {
+  return layer.uniform || [0.25, 0.5, 0.75, 1].every((u) => layer.permittivity(u * layer.thickness) === layer.permittivity(0));
+}
+
 /** A uniform layer's functions, asked once and remembered. */
 function askedOnce(layer: PoissonLayer): PoissonLayer {
   if (!layer.uniform) return layer;
   const charge = layer.charge(0);
   const [permittivity, ecFlat, gap] = [layer.permittivity(0), layer.ecFlat(0), layer.gap(0)];
   return { thickness: layer.thickness, uniform: true, charge: () => charge, permittivity: () => permittivity, ecFlat: () => ecFlat, gap: () => gap };
-}
-
-function coldStart(problem: PoissonProblem): PoissonStart {
-  const mesh = meshOf(problem.layers.map(firstLayerMesh));
-  const psi = neutralGuess(problem, mesh);
-  setEnds(problem, psi);
-  shiftToBalance(problem, mesh, psi);
-  return { mesh, psi, warm: false };
 }
 
 /** Every other node of an earlier solution, stretched to the layers of now; null when it is none of such a stack. */

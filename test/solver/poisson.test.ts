@@ -6,6 +6,8 @@ import { neutralLevel } from '../../solver/fermi-level.ts';
 import { fermiThreeHalves } from '../../solver/fermi-integral.ts';
 import { halved, interpolated, meshOf, type Mesh } from '../../solver/mesh.ts';
 import { newton } from '../../solver/newton.ts';
+import { solveByBox } from '../../solver/poisson-box.ts';
+import { coldStart } from '../../solver/poisson-guess.ts';
 import { solvePoisson, type PoissonEnd, type PoissonProblem } from '../../solver/poisson.ts';
 import { PoissonSystem } from '../../solver/poisson-system.ts';
 import { isRefusal } from '../../solver/solution.ts';
@@ -169,9 +171,8 @@ describe('the compact scheme', () => {
         );
         const compact = solved(p, 1e-5);
         expect(compact.quality.method).toBe('compact');
-        // Layers that are said to be graded go the other way.
-        const box = solved({ ...p, layers: p.layers.map((l) => ({ ...l, uniform: false })) }, 1e-5);
-        expect(box.quality.method).toBe('box');
+        const box = solveByBox(p, coldStart(p), { accuracy: 1e-5, maxNodes: 40000 }, 0);
+        if (isRefusal(box)) throw new Error(box.reason);
         list.forEach((_, l) => {
           const [i, k] = [compact.profiles.layer.indexOf(l), box.profiles.layer.indexOf(l)];
           // Newton's last digits, V, beside the two estimates.
