@@ -29,22 +29,30 @@ interface Response {
  * (Sze and Ng, Physics of Semiconductor Devices, 2007, section 2.2; from memory), since the heavy side's carriers spill over and stand closer: by 2 % at 1e18/1e16, 7 % at
  * 1e18/1e15, 11 % at 1e19/1e15.
  *
- * @returns null where it has no meaning: sides of one kind (n+/n), no depletion, an undoped or insulating side, a side without a neutral part
+ * The neutral sides are the nearest ones: a layer next to the interface that is undoped (p-i-n) or depleted throughout hands on to the layer behind it.
+ *
+ * @returns null where it has no meaning: sides of one kind (n+/n, or a cut inside one side's depletion), no depletion, an insulator in between, a side
+ *   that is neutral nowhere
  */
 export function junctionCapacitance(stack: Stack, profiles: Profiles, space: SpaceCharge, index: number): number | null {
-  const above = mostNeutral(profiles, space, index);
-  const below = mostNeutral(profiles, space, index + 1);
+  const above = neutralSide(stack, profiles, space, index, -1);
+  const below = neutralSide(stack, profiles, space, index + 1, 1);
   if (above < 0 || below < 0 || !(space.net[above] * space.net[below] < 0)) return null;
+  const step = space.ranges[index][1];
+  const handedOn = profiles.layer[above] !== index || profiles.layer[below] !== index + 1;
+  if (handedOn && space.net[step] * space.net[step + 1] > 0) return null;
   // The n side of a junction that depletes lies at the higher potential.
   if (!((profiles.psi[below] - profiles.psi[above]) * space.net[below] > 0)) return null;
   const levelN = space.net[below] > 0 ? 1 : 0;
 
-  const step = space.ranges[index][1];
-  const answers = answersOf(stack, profiles, space, index, above, below);
-  const fine = movedCharge(profiles, step, answers, above, below, 1, levelN);
+  const answers = answersOf(stack, profiles, space, above, below);
+  const fine = movedCharge(profiles, answers, above, below, 1, levelN);
   // Meshes are halved ones: every other node is a mesh too, and from both the second-order rule gives a fourth-order figure.
-  if ((step - above) % 2 !== 0) return fine;
-  const coarse = movedCharge(profiles, step, answers, above, below, 2, levelN);
+  for (let l = profiles.layer[above]; l <= profiles.layer[below]; l++) {
+    const first = Math.max(above, space.ranges[l][0]);
+    if ((Math.min(below, space.ranges[l][1]) - first) % 2 !== 0) return fine;
+  }
+  const coarse = movedCharge(profiles, answers, above, below, 2, levelN);
   return fine === null || coarse === null ? fine : fine + (fine - coarse) / 3;
 }
 
@@ -55,15 +63,14 @@ interface Answers {
   eps: Float64Array;
 }
 
-function answersOf(stack: Stack, profiles: Profiles, space: SpaceCharge, index: number, above: number, below: number): Answers {
+function answersOf(stack: Stack, profiles: Profiles, space: SpaceCharge, above: number, below: number): Answers {
   const sides = below - above + 1;
   const out: Answers = { n: new Float64Array(sides), p: new Float64Array(sides), eps: new Float64Array(sides) };
-  const step = space.ranges[index][1];
   let uniform: LocalCharge | null = null;
   for (let s = above; s <= below; s++) {
-    const l = s <= step ? index : index + 1;
+    const l = profiles.layer[s];
     const layer = stack.layers[l];
-    if (s === above || s === step + 1) uniform = isUniform(layer) ? localCharge(layer, 0, stack.temperature, stack.assumptions) : null;
+    if (s === above || l !== profiles.layer[s - 1]) uniform = isUniform(layer) ? localCharge(layer, 0, stack.temperature, stack.assumptions) : null;
     const c = uniform ?? localCharge(layer, profiles.z[s] - profiles.z[space.ranges[l][0]], stack.temperature, stack.assumptions);
     const { n, p } = responseAt(c, profiles.ec[s]);
     out.n[s - above] = n;
@@ -73,10 +80,11 @@ function answersOf(stack: Stack, profiles: Profiles, space: SpaceCharge, index: 
   return out;
 }
 
-/** The linear problem on every `stride`-th node from `above` to `below`, both sides of the interface among them; the moved charge over dV, F/cm^2. */
-function movedCharge(profiles: Profiles, step: number, answers: Answers, above: number, below: number, stride: number, levelN: number): number | null {
+/** The linear problem on every `stride`-th node from `above` to `below`, both sides of each interface among them; the moved charge over dV, F/cm^2. */
+function movedCharge(profiles: Profiles, answers: Answers, above: number, below: number, stride: number, levelN: number): number | null {
   const levelP = 1 - levelN;
-  const nodes = (step - above) / stride + Math.floor((below - step - 1) / stride) + 1; // the interface stands in the profiles twice
+  // Interfaces stand in the profiles twice, in the equations once.
+  const nodes = (below - above - (profiles.layer[below] - profiles.layer[above])) / stride + 1;
   const lower = new Float64Array(nodes);
   const diagonal = new Float64Array(nodes);
   const upper = new Float64Array(nodes);
@@ -90,7 +98,7 @@ function movedCharge(profiles: Profiles, step: number, answers: Answers, above: 
   };
   let left = above;
   for (let i = 1; i < nodes; i++) {
-    if (left === step) left = step + 1;
+    if (profiles.layer[left + 1] !== profiles.layer[left]) left++;
     const s = left + stride;
     const h = profiles.z[s] - profiles.z[left];
     const conductance = (eps[left - above] + eps[s - above]) / (2 * h);
@@ -116,19 +124,25 @@ function movedCharge(profiles: Profiles, step: number, answers: Answers, above: 
   return Number.isFinite(moved) ? Math.abs(moved) : null;
 }
 
-/** Node, every other one counted, of the layer whose charge is the smallest share of its dopants'; -1 where the layer is undoped or nowhere neutral. */
-function mostNeutral(profiles: Profiles, space: SpaceCharge, layer: number): number {
-  if (space.most[layer] === 0) return -1;
-  let best = -1;
-  let least = NEUTRAL;
-  for (let s = space.ranges[layer][0]; s <= space.ranges[layer][1]; s += 2) {
-    const share = Math.abs(depletedShare(profiles, space, s));
-    if (share < least) {
-      least = share;
-      best = s;
+/**
+ * Node, every other one counted, whose charge is the smallest share of its dopants', in the nearest layer with a neutral part from `layer` on
+ * (`step` -1: upwards). -1 where an insulator or the end of the stack comes first.
+ */
+function neutralSide(stack: Stack, profiles: Profiles, space: SpaceCharge, layer: number, step: -1 | 1): number {
+  for (let l = layer; l >= 0 && l < stack.layers.length; l += step) {
+    if (localCharge(stack.layers[l], 0, stack.temperature, stack.assumptions).bands.insulator) return -1;
+    let best = -1;
+    let least = NEUTRAL;
+    for (let s = space.ranges[l][0]; s <= space.ranges[l][1]; s += 2) {
+      const share = Math.abs(depletedShare(profiles, space, s));
+      if (share < least) {
+        least = share;
+        best = s;
+      }
     }
+    if (best >= 0) return best;
   }
-  return best;
+  return -1;
 }
 
 const electrons: CarrierLog = { log: 0, slope: 0 };

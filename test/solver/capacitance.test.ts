@@ -63,11 +63,26 @@ describe('the capacitance of a junction at zero bias', () => {
     expect(at(300)).toBeLessThan(at(400));
   });
 
-  it('has no meaning between sides of one kind, beside an oxide or an undoped layer, and where a side is depleted throughout', () => {
+  it('has no meaning between sides of one kind, beside an oxide, and where no neutral side is left', () => {
     expect(capacitances(stackOf([layer('n+', 100, donors(1e19)), layer('n', 1000, donors(1e16))]))).toEqual([null]);
     const oxide: CrystalMaterial = { ...CRYSTAL, id: 'oxide', insulator: true, gap: { zeroK: 8.9, alpha: 0, beta: 1 }, affinity: 0.95, permittivity: 3.9, electronMass: undefined, holeMass: undefined };
     expect(capacitances(stackOf([layer('oxide', 3, [], oxide), layer('p', 1000, acceptors(1e17))], { top: barrier(2.5) }))).toEqual([null]);
-    expect(capacitances(stackOf([layer('p', 200, acceptors(1e18)), layer('i', 200, []), layer('n', 200, donors(1e18))]))).toEqual([null, null]);
     expect(capacitances(stackOf([layer('p', 200, acceptors(1e18)), layer('n', 50, donors(1e17)), layer('p2', 200, acceptors(1e18))]))).toEqual([null, null]);
+  });
+
+  it('of an undoped layer between p and n is that of its thickness and of the charge beyond it', () => {
+    const [above, below] = capacitances(stackOf([layer('p', 200, acceptors(1e19)), layer('i', 400, []), layer('n', 200, donors(1e19))]));
+    expect(Math.abs(above! / below! - 1)).toBeLessThan(1e-9);
+    // Carriers that spill into the undoped layer stand closer than its thickness.
+    expect(above! / (EPS / 400e-7)).toBeGreaterThan(1);
+    expect(above! / (EPS / 400e-7)).toBeLessThan(1.4);
+  });
+
+  it('does not change where a layer is split in two inside its depletion', () => {
+    const [whole] = capacitances(stackOf([layer('p', 300, acceptors(1e18)), layer('n', 2000, donors(1e16))]));
+    const split = capacitances(stackOf([layer('p', 300, acceptors(1e18)), layer('n1', 100, donors(1e16)), layer('n2', 1900, donors(1e16))]));
+    expect(Math.abs(split[0]! / whole! - 1)).toBeLessThan(1e-3);
+    // The cut is no junction.
+    expect(split[1]).toBeNull();
   });
 });
