@@ -115,9 +115,9 @@ export class HmApp extends LitElement {
     removeEventListener('pagehide', this.hide);
     removeEventListener('keydown', this.key, { capture: true });
     clearTimeout(this.dimTimer);
-    this.keeper.close();
     this.solver.close();
-    void this.store.close();
+    const { keeper, store } = this;
+    void keeper.close().finally(() => store.close());
   }
 
   private async start(): Promise<void> {

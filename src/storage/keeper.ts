@@ -32,6 +32,7 @@ export class Keeper extends EventTarget {
   readonly #store: ProjectStore;
   readonly #tabs: Tabs;
   readonly #autosave: Autosave;
+  readonly #touch = (): void => this.#autosave.touch();
 
   /** @param channel  name that tabs meet under; tests give their own */
   constructor(session: Session, store: ProjectStore, channel?: string) {
@@ -43,8 +44,7 @@ export class Keeper extends EventTarget {
       () => this.#save(),
       () => this.dispatchEvent(new Event('saving')),
     );
-    session.addEventListener('design', () => this.#autosave.touch());
-    session.addEventListener('view', () => this.#autosave.touch());
+    for (const what of ['design', 'view']) session.addEventListener(what, this.#touch);
   }
 
   get project(): OpenProject {
@@ -134,7 +134,10 @@ export class Keeper extends EventTarget {
     await this.#autosave.flush();
   }
 
-  close(): void {
+  /** Saves what is unsaved and lets go of the session. */
+  async close(): Promise<void> {
+    for (const what of ['design', 'view']) this.#session.removeEventListener(what, this.#touch);
+    await this.flush();
     this.#tabs.close();
     this.#autosave.reset();
   }

@@ -7,7 +7,7 @@ export interface TabNotice {
 
 /** The other tabs of this page. A browser without channels has none to speak of: the check inside each save still holds. */
 export class Tabs {
-  readonly #channel: BroadcastChannel | null;
+  /** null where there are no channels, and once closed */ #channel: BroadcastChannel | null;
 
   constructor(heard: (notice: TabNotice) => void, name = 'halfmark') {
     this.#channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel(name);
@@ -20,6 +20,7 @@ export class Tabs {
 
   close(): void {
     this.#channel?.close();
+    this.#channel = null;
   }
 }
 

@@ -18,7 +18,7 @@ function tab() {
   const session = new Session(designFixture(), async () => ({ kind: 'dropped' }));
   const keeper = new Keeper(session, store, name);
   ends.push(async () => {
-    keeper.close();
+    await keeper.close();
     await store.close();
   });
   const retitle = (title: string) => session.edit(commands.setTitle(session.design, title), 'title');
@@ -155,11 +155,10 @@ describe('the keeper of the open project', () => {
       throw new DOMException('gone', 'AbortError');
     };
     try {
-      await one.keeper.flush();
+      await one.keeper.close();
     } finally {
       IDBObjectStore.prototype.put = put;
     }
-    one.keeper.close();
     const two = tab();
     expect(await two.keeper.openLast()).to.deep.equal({ ok: true, recovered: true });
     expect(two.session.design.title).to.equal('late');

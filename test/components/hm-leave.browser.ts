@@ -1,0 +1,125 @@
+import { expect } from 'chai';
+import '../../components/hm-leave/hm-leave.ts';
+import type { HmLeave } from '../../components/hm-leave/hm-leave.ts';
+import { fileName, saveFile } from '../../components/shared/save-file.ts';
+import { starters } from '../../src/design/starters/index.ts';
+import { solveDesign } from '../../src/result/solve-design.ts';
+import type { Result } from '../../src/result/types.ts';
+import { expectAccessible } from './accessible.ts';
+import { button, until } from './heard.ts';
+
+const { design } = starters[0];
+const answer = solveDesign(design);
+const result = answer.kind === 'result' ? answer.result : (null as unknown as Result);
+
+let element: HmLeave;
+/** Files that would have been downloaded. */
+let files: { name: string; blob: Promise<Blob> }[];
+const click = HTMLAnchorElement.prototype.click;
+const picker = Object.getOwnPropertyDescriptor(window, 'showSaveFilePicker');
+const remark = () => element.shadowRoot!.querySelector('.remark')!.textContent!;
+
+async function taken(words: string): Promise<{ name: string; text: string; type: string }> {
+  button(element, words).click();
+  await until('a file', () => files.length > 0);
+  const { name, blob } = files.pop()!;
+  return { name, text: await (await blob).text(), type: (await blob).type };
+}
+
+describe('taking something away', () => {
+  beforeEach(async () => {
+    files = [];
+    HTMLAnchorElement.prototype.click = function () {
+      files.push({ name: this.download, blob: fetch(this.href).then((response) => response.blob()) });
+    };
+    Object.defineProperty(window, 'showSaveFilePicker', { value: undefined, configurable: true, writable: true });
+    element = document.createElement('hm-leave');
+    Object.assign(element, { design, result, plateLook: { depth: 'true' } });
+    document.body.append(element);
+    await element.updateComplete;
+    element.show();
+    await until('an open dialog', () => element.shadowRoot!.querySelector('hm-dialog')!.open);
+  });
+  afterEach(() => {
+    HTMLAnchorElement.prototype.click = click;
+    if (picker) Object.defineProperty(window, 'showSaveFilePicker', picker);
+    else delete (window as { showSaveFilePicker?: unknown }).showSaveFilePicker;
+    element.remove();
+  });
+
+  it('is accessible', async () => {
+    await expectAccessible(element);
+  });
+
+  it('gives the plate as an SVG document of its own', async () => {
+    const { name, text, type } = await taken('SVG');
+    expect(name).to.match(/\.svg$/);
+    expect(type).to.equal('image/svg+xml');
+    const svg = new DOMParser().parseFromString(text, 'image/svg+xml');
+    expect(svg.querySelector('parsererror')).to.equal(null);
+    expect(svg.documentElement.textContent).to.contain(design.title);
+    await until('the remark', () => remark().includes('downloads'));
+  });
+
+  it('gives the plate as a PNG of twice its size', async () => {
+    button(element, 'PNG').click();
+    await until('a file', () => files.length > 0, 8000);
+    const bitmap = await createImageBitmap(await files[0].blob);
+    expect([bitmap.width, bitmap.height]).to.deep.equal([2560, 1440]);
+  });
+
+  it('gives the profiles and the ledger as tables with units', async () => {
+    expect((await taken('Profiles')).text).to.match(/^depth \(nm\),Ec \(eV\)/);
+    const ledger = await taken('Ledger');
+    expect(ledger.name).to.match(/-ledger\.tsv$/);
+    expect(ledger.text).to.match(/^layer\t.*\(eV\)/);
+  });
+
+  it('gives the design as the file that is read again', async () => {
+    const { text, name } = await taken('Design file');
+    expect(name).to.match(/\.halfmark\.json$/);
+    expect(JSON.parse(text)).to.deep.equal(JSON.parse(JSON.stringify(design)));
+  });
+
+  it('gives no figures of an earlier design away, but always the design', async () => {
+    element.stale = true;
+    await element.updateComplete;
+    expect(['SVG', 'PNG', 'To the clipboard', 'Profiles', 'Ledger'].every((words) => button(element, words).disabled)).to.equal(true);
+    expect(button(element, 'Design file').disabled).to.equal(false);
+    expect(element.shadowRoot!.textContent).to.contain('only its file can be taken');
+  });
+
+  it('says so when the browser does not let it', async () => {
+    Object.defineProperty(window, 'showSaveFilePicker', {
+      value: async () => ({ createWritable: async () => ({ write: async () => Promise.reject(new Error('the disk is full')), close: async () => {} }) }), configurable: true,
+    });
+    button(element, 'Design file').click();
+    await until('the remark', () => remark().includes('the disk is full'));
+  });
+});
+
+describe('saving a file', () => {
+  const given = (value: unknown) => Object.defineProperty(window, 'showSaveFilePicker', { value, configurable: true, writable: true });
+  afterEach(() => void delete (window as { showSaveFilePicker?: unknown }).showSaveFilePicker);
+
+  it('writes where the person picked', async () => {
+    const written: Blob[] = [];
+    given(async () => ({ createWritable: async () => ({ write: async (data: Blob) => void written.push(data), close: async () => {} }) }));
+    expect(await saveFile('a.svg', 'image/svg+xml', Promise.resolve(new Blob(['x'])))).to.equal('written');
+    expect(await written[0].text()).to.equal('x');
+  });
+
+  it('writes nothing when the person thinks better of it', async () => {
+    given(async () => {
+      throw new DOMException('no', 'AbortError');
+    });
+    expect(await saveFile('a.svg', 'image/svg+xml', new Blob(['x']))).to.equal('given up');
+  });
+
+  it('makes any title a name that every system takes', () => {
+    expect(fileName('n contact on GaAs: 2/3 "Å"', '.svg')).to.equal('n-contact-on-GaAs-2-3-A.svg');
+    expect(fileName('../../etc', '.svg')).to.equal('etc.svg');
+    expect(fileName(' ', '.csv')).to.equal('design.csv');
+    expect(fileName('x'.repeat(300), '.csv')).to.have.length(64);
+  });
+});
