@@ -20,13 +20,15 @@ export interface PlacedDimension extends Dimension {
 /** Curves and lines that a figure should not cover. */
 export interface Obstacles {
   curves: Points[];
+  /** lines that may be covered sooner, as the dashes of the Fermi level */ dashes: Points[];
   boxes: Box[];
+  /** where a curve steps upright */ steps: Box[];
   /** px of upright lines */ uprights: number[];
 }
 
 /** Costs of a place; only their order counts. A place above LIMIT is no place. */
-const COST = { rank: 1, side: 0.6, shift: 0.8, curve: 14, upright: 5, line: 60, outside: 1000, label: 1000 };
-const LIMIT = 20;
+const COST = { rank: 1, side: 0.6, shift: 0.8, curve: 14, step: 9, dash: 8, upright: 5, line: 60, outside: 1000, label: 1000 };
+const LIMIT = 13;
 const GAP = 3;
 /** Between the symbol and its value on one line, of the font size. */
 export const SYMBOL_GAP = 0.5;
@@ -133,6 +135,8 @@ function cover(frame: Frame, d: Dimension, at: Candidate, obstacles: Obstacles, 
     if (cost >= enough) return cost;
     cost += COST.curve * crossings(curve, at);
   }
+  for (const step of obstacles.steps) if (overlap(at, step, 0)) cost += COST.step;
+  for (const curve of obstacles.dashes) cost += COST.dash * crossings(curve, at);
   return cost - at.cost;
 }
 

@@ -2,7 +2,7 @@ import type { Result } from '../result/types.ts';
 import type { DepthAxis, DepthMode } from './depth-axis.ts';
 import { describe } from './describe.ts';
 import { dimensionsOf } from './dimensions.ts';
-import type { EnergyAxis } from './energy-axis.ts';
+import { energyAxis, type EnergyAxis } from './energy-axis.ts';
 import { plateFrame, type Frame, type FrameOptions } from './frame.ts';
 import { axes, endLabels } from './marks/axes.ts';
 import { bandEdges, fermiLevel, interfaces, vacuumLevel } from './marks/band-edges.ts';
@@ -13,6 +13,7 @@ import { dopantLevels } from './marks/dopant-levels.ts';
 import { metals } from './marks/metals.ts';
 import { occupancyShading } from './marks/occupancy.ts';
 import { strip } from './marks/strip.ts';
+import { variantEdges, type Variant } from './marks/variants.ts';
 import { placeDimensions, type Box, type Obstacles } from './place-dimensions.ts';
 import type { Drawing, Gradient, Shape } from './shapes.ts';
 import { styleOf, type StyleName } from './styles.ts';
@@ -31,6 +32,7 @@ export interface PlateOptions {
   levels: boolean;
   /** ids of dimension lines put away */ hidden?: string[];
   /** dragged dimension lines: offset in px from where they would stand */ moved?: Record<string, [number, number]>;
+  /** other results to compare with: their band edges on the same axes, thin and dashed, the energy axis wide enough for all */ variants?: Variant[];
   /** the result is of an earlier input */ stale?: boolean;
   /** full: with strip of layer names, title and caption, for export. bare: the page draws the strip itself */ frame?: 'bare' | 'full';
   /** of the ids in this drawing; give each of several drawings on a page its own */ prefix?: string;
@@ -71,7 +73,7 @@ export function drawPlate(result: Result, options: Partial<PlateOptions>): Plate
   const style = styleOf(o.style);
   const full = o.frame === 'full';
   const frameOf = (captionLines: number): Frame => {
-    const asked: FrameOptions = { ...o, full, captionLines };
+    const asked: FrameOptions = { ...o, full, captionLines, energyDomain: o.energyDomain ?? sharedDomain(result, o.variants ?? [], o.vacuum) };
     return plateFrame(result, style, asked);
   };
   let frame = frameOf(1);
@@ -83,14 +85,18 @@ export function drawPlate(result: Result, options: Partial<PlateOptions>): Plate
   }
   const spans = visibleSpans(result, frame.depth);
   const shading = shadingOf(frame, spans, o.shading);
-  const { shapes: dimensionShapes, dimensions } = dimensionMarks(frame, spans, o.hidden ?? [], o.moved ?? {});
+  const metalShapes = metals(frame);
+  const variantShapes = variantEdges(frame, o.variants ?? []);
+  const taken = [...metalShapes, ...variantShapes].flatMap((s) => (s.kind === 'rect' ? [s] : []));
+  const { shapes: dimensionShapes, dimensions } = dimensionMarks(frame, spans, taken, o.hidden ?? [], o.moved ?? {});
   const inked: Shape[] = [
     ...shading.shapes,
     ...interfaces(frame),
-    ...metals(frame),
+    ...metalShapes,
     ...(o.levels ? dopantLevels(frame, spans) : []),
     ...(o.vacuum ? vacuumLevel(frame, spans) : []),
     ...fermiLevel(frame, spans),
+    ...variantShapes,
     ...bandEdges(frame, spans),
     ...dimensionShapes,
     ...endLabels(frame, o.vacuum),
@@ -111,6 +117,21 @@ export function drawPlate(result: Result, options: Partial<PlateOptions>): Plate
   };
 }
 
+/** Boxes of the upright steps of an edge between layers. */
+function stepsOf(frame: Frame, spans: LayerSpan[], values: number[]): Box[] {
+  return spans.slice(1).map((span, i) => {
+    const [a, b] = [frame.energy.y(values[spans[i].last]), frame.energy.y(values[span.first])];
+    return { x: span.x[0] - 1, y: Math.min(a, b), w: 2, h: Math.abs(a - b) };
+  });
+}
+
+/** Energies that hold the plate's own bands and those of its variants; undefined without variants. */
+function sharedDomain(result: Result, variants: Variant[], vacuum: boolean): [number, number] | undefined {
+  if (variants.length === 0) return undefined;
+  const domains = [result, ...variants.map((v) => v.result)].map((r) => energyAxis(r, { range: [1, 0], vacuum }).domain);
+  return [Math.min(...domains.map(([low]) => low)), Math.max(...domains.map(([, high]) => high))];
+}
+
 function shadingOf(frame: Frame, spans: LayerSpan[], kind: PlateOptions['shading']): { shapes: Shape[]; gradients: Gradient[] } {
   switch (kind) {
     case 'occupancy': return occupancyShading(frame, spans);
@@ -120,13 +141,16 @@ function shadingOf(frame: Frame, spans: LayerSpan[], kind: PlateOptions['shading
   }
 }
 
-function dimensionMarks(frame: Frame, spans: LayerSpan[], hidden: string[], moved: Record<string, [number, number]>): { shapes: Shape[]; dimensions: PlateDimension[] } {
+/** @param taken  boxes of other texts */
+function dimensionMarks(frame: Frame, spans: LayerSpan[], taken: Box[], hidden: string[], moved: Record<string, [number, number]>): { shapes: Shape[]; dimensions: PlateDimension[] } {
   const { profile } = frame.result;
   const all = dimensionsOf(frame);
   const shown = all.filter((d) => !hidden.includes(d.id));
   const obstacles: Obstacles = {
-    curves: spans.flatMap((span) => [profile.ec_eV, profile.ev_eV, profile.ef_eV].map((values) => traceOf(span, values, frame.energy.y))),
-    boxes: [],
+    curves: spans.flatMap((span) => [profile.ec_eV, profile.ev_eV].map((values) => traceOf(span, values, frame.energy.y))),
+    dashes: spans.map((span) => traceOf(span, profile.ef_eV, frame.energy.y)),
+    boxes: taken,
+    steps: [profile.ec_eV, profile.ev_eV].flatMap((values) => stepsOf(frame, spans, values)),
     uprights: frame.depth.edges,
   };
   const placed = placeDimensions(frame, shown, obstacles, moved);

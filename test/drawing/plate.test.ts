@@ -245,6 +245,24 @@ describe('the plate', () => {
     expect(draw({ height: Number.NaN })).toThrow('no room for a plate');
   });
 
+  it('lays other results over the plate, on one energy axis wide enough for all', () => {
+    const other = inventedResult(undefined, 'other');
+    other.profile.ec_eV = other.profile.ec_eV.map((e) => e + 2);
+    other.profile.ev_eV = other.profile.ev_eV.map((e) => e + 2);
+    const plate = drawPlate(inventedResult(), { variants: [{ name: 'thin <cap>', result: other }], width: 1000, height: 600 });
+    expect(plate.axes.energy.domain[1]).toBeGreaterThan(Math.max(...other.profile.ec_eV));
+    const points = pathPoints(path(plate, 'variant-conduction-edge').d);
+    other.profile.z_nm.forEach((z, i) => expect(distanceTo(points, plate.axes.depth.x(z), plate.axes.energy.y(other.profile.ec_eV[i]))).toBeLessThan(ERROR));
+    expect(texts(plate, 'variant-name')).toEqual(['thin <cap>']);
+    expect(path(plate, 'variant-conduction-edge').dash).toBeTruthy();
+    expect(of(drawPlate(inventedResult(), {}), 'variant-name')).toEqual([]);
+  });
+
+  it('puts no metal beside the inside of a stack zoomed into', () => {
+    expect(of(drawPlate(inventedResult(), { window: [50, 200] }), 'metal-hatch')).toEqual([]);
+    expect(of(drawPlate(inventedResult(), { window: [0, 20] }), 'metal-hatch')).toHaveLength(1);
+  });
+
   it('draws what is left where a profile has a hole', () => {
     const result = inventedResult();
     result.profile.ec_eV[10] = Number.NaN;

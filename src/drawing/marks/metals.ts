@@ -7,11 +7,13 @@ const HATCH = 7;
 
 /** A hatched block up to the metal's Fermi level at each end that has one, with the metal's name. */
 export function metals(frame: Frame): Shape[] {
-  const { area, lanes, result } = frame;
+  const { area, lanes, result, depth } = frame;
   const shapes: Shape[] = [];
   for (const contact of result.contacts) {
     const lane = lanes[contact.side];
-    if (lane === 0 || contact.kind !== 'barrier') continue;
+    const end = contact.side === 'top' ? depth.edges[0] : depth.edges[depth.edges.length - 1];
+    // Zoomed away from the surface the lane stays, so that the picture does not jump, but no metal stands beside the inside of the stack.
+    if (lane === 0 || contact.kind !== 'barrier' || end < area.left - 0.5 || end > area.right + 0.5) continue;
     const left = contact.side === 'top' ? area.left - lane : area.right;
     const name = contact.metal ?? 'metal';
     shapes.push(...block(frame, left, left + lane, name, contact.side === 'top'));

@@ -19,7 +19,7 @@ export function strip(frame: Frame): Shape[] {
     const name = isNumbered(frame, i) ? String(i + 1) : layer.name;
     const rows: { runs: TextRun[]; size: number; bold?: boolean }[] = [
       { runs: isNumbered(frame, i) ? whole([{ text: name }], small, right - left) : [{ text: fitted(name, 0.95 * text, room / BOLD) }], size: isNumbered(frame, i) ? small : 0.95 * text, bold: true },
-      { runs: [{ text: fitted(materialText(layer), small, room) }], size: small },
+      { runs: cut(materialText(layer), small, room), size: small },
       { runs: whole([{ text: lengthText(layer.thickness_nm) }], small, room), size: small },
       { runs: whole(dopingRuns(layer), small, room), size: small },
     ];
@@ -33,6 +33,12 @@ export function strip(frame: Frame): Shape[] {
 
 /** Bold glyphs are wider by about a tenth. */
 const BOLD = 1.1;
+
+/** A word cut to its room, unless hardly a letter would be left of it. */
+function cut(text: string, size: number, room: number): TextRun[] {
+  const short = fitted(text, size, room);
+  return short === text || short.length > 4 ? [{ text: short }] : [];
+}
 
 /** A figure that does not fit is left out: half a number is a wrong one. */
 function whole(runs: TextRun[], size: number, room: number): TextRun[] {
