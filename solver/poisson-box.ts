@@ -15,7 +15,7 @@ const SAFETY = 4;
 const MOST_ROUNDS = 14;
 
 /**
- * The box scheme, for graded layers and wherever the compact one does not settle: alternates a solution on the mesh and on its halved copy; their
+ * The box scheme, for where the compact one does not settle: alternates a solution on the mesh and on its halved copy; their
  * difference estimates the error, and the cells whose charge bends most are divided until the estimate is below `goal.accuracy`.
  *
  * @param start    mesh and potential to begin with; the potential is changed in place

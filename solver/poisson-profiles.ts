@@ -22,6 +22,7 @@ export function profilesOf(system: PoissonSystem, psi: Float64Array): Profiles {
   let top = 0;
   mesh.local.forEach((z, l) => {
     const first = mesh.first[l];
+    const x = system.stretched[l];
     for (let k = 0; k < z.length; k++) {
       const i = first + k;
       const s = i + l;
@@ -42,7 +43,10 @@ export function profilesOf(system: PoissonSystem, psi: Float64Array): Profiles {
       else if (system.lumped[s]) {
         half[0] = half[2] = 0;
         half[1] = 0.5 * (z[k + 1] - z[k]);
-      } else compactHalfBelow(z[k] - z[k - 1], z[k + 1] - z[k], half);
+      } else {
+        compactHalfBelow(x[k] - x[k - 1], x[k + 1] - x[k], half);
+        for (let j = 0; j < 3; j++) half[j] *= system.stretch[s - 1 + j];
+      }
       const from = s + (k === 0 ? 0 : end ? -2 : -1);
       const charge = half[0] * density[from] + half[1] * density[from + 1] + half[2] * density[from + 2];
       const displacement = end ? -conductance[i - 1] * (psi[i] - psi[i - 1]) + charge : -conductance[i] * (psi[i + 1] - psi[i]) - charge;

@@ -53,6 +53,13 @@ export class PoissonSystem {
   readonly gap: Float64Array;
   readonly permittivity: Float64Array;
   readonly charges: LocalCharge[];
+  /**
+   * Stretched depth of each layer's nodes, cm [layers] of [nodes of the layer]: x = eps(0) Int dz/eps, in which eps drops out of the fluxes and
+   * d^2 psi/dx^2 = -rho eps/eps(0)^2 is left of the equation. The depth itself where eps is even.
+   */
+  readonly stretched: Float64Array[];
+  /** eps/eps(0) of each layer, by side: what a charge counts more in the stretched depth [sides] */
+  readonly stretch: Float64Array;
   /** three weights of each side's row, cm, for the three nodes around it within the layer [3 sides] */
   readonly weights: Float64Array;
   /** rows of sides that are of the box scheme [sides] */
@@ -90,46 +97,70 @@ export class PoissonSystem {
     this.charges = new Array<LocalCharge>(sides);
     this.weights = new Float64Array(3 * sides);
     this.lumped = new Uint8Array(sides);
-    mesh.local.forEach((z, l) => {
-      const layer = problem.layers[l];
-      const first = mesh.first[l];
-      let charge = layer.charge(0);
-      let ecFlat = layer.ecFlat(0);
-      let gap = layer.gap(0);
-      let eps = layer.permittivity(0);
-      for (let k = 0; k < z.length; k++) {
-        if (!layer.uniform && k > 0) {
-          charge = layer.charge(z[k]);
-          ecFlat = layer.ecFlat(z[k]);
-          gap = layer.gap(z[k]);
-          eps = layer.permittivity(z[k]);
-        }
-        const s = first + l + k;
-        this.charges[s] = charge;
-        this.ecFlat[s] = ecFlat;
-        this.gap[s] = gap;
-        this.permittivity[s] = eps;
-        this.weigh(z, k, s, scheme === 'box');
-        if (k > 0) {
-          const middle = layer.uniform ? eps : layer.permittivity(0.5 * (z[k - 1] + z[k]));
-          this.conductance[first + k - 1] = middle / (z[k] - z[k - 1]);
-        }
+    this.stretch = new Float64Array(sides).fill(1);
+    this.stretched = mesh.local.map((z, l) => this.fill(problem.layers[l], z, mesh.first[l] + l));
+    this.stretched.forEach((x, l) => {
+      for (let k = 0; k < x.length; k++) {
+        const i = mesh.first[l] + k;
+        this.weigh(l, k, scheme === 'box');
+        if (k > 0) this.conductance[i - 1] = this.permittivity[mesh.first[l] + l] / (x[k] - x[k - 1]);
       }
     });
   }
 
-  /** Sets the weights of node k of a layer. */
-  private weigh(z: Float64Array, k: number, s: number, box: boolean): void {
-    const w = this.weights;
+  /** Local properties of a layer's nodes, asked once where the layer is uniform; returns its stretched depth. */
+  private fill(layer: PoissonLayer, z: Float64Array, s0: number): Float64Array {
+    let charge = layer.charge(0);
+    let ecFlat = layer.ecFlat(0);
+    let gap = layer.gap(0);
+    const eps0 = layer.permittivity(0);
+    let eps = eps0;
+    let x = z;
+    for (let k = 0; k < z.length; k++) {
+      const s = s0 + k;
+      if (!layer.uniform && k > 0) {
+        charge = layer.charge(z[k]);
+        ecFlat = layer.ecFlat(z[k]);
+        gap = layer.gap(z[k]);
+        const middle = layer.permittivity(0.5 * (z[k - 1] + z[k]));
+        const above = eps;
+        eps = layer.permittivity(z[k]);
+        if (x === z && (middle !== eps0 || eps !== eps0)) x = Float64Array.from(z);
+        // Simpson's rule on 1/eps.
+        if (x !== z) x[k] = x[k - 1] + ((z[k] - z[k - 1]) * eps0 * (1 / above + 4 / middle + 1 / eps)) / 6;
+      }
+      this.charges[s] = charge;
+      this.ecFlat[s] = ecFlat;
+      this.gap[s] = gap;
+      this.permittivity[s] = eps;
+      this.stretch[s] = eps / eps0;
+    }
+    return x;
+  }
+
+  /** Sets the weights of node k of layer l. */
+  private weigh(l: number, k: number, box: boolean): void {
+    const { weights, stretch } = this;
+    const z = this.mesh.local[l];
     const m = z.length - 1;
+    const s = this.mesh.first[l] + l + k;
+    const o = 3 * s;
     this.lumped[s] = box ? 1 : 0;
     if (box) {
-      w[3 * s] = w[3 * s + 1] = w[3 * s + 2] = 0;
-      const own = 0.5 * ((k > 0 ? z[k] - z[k - 1] : 0) + (k < m ? z[k + 1] - z[k] : 0));
-      w[3 * s + (k === 0 ? 0 : k === m ? 2 : 1)] = own;
-    } else if (k === 0) compactEnd(z[1] - z[0], z[2] - z[1], true, w, 3 * s);
-    else if (k === m) compactEnd(z[m] - z[m - 1], z[m - 1] - z[m - 2], false, w, 3 * s);
-    else compactRow(z[k] - z[k - 1], z[k + 1] - z[k], w, 3 * s);
+      weights[o] = weights[o + 1] = weights[o + 2] = 0;
+      weights[o + (k === 0 ? 0 : k === m ? 2 : 1)] = 0.5 * (z[Math.min(k + 1, m)] - z[Math.max(k - 1, 0)]);
+      return;
+    }
+    this.compactWeights(this.stretched[l], k, weights, o);
+    const from = s - k + Math.min(Math.max(k - 1, 0), m - 2);
+    for (let j = 0; j < 3; j++) weights[o + j] *= stretch[from + j];
+  }
+
+  private compactWeights(x: Float64Array, k: number, out: Float64Array, o: number): void {
+    const m = x.length - 1;
+    if (k === 0) compactEnd(x[1] - x[0], x[2] - x[1], true, out, o);
+    else if (k === m) compactEnd(x[m] - x[m - 1], x[m - 1] - x[m - 2], false, out, o);
+    else compactRow(x[k] - x[k - 1], x[k + 1] - x[k], out, o);
   }
 
   /**
@@ -143,7 +174,7 @@ export class PoissonSystem {
     let changed = 0;
     const { mesh, slope, permittivity, lumped } = this;
     for (let l = 0; this.scheme === 'compact' && l < mesh.local.length; l++) {
-      const z = mesh.local[l];
+      const z = this.stretched[l];
       const m = z.length - 1;
       const s0 = mesh.first[l] + l;
       for (const [end, from] of [[0, 0], [m, m - 2]]) {
@@ -151,8 +182,8 @@ export class PoissonSystem {
         const h = Math.max(z[from + 1] - z[from], z[from + 2] - z[from + 1]);
         const box = h * h * Math.max(-slope[s], -slope[s + 1], -slope[s + 2]) > END_LIMIT * permittivity[s];
         if (box === (lumped[s0 + end] === 1)) continue;
-        this.weigh(z, end, s0 + end, box);
-        this.weigh(z, from + 1, s + 1, box);
+        this.weigh(l, end, box);
+        this.weigh(l, from + 1, box);
         changed++;
       }
     }
@@ -270,14 +301,15 @@ export class PoissonSystem {
     const { mesh, problem, density, weights, lumped } = this;
     const out = new Float64Array(mesh.nodes);
     const compact = new Float64Array(3);
-    mesh.local.forEach((z, l) => {
+    this.stretched.forEach((x, l) => {
       const first = mesh.first[l];
       const s0 = first + l;
-      const m = z.length - 1;
-      if (this.charges[s0].bands.insulator) return;
+      const m = x.length - 1;
+      const { insulator, kT } = this.charges[s0].bands;
+      if (insulator) return;
       const own = new Float64Array(m + 1);
-      compactDefects(z, density.subarray(s0, s0 + m + 1), own);
-      const { kT } = this.charges[s0].bands;
+      const source = density.subarray(s0, s0 + m + 1).map((rho, k) => rho * this.stretch[s0 + k]);
+      compactDefects(x, source, own);
       const top = steepening((psi[first + 1] - psi[first]) / kT);
       const bottom = steepening((psi[first + m] - psi[first + m - 1]) / kT);
       own[0] *= top;
@@ -286,11 +318,9 @@ export class PoissonSystem {
       own[m] *= bottom;
       for (let k = 0; k <= m; k++) {
         if (lumped[s0 + k]) {
-          if (k === 0) compactEnd(z[1] - z[0], z[2] - z[1], true, compact, 0);
-          else if (k === m) compactEnd(z[m] - z[m - 1], z[m - 1] - z[m - 2], false, compact, 0);
-          else compactRow(z[k] - z[k - 1], z[k + 1] - z[k], compact, 0);
-          const from = s0 + Math.min(Math.max(k - 1, 0), m - 2);
-          for (let j = 0; j < 3; j++) own[k] += (compact[j] - weights[3 * (s0 + k) + j]) * density[from + j];
+          this.compactWeights(x, k, compact, 0);
+          const from = Math.min(Math.max(k - 1, 0), m - 2);
+          for (let j = 0; j < 3; j++) own[k] += compact[j] * source[from + j] - weights[3 * (s0 + k) + j] * density[s0 + from + j];
         }
         out[first + k] += own[k];
       }

@@ -30,8 +30,8 @@ export interface PoissonStart {
 /**
  * Potential of the whole stack at thermal equilibrium, EF = 0 throughout, Ec = ecFlat - psi.
  *
- * Starts from local neutrality on a coarse graded mesh, or from an earlier solution. The compact scheme of fourth order takes every stack whose layers have an even
- * permittivity, graded doping included; should it not settle, and where the permittivity is graded, the box scheme answers. `quality.method` says which.
+ * Starts from local neutrality on a coarse graded mesh, or from an earlier solution. The compact scheme of fourth order takes every stack, graded layers included; should it
+ * not settle, the box scheme answers. `quality.method` says which.
  *
  * @returns the profiles with their quality, or a refusal that says what was missed. A refusal carries no figures.
  */
@@ -40,23 +40,15 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
   const goal: PoissonGoal = { accuracy: options.accuracy ?? ACCEPTANCE.meshError, maxNodes: options.maxNodes ?? 40000 };
   const warm = options.warmStart ? warmStart(problem, options.warmStart) : null;
   let updates = 0;
-  if (problem.layers.every(evenPermittivity)) {
-    for (const first of warm ? [warm, null] : [null]) {
-      const compact = solveByCompact(problem, first ?? coldStart(problem), goal);
-      updates += compact.updates;
-      if (compact.solution) {
-        compact.solution.quality.newtonUpdates = updates;
-        return compact.solution;
-      }
+  for (const first of warm ? [warm, null] : [null]) {
+    const compact = solveByCompact(problem, first ?? coldStart(problem), goal);
+    updates += compact.updates;
+    if (compact.solution) {
+      compact.solution.quality.newtonUpdates = updates;
+      return compact.solution;
     }
-    return solveByBox(problem, coldStart(problem), goal, updates);
   }
-  return solveByBox(problem, warm ?? coldStart(problem), goal, updates);
-}
-
-/** The compact rows take charge that varies with depth as it is, but not a permittivity that does. */
-function evenPermittivity(layer: PoissonLayer): boolean {
-  return layer.uniform || [0.25, 0.5, 0.75, 1].every((u) => layer.permittivity(u * layer.thickness) === layer.permittivity(0));
+  return solveByBox(problem, coldStart(problem), goal, updates);
 }
 
 /** A uniform layer's functions, asked once and remembered. */

@@ -108,9 +108,14 @@ describe('the compact scheme', () => {
   const meshFor = (p: PoissonProblem, cells: number) =>
     meshOf(p.layers.map((l) => Float64Array.from({ length: cells + 1 }, (_, k) => (l.thickness * (1 - Math.cos((Math.PI * k) / cells))) / 2)));
 
-  for (const [label, bottom] of [['between contacts', undefined], ['with an open end', { kind: 'sheet', charge: 2e11 }]] as const) {
+  /** The same, but permittivity and flat bands slope through both layers. */
+  const sloping = (): PoissonProblem => {
+    const p = step();
+    return { ...p, layers: p.layers.map((l) => ({ ...l, uniform: false, permittivity: (z) => (12 - (5 * z) / l.thickness) * EPSILON_0, ecFlat: (z) => -4.05 + (0.2 * z) / l.thickness })) };
+  };
+
+  for (const [label, p] of [['between contacts', step()], ['with an open end', step({ kind: 'sheet', charge: 2e11 })], ['in graded layers', sloping()]] as const) {
     it(`falls to a sixteenth of its mesh error when every cell is halved, ${label}`, () => {
-      const p = step(bottom);
       let mesh = meshFor(p, 80);
       const at: number[][] = [];
       let psi: Float64Array = new Float64Array(mesh.nodes).fill(p.top.kind === 'potential' ? p.top.psi : 0);
