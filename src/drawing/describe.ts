@@ -1,3 +1,4 @@
+import { decimalText } from '../result/figure-text.ts';
 import type { ContactResult, JunctionResult, LayerResult, Result } from '../result/types.ts';
 import { energyText, lengthText, spoken } from './figures.ts';
 
@@ -27,7 +28,7 @@ function layerSentence(layer: LayerResult, i: number): string {
 
 function junctionSentence(j: JunctionResult): string {
   const parts: string[] = [];
-  if (j.builtin_V !== null) parts.push(`built-in potential ${j.builtin_V.toFixed(3).replace('-', '−')} V`);
+  if (j.builtin_V !== null) parts.push(`built-in potential ${decimalText(j.builtin_V, 3)} V`);
   if (j.alignment !== 'same') parts.push(`conduction band step ${energyText(j.delta_ec_eV)}, valence band step ${energyText(j.delta_ev_eV)}, ${j.class}`);
   parts.push(`peak field ${spoken(Math.abs(j.peak_field_V_cm))} V/cm`);
   return `From ${j.above} to ${j.below}: ${parts.join('; ')}.`;

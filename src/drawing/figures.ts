@@ -1,3 +1,4 @@
+import { decimalText } from '../result/figure-text.ts';
 import type { TextRun } from './shapes.ts';
 
 /** How figures are written in drawings. The minus is the true one, digits are those of the face. */
@@ -20,7 +21,7 @@ export function lengthText(nm: number): string {
 /** eV with three decimals, or meV below 10 meV. */
 export function energyText(eV: number): string {
   const small = Math.abs(eV) < 0.01;
-  return `${(small ? eV * 1000 : eV).toFixed(small ? 2 : 3).replace('-', '−')} ${small ? 'meV' : 'eV'}`;
+  return small ? `${decimalText(eV * 1000, 2)} meV` : `${decimalText(eV, 3)} eV`;
 }
 
 /** A number in words for reading aloud: "1.2e+17" becomes "1.2e17". */

@@ -79,6 +79,14 @@ describe('the plate', () => {
     }
   });
 
+  it('keeps a sharp edge of occupancy where kT is less than a px can show', () => {
+    const result = inventedResult();
+    result.conditions.temperature_K = 1;
+    const [g] = drawPlate(result, { energyDomain: [-30, 30] }).gradients;
+    expect(g.y2 - g.y1).toBeGreaterThan(0.05);
+    expect(g.y2 - g.y1).toBeLessThan(0.2);
+  });
+
   it('leaves the gap as paper: the shaded regions end at Ec and at Ev', () => {
     const result = inventedResult();
     const plate = drawPlate(result, {});

@@ -21,7 +21,9 @@ export function occupancyGradient(frame: Frame): Gradient {
   const { energy, style, result, prefix } = frame;
   const kT = BOLTZMANN * result.conditions.temperature_K;
   const ef = result.profile.ef_eV[0] ?? 0;
-  const [top, bottom] = [energy.y(ef + STOPS[STOPS.length - 1] * kT), energy.y(ef + STOPS[0] * kT)];
+  // A gradient without length takes its last colour everywhere: near 0 K it stays a sharp edge of a tenth of a px.
+  const reach = Math.max(energy.y(ef) - energy.y(ef + STOPS[STOPS.length - 1] * kT), 0.05);
+  const [top, bottom] = [energy.y(ef) - reach, energy.y(ef) + reach];
   const stops = [...STOPS].reverse().map((u) => ({
     offset: (STOPS[STOPS.length - 1] - u) / (STOPS[STOPS.length - 1] - STOPS[0]),
     color: mixed(style.ground, style.occupancy, style.fullTint * fermi(u)),
