@@ -8,10 +8,11 @@ import { readDopant } from './dopant.ts';
 import { readMaterial } from './material.ts';
 import { publishedOffset } from './offset.ts';
 import { readProfile } from './profile.ts';
+import { readRequirements, type ReadRequirement } from './requirements.ts';
 import type { AssumptionsInput, Design, LayerInput } from './types.ts';
 import { readVariables } from './variables.ts';
 
-export type StackReading = { ok: true; stack: Stack; notes: string[] } | { ok: false; complaints: Complaint[] };
+export type StackReading = { ok: true; stack: Stack; notes: string[]; requirements: ReadRequirement[]; /** K, coldest first */ temperatureRange: [number, number] | null } | { ok: false; complaints: Complaint[] };
 
 const TEMPERATURE = { least: [1, '1 K'] as [number, string], most: [2000, '2000 K'] as [number, string] };
 const THICKNESS = { least: [1e-9, '0.01 nm'] as [number, string], most: [10, '10 cm'] as [number, string] };
@@ -19,17 +20,18 @@ const THICKNESS = { least: [1e-9, '0.01 nm'] as [number, string], most: [10, '10
 /**
  * A design in the solver's units, or everything that is wrong with it.
  *
- * @param set  values for this run: variables by name, and "temperature"
+ * @param set    values for this run: variables by name, and "temperature"
+ * @param moves  signed counts of a variable's stated tolerance by which it lies off its value, by name
  */
-export function toStack(design: Design, set: Readonly<Record<string, string>> = {}): StackReading {
+export function toStack(design: Design, set: Readonly<Record<string, string>> = {}, moves: Readonly<Record<string, number>> = {}): StackReading {
   const { temperature: setTemperature, ...overrides } = set;
-  const variables = readVariables(design.variables ?? [], overrides);
+  const variables = readVariables(design.variables ?? [], overrides, moves);
   const ask = new Asker(variables.scope);
   ask.complaints.push(...variables.complaints);
   const catalogue = catalogueOf(design.custom, ask.complaints);
   const { conditions } = design;
   const temperature = setTemperature === undefined ? ask.quantity(conditions.temperature, 'temperature', 'conditions.temperature', TEMPERATURE) : ask.quantity(setTemperature, 'temperature', '--set temperature', TEMPERATURE);
-  readRange(conditions.temperatureRange, ask);
+  const temperatureRange = readRange(conditions.temperatureRange, ask);
   if (conditions.bias !== undefined && ask.quantity(conditions.bias, 'potential', 'conditions.bias') !== 0) {
     if (ask.complaints.every((c) => c.path !== 'conditions.bias')) ask.wrong('conditions.bias', `${quoted(conditions.bias)} is not 0 V; only thermal equilibrium is solved`);
   }
@@ -44,7 +46,7 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
   const bottom = readContact(design.bottom, 'bottom', layers[last]?.material ?? null, design.layers[last].name, catalogue, ask);
   const rows = readInterfaces(design, ask);
   const crystal = readCrystal(design, catalogue, ask);
-  const notes = design.requirements?.length ? [`${design.requirements.length} requirement${design.requirements.length > 1 ? 's are' : ' is'} kept in the design but not judged by this version`] : [];
+  const requirements = readRequirements(design, ask);
   if (ask.complaints.length > 0) return { ok: false, complaints: ask.complaints };
   const solved = layers as Layer[];
   const stack: Stack = {
@@ -56,17 +58,18 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
     assumptions: readAssumptions(design.assumptions),
     ...(crystal ? { crystal } : {}),
   };
-  return ask.complaints.length > 0 ? { ok: false, complaints: ask.complaints } : { ok: true, stack, notes };
+  return ask.complaints.length > 0 ? { ok: false, complaints: ask.complaints } : { ok: true, stack, notes: [], requirements, temperatureRange };
 }
 
 export function readAssumptions(a: AssumptionsInput = {}): Stack['assumptions'] {
   return { statistics: a.statistics ?? 'fermi-dirac', alignment: a.alignment ?? 'offsets', narrowing: a.narrowing ?? false, nonParabolic: a.nonParabolic ?? false, transmission: a.transmission ?? 'wkb' };
 }
 
-function readRange(range: [string, string] | undefined, ask: Asker): void {
-  if (!range) return;
+function readRange(range: [string, string] | undefined, ask: Asker): [number, number] | null {
+  if (!range) return null;
   const [from, to] = range.map((t, i) => ask.quantity(t, 'temperature', `conditions.temperatureRange[${i}]`, TEMPERATURE));
   if (from > to) ask.wrong('conditions.temperatureRange', `runs from ${quoted(range[0])} down to ${quoted(range[1])}; put the lower temperature first`);
+  return [from, to];
 }
 
 function readLayer(input: LayerInput, path: string, catalogue: Catalogue, materials: Map<string, Material | null>, ask: Asker): Layer | null {
