@@ -1,10 +1,12 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import type { Design } from '../../src/design/types.ts';
 import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
 import { blankDesign } from '../../src/state/blank-design.ts';
 import { setTitle } from '../../src/state/commands/index.ts';
 import { Session } from '../../src/state/session.ts';
 import { Keeper } from '../../src/storage/keeper.ts';
 import { ProjectStore } from '../../src/storage/project-store.ts';
+import type { View } from '../../src/state/view.ts';
 import { SolverClient } from '../../src/workers/client.ts';
 import { startSolveWorker } from '../../src/workers/start-worker.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
@@ -38,6 +40,8 @@ type Showing = HTMLElement & { show(): void };
 
 /** A result that is stale for less than this is not dimmed: while something is dragged the next one is already on its way, ms. */
 const DIM_AFTER_MS = 150;
+/** A remark that asks for nothing leaves the page after this, ms. */
+const REMARK_MS = 12_000;
 
 /**
  * The page. It alone knows the open session, the store of projects and the solver; every other element gets values and tells wishes.
@@ -52,6 +56,7 @@ export class HmApp extends LitElement {
     axes: { state: true },
     choices: { state: true },
     remark: { state: true },
+    deskRemark: { state: true },
     dim: { state: true },
     theme: { state: true },
     regardless: { state: true },
@@ -62,6 +67,7 @@ export class HmApp extends LitElement {
   /** of the plate, for the rail and the strip */ declare private axes: PlateAxes | null;
   declare private choices: Choices;
   declare private remark: HalfmarkEvents['hm-say'] | null;
+  /** what the last act in the list of projects came to */ declare private deskRemark: string;
   declare private dim: boolean;
   declare private theme: Theme;
   /** what was asked for and waits, because something is not saved */ declare private regardless: (() => Promise<DeskOutcome>) | null;
@@ -72,6 +78,9 @@ export class HmApp extends LitElement {
   private keeper!: Keeper;
   private desk!: ProjectDesk;
   private dimTimer: ReturnType<typeof setTimeout> | undefined;
+  private remarkTimer: ReturnType<typeof setTimeout> | undefined;
+  /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
+  private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
   private failed = false;
   private readonly incoming = new IncomingController(this, (text) => void this.settle(this.desk.take(text)), (text) => this.say(text, true));
@@ -86,6 +95,7 @@ export class HmApp extends LitElement {
     this.axes = null;
     this.choices = { materials: [], dopants: [], metals: [] };
     this.remark = null;
+    this.deskRemark = '';
     this.dim = false;
     this.theme = readTheme();
     this.regardless = null;
@@ -115,6 +125,7 @@ export class HmApp extends LitElement {
     removeEventListener('pagehide', this.hide);
     removeEventListener('keydown', this.key, { capture: true });
     clearTimeout(this.dimTimer);
+    clearTimeout(this.remarkTimer);
     this.solver.close();
     const { keeper, store } = this;
     void keeper.close().finally(() => store.close());
@@ -133,7 +144,14 @@ export class HmApp extends LitElement {
   }
 
   protected override willUpdate(_: PropertyValues): void {
-    const { custom } = this.session.design;
+    const { design, view } = this.session;
+    const style = isDark(this.theme) ? 'dark' : 'light';
+    const { handed } = this;
+    if (handed?.view !== view || handed.style !== style || handed.design !== design) {
+      const plateView = handed?.view === view && handed.style === style ? handed.plateView : ({ ...view, style } as PlateView);
+      this.handed = { view, style, plateView, design, names: design.layers.map((layer) => layer.name) };
+    }
+    const { custom } = design;
     if (!this.ready || custom === this.customShown) return;
     this.customShown = custom;
     void choicesFor(custom).then((choices) => (this.choices = choices));
@@ -158,7 +176,7 @@ export class HmApp extends LitElement {
     else if (status === 'error') this.dim = true;
     else this.dimTimer = setTimeout(() => (this.dim = true), DIM_AFTER_MS);
     const fails = refusal !== null || complaints.length > 0;
-    if (status === 'error' && !this.failed) this.say('The design has no result as it stands; the reason is above the plate.');
+    // The reason itself is spoken by the messages; that it is over has no other voice.
     if (status === 'complete' && this.failed) this.say('Solved.');
     if (status !== 'pending') this.failed = fails;
     this.requestUpdate();
@@ -176,6 +194,8 @@ export class HmApp extends LitElement {
   private say(text: string, urgent = false): void {
     // An equal sentence is spoken only if the region changes.
     this.remark = { text: this.remark?.text === text ? `${text} ` : text, urgent };
+    clearTimeout(this.remarkTimer);
+    if (!urgent) this.remarkTimer = setTimeout(() => (this.remark = null), REMARK_MS);
   }
 
   private show(name: string): void {
@@ -190,6 +210,7 @@ export class HmApp extends LitElement {
       const projects = this.renderRoot.querySelector('hm-projects');
       projects?.close();
     }
+    this.deskRemark = outcome.said;
     this.say(outcome.said, outcome.urgent);
   }
 
@@ -210,6 +231,7 @@ export class HmApp extends LitElement {
         return this.say(label === null ? `Nothing to ${act}.` : `${act === 'undo' ? 'Taken back' : 'Done again'}: ${label}.`);
       }
       case 'projects':
+        this.deskRemark = '';
         void this.desk.look().then(() => this.requestUpdate(), () => this.say('The list of projects cannot be read.', true));
         return this.show('hm-projects');
       case 'starters':
@@ -291,7 +313,7 @@ export class HmApp extends LitElement {
           .theme=${this.theme}
         ></hm-conditions>
       </header>
-      <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remark} .layers=${session.design.layers.map((layer) => layer.name)}></hm-messages>
+      <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remark} .layers=${this.handed?.names ?? []}></hm-messages>
       ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${this.renderDialogs()}
       ${this.incoming.over ? html`<p class="drop">Let go to open the file</p>` : nothing}
     </div>`;
@@ -299,17 +321,16 @@ export class HmApp extends LitElement {
 
   private renderWork(): TemplateResult {
     const { session, axes, choices } = this;
-    const { result, status } = session.findings;
+    const { result } = session.findings;
     const { chosen, depth_nm } = session.moment;
-    const view = session.view as PlateView & { ledger?: LedgerView };
-    const style = isDark(this.theme) ? 'dark' : 'light';
+    const view = session.view as { ledger?: LedgerView };
+    const { style, plateView } = this.handed!;
     return html`<main>
       <div class="diagram">
         <hm-plate
           .result=${result}
-          .view=${{ ...view, style }}
+          .view=${plateView}
           .stale=${this.dim}
-          .notice=${status === 'error' ? 'This design cannot be solved as it stands.' : null}
           .depth_nm=${depth_nm}
           @plate-drawn=${({ detail }: CustomEvent<PlateAxes>) => (this.axes = detail)}
         ></hm-plate>
@@ -339,7 +360,7 @@ export class HmApp extends LitElement {
     const { session, keeper, desk } = this;
     const { result, stale } = session.findings;
     return html`
-      <hm-projects .entries=${desk?.entries ?? []} .damaged=${desk?.damaged ?? []} .openId=${keeper?.project.id ?? null} .remark=${this.remark?.text ?? ''}></hm-projects>
+      <hm-projects .entries=${desk?.entries ?? []} .damaged=${desk?.damaged ?? []} .openId=${keeper?.project.id ?? null} .remark=${this.deskRemark}></hm-projects>
       <hm-starters></hm-starters>
       <hm-leave .design=${session.design} .result=${result} .stale=${stale} .plateLook=${session.view as PlateView}></hm-leave>
       <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>

@@ -66,8 +66,10 @@ export class HmMessages extends LitElement {
   override render(): TemplateResult {
     const { remark } = this;
     return html`
-      ${this.renderConflict()} ${this.renderTrouble()} ${this.renderLong()} ${this.renderWarnings()}
-      <p class="remark" role="status" aria-live="polite">${remark !== null && !remark.urgent ? remark.text : ''}</p>
+      ${this.renderConflict()}
+      <div role="status">${this.renderTrouble()}</div>
+      ${this.renderLong()} ${this.renderWarnings()}
+      <p class="remark polite" role="status">${remark !== null && !remark.urgent ? remark.text : ''}</p>
       <p class="remark urgent" role="alert">${remark?.urgent ? remark.text : ''}</p>
     `;
   }

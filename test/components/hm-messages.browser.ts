@@ -90,7 +90,7 @@ describe('the messages of the page', () => {
   it('put remarks into a region that is spoken, and show a text of a stranger as text', async () => {
     element.remark = { text: '<img src=x onerror=alert(1)> opened' };
     await element.updateComplete;
-    expect(element.shadowRoot!.querySelector('[role=status]')!.textContent).to.equal('<img src=x onerror=alert(1)> opened');
+    expect(element.shadowRoot!.querySelector('.polite')!.textContent).to.equal('<img src=x onerror=alert(1)> opened');
     element.remark = { text: 'no', urgent: true };
     await element.updateComplete;
     expect(element.shadowRoot!.querySelector('[role=alert]')!.textContent).to.equal('no');

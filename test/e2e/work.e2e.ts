@@ -30,7 +30,7 @@ const STRIP: Path = ['hm-app', 'hm-strip'];
 const SAVING: Path = ['hm-app', 'hm-conditions', '.saving'];
 const conductionEdge = (page: Page) => at(page, ['hm-app', 'hm-plate', '[data-role="conduction-edge"]'], (path) => path.getAttribute('d'));
 const stripText = async (page: Page): Promise<string> => (await at(page, STRIP, (strip) => strip.shadowRoot!.textContent!.replace(/\s+/g, ' '))) ?? '';
-const remark = async (page: Page): Promise<string> => (await at(page, ['hm-app', 'hm-messages', '[role=status]'], (element) => element.textContent!)) ?? '';
+const remark = async (page: Page): Promise<string> => (await at(page, ['hm-app', 'hm-messages', '.polite'], (element) => element.textContent!)) ?? '';
 const solved = async (page: Page): Promise<boolean> => (await at(page, ['hm-app', 'hm-messages'], (messages) => (messages as unknown as { findings: { status: string } }).findings.status)) === 'complete';
 
 /** Presses Tab until the focus stands on an element that answers. */
