@@ -10,6 +10,8 @@ export interface NewtonResult {
 
 const MOST_UPDATES = 200;
 const SMALLEST_STEP = 1e-7;
+/** An update after which the charge need not be taken anew, V: at 4 K it moves by less than 1e-9 of itself. */
+const NEGLIGIBLE = 1e-13;
 /** A frozen layer's matrix can ask for 1e9 V; no sensible stack moves by more than this at once. */
 const MOST_VOLTS = 2;
 
@@ -26,9 +28,10 @@ const MOST_VOLTS = 2;
  */
 export function newton(system: PoissonSystem, psi: Float64Array, evaluated = false): NewtonResult {
   const n = psi.length;
-  const step = new Float64Array(n);
-  const next = new Float64Array(n);
-  const trial = new Float64Array(n);
+  const memory = new Float64Array(3 * n);
+  const step = memory.subarray(0, n);
+  const next = memory.subarray(n, 2 * n);
+  const trial = memory.subarray(2 * n);
   let updates = 0;
   let lambda = 1;
   let lastUpdate = Infinity;
@@ -44,7 +47,8 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
     // The update itself decides, and it is taken in full: near the end Newton's error is far below its last step.
     if (size < ACCEPTANCE.update) {
       for (let i = 0; i < n; i++) psi[i] += step[i];
-      system.evaluate(psi, false);
+      // Charge moves by update/kT of itself: below this nothing that is asked of it.
+      if (size > NEGLIGIBLE) system.evaluate(psi, false);
       return { converged: true, updates, lastUpdate: size, reason: 'small update' };
     }
     if (!convex) {
@@ -114,11 +118,13 @@ function convexStep(system: PoissonSystem, psi: Float64Array, step: Float64Array
   return low;
 }
 
-function largest(v: Float64Array): number {
+/** Largest size of an element; NaN where there is one. */
+export function largest(v: Float64Array): number {
   let m = 0;
   for (let i = 0; i < v.length; i++) {
     const a = Math.abs(v[i]);
-    if (!(a <= m)) m = a;
+    if (a > m) m = a;
+    else if (a !== a) return NaN;
   }
   return m;
 }

@@ -1,5 +1,5 @@
 import { halved, type Mesh } from './mesh.ts';
-import { newton, type NewtonResult } from './newton.ts';
+import { largest, newton, type NewtonResult } from './newton.ts';
 import { gaussError } from './poisson-balance.ts';
 import { setEnds } from './poisson-guess.ts';
 import { profilesOf } from './poisson-profiles.ts';
@@ -57,7 +57,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     const missed = system.defects(values);
     const errors = rowErrors(missed, system.response());
     system.solve(missed);
-    return { system, run, errors, estimate: missed.reduce((most, v) => Math.max(most, Math.abs(v)), 0) };
+    return { system, run, errors, estimate: largest(missed) };
   };
   const carryTo = (from: Solved, values: Float64Array): void => {
     mesh = equidistributed(problem, from.system, from.errors, share * target);

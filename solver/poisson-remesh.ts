@@ -14,7 +14,9 @@ const POWER = 1 / 5;
 
 /** Rows' shares in the error of psi: the charge that each misses times the response of its own node, V [nodes]. */
 export function rowErrors(defects: Float64Array, response: Float64Array): Float64Array {
-  return defects.map((d, i) => Math.abs(d) * response[i]);
+  const out = new Float64Array(defects.length);
+  for (let i = 0; i < out.length; i++) out[i] = Math.abs(defects[i]) * response[i];
+  return out;
 }
 
 /**

@@ -81,23 +81,27 @@ export class PoissonSystem {
     const n = mesh.nodes;
     const layers = mesh.local.length;
     const sides = n + layers - 1;
-    this.conductance = new Float64Array(n - 1);
-    this.residual = new Float64Array(n);
-    this.lower = new Float64Array(n);
-    this.diagonal = new Float64Array(n);
-    this.upper = new Float64Array(n);
-    this.takenFirst = new Float64Array(layers);
-    this.takenLast = new Float64Array(layers);
+    // One piece of memory for all: twenty small ones cost more than the arithmetic on them.
+    const memory = new Float64Array(5 * n + 9 * sides + 2 * layers);
+    let used = 0;
+    const take = (length: number): Float64Array => memory.subarray(used, (used += length));
+    this.conductance = take(n - 1);
+    this.residual = take(n);
+    this.lower = take(n);
+    this.diagonal = take(n);
+    this.upper = take(n);
+    this.takenFirst = take(layers);
+    this.takenLast = take(layers);
     this.factors = new TridiagonalFactors(n);
-    this.density = new Float64Array(sides);
-    this.slope = new Float64Array(sides);
-    this.ecFlat = new Float64Array(sides);
-    this.gap = new Float64Array(sides);
-    this.permittivity = new Float64Array(sides);
+    this.density = take(sides);
+    this.slope = take(sides);
+    this.ecFlat = take(sides);
+    this.gap = take(sides);
+    this.permittivity = take(sides);
+    this.stretch = take(sides);
+    this.weights = take(3 * sides);
     this.charges = new Array<LocalCharge>(sides);
-    this.weights = new Float64Array(3 * sides);
     this.lumped = new Uint8Array(sides);
-    this.stretch = new Float64Array(sides).fill(1);
     this.stretched = mesh.local.map((z, l) => this.fill(problem.layers[l], z, mesh.first[l] + l));
     this.stretched.forEach((x, l) => {
       for (let k = 0; k < x.length; k++) {
@@ -133,7 +137,7 @@ export class PoissonSystem {
       this.ecFlat[s] = ecFlat;
       this.gap[s] = gap;
       this.permittivity[s] = eps;
-      this.stretch[s] = eps / eps0;
+      this.stretch[s] = eps === eps0 ? 1 : eps / eps0;
     }
     return x;
   }
@@ -308,7 +312,8 @@ export class PoissonSystem {
       const { insulator, kT } = this.charges[s0].bands;
       if (insulator) return;
       const own = new Float64Array(m + 1);
-      const source = density.subarray(s0, s0 + m + 1).map((rho, k) => rho * this.stretch[s0 + k]);
+      const source = new Float64Array(m + 1);
+      for (let k = 0; k <= m; k++) source[k] = density[s0 + k] * this.stretch[s0 + k];
       compactDefects(x, source, own);
       const top = steepening((psi[first + 1] - psi[first]) / kT);
       const bottom = steepening((psi[first + m] - psi[first + m - 1]) / kT);

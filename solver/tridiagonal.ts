@@ -16,7 +16,7 @@ export class TridiagonalFactors {
     this.size = size;
     this.pivotInverse = new Float64Array(size);
     this.multiplier = new Float64Array(size);
-    this.upper = new Float64Array(size);
+    this.upper = this.multiplier;
   }
 
   /** Factors the matrix; false when a pivot vanishes or is not finite (a singular matrix). */
