@@ -18,6 +18,7 @@ import type { HalfmarkEvents, PageAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
 import '../hm-about/hm-about.ts';
+import '../hm-assumptions/hm-assumptions.ts';
 import '../hm-conditions/hm-conditions.ts';
 import '../hm-dialog/hm-dialog.ts';
 import '../hm-leave/hm-leave.ts';
@@ -28,20 +29,19 @@ import '../hm-projects/hm-projects.ts';
 import '../hm-rail/hm-rail.ts';
 import '../hm-starters/hm-starters.ts';
 import '../hm-strip/hm-strip.ts';
+import '../hm-variables/hm-variables.ts';
 import { choicesFor, fetchStarters, starterCards, type Choices } from './choices.ts';
 import { styles } from './hm-app.styles.ts';
 import { IncomingController } from './incoming.ts';
 import { pageKey } from './keys.ts';
 import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
+import { RemarkController } from './remark-controller.ts';
+import { StaleController } from './stale-controller.ts';
 
 type On<K extends keyof HalfmarkEvents> = CustomEvent<HalfmarkEvents[K]>;
 /** Showing, or about to show: methods that every dialog of the page has. */
 type Showing = HTMLElement & { show(): void };
 
-/** A result that is stale for less than this is not dimmed: while something is dragged the next one is already on its way, ms. */
-const DIM_AFTER_MS = 150;
-/** A remark that asks for nothing leaves the page after this, ms. */
-const REMARK_MS = 12_000;
 
 /**
  * The page. It alone knows the open session, the store of projects and the solver; every other element gets values and tells wishes.
@@ -55,9 +55,7 @@ export class HmApp extends LitElement {
     ready: { state: true },
     axes: { state: true },
     choices: { state: true },
-    remark: { state: true },
     deskRemark: { state: true },
-    dim: { state: true },
     theme: { state: true },
     regardless: { state: true },
   };
@@ -66,9 +64,7 @@ export class HmApp extends LitElement {
   /** a project is on the page */ declare private ready: boolean;
   /** of the plate, for the rail and the strip */ declare private axes: PlateAxes | null;
   declare private choices: Choices;
-  declare private remark: HalfmarkEvents['hm-say'] | null;
   /** what the last act in the list of projects came to */ declare private deskRemark: string;
-  declare private dim: boolean;
   declare private theme: Theme;
   /** what was asked for and waits, because something is not saved */ declare private regardless: (() => Promise<DeskOutcome>) | null;
 
@@ -77,8 +73,8 @@ export class HmApp extends LitElement {
   private store!: ProjectStore;
   private keeper!: Keeper;
   private desk!: ProjectDesk;
-  private dimTimer: ReturnType<typeof setTimeout> | undefined;
-  private remarkTimer: ReturnType<typeof setTimeout> | undefined;
+  private readonly remarks = new RemarkController(this);
+  private readonly staleness = new StaleController(this);
   /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
   private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
@@ -94,9 +90,7 @@ export class HmApp extends LitElement {
     this.ready = false;
     this.axes = null;
     this.choices = { materials: [], dopants: [], metals: [] };
-    this.remark = null;
     this.deskRemark = '';
-    this.dim = false;
     this.theme = readTheme();
     this.regardless = null;
   }
@@ -124,8 +118,6 @@ export class HmApp extends LitElement {
     document.removeEventListener('visibilitychange', this.hide);
     removeEventListener('pagehide', this.hide);
     removeEventListener('keydown', this.key, { capture: true });
-    clearTimeout(this.dimTimer);
-    clearTimeout(this.remarkTimer);
     this.solver.close();
     const { keeper, store } = this;
     void keeper.close().finally(() => store.close());
@@ -170,11 +162,9 @@ export class HmApp extends LitElement {
   // What the page hears.
 
   private found(): void {
-    const { status, stale, refusal, complaints } = this.session.findings;
-    clearTimeout(this.dimTimer);
-    if (!stale) this.dim = false;
-    else if (status === 'error') this.dim = true;
-    else this.dimTimer = setTimeout(() => (this.dim = true), DIM_AFTER_MS);
+    const { findings } = this.session;
+    const { status, refusal, complaints } = findings;
+    this.staleness.follow(findings);
     const fails = refusal !== null || complaints.length > 0;
     // The reason itself is spoken by the messages; that it is over has no other voice.
     if (status === 'complete' && this.failed) this.say('Solved.');
@@ -192,10 +182,7 @@ export class HmApp extends LitElement {
   }
 
   private say(text: string, urgent = false): void {
-    // An equal sentence is spoken only if the region changes.
-    this.remark = { text: this.remark?.text === text ? `${text} ` : text, urgent };
-    clearTimeout(this.remarkTimer);
-    if (!urgent) this.remarkTimer = setTimeout(() => (this.remark = null), REMARK_MS);
+    this.remarks.say(text, urgent);
   }
 
   private show(name: string): void {
@@ -313,7 +300,7 @@ export class HmApp extends LitElement {
           .theme=${this.theme}
         ></hm-conditions>
       </header>
-      <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remark} .layers=${this.handed?.names ?? []}></hm-messages>
+      <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remarks.remark} .layers=${this.handed?.names ?? []}></hm-messages>
       ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${this.renderDialogs()}
       ${this.incoming.over ? html`<p class="drop">Let go to open the file</p>` : nothing}
     </div>`;
@@ -330,12 +317,12 @@ export class HmApp extends LitElement {
         <hm-plate
           .result=${result}
           .view=${plateView}
-          .stale=${this.dim}
+          .stale=${this.staleness.dim}
           .depth_nm=${depth_nm}
           @plate-drawn=${({ detail }: CustomEvent<PlateAxes>) => (this.axes = detail)}
         ></hm-plate>
       </div>
-      <div class="beside"><hm-rail .result=${result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${this.dim}></hm-rail></div>
+      <div class="beside"><hm-rail .result=${result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${this.staleness.dim}></hm-rail></div>
       <div class="under">
         <h2 class="spoken">Layer stack</h2>
         <hm-strip
@@ -349,9 +336,13 @@ export class HmApp extends LitElement {
           .metals=${choices.metals}
         ></hm-strip>
       </div>
+      <div class="givens">
+        <hm-variables .design=${session.design} .complaints=${session.findings.complaints}></hm-variables>
+        <hm-assumptions .design=${session.design}></hm-assumptions>
+      </div>
       <div class="figures">
         <h2 class="spoken">Ledger</h2>
-        <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.dim}></hm-ledger>
+        <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.staleness.dim}></hm-ledger>
       </div>
     </main>`;
   }

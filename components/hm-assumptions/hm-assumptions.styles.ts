@@ -1,0 +1,37 @@
+import { css } from 'lit';
+
+export const styles = css`
+  h2 {
+    font-size: 0.9375rem;
+    font-weight: 600;
+    margin: 0 0 0.25rem;
+    border-bottom: 1px solid var(--ink);
+  }
+  label {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    justify-content: space-between;
+    gap: 0.1rem 0.5rem;
+    padding: 0.15rem 0;
+    color: var(--faint);
+  }
+  select {
+    min-height: 28px;
+    max-width: 100%;
+    color: var(--ink);
+  }
+  .check {
+    justify-content: flex-start;
+    flex-wrap: nowrap;
+    min-height: 28px;
+    color: var(--ink);
+  }
+  .check input {
+    flex: none;
+    width: 18px;
+    height: 18px;
+    min-height: 0;
+    accent-color: var(--choice);
+  }
+`;

@@ -1,0 +1,54 @@
+import { css } from 'lit';
+
+export const styles = css`
+  h2 {
+    font-size: 0.9375rem;
+    font-weight: 600;
+    margin: 0 0 0.25rem;
+    border-bottom: 1px solid var(--ink);
+  }
+  p {
+    margin: 0.2rem 0 0.4rem;
+    color: var(--faint);
+  }
+  ul {
+    list-style: none;
+    margin: 0 0 0.4rem;
+    padding: 0;
+  }
+  li {
+    padding: 0.3rem 0;
+    border-bottom: 1px solid var(--line);
+  }
+  .row {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: flex-end;
+    gap: 0.25rem 0.5rem;
+    --field-width: 5.75rem;
+  }
+  .value {
+    --field-width: 8rem;
+  }
+  input[type='range'] {
+    width: 100%;
+    min-height: 28px;
+    margin: 0.15rem 0 0;
+    padding: 0;
+    border: 0;
+    accent-color: var(--choice);
+  }
+  summary {
+    cursor: pointer;
+    color: var(--faint);
+    font-size: 0.8125rem;
+    min-height: 24px;
+  }
+  .remove {
+    min-height: 28px;
+  }
+  .note {
+    font-size: 0.8125rem;
+    overflow-wrap: anywhere;
+  }
+`;
