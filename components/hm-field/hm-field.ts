@@ -8,7 +8,7 @@ import { styles } from './hm-field.styles.ts';
  * with the complaint under it.
  *
  * @fires field-accept  detail: the text, only if it is another one; does not leave the form that holds the field
- * @fires field-leave   Enter without a change, or Escape
+ * @fires field-leave   detail: 'Enter' (without a change) or 'Escape'; crosses the forms' shadow roots, so that what opened them can take the focus back
  * @cssproperty --field-width
  */
 export class HmField extends LitElement {
@@ -68,8 +68,8 @@ export class HmField extends LitElement {
     return true;
   }
 
-  private leave(): void {
-    this.dispatchEvent(new CustomEvent('field-leave'));
+  private leave(key: 'Enter' | 'Escape'): void {
+    this.dispatchEvent(new CustomEvent('field-leave', { detail: key, bubbles: true, composed: true }));
   }
 
   private key(event: KeyboardEvent): void {
@@ -78,11 +78,11 @@ export class HmField extends LitElement {
     if (event.key === 'Enter' && !this.lines && !event.isComposing) {
       event.preventDefault();
       if (this.accept()) this.box.select();
-      else this.leave();
+      else this.leave('Enter');
     } else if (event.key === 'Escape') {
       event.preventDefault();
       this.box.value = this.value;
-      this.leave();
+      this.leave('Escape');
     }
   }
 

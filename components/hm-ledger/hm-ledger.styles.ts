@@ -149,9 +149,10 @@ export const styles = css`
     padding-inline-start: 6px;
     margin: 0 0 6px;
   }
-  :host([stale]) .scroll,
-  :host([stale]) .quality {
-    opacity: 0.55;
+  /* Dimmed and slanted: still to be read, not to be taken for the figures of now. */
+  :host([stale]) :is(.scroll, thead button, tbody button) {
+    color: var(--faint);
+    font-style: italic;
   }
   .empty {
     color: var(--faint);

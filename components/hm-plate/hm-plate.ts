@@ -6,6 +6,7 @@ import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { WidthController } from '../shared/width-controller.ts';
 import { panned, zoomed, zoomedEnergies } from './depth-window.ts';
 import { styles } from './hm-plate.styles.ts';
 import { plateTable } from './plate-table.ts';
@@ -40,11 +41,11 @@ export class HmPlate extends LitElement {
   static override styles = [look, styles];
   static override properties = {
     result: { attribute: false },
-    view: { attribute: false },
+    // By its contents: the page hands over a new record with every pointer move, and the picture is not drawn anew for that.
+    view: { attribute: false, hasChanged: (next: PlateView, before: PlateView | undefined) => JSON.stringify(next) !== JSON.stringify(before) },
     stale: { type: Boolean, reflect: true },
     notice: {},
     depth_nm: { attribute: false },
-    width: { state: true },
     open: { state: true },
     dark: { state: true },
     holding: { state: true },
@@ -56,7 +57,6 @@ export class HmPlate extends LitElement {
   /** the result is of the stack before the last change */ declare stale: boolean;
   /** why there is no newer picture, in words */ declare notice: string | null;
   /** where the reading cursor stands, nm; null: nowhere */ declare depth_nm: number | null;
-  declare private width: number;
   declare private open: { dimensions: boolean; table: boolean };
   declare private dark: boolean;
   declare private holding: boolean;
@@ -65,7 +65,8 @@ export class HmPlate extends LitElement {
   private plate: Plate | null = null;
   private readonly ids = `plate-${++plates}`;
   private hold: { kind: 'pan'; x: number; started: boolean } | { kind: 'figure'; id: string; x: number; y: number; from: [number, number] } | null = null;
-  private readonly watch = new ResizeObserver(([entry]) => (this.width = Math.round(entry.contentRect.width)));
+  private readonly room = new WidthController(this, '.frame');
+  private drawnWidth = 0;
   private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
   private readonly followDarkness = (): void => void (this.dark = this.darkness.matches);
   private lastTold = '';
@@ -77,7 +78,6 @@ export class HmPlate extends LitElement {
     this.stale = false;
     this.notice = null;
     this.depth_nm = null;
-    this.width = 0;
     this.open = { dimensions: false, table: false };
     this.dark = false;
     this.holding = false;
@@ -86,24 +86,13 @@ export class HmPlate extends LitElement {
 
   override connectedCallback(): void {
     super.connectedCallback();
-    this.watchFrame();
     this.followDarkness();
     this.darkness.addEventListener('change', this.followDarkness);
   }
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
-    this.watch.disconnect();
     this.darkness.removeEventListener('change', this.followDarkness);
-  }
-
-  protected override firstUpdated(): void {
-    this.watchFrame();
-  }
-
-  private watchFrame(): void {
-    const frame = this.renderRoot?.querySelector('.frame');
-    if (frame) this.watch.observe(frame);
   }
 
   /** Of the picture as it stands; null while there is none. */
@@ -116,18 +105,20 @@ export class HmPlate extends LitElement {
   }
 
   private get height(): number {
-    return Math.round(Math.min(Math.max(this.width * SHAPE, HEIGHTS[0]), HEIGHTS[1]));
+    return Math.round(Math.min(Math.max(this.room.width * SHAPE, HEIGHTS[0]), HEIGHTS[1]));
   }
 
   protected override willUpdate(changed: PropertyValues): void {
-    const drawnFrom = ['result', 'view', 'stale', 'width', 'dark'];
-    if (drawnFrom.some((name) => changed.has(name))) this.plate = this.draw();
+    const drawnFrom = ['result', 'view', 'stale', 'dark'];
+    if (this.room.width === this.drawnWidth && !drawnFrom.some((name) => changed.has(name))) return;
+    this.drawnWidth = this.room.width;
+    this.plate = this.draw();
   }
 
   private draw(): Plate | null {
-    if (!this.result || this.width < LEAST_WIDTH) return null;
+    if (!this.result || this.room.width < LEAST_WIDTH) return null;
     const view = heldView(this.view);
-    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, width: this.width, height: this.height, frame: 'bare', prefix: this.ids });
+    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
   }
 
   protected override updated(): void {

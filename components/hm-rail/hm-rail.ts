@@ -5,6 +5,7 @@ import type { StyleName } from '../../src/drawing/styles.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
 import { look } from '../shared/look.ts';
+import { WidthController } from '../shared/width-controller.ts';
 import { styles } from './hm-rail.styles.ts';
 
 /** A page not laid out yet, px. */
@@ -25,7 +26,6 @@ export class HmRail extends LitElement {
     depth_nm: { attribute: false },
     styleName: {},
     stale: { type: Boolean, reflect: true },
-    width: { state: true },
     dark: { state: true },
   };
 
@@ -35,12 +35,11 @@ export class HmRail extends LitElement {
   /** null: nothing is read just now */ declare depth_nm: number | null;
   /** style of the drawing; by default light or dark as the page */ declare styleName: StyleName | undefined;
   declare stale: boolean;
-  declare private width: number;
   declare private dark: boolean;
 
   private kept_nm: number | null = null;
   private readonly ids = `rail-${++rails}`;
-  private readonly watch = new ResizeObserver(([entry]) => (this.width = Math.round(entry.contentRect.width)));
+  private readonly room = new WidthController(this);
   private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
   private readonly followDarkness = (): void => void (this.dark = this.darkness.matches);
 
@@ -51,20 +50,17 @@ export class HmRail extends LitElement {
     this.height = 400;
     this.depth_nm = null;
     this.stale = false;
-    this.width = 0;
     this.dark = false;
   }
 
   override connectedCallback(): void {
     super.connectedCallback();
-    this.watch.observe(this);
     this.followDarkness();
     this.darkness.addEventListener('change', this.followDarkness);
   }
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
-    this.watch.disconnect();
     this.darkness.removeEventListener('change', this.followDarkness);
   }
 
@@ -74,11 +70,11 @@ export class HmRail extends LitElement {
 
   override render(): TemplateResult {
     const { result, energy } = this;
-    if (!result || !energy || this.width < LEAST_WIDTH) return html`<div class="empty">Occupancy at a depth stands here.</div>`;
+    if (!result || !energy || this.room.width < LEAST_WIDTH) return html`<div class="empty">Occupancy at a depth stands here.</div>`;
     const total = result.layers.reduce((sum, layer) => sum + layer.thickness_nm, 0);
     // A depth kept from a thicker stack may lie outside of this one.
     const depth = Math.min(this.kept_nm ?? total / 2, total);
-    const drawing = drawRail(result, depth, { width: this.width, height: this.height, energy, style: this.styleName ?? (this.dark ? 'dark' : 'light'), prefix: this.ids });
+    const drawing = drawRail(result, depth, { width: this.room.width, height: this.height, energy, style: this.styleName ?? (this.dark ? 'dark' : 'light'), prefix: this.ids });
     return html`<svg width=${drawing.width} height=${drawing.height} viewBox="0 0 ${drawing.width} ${drawing.height}" role="img" aria-label=${drawing.title} aria-describedby="words">${drawn(drawing)}</svg>
       <p class="spoken" id="words">${drawing.description}</p>`;
   }

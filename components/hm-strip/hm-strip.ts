@@ -8,6 +8,7 @@ import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import type { DopantChoice, MaterialChoice, MetalChoice } from '../shared/menus.ts';
+import { WidthController } from '../shared/width-controller.ts';
 import { plainThickness } from '../shared/typed-text.ts';
 import type { HmField } from '../hm-field/hm-field.ts';
 import type { HmLayerForm } from '../hm-layer-form/hm-layer-form.ts';
@@ -53,7 +54,6 @@ export class HmStrip extends LitElement implements StripSurface {
     materials: { attribute: false },
     dopants: { attribute: false },
     metals: { attribute: false },
-    width: { state: true },
     inPlace: { state: true },
   };
 
@@ -66,12 +66,11 @@ export class HmStrip extends LitElement implements StripSurface {
   declare materials: readonly MaterialChoice[];
   declare dopants: readonly DopantChoice[];
   declare metals: readonly MetalChoice[];
-  declare private width: number;
   declare private inPlace: InPlace | null;
 
   private readonly pointer = new StripPointer(this);
   private focusNext: 'column' | 'form' | 'inplace' | null = null;
-  private readonly watch = new ResizeObserver(([entry]) => (this.width = entry.contentRect.width));
+  private readonly room = new WidthController(this);
 
   constructor() {
     super();
@@ -84,18 +83,7 @@ export class HmStrip extends LitElement implements StripSurface {
     this.materials = [];
     this.dopants = [];
     this.metals = [];
-    this.width = 800;
     this.inPlace = null;
-  }
-
-  override connectedCallback(): void {
-    super.connectedCallback();
-    this.watch.observe(this);
-  }
-
-  override disconnectedCallback(): void {
-    super.disconnectedCallback();
-    this.watch.disconnect();
   }
 
   protected override updated(): void {
@@ -118,15 +106,15 @@ export class HmStrip extends LitElement implements StripSurface {
   }
 
   private geometry(): StripGeometry {
-    return stripGeometry(this.axis, this.design!.layers.length, this.width);
+    return stripGeometry(this.axis, this.design!.layers.length, this.room.width);
   }
 
   override render(): TemplateResult | typeof nothing {
     const { design } = this;
-    if (!design) return nothing;
+    if (!design || this.room.width === 0) return nothing;
     const g = this.geometry();
     return html`
-      ${insertLane(design, g.edges, this.width, (at) => this.act(inserted(design, at)))}
+      ${insertLane(design, g.edges, this.room.width, (at) => this.act(inserted(design, at)))}
       <div class="stack" @pointermove=${this.pointer.move} @pointerup=${this.pointer.up} @pointercancel=${this.pointer.cancel} @keydown=${this.key}>
         <div class="columns" role="listbox" aria-label="layer stack, surface to bottom" aria-orientation="horizontal" @pointerdown=${(e: PointerEvent) => this.pointer.press(e)} @click=${this.pressed}>
           ${this.renderContact('top', g)} ${design.layers.map((_, i) => this.renderLayer(i, g))} ${this.renderContact('bottom', g)}
@@ -135,8 +123,8 @@ export class HmStrip extends LitElement implements StripSurface {
         ${this.pointer.lifted ? html`<div class="landing" data-left=${this.landingX(g)}></div>` : nothing}
         ${this.renderInPlace()}
       </div>
-      ${interfaceLane(design, g.edges, this.width, this.chosen?.kind === 'interface' ? this.chosen.index : null, this.complaints, (index) => this.choose({ kind: 'interface', index }, 'form'))}
-      ${cards(g.layers, this.slim(g), this.width, this.chosen?.kind === 'layer' ? this.chosen.index : null, (i) => this.renderValues(i), this.pressed)}
+      ${interfaceLane(design, g.edges, this.room.width, this.chosen?.kind === 'interface' ? this.chosen.index : null, this.complaints, (index) => this.choose({ kind: 'interface', index }, 'form'))}
+      ${cards(g.layers, this.slim(g), this.room.width, this.chosen?.kind === 'layer' ? this.chosen.index : null, (i) => this.renderValues(i), this.pressed)}
       ${this.renderEditor()}
     `;
   }
@@ -153,10 +141,9 @@ export class HmStrip extends LitElement implements StripSurface {
       class="column contact ${side} ${span.right - span.left < CONTACT_ROOM ? 'slim' : ''} ${wrong.length > 0 ? 'wrong' : ''}"
       data-contact=${index}
       aria-selected=${isChosen}
-      aria-label="${side} contact: ${[...lines, ...wrong].join(', ')}"
       tabindex=${isChosen ? 0 : -1}
     >
-      <span class="lines"><span class="name">${lines[0]}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span>
+      <span class="spoken">${side} contact: </span><span class="lines"><span class="name">${lines[0]}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span><span class="spoken">${wrong.join('; ')}</span>
     </div>`;
   }
 
@@ -174,10 +161,9 @@ export class HmStrip extends LitElement implements StripSurface {
       class="column layer ${kind} ${i === layers.length - 1 ? 'last' : ''} ${width < 1.5 ? 'gone' : fits ? '' : 'slim'} ${wrong.length > 0 ? 'wrong' : ''} ${this.pointer.lifted?.from === i ? 'lifted' : ''}"
       data-layer=${i}
       aria-selected=${isChosen}
-      aria-label=${layerSentence(layers[i], i, layers.length, wrong)}
       tabindex=${inReach ? 0 : -1}
     >
-      ${fits ? this.renderValues(i) : width >= 12 ? html`<span class="number">${i + 1}</span>` : nothing}
+      ${fits ? html`${this.renderValues(i)}<span class="spoken">${wrong.join('; ')}</span>` : html`${width >= 12 ? html`<span class="number" aria-hidden="true">${i + 1}</span>` : nothing}<span class="spoken">${layerSentence(layers[i], i, layers.length, wrong)}</span>`}
     </div>`;
   }
 
@@ -247,7 +233,7 @@ export class HmStrip extends LitElement implements StripSurface {
   }
 
   private editor(title: string, content: TemplateResult): TemplateResult {
-    return html`<section class="editor" aria-label=${title} @keydown=${this.escapeEditor}>
+    return html`<section class="editor" aria-label=${title} @keydown=${(e: KeyboardEvent) => e.key === 'Escape' && this.backToColumn()} @field-leave=${(e: CustomEvent<string>) => e.detail === 'Escape' && this.backToColumn()}>
       <header><h3>${title}</h3></header>
       ${content}
     </section>`;
@@ -301,9 +287,7 @@ export class HmStrip extends LitElement implements StripSurface {
     else if (form) void (form as LitElement).updateComplete.then(() => form.focus());
   }
 
-  private escapeEditor(event: KeyboardEvent): void {
-    if (event.key !== 'Escape') return;
-    event.preventDefault();
+  private backToColumn(): void {
     this.focusNext = 'column';
     this.requestUpdate();
   }
