@@ -71,6 +71,16 @@ export interface ContactFigures {
   /** eV */ e00: number | null;
   transport: 'thermionic' | 'thermionic-field' | 'field' | null;
   /** cm */ depletion: number | null;
+  /** specific contact resistivity at zero bias through the solved barrier, both carriers in parallel, ohm cm^2; null at ends that are no barrier and where a note says why */ rhoC: number | null;
+  rhoCn: number | null;
+  rhoCp: number | null;
+  /** the majority's with T = 1: nothing conducts better */ rhoCFloor: number | null;
+  /** by the closed form named, depletion approximation, no image force */ rhoCClosedForm: number | null;
+  closedForm: 'thermionic' | 'thermionic-field' | 'field' | null;
+  /** A T^2 exp(-phi/kT) of the majority at the metal, lowered barrier, A/cm^2 */ saturationCurrent: number | null;
+  transmission: 'wkb' | 'kemble' | 'exact' | null;
+  /** relative, of the integrals of rhoC */ rhoError: number | null;
+  /** why there is no rhoC */ rhoCNotes: string[];
 }
 
 /** Every mesh node, an interface twice (once for each side). All arrays [nodes]. */

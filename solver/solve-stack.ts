@@ -40,7 +40,7 @@ export function solveStack(stack: Stack, options: SolveOptions = {}): Solution |
   const solution: Solution = {
     stack, profiles, quality, layers,
     junctions: alignment.interfaces.map((_, i) => junctionFigures(stack, alignment, profiles, space, sheets, i)),
-    contacts: [contactFigures(stack, profiles, space, 'top'), contactFigures(stack, profiles, space, 'bottom')],
+    contacts: (['top', 'bottom'] as const).map((side) => contactFigures(stack, profiles, space, side, options.contacts ?? true)),
     warnings: [],
   };
   solution.warnings = warningsOf(solution);

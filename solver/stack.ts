@@ -98,6 +98,15 @@ export interface CrystalMaterial {
   /** valence edge on a named scale of natural offsets, eV, unstrained */
   naturalValence?: { scale: string; edge: number };
   validity?: Validity;
+  outsideContactModel?: OutsideContactModel;
+}
+
+/** Contacts to one type of a material whose published resistivities lie decades away from what its barrier lets through. */
+export interface OutsideContactModel {
+  carrier: 'n' | 'p';
+  /** published, ohm cm^2 */ low: number;
+  high: number;
+  /** author, year, journal */ source: string;
 }
 
 /** P(x) = (1 - x) first + x second - x (1 - x) bowing, for each property that has a bowing (0 else). */
@@ -212,6 +221,7 @@ export interface Stack {
 export interface SolveOptions {
   /** accepted estimated mesh error in psi, V; default 1e-4 */ accuracy?: number;
   /** most mesh nodes; default 40000 */ maxNodes?: number;
+  /** whether contact resistivities are worked out; default true */ contacts?: boolean;
   /** Start from an earlier solution of a similar stack (same number of layers): its mesh and its potential. */
   warmStart?: import('./solution.ts').Profiles;
 }

@@ -90,16 +90,23 @@ function sharedCentres(dopants: readonly Dopant[]): Set<string> {
   return shared;
 }
 
-function contactWarnings({ stack, contacts }: Solution): string[] {
+function contactWarnings(solution: Solution): string[] {
+  const { stack, contacts } = solution;
   const out: string[] = [];
   for (const contact of contacts) {
     if (contact.lowering && contact.e00 !== null && contact.e00 > 5 * BOLTZMANN * stack.temperature) {
       out.push(`${contact.side} contact: so heavily doped that the image-force lowering has no meaning as a continuum figure`);
     }
+    for (const note of contact.rhoCNotes) out.push(`${contact.side} contact: ${note}`);
     const boundary = stack[contact.side];
     const layer = stack.layers[contact.side === 'top' ? 0 : stack.layers.length - 1];
     if (boundary.kind === 'barrier' && boundary.source.from === 'workFunction' && boundary.source.slope === 'material' && !knowsPinning(layer)) {
       out.push(`${contact.side} contact: how strongly ${layer.material.id} pins a metal is not known; its barrier is the ideal one (S = 1)`);
+    }
+    const outside = isAlloy(layer.material) ? undefined : layer.material.outsideContactModel;
+    const type = solution.layers[contact.side === 'top' ? 0 : stack.layers.length - 1].type;
+    if (boundary.kind === 'barrier' && outside && type === outside.carrier) {
+      out.push(`${contact.side} contact: mechanism outside the model; contacts to ${outside.carrier}-type ${layer.material.id} were measured between ${outside.low} and ${outside.high} ohm cm^2 (${outside.source}), decades away from what a barrier explains`);
     }
   }
   return out;

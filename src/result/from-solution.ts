@@ -95,6 +95,15 @@ function contactResult(f: ContactFigures, { stack }: Solution): ContactResult {
     e00_meV: f.e00 === null ? null : f.e00 * MEV_PER_EV,
     transport: f.transport,
     depletion_nm: inNm(f.depletion),
+    rho_c_ohm_cm2: finite(f.rhoC),
+    rho_c_n_ohm_cm2: finite(f.rhoCn),
+    rho_c_p_ohm_cm2: finite(f.rhoCp),
+    rho_c_closed_form_ohm_cm2: finite(f.rhoCClosedForm),
+    closed_form: f.closedForm,
+    rho_c_floor_ohm_cm2: finite(f.rhoCFloor),
+    saturation_A_cm2: f.saturationCurrent,
+    transmission: f.transmission,
+    rho_c_error: f.rhoError,
   };
 }
 
@@ -133,5 +142,8 @@ function vacuum(profiles: Profiles, layers: LayerFigures[], stack: Solution['sta
     return ec + bandsAt(layer, profiles.z[s] - tops[l], stack.temperature, stack.assumptions).affinity;
   });
 }
+
+/** JSON knows no infinity: a resistivity beyond the largest number is null. */
+const finite = (value: number | null): number | null => (value !== null && Number.isFinite(value) ? value : null);
 
 const inNm = (cm: number | null): number | null => (cm === null ? null : cm * NM_PER_CM);

@@ -5,6 +5,9 @@
  * `profile` is the Fermi level of the bottom contact. A key that does not apply is null; a figure that the solver does not stand behind is null too.
  */
 import type { Complaint } from '../design/complaint.ts';
+import type { RequirementResult } from './requirement-result.ts';
+
+export type { RequirementResult };
 
 export const RESULT_FORMAT = 'halfmark-result/1';
 
@@ -79,6 +82,15 @@ export interface ContactResult {
   e00_meV: number | null;
   transport: 'thermionic' | 'thermionic-field' | 'field' | null;
   depletion_nm: number | null;
+  /** at zero bias through the solved barrier, both carriers in parallel; null at an end that is no barrier, where a warning says why, and beyond the largest number */ rho_c_ohm_cm2: number | null;
+  rho_c_n_ohm_cm2: number | null;
+  rho_c_p_ohm_cm2: number | null;
+  /** depletion approximation, no image force */ rho_c_closed_form_ohm_cm2: number | null;
+  closed_form: 'thermionic' | 'thermionic-field' | 'field' | null;
+  /** the ballistic limit of the majority */ rho_c_floor_ohm_cm2: number | null;
+  /** thermionic emission of the majority over the lowered barrier */ saturation_A_cm2: number | null;
+  transmission: 'wkb' | 'kemble' | 'exact' | null;
+  /** relative, of the integrals over energy and depth */ rho_c_error: number | null;
 }
 
 /** Every mesh node, an interface twice (once for each side). All arrays of one length. */
@@ -122,6 +134,7 @@ export interface Result {
   junctions: JunctionResult[];
   contacts: ContactResult[];
   profile: ProfileResult;
+  /** only where they were asked for: they take many solves */ requirements?: RequirementResult[];
   quality: QualityResult;
   provenance: Provenance;
   warnings: string[];

@@ -11,6 +11,8 @@ export const CRYSTAL: CrystalMaterial = {
   permittivityHighFrequency: 11.7,
   electronMass: [1.09],
   holeMass: [1.15],
+  tunnellingMass: { electron: 0.3, hole: 0.2 },
+  richardson: { electron: 110, hole: 80 },
 };
 
 /** Donors that are charged whatever the Fermi level. */
