@@ -51,7 +51,7 @@ export function differenceText(value: number | null, digits = 2): string {
   return value !== null && value > 0 && Number.isFinite(value) ? `+${text}` : text;
 }
 
-/** toPrecision without its exponent form; whole numbers longer than `digits` are rounded to whole units. */
+/** toPrecision without its exponent form: 12345 to three digits is 12300. */
 function plain(value: number, digits: number): string {
   const text = value.toPrecision(digits);
   return text.includes('e') ? Number(text).toFixed(0) : text;
