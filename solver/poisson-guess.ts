@@ -4,6 +4,7 @@ import { neutralLevel } from './fermi-level.ts';
 import { gradedLayer, meshOf, type Mesh } from './mesh.ts';
 import { PoissonSystem, type PoissonLayer, type PoissonProblem } from './poisson-system.ts';
 import type { PoissonStart } from './poisson.ts';
+import type { Landmark } from './profile.ts';
 
 /** Local neutrality on a coarse mesh. */
 export function coldStart(problem: PoissonProblem): PoissonStart {
@@ -22,8 +23,30 @@ function firstLayerMesh(layer: PoissonLayer): Float64Array {
   chargeAt(middle, neutralLevel(middle).ecMinusEf, out);
   const debye = Math.sqrt(layer.permittivity(layer.thickness / 2) / (ELEMENTARY_CHARGE * Math.max(out.slope, 1e-30)));
   const finest = Math.min(layer.thickness / 8, Math.max(1e-8, Math.min(debye, 2e-7)));
-  // A profile can hide between the nodes of a coarse mesh: graded layers start with more of them.
-  return gradedLayer(layer.thickness, finest, layer.thickness / (layer.uniform ? 6 : 48));
+  // A profile can hide between the nodes of a coarse mesh: graded layers start with more of them, and with some at every landmark.
+  return withLandmarks(gradedLayer(layer.thickness, finest, layer.thickness / (layer.uniform ? 6 : 48)), layer.landmarks ?? []);
+}
+
+/** Nodes at each landmark and at one and two reaches from it; other nodes give way where they come close. */
+function withLandmarks(z: Float64Array, landmarks: readonly Landmark[]): Float64Array {
+  if (landmarks.length === 0) return z;
+  const end = z[z.length - 1];
+  const wanted = landmarks.flatMap((mark) => [-2, -1, 0, 1, 2].map((j) => ({ z: mark.z + j * mark.reach, room: 0.3 * mark.reach })));
+  // Finest first, so that a wide landmark's nodes give way to a narrow one's.
+  wanted.sort((a, b) => a.room - b.room);
+  const nodes = [0, end];
+  for (const { z: at, room } of [...wanted, ...Array.from(z, (at) => ({ z: at, room: 0.3 * localSize(z, at) }))]) {
+    if (at <= 0 || at >= end) continue;
+    const i = nodes.findIndex((node) => node > at);
+    if (at - nodes[i - 1] > room && nodes[i] - at > room) nodes.splice(i, 0, at);
+  }
+  return Float64Array.from(nodes);
+}
+
+/** The smaller cell beside a node of a mesh. */
+function localSize(z: Float64Array, at: number): number {
+  const k = z.indexOf(at);
+  return Math.min(k > 0 ? z[k] - z[k - 1] : Infinity, k + 1 < z.length ? z[k + 1] - z[k] : Infinity);
 }
 
 /** psi [nodes] from local neutrality; straight across insulators. */

@@ -44,6 +44,9 @@ export function equidistributed(problem: PoissonProblem, system: PoissonSystem, 
         if (k < m) error = Math.max(error, errors[first + k + 1]);
         size[k] = Math.min(most, h * Math.min(COARSER, Math.max(FINER, (aim / error) ** POWER)));
       }
+      for (const mark of problem.layers[l].landmarks ?? []) {
+        for (let k = 0; k <= m; k++) size[k] = Math.min(size[k], mark.reach + GRADING * Math.abs(z[k] - mark.z));
+      }
       for (let k = 1; k <= m; k++) size[k] = Math.min(size[k], size[k - 1] + GRADING * (z[k] - z[k - 1]));
       for (let k = m - 1; k >= 0; k--) size[k] = Math.min(size[k], size[k + 1] + GRADING * (z[k + 1] - z[k]));
       return placed(z, size, least);

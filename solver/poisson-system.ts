@@ -2,6 +2,7 @@ import { chargeAt, type ChargeValues, type LocalCharge } from './charge.ts';
 import { ELEMENTARY_CHARGE } from './constants.ts';
 import type { Mesh } from './mesh.ts';
 import { compactDefects, compactEnd, compactRow } from './poisson-weights.ts';
+import type { Landmark } from './profile.ts';
 import { TridiagonalFactors } from './tridiagonal.ts';
 
 /** One layer as Poisson's equation sees it. Functions take the depth from the top of the layer, cm. */
@@ -12,6 +13,7 @@ export interface PoissonLayer {
   /** eV, from the common vacuum level */ ecFlat(z: number): number;
   /** eV */ gap(z: number): number;
   charge(z: number): LocalCharge;
+  /** what a mesh must not step over, in a graded layer */ landmarks?: readonly Landmark[];
 }
 
 /** An end of the stack: psi given (V), or a sheet charge (+q, cm^-2) with no field outside. */

@@ -80,3 +80,19 @@ function isFlat(p: Profile): boolean {
       return p.from === p.to;
   }
 }
+
+/** A depth of a layer, cm, where a profile peaks or bends, and the length over which it does. */
+export interface Landmark {
+  z: number;
+  reach: number;
+}
+
+/** Where the profiles of a layer do what evenly spread nodes could miss: at an implant's peak, at each inner point of a measured profile. */
+export function landmarksOf(layer: Layer): Landmark[] {
+  return [layer.x, ...layer.dopants.map((d) => d.concentration)].flatMap((p): Landmark[] => {
+    if (isFlat(p)) return [];
+    if (p.kind === 'implant') return [{ z: p.depth, reach: p.straggle }];
+    if (p.kind !== 'points') return [];
+    return p.z.slice(1, -1).map((z, i) => ({ z, reach: Math.min(z - p.z[i], p.z[i + 2] - z) }));
+  }).filter((mark) => mark.z > 0 && mark.z < layer.thickness && mark.reach > 0);
+}

@@ -9,7 +9,7 @@ import { junctionFigures } from './junction.ts';
 import { layerFigures } from './layer.ts';
 import { solvePoisson, type PoissonEnd, type PoissonProblem } from './poisson.ts';
 import { polarisationSheets } from './polarisation.ts';
-import { isUniform, profileAt } from './profile.ts';
+import { isUniform, landmarksOf, profileAt } from './profile.ts';
 import { isRefusal, type Refusal, type Solution } from './solution.ts';
 import type { SolveOptions, Stack } from './stack.ts';
 import { warningsOf } from './warnings.ts';
@@ -53,6 +53,7 @@ function poissonProblem(stack: Stack, alignment: Alignment, sheets: Float64Array
     layers: stack.layers.map((layer, l) => ({
       thickness: layer.thickness,
       uniform: isUniform(layer),
+      landmarks: landmarksOf(layer),
       permittivity: (z) => localCharge(layer, z, T, assumptions).bands.permittivity * EPSILON_0,
       ecFlat: (z) => alignment.ecFlat(l, z),
       gap: (z) => localCharge(layer, z, T, assumptions).bands.gap,

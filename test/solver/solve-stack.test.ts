@@ -154,6 +154,18 @@ describe('graded layers and insulators', () => {
     expect(Math.abs(dose / (Math.sqrt(2 * Math.PI) * 40e-7 * 8e17) - 1)).toBeLessThan(1e-3);
   });
 
+  it('a narrow implant is not stepped over, wherever it lies', () => {
+    for (let i = 0; i < 24; i++) {
+      const [depth, straggle] = [100 + 1800 * ((i * 0.618034) % 1), 1 + (i % 4)];
+      const implanted = { ...doped('acceptor', 0, 0, 'complete'), concentration: { kind: 'implant', peak: 8e17, depth: depth * 1e-7, straggle: straggle * 1e-7, background: 0 } as const };
+      const s = expectSound(solveStack(stackOf([layer('well', 2000, [implanted, doped('donor', 1e16)])])));
+      const { z, ionisedAcceptors } = s.profiles;
+      let dose = 0;
+      for (let k = 0; k + 1 < z.length; k++) dose += ((z[k + 1] - z[k]) * (ionisedAcceptors[k] + ionisedAcceptors[k + 1])) / 2;
+      expect(Math.abs(dose / (Math.sqrt(2 * Math.PI) * straggle * 1e-7 * 8e17) - 1), `${depth} nm`).toBeLessThan(0.01);
+    }
+  });
+
   it('a graded alloy joins its neighbours without a step of the bands', () => {
     for (const T of [20, 300, 600]) {
       const s = expectSound(solveStack(stackOf([layer('a', 100, [doped('donor', 1e17)]), { ...layer('g', 80, [doped('donor', 1e17)]), material: alloy, x: { kind: 'linear', from: 0, to: 0.8 } }, { ...layer('w', 200, [doped('donor', 1e17)]), material: alloy, x: { kind: 'constant', value: 0.8 } }], { T })));
