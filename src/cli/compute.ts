@@ -1,6 +1,7 @@
 import { parseArguments } from './arguments.ts';
 import { EXIT, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
+import { judged } from './judged.ts';
 import { solved } from './solved.ts';
 
 const usage = 'compute FILE [--set NAME=VALUE ...]';
@@ -11,8 +12,10 @@ export const compute: Command = {
   summary: 'solve the stack, print the result as JSON',
   async run(args, streams) {
     const { file, set } = parseArguments(args, usage);
-    const result = solved(await readDesignFile(file, streams), set, streams);
+    const design = await readDesignFile(file, streams);
+    const result = solved(design, set, streams);
     if (result === null) return EXIT.noAnswer;
+    result.requirements = judged(design, set);
     streams.out(`${JSON.stringify(result, null, 1)}\n`);
     return EXIT.done;
   },

@@ -1,3 +1,4 @@
+import { check } from './check.ts';
 import { compute } from './compute.ts';
 import { draw } from './draw.ts';
 import { EXIT, UsageError, type Command, type Streams } from './command.ts';
@@ -5,7 +6,7 @@ import { InputError } from '../design/complaint.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import { PROGRAM_VERSION } from '../version.ts';
 
-const COMMANDS: Readonly<Record<string, Command>> = { compute, draw };
+const COMMANDS: Readonly<Record<string, Command>> = { compute, check, draw };
 
 /** The command line. Everything goes through `streams`, so that it can be tried without a process. */
 export async function run(args: readonly string[], streams: Streams): Promise<number> {

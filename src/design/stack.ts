@@ -47,6 +47,7 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
   const rows = readInterfaces(design, ask);
   const crystal = readCrystal(design, catalogue, ask);
   const requirements = readRequirements(design, ask);
+  ask.complaints.push(...variables.afterthoughts);
   if (ask.complaints.length > 0) return { ok: false, complaints: ask.complaints };
   const solved = layers as Layer[];
   const stack: Stack = {

@@ -37,6 +37,10 @@ export function moved(value: Value, tolerance: Tolerance, count: number): Value 
   return tolerance.kind === 'share' ? multiply(value, 1 + count * tolerance.share) : add(value, multiply(tolerance.amount, count));
 }
 
+export function isZero(tolerance: Tolerance): boolean {
+  return tolerance.kind === 'share' ? tolerance.share === 0 : sizeOf(tolerance.amount) === 0;
+}
+
 function sizeOf(value: Value): number {
   return isUnitValue(value) ? Number(value.toSI().toNumeric()) : value;
 }

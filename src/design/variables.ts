@@ -9,6 +9,7 @@ import type { Variable } from './types.ts';
 export interface Variables {
   scope: Scope;
   complaints: Complaint[];
+  /** what is wrong with tolerances and ranges: told last, since a value of the wrong kind makes those wrong as well */ afterthoughts: Complaint[];
   /** as stated, by name */ tolerances: ReadonlyMap<string, Tolerance>;
 }
 
@@ -20,6 +21,7 @@ export interface Variables {
  */
 export function readVariables(rows: readonly Variable[], overrides: Readonly<Record<string, string>> = {}, moves: Readonly<Record<string, number>> = {}): Variables {
   const complaints: Complaint[] = [];
+  const afterthoughts: Complaint[] = [];
   const texts = new Map<string, { text: string; path: string; row: Variable; at: string }>();
   rows.forEach((row, i) => {
     const path = `variables[${i}]`;
@@ -42,7 +44,7 @@ export function readVariables(rows: readonly Variable[], overrides: Readonly<Rec
       return moved(value, tolerance, Object.hasOwn(moves, name) ? moves[name] : 0);
     } catch (error) {
       if (!(error instanceof ExpressionError)) throw error;
-      complaints.push({ path: `${path}.tolerance`, message: `${quoted(text)} ${error.message}` });
+      afterthoughts.push({ path: `${path}.tolerance`, message: `${quoted(text)} ${error.message}` });
       return value;
     }
   };
@@ -87,24 +89,30 @@ export function readVariables(rows: readonly Variable[], overrides: Readonly<Rec
       if (!(error instanceof ExpressionError)) throw error;
     }
   }
-  checkRanges(rows, texts, scope, complaints);
-  return { scope, complaints, tolerances };
+  checkRanges(rows, texts, scope, afterthoughts);
+  return { scope, complaints, afterthoughts, tolerances };
 }
 
 /** A range has two ends of the variable's own kind, the lower one first. */
 function checkRanges(rows: readonly Variable[], texts: ReadonlyMap<string, unknown>, scope: Scope, complaints: Complaint[]): void {
   rows.forEach(({ name, range }, i) => {
     if (range === undefined || !texts.has(name)) return;
+    let value: Value;
     try {
-      const value = scope.value(name) as Value;
+      value = scope.value(name) as Value;
+    } catch (error) {
+      // What is wrong with the value has been said.
+      if (error instanceof ExpressionError) return;
+      throw error;
+    }
+    try {
       const [from, to] = range.map((text) => evaluate(text, scope));
       const difference = subtract(to, from);
       if (isUnitValue(value) !== isUnitValue(from) || isUnitValue(value) !== isUnitValue(to)) throw new ExpressionError('of another kind');
       subtract(value, from);
       if (!((isUnitValue(difference) ? Number(difference.toSI().toNumeric()) : difference) > 0)) complaints.push({ path: `variables[${i}].range`, message: `runs from ${quoted(range[0])} to ${quoted(range[1])}; put the lower end first` });
     } catch {
-      // What is wrong with the value itself has been said.
-      if (!complaints.some((c) => c.path === `variables[${i}].value` || c.path === `--set ${name}`)) complaints.push({ path: `variables[${i}].range`, message: `${quoted(range[0])} to ${quoted(range[1])} is no range of the kind of ${quoted(name)}; write both ends with the unit of its value` });
+      complaints.push({ path: `variables[${i}].range`, message: `${quoted(range[0])} to ${quoted(range[1])} is no range of the kind of ${quoted(name)}; write both ends with the unit of its value` });
     }
   });
 }

@@ -1,7 +1,9 @@
 import { bandsAt, isAlloy, profileAt, type Boundary, type Dopant, type Interface, type Layer, type Profile, type Stack } from '../../solver/index.ts';
 import { align } from '../../solver/alignment.ts';
 import { barrierHeights } from '../../solver/barrier.ts';
+import { isZero, type Tolerance } from '../design/tolerance.ts';
 import type { Design, Variable } from '../design/types.ts';
+import { readVariables } from '../design/variables.ts';
 import { amountText, energyText, shareText } from './amount-text.ts';
 import { governedBy } from './governed.ts';
 
@@ -37,9 +39,14 @@ export type Tolerances = 'all' | 'stated' | 'none';
  */
 export function uncertaintiesOf(design: Design, set: Readonly<Record<string, string>>, which: Tolerances = 'all'): Uncertainty[] {
   if (which === 'none') return [];
-  const stated = (design.variables ?? []).filter((v) => v.tolerance !== undefined).map(ofVariable);
-  const moving = stated.filter((u) => !/^\D*0*\.?0*\s*\D*$/.test(u.tolerance));
+  const { temperature: _, ...overrides } = set;
+  const { tolerances } = readVariables(design.variables ?? [], overrides);
+  const moving = (design.variables ?? []).filter(({ name }) => moves(tolerances.get(name))).map(ofVariable);
   return which === 'stated' ? moving : [...moving, ...defaults(design, governedBy(design, set))];
+}
+
+function moves(tolerance: Tolerance | undefined): boolean {
+  return tolerance !== undefined && !isZero(tolerance);
 }
 
 function ofVariable({ name, tolerance }: Variable): Uncertainty {

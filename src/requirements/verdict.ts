@@ -1,0 +1,41 @@
+import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
+import { writeNumber } from '../quantity/write-quantity.ts';
+import type { RequirementResult } from '../result/types.ts';
+
+/** The verdict in a word: met, not met, or neither where some points have no answer. */
+export function verdictWords(row: RequirementResult): 'met' | 'not met' | 'no answer' {
+  return row.met ? 'met' : row.judged ? 'not met' : 'no answer';
+}
+
+/** "contact resistivity of top at most 1e-6 ohm cm^2" */
+export function requirementWords({ quantity, of, bound, limit, unit }: Pick<RequirementResult, 'quantity' | 'of' | 'bound' | 'limit' | 'unit'>): string {
+  const { words } = requirementQuantity(quantity as RequirementQuantityName);
+  if (typeof limit === 'boolean') return `${of} ${limit ? '' : 'not '}${words}`;
+  return `${words} of ${of} at ${bound === 'max' ? 'most' : 'least'} ${withUnit(limit, unit)}`;
+}
+
+/** "2.5 times" or "0.12 eV"; of a requirement that is not met what is lacking, as a share of the limit or a negative difference. */
+export function marginWords({ margin, margin_kind, margin_unit, met }: RequirementResult): string {
+  if (margin === null) return met ? 'without end' : 'none';
+  return margin_kind === 'ratio' ? `${rounded(margin, 3)} times` : withUnit(margin, margin_unit, 3);
+}
+
+/** One line a requirement: verdict, limit, worst case and where it is, margin. */
+export function verdictLine(row: RequirementResult): string {
+  const parts = [`${verdictWords(row).padEnd(9)}  ${requirementWords(row)}`];
+  if (row.worst !== null && row.at !== null) {
+    parts.push(`worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : withUnit(row.worst, row.unit)} at ${row.at.words}`, `margin ${marginWords(row)}`);
+  }
+  if (!row.corners_sufficed) parts.push('worse inside the ranges than at their corners');
+  if (row.unanswered !== null) parts.push(`no answer at ${row.unanswered.points} ${row.unanswered.points === 1 ? 'point' : 'points'}, first at ${row.unanswered.words}: ${row.unanswered.reason}`);
+  return parts.join('; ').replace(/[\r\n\u2028\u2029]+/g, ' ');
+}
+
+function withUnit(value: number, unit: string, digits = 4): string {
+  return unit === '' ? rounded(value, digits) : `${rounded(value, digits)} ${unit}`;
+}
+
+/** Figures above the digits asked for are rounded as well: 72404 to three digits is 72400. */
+function rounded(value: number, digits: number): string {
+  return writeNumber(Number(value.toPrecision(digits)), Math.max(digits, 5));
+}
