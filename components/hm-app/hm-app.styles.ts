@@ -5,7 +5,7 @@ export const styles = css`
     min-height: 100dvh;
   }
   .page {
-    max-width: 120rem;
+    max-width: 160rem;
     margin-inline: auto;
     padding: 0 clamp(0.5rem, 1.5vw, 1.75rem) 2rem;
   }

@@ -82,7 +82,13 @@ export class HmApp extends LitElement {
   private readonly incoming = new IncomingController(this, (text) => void this.settle(this.desk.take(text)), (text) => this.say(text, true));
   private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
   private readonly redraw = (): void => this.requestUpdate();
-  private readonly hide = (): void => void (document.visibilityState === 'hidden' && this.ready && void this.keeper.flush());
+  private readonly hide = (event: Event): void => {
+    if (this.ready && (event.type === 'pagehide' || document.visibilityState === 'hidden')) void this.keeper.flush();
+  };
+  /** The browser asks in its own words whether to leave. */
+  private readonly warn = (event: Event): void => {
+    if (this.ready && this.keeper.atRisk) event.preventDefault();
+  };
 
   constructor() {
     super();
@@ -107,6 +113,7 @@ export class HmApp extends LitElement {
     this.darkness.addEventListener('change', this.redraw);
     document.addEventListener('visibilitychange', this.hide);
     addEventListener('pagehide', this.hide);
+    addEventListener('beforeunload', this.warn);
     // Before any element sees the key: fields keep keys to themselves.
     addEventListener('keydown', this.key, { capture: true });
     void this.start();
@@ -117,6 +124,7 @@ export class HmApp extends LitElement {
     this.darkness.removeEventListener('change', this.redraw);
     document.removeEventListener('visibilitychange', this.hide);
     removeEventListener('pagehide', this.hide);
+    removeEventListener('beforeunload', this.warn);
     removeEventListener('keydown', this.key, { capture: true });
     this.solver.close();
     const { keeper, store } = this;

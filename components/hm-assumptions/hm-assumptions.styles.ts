@@ -4,8 +4,17 @@ export const styles = css`
   h2 {
     font-size: 0.9375rem;
     font-weight: 600;
-    margin: 0 0 0.25rem;
+    margin: 0;
+    display: inline;
+  }
+  summary {
+    cursor: pointer;
+    min-height: 24px;
     border-bottom: 1px solid var(--ink);
+    margin-bottom: 0.25rem;
+  }
+  .inforce {
+    color: var(--faint);
   }
   label {
     display: flex;

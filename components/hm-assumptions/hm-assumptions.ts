@@ -15,7 +15,7 @@ const ALIGNMENT: [NonNullable<AssumptionsInput['alignment']>, string][] = [
 ];
 
 /**
- * What the solution takes for granted, and may be told to do otherwise.
+ * What the solution takes for granted, said in a line, and changed when it is opened.
  * @fires hm-edit
  */
 export class HmAssumptions extends LitElement {
@@ -36,7 +36,9 @@ export class HmAssumptions extends LitElement {
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
     const { statistics = 'fermi-dirac', alignment = 'offsets', narrowing = false, nonParabolic = false } = this.design.assumptions ?? {};
-    return html`<h2>Assumptions</h2>
+    const words = [nameOf(STATISTICS, statistics), nameOf(ALIGNMENT, alignment), ...(narrowing ? ['gap narrowing'] : []), ...(nonParabolic ? ['non-parabolic'] : [])];
+    return html`<details>
+      <summary><h2>Assumptions</h2> <span class="inforce">${words.join('; ')}</span></summary>
       <label>Statistics
         <select @change=${(e: Event) => this.set('statistics', (e.target as HTMLSelectElement).value as typeof statistics, 'statistics')}>
           ${STATISTICS.map(([value, words]) => html`<option value=${value} .selected=${value === statistics}>${words}</option>`)}
@@ -48,8 +50,13 @@ export class HmAssumptions extends LitElement {
         </select>
       </label>
       <label class="check"><input type="checkbox" .checked=${narrowing} @change=${(e: Event) => this.set('narrowing', (e.target as HTMLInputElement).checked, 'gap narrowing')} />The gap narrows with doping</label>
-      <label class="check"><input type="checkbox" .checked=${nonParabolic} @change=${(e: Event) => this.set('nonParabolic', (e.target as HTMLInputElement).checked, 'non-parabolic bands')} />Bands are not parabolic</label>`;
+      <label class="check"><input type="checkbox" .checked=${nonParabolic} @change=${(e: Event) => this.set('nonParabolic', (e.target as HTMLInputElement).checked, 'non-parabolic bands')} />Bands are not parabolic</label>
+    </details>`;
   }
+}
+
+function nameOf<T extends string>(list: [T, string][], value: T): string {
+  return list.find(([candidate]) => candidate === value)?.[1] ?? value;
 }
 
 customElements.define('hm-assumptions', HmAssumptions);

@@ -5,7 +5,7 @@ import { writeDesign } from '../design/write.ts';
 import type { Session } from '../state/session.ts';
 import { Autosave, type SavingState } from './autosave.ts';
 import { storageFailure } from './failure.ts';
-import { leaveLastWords, takeLastWords } from './last-words.ts';
+import { dropLastWords, leaveLastWords, takeLastWords } from './last-words.ts';
 import type { Content, ProjectStore, SaveOutcome } from './project-store.ts';
 import type { ProjectRecord } from './record.ts';
 import { Tabs, type TabNotice } from './tabs.ts';
@@ -27,6 +27,7 @@ export type Opened = { ok: true; /** unsaved changes of the last visit were take
 export class Keeper extends EventTarget {
   #project: OpenProject = { id: null, name: '', revision: 0 };
   /** counts the projects opened, so that a save that ends late is not taken for the next one's */ #opened = 0;
+  readonly #tab: string = crypto.randomUUID();
   /** the design as this tab last read or saved it */ #base = '';
   readonly #session: Session;
   readonly #store: ProjectStore;
@@ -49,6 +50,10 @@ export class Keeper extends EventTarget {
 
   get project(): OpenProject {
     return this.#project;
+  }
+  /** Whether leaving now would lose something: it is not saved, and saving does not work. */
+  get atRisk(): boolean {
+    return this.#autosave.unsaved && (this.saving.kind === 'failed' || this.saving.kind === 'conflict');
   }
   get saving(): SavingState {
     return this.#autosave.state;
@@ -111,6 +116,7 @@ export class Keeper extends EventTarget {
     const content = this.#content();
     const record = await this.#store.create(`${name} (copy)`, content);
     this.#opened++;
+    this.#forget();
     this.#project = { id: record.id, name: record.name, revision: record.revision };
     this.#base = content.designText;
     this.#autosave.reset();
@@ -123,6 +129,7 @@ export class Keeper extends EventTarget {
     const { id } = this.#project;
     const record = id === null ? null : await this.#store.get(id);
     if (record === null) return { ok: false, why: 'The other tab has deleted this project: only the one on this page is left.' };
+    this.#forget();
     return this.#take(record);
   }
 
@@ -130,7 +137,7 @@ export class Keeper extends EventTarget {
   async flush(): Promise<void> {
     const { id, revision } = this.#project;
     // A page that is being closed may not live to see the transaction's end.
-    if (this.#autosave.unsaved && id !== null) leaveLastWords({ id, revision, designText: writeDesign(this.#session.design) });
+    if (this.#autosave.unsaved && id !== null) leaveLastWords({ id, revision, designText: writeDesign(this.#session.design) }, this.#tab);
     await this.#autosave.flush();
   }
 
@@ -156,22 +163,35 @@ export class Keeper extends EventTarget {
     this.#autosave.reset();
     await this.#remember(record.id);
     this.dispatchEvent(new Event('project'));
-    return { ok: true, recovered: this.#recover(record) };
+    return { ok: true, recovered: await this.#recover(record) };
   }
 
-  /** Takes up what an earlier visit had no time to save, as a step that can be undone. */
-  #recover(record: ProjectRecord): boolean {
-    const words = takeLastWords(record.id);
-    if (words === null || words.revision !== record.revision || words.designText === record.designText) return false;
-    const reading = readDesign(words.designText);
-    return reading.ok && this.#session.edit(reading.design, 'changes just before the page was closed');
+  /**
+   * Takes up what an earlier visit had no time to save, as a step that can be undone. What was written on top of another revision was the losing side of two
+   * tabs: it becomes a project of its own.
+   */
+  async #recover(record: ProjectRecord): Promise<boolean> {
+    let recovered = false;
+    for (const { revision, designText } of takeLastWords(record.id)) {
+      const reading = readDesign(designText);
+      if (!reading.ok || designText === record.designText) continue;
+      if (revision === record.revision && !recovered) recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
+      else await this.#store.create(`${record.name} (unsaved changes)`, { designText, history: { past: [], future: [] }, view: record.view });
+    }
+    return recovered;
   }
 
   /** @returns null when nothing is unsaved any more, else why the present project cannot be left yet */
   async #leave(abandon: boolean): Promise<Opened | null> {
     await this.#autosave.flush();
+    if (abandon) this.#forget();
     if (!this.#autosave.unsaved || abandon) return null;
     return { ok: false, why: 'What is on this page is not saved, so nothing else was opened.', unsaved: true };
+  }
+
+  /** The person has decided about what this tab had not saved. */
+  #forget(): void {
+    if (this.#project.id !== null) dropLastWords(this.#project.id, this.#tab);
   }
 
   #content(): Content {
@@ -188,6 +208,7 @@ export class Keeper extends EventTarget {
     const { id } = this.#project;
     if (outcome.kind === 'saved' && id !== null) {
       this.#base = content.designText;
+      dropLastWords(id, this.#tab);
       this.#project = { ...this.#project, revision: outcome.revision };
       this.#tabs.tell({ kind: 'saved', id, revision: outcome.revision });
     }

@@ -1,32 +1,49 @@
 /**
  * What was not saved yet when the page went away. A page that is being closed may not finish a transaction; the small synchronous store takes the text
- * meanwhile, and the next visit takes it up as one more step of the project.
+ * meanwhile, and the next visit takes it up.
  */
 export interface LastWords {
-  id: string;
+  /** id of the project */ id: string;
   /** the revision that the text was written on top of */ revision: number;
   designText: string;
 }
 
-/** One place a project, so that two tabs that close together do not talk over each other. */
-const keyOf = (id: string): string => `halfmark:unsaved:${id}`;
+/** One place a project and a tab, so that two tabs that close together do not talk over each other. */
+const prefix = (id: string): string => `halfmark:unsaved:${id}:`;
 
-/** @returns whether it was kept; a browser may refuse */
-export function leaveLastWords(words: LastWords, store: Storage = localStorage): boolean {
+/** @returns whether they were kept; a browser may refuse */
+export function leaveLastWords(words: LastWords, tab: string, store: Storage = localStorage): boolean {
   try {
-    store.setItem(keyOf(words.id), JSON.stringify(words));
+    store.setItem(prefix(words.id) + tab, JSON.stringify(words));
     return true;
   } catch {
     return false;
   }
 }
 
-/** Reads and removes those of one project. @returns null when there are none, or none that can be read */
-export function takeLastWords(project: string, store: Storage = localStorage): LastWords | null {
+/** What they said has been saved after all. */
+export function dropLastWords(id: string, tab: string, store: Storage = localStorage): void {
   try {
-    const text = store.getItem(keyOf(project));
-    if (text === null) return null;
-    store.removeItem(keyOf(project));
+    store.removeItem(prefix(id) + tab);
+  } catch {
+    // A browser that keeps nothing has nothing to drop.
+  }
+}
+
+/** Reads and removes those of one project, of whichever tab. What cannot be read is left out. */
+export function takeLastWords(id: string, store: Storage = localStorage): LastWords[] {
+  try {
+    const keys = Array.from({ length: store.length }, (_, i) => store.key(i)!).filter((key) => key.startsWith(prefix(id)));
+    const texts = keys.map((key) => store.getItem(key) ?? '');
+    for (const key of keys) store.removeItem(key);
+    return texts.map(read).filter((words) => words !== null);
+  } catch {
+    return [];
+  }
+}
+
+function read(text: string): LastWords | null {
+  try {
     const { id, revision, designText } = JSON.parse(text) as Partial<LastWords>;
     return typeof id === 'string' && typeof revision === 'number' && typeof designText === 'string' ? { id, revision, designText } : null;
   } catch {

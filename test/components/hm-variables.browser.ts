@@ -95,6 +95,9 @@ describe('the assumptions of a design', () => {
     try {
       await assumptions.updateComplete;
       await expectAccessible(assumptions);
+      expect(assumptions.shadowRoot!.querySelector('summary')!.textContent).to.contain('Fermi–Dirac; published offsets; gap narrowing');
+      assumptions.shadowRoot!.querySelector('details')!.open = true;
+      await expectAccessible(assumptions);
       const [narrowing, parabolic] = assumptions.shadowRoot!.querySelectorAll<HTMLInputElement>('[type=checkbox]');
       expect([narrowing.checked, parabolic.checked]).to.deep.equal([true, false]);
       const edits = heard(assumptions, 'hm-edit');

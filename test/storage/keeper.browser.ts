@@ -76,12 +76,16 @@ describe('the keeper of the open project', () => {
     await Promise.all([one.keeper.flush(), two.keeper.flush()]);
     const [winner, loser] = one.keeper.saving.kind === 'saved' ? [one, two] : [two, one];
     expect(loser.keeper.saving.kind).to.equal('conflict');
+    // The page was hidden meanwhile: what it left behind must not come back as a third project.
+    await loser.keeper.flush();
     const mine = loser.session.design.title;
     await loser.keeper.keepMineAsCopy();
     expect(loser.keeper.saving.kind).to.equal('saved');
     expect(loser.keeper.project.name).to.equal('cell (copy)');
     const titles = await Promise.all((await one.store.list()).map(async ({ id }) => JSON.parse((await one.store.get(id))!.designText).title));
     expect(titles.sort()).to.deep.equal([winner.session.design.title, mine].sort());
+    await tab().keeper.open(winner.keeper.project.id!);
+    expect(await one.store.list()).to.have.length(2);
     expect(loser.session.undo()).to.equal('title');
   });
 
@@ -129,7 +133,7 @@ describe('the keeper of the open project', () => {
     const one = tab();
     await one.keeper.create('cell', designFixture());
     const { id, revision } = one.keeper.project;
-    leaveLastWords({ id: id!, revision, designText: writeDesign(commands.setTitle(designFixture(), 'in the last second')) });
+    leaveLastWords({ id: id!, revision, designText: writeDesign(commands.setTitle(designFixture(), 'in the last second')) }, 'closed tab');
     const two = tab();
     expect(await two.keeper.openLast()).to.deep.equal({ ok: true, recovered: true });
     expect(two.session.design.title).to.equal('in the last second');
@@ -140,10 +144,32 @@ describe('the keeper of the open project', () => {
   it('ignores last words that were saved after all', async () => {
     const one = tab();
     await one.keeper.create('cell', designFixture());
-    const { id, revision } = one.keeper.project;
-    leaveLastWords({ id: id!, revision: revision - 1, designText: writeDesign(commands.setTitle(designFixture(), 'older')) });
+    one.retitle('second');
+    await one.keeper.flush();
+    one.retitle('third');
+    await one.keeper.flush();
     const two = tab();
     expect(await two.keeper.openLast()).to.deep.equal({ ok: true, recovered: false });
+    expect(await two.store.list()).to.have.length(1);
+  });
+
+  it('makes a project of its own of what a losing tab had not saved when it was closed', async () => {
+    const one = tab();
+    await one.keeper.create('cell', designFixture());
+    const two = tab();
+    await two.keeper.openLast();
+    one.retitle('from one');
+    await one.keeper.flush();
+    await until(() => two.keeper.saving.kind === 'conflict');
+    two.retitle('from two');
+    expect(two.keeper.atRisk).to.equal(true);
+    await two.keeper.close();
+    const three = tab();
+    expect(await three.keeper.openLast()).to.deep.equal({ ok: true, recovered: false });
+    const entries = await three.store.list();
+    const kept = entries.find((entry) => entry.name === 'cell (unsaved changes)')!;
+    expect(JSON.parse((await three.store.get(kept.id))!.designText).title).to.equal('from two');
+    expect(three.session.design.title).to.equal('from one');
   });
 
   it('leaves last words when the page goes away before the save is through', async () => {

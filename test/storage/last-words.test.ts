@@ -1,32 +1,40 @@
 import { describe, expect, it } from 'vitest';
-import { leaveLastWords, takeLastWords } from '../../src/storage/last-words.ts';
+import { dropLastWords, leaveLastWords, takeLastWords } from '../../src/storage/last-words.ts';
 
 /** The part of the browser's small store that is used. */
 function shelf(full = false): Storage {
   const map = new Map<string, string>();
-  const set = (key: string, value: string) => {
+  const setItem = (key: string, value: string) => {
     if (full) throw new Error('full');
     map.set(key, value);
   };
-  return { getItem: (key: string) => map.get(key) ?? null, setItem: set, removeItem: (key: string) => void map.delete(key) } as Storage;
+  return { get length() { return map.size; }, key: (i: number) => [...map.keys()][i] ?? null, getItem: (key: string) => map.get(key) ?? null, setItem, removeItem: (key: string) => void map.delete(key) } as Storage;
 }
+const words = (revision: number) => ({ id: 'a', revision, designText: '{}' });
 
 describe('what was not saved when the page went away', () => {
-  it('is there at the next visit, once', () => {
+  it('is there at the next visit, once, from every tab of that project and no other', () => {
     const store = shelf();
-    const words = { id: 'a', revision: 3, designText: '{}' };
-    expect(leaveLastWords(words, store)).toBe(true);
-    expect(takeLastWords('b', store)).toBeNull();
-    expect(takeLastWords('a', store)).toEqual(words);
-    expect(takeLastWords('a', store)).toBeNull();
+    expect(leaveLastWords(words(3), 'one', store)).toBe(true);
+    leaveLastWords(words(2), 'two', store);
+    leaveLastWords({ ...words(9), id: 'b' }, 'one', store);
+    expect(takeLastWords('a', store)).toEqual([words(3), words(2)]);
+    expect(takeLastWords('a', store)).toEqual([]);
+    expect(takeLastWords('b', store)).toHaveLength(1);
+  });
+
+  it('is dropped by the tab that saved it after all, and only its own', () => {
+    const store = shelf();
+    leaveLastWords(words(3), 'one', store);
+    leaveLastWords(words(2), 'two', store);
+    dropLastWords('a', 'one', store);
+    expect(takeLastWords('a', store)).toEqual([words(2)]);
   });
 
   it('is given up without harm when the browser refuses or gives back something else', () => {
-    expect(leaveLastWords({ id: 'a', revision: 3, designText: '{}' }, shelf(true))).toBe(false);
+    expect(leaveLastWords(words(3), 'one', shelf(true))).toBe(false);
     const store = shelf();
-    for (const bad of ['nonsense', 'null', '{"id":1}']) {
-      store.setItem('halfmark:unsaved:a', bad);
-      expect(takeLastWords('a', store)).toBeNull();
-    }
+    for (const [i, bad] of ['nonsense', 'null', '{"id":1}'].entries()) store.setItem(`halfmark:unsaved:a:${i}`, bad);
+    expect(takeLastWords('a', store)).toEqual([]);
   });
 });
