@@ -21,7 +21,6 @@ export const styles = css`
   .beside {
     display: grid;
     grid-template-columns: minmax(0, 1fr) auto;
-    gap: 8px;
     align-items: start;
   }
   .picture {
@@ -29,6 +28,7 @@ export const styles = css`
   }
   ::slotted([slot='rail']) {
     width: var(--hm-rail-width, 13rem);
+    margin-inline-start: 8px;
   }
   .empty {
     min-height: 18rem;
@@ -39,6 +39,7 @@ export const styles = css`
     }
     ::slotted([slot='rail']) {
       width: auto;
+      margin-inline-start: 0;
     }
   }
   svg {
@@ -49,7 +50,7 @@ export const styles = css`
   .surface {
     position: absolute;
     inset: 0;
-    touch-action: pan-y;
+    touch-action: pan-y pinch-zoom;
     cursor: crosshair;
   }
   .surface.held {
@@ -65,9 +66,7 @@ export const styles = css`
     display: flex;
     flex-wrap: wrap;
     gap: 2px 14px;
-    min-height: 1.4rem;
     margin: 2px 0 0;
-    padding: 0;
   }
   .symbol {
     color: var(--faint);
@@ -83,7 +82,30 @@ export const styles = css`
   .hint {
     color: var(--faint);
     margin: 2px 0 0;
+  }
+  /* Room for the figures whether there are any or not: what lies below must not jump when the pointer comes and goes. */
+  .hint,
+  .reading {
     min-height: 1.4rem;
+    line-height: 1.4rem;
+    align-content: start;
+  }
+  @media (max-width: 90rem) {
+    .hint,
+    .reading {
+      min-height: 2.8rem;
+    }
+  }
+  @media (max-width: 48rem) {
+    .hint,
+    .reading {
+      min-height: 5.6rem;
+    }
+  }
+  @media (pointer: coarse) {
+    .keys {
+      display: none;
+    }
   }
   .empty {
     display: grid;

@@ -167,6 +167,7 @@ export class HmPlate extends LitElement {
           role="slider"
           tabindex="0"
           aria-label="reading depth"
+          aria-keyshortcuts="+ - 0 Alt+ArrowLeft Alt+ArrowRight Shift+ArrowUp Shift+ArrowDown"
           aria-orientation="horizontal"
           aria-valuemin="0"
           aria-valuemax=${Number(this.total.toPrecision(6))}
@@ -185,7 +186,7 @@ export class HmPlate extends LitElement {
   }
 
   private renderReading(result: Result, reading: Reading | null): TemplateResult {
-    if (!reading) return html`<p class="hint">Point at a depth, or press an arrow key on the picture, to read the figures there.</p>`;
+    if (!reading) return html`<p class="hint">Point at a depth to read the figures there. <span class="keys">Keys: arrows read, + − 0 look nearer, farther, at all; Alt ← → move along, Shift ↑ ↓ stretch the energies.</span></p>`;
     return html`<p class="reading" aria-hidden="true">
       <span class="where">${depthText(reading.z_nm)} in ${result.layers[reading.layer].name}</span>
       ${readingParts(reading).map((p) => html`<span class="part"><span class="symbol">${p.symbol}</span> ${p.figure} ${p.unit}</span>`)}
@@ -332,8 +333,9 @@ export class HmPlate extends LitElement {
     else tell(this, 'hm-view', { change: { window: this.view.window } });
   }
 
-  private pointerLeft(): void {
-    if (this.hold) return;
+  private pointerLeft(event: PointerEvent): void {
+    // A finger leaves when it is lifted: what it read stays to be read.
+    if (this.hold || event.pointerType === 'touch') return;
     this.overFigure = false;
     // A reading made by keys stays: the picture still has the focus.
     if (!this.renderRoot.querySelector('.surface')?.matches(':focus-visible')) this.read(null);

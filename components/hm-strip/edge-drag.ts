@@ -16,9 +16,9 @@ export function startEdgeDrag(layer: number, x: number, width_px: number, thickn
   return { layer, startX: x, startThickness: thickness_nm, scale: thickness_nm / Math.max(width_px, 1), text, join: `thickness ${layer} ${++drags}` };
 }
 
-/** The thickness at x, as text: whole steps that one px can tell apart, ten times finer when asked. */
+/** The thickness at x, as text: in steps of about a px that are powers of ten, ten times finer when asked. */
 export function draggedThickness(drag: EdgeDrag, x: number, fine: boolean): string {
-  const step = powerOfTen(Math.max(drag.scale, drag.startThickness / 1000)) / (fine ? 10 : 1);
+  const step = powerOfTen(Math.max(2 * drag.scale, drag.startThickness / 1000)) / (fine ? 10 : 1);
   const moved = drag.startThickness + (x - drag.startX) * drag.scale * (fine ? 0.1 : 1);
   return thicknessText(Math.max(moved, step), drag.text, step);
 }

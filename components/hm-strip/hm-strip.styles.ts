@@ -43,7 +43,7 @@ export const styles = css`
     min-height: 92px;
     align-items: stretch;
     outline: none;
-    touch-action: pan-y;
+    touch-action: pan-y pinch-zoom;
   }
   .column {
     position: relative;

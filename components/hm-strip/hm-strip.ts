@@ -136,14 +136,17 @@ export class HmStrip extends LitElement implements StripSurface {
     const beside = this.result?.layers.at(side === 'top' ? 0 : -1)?.type;
     const lines = contactText(this.design![side], this.result?.contacts.find((c) => c.side === side), beside);
     const wrong = complaintsWithin(this.complaints, side);
+    // An end that lies outside of the part in view must not look as if it touched the layers that are in it.
+    const away = g.edges.at(side === 'top' ? 0 : -1) === null;
     return html`<div
       role="option"
       class="column contact ${side} ${span.right - span.left < CONTACT_ROOM ? 'slim' : ''} ${wrong.length > 0 ? 'wrong' : ''}"
       data-contact=${index}
       aria-selected=${isChosen}
+      title=${away ? 'beyond the part of the depth in view' : nothing}
       tabindex=${isChosen ? 0 : -1}
     >
-      <span class="spoken">${side} contact: </span><span class="lines"><span class="name">${lines[0]}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span><span class="spoken">${wrong.join('; ')}</span>
+      <span class="spoken">${side} contact: </span><span class="lines"><span class="name">${away && side === 'top' ? '‹ ' : ''}${lines[0]}${away && side === 'bottom' ? ' ›' : ''}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span><span class="spoken">${wrong.join('; ')}</span>
     </div>`;
   }
 
@@ -346,7 +349,8 @@ export class HmStrip extends LitElement implements StripSurface {
   }
 
   private key(event: KeyboardEvent): void {
-    if (event.ctrlKey || event.metaKey) return;
+    // Brackets are behind AltGr on many keyboards, which some systems report as Ctrl and Alt.
+    if ((event.ctrlKey || event.metaKey) && !event.getModifierState('AltGraph')) return;
     if (event.key === 'Escape') {
       if (!this.pointer.busy) return;
       this.pointer.cancel();

@@ -9,6 +9,8 @@ export class WidthController implements ReactiveController {
   private frame = 0;
   private readonly watch = new ResizeObserver(([entry]) => {
     const width = Math.round(entry.contentRect.width);
+    // Nothing is laid out for a moment (hidden, or the window being resized): the last width is a better guess than none.
+    if (width === 0) return;
     cancelAnimationFrame(this.frame);
     if (width === this.width) return;
     this.frame = requestAnimationFrame(() => {

@@ -20,6 +20,12 @@ function decimals(value: number | null): Cell {
   return { lines: [decimalText(value)], value };
 }
 
+/** Solved contact resistivity, with what the closed form of its regime would give for comparison. */
+function resistivity(c: ContactResult): Cell {
+  const cell = figure(c.rho_c_ohm_cm2);
+  return c.rho_c_ohm_cm2 === null || c.rho_c_closed_form_ohm_cm2 === null ? cell : { ...cell, note: `closed form ${figureText(c.rho_c_closed_form_ohm_cm2, 2)}` };
+}
+
 export function contactWords(contact: ContactResult): string {
   return contact.kind === 'barrier' && contact.metal !== null ? contact.metal : KIND_WORDS[contact.kind];
 }
@@ -29,6 +35,11 @@ export const contactColumns: Column<ContactResult>[] = [
   { id: 'barrierN', heading: 'φBn', words: 'barrier for electrons, without the image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.barrier_n_eV) },
   { id: 'barrierP', heading: 'φBp', words: 'barrier for holes, without the image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.barrier_p_eV) },
   { id: 'source', heading: 'Barrier', words: 'where the barrier comes from', unit: '', kind: 'words', usual: true, cell: (c) => words(c.barrier_source === null ? '–' : SOURCE_WORDS[c.barrier_source]) },
+  { id: 'rhoC', heading: 'Contact resistivity', words: 'specific contact resistivity at zero bias through the solved barrier, both carriers; the closed form of the depletion approximation beside it', unit: 'Ω cm²', kind: 'figure', usual: true, cell: resistivity },
+  { id: 'rhoCFloor', heading: 'Its floor', words: 'least contact resistivity that the majority carriers allow, without any barrier (ballistic limit)', unit: 'Ω cm²', kind: 'figure', usual: true, cell: (c) => figure(c.rho_c_floor_ohm_cm2) },
+  { id: 'rhoCn', heading: 'of electrons', words: 'contact resistivity of electrons alone', unit: 'Ω cm²', kind: 'figure', usual: false, cell: (c) => figure(c.rho_c_n_ohm_cm2) },
+  { id: 'rhoCp', heading: 'of holes', words: 'contact resistivity of holes alone', unit: 'Ω cm²', kind: 'figure', usual: false, cell: (c) => figure(c.rho_c_p_ohm_cm2) },
+  { id: 'saturation', heading: 'Saturation current', words: 'thermionic emission of the majority carriers over the lowered barrier', unit: 'A/cm²', kind: 'figure', usual: false, cell: (c) => figure(c.saturation_A_cm2) },
   { id: 'lowering', heading: 'Lowering', words: 'image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.lowering_eV) },
   { id: 'surfaceField', heading: 'Surface field', words: 'field just inside the semiconductor, along the depth', unit: 'kV/cm', kind: 'figure', usual: true, cell: (c) => ({ lines: [fieldText(c.surface_field_V_cm)], value: c.surface_field_V_cm * KV_PER_V }) },
   { id: 'depletion', heading: 'Depleted', words: 'depletion width under the contact', unit: 'nm', kind: 'figure', usual: true, cell: (c) => figure(c.depletion_nm) },

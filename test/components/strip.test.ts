@@ -63,7 +63,7 @@ describe('the geometry of the strip', () => {
 });
 
 describe('an edge that is dragged', () => {
-  it('moves by the scale under the hand, in steps that a px can tell apart, ten times finer when asked', () => {
+  it('moves by the scale under the hand, in steps of about a px, ten times finer when asked', () => {
     const drag = startEdgeDrag(1, 500, 100, 250, '250 nm');
     expect(draggedThickness(drag, 520, false)).toBe('300 nm');
     expect(draggedThickness(drag, 520, true)).toBe('255 nm');

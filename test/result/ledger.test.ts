@@ -84,6 +84,15 @@ describe('the ledger', () => {
     expect(table.rows[0].cells.ionised).toEqual({ lines: ['C 50 % / 100 %', 'donor 100 % / 100 %'], value: 75 });
   });
 
+  it('puts the closed form beside the solved contact resistivity', () => {
+    const schottky = solved('schottky');
+    const [top] = ledgerTables(schottky).at(-1)!.rows;
+    const { rho_c_ohm_cm2: rho, rho_c_closed_form_ohm_cm2: closed } = schottky.contacts[0];
+    expect(rho).toBeGreaterThan(0);
+    expect(top.cells.rhoC).toEqual({ lines: [figureText(rho)], value: rho, note: `closed form ${figureText(closed, 2)}` });
+    expect(contacts.rows[0].cells.rhoC, 'a neutral end has none').toEqual({ lines: ['–'], value: null });
+  });
+
   it('gives every usual column a cell with text in every row', () => {
     for (const table of [layers, junctions, contacts]) {
       for (const row of table.rows) for (const column of table.columns) expect(row.cells[column.id].lines.join(''), `${table.id} ${column.id}`).not.toBe('');
