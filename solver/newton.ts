@@ -20,13 +20,14 @@ const MOST_VOLTS = 2;
  * those of `psi` when it converged.
  *
  * @param evaluated  residual and matrix in the system are already those of `psi`
+ * @param tolerance  size of an update, V, that ends it; it is taken all the same, and leaves about its square over kT
  *
  * Steps are accepted by the natural monotonicity test on the same factors (Deuflhard, Numer. Math. 22, 289, 1974; Newton
  * Methods for Nonlinear Problems, 2004, algorithm NLEQ-RES/ERR). Should it stall, the problem's convexity gives a second way: the
  * residual is the gradient of a convex functional (charge never grows with psi), so a search on the directional derivative along a
  * Newton direction always makes progress (Bank and Rose, Numer. Math. 37, 279, 1981).
  */
-export function newton(system: PoissonSystem, psi: Float64Array, evaluated = false): NewtonResult {
+export function newton(system: PoissonSystem, psi: Float64Array, evaluated = false, tolerance: number = ACCEPTANCE.update): NewtonResult {
   const n = psi.length;
   const memory = new Float64Array(3 * n);
   const step = memory.subarray(0, n);
@@ -45,7 +46,7 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
     updates++;
     if (!Number.isFinite(size)) return { converged: false, updates, lastUpdate: size, reason: 'not finite' };
     // The update itself decides, and it is taken in full: near the end Newton's error is far below its last step.
-    if (size < ACCEPTANCE.update) {
+    if (size < tolerance) {
       for (let i = 0; i < n; i++) psi[i] += step[i];
       // Charge moves by update/kT of itself: below this nothing that is asked of it.
       if (size > NEGLIGIBLE) system.evaluate(psi, false);

@@ -6,7 +6,7 @@ import { profilesOf } from './poisson-profiles.ts';
 import { bent, equidistributed, rowErrors } from './poisson-remesh.ts';
 import { PoissonSystem, type PoissonProblem } from './poisson-system.ts';
 import type { PoissonGoal, PoissonSolution, PoissonStart } from './poisson.ts';
-import { refusalReason } from './quality.ts';
+import { ACCEPTANCE, refusalReason } from './quality.ts';
 import type { Quality } from './solution.ts';
 
 /** Halving a mesh cuts the compact scheme's error to a sixteenth. */
@@ -19,6 +19,9 @@ const SAFETY_OF_SECOND = 2;
 const MOST_ROUNDS = 10;
 /** A coarse mesh of this error leaves the halved one well within the accuracy. */
 const COARSE_SHARE = 2;
+/** Newton updates that end the passing solutions: that of the first mesh, V, and of coarse ones as a share of their target. Only the answer itself needs all digits. */
+const FIRST_UPDATE = 1e-5;
+const UPDATE_SHARE = 1e-3;
 /** Share of the goal that a single row may miss, at first. */
 const ROW_SHARE = 1 / 6;
 
@@ -41,15 +44,15 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
   let updates = 0;
   let target = COARSE_SHARE * goal.accuracy;
   let share = ROW_SHARE;
-  const solve = (on: Mesh, values: Float64Array, scheme: 'compact' | 'box'): Solved | null => {
+  const solve = (on: Mesh, values: Float64Array, scheme: 'compact' | 'box', tolerance: number): Solved | null => {
     const system = new PoissonSystem(problem, on, scheme);
     system.chooseRows(values, false);
-    let run = newton(system, values, true);
+    let run = newton(system, values, true, tolerance);
     updates += run.updates;
     if (!run.converged) return null;
     // Rows were chosen at the guess; where the solution lies elsewhere, once more.
     if (system.chooseRows(values, true) > 0) {
-      run = newton(system, values, true);
+      run = newton(system, values, true, tolerance);
       updates += run.updates;
       system.evaluate(values, true);
     }
@@ -65,13 +68,13 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     setEnds(problem, psi);
   };
   if (!start.warm) {
-    const first = solve(mesh, psi, 'box');
+    const first = solve(mesh, psi, 'box', FIRST_UPDATE);
     if (!first) return { solution: null, updates };
     carryTo(first, psi);
   }
   for (let round = 0; round < MOST_ROUNDS; round++) {
     if (2 * mesh.nodes > goal.maxNodes) break;
-    const coarse = solve(mesh, psi, 'compact');
+    const coarse = solve(mesh, psi, 'compact', Math.max(ACCEPTANCE.update, UPDATE_SHARE * target));
     if (!coarse) break;
     if (!(coarse.estimate <= target)) {
       if (round > 0 || start.warm) share *= Math.min(0.8, Math.max(0.05, (0.7 * target) / coarse.estimate));
@@ -80,7 +83,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     }
     const halfMesh = halved(mesh);
     const finePsi = bent(coarse.system, psi, halfMesh);
-    const fine = solve(halfMesh, finePsi, 'compact');
+    const fine = solve(halfMesh, finePsi, 'compact', ACCEPTANCE.update);
     if (!fine) break;
     let difference = 0;
     for (let l = 0; l < mesh.local.length; l++) {

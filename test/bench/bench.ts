@@ -11,10 +11,13 @@ import { barrier, doped, layer, stackOf } from '../solver/stack-fixtures.ts';
 const ARGUMENTS = Float64Array.from({ length: 4096 }, (_, i) => -30 + (80 * ((i * 2654435761) % 4096)) / 4096);
 const VALUES = ARGUMENTS.map((eta) => fermiHalf(eta));
 let sink = 0;
+const WARMING = 6;
 
 /** Median over rounds of the time of one call, ns; each round also times Math.exp, and the ratio is taken round by round. */
 function ratio(calls: number, body: () => void, rounds = 21): number {
   const ratios: number[] = [];
+  // The first rounds would time the compiler.
+  for (let r = 0; r < WARMING; r++) body();
   for (let r = 0; r < rounds; r++) {
     const start = performance.now();
     body();
