@@ -136,11 +136,12 @@ export class HmApp extends LitElement {
     if (opened.ok) {
       if (opened.recovered) this.say('Changes that the last visit had no time to save were taken up; undo takes them back.');
     } else {
-      // An empty page is no welcome.
-      const [first] = await fetchStarters();
+      // An empty page is no welcome; where the starters cannot be fetched, one layer is better than nothing.
+      const [first] = await fetchStarters().catch(() => [{ title: 'untitled', design: blankDesign('untitled') }]);
       await this.keeper.create(first.title, first.design);
     }
     this.ready = true;
+    await this.incoming.takeLink();
   }
 
   protected override willUpdate(_: PropertyValues): void {
@@ -154,10 +155,14 @@ export class HmApp extends LitElement {
     const { custom } = design;
     if (!this.ready || custom === this.customShown) return;
     this.customShown = custom;
-    void choicesFor(custom).then((choices) => (this.choices = choices));
+    choicesFor(custom).then(
+      (choices) => (this.choices = choices),
+      () => this.say('The lists of materials, dopants and metals could not be fetched: reload the page to have them in the menus.', true),
+    );
   }
 
   protected override updated(): void {
+    if (this.ready) document.title = `${this.keeper.project.name} | Halfmark`;
     // One energy axis: the rail's picture begins where the plate's does.
     const plate = this.renderRoot.querySelector<HmPlate>('hm-plate');
     const rail = this.renderRoot.querySelector<HTMLElement>('hm-rail');
@@ -230,7 +235,10 @@ export class HmApp extends LitElement {
         void this.desk.look().then(() => this.requestUpdate(), () => this.say('The list of projects cannot be read.', true));
         return this.show('hm-projects');
       case 'starters':
-        void fetchStarters().then((starters) => (this.renderRoot.querySelector('hm-starters')!.starters = starterCards(starters)));
+        fetchStarters().then(
+          (starters) => (this.renderRoot.querySelector('hm-starters')!.starters = starterCards(starters)),
+          () => this.say('The worked designs could not be fetched.', true),
+        );
         return this.show('hm-starters');
       case 'leave':
         return this.show('hm-leave');

@@ -10,7 +10,7 @@ export interface Incoming {
 const LARGEST = 50e6;
 
 /**
- * Files dropped on the page, texts pasted into it (not into a field), and files chosen by a picker.
+ * Files dropped on the page, texts pasted into it (not into a field), files chosen by a picker, and designs inside the page's address.
  */
 export class IncomingController implements ReactiveController {
   readonly #host: ReactiveControllerHost;
@@ -30,6 +30,7 @@ export class IncomingController implements ReactiveController {
     addEventListener('dragleave', this.#dragLeave);
     addEventListener('drop', this.#drop);
     addEventListener('paste', this.#paste);
+    addEventListener('hashchange', this.takeLink);
   }
 
   hostDisconnected(): void {
@@ -37,6 +38,7 @@ export class IncomingController implements ReactiveController {
     removeEventListener('dragleave', this.#dragLeave);
     removeEventListener('drop', this.#drop);
     removeEventListener('paste', this.#paste);
+    removeEventListener('hashchange', this.takeLink);
   }
 
   /** Lets the person pick a file. */
@@ -47,6 +49,19 @@ export class IncomingController implements ReactiveController {
     input.addEventListener('change', () => void this.#read(input.files?.[0]));
     input.click();
   }
+
+  /** Takes the design out of the address, if it carries one: a reload does not open it again. */
+  readonly takeLink = async (): Promise<void> => {
+    const address = location.href;
+    if (!address.includes('#design=')) return;
+    history.replaceState(null, '', location.pathname + location.search);
+    try {
+      const { textOfLink } = await import('../../src/export/link.ts');
+      this.#take({ text: await textOfLink(address), name: 'The link' });
+    } catch (error) {
+      this.#refuse(error instanceof Error ? error.message : String(error));
+    }
+  };
 
   readonly #dragOver = (event: DragEvent): void => {
     if (!event.dataTransfer?.types.includes('Files')) return;

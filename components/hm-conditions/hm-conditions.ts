@@ -7,6 +7,7 @@ import { complaintAt } from '../shared/complaint-at.ts';
 import { tell, type PageAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import type { Theme } from '../shared/theme.ts';
+import type { HmField } from '../hm-field/hm-field.ts';
 import '../hm-field/hm-field.ts';
 import { styles } from './hm-conditions.styles.ts';
 
@@ -60,6 +61,12 @@ export class HmConditions extends LitElement {
     tell(this, 'hm-act', { act });
   }
 
+  private rename({ target, detail }: CustomEvent<string>): void {
+    // A project without a name could not be found again.
+    if (detail === '') (target as HmField).value = this.project;
+    else tell(this, 'hm-rename', { name: detail });
+  }
+
   private setTemperature(text: string): void {
     tell(this, 'hm-edit', { next: setTemperature(this.design!, text), label: 'temperature' });
   }
@@ -76,7 +83,7 @@ export class HmConditions extends LitElement {
     return html`
       <div class="who">
         <h1><span class="mark" aria-hidden="true"></span>Halfmark</h1>
-        <hm-field class="project" label="Project" .value=${this.project} @field-accept=${(e: CustomEvent<string>) => tell(this, 'hm-rename', { name: e.detail })}></hm-field>
+        <hm-field class="project" label="Project" .value=${this.project} @field-accept=${this.rename}></hm-field>
         <p class="saving ${this.saving.kind}">${savingWords(this.saving)}</p>
       </div>
       ${this.design ? this.renderConditions(this.design) : nothing}

@@ -17,7 +17,8 @@ const STYLES: [StyleName, string][] = [
 ];
 
 /**
- * Taking something away: the plate as SVG or PNG or to the clipboard, the profiles and the ledger as tables, the design as its file. `show()` opens it.
+ * Taking something away: the plate as SVG or PNG or to the clipboard, the profiles and the ledger as tables, the design as its file
+ * or inside a link. `show()` opens it.
  * Where the figures belong to an earlier design than the one on the page, they are not given away.
  */
 export class HmLeave extends LitElement {
@@ -90,6 +91,18 @@ export class HmLeave extends LitElement {
     void this.run(copy());
   }
 
+  private copyLink(): void {
+    const { design } = this;
+    if (design === null) return;
+    const copy = async (): Promise<string> => {
+      const { linkTo } = await import('../../src/export/link.ts');
+      const link = await linkTo(design, location.href);
+      await navigator.clipboard.writeText(link);
+      return `The link is on the clipboard, ${link.length} characters. It holds the whole design; no server is asked for it.`;
+    };
+    void this.run(copy());
+  }
+
   override render(): TemplateResult {
     const ready = this.result !== null && !this.stale;
     return html`<hm-dialog heading="Take away">
@@ -117,7 +130,7 @@ export class HmLeave extends LitElement {
       </section>
       <section aria-labelledby="of-design">
         <h3 id="of-design">The design</h3>
-        <div class="row"><button type="button" @click=${() => void this.run(this.saveDesign())}>Design file, JSON</button></div>
+        <div class="row"><button type="button" @click=${() => void this.run(this.saveDesign())}>Design file, JSON</button> <button type="button" @click=${this.copyLink}>Copy a link</button></div>
         <p class="quiet">Read again by dropping it on the page, and by the command line.</p>
       </section>
       <p class="caution">Estimates of an ideal one-dimensional structure from published parameters, to be confirmed by measurement before a process or a product relies on them.</p>

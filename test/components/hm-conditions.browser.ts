@@ -75,10 +75,13 @@ describe('the head of the page', () => {
     expect(element.shadowRoot!.querySelector('.saving')!.textContent).to.equal('Saving');
   });
 
-  it('tells of another name and of light or dark', () => {
+  it('tells of another name, never of an empty one, and of light or dark', async () => {
     const names = heard(element, 'hm-rename');
     type('Project', 'solar cell');
+    type('Project', '');
     expect(names).to.deep.equal([{ name: 'solar cell' }]);
+    await field('Project').updateComplete;
+    expect(field('Project').value).to.equal('cell');
     const views = heard(element, 'hm-view');
     const dark = element.shadowRoot!.querySelectorAll<HTMLInputElement>('[type=radio]')[2];
     dark.click();

@@ -3,6 +3,7 @@ import '../../components/hm-leave/hm-leave.ts';
 import type { HmLeave } from '../../components/hm-leave/hm-leave.ts';
 import { fileName, saveFile } from '../../components/shared/save-file.ts';
 import { starters } from '../../src/design/starters/index.ts';
+import { textOfLink } from '../../src/export/link.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import type { Result } from '../../src/result/types.ts';
 import { expectAccessible } from './accessible.ts';
@@ -79,6 +80,21 @@ describe('taking something away', () => {
     const { text, name } = await taken('Design file');
     expect(name).to.match(/\.halfmark\.json$/);
     expect(JSON.parse(text)).to.deep.equal(JSON.parse(JSON.stringify(design)));
+  });
+
+  it('puts a link on the clipboard that holds the whole design', async () => {
+    const written: string[] = [];
+    const clipboard = Object.getOwnPropertyDescriptor(Navigator.prototype, 'clipboard')!;
+    Object.defineProperty(navigator, 'clipboard', { value: { writeText: async (text: string) => void written.push(text) }, configurable: true });
+    try {
+      button(element, 'Copy a link').click();
+      await until('the link', () => written.length > 0);
+      expect(JSON.parse(await textOfLink(written[0]))).to.deep.equal(JSON.parse(JSON.stringify(design)));
+      await until('the remark', () => remark().includes('clipboard'));
+    } finally {
+      delete (navigator as unknown as { clipboard?: unknown }).clipboard;
+      expect(Object.getOwnPropertyDescriptor(Navigator.prototype, 'clipboard')).to.deep.equal(clipboard);
+    }
   });
 
   it('gives no figures of an earlier design away, but always the design', async () => {

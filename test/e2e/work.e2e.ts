@@ -1,4 +1,5 @@
 import assert from 'node:assert/strict';
+import { deflateRawSync } from 'node:zlib';
 import type { Page } from 'puppeteer-core';
 import { scenario } from './harness.ts';
 
@@ -134,4 +135,21 @@ scenario('A value that cannot be read keeps the picture, and says where and how 
   assert.match(await messages(), /temperature: .*parsec/);
   assert.equal(await conductionEdge(page), before);
   assert.equal(await at(page, ['hm-app', 'hm-plate'], (plate) => plate.hasAttribute('stale')), true);
+});
+
+scenario('A link opens the design that it carries as a project of its own, once', async ({ page, open }) => {
+  await open();
+  await until('a diagram', async () => (await conductionEdge(page)) !== null && (await solved(page)));
+  const title = () => at(page, STRIP, (strip) => (strip as unknown as { design: { title: string } }).design.title);
+  const own = await title();
+  const design = { format: 'halfmark-design/1', title: 'sent by a colleague', conditions: { temperature: '300 K' }, top: { kind: 'neutral' }, layers: [{ name: 'one', material: 'GaAs', thickness: '1 um' }], bottom: { kind: 'neutral' } };
+  const fragment = deflateRawSync(JSON.stringify(design)).toString('base64url');
+  await page.evaluate((text) => void (location.hash = `design=${text}`), fragment);
+  await until('the design', async () => (await title()) === 'sent by a colleague' && (await solved(page)));
+  assert.equal(await page.evaluate(() => location.hash), '');
+  await page.reload({ waitUntil: 'networkidle0' });
+  await until('the project after a reload', async () => (await title()) === 'sent by a colleague');
+  await at(page, ['hm-app', 'hm-conditions'], (head) => [...head.shadowRoot!.querySelectorAll('button')].find((button) => button.textContent === 'Projects')!.click());
+  const names = () => at(page, ['hm-app', 'hm-projects'], (projects) => (projects as unknown as { entries: { name: string }[] }).entries.map((entry) => entry.name).sort().join());
+  await until('both projects in the list', async () => (await names()) === [own, 'sent by a colleague'].sort().join());
 });
