@@ -1,5 +1,5 @@
 import type { ContactInput, DopantRow, LayerInput } from '../../src/design/types.ts';
-import type { ContactResult } from '../../src/result/types.ts';
+import type { ContactResult, IonisedResult, LayerResult } from '../../src/result/types.ts';
 import { textWidth } from '../../src/drawing/glyph-widths.ts';
 import { decimalText } from '../../src/result/figure-text.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
@@ -45,19 +45,39 @@ export function contactText(contact: ContactInput, solved: ContactResult | undef
 /** Sizes of the strip's text and most lines of a column, for the decision where a layer is written. */
 const TEXT = 14;
 const PADDING = 12;
-const MOST_LINES = 6;
+const MOST_LINES = 5;
+const BOLD = 1.12;
 
 /** A layer's lines in words, as its column shows them. */
-export function layerLines(layer: LayerInput, i: number): string[] {
-  const dopants = (layer.dopants ?? []).map(dopantText);
-  return [`${i + 1} ${layer.name}`, materialText(layer), layer.thickness, ...(dopants.length === 0 ? ['undoped'] : dopants)];
+export function layerLines(layer: LayerInput, i: number, solved?: LayerResult): string[] {
+  const dopants = (layer.dopants ?? []).map((row, r) => `${dopantText(row)}${dopantWorth(row, solved?.ionised[r])}`);
+  return [
+    `${i + 1} ${layer.name}`, `${materialText(layer)}${worth(layer.x, solved?.x, '')}`, `${readable(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}`,
+    ...(dopants.length === 0 ? ['undoped'] : dopants),
+  ];
+}
+
+/** What a concentration comes to. With an activation the result's is another figure, so nothing is said. */
+function dopantWorth(row: DopantRow, solved: IonisedResult | undefined): string {
+  return row.activation === undefined ? worth(row.concentration, solved?.concentration_cm3, 'cm⁻³') : '';
 }
 
 /** Whether the lines of a column can be read in it. An upper bound of their widths serves: no page is measured. */
 export function fitsColumn(lines: readonly string[], width: number): boolean {
   const room = width - PADDING;
-  if (lines.some((line) => line.split(' ').some((word) => textWidth(word, TEXT) > room))) return false;
-  return lines.reduce((sum, line) => sum + Math.ceil(textWidth(line, TEXT) / room), 0) <= MOST_LINES;
+  let count = 0;
+  for (const [i, line] of lines.entries()) {
+    // The name, first, is set bold.
+    const size = i === 0 ? TEXT * BOLD : TEXT;
+    let used = Infinity;
+    for (const word of line.split(' ')) {
+      const w = textWidth(word, size);
+      if (w > room) return false;
+      used += w + textWidth(' ', size);
+      if (used > room) [used, count] = [w, count + 1];
+    }
+  }
+  return count <= MOST_LINES;
 }
 
 /** A layer in one sentence, for readers who cannot see the column. */

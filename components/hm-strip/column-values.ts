@@ -4,7 +4,7 @@ import type { Design, LayerInput } from '../../src/design/types.ts';
 import type { LayerResult } from '../../src/result/types.ts';
 import { complaintsWithin } from '../shared/complaint-at.ts';
 import type { DopantChoice } from '../shared/menus.ts';
-import { dopantText, materialText, readable, worth } from './column-text.ts';
+import { layerLines } from './column-text.ts';
 
 /**
  * What stands in a column or on a card. Each value says by `data-value` what a press on it edits.
@@ -15,12 +15,11 @@ export function columnValues(design: Design, i: number, solved: LayerResult | un
   const layer = design.layers[i];
   const wrong = (path: string): string => (complaintsWithin(complaints, `layers[${i}].${path}`).length > 0 ? 'wrong' : '');
   const dopants = layer.dopants ?? [];
+  const [, material, thickness, ...doping] = layerLines(layer, i, solved);
   return html`<span class="name"><span class="number">${i + 1}</span> ${layer.name}</span>
-    <span class="value ${wrong('material')} ${wrong('x')}" data-value="material">${materialText(layer)}${worth(layer.x, solved?.x, '')}</span>
-    <span class="value ${wrong('thickness')}" data-value="thickness">${readable(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}</span>
-    ${dopants.length === 0
-      ? html`<span class="value" data-value="add">undoped</span>`
-      : dopants.map((row, r) => html`<span class="value ${wrong(`dopants[${r}]`)}" data-value="doping ${r}">${dopantText(row)}${row.activation === undefined ? worth(row.concentration, solved?.ionised[r]?.concentration_cm3, 'cm⁻³') : ''}</span>`)}`;
+    <span class="value ${wrong('material')} ${wrong('x')}" data-value="material">${material}</span>
+    <span class="value ${wrong('thickness')}" data-value="thickness">${thickness}</span>
+    ${doping.map((text, r) => html`<span class="value ${wrong(`dopants[${r}]`)}" data-value=${dopants.length === 0 ? 'add' : `doping ${r}`}>${text}</span>`)}`;
 }
 
 /** How a column's doping is drawn: by the type as solved, else by its first dopant. */

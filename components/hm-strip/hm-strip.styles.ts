@@ -61,7 +61,8 @@ export const styles = css`
     border-inline-end: 1px solid var(--ink);
   }
   .column.contact {
-    border-block-color: transparent;
+    border-block: 0;
+    padding-block: 7px 6px;
     color: var(--faint);
     font-size: 0.8125rem;
   }

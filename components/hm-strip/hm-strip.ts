@@ -184,7 +184,7 @@ export class HmStrip extends LitElement implements StripSurface {
   }
 
   private fits(i: number, g: StripGeometry): boolean {
-    return fitsColumn(layerLines(this.design!.layers[i], i), g.layers[i].right - g.layers[i].left);
+    return fitsColumn(layerLines(this.design!.layers[i], i, this.stale ? undefined : this.solved(i)), g.layers[i].right - g.layers[i].left);
   }
 
   private renderInPlace(): TemplateResult | typeof nothing {

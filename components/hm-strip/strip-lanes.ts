@@ -7,11 +7,14 @@ import { spread } from './strip-geometry.ts';
 /** Buttons of a lane stand this far apart, px: room for a finger. */
 const GAP = 26;
 
+/** A button that would stand farther than this from its boundary would be taken for another's: it is left out, px. */
+const FARTHEST = 5;
+
 /** Boundaries in view with the px of their buttons; null where there is no room for all. Everything that a lane offers can be had from the form too. */
 function placed(edges: readonly (number | null)[], width: number, wanted: (i: number) => boolean): { i: number; x: number }[] | null {
   const shown = edges.flatMap((x, i) => (x !== null && wanted(i) ? [{ x, i }] : []));
   const places = spread(shown.map((e) => e.x), GAP, GAP / 2, width - GAP / 2);
-  return places && shown.map(({ i }, k) => ({ i, x: places[k] }));
+  return places && shown.map(({ i, x }, k) => ({ i, x: places[k], off: Math.abs(places[k] - x) })).filter(({ off }) => off <= FARTHEST);
 }
 
 /** A "+" over every boundary. */

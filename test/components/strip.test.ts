@@ -210,3 +210,11 @@ describe('complaints', () => {
     expect(complaintsWithin(complaints, 'layers[1]', ['layers[1].dopants'])).toEqual(['a']);
   });
 });
+
+describe('a column full of words', () => {
+  it('counts the lines as they break between words, the bold name wider', () => {
+    // 7 lines of words in 60 px, none too wide for it.
+    expect(fitsColumn(['4 well 3', 'GaAs', '7 nm', 'Si 1e17 cm⁻³'], 66)).toBe(false);
+    expect(fitsColumn(['4 well', 'GaAs', '7 nm', 'undoped'], 75)).toBe(true);
+  });
+});
