@@ -34,6 +34,14 @@ const stripText = async (page: Page): Promise<string> => (await at(page, STRIP, 
 const remark = async (page: Page): Promise<string> => (await at(page, ['hm-app', 'hm-messages', '.polite'], (element) => element.textContent!)) ?? '';
 const solved = async (page: Page): Promise<boolean> => (await at(page, ['hm-app', 'hm-messages'], (messages) => (messages as unknown as { findings: { status: string } }).findings.status)) === 'complete';
 
+/** Heights of the conduction edge at its two ends, and its highest and lowest point, px. */
+function heights(path: string | null): number[] {
+  const y = [...(path ?? '').matchAll(/[-\d.]+,([-\d.]+)/g)].map((pair) => Number(pair[1]));
+  return [y[0], y[y.length - 1], Math.min(...y), Math.max(...y)];
+}
+/** The same picture to the eye: another start of the solver may place its mesh, and so the points of the line, a little differently. */
+const alike = (a: string | null, b: string | null): boolean => heights(a).every((y, i) => Math.abs(y - heights(b)[i]) < 0.5);
+
 /** Presses Tab until the focus stands on an element that answers. */
 async function tabTo(page: Page, what: string, found: string): Promise<void> {
   for (let i = 0; i < 120; i++) {
@@ -61,7 +69,7 @@ scenario('A doping is changed by the keyboard alone, seen in the diagram, taken 
   await page.keyboard.up('Control');
   await page.keyboard.type('5e16');
   await page.keyboard.press('Enter');
-  await until('another diagram', async () => (await solved(page)) && (await conductionEdge(page)) !== before);
+  await until('another diagram', async () => (await solved(page)) && !alike(await conductionEdge(page), before));
   assert.match(await stripText(page), /5e16 cm⁻³/);
 
   const undo = async (): Promise<void> => {
@@ -70,7 +78,7 @@ scenario('A doping is changed by the keyboard alone, seen in the diagram, taken 
     await page.keyboard.up('Control');
   };
   await undo();
-  await until('the first diagram', async () => (await solved(page)) && (await conductionEdge(page)) === before);
+  await until('the first diagram', async () => (await solved(page)) && alike(await conductionEdge(page), before));
   assert.match(await remark(page), /^Taken back: /);
 
   await page.keyboard.down('Control');
@@ -78,14 +86,14 @@ scenario('A doping is changed by the keyboard alone, seen in the diagram, taken 
   await page.keyboard.press('KeyZ');
   await page.keyboard.up('Shift');
   await page.keyboard.up('Control');
-  await until('the other diagram again', async () => (await solved(page)) && (await conductionEdge(page)) !== before);
+  await until('the other diagram again', async () => (await solved(page)) && !alike(await conductionEdge(page), before));
   await until('the save', async () => (await at(page, SAVING, (element) => element.textContent)) === 'All changes saved in this browser');
 
   await page.reload({ waitUntil: 'networkidle0' });
   await until('a diagram', async () => (await conductionEdge(page)) !== null && (await solved(page)));
   assert.match(await stripText(page), /5e16 cm⁻³/);
   await undo();
-  await until('undo through the reload', async () => (await solved(page)) && (await conductionEdge(page)) === before);
+  await until('undo through the reload', async () => (await solved(page)) && alike(await conductionEdge(page), before));
 });
 
 scenario('The plate is taken away as an SVG file with its title and figures', async ({ page, open }) => {
