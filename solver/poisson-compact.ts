@@ -11,11 +11,10 @@ import type { Quality } from './solution.ts';
 
 /** Halving a mesh cuts the compact scheme's error to a sixteenth. */
 const CONTRACTION = 1 / 16;
-/** One estimate can be optimistic, so it is quoted four times as large, and a second one of another kind has its say. */
+/** One estimate can be optimistic, so each of two of different kinds is quoted four times as large, and the larger counts. */
 const SAFETY = 4;
 /** Two estimates of the coarse error that differ by more than this do not agree. */
-const AGREEMENT = 1.5;
-const SAFETY_OF_SECOND = 2;
+const AGREEMENT = 1.2;
 const MOST_ROUNDS = 10;
 /** A coarse mesh of this error leaves the halved one well within the accuracy. */
 const COARSE_SHARE = 2;
@@ -92,7 +91,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
         if (!(d <= difference)) difference = d;
       }
     }
-    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY_OF_SECOND * fine.estimate);
+    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY * fine.estimate);
     (globalThis as any).DBG = { d: difference, dc: coarse.estimate, df: fine.estimate, lump: fine.system.lumped.reduce((a: number, b: number) => a + b, 0), lumpc: coarse.system.lumped.reduce((a: number, b: number) => a + b, 0) };
     const quality: Quality = {
       converged: true,
