@@ -11,9 +11,10 @@ export interface Parsed {
  * Reads FILE, `--set NAME=VALUE` (any number) and the options that a command knows.
  *
  * @param known  options that take a value, e.g. { '-o': 'output', '--style': 'style' }
+ * @param flags  options that take none, e.g. { '--json': 'json' }; where one is given, its name's value is "true"
  * @throws {UsageError}
  */
-export function parseArguments(args: readonly string[], usage: string, known: Readonly<Record<string, string>> = {}): Parsed {
+export function parseArguments(args: readonly string[], usage: string, known: Readonly<Record<string, string>> = {}, flags: Readonly<Record<string, string>> = {}): Parsed {
   let file: string | null = null;
   const set: Record<string, string> = {};
   const options: Record<string, string> = {};
@@ -28,8 +29,11 @@ export function parseArguments(args: readonly string[], usage: string, known: Re
       const value = inline ?? args[++i];
       if (value === undefined) throw new UsageError(`${name} takes a value; usage: halfmark ${usage}`);
       options[known[name]] = value;
+    } else if (Object.hasOwn(flags, name)) {
+      if (inline !== undefined) throw new UsageError(`${name} takes no value; usage: halfmark ${usage}`);
+      options[flags[name]] = 'true';
     } else if (name.startsWith('-') && name !== '-') {
-      throw new UsageError(`there is no option ${quoted(name)}${didYouMean(name, ['--set', ...Object.keys(known)])}; usage: halfmark ${usage}`);
+      throw new UsageError(`there is no option ${quoted(name)}${didYouMean(name, ['--set', ...Object.keys(known), ...Object.keys(flags)])}; usage: halfmark ${usage}`);
     } else if (file !== null) {
       throw new UsageError(`two files are named, ${quoted(file)} and ${quoted(name)}; one is read`);
     } else file = name;

@@ -57,7 +57,8 @@ export function* casesOf(solver: PointSolver, temperature: number, range: readon
   return out;
 }
 
-function requirementResult(requirement: ReadRequirement, index: number, found: WorstCase, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): RequirementResult {
+/** A row of the result from the worst case that was found. */
+export function requirementResult(requirement: ReadRequirement, index: number, found: WorstCase, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): RequirementResult {
   const { quantity, of, bound, limit, over } = requirement;
   const { kind, unit, margin, marginUnit, words: noun } = requirementQuantity(quantity);
   const { reading, unanswered } = found;

@@ -61,11 +61,6 @@ export class PointSolver {
     return this.#readings.has(`${point.temperature}|${point.counts.join()}`);
   }
 
-  /** Every point that was asked. */
-  get readings(): Iterable<Reading> {
-    return this.#readings.values();
-  }
-
   #solve(point: Point): Reading {
     this.evaluations++;
     const nothing = this.requirements.map(() => null);

@@ -1,4 +1,4 @@
-import type { Point, PointSolver, Reading } from './point.ts';
+import type { Point, Reading } from './point.ts';
 import { seeded } from './random.ts';
 
 export interface WorstCaseOptions {
@@ -16,6 +16,14 @@ export interface WorstCase {
   /** points without an answer; what is not known is not met */ unanswered: Reading[];
 }
 
+/** What is searched: something that can be read at points, with a number of uncertainties. PointSolver is one. */
+export interface Readable {
+  readonly evaluations: number;
+  readonly uncertainties: readonly unknown[];
+  at(point: Point): Reading;
+  /** whether a point has been read already */ has(point: Point): boolean;
+}
+
 /** Solves so far, and how many are expected in all. */
 export interface Progress {
   done: number;
@@ -25,6 +33,8 @@ export interface Progress {
 /** Scores closer than this are the mesh's doing (1e-5 V of psi is 4e-4 kT), not a worse point. */
 export const NOISE = 2e-3;
 const MOST_ROUNDS = 8;
+/** Uncertainties that are flipped in pairs. */
+const MOST_PAIRED = 6;
 /** Steps of the search from a point inside that turned out worse, and the share of the range at which it ends. */
 const FIRST_STEP = 0.25;
 const LAST_STEP = 0.02;
@@ -38,7 +48,7 @@ const LAST_STEP = 0.02;
  * @param temperatures  the ends, K; one value where they do not range
  * @param nominal       the design's own temperature, K
  */
-export function* worstCases(solver: PointSolver, rows: readonly number[], temperatures: readonly number[], nominal: number, options: WorstCaseOptions = {}): Generator<Progress, WorstCase[]> {
+export function* worstCases(solver: Readable, rows: readonly number[], temperatures: readonly number[], nominal: number, options: WorstCaseOptions = {}): Generator<Progress, WorstCase[]> {
   const { mostFactorial = 6, samples = 32, seed = 1, inside = 3 } = options;
   const k = solver.uncertainties.length;
   const [coldest, hottest] = [temperatures[0], temperatures[temperatures.length - 1]];
@@ -118,22 +128,32 @@ export function* worstCases(solver: PointSolver, rows: readonly number[], temper
 
 type Ask = (point: Point) => Generator<Progress, Reading>;
 
-/** Flips one uncertainty after the other while that makes the requirement worse; `null` scores are never taken for worse. */
+/**
+ * Flips one uncertainty after the other while that makes the requirement worse, then those that count most in pairs: two that only together are bad show in
+ * no single flip. Points without a score are never taken for worse.
+ */
 function* descend(row: number, start: Reading, ask: Ask): Generator<Progress, void> {
   let worst = start;
+  const flipped = (flips: readonly number[], count: number): Point => ({ temperature: worst.point.temperature, counts: worst.point.counts.map((c, j) => (flips.includes(j) ? (c === 0 ? count : -c) : c)) });
   for (let round = 0; round < MOST_ROUNDS; round++) {
-    let better = false;
+    const before = worst;
+    const effects = new Map<number, number>();
     for (let i = 0; i < start.point.counts.length; i++) {
-      const now = worst.point.counts[i];
-      for (const count of [-1, 1].filter((c) => c !== now)) {
-        const { temperature, counts } = worst.point;
-        const flipped = yield* ask({ temperature, counts: counts.map((c, j) => (j === i ? count : c)) });
-        if (!lower(flipped.scores[row], worst.scores[row])) continue;
-        worst = flipped;
-        better = true;
+      for (const count of worst.point.counts[i] === 0 ? [-1, 1] : [1]) {
+        const other = yield* ask(flipped([i], count));
+        effects.set(i, Math.abs((other.scores[row] ?? 0) - (worst.scores[row] ?? 0)));
+        if (lower(other.scores[row], worst.scores[row])) worst = other;
       }
     }
-    if (!better) return;
+    if (worst !== before) continue;
+    const strong = [...effects].filter(([, effect]) => effect > NOISE).sort((a, b) => b[1] - a[1]).slice(0, MOST_PAIRED).map(([i]) => i);
+    for (const [k, i] of strong.entries()) {
+      for (const j of strong.slice(k + 1)) {
+        const other = yield* ask(flipped([i, j], 1));
+        if (lower(other.scores[row], worst.scores[row])) worst = other;
+      }
+    }
+    if (worst === before) return;
   }
 }
 
