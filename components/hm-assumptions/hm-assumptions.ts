@@ -14,6 +14,12 @@ const ALIGNMENT: [NonNullable<AssumptionsInput['alignment']>, string][] = [
   ['affinity', 'electron affinities'],
 ];
 
+const TRANSMISSION: [NonNullable<AssumptionsInput['transmission']>, string][] = [
+  ['wkb', 'WKB'],
+  ['kemble', 'WKB with reflection at the top (Kemble)'],
+  ['exact', 'the wave equation itself'],
+];
+
 /**
  * What the solution takes for granted, said in a line, and changed when it is opened.
  * @fires hm-edit
@@ -35,8 +41,8 @@ export class HmAssumptions extends LitElement {
 
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
-    const { statistics = 'fermi-dirac', alignment = 'offsets', narrowing = false, nonParabolic = false } = this.design.assumptions ?? {};
-    const words = [nameOf(STATISTICS, statistics), nameOf(ALIGNMENT, alignment), ...(narrowing ? ['gap narrowing'] : []), ...(nonParabolic ? ['non-parabolic'] : [])];
+    const { statistics = 'fermi-dirac', alignment = 'offsets', narrowing = false, nonParabolic = false, transmission = 'wkb' } = this.design.assumptions ?? {};
+    const words = [nameOf(STATISTICS, statistics), nameOf(ALIGNMENT, alignment), ...(transmission === 'wkb' ? [] : [nameOf(TRANSMISSION, transmission)]), ...(narrowing ? ['gap narrowing'] : []), ...(nonParabolic ? ['non-parabolic'] : [])];
     return html`<details>
       <summary><h2>Assumptions</h2> <span class="inforce">${words.join('; ')}</span></summary>
       <label>Statistics
@@ -47,6 +53,11 @@ export class HmAssumptions extends LitElement {
       <label>Bands line up by
         <select @change=${(e: Event) => this.set('alignment', (e.target as HTMLSelectElement).value as typeof alignment, 'alignment of the bands')}>
           ${ALIGNMENT.map(([value, words]) => html`<option value=${value} .selected=${value === alignment}>${words}</option>`)}
+        </select>
+      </label>
+      <label>Tunnelling at contacts by
+        <select @change=${(e: Event) => this.set('transmission', (e.target as HTMLSelectElement).value as typeof transmission, 'transmission')}>
+          ${TRANSMISSION.map(([value, words]) => html`<option value=${value} .selected=${value === transmission}>${words}</option>`)}
         </select>
       </label>
       <label class="check"><input type="checkbox" .checked=${narrowing} @change=${(e: Event) => this.set('narrowing', (e.target as HTMLInputElement).checked, 'gap narrowing')} />The gap narrows with doping</label>

@@ -44,12 +44,19 @@ export const styles = css`
     cursor: pointer;
     min-height: 24px;
   }
-  .remark:empty {
-    margin: 0;
-    /* Stays in the accessibility tree: what is put in later is spoken. */
-    min-height: 0;
+  .line {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 0 1.5rem;
+    min-height: 24px;
+  }
+  .line details[open] {
+    flex-basis: 100%;
   }
   .remark {
+    margin: 0;
+    min-width: 0;
+    overflow-wrap: anywhere;
     color: var(--faint);
   }
   .urgent {

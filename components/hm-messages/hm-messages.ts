@@ -14,7 +14,8 @@ const LONG_MS = 800;
 
 /**
  * What the page has to say: why the design has no result, with the place and the mend; that the picture is of an earlier design; what the solver warns
- * of; that another tab saved the same project. Short remarks are spoken through a status region and fade from the page.
+ * of; that another tab saved the same project. Short remarks are spoken through a status region, in a line
+ * that is always there: what comes and goes does not push the plate about.
  *
  * @fires hm-choose  to go to the layer or contact that a complaint is about
  * @fires hm-act     cancel, again, keep-mine, take-other
@@ -68,9 +69,12 @@ export class HmMessages extends LitElement {
     return html`
       ${this.renderConflict()}
       <div role="status">${this.renderTrouble()}</div>
-      ${this.renderLong()} ${this.renderWarnings()}
-      <p class="remark polite" role="status">${remark !== null && !remark.urgent ? remark.text : ''}</p>
-      <p class="remark urgent" role="alert">${remark?.urgent ? remark.text : ''}</p>
+      ${this.renderLong()}
+      <div class="line">
+        ${this.renderWarnings()}
+        <p class="remark polite" role="status">${remark !== null && !remark.urgent ? remark.text : ''}</p>
+        <p class="remark urgent" role="alert">${remark?.urgent ? remark.text : ''}</p>
+      </div>
     `;
   }
 
