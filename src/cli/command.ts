@@ -1,8 +1,13 @@
+import type { PoolSide } from '../workers/pool.ts';
+
 /** What a command reads and writes besides files. */
 export interface Streams {
   out(text: string): void;
   error(text: string): void;
   stdin(): Promise<string>;
+  /** a line on a terminal that the next one overwrites; absent where nobody watches */ progress?(text: string): void;
+  /** starts a thread for long computations; absent where there are none, and all is done in this one */ startWorker?(): PoolSide;
+  /** threads that the machine runs at once */ cores?: number;
 }
 
 export interface Command {

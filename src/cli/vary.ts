@@ -1,0 +1,81 @@
+import { readFile } from 'node:fs/promises';
+import { allChunks, shardChunks } from '../batch/job.ts';
+import { InputError, type Complaint } from '../design/complaint.ts';
+import { didYouMean, quoted } from '../quantity/wording.ts';
+import type { Distribution } from '../tolerance/draw.ts';
+import { planVariations, type VariationPlan, type VariationRequest } from '../tolerance/plan.ts';
+import { variationReport } from '../tolerance/report.ts';
+import { variationResult } from '../tolerance/result.ts';
+import { readShards, writeShard } from '../tolerance/shards.ts';
+import { variationJob, type VariationRows } from '../tolerance/variations.ts';
+import { parseArguments } from './arguments.ts';
+import { EXIT, UsageError, type Command, type Streams } from './command.ts';
+import { readDesignFile } from './design-file.ts';
+import { shardOf, takeFlags, wholeNumber } from './flags.ts';
+import { tolerancesOf } from './judged.ts';
+import { longRun } from './long-run.ts';
+import { solved } from './solved.ts';
+
+const usage = 'vary FILE --count N [--seed S] [--distribution normal|uniform] [--tolerances all|stated] [--figure PATH ...] [--json] [--shard I/N | --gather FILE] [--workers N] [--set NAME=VALUE ...]';
+const VALUED = { '--count': 'count', '--seed': 'seed', '--distribution': 'distribution', '--tolerances': 'tolerances', '--shard': 'shard', '--gather': 'gather', '--workers': 'workers' } as const;
+const DISTRIBUTIONS: readonly Distribution[] = ['normal', 'uniform'];
+
+/** Draws a design within its tolerances many times and prints how its figures spread and how many variations meet the requirements. */
+export const vary: Command = {
+  usage,
+  summary: 'draw the design within its tolerances, print spreads and yield',
+  async run(args, streams) {
+    const { rest, flags, repeated } = takeFlags(args, ['--json'], ['--figure'], Object.keys(VALUED));
+    const { file, set, options } = parseArguments(rest, usage, { ...VALUED, '--json': 'json', '--figure': 'figure' });
+    if (options.count === undefined) throw new UsageError(`--count is missing; say how many variations, such as --count 1000`);
+    if (options.shard !== undefined && options.gather !== undefined) throw new UsageError('--shard computes a part and --gather puts parts together; use one of them at a time');
+    const request: VariationRequest = {
+      count: wholeNumber('--count', options.count, '1000'),
+      seed: options.seed === undefined ? 1 : wholeNumber('--seed', options.seed, '1'),
+      distribution: distributionOf(options.distribution),
+      tolerances: tolerancesOf(options.tolerances),
+      figures: repeated['--figure'],
+      set,
+    };
+    const shard = options.shard === undefined ? null : shardOf(options.shard);
+    const workers = options.workers === undefined ? undefined : Math.max(1, wholeNumber('--workers', options.workers, '2'));
+    const design = await readDesignFile(file, streams);
+    const planned = planVariations(design, request);
+    if (!planned.ok) throw new InputError(planned.complaints.map(onCommandLine));
+    const { plan } = planned;
+    // The design as it stands must have an accepted answer; why it has none is said once, not once a variation.
+    if (solved(design, set, streams) === null) return EXIT.noAnswer;
+    const job = variationJob(plan);
+    if (shard) {
+      const { values } = await longRun({ kind: 'variations', design, request }, job, shardChunks(job.chunks, ...shard), streams, workers);
+      streams.out(writeShard(plan, values));
+      return EXIT.done;
+    }
+    const values = options.gather === undefined ? (await longRun({ kind: 'variations', design, request }, job, allChunks(job), streams, workers)).values : await gathered(plan, options.gather, streams);
+    const result = variationResult(plan, values);
+    streams.out(flags.has('--json') ? `${JSON.stringify(result, null, 1)}\n` : variationReport(result));
+    return result.gaps.length === result.done ? EXIT.noAnswer : EXIT.done;
+  },
+};
+
+async function gathered(plan: VariationPlan, file: string, streams: Streams): Promise<Map<number, VariationRows>> {
+  let text: string;
+  try {
+    text = file === '-' ? await streams.stdin() : await readFile(file, 'utf8');
+  } catch (error) {
+    throw new UsageError(`${quoted(file)} cannot be read (${(error as NodeJS.ErrnoException).code ?? 'unknown reason'})`);
+  }
+  const reading = readShards(plan, text);
+  if (!reading.ok) throw new UsageError(`--gather ${quoted(file)}${reading.complaint.path === '' ? '' : ` ${reading.complaint.path}`}: ${reading.complaint.message}`);
+  return reading.chunks;
+}
+
+function distributionOf(text: string | undefined): Distribution {
+  if (text === undefined) return 'normal';
+  if ((DISTRIBUTIONS as readonly string[]).includes(text)) return text as Distribution;
+  throw new UsageError(`--distribution is ${quoted(text)}; normal or uniform would do${didYouMean(text, DISTRIBUTIONS)}`);
+}
+
+function onCommandLine({ path, message }: Complaint): Complaint {
+  return { path: ['count', 'seed', 'figure'].includes(path) ? `--${path}` : path, message };
+}

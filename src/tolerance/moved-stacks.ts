@@ -1,0 +1,83 @@
+import { profileAt, type Dopant, type Layer, type Stack } from '../../solver/index.ts';
+import { Asker } from '../design/ask.ts';
+import { catalogueOf, type Catalogue } from '../design/catalogue.ts';
+import { complaintLine } from '../design/complaint.ts';
+import { readContact } from '../design/contact.ts';
+import { readDopant } from '../design/dopant.ts';
+import { toStack } from '../design/stack.ts';
+import type { Design } from '../design/types.ts';
+import { readVariables } from '../design/variables.ts';
+import { governedBy } from '../requirements/governed.ts';
+import type { Uncertainty } from '../requirements/uncertainties.ts';
+
+/** Far inside what a thickness may be; nearer its limits the whole reading decides, cm. */
+const PLAIN_THICKNESS = [1e-8, 1] as const;
+
+/**
+ * The stack with its uncertainties moved. Reading a whole design takes as long as solving it, so where variables with a tolerance are used only in thicknesses, dopants and
+ * contacts, only those texts are read again, by the same readers; elsewhere the whole design is.
+ */
+export class MovedStacks {
+  readonly #catalogue: Catalogue;
+  readonly #moving: boolean;
+  readonly #quick: boolean;
+  readonly #thickness: boolean[];
+  readonly #dopants: boolean[][];
+  readonly #contacts: { top: boolean; bottom: boolean };
+
+  /** @param nominal  the stack of the design with these overrides */
+  constructor(
+    readonly design: Design,
+    readonly set: Readonly<Record<string, string>>,
+    readonly uncertainties: readonly Uncertainty[],
+    readonly nominal: Stack,
+  ) {
+    const governed = governedBy(design, set);
+    this.#catalogue = catalogueOf(design.custom);
+    this.#moving = uncertainties.some((u) => u.variable !== null);
+    this.#thickness = design.layers.map((layer) => governed(layer.thickness));
+    this.#dopants = design.layers.map((layer) => (layer.dopants ?? []).map((row) => governed(row)));
+    this.#contacts = { top: governed(design.top), bottom: governed(design.bottom) };
+    const { variables: _, requirements: __, top: ___, bottom: ____, layers, ...rest } = design;
+    this.#quick = !governed(rest, layers.map(({ thickness: _t, dopants: _d, ...other }) => other));
+  }
+
+  /** @param counts  of each uncertainty's tolerance  @returns the stack, or what is wrong with the design there */
+  at(counts: readonly number[]): Stack | string {
+    let stack: Stack | string = this.nominal;
+    if (this.#moving) {
+      const moves = Object.fromEntries(this.uncertainties.flatMap((u, i) => (u.variable === null ? [] : [[u.variable, counts[i]]])));
+      stack = (this.#quick ? this.#partly(moves) : null) ?? this.#wholly(moves);
+    }
+    if (typeof stack === 'string') return stack;
+    return this.uncertainties.reduce((s, u, i) => u.apply(s, counts[i]), stack);
+  }
+
+  #wholly(moves: Readonly<Record<string, number>>): Stack | string {
+    const reading = toStack(this.design, this.set, moves);
+    return reading.ok ? reading.stack : complaintLine(reading.complaints[0]);
+  }
+
+  /** Null where something there is wrong: the whole reading then says what. */
+  #partly(moves: Readonly<Record<string, number>>): Stack | null {
+    const { design, nominal } = this;
+    const { temperature: _, ...overrides } = this.set;
+    const variables = readVariables(design.variables ?? [], overrides, moves);
+    const ask = new Asker(variables.scope);
+    const layers = nominal.layers.map((layer, l) => this.#layer(layer, l, ask));
+    const last = layers.length - 1;
+    const top = this.#contacts.top ? readContact(design.top, 'top', layers[0].material, layers[0].name, this.#catalogue, ask) : nominal.top;
+    const bottom = this.#contacts.bottom ? readContact(design.bottom, 'bottom', layers[last].material, layers[last].name, this.#catalogue, ask) : nominal.bottom;
+    if (ask.complaints.length + variables.complaints.length > 0 || top === null || bottom === null) return null;
+    return layers.some(({ thickness }) => !(thickness > PLAIN_THICKNESS[0] && thickness < PLAIN_THICKNESS[1])) ? null : { ...nominal, layers, top, bottom };
+  }
+
+  #layer(layer: Layer, l: number, ask: Asker): Layer {
+    const input = this.design.layers[l];
+    if (!this.#thickness[l] && !this.#dopants[l].includes(true)) return layer;
+    const thickness = this.#thickness[l] ? ask.quantity(input.thickness, 'length', `layers[${l}].thickness`) : layer.thickness;
+    const x = profileAt(layer.x, thickness / 2, thickness);
+    const dopants = layer.dopants.map((dopant, d): Dopant => (this.#dopants[l][d] ? (readDopant(input.dopants![d], input.material, x, this.#catalogue, `layers[${l}].dopants[${d}]`, ask) ?? dopant) : dopant));
+    return { ...layer, thickness, dopants };
+  }
+}

@@ -1,0 +1,147 @@
+import { isRefusal, solveStack, type Profiles, type Solution, type SolveOptions, type Stack } from '../../solver/index.ts';
+import type { Job } from '../batch/job.ts';
+import { scoreOf } from '../requirements/margin.ts';
+import { figureOf } from '../requirements/quantities.ts';
+import { resultOf } from '../result/from-solution.ts';
+import type { Result } from '../result/types.ts';
+import { drawCounts, reachOf } from './draw.ts';
+import { MovedStacks } from './moved-stacks.ts';
+import type { VariationPlan } from './plan.ts';
+
+/**
+ * What some variations gave. Values are [variations x columns], row by row; null where there is no figure. `met` is [variations x requirements]: 1 met, 0 not met, -1 not known. JSON
+ * keeps every digit of it, so that shards can be put together later.
+ */
+export interface VariationRows {
+  values: (number | null)[];
+  met: number[];
+  /** variations of this chunk without an answer, and why; their values are null */ gaps: { index: number; reason: string }[];
+}
+
+/** Variations in one chunk. */
+export const CHUNK = 32;
+/** Ends of a tolerance are solved finer, so that small effects can be told apart, V. */
+const FINE = 1e-5;
+const NO_PROVENANCE = { program: '', model: '', presets: '', design: '' } as const;
+
+/** The first chunk is the nominal design; one follows for each uncertainty, at both ends of its tolerance with the others nominal; then come the variations. */
+export interface ChunkOfVariations {
+  kind: 'nominal' | 'ends' | 'draws';
+  /** of the uncertainty, or of the first variation */ first: number;
+  count: number;
+}
+
+export function chunkOf(plan: VariationPlan, chunk: number): ChunkOfVariations {
+  if (chunk === 0) return { kind: 'nominal', first: 0, count: 1 };
+  const inputs = plan.uncertainties.length;
+  if (chunk <= inputs) return { kind: 'ends', first: chunk - 1, count: 2 };
+  const first = (chunk - 1 - inputs) * CHUNK;
+  return { kind: 'draws', first, count: Math.min(CHUNK, plan.request.count - first) };
+}
+
+/** A tolerance run as a job. Every solve starts from the nominal solution at its temperature: what comes before in a chunk decides nothing. */
+export function variationJob(plan: VariationPlan): Job<VariationRows> {
+  const runner = new VariationRunner(plan);
+  return {
+    chunks: 1 + plan.uncertainties.length + Math.ceil(plan.request.count / CHUNK),
+    size: (chunk) => chunkOf(plan, chunk).count,
+    run: (chunk) => runner.run(chunkOf(plan, chunk)),
+  };
+}
+
+class VariationRunner {
+  readonly #plan: VariationPlan;
+  readonly #stacks: MovedStacks;
+  readonly #reaches: number[];
+  /** profiles of the nominal design by temperature; none where it has no answer */ readonly #start = new Map<string, Profiles | undefined>();
+
+  constructor(plan: VariationPlan) {
+    this.#plan = plan;
+    this.#stacks = new MovedStacks(plan.design, plan.set, plan.uncertainties, plan.stack);
+    this.#reaches = plan.uncertainties.map(reachOf);
+  }
+
+  run({ kind, first, count }: ChunkOfVariations): VariationRows {
+    const { uncertainties, request } = this.#plan;
+    const nominal = uncertainties.map(() => 0);
+    const rows: VariationRows = { values: [], met: [], gaps: [] };
+    for (let i = 0; i < count; i++) {
+      if (kind === 'draws') this.#add(rows, first + i, drawCounts(request.seed, first + i, this.#reaches, request.distribution), undefined);
+      else this.#add(rows, i, kind === 'nominal' ? nominal : nominal.map((_, u) => (u === first ? 2 * i - 1 : 0)), FINE);
+    }
+    return rows;
+  }
+
+  #add(rows: VariationRows, index: number, counts: readonly number[], accuracy: number | undefined): void {
+    const { columns } = this.#plan;
+    const stack = this.#stacks.at(counts);
+    const solved = typeof stack === 'string' ? stack : this.#solve(stack, accuracy);
+    const requirements = columns.filter((c) => c.kind === 'requirement').length;
+    if (typeof solved === 'string') {
+      rows.gaps.push({ index, reason: solved });
+      for (let c = 0; c < columns.length; c++) rows.values.push(null);
+      for (let r = 0; r < requirements; r++) rows.met.push(-1);
+      return;
+    }
+    for (const column of columns) {
+      if (column.kind === 'figure') {
+        rows.values.push(column.figure.read(solved[0].result));
+        continue;
+      }
+      const { requirement } = column;
+      let worst: { figure: number; score: number } | null = null;
+      let known = true;
+      for (const at of requirement.over === 'temperature' ? solved.slice(0, 1) : solved) {
+        const figure = figureOf(requirement, at);
+        if (figure === null) known = false;
+        else if (worst === null || scoreOf(requirement, figure) < worst.score) worst = { figure, score: scoreOf(requirement, figure) };
+      }
+      rows.values.push(known ? (worst?.figure ?? null) : null);
+      // One temperature at which it fails is enough to know.
+      rows.met.push(worst !== null && worst.score < 0 ? 0 : known ? 1 : -1);
+    }
+  }
+
+  /** At every temperature of the plan; or why there is none at one of them. */
+  #solve(stack: Stack, accuracy: number | undefined): SolvedStack[] | string {
+    const out: SolvedStack[] = [];
+    for (const temperature of this.#plan.temperatures) {
+      const answer = solved({ ...stack, temperature }, this.#nominal(temperature), accuracy);
+      if (typeof answer === 'string') return answer;
+      out.push(answer);
+    }
+    return out;
+  }
+
+  #nominal(temperature: number): Profiles | undefined {
+    const key = String(temperature);
+    if (!this.#start.has(key)) {
+      const answer = solutionOf({ ...this.#plan.stack, temperature }, {});
+      this.#start.set(key, typeof answer === 'string' ? undefined : answer.profiles);
+    }
+    return this.#start.get(key);
+  }
+}
+
+interface SolvedStack {
+  result: Result;
+  stack: Stack;
+}
+
+/** From the profiles of a like stack, and afresh where that comes to nothing. */
+function solved(stack: Stack, warmStart: Profiles | undefined, accuracy: number | undefined): SolvedStack | string {
+  let answer = solutionOf(stack, { accuracy, warmStart });
+  if (typeof answer === 'string' && warmStart !== undefined) answer = solutionOf(stack, { accuracy });
+  return typeof answer === 'string' ? answer : { result: resultOf(answer, '', NO_PROVENANCE), stack };
+}
+
+function solutionOf(stack: Stack, options: SolveOptions): Solution | string {
+  try {
+    const answer = solveStack(stack, options);
+    return isRefusal(answer) ? `no accepted answer: ${answer.reason}` : answer;
+  } catch (error) {
+    // What the solver refuses at its door, such as a gap that closes.
+    if (!(error instanceof RangeError)) throw error;
+    return error.message;
+  }
+}
