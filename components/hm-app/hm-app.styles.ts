@@ -39,6 +39,9 @@ export const styles = css`
     min-width: 0;
     margin-top: 0.75rem;
   }
+  hm-requirements {
+    margin-bottom: 0.75rem;
+  }
   .drop {
     position: fixed;
     inset: 0.75rem;

@@ -27,12 +27,14 @@ import '../hm-messages/hm-messages.ts';
 import '../hm-plate/hm-plate.ts';
 import '../hm-projects/hm-projects.ts';
 import '../hm-rail/hm-rail.ts';
+import '../hm-requirements/hm-requirements.ts';
 import '../hm-starters/hm-starters.ts';
 import '../hm-strip/hm-strip.ts';
 import '../hm-variables/hm-variables.ts';
 import { choicesFor, fetchStarters, starterCards, type Choices } from './choices.ts';
 import { styles } from './hm-app.styles.ts';
 import { IncomingController } from './incoming.ts';
+import { JudgingController } from './judging-controller.ts';
 import { pageKey } from './keys.ts';
 import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
 import { RemarkController } from './remark-controller.ts';
@@ -75,6 +77,7 @@ export class HmApp extends LitElement {
   private desk!: ProjectDesk;
   private readonly remarks = new RemarkController(this);
   private readonly staleness = new StaleController(this);
+  private readonly judging = new JudgingController(this);
   /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
   private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
@@ -178,6 +181,7 @@ export class HmApp extends LitElement {
     const { findings } = this.session;
     const { status, refusal, complaints } = findings;
     this.staleness.follow(findings);
+    this.judging.follow(this.session);
     const fails = refusal !== null || complaints.length > 0;
     // The reason itself is spoken by the messages; that it is over has no other voice.
     if (status === 'complete' && this.failed) this.say('Solved.');
@@ -357,6 +361,7 @@ export class HmApp extends LitElement {
         <hm-assumptions .design=${session.design}></hm-assumptions>
       </div>
       <div class="figures">
+        <hm-requirements .design=${session.design} .complaints=${session.findings.complaints} .verdicts=${this.judging.verdicts} @requirements-stop=${() => this.judging.stop()}></hm-requirements>
         <h2 class="spoken">Ledger</h2>
         <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.staleness.dim}></hm-ledger>
       </div>

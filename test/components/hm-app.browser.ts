@@ -5,7 +5,7 @@ import type { HmApp } from '../../components/hm-app/hm-app.ts';
 import type { HmStrip } from '../../components/hm-strip/hm-strip.ts';
 import { tell } from '../../components/shared/events.ts';
 import { writeDesign } from '../../src/design/write.ts';
-import { setConcentration, setThickness } from '../../src/state/commands/index.ts';
+import { addRequirement, setConcentration, setThickness } from '../../src/state/commands/index.ts';
 import { ProjectStore } from '../../src/storage/project-store.ts';
 import { expectAccessible } from './accessible.ts';
 import { button, until } from './heard.ts';
@@ -182,6 +182,19 @@ describe('the page', () => {
     expect(new Set(names).size).to.equal(2);
     await store.close();
   });
+
+  it('has requirements judged by a worker of their own once the design rests', async () => {
+    const app = await open();
+    const [{ name: first }] = strip(app).design!.layers;
+    const requirement = { quantity: 'builtIn', of: first, min: '0.1 V' };
+    tell(strip(app), 'hm-edit', { next: addRequirement(strip(app).design!, requirement), label: 'new requirement' });
+    const verdicts = () => part(app, 'hm-requirements').verdicts;
+    await until('a verdict', () => verdicts().status === 'complete', 3 * PATIENCE);
+    expect(verdicts().rows).to.have.length(1);
+    expect(verdicts().rows[0]).to.include({ quantity: 'builtIn', of: first, met: true });
+    tell(strip(app), 'hm-edit', { next: setThickness(strip(app).design!, 0, '200 mn'), label: 'thickness' });
+    await until('a stale verdict', () => verdicts().status === 'error' && verdicts().stale, PATIENCE);
+  }).timeout(30_000);
 
   it('renames the project and the title of its drawing together', async () => {
     const app = await open();

@@ -125,6 +125,14 @@ describe('the commands of a design', () => {
     expect(next.title).toBe('Ncap study');
   });
 
+  it('set, add and take out requirements', () => {
+    const next = commands.setRequirement(design, 0, { max: undefined, min: '1e-7 ohm cm^2', over: 'temperatureRange' });
+    expect(next.requirements?.[0]).toEqual({ quantity: 'contactResistivity', of: 'top', min: '1e-7 ohm cm^2', over: 'temperatureRange' });
+    expect(commands.addRequirement({ ...design, requirements: undefined }, { quantity: 'builtIn', of: 'cap', min: '1 V' }).requirements).toHaveLength(1);
+    expect(commands.removeRequirement(design, 0).requirements).toEqual([design.requirements?.[1]]);
+    expect(() => commands.setRequirement(design, 2, {})).toThrow(RangeError);
+  });
+
   it('set an assumption and give it back to its default', () => {
     const next = commands.setAssumption(design, 'narrowing', true);
     expect(next.assumptions).toEqual({ narrowing: true });

@@ -1,5 +1,6 @@
 /** Every change of a design that a person can make: pure functions (design, ...) -> next design, whose result is frozen and shares what did not change. */
 export { addDopant } from './add-dopant.ts';
+export { addRequirement } from './add-requirement.ts';
 export { addVariable } from './add-variable.ts';
 export { freeName } from './free-name.ts';
 export { insertLayer } from './insert-layer.ts';
@@ -7,6 +8,7 @@ export { moveLayer } from './move-layer.ts';
 export type { Side } from './parts.ts';
 export { removeDopant } from './remove-dopant.ts';
 export { removeLayer } from './remove-layer.ts';
+export { removeRequirement } from './remove-requirement.ts';
 export { removeVariable } from './remove-variable.ts';
 export { renameLayer } from './rename-layer.ts';
 export { renameVariable } from './rename-variable.ts';
@@ -19,6 +21,7 @@ export { setDopant } from './set-dopant.ts';
 export { setInterface } from './set-interface.ts';
 export { setMaterial, type MaterialChange } from './set-material.ts';
 export { setNotes } from './set-notes.ts';
+export { setRequirement } from './set-requirement.ts';
 export { setTemperature } from './set-temperature.ts';
 export { setTemperatureRange } from './set-temperature-range.ts';
 export { setThickness } from './set-thickness.ts';

@@ -1,0 +1,60 @@
+import type { ReactiveController, ReactiveControllerHost } from 'lit';
+import type { Design } from '../../src/design/types.ts';
+import type { Session } from '../../src/state/session.ts';
+import { JudgeClient } from '../../src/workers/judge-client.ts';
+import { startJudgeWorker } from '../../src/workers/start-worker.ts';
+import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
+
+/** Quiet time after a solved design before its requirements are judged: a drag is not followed by a hundred runs, ms. */
+const QUIET_MS = 500;
+
+/** Has the requirements of the session's design judged, each time it has been solved and rests. */
+export class JudgingController implements ReactiveController {
+  verdicts: Verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
+  readonly #host: ReactiveControllerHost;
+  readonly #client = new JudgeClient(startJudgeWorker);
+  #judged: Design | null = null;
+  #timer: ReturnType<typeof setTimeout> | undefined;
+
+  constructor(host: ReactiveControllerHost) {
+    this.#host = host;
+    host.addController(this);
+  }
+
+  hostDisconnected(): void {
+    clearTimeout(this.#timer);
+    this.#client.cancel();
+  }
+
+  /** To be told whenever the session's findings change. */
+  follow({ design, findings }: Session): void {
+    if (design === this.#judged) return;
+    clearTimeout(this.#timer);
+    this.#client.cancel();
+    this.#judged = null;
+    if ((design.requirements ?? []).length === 0) return this.#become({ status: 'initial', rows: [], stale: false, progress: null });
+    this.#become({ stale: this.verdicts.rows.length > 0, progress: null, status: findings.status === 'error' ? 'error' : 'pending', reason: findings.status === 'error' ? 'The design has no result.' : null });
+    if (findings.status === 'complete') this.#timer = setTimeout(() => void this.judge(design), QUIET_MS);
+  }
+
+  /** The person does not want to wait. */
+  stop(): void {
+    this.#client.cancel();
+  }
+
+  async judge(design: Design): Promise<void> {
+    this.#judged = design;
+    this.#become({ status: 'pending', progress: { done: 0, of: 1 }, reason: null });
+    const outcome = await this.#client.judge(design, (done, of) => this.#become({ progress: { done, of } }));
+    // Another design has taken its place.
+    if (this.#judged !== design) return;
+    if (outcome.kind === 'judged' && outcome.judgement.kind === 'judged') return this.#become({ status: 'complete', rows: outcome.judgement.requirements, stale: false, progress: null });
+    const reason = outcome.kind === 'fault' ? `The program itself failed while judging (${outcome.message}).` : outcome.kind === 'dropped' ? 'Judging was stopped.' : 'The design has no result.';
+    this.#become({ status: 'error', progress: null, reason });
+  }
+
+  #become(change: Partial<Verdicts>): void {
+    this.verdicts = { ...this.verdicts, ...change };
+    this.#host.requestUpdate();
+  }
+}
