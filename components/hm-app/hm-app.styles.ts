@@ -40,7 +40,7 @@ export const styles = css`
     margin-top: 0.75rem;
   }
   hm-requirements {
-    margin-bottom: 0.75rem;
+    margin-top: 0.75rem;
   }
   .drop {
     position: fixed;

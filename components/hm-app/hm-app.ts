@@ -355,13 +355,13 @@ export class HmApp extends LitElement {
           .dopants=${choices.dopants}
           .metals=${choices.metals}
         ></hm-strip>
+        <hm-requirements .design=${session.design} .complaints=${session.findings.complaints} .verdicts=${this.judging.verdicts} @requirements-stop=${() => this.judging.stop()}></hm-requirements>
       </div>
       <div class="givens">
         <hm-variables .design=${session.design} .complaints=${session.findings.complaints}></hm-variables>
         <hm-assumptions .design=${session.design}></hm-assumptions>
       </div>
       <div class="figures">
-        <hm-requirements .design=${session.design} .complaints=${session.findings.complaints} .verdicts=${this.judging.verdicts} @requirements-stop=${() => this.judging.stop()}></hm-requirements>
         <h2 class="spoken">Ledger</h2>
         <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.staleness.dim}></hm-ledger>
       </div>

@@ -22,8 +22,15 @@ export const styles = css`
     padding: 0;
   }
   li {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 0.25rem 1.5rem;
     padding: 0.35rem 0;
     border-bottom: 1px solid var(--line);
+  }
+  li > div {
+    flex: 1 1 24rem;
+    min-width: 0;
   }
   .row {
     display: flex;

@@ -97,13 +97,15 @@ export class HmRequirements extends LitElement {
     const name = `${known?.words ?? requirement.quantity} of ${requirement.of}`;
     const wrong = complaintsWithin(this.complaints, `requirements[${i}]`);
     return html`<li>
-      <h3>${name}</h3>
-      <div class="row">
-        ${bounds.map((bound) => this.renderLimit(requirement, i, bound, name, known?.unit ?? ''))}
-        <label class="check"><input type="checkbox" .checked=${requirement.over === 'temperatureRange'} @change=${(e: Event) => this.edit(i, { over: (e.target as HTMLInputElement).checked ? 'temperatureRange' : undefined }, `temperatures of a requirement`)} />over the temperature range</label>
-        <button type="button" @click=${() => tell(this, 'hm-edit', { next: removeRequirement(this.design!, i), label: `requirement ${name} taken out` })}>Take out<span class="spoken">: ${name}</span></button>
+      <div>
+        <h3>${name}</h3>
+        <div class="row">
+          ${bounds.map((bound) => this.renderLimit(requirement, i, bound, name, known?.unit ?? ''))}
+          <label class="check"><input type="checkbox" .checked=${requirement.over === 'temperatureRange'} @change=${(e: Event) => this.edit(i, { over: (e.target as HTMLInputElement).checked ? 'temperatureRange' : undefined }, `temperatures of a requirement`)} />over the temperature range</label>
+          <button type="button" @click=${() => tell(this, 'hm-edit', { next: removeRequirement(this.design!, i), label: `requirement ${name} taken out` })}>Take out<span class="spoken">: ${name}</span></button>
+        </div>
       </div>
-      ${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row))}
+      <div>${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row))}</div>
     </li>`;
   }
 
@@ -126,8 +128,8 @@ export class HmRequirements extends LitElement {
     const share = marginShare(row);
     const worst = row.worst === null || row.at === null ? '' : `worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : `${writeNumber(row.worst, 3)} ${row.unit}`} at ${row.at.words}`;
     return html`<p class="verdict ${verdict.replace(' ', '-')}">
-      <strong>${verdict}</strong>, margin ${marginWords(row)}
-      ${share === null ? nothing : html`<svg class="bar" viewBox="-50 0 100 8" width="100" height="8" aria-hidden="true">${svg`<rect x=${Math.min(0, 50 * share)} y="1" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><line x1="0" x2="0" y1="0" y2="8" stroke="currentColor"></line>`}</svg>`}
+      <span><strong>${verdict}</strong>, margin ${marginWords(row)}</span>
+      ${share === null ? nothing : html`<svg class="bar" viewBox="-50 0 100 8" width="100" height="8" aria-hidden="true">${svg`<rect x=${Math.min(0, 50 * share)} y="1" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M-50 4H50M0 0V8" stroke="currentColor" fill="none"></path>`}</svg>`}
       <span class="worst">${worst}${row.unanswered === null ? '' : `; no answer at ${row.unanswered.words}: ${row.unanswered.reason}`}</span>
     </p>`;
   }
