@@ -16,8 +16,8 @@ export const WAVE = ((2 * ELECTRON_MASS * ELEMENTARY_CHARGE) / (PLANCK / (2 * Ma
 export const METAL_BAND = 5.53;
 
 /** Largest share of the barrier's height that one cell spans, and largest ratio of energies above the neutral edge. */
-const CELL_SHARE = 0.05;
-const CELL_RATIO = 2.5;
+const CELL_SHARE = 0.04;
+const CELL_RATIO = 2;
 /** Largest ratio of distances from the metal that one cell spans where the image force counts. */
 const IMAGE_RATIO = 1.6;
 interface Cell {

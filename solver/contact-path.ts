@@ -28,7 +28,7 @@ export interface ContactPath {
 /**
  * The way from a metal to the first layer that is neutral somewhere. A layer that is depleted (or flooded) throughout is passed on, as an insulator is.
  *
- * @returns null where no layer of the stack is neutral
+ * @returns null where no layer of the stack is neutral, nor its other end an ideal ohmic contact
  *
  * Neutral means that the net charge is small beside the carriers *and* that the bands bend by less than kT over a Debye length (or the layer, if that is thinner): where donors give way to
  * acceptors the charge crosses zero in a strong field, and nothing is neutral there.
@@ -63,6 +63,8 @@ export function contactPath(stack: Stack, profiles: Profiles, space: SpaceCharge
       if (least <= SETTLED) break;
     }
   }
+  // An ideal ohmic contact takes up carriers whatever the layer before it looks like.
+  if (end < 0 && stack[top ? 'bottom' : 'top'].kind === 'neutral') end = node(total - 1);
   if (end < 0) return null;
   const reservoir = profiles.layer[end];
   const layer = stack.layers[reservoir];

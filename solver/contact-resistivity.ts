@@ -2,7 +2,7 @@ import { barrierShape, highestEdge, type BarrierShape } from './barrier-shape.ts
 import { richardson, type Carrier } from './carrier-constants.ts';
 import { BOLTZMANN } from './constants.ts';
 import type { ContactPath } from './contact-path.ts';
-import { waveSteps, waveTransmission } from './exact-transmission.ts';
+import { GENTLE, waveSteps, waveTransmission } from './exact-transmission.ts';
 import { profileAt } from './profile.ts';
 import { integrate } from './quadrature.ts';
 import type { Stack } from './stack.ts';
@@ -68,7 +68,9 @@ const WAVE_ACCURACY = 3e-6;
 /** Places at which the window is looked for, and how far below the peak it ends, in natural logarithms. */
 const SCAN = 24;
 const DEPTH = 22;
-const MOST_DIVISION = 64;
+const MOST_DIVISION = 16;
+/** Panels that an integral may take. A wave kept between two steps of a thick undoped layer rings in energy more finely than can be followed: the error says so. */
+const MOST_PANELS = { wkb: 60, kemble: 60, exact: 20 };
 /** Reach above the barrier and above EF, kT. */
 const REACH = 32;
 /** A barrier below this many kT stops nobody. */
@@ -94,14 +96,20 @@ export function carrierConductance(stack: Stack, path: ContactPath, carrier: Car
   const logFloor = front + logOccupancyAbove(edge / kT);
   const kind = options.transmission ?? stack.assumptions.transmission;
   if (highestEdge(path, carrier) <= edge + NO_BARRIER * kT && kind !== 'exact') return { log: logFloor, error: 0, logFloor, transmission: kind };
-  const boundary = stack[path.side];
-  const imageForce = options.imageForce ?? (boundary.kind === 'barrier' && boundary.imageForce);
-  const shape = barrierShape(stack, path, carrier, imageForce, kind === 'exact');
-  const unknown = shape.weight.findIndex((w) => !(w > 0));
-  if (unknown >= 0) return { missing: `the ${carrier} tunnelling mass of ${stack.layers[shape.layer[Math.floor(unknown / 3)]].material.id}` };
-  if (shape.layer.length === 0) return { log: logFloor, error: 0, logFloor, transmission: kind };
+  const shape = carrierBarrier(stack, path, carrier, kind, options.imageForce);
+  if ('missing' in shape) return shape;
+  // The image force may have taken the whole barrier.
+  if (shape.layer.length === 0 || (kind !== 'exact' && shape.top <= edge + NO_BARRIER * kT)) return { log: logFloor, error: 0, logFloor, transmission: kind };
   const { log, error } = logIntegral(shape, kind, options.dispersion ?? 'one-band', options.accuracy ?? ACCURACY);
   return { log: front + log, error, logFloor, transmission: kind };
+}
+
+/** The barrier of a carrier as one kind of transmission needs it; image force by default as the boundary says. */
+export function carrierBarrier(stack: Stack, path: ContactPath, carrier: Carrier, kind: Transmission, imageForce?: boolean): BarrierShape | MissingConstant {
+  const boundary = stack[path.side];
+  const shape = barrierShape(stack, path, carrier, imageForce ?? (boundary.kind === 'barrier' && boundary.imageForce), kind === 'exact');
+  const unknown = shape.weight.findIndex((w) => !(w > 0));
+  return unknown < 0 ? shape : { missing: `the ${carrier} tunnelling mass of ${stack.layers[shape.layer[Math.floor(unknown / 3)]].material.id}` };
 }
 
 /** ln of Int T f dE/kT above the neutral edge, with its relative error. */
@@ -130,7 +138,7 @@ function logIntegral(shape: BarrierShape, kind: Transmission, dispersion: Disper
     within.to = kept.length > 0 && kept[kept.length - 1] < SCAN - 1 ? place(kept[kept.length - 1] + 1) : Math.PI / 2;
     if (logs[best] > above) peakEnergy = edge + range * Math.sin(within.peak) ** 2;
   }
-  const { transmission, error: stepError } = settled(shape, kind, dispersion, rough, peakEnergy);
+  const { transmission, error: stepError } = settled(shape, kind, dispersion, peakEnergy);
   let sum = 0;
   let error = 0;
   if (climbs) {
@@ -143,7 +151,7 @@ function logIntegral(shape: BarrierShape, kind: Transmission, dispersion: Disper
       if (theta > within.from && theta < within.to) ends.push(theta);
     }
     ends.sort((a, b) => a - b);
-    const below = integrate((theta) => Math.exp(mapped(transmission, theta) - peak), ends, accuracy, accuracy * Math.exp(above - peak));
+    const below = integrate((theta) => Math.exp(mapped(transmission, theta) - peak), ends, accuracy, accuracy * Math.exp(above - peak), MOST_PANELS[kind]);
     sum += below.value;
     error += below.error;
   }
@@ -152,7 +160,7 @@ function logIntegral(shape: BarrierShape, kind: Transmission, dispersion: Disper
     const first = Math.max(top, edge);
     const ends = [first, first + 5 * kT, Math.max(first + 6 * kT, 12 * kT), Math.max(first, 0) + REACH * kT];
     if (first + 5 * kT < 0) ends.splice(2, 0, 0);
-    const rest = integrate((energy) => Math.exp(transmission(energy) + logOccupancy(energy / kT) - peak) / kT, ends, accuracy, accuracy * sum);
+    const rest = integrate((energy) => Math.exp(transmission(energy) + logOccupancy(energy / kT) - peak) / kT, ends, accuracy, accuracy * sum, MOST_PANELS[kind]);
     sum += rest.value;
     error += rest.error;
   }
@@ -160,22 +168,23 @@ function logIntegral(shape: BarrierShape, kind: Transmission, dispersion: Disper
 }
 
 /** The transmission with as many steps as its accuracy needs, and how far off it is in depth at the energy that counts, relative. */
-function settled(shape: BarrierShape, kind: Transmission, dispersion: Dispersion, rough: LogTransmission, peakEnergy: number): { transmission: LogTransmission; error: number } {
+function settled(shape: BarrierShape, kind: Transmission, dispersion: Dispersion, energy: number): { transmission: LogTransmission; error: number } {
   if (kind !== 'exact') {
-    const energy = Math.min(peakEnergy, shape.top - 0.5 * shape.kT);
-    const error = energy > shape.edge ? Math.abs(wkbExponent(shape, energy, dispersion, true) + rough(energy)) : 0;
-    return { transmission: logTransmission(shape, kind, dispersion), error };
+    const transmission = logTransmission(shape, kind, dispersion);
+    // Over the top the exponent counts only where it is small, and so is its error.
+    const error = energy < shape.top ? Math.abs(wkbExponent(shape, energy, dispersion, true) - wkbExponent(shape, energy, dispersion)) : 0;
+    return { transmission, error };
   }
   // The edge itself passes nothing.
-  const energy = Math.max(peakEnergy, shape.edge + 0.5 * shape.kT);
-  const energies = [energy, energy + shape.kT];
+  const low = Math.max(energy, shape.edge + 0.5 * shape.kT);
+  const energies = [low, low + shape.kT];
   let steps = 1;
   let coarse = logTransmission(shape, kind, dispersion, steps);
   for (;;) {
     const fine = logTransmission(shape, kind, dispersion, 2 * steps);
     // Fourth order: the finer one is off by a fifteenth of the difference.
     const error = Math.max(...energies.map((e) => Math.abs(fine(e) - coarse(e)))) / 15;
-    if (error < WAVE_ACCURACY || steps >= MOST_DIVISION) return { transmission: fine, error };
+    if (error < WAVE_ACCURACY || steps >= MOST_DIVISION) return { transmission: fine, error: error + GENTLE ** 2 };
     steps *= 2;
     coarse = fine;
   }
