@@ -2,6 +2,23 @@ import { evaluate, ExpressionError, type Scope } from '../quantity/expression.ts
 import type { Design } from '../design/types.ts';
 import { readVariables } from '../design/variables.ts';
 
+/** The variables that any text of the design uses, requirements' limits aside, directly or through the values of other variables. */
+export function variablesUsed(design: Design, set: Readonly<Record<string, string>>): ReadonlySet<string> {
+  const rows = design.variables ?? [];
+  const { temperature: _, ...overrides } = set;
+  const { scope } = readVariables(rows, overrides);
+  const texts = new Map(rows.map((row) => [row.name, Object.hasOwn(overrides, row.name) ? overrides[row.name] : row.value]));
+  const used = new Set<string>();
+  const take = (name: string): void => {
+    if (used.has(name)) return;
+    used.add(name);
+    for (const other of namesIn(texts.get(name) ?? '', scope)) take(other);
+  };
+  const { layers, top, bottom, interfaces, custom } = design;
+  for (const text of textsIn({ layers, top, bottom, interfaces, custom })) for (const name of namesIn(text, scope)) take(name);
+  return used;
+}
+
 /**
  * Asks whether a text of the design, or any text inside an object of it, uses a variable with a stated tolerance, directly or through the values of
  * other variables.

@@ -5,7 +5,7 @@ import { isZero, type Tolerance } from '../design/tolerance.ts';
 import type { Design, Variable } from '../design/types.ts';
 import { readVariables } from '../design/variables.ts';
 import { amountText, energyText, shareText } from './amount-text.ts';
-import { governedBy } from './governed.ts';
+import { governedBy, variablesUsed } from './governed.ts';
 
 /**
  * One thing that is not known exactly, as a count from -1 to 1 of its tolerance. Either a variable, which moves before the design is read, or a
@@ -33,7 +33,7 @@ export type Tolerances = 'all' | 'stated' | 'none';
 
 /**
  * Everything that is uncertain in a design. A quantity whose text uses a variable with a stated tolerance, directly or through other variables, moves with
- * that variable only. A stated tolerance of zero leaves the quantity where it is.
+ * that variable only. A stated tolerance of zero leaves the quantity where it is; a variable that nothing uses moves nothing.
  *
  * @param set  values of variables for this run, by name
  */
@@ -41,7 +41,8 @@ export function uncertaintiesOf(design: Design, set: Readonly<Record<string, str
   if (which === 'none') return [];
   const { temperature: _, ...overrides } = set;
   const { tolerances } = readVariables(design.variables ?? [], overrides);
-  const moving = (design.variables ?? []).filter(({ name }) => moves(tolerances.get(name))).map(ofVariable);
+  const used = variablesUsed(design, set);
+  const moving = (design.variables ?? []).filter(({ name }) => used.has(name) && moves(tolerances.get(name))).map(ofVariable);
   return which === 'stated' ? moving : [...moving, ...defaults(design, governedBy(design, set))];
 }
 
