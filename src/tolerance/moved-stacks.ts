@@ -5,7 +5,7 @@ import { complaintLine } from '../design/complaint.ts';
 import { readContact } from '../design/contact.ts';
 import { readDopant } from '../design/dopant.ts';
 import { toStack } from '../design/stack.ts';
-import type { Design } from '../design/types.ts';
+import type { Design, Variable } from '../design/types.ts';
 import { readVariables } from '../design/variables.ts';
 import { governedBy } from '../requirements/governed.ts';
 import type { Uncertainty } from '../requirements/uncertainties.ts';
@@ -19,6 +19,7 @@ const PLAIN_THICKNESS = [1e-8, 1] as const;
  */
 export class MovedStacks {
   readonly #catalogue: Catalogue;
+  /** without their ranges, which were checked before and take longer than the values */ readonly #variables: Variable[];
   readonly #moving: boolean;
   readonly #quick: boolean;
   readonly #thickness: boolean[];
@@ -34,6 +35,7 @@ export class MovedStacks {
   ) {
     const governed = governedBy(design, set);
     this.#catalogue = catalogueOf(design.custom);
+    this.#variables = (design.variables ?? []).map(({ range: _range, ...row }) => row);
     this.#moving = uncertainties.some((u) => u.variable !== null);
     this.#thickness = design.layers.map((layer) => governed(layer.thickness));
     this.#dopants = design.layers.map((layer) => (layer.dopants ?? []).map((row) => governed(row)));
@@ -62,7 +64,7 @@ export class MovedStacks {
   #partly(moves: Readonly<Record<string, number>>): Stack | null {
     const { design, nominal } = this;
     const { temperature: _, ...overrides } = this.set;
-    const variables = readVariables(design.variables ?? [], overrides, moves);
+    const variables = readVariables(this.#variables, overrides, moves);
     const ask = new Asker(variables.scope);
     const layers = nominal.layers.map((layer, l) => this.#layer(layer, l, ask));
     const last = layers.length - 1;

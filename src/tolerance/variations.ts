@@ -106,7 +106,7 @@ class VariationRunner {
   #solve(stack: Stack, accuracy: number | undefined): SolvedStack[] | string {
     const out: SolvedStack[] = [];
     for (const temperature of this.#plan.temperatures) {
-      const answer = solved({ ...stack, temperature }, this.#nominal(temperature), accuracy);
+      const answer = solved({ ...stack, temperature }, { accuracy, contacts: this.#plan.conduction, warmStart: this.#nominal(temperature) });
       if (typeof answer === 'string') return answer;
       out.push(answer);
     }
@@ -116,7 +116,7 @@ class VariationRunner {
   #nominal(temperature: number): Profiles | undefined {
     const key = String(temperature);
     if (!this.#start.has(key)) {
-      const answer = solutionOf({ ...this.#plan.stack, temperature }, {});
+      const answer = solutionOf({ ...this.#plan.stack, temperature }, { contacts: false });
       this.#start.set(key, typeof answer === 'string' ? undefined : answer.profiles);
     }
     return this.#start.get(key);
@@ -129,10 +129,21 @@ interface SolvedStack {
 }
 
 /** From the profiles of a like stack, and afresh where that comes to nothing. */
-function solved(stack: Stack, warmStart: Profiles | undefined, accuracy: number | undefined): SolvedStack | string {
-  let answer = solutionOf(stack, { accuracy, warmStart });
-  if (typeof answer === 'string' && warmStart !== undefined) answer = solutionOf(stack, { accuracy });
-  return typeof answer === 'string' ? answer : { result: resultOf(answer, '', NO_PROVENANCE), stack };
+function solved(stack: Stack, options: SolveOptions): SolvedStack | string {
+  let answer = solutionOf(stack, options);
+  if (typeof answer === 'string' && options.warmStart !== undefined) answer = solutionOf(stack, { ...options, warmStart: undefined });
+  return typeof answer === 'string' ? answer : { result: resultOf({ ...answer, profiles: endsOf(answer.profiles) }, '', NO_PROVENANCE), stack };
+}
+
+/** The first and the last node: no figure reads more of the profiles, and writing all of them takes as long as a tenth of the solution. */
+function endsOf(profiles: Profiles): Profiles {
+  const last = profiles.z.length - 1;
+  const ends = (column: Float64Array): Float64Array => Float64Array.of(column[0], column[last]);
+  const { z, ec, ev, psi, field, n, p, ionisedDonors, ionisedAcceptors, charge } = profiles;
+  return {
+    z: ends(z), layer: Int32Array.of(profiles.layer[0], profiles.layer[last]), ec: ends(ec), ev: ends(ev), psi: ends(psi), field: ends(field), n: ends(n), p: ends(p),
+    ionisedDonors: ends(ionisedDonors), ionisedAcceptors: ends(ionisedAcceptors), charge: ends(charge),
+  };
 }
 
 function solutionOf(stack: Stack, options: SolveOptions): Solution | string {
