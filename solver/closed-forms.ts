@@ -23,7 +23,8 @@ const FIELD = 0.9;
  * With psi = phi_B - edge, the exponent at E = edge + z psi is (psi/E00) [sqrt(1-z) - z artanh sqrt(1-z)], its slope -artanh(sqrt(1-z))/E00.
  * - thermionic, E00 < kT/2: k/(A T) exp(phi_B/kT);
  * - field, where EF lies in the band and the slope at EF, c1, is below 1/kT: the exponent's straight line at EF over the occupancy, less what lies below the
- *   band: k^2/A exp(exponent at EF)/[pi kT/sin(pi c1 kT) - exp(c1 edge)/c1];
+ *   band: k^2/A exp(exponent at EF)/[pi kT/sin(pi c1 kT) - exp(c1 edge)/c1]; and where a layer is not degenerate but so cold that its carriers keep to the band's
+ *   edge, with the slope c1 at kT above it: k^2/A exp(exponent there) (1 - c1 kT)/kT exp(c1 kT + edge/kT);
  * - thermionic-field, else: the parabola at the energy edge + psi/cosh^2(E00/kT), where the slope is 1/kT:
  *   k^2/A cosh(E00/kT)/(2 sqrt(pi E00 psi tanh(E00/kT))) exp(psi/E0 + edge/kT), E0 = E00 coth(E00/kT).
  * The parabola's integral is done in full here; as Yu prints the thermionic-field form (from memory), it is twice this.
@@ -34,13 +35,15 @@ export function closedFormResistivity(barrier: number, edge: number, e00: number
   const ratio = e00 / kT;
   if (ratio < THERMIONIC || psi <= 0) return { rhoC: (BOLTZMANN / (constant * temperature)) * Math.exp(Math.max(barrier, edge) / kT), form: 'thermionic' };
   const front = BOLTZMANN ** 2 / constant;
-  if (edge < 0 && barrier > 0) {
-    const z = -edge / psi;
+  const degenerate = edge < 0 && barrier > 0;
+  const z = (degenerate ? -edge : kT) / psi;
+  if (z < 1) {
     const s = Math.sqrt(1 - z);
     const slope = Math.atanh(s) / e00;
+    const exponent = (psi / e00) * (s - z * Math.atanh(s));
     if (slope * kT < FIELD) {
-      const exponent = (psi / e00) * (s - z * Math.atanh(s));
-      return { rhoC: (front * Math.exp(exponent)) / ((Math.PI * kT) / Math.sin(Math.PI * slope * kT) - Math.exp(slope * edge) / slope), form: 'field' };
+      const sum = degenerate ? (Math.PI * kT) / Math.sin(Math.PI * slope * kT) - Math.exp(slope * edge) / slope : (kT / (1 - slope * kT)) * Math.exp(-slope * kT - edge / kT);
+      return { rhoC: (front * Math.exp(exponent)) / sum, form: 'field' };
     }
   }
   const th = Math.tanh(ratio);
