@@ -5,3 +5,5 @@ export { complaintLine, type Complaint } from './design/complaint.ts';
 export { solveDesign, type SolveDesignOptions, type SolvedAnswer } from './result/solve-design.ts';
 export type { Design } from './design/types.ts';
 export type { Answer, Result } from './result/types.ts';
+export { judge, judging, type JudgeOptions, type Judgement } from './requirements/judge.ts';
+export { size, sizeSteps, type SizedAnswer, type SizeOptions, type SizeResult } from './requirements/size.ts';

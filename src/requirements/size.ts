@@ -46,7 +46,7 @@ export interface SizedAnswer {
   intervals: { from: SizedEdge; to: SizedEdge }[];
   /** where the least margin is largest; where nothing meets everything, the nearest miss */ best: { value: number; text: string; requirements: RequirementResult[] } | null;
   /** what stands against the nearest miss, and whether any value of the range meets it by itself */ blockers: { index: number; words: string; met_somewhere: boolean }[];
-  /** edges and best point were judged in full and no worse corner was left */ confirmed: boolean;
+  /** the ends of the intervals, values inside them and the best point were judged in full, and no worse corner was left */ confirmed: boolean;
   /** values looked at, with the score of each requirement (0 at its limit, above where met; null without an answer) */ scan: { value: number; scores: (number | null)[] }[];
   /** what is narrower than this share of the range can have been missed */ resolution: number;
   /** solves */ evaluations: number;
@@ -106,12 +106,21 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Prog
       step = search.next(scores);
     }
     found = step.value;
-    const values = new Set(found.intervals.flatMap(({ from, to }) => [from.value, to.value]));
-    if (found.best) values.add(found.best.value);
-    confirmed = !(yield* judgeAll(values));
+    confirmed = !(yield* judgeAll(toJudge(found)));
     if (confirmed || round + 1 >= MOST_ROUNDS) break;
   }
   return answerOf(found, study, { variable, requirements, confirmed, writeTemperature: temperatureWriter(design) });
+}
+
+/** What is judged in full: the ends of each interval, two values inside it, and the best. */
+function toJudge({ intervals, nodes, best }: Sizing): Set<number> {
+  const values = new Set<number>();
+  for (const { from, to } of intervals) {
+    const inside = nodes.filter(({ value }) => value >= from.value && value <= to.value);
+    for (const share of [0, 1 / 3, 2 / 3, 1]) values.add(inside[Math.round(share * (inside.length - 1))].value);
+  }
+  if (best) values.add(best.value);
+  return values;
 }
 
 function prepare(design: Design, { variable: name, from, to, set = {} }: SizeOptions): { variable: SizedVariable; requirements: ReadRequirement[] } | { complaints: Complaint[] } {

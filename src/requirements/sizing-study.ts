@@ -64,7 +64,7 @@ export class SizingStudy {
       let least: number | null = null;
       let corner: Corner | null = null;
       let found: Point | null = null;
-      for (const c of corners) {
+      for (const c of corners.length > 0 ? corners : this.#unmoved(at, i)) {
         const point = { temperature: c.temperature ?? at.temperature, counts: c.counts };
         const reading = at.solver.at(point);
         const score = reading.scores[i];
@@ -110,6 +110,13 @@ export class SizingStudy {
   /** The rows of a value that was judged in full. */
   rows(value: number): RequirementResult[] | null {
     return this.#rows.get(value) ?? null;
+  }
+
+  /** Where nothing has been judged yet: no tolerance moved, at the ends of the temperatures. */
+  #unmoved({ requirements, range }: At, i: number): Corner[] {
+    const counts = this.uncertainties.map(() => 0);
+    const temperatures = requirements[i].over === 'temperatureRange' && range ? range : [null];
+    return temperatures.map((temperature) => ({ temperature, counts, matters: [] }));
   }
 
   #add(i: number, corner: Corner): boolean {

@@ -111,6 +111,19 @@ describe('sizing a variable of a design', () => {
     expect(found.refusal).toMatch(/layers\[0\]\.x/);
   });
 
+  it('finds an interval where the ends and the middle of the range have no answer', () => {
+    const design = contactDesign((d) => {
+      d.variables = [{ name: 'x', value: '0.5', range: ['-2', '0.9'] }];
+      d.layers[0] = { name: 'cap', material: 'AlGaAs', x: 'x', thickness: '30 nm' };
+      d.layers[1] = { name: 'base', material: 'GaAs', thickness: '100 nm', dopants: [{ dopant: 'Si', concentration: '1e18 cm^-3' }] };
+      d.requirements = [{ quantity: 'carrierDensity', of: 'base', min: '1e17 cm^-3', over: 'temperatureRange' }];
+    });
+    const found = answer(design, { variable: 'x', tolerances: 'none', to: '1.5' });
+    expect(found.intervals).toHaveLength(1);
+    expect(Math.abs(found.intervals[0].from.value)).toBeLessThan(1e-3);
+    expect(found.intervals[0].to.value).toBeCloseTo(1, 2);
+  });
+
   it('runs in steps with progress, and can be left', () => {
     const steps = sizeSteps(sized(), { variable: 'Ncap' });
     for (let i = 0; i < 10; i++) {
