@@ -1,28 +1,32 @@
-import { profileAt, type Dopant, type Layer, type Stack } from '../../solver/index.ts';
+import { isAlloy, profileAt, type Dopant, type Layer, type Stack } from '../../solver/index.ts';
 import { Asker } from '../design/ask.ts';
 import { catalogueOf, type Catalogue } from '../design/catalogue.ts';
 import { complaintLine } from '../design/complaint.ts';
 import { readContact } from '../design/contact.ts';
 import { readDopant } from '../design/dopant.ts';
+import { publishedOffset } from '../design/offset.ts';
+import { readProfile } from '../design/profile.ts';
 import { toStack } from '../design/stack.ts';
-import type { Design, Variable } from '../design/types.ts';
-import { readVariables } from '../design/variables.ts';
+import type { Design } from '../design/types.ts';
 import { governedBy } from '../requirements/governed.ts';
 import type { Uncertainty } from '../requirements/uncertainties.ts';
+import { movedVariables } from './moved-variables.ts';
 
 /** Far inside what a thickness may be; nearer its limits the whole reading decides, cm. */
 const PLAIN_THICKNESS = [1e-8, 1] as const;
+const SHARE = { least: [0, '0'] as [number, string], most: [1, '1'] as [number, string] };
 
 /**
- * The stack with its uncertainties moved. Reading a whole design takes as long as solving it, so where variables with a tolerance are used only in thicknesses, dopants and
- * contacts, only those texts are read again, by the same readers; elsewhere the whole design is.
+ * The stack with its uncertainties moved. Reading a whole design takes as long as solving it, so where variables with a tolerance are used only in thicknesses, compositions,
+ * dopants and contacts, only those texts are read again, by the same readers; elsewhere the whole design is.
  */
 export class MovedStacks {
   readonly #catalogue: Catalogue;
-  /** without their ranges, which were checked before and take longer than the values */ readonly #variables: Variable[];
+  readonly #variables: ReturnType<typeof movedVariables>;
   readonly #moving: boolean;
   readonly #quick: boolean;
   readonly #thickness: boolean[];
+  readonly #x: boolean[];
   readonly #dopants: boolean[][];
   readonly #contacts: { top: boolean; bottom: boolean };
 
@@ -35,13 +39,15 @@ export class MovedStacks {
   ) {
     const governed = governedBy(design, set);
     this.#catalogue = catalogueOf(design.custom);
-    this.#variables = (design.variables ?? []).map(({ range: _range, ...row }) => row);
+    const { temperature: _T, ...overrides } = set;
+    this.#variables = movedVariables(design.variables ?? [], overrides);
+    this.#x = design.layers.map((layer) => governed(layer.x));
     this.#moving = uncertainties.some((u) => u.variable !== null);
     this.#thickness = design.layers.map((layer) => governed(layer.thickness));
     this.#dopants = design.layers.map((layer) => (layer.dopants ?? []).map((row) => governed(row)));
     this.#contacts = { top: governed(design.top), bottom: governed(design.bottom) };
     const { variables: _, requirements: __, top: ___, bottom: ____, layers, ...rest } = design;
-    this.#quick = !governed(rest, layers.map(({ thickness: _t, dopants: _d, ...other }) => other));
+    this.#quick = !governed(rest, layers.map(({ thickness: _t, dopants: _d, x: _x, ...other }) => other));
   }
 
   /** @param counts  of each uncertainty's tolerance  @returns the stack, or what is wrong with the design there */
@@ -63,23 +69,27 @@ export class MovedStacks {
   /** Null where something there is wrong: the whole reading then says what. */
   #partly(moves: Readonly<Record<string, number>>): Stack | null {
     const { design, nominal } = this;
-    const { temperature: _, ...overrides } = this.set;
-    const variables = readVariables(this.#variables, overrides, moves);
-    const ask = new Asker(variables.scope);
+    if (!this.#variables) return null;
+    const ask = new Asker(this.#variables(moves));
     const layers = nominal.layers.map((layer, l) => this.#layer(layer, l, ask));
+    if (ask.complaints.length > 0 || layers.some(({ thickness }) => !(thickness > PLAIN_THICKNESS[0] && thickness < PLAIN_THICKNESS[1]))) return null;
     const last = layers.length - 1;
     const top = this.#contacts.top ? readContact(design.top, 'top', layers[0].material, layers[0].name, this.#catalogue, ask) : nominal.top;
     const bottom = this.#contacts.bottom ? readContact(design.bottom, 'bottom', layers[last].material, layers[last].name, this.#catalogue, ask) : nominal.bottom;
-    if (ask.complaints.length + variables.complaints.length > 0 || top === null || bottom === null) return null;
-    return layers.some(({ thickness }) => !(thickness > PLAIN_THICKNESS[0] && thickness < PLAIN_THICKNESS[1])) ? null : { ...nominal, layers, top, bottom };
+    // A published offset goes with the compositions that meet.
+    const interfaces = this.#x.includes(true) ? nominal.interfaces.map((row) => (row.published ? { ...row, published: publishedOffset(layers[row.index], layers[row.index + 1], this.#catalogue, ask) } : row)) : nominal.interfaces;
+    return ask.complaints.length > 0 || top === null || bottom === null ? null : { ...nominal, layers, interfaces, top, bottom };
   }
 
   #layer(layer: Layer, l: number, ask: Asker): Layer {
     const input = this.design.layers[l];
-    if (!this.#thickness[l] && !this.#dopants[l].includes(true)) return layer;
+    const composed = this.#x[l] && isAlloy(layer.material) && input.x !== undefined;
+    if (!composed && !this.#thickness[l] && !this.#dopants[l].includes(true)) return layer;
     const thickness = this.#thickness[l] ? ask.quantity(input.thickness, 'length', `layers[${l}].thickness`) : layer.thickness;
-    const x = profileAt(layer.x, thickness / 2, thickness);
-    const dopants = layer.dopants.map((dopant, d): Dopant => (this.#dopants[l][d] ? (readDopant(input.dopants![d], input.material, x, this.#catalogue, `layers[${l}].dopants[${d}]`, ask) ?? dopant) : dopant));
-    return { ...layer, thickness, dopants };
+    const x = composed ? readProfile(input.x!, 'number', `layers[${l}].x`, ask, SHARE) : layer.x;
+    const middle = profileAt(x, thickness / 2, thickness);
+    // The depth of a level may move with the composition.
+    const dopants = layer.dopants.map((dopant, d): Dopant => (composed || this.#dopants[l][d] ? (readDopant(input.dopants![d], input.material, middle, this.#catalogue, `layers[${l}].dopants[${d}]`, ask) ?? dopant) : dopant));
+    return { ...layer, x, thickness, dopants };
   }
 }
