@@ -88,6 +88,8 @@ export interface CrystalPreset extends Entry, SurfacePreset {
   polarisation?: { spontaneous: string; e31?: string; e33?: string; c13?: string; c33?: string; lattice?: string };
   validity?: ValidityPreset;
   /** valence edge on a named scale; edges of two scales cannot be compared */ naturalValence?: { scale: string; edge: string };
+  /** contacts to one type whose published resistivities lie decades away from the barrier picture: lowest and highest, and where they stand, in words */
+  outsideContactModel?: { carrier: 'n' | 'p'; low: string; high: string; source: string };
 }
 
 export interface AlloyPreset extends Entry, SurfacePreset {

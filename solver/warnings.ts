@@ -106,7 +106,7 @@ function contactWarnings(solution: Solution): string[] {
     const outside = isAlloy(layer.material) ? undefined : layer.material.outsideContactModel;
     const type = solution.layers[contact.side === 'top' ? 0 : stack.layers.length - 1].type;
     if (boundary.kind === 'barrier' && outside && type === outside.carrier) {
-      out.push(`${contact.side} contact: mechanism outside the model; contacts to ${outside.carrier}-type ${layer.material.id} were measured between ${outside.low} and ${outside.high} ohm cm^2 (${outside.source}), decades away from what a barrier explains`);
+      out.push(`${contact.side} contact: mechanism outside the model; contacts to ${outside.carrier}-type ${layer.material.id} were measured between ${outside.low.toExponential(1)} and ${outside.high.toExponential(1)} ohm cm^2 (${outside.source}), decades away from what a barrier explains`);
     }
   }
   return out;

@@ -89,6 +89,7 @@ function readCrystal(m: MaterialInput, path: string, ask: Asker): CrystalMateria
     pinningSlope: ask.maybe(m.pinningSlope, 'number', `${path}.pinningSlope`, { least: [0, '0'], most: [1, '1'] }),
     ...(m.polarisation ? { polarisation: readPolarisation(m.polarisation, `${path}.polarisation`, ask) } : {}),
     ...(m.naturalValence ? { naturalValence: { scale: m.naturalValence.scale, edge: ask.quantity(m.naturalValence.edge, 'energy', `${path}.naturalValence.edge`) } } : {}),
+    ...(m.outsideContactModel ? { outsideContactModel: readOutside(m.outsideContactModel, `${path}.outsideContactModel`, ask) } : {}),
     ...readValidity(m, path, ask),
   };
 }
@@ -128,6 +129,11 @@ function readNarrowing(n: NarrowingInput, path: string, ask: Asker): NarrowingLa
     third: ask.quantity(n[key].third, 'energy', `${path}.${key}.third`), quarter: ask.quantity(n[key].quarter, 'energy', `${path}.${key}.quarter`), half: ask.quantity(n[key].half, 'energy', `${path}.${key}.half`),
   });
   return { law: 'jain-roulston', donor: terms('donor'), acceptor: terms('acceptor'), conductionShare };
+}
+
+function readOutside(o: NonNullable<MaterialInput['outsideContactModel']>, path: string, ask: Asker): NonNullable<CrystalMaterial['outsideContactModel']> {
+  const value = (key: 'low' | 'high'): number => ask.quantity(o[key], 'contactResistivity', `${path}.${key}`, { positive: true });
+  return { carrier: o.carrier, low: value('low'), high: value('high'), source: o.source };
 }
 
 function readValidity(m: MaterialInput, path: string, ask: Asker): Pick<CrystalMaterial, 'validity'> {

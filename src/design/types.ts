@@ -134,6 +134,7 @@ export interface MaterialInput {
   pinningSlope?: Pure;
   polarisation?: { spontaneous: Text; e31?: Text; e33?: Text; c13?: Text; c33?: Text; lattice?: Text };
   naturalValence?: { scale: string; edge: Text };
+  /** contacts to one type that a barrier does not explain: published band and where it stands */ outsideContactModel?: { carrier: 'n' | 'p'; low: Text; high: Text; source: string };
   /** where the laws were measured */ validity?: { temperature?: [Text, Text]; doping?: [Text, Text] };
   source: unknown;
   sources?: Record<string, unknown>;

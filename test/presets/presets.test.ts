@@ -4,7 +4,7 @@ import { dopants, materials, metals, offsets, sources, type Provenance, type Sou
 const NUMBER = '-?\\d+(\\.\\d+)?(e[-+]?\\d+)?';
 const quantity = (unit: string): RegExp => new RegExp(`^${NUMBER} ${unit.replace(/[\^().]/g, '\\$&')}$`);
 const ENERGY = new RegExp(`^${NUMBER} m?eV$`);
-const NAMES = ['law', 'scale', 'first', 'second', 'name'];
+const NAMES = ['law', 'scale', 'first', 'second', 'name', 'carrier', 'source'];
 
 /** What a value at a path has to look like; a path that no line fits is refused. Pure numbers are JSON numbers. */
 const FORMS: [RegExp, RegExp | 'number'][] = [
@@ -31,6 +31,7 @@ const FORMS: [RegExp, RegExp | 'number'][] = [
   [/^(merging\.(depth|bound)|screened\.bound)Exponent$/, 'number'],
   [/^screened\.coefficient$/, quantity('eV cm')],
   [/^validity\.temperature$/, quantity('K')],
+  [/^outsideContactModel\.(low|high)$/, quantity('ohm cm^2')],
   [/^delta(Ev|Ec)\.(constant|perX)$/, ENERGY],
 ];
 const WORDS = ['id', 'name', 'host', 'kind', 'centre', 'insulator', 'barriers', 'source', 'sources', 'first', 'second'];

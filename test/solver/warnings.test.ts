@@ -141,6 +141,14 @@ describe('contacts', () => {
     expect(one([doped('donor', 1e16)], { ...CRYSTAL, pinningSlope: 0.3, neutralityLevel: 0.4 }, { top: metal })).toEqual([]);
     expect(one([doped('donor', 1e16)], CRYSTAL, { top: { ...metal, source: { from: 'workFunction', workFunction: 4.6, slope: 1 } } as Boundary })).toEqual([]);
   });
+
+  it('say where measured contacts lie decades away from the barrier picture, with the published band, and only for that type', () => {
+    const odd: CrystalMaterial = { ...CRYSTAL, outsideContactModel: { carrier: 'p', low: 1.1e-6, high: 0.052, source: 'an author (2019)' } };
+    const barrier = { top: { kind: 'barrier', source: { from: 'given', carrier: 'p', height: 0.6 }, metal: null, imageForce: false } } as const;
+    expect(one([doped('acceptor', 1e17)], odd, barrier)).toEqual([expect.stringMatching(/^top contact: mechanism outside the model.*p-type.*1\.1e-6 and 5\.2e-2 ohm cm\^2 \(an author \(2019\)\)/)]);
+    expect(one([doped('donor', 1e17)], odd, barrier)).toEqual([]);
+    expect(one([doped('acceptor', 1e17)], odd)).toEqual([]);
+  });
 });
 
 describe('bands', () => {
