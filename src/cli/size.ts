@@ -1,7 +1,7 @@
 import { InputError } from '../design/complaint.ts';
 import { quoted } from '../quantity/wording.ts';
 import { size as sizeDesign, type SizedAnswer, type SizedEdge } from '../requirements/size.ts';
-import { marginWords, requirementWords } from '../requirements/verdict.ts';
+import { marginWords, onOneLine, requirementWords } from '../requirements/verdict.ts';
 import { parseArguments } from './arguments.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
@@ -26,7 +26,7 @@ export const size: Command = {
     streams.out(options.json === undefined ? sizedText(answer) : `${JSON.stringify(answer, null, 1)}\n`);
     if (answer.intervals.length > 0) return EXIT.done;
     if (answer.best !== null) return EXIT.requirementNotMet;
-    streams.error(`halfmark: no accepted answer at any value of ${answer.variable}: ${(answer.refusal ?? 'a figure is missing').replace(/[\r\n\u2028\u2029]+/g, ' ')}\n`);
+    streams.error(`halfmark: no accepted answer at any value of ${answer.variable}: ${onOneLine(answer.refusal ?? 'a figure is missing')}\n`);
     return EXIT.noAnswer;
   },
 };
@@ -49,7 +49,7 @@ export function sizedText(answer: SizedAnswer): string {
   for (const row of best?.requirements ?? []) lines.push(`  ${row.met ? 'met' : 'not met'}: ${requirementWords(row)}, margin ${marginWords(row)}${row.at === null ? '' : ` at ${row.at.words}`}`);
   if (answer.refusal !== null) lines.push(`some values have no answer: ${answer.refusal}`);
   if (!answer.confirmed) lines.push('not confirmed: a worse corner turned up at the last judgement; narrow the range');
-  return `${lines.map((line) => line.replace(/[\r\n\u2028\u2029]+/g, ' ')).join('\n')}\n`;
+  return `${lines.map(onOneLine).join('\n')}\n`;
 }
 
 function edgeWords(edge: SizedEdge): string {

@@ -1,5 +1,6 @@
 import * as v from 'valibot';
 import { KINDS, type KindName } from '../quantity/kinds.ts';
+import { REQUIREMENT_QUANTITIES } from './requirement-quantities.ts';
 import { DESIGN_FORMAT } from './types.ts';
 
 /**
@@ -19,6 +20,9 @@ const sources = v.optional(v.record(v.string(), v.unknown()));
 const range = v.strictTuple([text, text]);
 const temperatureRange = v.strictTuple([temperature, temperature]);
 const carrier = v.picklist(['n', 'p']);
+const tolerance = v.pipe(v.string(), v.description('to both sides: a share of the value, such as "10 %", or an amount, such as "2 nm"; "0 %" for a value that is certain'));
+const limited = v.pipe(v.string(), v.minLength(1), v.maxLength(200), v.description(`one of ${Object.keys(REQUIREMENT_QUANTITIES).join(', ')}`));
+const limitedOf = v.pipe(v.string(), v.minLength(1), v.maxLength(200), v.description('a layer by its name; the junction below a layer by the name of that layer; a contact by "top" or "bottom"'));
 
 const graded = (value: v.GenericSchema) => [
   value,
@@ -88,6 +92,7 @@ const material = v.strictObject({
   neutralityLevel: v.optional(energy), pinningSlope: v.optional(pure),
   polarisation: v.optional(v.strictObject({ spontaneous: quantity('chargeDensity'), e31: v.optional(quantity('chargeDensity')), e33: v.optional(quantity('chargeDensity')), c13: v.optional(quantity('stiffness')), c33: v.optional(quantity('stiffness')), lattice: v.optional(length) })),
   naturalValence: v.optional(v.strictObject({ scale: name, edge: energy })),
+  outsideContactModel: v.optional(v.strictObject({ carrier, low: quantity('contactResistivity'), high: quantity('contactResistivity'), source: text })),
   validity: v.optional(v.strictObject({ temperature: v.optional(temperatureRange), doping: v.optional(v.strictTuple([density, density])) })),
   source, sources,
 });
@@ -111,7 +116,7 @@ export const designShape = v.strictObject({
   format: v.literal(DESIGN_FORMAT),
   title: v.pipe(v.string(), v.maxLength(500)),
   notes: v.optional(text),
-  variables: v.optional(v.pipe(v.array(v.strictObject({ name, value: text, tolerance: v.optional(text), range: v.optional(range), note: v.optional(text) })), v.maxLength(200))),
+  variables: v.optional(v.pipe(v.array(v.strictObject({ name, value: text, tolerance: v.optional(tolerance), range: v.optional(range), note: v.optional(text) })), v.maxLength(200))),
   conditions: v.strictObject({ temperature, temperatureRange: v.optional(temperatureRange), bias: v.optional(voltage) }),
   assumptions: v.optional(v.strictObject({
     statistics: v.optional(v.picklist(['fermi-dirac', 'boltzmann'])), alignment: v.optional(v.picklist(['offsets', 'affinity'])),
@@ -122,8 +127,8 @@ export const designShape = v.strictObject({
   layers: v.pipe(v.array(layer), v.minLength(1), v.maxLength(2000)),
   interfaces: v.optional(v.array(v.strictObject({ above: name, sheetCharge: v.optional(sheetDensity), dEc: v.optional(energy), dEv: v.optional(energy) }))),
   bottom: contact,
-  requirements: v.optional(v.array(v.strictObject({
-    quantity: name, of: name, max: v.optional(v.union([text, flag])), min: v.optional(v.union([text, flag])), over: v.optional(v.picklist(['temperature', 'temperatureRange'])),
-  }))),
+  requirements: v.optional(v.pipe(v.array(v.strictObject({
+    quantity: limited, of: limitedOf, max: v.optional(v.union([text, flag])), min: v.optional(v.union([text, flag])), over: v.optional(v.picklist(['temperature', 'temperatureRange'])),
+  })), v.maxLength(500))),
   custom: v.optional(v.strictObject({ materials: v.optional(v.array(material)), dopants: v.optional(v.array(dopant)), metals: v.optional(v.array(metal)) })),
 });

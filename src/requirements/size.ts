@@ -18,12 +18,24 @@ export interface SizeOptions {
   /** name of the variable */ variable: string;
   /** texts of the ends; by default the variable's own range */ from?: string;
   to?: string;
+  /** default: decades for densities and wherever the range spans more than one, else even steps */ scale?: SizedVariable['scale'];
   /** values of the first scan; default 25 */ points?: number;
   /** edges are closed to this; default 1e-4, relative on a log scale, of the range on a linear one */ tolerance?: number;
   set?: Readonly<Record<string, string>>;
   tolerances?: Tolerances;
   /** points inside the tolerances that check each full judgement; default 16 */ samples?: number;
   seed?: number;
+}
+
+/** A value looked at, with the score of each requirement. While the search runs they are those of the corners known so far. */
+export interface LookedAt {
+  value: number;
+  scores: (number | null)[];
+}
+
+/** What a running search can tell: how far it is, and the value just looked at. */
+export interface SizeProgress extends Progress {
+  seen?: LookedAt;
 }
 
 /** Where an interval ends, and why. */
@@ -47,7 +59,7 @@ export interface SizedAnswer {
   /** where the least margin is largest; where nothing meets everything, the nearest miss */ best: { value: number; text: string; requirements: RequirementResult[] } | null;
   /** what stands against the nearest miss, and whether any value of the range meets it by itself */ blockers: { index: number; words: string; met_somewhere: boolean }[];
   /** the ends of the intervals, values inside them and the best point were judged in full, and no worse corner was left */ confirmed: boolean;
-  /** values looked at, with the score of each requirement (0 at its limit, above where met; null without an answer) */ scan: { value: number; scores: (number | null)[] }[];
+  /** values looked at, with the score of each requirement (0 at its limit, above where met; null without an answer) */ scan: LookedAt[];
   /** what is narrower than this share of the range can have been missed */ resolution: number;
   /** solves */ evaluations: number;
   /** why some values have no answer; null where all have one */ refusal: string | null;
@@ -69,7 +81,7 @@ export function size(design: Design, options: SizeOptions): SizeResult {
 }
 
 /** The same in small steps, so that progress can be shown and the work be left. */
-export function* sizeSteps(design: Design, options: SizeOptions): Generator<Progress, SizeResult> {
+export function* sizeSteps(design: Design, options: SizeOptions): Generator<SizeProgress, SizeResult> {
   const { set = {}, tolerances = 'all', points, tolerance, samples = SAMPLES, seed } = options;
   const setup = prepare(design, options);
   if ('complaints' in setup) return { kind: 'complaints', complaints: setup.complaints };
@@ -102,7 +114,7 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Prog
     let step = search.next();
     while (!step.done) {
       const { scores } = study.look(step.value);
-      yield progress();
+      yield { ...progress(), seen: { value: step.value, scores } };
       step = search.next(scores);
     }
     found = step.value;
@@ -123,7 +135,7 @@ function toJudge({ intervals, nodes, best }: Sizing): Set<number> {
   return values;
 }
 
-function prepare(design: Design, { variable: name, from, to, set = {} }: SizeOptions): { variable: SizedVariable; requirements: ReadRequirement[] } | { complaints: Complaint[] } {
+function prepare(design: Design, { variable: name, from, to, scale, set = {} }: SizeOptions): { variable: SizedVariable; requirements: ReadRequirement[] } | { complaints: Complaint[] } {
   const reading = toStack(design, set);
   if (!reading.ok) return { complaints: reading.complaints };
   const { temperature: _, ...overrides } = set;
@@ -131,7 +143,7 @@ function prepare(design: Design, { variable: name, from, to, set = {} }: SizeOpt
   const ask = new Asker(scope);
   if (Object.hasOwn(overrides, name)) ask.wrong(`--set ${name}`, `gives ${name} a value, while it is to be sized; leave it out`);
   if (reading.requirements.length === 0) ask.wrong('requirements', 'there are none; a size is found for what the design has to meet, so give it a requirement');
-  const variable = ask.complaints.length > 0 ? null : readSizedVariable(design, name, scope, { ...(from === undefined ? {} : { from }), ...(to === undefined ? {} : { to }) }, ask);
+  const variable = ask.complaints.length > 0 ? null : readSizedVariable(design, name, scope, { ...(from === undefined ? {} : { from }), ...(to === undefined ? {} : { to }), ...(scale === undefined ? {} : { scale }) }, ask);
   return variable === null ? { complaints: ask.complaints } : { variable, requirements: reading.requirements };
 }
 

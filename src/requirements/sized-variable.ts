@@ -24,9 +24,9 @@ const BY_DECADES: readonly KindName[] = ['density', 'sheetDensity'];
  * Reads the variable and its range; what is wrong goes to `ask`.
  *
  * @param scope  the design's variables for this run
- * @param ends   texts that win over the variable's own range
+ * @param ends   texts that win over the variable's own range, and a scale that wins over the one that the range suggests
  */
-export function readSizedVariable(design: Design, name: string, scope: Scope, ends: { from?: string; to?: string }, ask: Asker): SizedVariable | null {
+export function readSizedVariable(design: Design, name: string, scope: Scope, ends: { from?: string; to?: string; scale?: SizedVariable['scale'] }, ask: Asker): SizedVariable | null {
   const rows = design.variables ?? [];
   const row = rows.find((v) => v.name === name);
   if (!row) {
@@ -61,7 +61,11 @@ export function readSizedVariable(design: Design, name: string, scope: Scope, en
     ask.wrong(ends.from !== undefined ? '--from' : ends.to !== undefined ? '--to' : `${path}.range`, 'is no range to search: its lower end must come first, and lie below its upper end');
     return null;
   }
-  const scale = from > 0 && (to / from > 10 || BY_DECADES.includes(kind)) ? 'log' : 'linear';
+  if (ends.scale === 'log' && !(from > 0)) {
+    ask.wrong(ends.from !== undefined ? '--from' : `${path}.range`, 'is not above zero, and decades are counted from there; raise it, or search in even steps');
+    return null;
+  }
+  const scale = ends.scale ?? (from > 0 && (to / from > 10 || BY_DECADES.includes(kind)) ? 'log' : 'linear');
   return { name, kind, unit: KINDS[kind].unit, value: inUnit(value, KINDS[kind].unit) as number, from, to, scale };
 }
 

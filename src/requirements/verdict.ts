@@ -28,7 +28,12 @@ export function verdictLine(row: RequirementResult): string {
   }
   if (!row.corners_sufficed) parts.push('worse inside the ranges than at their corners');
   if (row.unanswered !== null) parts.push(`no answer at ${row.unanswered.points} ${row.unanswered.points === 1 ? 'point' : 'points'}, first at ${row.unanswered.words}: ${row.unanswered.reason}`);
-  return parts.join('; ').replace(/[\r\n\u2028\u2029]+/g, ' ');
+  return onOneLine(parts.join('; '));
+}
+
+/** Names come from the design's author: nothing of them breaks a line, or steers the terminal that it is read in. */
+export function onOneLine(text: string): string {
+  return text.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029\u202a-\u202e\u2066-\u2069]+/g, ' ');
 }
 
 function withUnit(value: number, unit: string, digits = 4): string {

@@ -84,6 +84,13 @@ describe('halfmark check', () => {
     expect(error).toMatch(/no requirements/);
   });
 
+  it('keeps a hostile name on its line and out of the terminal', async () => {
+    const name = 'cap\u001b[31m\nmet  everything';
+    const { out } = await call('check', file([{ ...met, of: name }], (d) => { d.layers[0].name = name; }), '--tolerances', 'none');
+    expect(out.trimEnd().split('\n')).toHaveLength(1);
+    expect(out).not.toContain('\u001b');
+  });
+
   it('refuses wrong input with one line and exit code 2', async () => {
     for (const [args, line] of [
       [['check', file([{ ...met, of: 'cup' }])], /requirements\[0\]\.of: there is nothing called 'cup'; did you mean cap\?/],

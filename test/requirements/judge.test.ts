@@ -192,6 +192,17 @@ describe('the worst case of a design', () => {
     expect(missing.unanswered?.reason).toMatch(/no saturation current density of bottom/);
   });
 
+  it('tells where the solver refuses: a gap that closes on the way to the hot end', () => {
+    const design = contactDesign((d) => {
+      d.custom = { materials: [{ id: 'closing', gap: { law: 'linear', at300K: '0.3 eV', slope: '4 meV/K' }, affinity: '4 eV', permittivity: 12, electronMass: 1, holeMass: 1, source: 'invented' }] };
+      d.layers = [{ name: 'cap', material: 'closing', thickness: '100 nm', dopants: [{ kind: 'donor', depth: '1 meV', concentration: '1e17 cm^-3' }] }];
+      d.top = { kind: 'neutral' };
+    });
+    const [cold, ranging] = rowsOf(design, [{ quantity: 'carrierDensity', of: 'cap', min: '1e10 cm^-3' }, { quantity: 'carrierDensity', of: 'cap', min: '1e10 cm^-3', over: 'temperatureRange' }], { tolerances: 'none' });
+    expect([cold.met, ranging.met, ranging.judged]).toEqual([true, false, false]);
+    expect(ranging.unanswered?.reason).toMatch(/gap/);
+  });
+
   it('takes a requirement found broken as not met, whatever else has no answer', () => {
     const design = contactDesign((d) => { d.variables = [{ name: 'x', value: '0.98', tolerance: '0.03' }]; d.layers[0] = { name: 'cap', material: 'AlGaAs', x: 'x', thickness: '30 nm' }; d.layers[1].material = 'GaAs'; d.layers[1].dopants = []; });
     const [row] = rowsOf(design, [{ quantity: 'carrierDensity', of: 'base', min: '1e19 cm^-3' }], { tolerances: 'stated' });
