@@ -1,0 +1,12 @@
+import { judging } from '../requirements/judge.ts';
+import { sizeSteps } from '../requirements/size.ts';
+import type { JobInput, JobKind, JobSeen, JobValue } from './job-messages.ts';
+
+/** A job in small steps: each says how far it is, and may tell something that it has seen. */
+export type JobSteps<K extends JobKind> = Generator<{ done: number; of: number; seen?: JobSeen<K> }, JobValue<K>>;
+
+/** How each kind of job is begun. */
+export const JOB_KINDS: { readonly [K in JobKind]: (input: JobInput<K>) => JobSteps<K> } = {
+  judge: ({ design, options }) => judging(design, options),
+  size: ({ design, options }) => sizeSteps(design, options),
+};
