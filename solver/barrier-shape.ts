@@ -99,14 +99,17 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
   const offset = 0.01 * kT;
   const smooth = (mesh: number, from: number, to: number): boolean => {
     const c = image[path.layer[mesh]];
-    if (c > 0 && c / from - c / to > 0.1 * kT && to > IMAGE_RATIO * from) return false;
     const pull = (s: number): number => (c > 0 ? c / s : 0);
-    const a = heightAt(from, mesh) + pull(from);
-    const b = heightAt(to, mesh) + pull(to);
-    const m = heightAt(0.5 * (from + to), mesh) + pull(0.5 * (from + to));
+    // Below the neutral edge nothing is ever in the way: how the band runs there is all the same.
+    const least = edge - kT;
+    const a = Math.max(least, heightAt(from, mesh) + pull(from));
+    const b = Math.max(least, heightAt(to, mesh) + pull(to));
+    const m = Math.max(least, heightAt(0.5 * (from + to), mesh) + pull(0.5 * (from + to)));
+    if (a === least && b === least && m === least) return true;
+    if (pull(from) - pull(to) > 0.1 * kT && to > IMAGE_RATIO * from) return false;
     if (Math.abs(a - b) > CELL_SHARE * range || Math.abs(m - 0.5 * (a + b)) > 0.5 * CELL_SHARE * range) return false;
     const [low, high] = a < b ? [a, b] : [b, a];
-    return low < edge - kT || high - edge + offset < CELL_RATIO * Math.max(low - edge + offset, offset);
+    return high - edge + offset < CELL_RATIO * Math.max(low - edge + offset, offset);
   };
   const divide = (mesh: number, from: number, to: number, depth: number): void => {
     if (depth >= MOST_HALVINGS || smooth(mesh, from, to)) {
