@@ -1,0 +1,51 @@
+import type { Design } from '../design/types.ts';
+import type { Result } from '../result/types.ts';
+import { parameterWords } from './parameter-words.ts';
+import { parametersInUse, type ParameterRow } from './parameters.ts';
+import { printedUnits } from './lines.ts';
+import type { Cell, SheetTable } from './table.ts';
+
+const CHECKED = { page: 'seen in print', memory: 'from memory of the work', computed: 'computed' } as const;
+/** Values of one row, so that no row grows beyond a page and is cut. */
+const MOST_VALUES = 12;
+
+/** Every parameter in use, and the works that they stand in, numbered as they are first met. */
+export function sourceTables(design: Design, result: Result): SheetTable[] {
+  const rows = parametersInUse(design, result);
+  const works: string[] = [];
+  const numberOf = (work: string): number => {
+    if (!works.includes(work)) works.push(work);
+    return works.indexOf(work) + 1;
+  };
+  const parameters: SheetTable = {
+    title: 'Parameters in use and where they stand',
+    note: 'Seen in print: the figure was read on the page cited. From memory: the work is cited from memory, look it up before you rely on the figure. Computed: derived from others, as the remark says. Own value: entered in this design.',
+    columns: [{ heading: 'Of', align: 'start' }, { heading: 'Values', align: 'start' }, { heading: 'Source', align: 'start' }, { heading: 'Checked', align: 'start' }, { heading: 'Remark', align: 'start' }],
+    rows: rows.flatMap((row) => {
+      const source: Cell = [{ text: `[${numberOf(row.work)}]` }];
+      return inParts(row.values, MOST_VALUES).map((values): Cell[][] => [[[{ text: row.of }], [{ text: values.map(valueText).join('; ') }], source, [{ text: checkedWords(row) }], [{ text: printedUnits(row.origin.note) }]]]);
+    }),
+  };
+  const cited: SheetTable = {
+    title: 'Works cited',
+    columns: [{ heading: 'No.', align: 'end' }, { heading: 'Work', align: 'start' }],
+    rows: works.map((work, i) => [[[{ text: `[${i + 1}]` }], [{ text: work }]]]),
+  };
+  return [parameters, cited];
+}
+
+function valueText({ path, text }: { path: string; text: string }): string {
+  return `${parameterWords(path)} ${printedUnits(text)}`;
+}
+
+function checkedWords({ origin, own, work }: ParameterRow): string {
+  if (own) return 'own value';
+  if (origin.checked === null) return work === '' ? '–' : 'seen in print';
+  return `${CHECKED[origin.checked]}${origin.confidence === '' || origin.confidence === 'high' ? '' : `, ${origin.confidence} confidence`}`;
+}
+
+function inParts<T>(items: readonly T[], most: number): T[][] {
+  const out: T[][] = [];
+  for (let i = 0; i < items.length; i += most) out.push(items.slice(i, i + most));
+  return out;
+}
