@@ -71,7 +71,7 @@ export function requirementResult(requirement: ReadRequirement, index: number, f
     at: reading === null ? null : {
       temperature_K: reading.point.temperature,
       tolerances: reading.point.counts.flatMap((count, i) => (count === 0 ? [] : [{ name: uncertainties[i].label, count, words: uncertainties[i].words(count) }])),
-      words: cornerWords({ ...reading.point, counts: reading.point.counts.map((count, i) => (found.matters[i] ? count : 0)) }, uncertainties, writeTemperature),
+      words: cornerWords(reading.point, uncertainties, writeTemperature, found.effects),
     },
     // What is not known everywhere is not met.
     met: score !== null && score >= 0 && unanswered.length === 0,

@@ -177,5 +177,5 @@ function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, c
 function cornerOf(look: Look, binding: number, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): string | null {
   const [point, corner] = [look.points[binding], look.corners[binding]];
   if (point === null || corner === null) return null;
-  return cornerWords({ ...point, counts: point.counts.map((count, i) => (corner.matters[i] ? count : 0)) }, uncertainties, writeTemperature);
+  return cornerWords(point, uncertainties, writeTemperature, corner.effects);
 }

@@ -14,7 +14,7 @@ import { NOISE, type Progress, type WorstCaseOptions } from './worst-case.ts';
 interface Corner {
   /** K; null is the design's own temperature, which may move with the variable */ temperature: number | null;
   counts: readonly number[];
-  /** the uncertainties that count there */ matters: readonly boolean[];
+  /** how far the score moves with each uncertainty there; not known where there is no answer */ effects?: readonly number[];
 }
 
 /** Scores of the requirements at a value of the variable, each at the worst of the corners known so far. */
@@ -94,14 +94,14 @@ export class SizingStudy {
     const words = temperatureWriter(this.design);
     this.#rows.set(value, at.requirements.map((r, i) => requirementResult(r, i, cases[i], this.uncertainties, words)));
     let grown = false;
-    cases.forEach(({ reading, matters, unanswered }, i) => {
+    cases.forEach(({ reading, effects, unanswered }, i) => {
       const over = (T: number): number | null => (at.requirements[i].over === 'temperature' ? null : T);
       const known = before[i];
       const first = this.#corners[i].length === 0;
       if (unanswered.length > 0) {
-        if (known !== null || first) grown = this.#add(i, { temperature: over(unanswered[0].point.temperature), counts: unanswered[0].point.counts, matters: unanswered[0].point.counts.map(() => true) }) || grown;
+        if (known !== null || first) grown = this.#add(i, { temperature: over(unanswered[0].point.temperature), counts: unanswered[0].point.counts }) || grown;
       } else if (reading !== null && (first || (known !== null && (reading.scores[i] as number) < known - NOISE))) {
-        grown = this.#add(i, { temperature: over(reading.point.temperature), counts: reading.point.counts, matters }) || grown;
+        grown = this.#add(i, { temperature: over(reading.point.temperature), counts: reading.point.counts, effects }) || grown;
       }
     });
     return grown;
@@ -116,7 +116,7 @@ export class SizingStudy {
   #unmoved({ requirements, range }: At, i: number): Corner[] {
     const counts = this.uncertainties.map(() => 0);
     const temperatures = requirements[i].over === 'temperatureRange' && range ? range : [null];
-    return temperatures.map((temperature) => ({ temperature, counts, matters: [] }));
+    return temperatures.map((temperature) => ({ temperature, counts }));
   }
 
   #add(i: number, corner: Corner): boolean {

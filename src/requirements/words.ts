@@ -11,7 +11,18 @@ export function temperatureWriter({ conditions }: Design): (T: number) => string
   return (T) => temperatureText(T, celsius);
 }
 
-/** "-40 degC, Ncap -20 %, barrier +50 meV" */
-export function cornerWords(point: Point, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): string {
-  return [writeTemperature(point.temperature), ...point.counts.flatMap((count, i) => (count === 0 ? [] : [`${uncertainties[i].label} ${uncertainties[i].words(count)}`]))].join(', ');
+/** Uncertainties that are named of one corner. */
+const MOST_NAMED = 6;
+
+/**
+ * "-40 degC, Ncap -20 %, barrier +50 meV"
+ *
+ * @param effects  how far the score moves with each uncertainty: those that move nothing are left out, of many the strongest are named
+ */
+export function cornerWords(point: Point, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string, effects?: readonly number[]): string {
+  const moved = [...point.counts.keys()].filter((i) => point.counts[i] !== 0 && (effects === undefined || effects[i] > 0));
+  const strongest = effects === undefined ? moved : [...moved].sort((a, b) => effects[b] - effects[a]);
+  const named = strongest.slice(0, MOST_NAMED).sort((a, b) => a - b);
+  const more = moved.length - named.length;
+  return [writeTemperature(point.temperature), ...named.map((i) => `${uncertainties[i].label} ${uncertainties[i].words(point.counts[i])}`), ...(more > 0 ? [`and ${more} more`] : [])].join(', ');
 }

@@ -11,7 +11,7 @@ export interface WorstCaseOptions {
 /** The worst of one requirement over a temperature range and all tolerances. */
 export interface WorstCase {
   /** null where there was a figure nowhere */ reading: Reading | null;
-  /** whether an uncertainty counts there: put to its other end, the score moves [uncertainties] */ matters: boolean[];
+  /** how far the score moves where an uncertainty is put to its other end; 0 where that is the mesh's noise [uncertainties] */ effects: number[];
   /** no point inside was worse than the corners and the temperatures between the ends */ cornersSufficed: boolean;
   /** points without an answer; what is not known is not met */ unanswered: Reading[];
 }
@@ -112,16 +112,17 @@ export function* worstCases(solver: Readable, rows: readonly number[], temperatu
     // Between the ends the worst temperature is on no grid.
     if (start && (!cornersSufficed || between.includes(start.point.temperature))) yield* search(row, start, { coldest, hottest, counts: !cornersSufficed }, ask);
     const reading = worstOf(row);
-    const matters: boolean[] = [];
+    const effects: number[] = [];
     for (let u = 0; u < k; u++) {
-      if (reading === null || reading.point.counts[u] === 0) matters.push(false);
+      if (reading === null || reading.point.counts[u] === 0) effects.push(0);
       else {
         const { temperature, counts } = reading.point;
         const other = (yield* ask({ temperature, counts: counts.map((c, j) => (j === u ? -c : c)) })).scores[row];
-        matters.push(other === null || Math.abs(other - (reading.scores[row] as number)) > NOISE);
+        const effect = other === null ? Infinity : Math.abs(other - (reading.scores[row] as number));
+        effects.push(effect > NOISE ? effect : 0);
       }
     }
-    out.push({ reading, matters, cornersSufficed, unanswered: [...new Set(seen.filter((r) => r.scores[row] === null))] });
+    out.push({ reading, effects, cornersSufficed, unanswered: [...new Set(seen.filter((r) => r.scores[row] === null))] });
   }
   return out;
 }
@@ -135,18 +136,21 @@ type Ask = (point: Point) => Generator<Progress, Reading>;
 function* descend(row: number, start: Reading, ask: Ask): Generator<Progress, void> {
   let worst = start;
   const flipped = (flips: readonly number[], count: number): Point => ({ temperature: worst.point.temperature, counts: worst.point.counts.map((c, j) => (flips.includes(j) ? (c === 0 ? count : -c) : c)) });
+  // What moved nothing in one round is left alone in the next.
+  let tried = [...start.point.counts.keys()];
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const before = worst;
     const effects = new Map<number, number>();
-    for (let i = 0; i < start.point.counts.length; i++) {
+    for (const i of tried) {
       for (const count of worst.point.counts[i] === 0 ? [-1, 1] : [1]) {
         const other = yield* ask(flipped([i], count));
         effects.set(i, Math.abs((other.scores[row] ?? 0) - (worst.scores[row] ?? 0)));
         if (lower(other.scores[row], worst.scores[row])) worst = other;
       }
     }
+    tried = tried.filter((i) => (effects.get(i) as number) > NOISE);
     if (worst !== before) continue;
-    const strong = [...effects].filter(([, effect]) => effect > NOISE).sort((a, b) => b[1] - a[1]).slice(0, MOST_PAIRED).map(([i]) => i);
+    const strong = [...tried].sort((a, b) => (effects.get(b) as number) - (effects.get(a) as number)).slice(0, MOST_PAIRED);
     for (const [k, i] of strong.entries()) {
       for (const j of strong.slice(k + 1)) {
         const other = yield* ask(flipped([i, j], 1));

@@ -10,7 +10,7 @@ export interface RequirementResult {
   /** where that is; tolerances that are not moved there are left out */ at: {
     temperature_K: number;
     /** `count` is in units of the whole tolerance, -1 to 1 */ tolerances: { name: string; count: number; words: string }[];
-    /** "-40 degC, Ncap -20 %, barrier +50 meV": without the tolerances that move nothing there */ words: string;
+    /** "-40 degC, Ncap -20 %, barrier +50 meV": without the tolerances that move nothing there, and of many the six that move it most */ words: string;
   } | null;
   /** a point without an answer is never counted as met */ met: boolean;
   /** false where it is neither met nor found not met, since some points have no answer */ judged: boolean;

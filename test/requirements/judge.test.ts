@@ -112,6 +112,26 @@ describe('the requirements of a design', () => {
     expect([forbidden.met, asked.met, share.met, share.worst]).toEqual([false, true, false, 1]);
   });
 
+  it('call degenerate and depleted what the result calls so, on every starter and temperature', () => {
+    let [degenerate, depleted] = [0, 0];
+    for (const { id, design } of starters) {
+      for (const temperature of ['77 K', '300 K', '450 K']) {
+        const { layers } = resultOf(design, { temperature });
+        const solid = layers.filter((l) => !l.insulator);
+        const rows = rowsOf(design, solid.flatMap((l) => (['degenerate', 'fullyDepleted'] as const).map((quantity) => ({ quantity, of: l.name, min: true }))), { ...none, set: { temperature } });
+        solid.forEach((l, i) => {
+          const [d, f] = rows.slice(2 * i, 2 * i + 2);
+          expect([d.worst, f.worst], `${id} ${l.name} ${temperature}`).toEqual([l.regime === 'degenerate', l.fully_depleted]);
+          expect([d.met, f.met]).toEqual([d.worst, f.worst]);
+          if (d.met) degenerate++;
+          if (f.met) depleted++;
+        });
+      }
+    }
+    expect(degenerate).toBeGreaterThan(5);
+    expect(depleted).toBeGreaterThan(0);
+  });
+
   it('hold a dopant against its published solubility', () => {
     const [row] = rowsOf(contactDesign(), [{ quantity: 'solubility', of: 'cap', max: '1' }], none);
     expect(row.worst).toBeGreaterThan(0);

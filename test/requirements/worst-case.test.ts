@@ -93,7 +93,7 @@ describe('the worst case', () => {
 
   it('tells the uncertainties that count from those that do not', () => {
     const [found] = worst(new Formula(3, [({ counts }) => counts[0] - 2 * counts[2]]), {}, [300]);
-    expect(found.matters).toEqual([true, false, true]);
+    expect(found.effects).toEqual([2, 0, 4]);
     expect(found.reading?.point.counts[0]).toBe(-1);
     expect(found.reading?.point.counts[2]).toBe(1);
   });
