@@ -70,6 +70,8 @@ export class PointSolver {
     let solution;
     try {
       solution = solveStack(stack, { accuracy: ACCURACY, ...(this.#start ? { warmStart: this.#start } : {}) });
+      // A start from far away must not cost an answer.
+      if (isRefusal(solution) && this.#start) solution = solveStack(stack, { accuracy: ACCURACY });
     } catch (error) {
       // What the solver refuses at its door, such as a gap that closes at this temperature.
       if (!(error instanceof RangeError)) throw error;
