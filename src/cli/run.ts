@@ -3,13 +3,14 @@ import { compute } from './compute.ts';
 import { draw } from './draw.ts';
 import { sweep } from './sweep.ts';
 import { vary } from './vary.ts';
+import { sheet } from './sheet.ts';
 import { size } from './size.ts';
 import { EXIT, UsageError, type Command, type Streams } from './command.ts';
 import { InputError } from '../design/complaint.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import { PROGRAM_VERSION } from '../version.ts';
 
-const COMMANDS: Readonly<Record<string, Command>> = { compute, check, size, draw, sweep, vary };
+const COMMANDS: Readonly<Record<string, Command>> = { compute, check, size, draw, sheet, sweep, vary };
 
 /** The command line. Everything goes through `streams`, so that it can be tried without a process. */
 export async function run(args: readonly string[], streams: Streams): Promise<number> {

@@ -23,7 +23,7 @@ const HOLD = '\u00a0';
 export function brokenLines(text: string, size: number, room: number, most = Infinity, bold = false): string[] {
   const lines: string[] = [''];
   const plain = (all: string[]): string[] => all.map((line) => line.replaceAll(HOLD, ' '));
-  for (const word of printable(text).trim().split(/ +/)) {
+  for (const word of held(printable(text).trim()).split(/ +/)) {
     for (const [p, part] of parts(word, size, room, bold).entries()) {
       const last = lines[lines.length - 1];
       const joint = last === '' || p > 0 ? '' : ' ';
@@ -44,7 +44,7 @@ export function oneLine(text: string, size: number, room: number, bold = false):
 
 /** Widest piece of a text that is never broken if there is room for it. */
 export function widestWord(text: string, size: number, bold = false): number {
-  return Math.max(0, ...printable(text).split(/ +/).flatMap(pieces).map((word) => lineWidth(word, size, bold)));
+  return Math.max(0, ...held(printable(text)).split(/ +/).flatMap(pieces).map((word) => lineWidth(word, size, bold)));
 }
 
 /** A word that fits stays whole; else it is cut where it may be, and where that is not enough, anywhere. */
@@ -82,9 +82,12 @@ export function printedUnits(text: string): string {
     .replace(/\^([-+]?\d+)(?![\d.])/g, (_, digits: string) => [...digits].map((d) => RAISED[d]).join(''))
     .replace(/(^|[\d\s(])um(?=$|[\s,;)])/g, '$1µm')
     .replace(/(^|[\d\s(])ohm(?=$|[\s,;)/])/g, '$1Ω')
-    .replace(/(^|[\d\s(])deg ?C(?=$|[\s,;)])/g, '$1°C')
-    .replace(/\(([^\s()]+) ([^\s()]+)\)/g, `($1${HOLD}$2)`)
-    .replace(/(\d) (?=[A-Za-zµΩ°%])/g, `$1${HOLD}`);
+    .replace(/(^|[\d\s(])deg ?C(?=$|[\s,;)])/g, '$1°C');
+}
+
+/** A number and its unit, and a unit of two in brackets, stay on one line. */
+function held(text: string): string {
+  return text.replace(/\(([^\s()]+) ([^\s()]+)\)/g, `($1${HOLD}$2)`).replace(/(\d) (?=[A-Za-zµΩ°%])/g, `$1${HOLD}`);
 }
 
 /** A heading whose signs of operation stay between their symbols: "Ec − EF". */

@@ -1,6 +1,7 @@
 import { ledgerTables, type LedgerTable } from '../result/ledger.ts';
 import { figureText } from '../result/figure-text.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
+import { writeNumber } from '../quantity/write-quantity.ts';
 import { marginWords, verdictWords } from '../requirements/verdict.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
 import { heldTogether, printedUnits } from './lines.ts';
@@ -45,13 +46,13 @@ export function requirementTable(rows: readonly RequirementResult[], at: { tempe
       const { words } = requirementQuantity(row.quantity as RequirementQuantityName);
       const unit = row.unit === '' ? '' : ` ${printedUnits(row.unit)}`;
       const value = (v: number | boolean): string => (typeof v === 'boolean' ? (v ? 'yes' : 'no') : `${figureText(v)}${unit}`);
-      const limit = typeof row.limit === 'boolean' ? (row.limit ? 'must be' : 'must not be') : `${row.bound === 'max' ? '≤' : '≥'} ${printedUnits(String(Number(row.limit.toPrecision(6))))}${unit}`;
+      const limit = typeof row.limit === 'boolean' ? (row.limit ? 'must be' : 'must not be') : `${row.bound === 'max' ? '≤' : '≥'} ${printedUnits(writeNumber(row.limit, 6))}${unit}`;
       const remarks = [
         ...(row.corners_sufficed ? [] : ['worse inside the ranges than at their corners']),
         ...(row.unanswered === null ? [] : [`no answer at ${row.unanswered.points} ${row.unanswered.points === 1 ? 'point' : 'points'}, first at ${printedUnits(row.unanswered.words)}: ${row.unanswered.reason}`]),
       ];
       return [[
-        [{ text: words }],
+        [{ text: heldTogether(words.replace(' - ', ' − ')) }],
         [{ text: row.of }],
         [{ text: limit }],
         [{ text: row.over === 'temperatureRange' && at.range !== null ? at.range : at.temperature }],

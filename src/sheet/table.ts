@@ -30,6 +30,8 @@ export interface SheetTable {
 const MOST_LINES = 24;
 /** Of the faint ink: rules between rows guide the eye and are not read. */
 const RULE = 0.45;
+/** Of the table's width: a longer word, such as a hostile name, is broken rather than given more. */
+const LONGEST_WORD = 0.16;
 const PAD_X = 5;
 const PAD_Y = 3;
 
@@ -108,7 +110,7 @@ function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: num
   const pad = 2 * PAD_X + 0.5;
   const size = (words: Words): number => (words.faint ? look.small : look.text);
   const cells = (c: number): Words[] => rows.flatMap((row) => row.flatMap((line) => line[c] ?? []));
-  const least = columns.map(({ heading, unit }, c) => pad + Math.max(...heading.split(' ').map((word) => lineWidth(word, look.small)), unit ? lineWidth(`(${unit})`, look.small) : 0, ...cells(c).map((w) => Math.min(widestWord(w.text, size(w), w.bold), 0.28 * width))));
+  const least = columns.map(({ heading, unit }, c) => pad + Math.max(...heading.split(' ').map((word) => lineWidth(word, look.small)), unit ? lineWidth(`(${unit})`, look.small) : 0, ...cells(c).map((w) => Math.min(widestWord(w.text, size(w), w.bold), LONGEST_WORD * width))));
   const liked = columns.map((_, c) => Math.max(least[c], pad + Math.max(0, ...cells(c).map((w) => Math.min(lineWidth(w.text, size(w), w.bold), 0.6 * width)))));
   const sum = (values: number[]): number => values.reduce((a, b) => a + b, 0);
   const [low, high] = [sum(least), sum(liked)];

@@ -1,5 +1,5 @@
 import type { Shape } from '../drawing/shapes.ts';
-import { brokenLines, oneLine } from './lines.ts';
+import { brokenLines, lineWidth, oneLine } from './lines.ts';
 import type { SheetLook } from './look.ts';
 
 /** What stands in the block at the foot of every page. */
@@ -77,8 +77,14 @@ export function titleBlock(of: TitleBlock, look: SheetLook): Shape[] {
     boxes.forEach((box, i) => {
       if (i > 0) shapes.push(rule(x, y, x, y + h));
       shapes.push({ kind: 'text', role: 'block-label', x: x + PAD, y: y + 1.25 * block.label, size: block.label, anchor: 'start', runs: [{ text: box.label }], fill: style.faint });
-      const value = oneLine(box.text, size, box.w - 2 * PAD, box.bold);
-      if (value !== '') shapes.push({ kind: 'text', role: `block-${box.label.replaceAll(' ', '-')}`, x: x + PAD, y: y + h - 0.45 * size, size, anchor: 'start', ...(box.bold ? { weight: 'bold' as const } : {}), runs: [{ text: value }], fill: style.ink });
+      const room = box.w - 2 * PAD;
+      const fits = y !== top || lineWidth(box.text, size, box.bold) <= room;
+      // What is too long for the line takes two smaller ones.
+      const s = fits ? size : 0.75 * size;
+      const values = fits ? [oneLine(box.text, s, room, box.bold)] : brokenLines(box.text, s, room, 2, box.bold);
+      values.forEach((value, l) => {
+        if (value !== '') shapes.push({ kind: 'text', role: `block-${box.label.replaceAll(' ', '-')}`, x: x + PAD, y: y + h - 0.45 * s - (values.length - 1 - l) * 1.25 * s, size: s, anchor: 'start', ...(box.bold ? { weight: 'bold' as const } : {}), runs: [{ text: value }], fill: style.ink });
+      });
       x += box.w;
     });
   }
