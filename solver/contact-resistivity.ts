@@ -67,10 +67,12 @@ const ACCURACY = 2e-6;
 const WAVE_ACCURACY = 3e-6;
 /** Places at which the window is looked for, and how far below the peak it ends, in natural logarithms. */
 const SCAN = 24;
-const DEPTH = 22;
+const DEPTH = 18;
 const MOST_DIVISION = 16;
 /** Panels that an integral may take. A wave kept between two steps of a thick undoped layer rings in energy more finely than can be followed: the error says so. */
 const MOST_PANELS = { wkb: 60, kemble: 60, exact: 20 };
+/** With T = 1 above the top, a part so small that T is not looked at there. */
+const NEXT_TO_NOTHING = 1e-7;
 /** Reach above the barrier and above EF, kT. */
 const REACH = 32;
 /** A barrier below this many kT stops nobody. */
@@ -82,7 +84,7 @@ const NO_BARRIER = 1e-3;
  *
  * @returns what is missing where the layer has no Richardson constant, or a layer on the way no tunnelling mass (asked for only where there is a barrier)
  *
- * The variable is E = edge + (top - edge) sin^2(theta), which smooths the integrand at both ends. Its peak is looked for first; what lies e^-22 below
+ * The variable is E = edge + (top - edge) sin^2(theta), which smooths the integrand at both ends. Its peak is looked for first; what lies e^-18 below
  * it is left out. A carrier without a barrier has T = 1, but in the exact transmission, where the step to the metal's band throws some back.
  */
 export function carrierConductance(stack: Stack, path: ContactPath, carrier: Carrier, options: ResistivityOptions = {}): CarrierConductance | MissingConstant {
@@ -155,7 +157,7 @@ function logIntegral(shape: BarrierShape, kind: Transmission, dispersion: Disper
     sum += below.value;
     error += below.error;
   }
-  if (kind === 'wkb') sum += Math.exp(above - peak);
+  if (kind === 'wkb' || Math.exp(above - peak) < NEXT_TO_NOTHING * sum) sum += Math.exp(above - peak);
   else {
     const first = Math.max(top, edge);
     const ends = [first, first + 5 * kT, Math.max(first + 6 * kT, 12 * kT), Math.max(first, 0) + REACH * kT];

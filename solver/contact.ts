@@ -73,6 +73,8 @@ type Conduction = Pick<ContactFigures, 'rhoC' | 'rhoCn' | 'rhoCp' | 'rhoCFloor' 
 /** A carrier of unknown constants is left out where even A* = 1200 A/(cm^2 K^2), ten free electrons', without a barrier would add less than this share. */
 const NEGLIGIBLE = 1e-6;
 const LARGEST_RICHARDSON = 1200;
+/** An error of the integral that is worth a word. */
+const DOUBTFUL = 0.01;
 
 /** Both carriers through the solved barrier, in parallel. What cannot be computed is null, and a note says why. */
 function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 'top' | 'bottom'): Conduction {
@@ -107,5 +109,7 @@ function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 
     out.rhoC = Math.exp(-minority.log);
     out.rhoError = minority.error;
   }
+  if (out.rhoC === Infinity) out.rhoCNotes.push('its resistivity is beyond the largest number: it blocks');
+  if (out.rhoError > DOUBTFUL) out.rhoCNotes.push(`its ${out.transmission} resistivity is uncertain by ${Math.ceil(100 * out.rhoError)} %, for waves ring in the layers under it; "wkb" has no such trouble`);
   return out;
 }

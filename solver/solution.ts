@@ -80,7 +80,7 @@ export interface ContactFigures {
   /** A T^2 exp(-phi/kT) of the majority at the metal, lowered barrier, A/cm^2 */ saturationCurrent: number | null;
   transmission: 'wkb' | 'kemble' | 'exact' | null;
   /** relative, of the integrals of rhoC */ rhoError: number | null;
-  /** why there is no rhoC */ rhoCNotes: string[];
+  /** why there is no rhoC, or what to keep in mind with it */ rhoCNotes: string[];
 }
 
 /** Every mesh node, an interface twice (once for each side). All arrays [nodes]. */

@@ -252,6 +252,16 @@ describe('the integral', () => {
     expect(over(1e17, 0.6, false)).toBeLessThan(0.5);
   });
 
+  it('owns up where waves ring in a thick undoped layer before a step, and WKB stays sure', () => {
+    const high: CrystalMaterial = { ...SILICON, id: 'high', gap: { zeroK: 1.6, alpha: 0, beta: 1 }, affinity: 3.8 };
+    const layers = [layer('i', 1000, [], SILICON), layer('step', 5, [], high), layer('n', 300, donors(1e18), SILICON)];
+    const [exact, wkb] = (['exact', 'wkb'] as const).map((transmission) => solved(stackOf(layers, { top: metal(0.3), assumptions: { transmission } })));
+    expect(exact.contacts[0].rhoError).toBeGreaterThan(0.01);
+    expect(exact.warnings.join()).toMatch(/exact resistivity is uncertain by \d+ %/);
+    expect(wkb.contacts[0].rhoError).toBeLessThan(1e-5);
+    expect(wkb.warnings).toEqual([]);
+  });
+
   it('with the two-band dispersion conducts better, and the more so in a narrow gap', () => {
     const gain = (gap: number): number => {
       const s = contactOn({ ...SILICON, gap: { zeroK: gap, alpha: 0, beta: 1 } }, 5e19, 0.5);
@@ -264,6 +274,7 @@ describe('the integral', () => {
   it('a resistivity beyond every number is infinite, and its logarithm is kept', () => {
     const s = contactOn(WIDE, 1e16, 2, { T: 20 });
     expect(s.contacts[0].rhoC).toBe(Infinity);
+    expect(s.warnings.join()).toContain('it blocks');
     expect(conductance(s).log).toBeLessThan(-710);
     expect(Number.isFinite(conductance(s).log)).toBe(true);
   });
