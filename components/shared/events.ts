@@ -16,6 +16,8 @@ export interface HalfmarkEvents {
   'hm-act': { act: PageAct };
   /** another name for the open project */
   'hm-rename': { name: string };
+  /** size a variable so that this requirement of the design is met */
+  'hm-size': { requirement: number };
   /** an act on one of the projects in the list, or on all of them */
   'hm-project': ProjectAct;
   /** open a starter as a project of its own */
@@ -28,6 +30,7 @@ export type PageAct =
   | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'about' | 'open-file'
   /** stop the running solve */ | 'cancel'
   /** solve once more */ | 'again'
+  /** stop the running judgement of the requirements; begin it anew */ | 'judge-stop' | 'judge-again'
   /** after another tab saved the same project */ | 'keep-mine' | 'take-other';
 
 export type ProjectAct =
