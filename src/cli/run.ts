@@ -39,8 +39,7 @@ export async function run(args: readonly string[], streams: Streams): Promise<nu
 const oneLine = (text: string): string => `halfmark: ${text.replace(/[\r\n\u2028\u2029]+/g, ' ')}\n`;
 
 function help(): string {
-  const width = Math.max(...Object.values(COMMANDS).map((c) => c.usage.length));
-  return `${['Band diagrams, Fermi levels and contacts of a layer stack, from a design file.', '', ...Object.values(COMMANDS).map((c) => `  halfmark ${c.usage.padEnd(width)}  ${c.summary}`), '',
+  return `${['Band diagrams, Fermi levels and contacts of a layer stack, from a design file.', '', ...Object.values(COMMANDS).map((c) => `  halfmark ${c.usage}\n      ${c.summary}`), '',
     'FILE is a design in JSON, or - for standard input. NAME is a variable of the design, or temperature.',
     'Exit codes: 0 done, 1 a requirement is not met, 2 the input is wrong, 3 no accepted answer.'].join('\n')}\n`;
 }

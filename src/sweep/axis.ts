@@ -27,13 +27,15 @@ export interface Axis {
 
 /** More points than this in a whole sweep ask for another tool. */
 export const MOST_POINTS = 100_000;
+/** Values between the ends are rounded to so many digits: 0.3, not 0.30000000000000004. */
+const DIGITS = 12;
 
 /**
  * Reads an axis and says all that is wrong with it; nothing is solved. Complaints have the paths "variable", "from", "to", "points".
  *
  * Ends keep the unit that they were typed in. A temperature runs in kelvin, as differences of degC and of K are the same but their ratios are not.
  */
-export function readAxis(design: Design, request: AxisRequest): { ok: true; axis: Axis } | { ok: false; complaints: Complaint[] } {
+export function readAxis(design: Design, request: AxisRequest, set: Readonly<Record<string, string>> = {}): { ok: true; axis: Axis } | { ok: false; complaints: Complaint[] } {
   const complaints: Complaint[] = [];
   const wrong = (path: string, message: string): void => void complaints.push({ path, message });
   const place = findPlace(design, request.variable);
@@ -41,9 +43,10 @@ export function readAxis(design: Design, request: AxisRequest): { ok: true; axis
   if (!Number.isInteger(points) || points < 2) wrong('points', `is ${quoted(points)}; a sweep takes 2 points or more (one point is what "compute --set" solves)`);
   else if (points > MOST_POINTS) wrong('points', `is ${points}, more than the ${MOST_POINTS} that are taken; ask for fewer, or for several sweeps`);
   if (isComplaint(place)) return { ok: false, complaints: [place, ...complaints] };
-  const { scope } = readVariables(design.variables ?? []);
+  const { temperature: _, ...overrides } = set;
+  const { scope } = readVariables(design.variables ?? [], overrides);
   const ends = [request.from, request.to].map((text, i) => {
-    const reading = readQuantity(place.kind === 'number' && Number.isFinite(Number(text)) ? Number(text) : text, place.kind, scope);
+    const reading = readQuantity(place.kind === 'number' && text.trim() !== '' && Number.isFinite(Number(text)) ? Number(text) : text, place.kind, scope);
     if (!reading.ok) wrong(i === 0 ? 'from' : 'to', reading.message);
     return reading.ok ? reading.value : NaN;
   });
@@ -75,15 +78,15 @@ function unitOf({ from, to }: AxisRequest, place: SweepPlace): string {
 /** The number as typed where it bears this unit, so that it does not come back as a neighbour of itself. */
 function endIn(text: string, value: number, unit: string, factor: number): number {
   const typed = /^([-+]?[\d.]+(?:[eE][-+]?\d+)?)\s*(.*)$/.exec(normalise(text));
-  return typed && typed[2] === unit ? Number(typed[1]) : value / factor;
+  return typed && typed[2] === unit ? Number(typed[1]) : Number((value / factor).toPrecision(DIGITS));
 }
 
-/** Both ends exactly as given, the points between rounded to twelve digits: 0.3, not 0.30000000000000004. */
+/** Both ends exactly as given, the points between rounded. */
 export function spaced(from: number, to: number, points: number, scale: 'linear' | 'log'): number[] {
   return Array.from({ length: points }, (_, i) => {
     if (i === 0) return from;
     if (i === points - 1) return to;
     const u = i / (points - 1);
-    return Number((scale === 'log' ? from * (to / from) ** u : from + (to - from) * u).toPrecision(12));
+    return Number((scale === 'log' ? from * (to / from) ** u : from + (to - from) * u).toPrecision(DIGITS));
   });
 }

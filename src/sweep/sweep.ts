@@ -54,7 +54,7 @@ export function planSweep(design: Design, request: SweepRequest): { ok: true; pl
   const axes: Axis[] = [];
   [request.axis, ...(request.second ? [request.second] : [])].forEach((asked, a) => {
     const prefix = a === 0 ? '' : 'second.';
-    const reading = readAxis(design, asked);
+    const reading = readAxis(design, asked, set);
     if (reading.ok) axes.push(reading.axis);
     else complaints.push(...reading.complaints.map((c) => ({ ...c, path: `${prefix}${c.path}` })));
   });

@@ -33,7 +33,7 @@ export interface VariationPlan {
   /** K: the design's own first, then the ends of its range where a requirement is held over it */ temperatures: number[];
 }
 
-export const MOST_VARIATIONS = 1_000_000;
+export const MOST_VARIATIONS = 200_000;
 
 /** Reads a tolerance run and says all that is wrong with it before anything is solved. Complaints have the paths "count", "seed", "figure", or those of the design. */
 export function planVariations(design: Design, request: VariationRequest): { ok: true; plan: VariationPlan } | { ok: false; complaints: Complaint[] } {

@@ -9,7 +9,7 @@ import { filmJob, framesOf, planFilm } from '../../src/sweep/film.ts';
 import { atPoint, planSweep, pointsOf, sweepJob, sweepResult, type SweepPlan, type SweepRequest } from '../../src/sweep/sweep.ts';
 import { readCsv } from '../export/read-csv.ts';
 
-const schottky = starters.find((s) => s.design.title.startsWith('Nickel'))!.design;
+const schottky: Design = { ...starters.find((s) => s.design.title.startsWith('Nickel'))!.design, requirements: [] };
 
 function planned(design: Design, request: SweepRequest): SweepPlan {
   const reading = planSweep(design, request);
@@ -185,5 +185,25 @@ describe('a film over the temperature', () => {
       expect(frame.result.conditions.temperature_K).toBe(frame.temperature_K);
       expect(frame.regimes).toEqual(frame.result.layers.map((l) => l.regime));
     }
+  });
+});
+
+describe('the ends of an axis', () => {
+  const values = (axis: SweepRequest['axis'], set?: Record<string, string>): number[] => planned(schottky, { axis, set }).axes[0].values;
+
+  it('keep the unit that they were typed in, and their digits', () => {
+    expect(values({ variable: 'layers[0].thickness', from: '3 um', to: '5000 nm', points: 3 })).toEqual([3, 4, 5]);
+    expect(values({ variable: 'temperature', from: '-40 degC', to: '300 K', points: 2 })).toEqual([233.15, 300]);
+    expect(values({ variable: 'top.barrier', from: '100 meV', to: '0.3 eV', points: 3 })).toEqual([100, 200, 300]);
+    expect(values({ variable: 'layers[0].dopants[0].activation', from: '0.1', to: '0.3', points: 3 })).toEqual([0.1, 0.2, 0.3]);
+  });
+
+  it('may be expressions over the variables as they are set', () => {
+    expect(values({ variable: 'layers[1].dopants[0].concentration', from: 'Ndrift', to: '10*Ndrift', points: 2 }, { Ndrift: '1e15 cm^-3' })).toEqual([1e15, 1e16]);
+  });
+
+  it('are not taken from nothing', () => {
+    const reading = planSweep(schottky, { axis: { variable: 'layers[0].dopants[0].activation', from: ' ', to: '1', points: 2 } });
+    expect(reading.ok).toBe(false);
   });
 });
