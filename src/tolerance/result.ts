@@ -1,3 +1,4 @@
+import { requirementQuantity } from '../design/requirement-quantities.ts';
 import { provenanceOf } from '../result/provenance.ts';
 import type { Provenance } from '../result/types.ts';
 import type { Distribution } from './draw.ts';
@@ -45,7 +46,7 @@ export function variationResult(plan: VariationPlan, chunks: ReadonlyMap<number,
   const figures = plan.columns.map((column, c): VariedFigureResult => {
     const values = drawn.flatMap(([, rows]) => every(rows.values, c, width));
     const own = column.kind === 'requirement' ? every(met, requirement++, requirements) : null;
-    const log = column.kind === 'figure' ? column.figure.log : false;
+    const log = column.kind === 'figure' ? column.figure.log : requirementQuantity(column.requirement.quantity).margin === 'ratio';
     return {
       path: column.kind === 'figure' ? column.figure.path : `requirements.${requirement - 1}`,
       words: column.kind === 'figure' ? column.figure.words : column.words,

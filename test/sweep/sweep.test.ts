@@ -5,6 +5,8 @@ import type { Design } from '../../src/design/types.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import { sweepCsvHeading, sweepCsvRows } from '../../src/sweep/csv.ts';
 import { figuresOf } from '../../src/sweep/figures.ts';
+import { findPlace, isComplaint, sweepNames } from '../../src/sweep/places.ts';
+import { toStack } from '../../src/design/stack.ts';
 import { filmJob, framesOf, planFilm } from '../../src/sweep/film.ts';
 import { atPoint, planSweep, pointsOf, sweepJob, sweepResult, type SweepPlan, type SweepRequest } from '../../src/sweep/sweep.ts';
 import { readCsv } from '../export/read-csv.ts';
@@ -205,5 +207,23 @@ describe('the ends of an axis', () => {
   it('are not taken from nothing', () => {
     const reading = planSweep(schottky, { axis: { variable: 'layers[0].dopants[0].activation', from: ' ', to: '1', points: 2 } });
     expect(reading.ok).toBe(false);
+  });
+});
+
+describe('what can be swept', () => {
+  it('can all be put into its design and read again', () => {
+    const sample: Record<string, string> = { length: '210 nm', energy: '0.11 eV', density: '2.5e17 cm^-3', sheetDensity: '1e12 cm^-2', temperature: '310 K', number: '0.15' };
+    for (const { design } of starters) {
+      const names = sweepNames(design);
+      expect(names.length).toBeGreaterThan(5);
+      for (const name of names) {
+        const place = findPlace(design, name);
+        if (isComplaint(place)) throw new Error(`${design.title} ${name}: ${place.message}`);
+        const put = place.put(design, sample[place.kind]);
+        const reading = toStack(put.design, put.set);
+        expect(reading.ok ? [] : reading.complaints, `${design.title} ${name}`).toEqual([]);
+        expect(JSON.stringify(put), name).not.toBe(JSON.stringify({ design, set: {} }));
+      }
+    }
   });
 });
