@@ -21,7 +21,7 @@ const FIELD = 0.9;
  * @param temperature K
  *
  * With psi = phi_B - edge, the exponent at E = edge + z psi is (psi/E00) [sqrt(1-z) - z artanh sqrt(1-z)], its slope -artanh(sqrt(1-z))/E00.
- * - thermionic, E00 < kT/2: k/(A T) exp(phi_B/kT);
+ * - thermionic, E00 < kT/2 or no barrier above EF: k/(A T)/ln[1 + exp(-phi_B/kT)], the usual k/(A T) exp(phi_B/kT) where phi_B is some kT;
  * - field, where EF lies in the band and the slope at EF, c1, is below 1/kT: the exponent's straight line at EF over the occupancy, less what lies below the
  *   band: k^2/A exp(exponent at EF)/[pi kT/sin(pi c1 kT) - exp(c1 edge)/c1]; and where a layer is not degenerate but so cold that its carriers keep to the band's
  *   edge, with the slope c1 at kT above it: k^2/A exp(exponent there) (1 - c1 kT)/kT exp(c1 kT + edge/kT);
@@ -33,9 +33,10 @@ export function closedFormResistivity(barrier: number, edge: number, e00: number
   const kT = BOLTZMANN * temperature;
   const psi = barrier - edge;
   const ratio = e00 / kT;
-  if (ratio < THERMIONIC || psi <= 0) return { rhoC: (BOLTZMANN / (constant * temperature)) * Math.exp(Math.max(barrier, edge) / kT), form: 'thermionic' };
+  // Below EF the exponential alone would conduct better than the band has states.
+  if (ratio < THERMIONIC || psi <= 0 || barrier <= 0) return { rhoC: BOLTZMANN / (constant * temperature) / logOnePlusExp(-Math.max(barrier, edge) / kT), form: 'thermionic' };
   const front = BOLTZMANN ** 2 / constant;
-  const degenerate = edge < 0 && barrier > 0;
+  const degenerate = edge < 0;
   const z = (degenerate ? -edge : kT) / psi;
   if (z < 1) {
     const s = Math.sqrt(1 - z);
@@ -51,6 +52,10 @@ export function closedFormResistivity(barrier: number, edge: number, e00: number
   const logCosh = ratio + Math.log1p(Math.exp(-2 * ratio)) - Math.LN2;
   const log = logCosh - Math.log(2 * Math.sqrt(Math.PI * e00 * psi * th)) + (psi * th) / e00 + edge / kT;
   return { rhoC: front * Math.exp(log), form: 'thermionic-field' };
+}
+
+function logOnePlusExp(u: number): number {
+  return u > 0 ? u + Math.log1p(Math.exp(-u)) : Math.log1p(Math.exp(u));
 }
 
 /**

@@ -70,7 +70,7 @@ const SCAN = 24;
 const DEPTH = 18;
 const MOST_DIVISION = 16;
 /** Panels that an integral may take. A wave kept between two steps of a thick undoped layer rings in energy more finely than can be followed: the error says so. */
-const MOST_PANELS = { wkb: 60, kemble: 60, exact: 20 };
+const MOST_PANELS = { wkb: 60, kemble: 60, exact: 14 };
 /** With T = 1 above the top, a part so small that T is not looked at there. */
 const NEXT_TO_NOTHING = 1e-7;
 /** Reach above the barrier and above EF, kT. */

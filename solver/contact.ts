@@ -57,7 +57,9 @@ export function contactFigures(stack: Stack, profiles: Profiles, space: SpaceCha
   const constant = richardson(layer.material, x, carrier);
   if (net !== 0 && constant !== undefined && !c.bands.insulator) {
     const height = net > 0 ? heights.barrierN : heights.barrierP;
-    figures.saturationCurrent = saturationCurrent(height - (figures.lowering ?? 0), constant, stack.temperature);
+    const lowered = height - (figures.lowering ?? 0);
+    // Where no barrier is left nothing saturates.
+    if (lowered > 0) figures.saturationCurrent = saturationCurrent(lowered, constant, stack.temperature);
     if (figures.e00 !== null) {
       const { ecMinusEf } = neutralLevel(c);
       const closed = closedFormResistivity(height, net > 0 ? ecMinusEf : c.bands.gap - ecMinusEf, figures.e00, constant, stack.temperature);

@@ -131,7 +131,12 @@ describe('the closed forms', () => {
   });
 
   it('choose thermionic emission below kT/2 and without a barrier, and stay finite in the cold', () => {
-    expect(closedFormResistivity(0.6, 0.1, 0.012, 110, 300)).toEqual({ rhoC: (BOLTZMANN / (110 * 300)) * Math.exp(0.6 / (BOLTZMANN * 300)), form: 'thermionic' });
+    const usual = closedFormResistivity(0.6, 0.1, 0.012, 110, 300);
+    expect(usual.form).toBe('thermionic');
+    expect(usual.rhoC / ((BOLTZMANN / (110 * 300)) * Math.exp(0.6 / (BOLTZMANN * 300)))).toBeCloseTo(1, 9);
+    // A barrier below EF, as a metal on InAs has, conducts no better than the states above it.
+    const low = closedFormResistivity(-0.14, -0.2, 0.1, 3, 300);
+    expect(low.rhoC / (BOLTZMANN ** 2 / (3 * 0.14))).toBeCloseTo(1, 2);
     expect(closedFormResistivity(-0.3, -0.1, 0.2, 110, 300).form).toBe('thermionic');
     expect(closedFormResistivity(0.6, 0.02, 0.3, 110, 4.2).form).toBe('field');
     expect(closedFormResistivity(0.6, 0.02, 0.3, 110, 4.2).rhoC).toBeGreaterThan(0);
@@ -145,8 +150,9 @@ describe('the closed forms', () => {
     const plain = contactOn(SILICON, 1e16, 0.67).contacts[0];
     expect(plain.lowering).toBeNull();
     expect((lowered.saturationCurrent ?? NaN) / (plain.saturationCurrent ?? NaN)).toBeCloseTo(Math.exp((lowered.lowering ?? NaN) / (BOLTZMANN * 300)), 6);
+    expect(contactOn(SILICON, 1e19, -0.1).contacts[0].saturationCurrent).toBeNull();
     // Thermionic emission conducts dJ/dV = J/kT at zero bias.
-    expect((plain.saturationCurrent ?? NaN) * (plain.rhoCClosedForm ?? NaN)).toBeCloseTo(BOLTZMANN * 300, 12);
+    expect((plain.saturationCurrent ?? NaN) * (plain.rhoCClosedForm ?? NaN)).toBeCloseTo(BOLTZMANN * 300, 9);
     expect(conductance(contactOn({ ...SILICON, electronMass: [massFor(2.86e19, 300)] }, 1e16, 0.67)).error).toBeLessThan(1e-5);
   });
 });
