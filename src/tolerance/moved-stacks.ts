@@ -12,8 +12,9 @@ import { governedBy } from '../requirements/governed.ts';
 import type { Uncertainty } from '../requirements/uncertainties.ts';
 import { movedVariables } from './moved-variables.ts';
 
-/** Far inside what a thickness may be; nearer its limits the whole reading decides, cm. */
+/** Far inside what a thickness and a concentration may be; nearer their limits the whole reading decides, cm and cm^-3. */
 const PLAIN_THICKNESS = [1e-8, 1] as const;
+const MOST_PLAIN = 1e22;
 const SHARE = { least: [0, '0'] as [number, string], most: [1, '1'] as [number, string] };
 
 /**
@@ -27,7 +28,7 @@ export class MovedStacks {
   readonly #quick: boolean;
   readonly #thickness: boolean[];
   readonly #x: boolean[];
-  readonly #dopants: boolean[][];
+  /** what of each row moves: nothing, one concentration, or more than that */ readonly #dopants: ('nothing' | 'concentration' | 'more')[][];
   readonly #contacts: { top: boolean; bottom: boolean };
 
   /** @param nominal  the stack of the design with these overrides */
@@ -44,7 +45,7 @@ export class MovedStacks {
     this.#x = design.layers.map((layer) => governed(layer.x));
     this.#moving = uncertainties.some((u) => u.variable !== null);
     this.#thickness = design.layers.map((layer) => governed(layer.thickness));
-    this.#dopants = design.layers.map((layer) => (layer.dopants ?? []).map((row) => governed(row)));
+    this.#dopants = design.layers.map((layer) => (layer.dopants ?? []).map(({ concentration, ...other }) => (governed(other) || (governed(concentration) && typeof concentration === 'object') ? 'more' : governed(concentration) ? 'concentration' : 'nothing')));
     this.#contacts = { top: governed(design.top), bottom: governed(design.bottom) };
     const { variables: _, requirements: __, top: ___, bottom: ____, layers, ...rest } = design;
     this.#quick = !governed(rest, layers.map(({ thickness: _t, dopants: _d, x: _x, ...other }) => other));
@@ -84,12 +85,18 @@ export class MovedStacks {
   #layer(layer: Layer, l: number, ask: Asker): Layer {
     const input = this.design.layers[l];
     const composed = this.#x[l] && isAlloy(layer.material) && input.x !== undefined;
-    if (!composed && !this.#thickness[l] && !this.#dopants[l].includes(true)) return layer;
+    if (!composed && !this.#thickness[l] && this.#dopants[l].every((d) => d === 'nothing')) return layer;
     const thickness = this.#thickness[l] ? ask.quantity(input.thickness, 'length', `layers[${l}].thickness`) : layer.thickness;
     const x = composed ? readProfile(input.x!, 'number', `layers[${l}].x`, ask, SHARE) : layer.x;
     const middle = profileAt(x, thickness / 2, thickness);
-    // The depth of a level may move with the composition.
-    const dopants = layer.dopants.map((dopant, d): Dopant => (composed || this.#dopants[l][d] ? (readDopant(input.dopants![d], input.material, middle, this.#catalogue, `layers[${l}].dopants[${d}]`, ask) ?? dopant) : dopant));
+    const dopants = layer.dopants.map((dopant, d): Dopant => {
+      const row = input.dopants![d];
+      const path = `layers[${l}].dopants[${d}]`;
+      // The depth of a level may move with the composition.
+      if (composed || this.#dopants[l][d] === 'more') return readDopant(row, input.material, middle, this.#catalogue, path, ask) ?? dopant;
+      if (this.#dopants[l][d] === 'nothing') return dopant;
+      return { ...dopant, concentration: { kind: 'constant', value: ask.quantity(row.concentration, 'density', `${path}.concentration`, { least: [0, '0 cm^-3'], most: [MOST_PLAIN, '1e22 cm^-3'] }) } };
+    });
     return { ...layer, x, thickness, dopants };
   }
 }
