@@ -4,13 +4,13 @@ import { textWidth } from '../drawing/glyph-widths.ts';
 /** Bold glyphs over normal ones: the widest ratio of common letters in the face that the sheet is set in, but for i and l. */
 const BOLD = 1.13;
 
-/** px */
-export function lineWidth(text: string, size: number, bold = false): number {
-  return textWidth(text, size) * (bold ? BOLD : 1);
-}
-
 /** Holds two words together; a plain space on paper. */
 const HOLD = '\u00a0';
+
+/** px */
+export function lineWidth(text: string, size: number, bold = false): number {
+  return textWidth(text.replaceAll(HOLD, ' '), size) * (bold ? BOLD : 1);
+}
 
 /**
  * A text broken into lines of a width: at spaces, else after a hyphen, slash, comma or underscore, else anywhere. Hostile characters are left out.
@@ -85,9 +85,9 @@ export function printedUnits(text: string): string {
     .replace(/(^|[\d\s(])deg ?C(?=$|[\s,;)])/g, '$1°C');
 }
 
-/** A number and its unit, and a unit of two in brackets, stay on one line. */
+/** A number, its unit and a sign before it stay on one line, and so does a unit of two in brackets. */
 function held(text: string): string {
-  return text.replace(/\(([^\s()]+) ([^\s()]+)\)/g, `($1${HOLD}$2)`).replace(/(\d) (?=[A-Za-zµΩ°%])/g, `$1${HOLD}`);
+  return text.replace(/\(([^\s()]+) ([^\s()]+)\)/g, `($1${HOLD}$2)`).replace(/([≤≥±]) (?=[\d−])/g, `$1${HOLD}`).replace(/(\d) (?=(?:[kmµnGM]?(?:eV|V|A|F|m|Ω|Pa)|cm[²³⁻]?|K|kT|°C|%|times)(?:$|[^A-Za-z]))/g, `$1${HOLD}`);
 }
 
 /** A heading whose signs of operation stay between their symbols: "Ec − EF". */

@@ -43,6 +43,8 @@ const WORDS: readonly [path: RegExp, words: string][] = [
   [/^alloy\.valleyBowing\.(.+)$/, '* gap bowing'],
   [/^validity\.temperature$/, 'valid for temperatures'],
   [/^validity\.doping$/, 'valid for doping'],
+  [/^outsideContactModel\.low$/, 'contacts were measured from'],
+  [/^outsideContactModel\.high$/, 'contacts were measured up to'],
   [/^depth$/, 'depth'],
   [/^depth\.points\.(\d+)$/, 'depth'],
   [/^degeneracy$/, 'degeneracy'],

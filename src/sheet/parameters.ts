@@ -62,7 +62,7 @@ function counts(path: string, inForce: InForce): boolean {
   if (path.startsWith('nonParabolicity')) return inForce.nonParabolic;
   if (path.startsWith('polarisation')) return inForce.polar;
   if (path.startsWith('naturalValence') || path.startsWith('alloy.bowing.naturalValence')) return inForce.natural;
-  if (path.startsWith('tunnellingMass') || path.startsWith('richardson') || path === 'permittivityHighFrequency') return inForce.contact;
+  if (path.startsWith('tunnellingMass') || path.startsWith('richardson') || path.startsWith('outsideContactModel') || path === 'permittivityHighFrequency') return inForce.contact;
   if (path === 'neutralityLevel' || path === 'pinningSlope') return inForce.pinned;
   return true;
 }

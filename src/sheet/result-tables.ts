@@ -39,7 +39,7 @@ export function requirementTable(rows: readonly RequirementResult[], at: { tempe
     title: 'Requirements',
     columns: [
       { heading: 'Quantity', align: 'start' }, { heading: 'Of', align: 'start' }, { heading: 'Limit', align: 'start' }, { heading: 'Over', align: 'start' },
-      { heading: 'Worst case', align: 'start' }, { heading: 'Where that is', align: 'start' }, { heading: 'Margin', align: 'start' }, { heading: 'Verdict', align: 'start' },
+      { heading: 'Worst case', align: 'start' }, { heading: 'Where that is', align: 'start', wide: true }, { heading: 'Margin', align: 'start' }, { heading: 'Verdict', align: 'start' },
     ],
     rows: rows.map((row) => {
       const verdict = verdictWords(row);
@@ -59,7 +59,7 @@ export function requirementTable(rows: readonly RequirementResult[], at: { tempe
         [{ text: row.worst === null ? '–' : value(row.worst) }],
         [{ text: row.at === null ? '–' : printedUnits(row.at.words) }, ...remarks.map((text) => ({ text, faint: true }))],
         [{ text: row.worst === null ? '–' : printedUnits(marginWords(row)) }],
-        [{ text: verdict, bold: true, trouble: verdict !== 'met' }],
+        [{ text: verdict.replace(' ', '\u00a0'), bold: true, trouble: verdict !== 'met' }],
       ]];
     }),
   };

@@ -93,7 +93,7 @@ function variantTable(variants: readonly Variant[]): SheetTable | null {
   if (variants.length === 0) return null;
   return {
     title: 'Laid over the plate',
-    columns: [{ heading: 'Name', align: 'start' }, { heading: 'Title', align: 'start' }, { heading: 'Temperature', unit: 'K', align: 'end' }, { heading: 'Design', align: 'start' }],
+    columns: [{ heading: 'Name', align: 'start' }, { heading: 'Title', align: 'start', wide: true }, { heading: 'Temperature', unit: 'K', align: 'end' }, { heading: 'Design', align: 'start' }],
     rows: variants.map(({ name, result }) => [[[{ text: name }], [{ text: result.title }], [{ text: String(Number(result.conditions.temperature_K.toPrecision(6))) }], [{ text: result.provenance.design }]]]),
   };
 }

@@ -20,7 +20,7 @@ export function sourceTables(design: Design, result: Result): SheetTable[] {
   const parameters: SheetTable = {
     title: 'Parameters in use and where they stand',
     note: 'Seen in print: the figure was read on the page cited. From memory: the work is cited from memory, look it up before you rely on the figure. Computed: derived from others, as the remark says. Own value: entered in this design.',
-    columns: [{ heading: 'Of', align: 'start' }, { heading: 'Values', align: 'start' }, { heading: 'Source', align: 'start' }, { heading: 'Checked', align: 'start' }, { heading: 'Remark', align: 'start' }],
+    columns: [{ heading: 'Of', align: 'start' }, { heading: 'Values', align: 'start', wide: true }, { heading: 'Source', align: 'start' }, { heading: 'Checked', align: 'start' }, { heading: 'Remark', align: 'start', wide: true }],
     rows: rows.flatMap((row) => {
       const source: Cell = [{ text: `[${numberOf(row.work)}]` }];
       return inParts(row.values, MOST_VALUES).map((values): Cell[][] => [[[{ text: row.of }], [{ text: values.map(valueText).join('; ') }], source, [{ text: checkedWords(row) }], [{ text: printedUnits(row.origin.note) }]]]);
@@ -28,7 +28,7 @@ export function sourceTables(design: Design, result: Result): SheetTable[] {
   };
   const cited: SheetTable = {
     title: 'Works cited',
-    columns: [{ heading: 'No.', align: 'end' }, { heading: 'Work', align: 'start' }],
+    columns: [{ heading: 'No.', align: 'end' }, { heading: 'Work', align: 'start', wide: true }],
     rows: works.map((work, i) => [[[{ text: `[${i + 1}]` }], [{ text: work }]]]),
   };
   return [parameters, cited];
@@ -38,9 +38,9 @@ function valueText({ path, text }: { path: string; text: string }): string {
   return `${parameterWords(path)} ${printedUnits(text)}`;
 }
 
-function checkedWords({ origin, own, work }: ParameterRow): string {
+function checkedWords({ origin, own }: ParameterRow): string {
   if (own) return 'own value';
-  if (origin.checked === null) return work === '' ? '–' : 'seen in print';
+  if (origin.checked === null) return '–';
   return `${CHECKED[origin.checked]}${origin.confidence === '' || origin.confidence === 'high' ? '' : `, ${origin.confidence} confidence`}`;
 }
 

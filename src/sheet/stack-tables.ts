@@ -104,7 +104,7 @@ export function variableTable(design: Design, set: Readonly<Record<string, strin
   if (rows.length === 0) return null;
   return {
     title: 'Variables',
-    columns: [{ heading: 'Name', align: 'start' }, { heading: 'Value', align: 'start' }, { heading: 'Tolerance', align: 'start' }, { heading: 'Range', align: 'start' }, { heading: 'Note', align: 'start' }],
+    columns: [{ heading: 'Name', align: 'start' }, { heading: 'Value', align: 'start' }, { heading: 'Tolerance', align: 'start' }, { heading: 'Range', align: 'start' }, { heading: 'Note', align: 'start', wide: true }],
     rows: rows.map((v) => {
       const moved = Object.hasOwn(set, v.name);
       return [[

@@ -17,6 +17,7 @@ export interface SheetColumn {
   heading: string;
   /** under the heading, in brackets */ unit?: string;
   align: 'start' | 'end';
+  /** holds sentences; the others hold names and figures, and a long name does not push them aside */ wide?: true;
 }
 
 export interface SheetTable {
@@ -32,6 +33,9 @@ const MOST_LINES = 24;
 const RULE = 0.45;
 /** Of the table's width: a longer word, such as a hostile name, is broken rather than given more. */
 const LONGEST_WORD = 0.16;
+/** Likewise, what a column without and with sentences asks for. */
+const LONGEST_NAME = 0.22;
+const WIDEST = 0.6;
 const PAD_X = 5;
 const PAD_Y = 3;
 
@@ -111,7 +115,7 @@ function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: num
   const size = (words: Words): number => (words.faint ? look.small : look.text);
   const cells = (c: number): Words[] => rows.flatMap((row) => row.flatMap((line) => line[c] ?? []));
   const least = columns.map(({ heading, unit }, c) => pad + Math.max(...heading.split(' ').map((word) => lineWidth(word, look.small)), unit ? lineWidth(`(${unit})`, look.small) : 0, ...cells(c).map((w) => Math.min(widestWord(w.text, size(w), w.bold), LONGEST_WORD * width))));
-  const liked = columns.map((_, c) => Math.max(least[c], pad + Math.max(0, ...cells(c).map((w) => Math.min(lineWidth(w.text, size(w), w.bold), 0.6 * width)))));
+  const liked = columns.map((_, c) => Math.max(least[c], pad + Math.max(0, ...cells(c).map((w) => Math.min(lineWidth(w.text, size(w), w.bold), (columns[c].wide ? WIDEST : LONGEST_NAME) * width)))));
   const sum = (values: number[]): number => values.reduce((a, b) => a + b, 0);
   const [low, high] = [sum(least), sum(liked)];
   if (low >= width) return least.map((w) => (w * width) / low);
