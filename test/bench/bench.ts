@@ -8,6 +8,7 @@ import { fermiHalf, fermiHalfInto, inverseFermiHalf } from '../../solver/fermi-i
 import { isRefusal, solveStack, type Solution, type Stack } from '../../solver/index.ts';
 import { barrier, doped, layer, stackOf } from '../solver/stack-fixtures.ts';
 import { longRows } from './long-runs.ts';
+import { starterRows } from './starter-rows.ts';
 
 const ARGUMENTS = Float64Array.from({ length: 4096 }, (_, i) => -30 + (80 * ((i * 2654435761) % 4096)) / 4096);
 const VALUES = ARGUMENTS.map((eta) => fermiHalf(eta));
@@ -63,6 +64,6 @@ const rows = [
   { name: '30 layers, cold, 0.1 mV', timesExp: ratio(4, () => { for (let k = 0; k < 4; k++) sink += solved(thirty).quality.meshNodes; }) },
   { name: 'five-layer stack, warm, one doping moved', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(nudged, first).quality.meshNodes; }) },
 ];
-rows.push(...longRows(ratio));
+rows.push(...starterRows(ratio), ...longRows(ratio));
 for (const row of rows) console.log(`${row.name.padEnd(44)} ${row.timesExp.toPrecision(3).padStart(10)} x Math.exp`);
 console.log(JSON.stringify({ rows, cold: first.quality, tight: tight.quality, wafer: solved(thick).quality, finite: Number.isFinite(sink) }));
