@@ -27,12 +27,12 @@ export const styles = css`
     min-height: 30px;
     width: 100%;
   }
-  .date {
+  .with-button {
     display: flex;
     gap: 0.3rem;
     align-items: flex-end;
   }
-  .date label {
+  .with-button label {
     flex: 1;
     min-width: 0;
   }
@@ -44,7 +44,7 @@ export const styles = css`
     margin: 0.5rem 0;
   }
   .row button,
-  .date button {
+  .with-button button {
     min-height: 30px;
   }
   figure {

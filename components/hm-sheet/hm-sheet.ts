@@ -210,7 +210,7 @@ export class HmSheet extends LitElement {
       ${ready && this.requirements === null && (this.design?.requirements ?? []).length > 0 ? html`<p class="caution">The requirements are not judged yet; the sheet says so.</p>` : nothing}
       <div class="fields">
         ${this.field('title', 'Title', { most: 200 })} ${this.field('author', 'Author', { most: 100, complete: 'name' })}
-        <div class="date">${this.field('date', 'Date', { most: 40 })}<button type="button" @click=${this.today}>Today</button></div>
+        <div class="with-button">${this.field('date', 'Date', { most: 40 })}<button type="button" @click=${this.today}>Today</button></div>
         ${this.field('revision', 'Revision', { most: 40 })}
         <label>Look
           <select @change=${(e: Event) => (this.sheetStyle = (e.target as HTMLSelectElement).value as SheetStyle)}>

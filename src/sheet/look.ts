@@ -30,10 +30,10 @@ export interface SheetLook {
 }
 
 const SIZES: Record<SheetStyle, { plate: StyleName; plateShare: [number, number]; text: number; small: number; head: number }> = {
-  screen: { plate: 'light', plateShare: [0.6, 0.8], text: 10, small: 8.5, head: 12.5 },
+  screen: { plate: 'light', plateShare: [0.5, 0.8], text: 10, small: 8.5, head: 12.5 },
   // Large letters leave no room beside the plate.
   slide: { plate: 'slide', plateShare: [1, 1], text: 14, small: 12, head: 18 },
-  journal: { plate: 'journal', plateShare: [0.6, 0.8], text: 10, small: 8.5, head: 12.5 },
+  journal: { plate: 'journal', plateShare: [0.5, 0.8], text: 10, small: 8.5, head: 12.5 },
 };
 
 /** @throws {RangeError} unknown style or paper */

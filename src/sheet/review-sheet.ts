@@ -99,11 +99,12 @@ function variantTable(variants: readonly Variant[]): SheetTable | null {
 }
 
 /** The plate takes what the layer table (and the requirements, if both fit) leave of the first page, within bounds. */
-function plateOf({ result, plate, variants, title, design }: SheetInput, look: SheetLook, room: Room, sections: Section[]): { piece: Piece; drawing: ReturnType<typeof placed>; description: string } {
+function plateOf({ result, plate, variants, title, design, requirements }: SheetInput, look: SheetLook, room: Room, sections: Section[]): { piece: Piece; drawing: ReturnType<typeof placed>; description: string } {
   const [least, most] = look.plateShare.map((share) => share * room.height);
   const gap = 14;
   let height = least;
-  for (const count of [1, 2]) {
+  const beside = (requirements ?? result.requirements ?? []).length > 0 ? [1, 2] : [1];
+  for (const count of beside) {
     const rest = room.height - sections.slice(0, count).reduce((sum, s) => sum + sectionHeight(s, room, look) + gap, 0);
     if (rest >= least) height = Math.min(rest, most);
   }
