@@ -39,9 +39,6 @@ export const styles = css`
     min-width: 0;
     margin-top: 0.75rem;
   }
-  hm-requirements {
-    margin-top: 0.75rem;
-  }
   .drop {
     position: fixed;
     inset: 0.75rem;

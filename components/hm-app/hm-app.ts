@@ -1,4 +1,5 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import { keyed } from 'lit/directives/keyed.js';
 import type { Design } from '../../src/design/types.ts';
 import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
 import { blankDesign } from '../../src/state/blank-design.ts';
@@ -8,26 +9,26 @@ import { Keeper } from '../../src/storage/keeper.ts';
 import { ProjectStore } from '../../src/storage/project-store.ts';
 import type { View } from '../../src/state/view.ts';
 import { SolverClient } from '../../src/workers/client.ts';
+import { JobClient } from '../../src/workers/job-client.ts';
+import { startJobWorker } from '../../src/workers/job-start.ts';
 import { startSolveWorker } from '../../src/workers/start-worker.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
 import type { HmLeave } from '../hm-leave/hm-leave.ts';
 import type { HmPlate, PlateAxes } from '../hm-plate/hm-plate.ts';
 import type { PlateView } from '../hm-plate/plate-view.ts';
-import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
 import type { HalfmarkEvents, PageAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
 import '../hm-about/hm-about.ts';
 import '../hm-assumptions/hm-assumptions.ts';
 import '../hm-conditions/hm-conditions.ts';
+import '../hm-desk/hm-desk.ts';
 import '../hm-dialog/hm-dialog.ts';
 import '../hm-leave/hm-leave.ts';
-import '../hm-ledger/hm-ledger.ts';
 import '../hm-messages/hm-messages.ts';
 import '../hm-plate/hm-plate.ts';
 import '../hm-projects/hm-projects.ts';
 import '../hm-rail/hm-rail.ts';
-import '../hm-requirements/hm-requirements.ts';
 import '../hm-starters/hm-starters.ts';
 import '../hm-strip/hm-strip.ts';
 import '../hm-variables/hm-variables.ts';
@@ -77,7 +78,8 @@ export class HmApp extends LitElement {
   private desk!: ProjectDesk;
   private readonly remarks = new RemarkController(this);
   private readonly staleness = new StaleController(this);
-  private readonly judging = new JudgingController(this);
+  private readonly jobs = new JobClient(startJobWorker);
+  private readonly judging = new JudgingController(this, this.jobs.run);
   /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
   private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
@@ -130,6 +132,7 @@ export class HmApp extends LitElement {
     removeEventListener('beforeunload', this.warn);
     removeEventListener('keydown', this.key, { capture: true });
     this.solver.close();
+    this.jobs.close();
     const { keeper, store } = this;
     void keeper.close().finally(() => store.close());
   }
@@ -254,6 +257,10 @@ export class HmApp extends LitElement {
         return this.solver.cancel();
       case 'again':
         return this.session.askAgain();
+      case 'judge-stop':
+        return this.judging.stop();
+      case 'judge-again':
+        return void this.judging.judge(this.session.design);
       case 'keep-mine':
         return void this.keeper.keepMineAsCopy().then(() => this.say(`Kept as ${this.keeper.project.name}.`), () => this.say('The copy could not be saved: take the design away as a file.', true));
       case 'take-other':
@@ -330,7 +337,6 @@ export class HmApp extends LitElement {
     const { session, axes, choices } = this;
     const { result } = session.findings;
     const { chosen, depth_nm } = session.moment;
-    const view = session.view as { ledger?: LedgerView };
     const { style, plateView } = this.handed!;
     return html`<main>
       <div class="diagram">
@@ -355,15 +361,27 @@ export class HmApp extends LitElement {
           .dopants=${choices.dopants}
           .metals=${choices.metals}
         ></hm-strip>
-        <hm-requirements .design=${session.design} .complaints=${session.findings.complaints} .verdicts=${this.judging.verdicts} @requirements-stop=${() => this.judging.stop()}></hm-requirements>
       </div>
       <div class="givens">
         <hm-variables .design=${session.design} .complaints=${session.findings.complaints}></hm-variables>
         <hm-assumptions .design=${session.design}></hm-assumptions>
       </div>
       <div class="figures">
-        <h2 class="spoken">Ledger</h2>
-        <hm-ledger .result=${result} .view=${view.ledger ?? {}} .chosen=${chosen} .stale=${this.staleness.dim}></hm-ledger>
+        <h2 class="spoken">Figures, requirements, sizing</h2>
+        ${keyed(
+          this.keeper.project.id,
+          html`<hm-desk
+            .design=${session.design}
+            .complaints=${session.findings.complaints}
+            .result=${result}
+            .stale=${this.staleness.dim}
+            .view=${session.view}
+            .chosen=${chosen}
+            .verdicts=${this.judging.verdicts}
+            .run=${this.jobs.run}
+            .styleName=${style}
+          ></hm-desk>`,
+        )}
       </div>
     </main>`;
   }

@@ -1,8 +1,8 @@
 import type { ReactiveController, ReactiveControllerHost } from 'lit';
 import type { Design } from '../../src/design/types.ts';
 import type { Session } from '../../src/state/session.ts';
-import { JudgeClient } from '../../src/workers/judge-client.ts';
-import { startJudgeWorker } from '../../src/workers/start-worker.ts';
+import type { JobRun, RunJob } from '../../src/workers/job-client.ts';
+import type { JobValue } from '../../src/workers/job-messages.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 
 /** Quiet time after a solved design before its requirements are judged: a drag is not followed by a hundred runs, ms. */
@@ -12,25 +12,27 @@ const QUIET_MS = 500;
 export class JudgingController implements ReactiveController {
   verdicts: Verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
   readonly #host: ReactiveControllerHost;
-  readonly #client = new JudgeClient(startJudgeWorker);
+  readonly #start: RunJob;
+  #run: JobRun<JobValue<'judge'>> | null = null;
   #judged: Design | null = null;
   #timer: ReturnType<typeof setTimeout> | undefined;
 
-  constructor(host: ReactiveControllerHost) {
+  constructor(host: ReactiveControllerHost, start: RunJob) {
     this.#host = host;
+    this.#start = start;
     host.addController(this);
   }
 
   hostDisconnected(): void {
     clearTimeout(this.#timer);
-    this.#client.cancel();
+    this.stop();
   }
 
   /** To be told whenever the session's findings change. */
   follow({ design, findings }: Session): void {
     if (design === this.#judged) return;
     clearTimeout(this.#timer);
-    this.#client.cancel();
+    this.stop();
     this.#judged = null;
     if ((design.requirements ?? []).length === 0) return this.#become({ status: 'initial', rows: [], stale: false, progress: null });
     this.#become({ stale: this.verdicts.rows.length > 0, progress: null, status: findings.status === 'error' ? 'error' : 'pending', reason: findings.status === 'error' ? 'The design has no result.' : null });
@@ -39,16 +41,19 @@ export class JudgingController implements ReactiveController {
 
   /** The person does not want to wait. */
   stop(): void {
-    this.#client.cancel();
+    this.#run?.cancel();
   }
 
   async judge(design: Design): Promise<void> {
     this.#judged = design;
     this.#become({ status: 'pending', progress: { done: 0, of: 1 }, reason: null });
-    const outcome = await this.#client.judge(design, (done, of) => this.#become({ progress: { done, of } }));
-    // Another design has taken its place.
-    if (this.#judged !== design) return;
-    if (outcome.kind === 'judged' && outcome.judgement.kind === 'judged') return this.#become({ status: 'complete', rows: outcome.judgement.requirements, stale: false, progress: null });
+    this.#run?.cancel();
+    const run = this.#start('judge', { design }, ({ done, of }) => this.#become({ progress: { done, of } }));
+    this.#run = run;
+    const outcome = await run.outcome;
+    // Another run has taken its place.
+    if (this.#run !== run || this.#judged !== design) return;
+    if (outcome.kind === 'done' && outcome.value.kind === 'judged') return this.#become({ status: 'complete', rows: outcome.value.requirements, stale: false, progress: null });
     const reason = outcome.kind === 'fault' ? `The program itself failed while judging (${outcome.message}).` : outcome.kind === 'dropped' ? 'Judging was stopped.' : 'The design has no result.';
     this.#become({ status: 'error', progress: null, reason });
   }

@@ -1,70 +1,68 @@
 import { css } from 'lit';
 
 export const styles = css`
-  h2 {
-    font-size: 0.9375rem;
-    font-weight: 600;
-    margin: 0 0 0.25rem;
-    border-bottom: 1px solid var(--ink);
-  }
-  h3 {
-    font-size: 0.875rem;
-    font-weight: 600;
-    margin: 0;
-    overflow-wrap: anywhere;
-  }
   p {
     margin: 0.2rem 0;
   }
-  ul {
+  ol {
     list-style: none;
     margin: 0;
     padding: 0;
+    border-top: 1px solid var(--ink);
+  }
+  ol:empty {
+    border: 0;
   }
   li {
-    display: flex;
-    flex-wrap: wrap;
-    gap: 0.25rem 1.5rem;
-    padding: 0.35rem 0;
+    display: grid;
+    grid-template-columns: minmax(0, 1fr) minmax(0, 24rem) max-content;
+    gap: 0.25rem 1.25rem;
+    align-items: start;
+    padding: 0.4rem 0;
     border-bottom: 1px solid var(--line);
   }
-  li > div {
-    flex: 1 1 24rem;
-    min-width: 0;
-  }
-  .row {
+  .sentence {
     display: flex;
     flex-wrap: wrap;
-    align-items: flex-end;
-    gap: 0.25rem 0.6rem;
-    --field-width: 9rem;
+    align-items: baseline;
+    gap: 0.3rem 0.4rem;
+    min-width: 0;
+    --field-width: 8.5rem;
   }
-  .row button,
+  .number {
+    min-width: 1.2em;
+    font-weight: 600;
+  }
+  .acts {
+    display: flex;
+    flex-wrap: wrap;
+    justify-content: flex-end;
+    gap: 0.3rem 0.4rem;
+  }
+  button,
   select {
     min-height: 28px;
   }
   select {
-    max-width: 100%;
+    max-width: min(100%, 17rem);
+    /* As wide as the choice, where browsers know it: the row reads as a sentence. */
+    field-sizing: content;
   }
-  .check {
-    display: inline-flex;
-    align-items: center;
-    gap: 0.35rem;
-    min-height: 28px;
-  }
-  .check input {
-    width: 18px;
-    height: 18px;
-    min-height: 0;
-    accent-color: var(--choice);
+  .size {
+    border-color: var(--choice);
+    border-width: 2px;
   }
   .state,
   .doc,
   .worst {
     color: var(--faint);
   }
+  .doc {
+    font-size: 0.8125rem;
+  }
   .state {
     display: flex;
+    flex-wrap: wrap;
     align-items: center;
     gap: 0.5rem;
     min-height: 28px;
@@ -74,10 +72,11 @@ export const styles = css`
     accent-color: var(--choice);
   }
   .verdict {
-    display: flex;
-    flex-wrap: wrap;
+    display: grid;
+    grid-template-columns: max-content minmax(0, 1fr);
     align-items: center;
-    gap: 0.15rem 0.6rem;
+    gap: 0.1rem 0.6rem;
+    padding-top: 0.2rem;
   }
   .met strong::before {
     content: '✓ ';
@@ -94,21 +93,58 @@ export const styles = css`
     content: '? ';
   }
   .bar {
+    width: 102px;
     color: var(--conduction);
   }
   .not-met .bar {
     color: var(--trouble);
   }
+  .limit {
+    stroke: var(--ink);
+    stroke-width: 2;
+  }
   .worst {
-    flex-basis: 100%;
+    grid-column: 2;
     overflow-wrap: anywhere;
+  }
+  .wrong {
+    font-size: 0.8125rem;
   }
   .stale .verdict {
     font-style: italic;
     color: var(--faint);
   }
-  summary {
-    cursor: pointer;
-    min-height: 24px;
+  .stale .bar {
+    opacity: 0.6;
+  }
+  fieldset {
+    border: 0;
+    margin: 0.6rem 0 0;
+    padding: 0;
+    min-width: 0;
+  }
+  legend {
+    padding: 0;
+    color: var(--faint);
+    font-size: 0.8125rem;
+  }
+  @container (max-width: 64rem) {
+    li {
+      grid-template-columns: minmax(0, 1fr) max-content;
+    }
+    .sentence {
+      grid-column: 1 / -1;
+    }
+  }
+  @container (max-width: 34rem) {
+    li {
+      grid-template-columns: minmax(0, 1fr);
+    }
+    .acts {
+      justify-content: flex-start;
+    }
+  }
+  :host {
+    container-type: inline-size;
   }
 `;

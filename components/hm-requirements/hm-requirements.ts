@@ -1,16 +1,17 @@
-import { LitElement, html, nothing, svg, type TemplateResult } from 'lit';
+import { LitElement, html, nothing, svg, type PropertyValues, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
-import { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantityName } from '../../src/design/requirement-quantities.ts';
+import { requirementQuantity, type RequirementQuantityName } from '../../src/design/requirement-quantities.ts';
 import type { Design, Requirement } from '../../src/design/types.ts';
+import { quantityOf, quantityWords } from '../../src/requirements/limits.ts';
 import { marginWords, verdictWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
-import { addRequirement, removeRequirement, setRequirement } from '../../src/state/commands/index.ts';
-import { complaintsWithin } from '../shared/complaint-at.ts';
+import { addRequirement, removeRequirement, setRequirement, setRequirementQuantity } from '../../src/state/commands/index.ts';
+import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import '../hm-field/hm-field.ts';
-import { marginShare, targetsOf } from './requirement-parts.ts';
+import { TURNS, boundsOf, firstLimit, fitting, marginShare, quantityGroups, targetsOf, turned } from './requirement-parts.ts';
 import { styles } from './hm-requirements.styles.ts';
 
 /** How it stands with judging. */
@@ -22,137 +23,180 @@ export interface Verdicts {
   /** why there are no newer ones, in words */ reason: string | null;
 }
 
-const BOUNDS = ['max', 'min'] as const;
+export const NO_VERDICTS: Verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
+
+const value = (event: Event): string => (event.target as HTMLSelectElement).value;
 
 /**
- * The requirements: a row each with its limit, the worst case over temperatures and tolerances, its margin as a bar and in words, met or not.
+ * The requirements, each a sentence that can be edited: what, of which part, at most or at least how much, at which temperatures. Beside it the worst case over
+ * temperatures and tolerances, the margin as a bar and in words, met or not.
  *
  * @fires hm-edit
- * @fires requirements-stop  the person does not want to wait for the verdicts
+ * @fires hm-size  a variable is to be sized so that this requirement is met
+ * @fires hm-act   'judge-stop', 'judge-again'
  */
 export class HmRequirements extends LitElement {
   static override styles = [look, styles];
-  static override properties = { design: { attribute: false }, complaints: { attribute: false }, verdicts: { attribute: false }, quantity: { state: true }, of: { state: true } };
+  static override properties = { design: { attribute: false }, complaints: { attribute: false }, verdicts: { attribute: false }, draft: { state: true } };
 
   declare design: Design | null;
   declare complaints: readonly Complaint[];
   declare verdicts: Verdicts;
-  /** of the one to be added */ declare private quantity: RequirementQuantityName;
-  declare private of: string;
+  /** the one to be added */ declare private draft: Requirement;
 
   constructor() {
     super();
     this.design = null;
     this.complaints = [];
-    this.verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
-    this.quantity = 'contactResistivity';
-    this.of = '';
+    this.verdicts = NO_VERDICTS;
+    this.draft = { quantity: 'contactResistivity', of: 'top', ...firstLimit('contactResistivity') };
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    if (!changed.has('design') || this.design === null) return;
+    // The layer that it was for may have gone or have another name.
+    const { draft } = this;
+    const targets = targetsOf(this.design, draft.quantity as RequirementQuantityName);
+    if (targets.length > 0 && !targets.some((target) => target.value === draft.of)) this.draft = { ...draft, of: targets[0].value };
   }
 
   private edit(i: number, change: Partial<Requirement>, label: string): void {
     tell(this, 'hm-edit', { next: setRequirement(this.design!, i, change), label });
   }
 
+  private ask(i: number, requirement: Requirement, quantity: RequirementQuantityName): void {
+    const instead = fitting(this.design!, requirement, quantity);
+    if (instead !== null) tell(this, 'hm-edit', { next: setRequirementQuantity(this.design!, i, quantity, instead), label: `quantity of a requirement` });
+  }
+
   private add(): void {
-    const { kind, unit, usual } = requirementQuantity(this.quantity);
-    const targets = targetsOf(this.design!, this.quantity);
-    const of = targets.some(({ value }) => value === this.of) ? this.of : targets[0]?.value;
-    if (of === undefined) return;
-    const bound = usual === 'max' ? 'max' : 'min';
-    const over = this.design!.conditions.temperatureRange === undefined ? {} : ({ over: 'temperatureRange' } as const);
-    tell(this, 'hm-edit', { next: addRequirement(this.design!, { quantity: this.quantity, of, [bound]: kind === 'flag' ? true : `1 ${unit}`.trim(), ...over }), label: 'new requirement' });
+    tell(this, 'hm-edit', { next: addRequirement(this.design!, this.draft), label: 'new requirement' });
   }
 
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
     const { requirements = [] } = this.design;
     let at = 0;
-    return html`<h2>Requirements</h2>
-      ${requirements.length === 0 ? html`<p>None yet. Each is held over the temperature range and all tolerances.</p>` : nothing}
+    return html`${requirements.length === 0 ? html`<p>None yet. A requirement is held in its worst case: over the temperature range, if you say so, and over all tolerances.</p>` : nothing}
       ${this.renderState(requirements.length)}
-      <ul class=${this.verdicts.stale ? 'stale' : ''}>
+      <ol class=${this.verdicts.stale ? 'stale' : ''}>
         ${requirements.map((requirement, i) => {
-          const bounds = BOUNDS.filter((bound) => requirement[bound] !== undefined);
-          const rows = this.verdicts.rows.slice(at, (at += bounds.length));
-          return this.renderRequirement(requirement, i, bounds, rows.every((row) => row.quantity === requirement.quantity && row.of === requirement.of) ? rows : []);
+          const count = boundsOf(requirement).length;
+          const rows = this.verdicts.rows.slice(at, (at += count));
+          return this.renderRequirement(requirement, i, rows.every((row) => row.quantity === requirement.quantity && row.of === requirement.of) ? rows : []);
         })}
-      </ul>
+      </ol>
+      ${requirements.length === 0 ? nothing : html`<p class="doc">Bars: the limit in the middle, met to the right of it; half a bar is a factor of ten, or a difference as large as the limit.</p>`}
       ${this.renderAdd()}`;
   }
 
   private renderState(count: number): TemplateResult | typeof nothing {
     const { status, progress, stale, reason } = this.verdicts;
     if (count === 0) return nothing;
-    if (progress !== null) {
-      return html`<p class="state"><progress aria-label="Judging" max=${progress.of} .value=${progress.done}></progress> <button type="button" @click=${() => this.dispatchEvent(new CustomEvent('requirements-stop'))}>Stop</button></p>`;
-    }
-    if (status === 'error') return html`<p class="state" role="status">${reason}${stale ? ' Verdicts are of the stack before the last change.' : ''}</p>`;
-    if (status !== 'complete') return html`<p class="state">Not judged yet.</p>`;
+    const act = (name: 'judge-stop' | 'judge-again', words: string): TemplateResult => html`<button type="button" @click=${() => tell(this, 'hm-act', { act: name })}>${words}</button>`;
+    const older = stale ? ' Verdicts are of the stack before the last change.' : '';
+    if (progress !== null) return html`<p class="state"><progress aria-label="Judging" max=${progress.of} .value=${progress.done}></progress> Judging the worst case.${older} ${act('judge-stop', 'Stop')}</p>`;
+    if (status === 'error') return html`<p class="state"><span role="status">${reason}${older}</span> ${act('judge-again', 'Judge again')}</p>`;
+    if (status !== 'complete') return html`<p class="state">Not judged yet.${older}</p>`;
     const met = this.verdicts.rows.filter((row) => row.met).length;
-    return html`<p class="state" role="status">${met} of ${this.verdicts.rows.length} met.</p>`;
+    return html`<p class="state" role="status">${met === this.verdicts.rows.length ? (met === 1 ? 'The one there is is met' : `All ${met} met`) : `${met} of ${this.verdicts.rows.length} met`}, judged in the worst case over temperatures and tolerances.</p>`;
   }
 
-  private renderRequirement(requirement: Requirement, i: number, bounds: ('max' | 'min')[], rows: readonly RequirementResult[]): TemplateResult {
-    const known = requirement.quantity in REQUIREMENT_QUANTITIES ? requirementQuantity(requirement.quantity as RequirementQuantityName) : null;
-    const name = `${known?.words ?? requirement.quantity} of ${requirement.of}`;
-    const wrong = complaintsWithin(this.complaints, `requirements[${i}]`);
+  private renderRequirement(requirement: Requirement, i: number, rows: readonly RequirementResult[]): TemplateResult {
+    const name = quantityWords(requirement);
+    const path = `requirements[${i}]`;
+    const wrong = complaintsWithin(this.complaints, path, [`${path}.max`, `${path}.min`]);
+    const unmet = rows.some((row) => !row.met);
     return html`<li>
-      <div>
-        <h3>${name}</h3>
-        <div class="row">
-          ${bounds.map((bound) => this.renderLimit(requirement, i, bound, name, known?.unit ?? ''))}
-          <label class="check"><input type="checkbox" .checked=${requirement.over === 'temperatureRange'} @change=${(e: Event) => this.edit(i, { over: (e.target as HTMLInputElement).checked ? 'temperatureRange' : undefined }, `temperatures of a requirement`)} />over the temperature range</label>
-          <button type="button" @click=${() => tell(this, 'hm-edit', { next: removeRequirement(this.design!, i), label: `requirement ${name} taken out` })}>Take out<span class="spoken">: ${name}</span></button>
-        </div>
+      <div class="sentence" role="group" aria-label="Requirement ${i + 1}: ${name}">
+        <span class="number" aria-hidden="true">${i + 1}</span>
+        ${this.renderQuantity(requirement, (quantity) => this.ask(i, requirement, quantity))}
+        ${this.renderOf(requirement, (of) => this.edit(i, { of }, `place of a requirement`))}
+        ${boundsOf(requirement).map((bound) => this.renderLimit(requirement, bound, complaintAt(this.complaints, `${path}.${bound}`), (change) => this.edit(i, change, `limit of ${name}`)))}
+        ${this.renderOver(requirement, (over) => this.edit(i, { over }, 'temperatures of a requirement'))}
       </div>
-      <div>${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row))}</div>
+      <div class="outcome">${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row, rows.length > 1))}</div>
+      <div class="acts">
+        ${unmet && !this.verdicts.stale ? html`<button type="button" class="size" @click=${() => tell(this, 'hm-size', { requirement: i })}>Size a variable to meet this<span class="spoken">: ${name}</span></button>` : nothing}
+        <button type="button" @click=${() => tell(this, 'hm-edit', { next: removeRequirement(this.design!, i), label: `requirement ${name} taken out` })}>Take out<span class="spoken">: ${name}</span></button>
+      </div>
     </li>`;
   }
 
-  private renderLimit(requirement: Requirement, i: number, bound: 'max' | 'min', name: string, unit: string): TemplateResult {
-    const limit = requirement[bound]!;
-    const words = bound === 'max' ? 'At most' : 'At least';
-    if (typeof limit === 'boolean') {
-      return html`<label>Is to be
-        <select @change=${(e: Event) => this.edit(i, { [bound]: (e.target as HTMLSelectElement).value === 'yes' }, `limit of ${name}`)}>
-          <option value="yes" .selected=${limit}>so</option><option value="no" .selected=${!limit}>not so</option>
-        </select>
-      </label>`;
-    }
-    return html`<hm-field .label=${words} .unit=${unit} .value=${limit} @field-accept=${(e: CustomEvent<string>) => this.edit(i, { [bound]: e.detail }, `limit of ${name}`)}></hm-field>
-      <button type="button" title="turn the limit about" @click=${() => this.edit(i, bound === 'max' ? { max: undefined, min: limit } : { min: undefined, max: limit }, `limit of ${name}`)}>${bound === 'max' ? 'make it the least' : 'make it the most'}</button>`;
+  private renderQuantity(requirement: Requirement, choose: (quantity: RequirementQuantityName) => void): TemplateResult {
+    const known = quantityOf(requirement.quantity) !== null;
+    return html`<select aria-label="Quantity" @change=${(e: Event) => choose(value(e) as RequirementQuantityName)}>
+      ${known ? nothing : html`<option .value=${requirement.quantity} selected>${requirement.quantity} (unknown)</option>`}
+      ${quantityGroups().map(
+        ({ of, quantities }) => html`<optgroup label="of a ${of}">${quantities.map(({ name, words }) => html`<option value=${name} .selected=${name === requirement.quantity}>${words}</option>`)}</optgroup>`,
+      )}
+    </select>`;
   }
 
-  private renderVerdict(row: RequirementResult): TemplateResult {
+  private renderOf(requirement: Requirement, choose: (of: string) => void): TemplateResult {
+    const known = quantityOf(requirement.quantity);
+    const targets = known === null ? [] : targetsOf(this.design!, known.name);
+    const there = targets.some((target) => target.value === requirement.of);
+    return html`<span>of</span> <select aria-label="of" @change=${(e: Event) => choose(value(e))}>
+      ${there ? nothing : html`<option .value=${requirement.of} selected>${requirement.of} (not there)</option>`}
+      ${targets.map((target) => html`<option .value=${target.value} .selected=${target.value === requirement.of}>${target.text}</option>`)}
+    </select>`;
+  }
+
+  private renderLimit(requirement: Requirement, bound: 'max' | 'min', complaint: string | null, change: (change: Partial<Requirement>) => void): TemplateResult {
+    const limit = requirement[bound]!;
+    const flag = typeof limit === 'boolean';
+    const turns = TURNS.filter((turn) => turn.bound === bound || requirement[turn.bound] === undefined);
+    return html`<select aria-label="Limit is" @change=${(e: Event) => change(turned(requirement, bound, value(e) as 'max' | 'min'))}>
+        ${turns.map((turn) => html`<option value=${turn.bound} .selected=${turn.bound === bound}>${flag ? turn.flag : turn.words}</option>`)}
+      </select>
+      ${flag
+        ? complaint === null ? nothing : html`<p class="wrong">${complaint}</p>`
+        : html`<hm-field label-hidden .label=${bound === 'max' ? 'At most' : 'At least'} .unit=${quantityOf(requirement.quantity)?.unit ?? ''} .value=${limit} .complaint=${complaint} @field-accept=${(e: CustomEvent<string>) => change({ [bound]: e.detail })}></hm-field>`}`;
+  }
+
+  private renderOver(requirement: Requirement, choose: (over: Requirement['over']) => void): TemplateResult {
+    const { temperature, temperatureRange } = this.design!.conditions;
+    const ranges = requirement.over === 'temperatureRange';
+    return html`<select aria-label="Temperatures" @change=${(e: Event) => choose(value(e) === 'range' ? 'temperatureRange' : undefined)}>
+      <option value="one" .selected=${!ranges}>at ${temperature}</option>
+      ${temperatureRange === undefined && !ranges ? nothing : html`<option value="range" .selected=${ranges}>${temperatureRange === undefined ? 'over a range that is not given' : `from ${temperatureRange[0]} to ${temperatureRange[1]}`}</option>`}
+    </select>`;
+  }
+
+  private renderVerdict(row: RequirementResult, named: boolean): TemplateResult {
     const verdict = verdictWords(row);
     const share = marginShare(row);
-    const worst = row.worst === null || row.at === null ? '' : `worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : `${writeNumber(row.worst, 3)} ${row.unit}`} at ${row.at.words}`;
-    return html`<p class="verdict ${verdict.replace(' ', '-')}">
-      <span><strong>${verdict}</strong>, margin ${marginWords(row)}</span>
-      ${share === null ? nothing : html`<svg class="bar" viewBox="-50 0 100 8" width="100" height="8" aria-hidden="true">${svg`<rect x=${Math.min(0, 50 * share)} y="1" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M-50 4H50M0 0V8" stroke="currentColor" fill="none"></path>`}</svg>`}
-      <span class="worst">${worst}${row.unanswered === null ? '' : `; no answer at ${row.unanswered.words}: ${row.unanswered.reason}`}</span>
-    </p>`;
+    const worst = row.worst === null || row.at === null ? '' : `worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : `${writeNumber(row.worst, 3)} ${row.unit}`.trim()} at ${row.at.words}`;
+    const points = row.unanswered?.points ?? 0;
+    return html`<div class="verdict ${verdict.replace(' ', '-')}">
+      ${share === null ? html`<span class="bar"></span>` : html`<svg class="bar" viewBox="-51 0 102 12" width="102" height="12" aria-hidden="true">${svg`<path d="M-50 6H50M-50 3V9M50 3V9" stroke="currentColor" fill="none" opacity="0.5"></path><rect x=${Math.min(0, 50 * share)} y="3" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M0 0V12" class="limit" fill="none"></path>`}</svg>`}
+      <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, margin ${marginWords(row)}</span>
+      <span class="worst">${worst}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === '' ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${row.unanswered.words}: ${row.unanswered.reason}`}</span>
+    </div>`;
   }
 
   private renderAdd(): TemplateResult {
-    const targets = targetsOf(this.design!, this.quantity);
-    return html`<details>
-      <summary>Add a requirement</summary>
-      <div class="row">
-        <label>Quantity
-          <select @change=${(e: Event) => (this.quantity = (e.target as HTMLSelectElement).value as RequirementQuantityName)}>
-            ${Object.entries(REQUIREMENT_QUANTITIES).map(([name, { words }]) => html`<option value=${name} .selected=${name === this.quantity}>${words}</option>`)}
-          </select>
-        </label>
-        <label>of
-          <select @change=${(e: Event) => (this.of = (e.target as HTMLSelectElement).value)}>
-            ${targets.map(({ value, text }) => html`<option value=${value} .selected=${value === this.of}>${text}</option>`)}
-          </select>
-        </label>
-        <button type="button" ?disabled=${targets.length === 0} @click=${this.add}>Add</button>
+    const { draft } = this;
+    const quantity = draft.quantity as RequirementQuantityName;
+    const change = (part: Partial<Requirement>): void => {
+      const next = { ...this.draft, ...part };
+      for (const key of ['max', 'min', 'over'] as const) if (next[key] === undefined) delete next[key];
+      this.draft = next;
+    };
+    const choose = (name: RequirementQuantityName): void => {
+      const { max: _, min: __, ...rest } = this.draft;
+      this.draft = { ...rest, ...firstLimit(name), quantity: name, of: targetsOf(this.design!, name).some((target) => target.value === draft.of) ? draft.of : (targetsOf(this.design!, name)[0]?.value ?? draft.of) };
+    };
+    const [bound] = boundsOf(draft);
+    return html`<fieldset class="add">
+      <legend>Another requirement</legend>
+      <div class="sentence">
+        ${this.renderQuantity(draft, choose)} ${this.renderOf(draft, (of) => change({ of }))} ${this.renderLimit(draft, bound, null, change)} ${this.renderOver(draft, (over) => change({ over }))}
+        <button type="button" ?disabled=${targetsOf(this.design!, quantity).length === 0} @click=${this.add}>Add</button>
       </div>
-      <p class="doc">${requirementQuantity(this.quantity).doc}</p>
-    </details>`;
+      <p class="doc">${requirementQuantity(quantity).doc}</p>
+    </fieldset>`;
   }
 }
 

@@ -12,7 +12,7 @@ export interface Tick {
 }
 
 /** Most decades that a factor is shown to: what lies farther off is off the picture, and said to be. */
-const MOST = Math.log(1e4);
+const MOST = Math.log(1e3);
 /** Least of the picture on both sides of the limit, so that a line near it is seen to be near. */
 const LEAST = Math.log(2);
 

@@ -55,6 +55,8 @@ export function lineCode(index: number, style: Style): { dash?: string; width: n
 
 /** Below this width the curves' ends bear numbers and no words, px. */
 const NARROW = 620;
+/** Room for the axis on the right, of the text size. */
+const SECOND = 5.8;
 
 /**
  * Margins against a variable: every requirement a curve, the limit a line, the intervals in which all are met shaded, the best point a diamond. Factors
@@ -71,13 +73,13 @@ export function drawMarginPlot(picture: MarginPicture, options: MarginPlotOption
   const narrow = width < NARROW * (style.textSize / 12);
   const measures = axesOf(curves);
   const labelRoom = narrow ? 2.2 * small : Math.min(0.28 * width, 20 * small);
-  const area = { left: 5.2 * small, right: width - labelRoom - (measures.length > 1 ? 4.6 * small : 0.6 * small), top: 4.6 * small, bottom: height - 3.6 * small };
+  const area = { left: 5.2 * small, right: width - labelRoom - (measures.length > 1 ? SECOND * small : 0.6 * small), top: 4.6 * small, bottom: height - 3.6 * small };
   if (!(area.right - area.left >= 60 && area.bottom - area.top >= 60)) throw new RangeError(`no room for a picture of margins: ${width} by ${height} px`);
   const scores = curves.flatMap(({ points }) => points.flatMap(({ score }) => (score === null ? [] : [score])));
   const window = scoreWindow(scores, picture.best?.score ?? null);
   const x = (value: number): number => area.left + (area.right - area.left) * (scale === 'log' ? Math.log(value / from) / Math.log(to / from) : (value - from) / (to - from));
   const y = (score: number): number => area.bottom - ((score - window[0]) / (window[1] - window[0])) * (area.bottom - area.top);
-  const frame: Frame = { picture, style, small, area, x, y, window, clip: `${prefix}-area`, narrow, labelX: area.right + (measures.length > 1 ? 4.6 * small : 6), labelRoom: labelRoom - 8 };
+  const frame: Frame = { picture, style, small, area, x, y, window, clip: `${prefix}-area`, narrow, labelX: area.right + (measures.length > 1 ? SECOND * small + 4 : 6), labelRoom: labelRoom - 8 };
   return {
     width, height, background: style.ground, font: style.font, gradients: [],
     clips: [{ id: frame.clip, x: area.left, y: area.top, w: area.right - area.left, h: area.bottom - area.top }],
@@ -186,8 +188,9 @@ function marks({ picture, style, small, area, x, y }: Frame): Shape[] {
     shapes.push({ kind: 'path', role: 'margin-best', title: `least margin largest at ${best.text}`, d: `M${px(bx)},${px(by - 6)}L${px(bx + 6)},${px(by)}L${px(bx)},${px(by + 6)}L${px(bx - 6)},${px(by)}Z`, fill: style.ground, stroke: style.choice, width: 2 });
   }
   for (const end of intervals.flatMap(({ from, to }) => (from.value === to.value ? [from] : [from, to]))) {
-    upright('margin-end', end.value, figure('margin-end-figure', x(end.value), end.text, style.ink), { stroke: style.ink, width: style.thinWidth });
+    // The end of the range is on the axis already.
     if (end.curve === null) continue;
+    upright('margin-end', end.value, figure('margin-end-figure', x(end.value), end.text, style.ink), { stroke: style.ink, width: style.thinWidth });
     shapes.push({ kind: 'rect', role: 'margin-closed', title: `${end.curve + 1} ends the interval at ${end.text}`, x: x(end.value) - 3.5, y: y(0) - 3.5, w: 7, h: 7, fill: style.ground, stroke: style.ink, width: 1.5 });
     shapes.push({ kind: 'text', role: 'margin-closed-by', x: x(end.value) + 7, y: y(0) + 1.15 * small, size: small, anchor: 'start', runs: [{ text: String(end.curve + 1) }], fill: style.ink, weight: 'bold' });
   }
@@ -222,7 +225,7 @@ function axes({ picture, style, small, area, x, y, window }: Frame, measures: re
       shapes.push(text('margin-tick', { x: side + 7 * out, y: at + 0.36 * small }, out < 0 ? 'end' : 'start', tick.runs));
     }
     const title: TextRun[] = measure.kind === 'ratio' ? [{ text: 'margin, times' }] : [{ text: `margin${measure.unit === '' ? '' : ', '}` }, ...unitRuns(measure.unit)];
-    shapes.push(text('margin-title', { x: i === 0 ? 1.1 * small : side + 4.1 * small, y: (area.top + area.bottom) / 2 }, 'middle', title, -90));
+    shapes.push(text('margin-title', { x: i === 0 ? 1.1 * small : side + (SECOND - 0.6) * small, y: (area.top + area.bottom) / 2 }, 'middle', title, -90));
   });
   return shapes;
 }

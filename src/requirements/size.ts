@@ -33,9 +33,12 @@ export interface LookedAt {
   scores: (number | null)[];
 }
 
-/** What a running search can tell: how far it is, and the value just looked at. */
+/** The range that is searched, as it was read from the texts. */
+export type SearchedRange = Pick<SizedAnswer, 'variable' | 'unit' | 'scale' | 'from' | 'to'>;
+
+/** What a running search can tell: how far it is; at first the range, then each value just looked at. */
 export interface SizeProgress extends Progress {
-  seen?: LookedAt;
+  seen?: SearchedRange | LookedAt;
 }
 
 /** Where an interval ends, and why. */
@@ -105,6 +108,7 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Size
     }
     return grown;
   };
+  yield { ...progress(), seen: { variable: variable.name, unit: variable.unit, scale: variable.scale, from: variable.from, to: variable.to } };
   const middle = variable.scale === 'log' ? Math.sqrt(variable.from * variable.to) : (variable.from + variable.to) / 2;
   yield* judgeAll([variable.from, middle, variable.to]);
   let found: Sizing;

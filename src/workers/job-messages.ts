@@ -1,6 +1,6 @@
 import type { Design } from '../design/types.ts';
 import type { JudgeOptions, Judgement } from '../requirements/judge.ts';
-import type { LookedAt, SizeOptions, SizeResult } from '../requirements/size.ts';
+import type { LookedAt, SearchedRange, SizeOptions, SizeResult } from '../requirements/size.ts';
 
 /**
  * The long computations that a panel of the page can start. A further kind is a row here and a row in job-kinds.ts. Everything in it survives a structured
@@ -8,7 +8,7 @@ import type { LookedAt, SizeOptions, SizeResult } from '../requirements/size.ts'
  */
 export interface Jobs {
   judge: { input: { design: Design; options?: Omit<JudgeOptions, 'warmStart'> }; value: Judgement; seen: never };
-  size: { input: { design: Design; options: SizeOptions }; value: SizeResult; seen: LookedAt };
+  size: { input: { design: Design; options: SizeOptions }; value: SizeResult; seen: LookedAt | SearchedRange };
 }
 
 export type JobKind = keyof Jobs;

@@ -1,12 +1,6 @@
 import type { WorkerSide } from './client.ts';
-import type { JudgeSide } from './judge-client.ts';
 
 /** Starts the worker that solves. The builder reads this very form of the address. */
 export function startSolveWorker(): WorkerSide {
   return new Worker(new URL('./solve-worker.ts', import.meta.url), { type: 'module', name: 'solver' });
-}
-
-/** Starts a worker that judges requirements. */
-export function startJudgeWorker(): JudgeSide {
-  return new Worker(new URL('./judge-worker.ts', import.meta.url), { type: 'module', name: 'judge' });
 }

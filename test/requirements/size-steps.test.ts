@@ -1,21 +1,25 @@
 import { describe, expect, it } from 'vitest';
-import { size, sizeSteps, type LookedAt, type SizeOptions } from '../../src/requirements/size.ts';
+import { size, sizeSteps, type LookedAt, type SearchedRange, type SizeOptions } from '../../src/requirements/size.ts';
 import { contactDesign } from './designs.ts';
 
 const design = () => contactDesign((d) => { d.requirements = [{ quantity: 'sheetResistance', of: 'cap', max: '250 ohm' }]; });
 const options: SizeOptions = { variable: 'tcap', tolerances: 'none', samples: 0, points: 9 };
 
 describe('a sizing under way', () => {
-  it('tells each value that it has looked at, and those are the values of its scan', () => {
+  it('tells the range first, then each value that it has looked at, and those are the values of its scan', () => {
     const steps = sizeSteps(design(), options);
     const seen: LookedAt[] = [];
+    let range: SearchedRange | null = null;
     for (;;) {
       const step = steps.next();
       if (!step.done) {
-        if (step.value.seen) seen.push(step.value.seen);
+        if (step.value.seen && 'value' in step.value.seen) seen.push(step.value.seen);
+        else if (step.value.seen) range = seen.length === 0 ? step.value.seen : null;
         continue;
       }
       if (step.value.kind !== 'sized') throw new Error('not sized');
+      const { variable, unit, scale, from, to } = step.value;
+      expect(range).toEqual({ variable, unit, scale, from, to });
       expect(new Set(seen.map(({ value }) => value))).toEqual(new Set(step.value.scan.map(({ value }) => value)));
       break;
     }

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import type { Design } from '../../src/design/types.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import { limitWords, writtenLimits } from '../../src/requirements/limits.ts';
 import { judge } from '../../src/requirements/judge.ts';
@@ -9,7 +10,7 @@ import { designFixture } from './design-fixture.ts';
 const REQUIREMENTS = [{ quantity: 'contactResistivity', of: 'top', max: '1e-6 ohm cm^2' }, { quantity: 'fullyDepleted', of: 'spacer', min: true }];
 
 describe('a variable made of a value in the stack', () => {
-  const design = { ...designFixture(), requirements: REQUIREMENTS };
+  const design: Design = { ...designFixture(), requirements: REQUIREMENTS };
 
   it('takes over its text, and its name stands in its place', () => {
     const next = makeVariable(design, { layer: 2, part: 'concentration', row: 0 }, 'N_buffer', { range: ['1e14 cm^-3', '1e16 cm^-3'] });

@@ -1,0 +1,58 @@
+import { html, type TemplateResult } from 'lit';
+import type { Complaint } from '../../src/design/complaint.ts';
+import type { Design } from '../../src/design/types.ts';
+import type { Result } from '../../src/result/types.ts';
+import type { RunJob } from '../../src/workers/job-client.ts';
+import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
+import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
+import type { SizingView } from '../hm-sizing/sizing-view.ts';
+import type { HalfmarkEvents } from '../shared/events.ts';
+
+/** Everything that a panel may be handed. Each takes what it shows and fires the page's own events. */
+export interface DeskContext {
+  design: Design;
+  complaints: readonly Complaint[];
+  result: Result | null;
+  /** the result belongs to an earlier design */ stale: boolean;
+  /** of the project; a panel keeps entries under its own key and changes them by hm-view */ view: Readonly<Record<string, unknown>>;
+  chosen: HalfmarkEvents['hm-choose'];
+  verdicts: Verdicts;
+  /** starts a job in a worker of its own */ run: RunJob;
+  /** 'light' or 'dark', for drawings */ styleName: 'light' | 'dark';
+  /** requirement that a variable is to be sized for, counted anew at each wish; null before the first */ sizeFor: { requirement: number; wish: number } | null;
+}
+
+/** A panel of the desk. A further one is a row here: its element is fetched when its tab is first opened. */
+export interface DeskPanel {
+  id: string;
+  title: string;
+  load(): Promise<unknown>;
+  draw(context: DeskContext): TemplateResult;
+  /** a short remark behind the title, for what must be seen while another tab is open */ remark?(context: DeskContext): { text: string; trouble: boolean } | null;
+}
+
+export const DESK_PANELS: readonly DeskPanel[] = [
+  {
+    id: 'ledger',
+    title: 'Ledger',
+    load: () => import('../hm-ledger/hm-ledger.ts'),
+    draw: ({ result, view, chosen, stale }) => html`<hm-ledger .result=${result} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale}></hm-ledger>`,
+  },
+  {
+    id: 'requirements',
+    title: 'Requirements',
+    load: () => import('../hm-requirements/hm-requirements.ts'),
+    draw: ({ design, complaints, verdicts }) => html`<hm-requirements .design=${design} .complaints=${complaints} .verdicts=${verdicts}></hm-requirements>`,
+    remark: ({ verdicts: { rows, stale, status } }) => {
+      if (rows.length === 0 || stale || status !== 'complete') return null;
+      const unmet = rows.filter((row) => !row.met).length;
+      return unmet === 0 ? { text: 'all met', trouble: false } : { text: `${unmet} not met`, trouble: true };
+    },
+  },
+  {
+    id: 'sizing',
+    title: 'Sizing',
+    load: () => import('../hm-sizing/hm-sizing.ts'),
+    draw: ({ design, complaints, view, run, sizeFor, styleName }) => html`<hm-sizing .design=${design} .complaints=${complaints} .view=${(view.sizing ?? {}) as SizingView} .run=${run} .wish=${sizeFor} .styleName=${styleName}></hm-sizing>`,
+  },
+];

@@ -1,0 +1,282 @@
+import { LitElement, html, nothing, svg, type TemplateResult } from 'lit';
+import type { Complaint } from '../../src/design/complaint.ts';
+import type { Design } from '../../src/design/types.ts';
+import { drawMarginPlot, lineCode } from '../../src/drawing/margin-plot.ts';
+import { styleOf } from '../../src/drawing/styles.ts';
+import { limitWords, writtenLimits } from '../../src/requirements/limits.ts';
+import type { LookedAt, SearchedRange, SizedAnswer } from '../../src/requirements/size.ts';
+import { sizingBasis, textWithin } from '../../src/requirements/sized-value.ts';
+import { makeVariable, setVariable, textAtPlace } from '../../src/state/commands/index.ts';
+import type { RunJob } from '../../src/workers/job-client.ts';
+import { JobController } from '../hm-desk/job-controller.ts';
+import '../hm-field/hm-field.ts';
+import { drawn } from '../shared/drawn.ts';
+import { tell } from '../shared/events.ts';
+import { look } from '../shared/look.ts';
+import { unitOf } from '../shared/typed-text.ts';
+import { WidthController } from '../shared/width-controller.ts';
+import { choiceOptions, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
+import { marginTable, pictureOf, type Known } from './sizing-picture.ts';
+import type { SizingView } from './sizing-view.ts';
+import { blockerWords, edgeWords, marginLine, outcomeWords } from './sizing-words.ts';
+import { styles } from './hm-sizing.styles.ts';
+
+const LEAST_WIDTH = 320;
+
+/**
+ * Sizing: the values of one variable at which every requirement is met in its worst case. The margins are drawn against the variable; what closes each interval
+ * is said; the best value, or any other, is put into the design.
+ *
+ * @fires hm-edit  another range, a variable made of a value of the stack, a value put into the design
+ * @fires hm-view  { sizing: SizingView }
+ * @fires hm-say
+ */
+export class HmSizing extends LitElement {
+  static override styles = [look, styles];
+  static override properties = {
+    design: { attribute: false },
+    complaints: { attribute: false },
+    view: { attribute: false },
+    run: { attribute: false },
+    wish: { attribute: false },
+    styleName: {},
+    key: { state: true },
+    ends: { state: true },
+    other: { state: true },
+  };
+
+  declare design: Design | null;
+  declare complaints: readonly Complaint[];
+  declare view: SizingView;
+  declare run: RunJob | null;
+  /** the requirement that is asked about, from a press beside it */ declare wish: { requirement: number; wish: number } | null;
+  declare styleName: 'light' | 'dark';
+  /** key of the choice in the menu; null: what the view remembers */ declare private key: string | null;
+  /** range typed for a value that is no variable yet */ declare private ends: [string, string] | null;
+  /** value typed to be put into the design; null: the best one */ declare private other: string | null;
+
+  private readonly job = new JobController(this, 'size');
+  private readonly box = new WidthController(this);
+
+  constructor() {
+    super();
+    this.design = null;
+    this.complaints = [];
+    this.view = {};
+    this.run = null;
+    this.wish = null;
+    this.styleName = 'light';
+    this.key = null;
+    this.ends = null;
+    this.other = null;
+  }
+
+  /** What is chosen: as pressed here, else as remembered, else the first variable with a range, else anything. */
+  private chosen({ variables, places }: { variables: ChoiceOption[]; places: ChoiceOption[] }): ChoiceOption | undefined {
+    const all = [...variables, ...places];
+    const ranged = variables.find(({ choice }) => choice.kind === 'variable' && this.variable(choice.name)?.range !== undefined);
+    return all.find(({ key }) => key === this.key) ?? all.find(({ key }) => key === `v ${this.view.variable}`) ?? ranged ?? all[0];
+  }
+
+  private variable(name: string) {
+    return this.design!.variables?.find((row) => row.name === name);
+  }
+
+  private choose(key: string): void {
+    this.key = key;
+    this.ends = null;
+    if (key.startsWith('v ')) this.remember({ variable: key.slice(2) });
+  }
+
+  private remember(change: SizingView): void {
+    this.view = { ...this.view, ...change };
+    tell(this, 'hm-view', { change: { sizing: this.view } });
+  }
+
+  /** The texts of the range to search. */
+  private range({ choice }: ChoiceOption): [string, string] {
+    if (choice.kind === 'place') return this.ends ?? rangeAbout(textAtPlace(this.design!, choice.place) ?? '') ?? ['', ''];
+    const row = this.variable(choice.name);
+    return row?.range ?? rangeAbout(row?.value ?? '') ?? ['', ''];
+  }
+
+  private setEnd(option: ChoiceOption, end: 0 | 1, text: string): void {
+    const ends: [string, string] = [...this.range(option)];
+    ends[end] = text;
+    const { choice } = option;
+    if (choice.kind === 'place') this.ends = ends;
+    else tell(this, 'hm-edit', { next: setVariable(this.design!, this.design!.variables!.findIndex(({ name }) => name === choice.name), { range: ends }), label: `range of ${choice.name}` });
+  }
+
+  private find(option: ChoiceOption): void {
+    const { choice } = option;
+    const [from, to] = this.range(option);
+    let design = this.design!;
+    let name = choice.kind === 'variable' ? choice.name : '';
+    if (choice.kind === 'place') {
+      name = nameForPlace(design, choice.place);
+      design = makeVariable(design, choice.place, name, { range: [from, to] });
+      tell(this, 'hm-edit', { next: design, label: `variable ${name} made of a value` });
+      tell(this, 'hm-say', { text: `${name} now stands for that value in the stack.` });
+      this.choose(`v ${name}`);
+    }
+    this.other = null;
+    void this.job.start(this.run!, { design, options: { variable: name, from, to, ...(this.view.scale === undefined ? {} : { scale: this.view.scale }) } });
+  }
+
+  private put(name: string, text: string): void {
+    const index = this.design!.variables?.findIndex((row) => row.name === name) ?? -1;
+    if (index < 0) return;
+    tell(this, 'hm-edit', { next: setVariable(this.design!, index, { value: text }), label: `${name} as sized` });
+    tell(this, 'hm-say', { text: `${name} is ${text} now.` });
+  }
+
+  override render(): TemplateResult | typeof nothing {
+    if (this.design === null) return nothing;
+    const options = choiceOptions(this.design);
+    const option = this.chosen(options);
+    if (writtenLimits(this.design).length === 0) return html`<p>A size is found for what the design has to meet: give it a requirement first, under Requirements.</p>`;
+    if (option === undefined) return html`<p>There is nothing to size: give a layer a thickness or a dopant.</p>`;
+    return html`${this.renderAsk(options, option)} ${this.renderState()} ${this.renderFound()}`;
+  }
+
+  private renderAsk({ variables, places }: { variables: ChoiceOption[]; places: ChoiceOption[] }, option: ChoiceOption): TemplateResult {
+    const [from, to] = this.range(option);
+    const running = this.job.progress !== null;
+    const unit = unitOf(from) ?? unitOf(to) ?? '';
+    const { choice } = option;
+    const make = choice.kind === 'place' ? `Make it a variable and find its values` : 'Find the values that meet everything';
+    const item = ({ key, text }: ChoiceOption): TemplateResult => html`<option .value=${key} .selected=${key === option.key}>${text}</option>`;
+    return html`<div class="ask" role="group" aria-label="What to size">
+      <label>Size <select @change=${(e: Event) => this.choose((e.target as HTMLSelectElement).value)}>
+        ${variables.length === 0 ? nothing : html`<optgroup label="variables">${variables.map(item)}</optgroup>`}
+        ${places.length === 0 ? nothing : html`<optgroup label="values, to be made variables">${places.map(item)}</optgroup>`}
+      </select></label>
+      <hm-field label="from" .unit=${unit} .value=${from} .complaint=${this.complaint('--from')} @field-accept=${(e: CustomEvent<string>) => this.setEnd(option, 0, e.detail)}></hm-field>
+      <hm-field label="to" .unit=${unit} .value=${to} .complaint=${this.complaint('--to')} @field-accept=${(e: CustomEvent<string>) => this.setEnd(option, 1, e.detail)}></hm-field>
+      <label>by <select @change=${(e: Event) => this.remember({ scale: ({ log: 'log', linear: 'linear' } as const)[(e.target as HTMLSelectElement).value] })}>
+        <option value="" .selected=${this.view.scale === undefined}>what suits it</option>
+        <option value="log" .selected=${this.view.scale === 'log'}>decades</option>
+        <option value="linear" .selected=${this.view.scale === 'linear'}>even steps</option>
+      </select></label>
+      <button type="button" class="find" ?disabled=${running} @click=${() => this.find(option)}>${make}</button>
+    </div>`;
+  }
+
+  /** What the last search found wrong with this end. */
+  private complaint(path: string): string | null {
+    const { value } = this.job;
+    if (value?.value.kind !== 'complaints' || this.job.progress !== null) return null;
+    return value.value.complaints.find((c) => c.path === path)?.message ?? null;
+  }
+
+  private renderState(): TemplateResult {
+    const { progress, reason, status, value } = this.job;
+    if (progress !== null) {
+      return html`<p class="state"><progress aria-label="Searching" max=${progress.of} .value=${progress.done}></progress> ${progress.done} solves of about ${progress.of}. <button type="button" @click=${() => this.job.stop()}>Stop</button></p>`;
+    }
+    if (status === 'error') return html`<p class="state" role="status">${reason}</p>`;
+    if (value?.value.kind !== 'complaints') return html`<p class="state" role="status">${value === null ? 'Each value is judged in the worst case, over temperatures and tolerances: that takes a few hundred solves.' : nothing}</p>`;
+    const rest = value.value.complaints.filter(({ path }) => path !== '--from' && path !== '--to');
+    return html`<div role="alert">${rest.map(({ path, message }) => html`<p class="wrong">${/\.range$/.test(path) ? 'The range' : path}: ${message}.</p>`)}</div>`;
+  }
+
+  /** What is known: the answer, or what a running search has looked at so far. */
+  private renderFound(): TemplateResult | typeof nothing {
+    const { progress, value, input, seen } = this.job;
+    if (progress !== null && input !== null) {
+      const range = seen.find((piece): piece is SearchedRange => !('value' in piece));
+      const looks = seen.filter((piece): piece is LookedAt => 'value' in piece);
+      // The last look at a value counts: later ones know more corners.
+      const scan = [...new Map(looks.map((point) => [point.value, point])).values()];
+      if (range === undefined || scan.length < 2) return nothing;
+      return html`<div class="found">${this.renderPicture({ ...range, scan }, input.design)}</div>`;
+    }
+    if (value?.value.kind !== 'sized') return nothing;
+    const answer = value.value;
+    const { design } = value.input;
+    const stale = sizingBasis(design, answer.variable) !== sizingBasis(this.design!, answer.variable);
+    return html`<div class="found ${stale ? 'stale' : ''}">
+      ${stale ? html`<p class="stale-mark">Found for the design before the last change: find the values again.</p>` : nothing}
+      <p class="outcome" role="status">${outcomeWords(answer)}</p>
+      <div class="sides">
+        <div>${this.renderPicture(answer, design)}</div>
+        <div>${this.renderIntervals(answer)} ${this.renderKey(answer, design)} ${stale ? nothing : this.renderPut(answer)}</div>
+      </div>
+      ${this.renderNotes(answer)} ${this.renderTable(answer, design)}
+    </div>`;
+  }
+
+  /** @param design  whose requirements were asked for; the value that the variable has is that of the page's design */
+  private renderPicture(known: Known, design: Design): TemplateResult {
+    const width = Math.max(LEAST_WIDTH, this.pictureWidth);
+    const height = Math.round(Math.min(400, Math.max(260, 0.5 * width)));
+    const picture = pictureOf(known, { ...design, variables: this.design!.variables ?? [] }, this.wish?.requirement ?? null);
+    const d = drawMarginPlot(picture, { width, height, style: this.styleName, prefix: 'sizing' });
+    return html`<svg class="picture" width=${width} height=${height} viewBox="0 0 ${width} ${height}" role="img" aria-label=${d.description}>${drawn(d)}</svg>`;
+  }
+
+  private get pictureWidth(): number {
+    const { width } = this.box;
+    return width > 1000 ? Math.round(0.62 * width) : width;
+  }
+
+  private renderIntervals({ intervals }: SizedAnswer): TemplateResult | typeof nothing {
+    if (intervals.length === 0) return nothing;
+    return html`<h3>What ends it</h3><ul>${intervals.flatMap(({ from, to }) => [html`<li>${edgeWords(from, 'below')}</li>`, html`<li>${edgeWords(to, 'above')}</li>`])}</ul>`;
+  }
+
+  private renderKey(answer: SizedAnswer, design: Design): TemplateResult {
+    const style = styleOf(this.styleName);
+    const { best, blockers } = answer;
+    const against = new Map(blockerWords(answer).map(({ index, words }) => [index, words]));
+    return html`<h3>${best === null ? 'The requirements' : `At ${best.text}${blockers.length > 0 ? ', the nearest' : ', the best'}`}</h3>
+      <ol>${writtenLimits(design).map((limit, i) => {
+        const { dash, width, color } = lineCode(i, style);
+        const row = best?.requirements[i];
+        return html`<li class=${limit.row === this.wish?.requirement ? 'asked' : ''}>
+          <svg width="36" height="10" aria-hidden="true">${svg`<line x1="0" x2="36" y1="5" y2="5" stroke=${color} stroke-width=${width} stroke-dasharray=${dash ?? nothing}></line>`}</svg>
+          <span><b>${i + 1}</b> ${limitWords(limit)}${row === undefined ? nothing : html`<span class="line ${row.met ? 'met' : 'not-met'}">${marginLine(row)}</span>`}${against.has(i) ? html`<span class="line">${against.get(i)}</span>` : nothing}</span>
+        </li>`;
+      })}</ol>`;
+  }
+
+  private renderPut(answer: SizedAnswer): TemplateResult | typeof nothing {
+    const { variable, best, intervals } = answer;
+    if (best === null) return nothing;
+    const home = intervals.find(({ from, to }) => best.value >= from.value && best.value <= to.value);
+    const text = textWithin(answer, best.value, home === undefined ? [answer.from, answer.to] : [home.from.value, home.to.value]);
+    const other = this.other ?? '';
+    return html`<h3>Put into the design</h3>
+      <p class="put"><button type="button" @click=${() => this.put(variable, text)}>${variable} = ${text}</button></p>
+      <p class="put"><hm-field label="or another value" .hint=${text} .unit=${unitOf(text) ?? ''} .value=${other} @field-accept=${(e: CustomEvent<string>) => (this.other = e.detail)}></hm-field>
+        <button type="button" ?disabled=${other === ''} @click=${() => this.put(variable, other)}>Put it in</button></p>`;
+  }
+
+  private renderNotes({ confirmed, refusal, resolution, evaluations }: SizedAnswer): TemplateResult {
+    return html`<p class="doc">
+      ${confirmed ? 'Ends, values inside and the best one were judged in full.' : 'Not confirmed: a worse corner turned up at the last judgement; narrow the range.'}
+      An interval narrower than ${Number((100 * resolution).toPrecision(2))} % of the range can have been missed. ${evaluations} solves.
+      ${refusal === null ? nothing : html`Some values have no answer: ${refusal}.`}
+    </p>`;
+  }
+
+  private renderTable(answer: SizedAnswer, design: Design): TemplateResult {
+    const { headings, rows } = marginTable(answer, design);
+    return html`<details>
+      <summary>Margins as a table, ${rows.length} values</summary>
+      <div class="scroll" role="region" aria-label="Margins, figures" tabindex="0">
+        <table><thead><tr>${headings.map((heading) => html`<th scope="col">${heading}</th>`)}</tr></thead>
+        <tbody>${rows.map(([first, ...rest]) => html`<tr><th scope="row">${first}</th>${rest.map((cell) => html`<td>${cell}</td>`)}</tr>`)}</tbody></table>
+      </div>
+    </details>`;
+  }
+}
+
+customElements.define('hm-sizing', HmSizing);
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'hm-sizing': HmSizing;
+  }
+}
