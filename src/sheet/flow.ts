@@ -53,9 +53,12 @@ export function pagesOf(sections: readonly Section[], room: Room, look: SheetLoo
     if (y > room.y && y + Math.min(start, room.height) > bottom) turn();
     first.forEach(put);
     let alone = true;
-    for (const piece of section.pieces) {
+    for (const [i, piece] of section.pieces.entries()) {
+      // The last one is not left alone on its page: the one before it goes along.
+      const pair = i === section.pieces.length - 2 ? height(section.pieces.slice(i)) : 0;
+      const needed = pair <= room.height / 2 ? Math.max(piece.height, pair) : piece.height;
       // A piece of more than a page stays where it is: a new page would not help it.
-      if (!alone && y + piece.height > bottom) {
+      if (!alone && y + needed > bottom) {
         turn();
         headingPieces(section, true, room, look).forEach(put);
       }

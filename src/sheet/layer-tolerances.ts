@@ -6,8 +6,8 @@ import type { Design } from '../design/types.ts';
 import { DEFAULT_TOLERANCES } from '../requirements/uncertainties.ts';
 import { governedBy } from '../requirements/governed.ts';
 
-/** How far a value may lie off, as shares of it to either side; null where nothing is stated. */
-export type Spread = { below: number; above: number; origin: 'stated' | 'default' } | null;
+/** How far a value may lie off, as shares of it to either side; null where nothing is stated; "unknown" where it was not worked out. */
+export type Spread = { below: number; above: number; origin: 'stated' | 'default' | 'unknown' } | null;
 
 /** Of each layer its thickness and composition, and of each of its dopants the concentration. */
 export interface LayerSpreads {
@@ -15,6 +15,9 @@ export interface LayerSpreads {
   /** null too where nothing but the design's text fixes it: a composition has no usual tolerance */ x: Spread;
   dopants: Spread[];
 }
+
+/** Layers times variables beyond which the tolerances are not worked out: each variable takes the reading of the whole design twice. */
+const MOST_READINGS = 20_000;
 
 /**
  * Tolerances of the layers as they follow from those of the design's variables: each variable is moved to both its ends alone, and what its value does is added up, so that an
@@ -27,7 +30,8 @@ export function layerSpreads(design: Design, set: Readonly<Record<string, string
   const { tolerances } = readVariables(design.variables ?? [], overrides);
   const moving = [...tolerances].flatMap(([name, tolerance]) => (isZero(tolerance) ? [] : [name]));
   const nominal = figuresOf(design, set, {});
-  const ends = moving.flatMap((name) => {
+  const tooMany = moving.length * design.layers.length > MOST_READINGS;
+  const ends = (tooMany ? [] : moving).flatMap((name) => {
     const [low, high] = [figuresOf(design, set, { [name]: -1 }), figuresOf(design, set, { [name]: 1 })];
     return low && high ? [[low, high]] : [];
   });
@@ -42,7 +46,7 @@ export function layerSpreads(design: Design, set: Readonly<Record<string, string
       below += Math.max(0, -Math.min(...shares));
       above += Math.max(0, ...shares);
     }
-    if (isGoverned) return { below, above, origin: 'stated' };
+    if (isGoverned) return { below, above, origin: tooMany ? 'unknown' : 'stated' };
     return assumed && usual !== null ? { below: usual, above: usual, origin: 'default' } : null;
   };
   return design.layers.map((layer, l) => ({
@@ -76,6 +80,7 @@ export function largest(profile: Profile): number {
 /** "± 10 %", "−5 % +12 %"; what is only assumed says so. */
 export function spreadText(spread: Spread): string {
   if (!spread) return 'not stated';
+  if (spread.origin === 'unknown') return 'as its variables';
   const percent = (share: number): string => String(Number((100 * share).toPrecision(2)));
   const { below, above, origin } = spread;
   if (below === 0 && above === 0) return 'exact';

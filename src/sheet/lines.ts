@@ -7,6 +7,11 @@ const BOLD = 1.13;
 /** Holds two words together; a plain space on paper. */
 const HOLD = '\u00a0';
 
+/** Characters of one text that are looked at: more than any cell or paragraph has lines for, and few enough that no text holds the page up. */
+const LONGEST = 8000;
+/** Likewise of a text in one line. */
+const ONE_LINE = 1000;
+
 /** px */
 export function lineWidth(text: string, size: number, bold = false): number {
   return textWidth(text.replaceAll(HOLD, ' '), size) * (bold ? BOLD : 1);
@@ -23,7 +28,7 @@ export function lineWidth(text: string, size: number, bold = false): number {
 export function brokenLines(text: string, size: number, room: number, most = Infinity, bold = false): string[] {
   const lines: string[] = [''];
   const plain = (all: string[]): string[] => all.map((line) => line.replaceAll(HOLD, ' '));
-  for (const word of held(printable(text).trim()).split(/ +/)) {
+  for (const word of held(printable(cut(text)).trim()).split(/ +/)) {
     for (const [p, part] of parts(word, size, room, bold).entries()) {
       const last = lines[lines.length - 1];
       const joint = last === '' || p > 0 ? '' : ' ';
@@ -38,13 +43,17 @@ export function brokenLines(text: string, size: number, room: number, most = Inf
 
 /** The text in one line, with an ellipsis where it is cut. */
 export function oneLine(text: string, size: number, room: number, bold = false): string {
-  const flat = printable(text).replaceAll(HOLD, ' ').trim();
+  const flat = printable(text.slice(0, ONE_LINE)).replaceAll(HOLD, ' ').trim();
   return lineWidth(flat, size, bold) <= room ? flat : shortened([flat], size, room, bold)[0];
 }
 
 /** Widest piece of a text that is never broken if there is room for it. */
 export function widestWord(text: string, size: number, bold = false): number {
-  return Math.max(0, ...held(printable(text)).split(/ +/).flatMap(pieces).map((word) => lineWidth(word, size, bold)));
+  return Math.max(0, ...held(printable(cut(text))).split(/ +/).flatMap(pieces).map((word) => lineWidth(word, size, bold)));
+}
+
+function cut(text: string): string {
+  return text.length > LONGEST ? `${text.slice(0, LONGEST)}…` : text;
 }
 
 /** A word that fits stays whole; else it is cut where it may be, and where that is not enough, anywhere. */

@@ -64,6 +64,10 @@ export function reviewSheet(input: SheetInput): Drawing[] {
   });
 }
 
+/** Of the notes on a sheet, characters. */
+const MOST_NOTES = 20_000;
+const MOST_PARAGRAPHS = 60;
+
 function sectionsOf(input: SheetInput, look: SheetLook, room: Room): Section[] {
   const { design, result, set = {}, tolerances = 'all' } = input;
   const requirements = input.requirements ?? result.requirements ?? [];
@@ -83,9 +87,16 @@ function sectionsOf(input: SheetInput, look: SheetLook, room: Room): Section[] {
     ...maybe(variantTable(input.variants ?? [])),
     sentences('Conditions and assumptions', assumptionSentences(design, result, { set, tolerances, judged, seed: input.seed ?? null })),
     sentences('Validity: where this design strains the model', result.warnings.length === 0 ? ['Nothing was found.'] : result.warnings.map(printedUnits)),
-    ...(design.notes?.trim() ? [sentences('Notes', design.notes.split(/\n\s*\n/).filter((text) => text.trim() !== ''))] : []),
+    ...(design.notes?.trim() ? [sentences('Notes', notesOf(design.notes))] : []),
     ...sourceTables(design, result).map(section),
   ];
+}
+
+/** Paragraphs of the notes; what would fill more than some pages ends in an ellipsis. */
+function notesOf(notes: string): string[] {
+  const paragraphs = notes.slice(0, MOST_NOTES).split(/\n\s*\n/).filter((text) => text.trim() !== '');
+  const whole = notes.length <= MOST_NOTES && paragraphs.length <= MOST_PARAGRAPHS;
+  return whole ? paragraphs : [...paragraphs.slice(0, MOST_PARAGRAPHS), '… (the rest stands in the design file)'];
 }
 
 /** The other results on the plate, so that each can be found again. */

@@ -3,7 +3,7 @@ import type { Result } from '../result/types.ts';
 import { parameterWords } from './parameter-words.ts';
 import { parametersInUse, type ParameterRow } from './parameters.ts';
 import { printedUnits } from './lines.ts';
-import type { Cell, SheetTable } from './table.ts';
+import { inParts, type Cell, type SheetTable } from './table.ts';
 
 const CHECKED = { page: 'seen in print', memory: 'from memory of the work', computed: 'computed' } as const;
 /** Values of one row, so that no row grows beyond a page and is cut. */
@@ -42,10 +42,4 @@ function checkedWords({ origin, own }: ParameterRow): string {
   if (own) return 'own value';
   if (origin.checked === null) return '–';
   return `${CHECKED[origin.checked]}${origin.confidence === '' || origin.confidence === 'high' ? '' : `, ${origin.confidence} confidence`}`;
-}
-
-function inParts<T>(items: readonly T[], most: number): T[][] {
-  const out: T[][] = [];
-  for (let i = 0; i < items.length; i += most) out.push(items.slice(i, i + most));
-  return out;
 }

@@ -7,10 +7,13 @@ import { regimeWords } from '../result/ledger-layers.ts';
 import type { Result } from '../result/types.ts';
 import { layerSpreads, spreadText, type Spread } from './layer-tolerances.ts';
 import { printedUnits } from './lines.ts';
-import type { Cell, SheetTable } from './table.ts';
+import { inParts, type Cell, type SheetTable } from './table.ts';
 
 const words = (text: string): Cell => [{ text }];
 const EMPTY: Cell = [];
+
+/** Dopants of one row; a layer with more goes on in the next, so that no row grows beyond a page. */
+const MOST_DOPANTS = 8;
 
 /**
  * The stack from the top down, one row a layer, a line a dopant.
@@ -37,7 +40,7 @@ export function layerTable(design: Design, result: Result, set: Readonly<Record<
       { heading: 'Compensated', align: 'end' },
       { heading: 'Type and regime', align: 'start' },
     ],
-    rows: design.layers.map((layer, l) => {
+    rows: design.layers.flatMap((layer, l) => {
       const solved = stack?.layers[l];
       const own: Cell[] = [
         words(String(l + 1)),
@@ -48,9 +51,10 @@ export function layerTable(design: Design, result: Result, set: Readonly<Record<
       ];
       const regime = words(result.layers[l] ? regimeWords(result.layers[l]) : '');
       const rows = layer.dopants ?? [];
-      if (rows.length === 0) return [[...own, words('none'), EMPTY, EMPTY, EMPTY, EMPTY, regime]];
-      return rows.map((row, d): Cell[] => [
-        ...(d === 0 ? own : own.map(() => EMPTY)),
+      if (rows.length === 0) return [[[...own, words('none'), EMPTY, EMPTY, EMPTY, EMPTY, regime]]];
+      const again: Cell[] = [words(String(l + 1)), words(`${layer.name}, continued`), EMPTY, EMPTY, EMPTY];
+      const lines = rows.map((row, d): Cell[] => [
+        ...(d === 0 ? own : d % MOST_DOPANTS === 0 ? again : own.map(() => EMPTY)),
         dopantCell(row, solved?.dopants[d]),
         concentrationCell(row, solved?.dopants[d], names),
         words(spreadText(spreads[l].dopants[d])),
@@ -58,6 +62,7 @@ export function layerTable(design: Design, result: Result, set: Readonly<Record<
         words(percentText(solved?.dopants[d]?.compensation ?? null)),
         d === 0 ? regime : EMPTY,
       ]);
+      return inParts(lines, MOST_DOPANTS);
     }),
   };
 }

@@ -99,7 +99,10 @@ function set(cell: Cell, room: number, look: SheetLook, most: number): SetLine[]
   const out: SetLine[] = [];
   for (const words of cell) {
     const left = most - out.length;
-    if (left <= 0) break;
+    if (left <= 0) {
+      out[out.length - 1].line = out[out.length - 1].line.replace(/…?$/, '…');
+      break;
+    }
     const size = words.faint ? look.small : look.text;
     out.push(...brokenLines(words.text, size, room, left, words.bold).map((line) => ({ words, size, line })));
   }
@@ -122,4 +125,11 @@ function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: num
   if (high > width) return least.map((w, c) => w + ((liked[c] - w) * (width - low)) / (high - low));
   const words = columns.filter((column) => column.align === 'start').length;
   return liked.map((w, c) => w + (words === 0 ? (width - high) / columns.length : columns[c].align === 'start' ? (width - high) / words : 0));
+}
+
+/** Parts of a list, in order, none longer than `most`. */
+export function inParts<T>(items: readonly T[], most: number): T[][] {
+  const out: T[][] = [];
+  for (let i = 0; i < items.length; i += most) out.push(items.slice(i, i + most));
+  return out;
 }

@@ -29,6 +29,13 @@ describe('pages of sections', () => {
     expect(names(pages[1])[0]).toBe('b');
   });
 
+  it('leave no last row alone on its page', () => {
+    for (let count = 3; count < 30; count++) {
+      const pages = pagesOf([section('a', Array(count).fill(30), piece('head', 10))], room, look);
+      if (pages.length > 1) expect(names(pages[pages.length - 1]).filter((n) => n.startsWith('a ')).length, `${count} rows`).toBeGreaterThan(1);
+    }
+  });
+
   it('give a piece of more than a page a page of its own and end', () => {
     const pages = pagesOf([section('a', [20, 900, 20])], room, look);
     expect(pages.flat().filter((s) => s.kind === 'rect').map((s) => s.role)).toEqual(['a 1', 'a 2', 'a 3']);

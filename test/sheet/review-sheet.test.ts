@@ -141,6 +141,34 @@ describe('the review sheet', () => {
     for (const page of pages) expect(overlaps(page)).toEqual([]);
   });
 
+  it('splits a layer of fifty dopants over rows that fit a page, and leaves none out', () => {
+    const design = starter('pn-diode');
+    design.requirements = [];
+    design.layers[1].dopants = Array.from({ length: 50 }, (_, i) => ({ kind: 'donor' as const, depth: `${i + 1} meV`, concentration: `${i + 1}e13 cm^-3` }));
+    const input = { ...inputOf('pn-diode'), design, result: solved(design), requirements: [] };
+    for (const style of SHEET_STYLES) {
+      const pages = reviewSheet({ ...input, style });
+      for (const page of pages) expect(outside(page)).toEqual([]);
+      const cells = pages.flatMap((p) => roleText(p, 'cell'));
+      for (let i = 1; i <= 50; i++) expect(cells.some((c) => c === `${i < 10 ? `${i}e13` : `${i / 10}e14`} cm⁻³`), `dopant ${i}`).toBe(true);
+    }
+  });
+
+  it('is not held up by texts of a million characters', () => {
+    const design = starter('pn-diode');
+    design.requirements = [];
+    design.notes = 'a\n\n'.repeat(500_000);
+    design.custom = { materials: [] };
+    const input = { ...inputOf('pn-diode'), design, result: solved(design), requirements: [], title: 'w'.repeat(1_000_000), author: 'x '.repeat(500_000) };
+    input.result = { ...input.result, warnings: ['v'.repeat(1_000_000)] };
+    const before = performance.now();
+    const pages = reviewSheet(input);
+    expect(performance.now() - before).toBeLessThan(3000);
+    expect(pages.length).toBeLessThan(20);
+    expect(allText(pages)).toContain('the rest stands in the design file');
+    for (const page of pages) expect(outside(page)).toEqual([]);
+  });
+
   it('is the same drawings and the same bytes for the same input', () => {
     const one = sheetOf('graded-cap');
     const two = sheetOf('graded-cap');
