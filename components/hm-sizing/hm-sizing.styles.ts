@@ -76,9 +76,13 @@ export const styles = css`
     display: block;
     max-width: 100%;
   }
-  .stale .picture,
+  .stale .picture {
+    opacity: 0.8;
+  }
+  .stale .outcome,
   .stale .sides > :last-child {
-    opacity: 0.65;
+    font-style: italic;
+    color: var(--faint);
   }
   .stale-mark {
     font-style: italic;
