@@ -39,10 +39,17 @@ const WIDEST = 0.6;
 const PAD_X = 5;
 const PAD_Y = 3;
 
-/** A table of the page's full width: heading repeated on each page that it reaches, rows never cut. */
+/** Smallest letters of a table, px; where not even they let every word stand whole, words are broken. */
+const LEAST_TEXT = 6.5;
+/** Letters shrink by steps of this. */
+const STEP = 0.93;
+
+/** A table of the page's full width: heading repeated on each page that it reaches, rows never cut. Where its words do not fit side by side, its letters shrink: a broken figure is misread. */
 export function tableSection(table: SheetTable, look: SheetLook, width: number): Section {
+  const fit = columnWidths(table, look, width);
+  if (fit.tight && look.text * STEP >= LEAST_TEXT) return tableSection(table, { ...look, text: look.text * STEP, small: look.small * STEP }, width);
+  const { widths } = fit;
   const { style, small, leading } = look;
-  const widths = columnWidths(table, look, width);
   const lefts = widths.map((_, i) => widths.slice(0, i).reduce((a, b) => a + b, 0));
   const at = (column: number, x: number): { x: number; anchor: 'start' | 'end' } =>
     table.columns[column].align === 'end' ? { x: x + lefts[column] + widths[column] - PAD_X, anchor: 'end' } : { x: x + lefts[column] + PAD_X, anchor: 'start' };
@@ -111,9 +118,9 @@ function set(cell: Cell, room: number, look: SheetLook, most: number): SetLine[]
 
 /**
  * Each column gets what its longest word needs, then, as far as there is room, what its cells would like. Room that is left goes to the columns of words.
- * Where not even the words fit, all give way in proportion and words are broken.
+ * Where not even the words fit, it is tight: all give way in proportion and words are broken.
  */
-function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: number): number[] {
+function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: number): { widths: number[]; tight: boolean } {
   const pad = 2 * PAD_X + 0.5;
   const size = (words: Words): number => (words.faint ? look.small : look.text);
   const cells = (c: number): Words[] => rows.flatMap((row) => row.flatMap((line) => line[c] ?? []));
@@ -121,10 +128,10 @@ function columnWidths({ columns, rows }: SheetTable, look: SheetLook, width: num
   const liked = columns.map((_, c) => Math.max(least[c], pad + Math.max(0, ...cells(c).map((w) => Math.min(lineWidth(w.text, size(w), w.bold), (columns[c].wide ? WIDEST : LONGEST_NAME) * width)))));
   const sum = (values: number[]): number => values.reduce((a, b) => a + b, 0);
   const [low, high] = [sum(least), sum(liked)];
-  if (low >= width) return least.map((w) => (w * width) / low);
-  if (high > width) return least.map((w, c) => w + ((liked[c] - w) * (width - low)) / (high - low));
+  if (low > width) return { widths: least.map((w) => (w * width) / low), tight: true };
+  if (high > width) return { widths: least.map((w, c) => w + ((liked[c] - w) * (width - low)) / (high - low)), tight: false };
   const words = columns.filter((column) => column.align === 'start').length;
-  return liked.map((w, c) => w + (words === 0 ? (width - high) / columns.length : columns[c].align === 'start' ? (width - high) / words : 0));
+  return { widths: liked.map((w, c) => w + (words === 0 ? (width - high) / columns.length : columns[c].align === 'start' ? (width - high) / words : 0)), tight: false };
 }
 
 /** Parts of a list, in order, none longer than `most`. */

@@ -1,6 +1,7 @@
 import { expect, it } from 'vitest';
 import { svgText } from '../../src/drawing/svg-text.ts';
 import { sheetPdf } from '../../src/export/sheet-files.ts';
+import { decimalText, figureText } from '../../src/result/figure-text.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import { PAPERS, SHEET_STYLES } from '../../src/sheet/look.ts';
 import { reviewSheet } from '../../src/sheet/review-sheet.ts';
@@ -26,8 +27,10 @@ it('a sheet of random stacks has every text in its place, every layer in its tab
       expect(overlaps(page), `stack ${i}`).toEqual([]);
       wellFormed(svgText(page));
     }
-    const words = readPdf(sheetPdf(pages, FONTS, { title: design.title, author: '', provenance: answer.result.provenance })).flatMap((p) => p.texts.map((t) => t.text)).join(' ');
-    for (const layer of design.layers) expect(words).toContain(layer.name);
+    const words = readPdf(sheetPdf(pages, FONTS, { title: design.title, author: '', provenance: answer.result.provenance })).flatMap((p) => p.texts.map((t) => t.text));
+    for (const layer of design.layers) expect(words.join(' ')).toContain(layer.name);
+    // A figure broken over two lines would be misread.
+    for (const layer of answer.result.layers) for (const figure of [decimalText(layer.ec_minus_ef_eV), ...(layer.insulator ? [] : [figureText(layer.n_cm3), figureText(layer.p_cm3)])]) expect(words, `stack ${i}`).toContain(figure);
   }
   expect(drawn).toBe(SHEETS);
 }, 60_000);

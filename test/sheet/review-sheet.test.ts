@@ -3,6 +3,7 @@ import { starters } from '../../src/design/starters/index.ts';
 import { plainText, type Drawing } from '../../src/drawing/shapes.ts';
 import { svgText } from '../../src/drawing/svg-text.ts';
 import { sheetPdf } from '../../src/export/sheet-files.ts';
+import { decimalText } from '../../src/result/figure-text.ts';
 import { PAPERS, SHEET_STYLES } from '../../src/sheet/look.ts';
 import { reviewSheet } from '../../src/sheet/review-sheet.ts';
 import { wellFormed } from '../drawing/well-formed.ts';
@@ -173,6 +174,7 @@ describe('the review sheet', () => {
       }
       const words = readPdf(sheetPdf(pages, FONTS, { title: design.title, author: input.author, provenance: input.result.provenance })).flatMap((p) => p.texts.map((t) => t.text));
       expect(words.join('')).toContain('<script>alert(1)</script> & "quoted"');
+      for (const layer of input.result.layers) for (const figure of [layer.ec_minus_ef_eV, layer.ef_minus_ev_eV, layer.gap_eV]) expect(words, `${style}: a figure is broken`).toContain(decimalText(figure));
       expect(words.join('')).not.toMatch(/[\u0000-\u001f\u202a-\u202e]/);
     }
   });
