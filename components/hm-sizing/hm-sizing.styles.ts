@@ -49,6 +49,9 @@ export const styles = css`
     gap: 0.5rem;
     min-height: 28px;
   }
+  .state:empty {
+    min-height: 0;
+  }
   progress {
     width: 8rem;
     accent-color: var(--choice);

@@ -1,4 +1,4 @@
-import { LitElement, html, nothing, svg, type TemplateResult } from 'lit';
+import { LitElement, html, nothing, svg, type PropertyValues, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
 import { drawMarginPlot, lineCode } from '../../src/drawing/margin-plot.ts';
@@ -15,7 +15,7 @@ import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
-import { choiceOptions, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
+import { choiceOptions, likelyVariable, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
 import { marginTable, pictureOf, type Known } from './sizing-picture.ts';
 import type { SizingView } from './sizing-view.ts';
 import { blockerWords, edgeWords, marginLine, outcomeWords } from './sizing-words.ts';
@@ -69,6 +69,13 @@ export class HmSizing extends LitElement {
     this.key = null;
     this.ends = null;
     this.other = null;
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    const row = this.wish === null ? undefined : this.design?.requirements?.[this.wish.requirement];
+    if (!changed.has('wish') || row === undefined) return;
+    const name = likelyVariable(this.design!, row.of);
+    if (name !== null) this.key = `v ${name}`;
   }
 
   /** What is chosen: as pressed here, else as remembered, else the first variable with a range, else anything. */
@@ -137,7 +144,14 @@ export class HmSizing extends LitElement {
     const option = this.chosen(options);
     if (writtenLimits(this.design).length === 0) return html`<p>A size is found for what the design has to meet: give it a requirement first, under Requirements.</p>`;
     if (option === undefined) return html`<p>There is nothing to size: give a layer a thickness or a dopant.</p>`;
-    return html`${this.renderAsk(options, option)} ${this.renderState()} ${this.renderFound()}`;
+    return html`${this.renderWish()} ${this.renderAsk(options, option)} ${this.renderState()} ${this.renderFound()}`;
+  }
+
+  private renderWish(): TemplateResult | typeof nothing {
+    const limits = writtenLimits(this.design!);
+    const at = limits.findIndex(({ row }) => row === this.wish?.requirement);
+    if (at < 0) return nothing;
+    return html`<p>For requirement ${at + 1}, ${limitWords(limits[at])}${limits.length > 1 ? '; the others are kept as well' : ''}.</p>`;
   }
 
   private renderAsk({ variables, places }: { variables: ChoiceOption[]; places: ChoiceOption[] }, option: ChoiceOption): TemplateResult {
@@ -253,9 +267,9 @@ export class HmSizing extends LitElement {
         <button type="button" ?disabled=${other === ''} @click=${() => this.put(variable, other)}>Put it in</button></p>`;
   }
 
-  private renderNotes({ confirmed, refusal, resolution, evaluations }: SizedAnswer): TemplateResult {
+  private renderNotes({ intervals, confirmed, refusal, resolution, evaluations }: SizedAnswer): TemplateResult {
     return html`<p class="doc">
-      ${confirmed ? 'Ends, values inside and the best one were judged in full.' : 'Not confirmed: a worse corner turned up at the last judgement; narrow the range.'}
+      ${confirmed ? (intervals.length > 0 ? 'Ends, values inside and the best one were judged in full.' : 'The nearest was judged in full.') : 'Not confirmed: a worse corner turned up at the last judgement; narrow the range.'}
       An interval narrower than ${Number((100 * resolution).toPrecision(2))} % of the range can have been missed. ${evaluations} solves.
       ${refusal === null ? nothing : html`Some values have no answer: ${refusal}.`}
     </p>`;

@@ -28,6 +28,14 @@ export function choiceOptions(design: Design): { variables: ChoiceOption[]; plac
   return { variables, places };
 }
 
+/** The first variable that is used in the layer that a requirement is about: of a contact the layer under it, of a junction the one above. */
+export function likelyVariable(design: Design, of: string): string | null {
+  const layer = of === 'top' ? design.layers[0] : of === 'bottom' ? design.layers[design.layers.length - 1] : design.layers.find(({ name }) => name === of);
+  if (layer === undefined) return null;
+  const texts = JSON.stringify([layer.thickness, layer.x, (layer.dopants ?? []).map(({ concentration, activation, compensation }) => [concentration, activation, compensation])]);
+  return (design.variables ?? []).find(({ name }) => /^\w+$/.test(name) && new RegExp(`(?<![A-Za-z_])${name}(?!\\w)`).test(texts))?.name ?? null;
+}
+
 /** A free name for the variable that a value becomes: "t_cap", "N_cap". Letters and digits of the layer's name that a variable may have. */
 export function nameForPlace(design: Design, place: VariablePlace): string {
   const layer = design.layers[place.layer].name.replace(/[^A-Za-z0-9]+/g, '_').replace(/^_+|_+$/g, '') || String(place.layer + 1);

@@ -1,6 +1,7 @@
 import type { SizedAnswer, SizedEdge } from '../../src/requirements/size.ts';
-import { marginWords, requirementWords, verdictWords } from '../../src/requirements/verdict.ts';
+import { marginWords, verdictWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
+import { writeNumber } from '../../src/quantity/write-quantity.ts';
 
 /** What came out, in one sentence that is also spoken. */
 export function outcomeWords({ variable, intervals, best, blockers }: SizedAnswer): string {
@@ -27,12 +28,16 @@ export function marginLine(row: RequirementResult): string {
   return `${verdictWords(row)}, margin ${marginWords(row)}${at}${blank}`;
 }
 
-/** What stands against the nearest miss. */
+/** What stands against the nearest miss, and by how much. */
 export function blockerWords({ blockers, best }: SizedAnswer): { index: number; words: string }[] {
   return blockers.map(({ index, met_somewhere }) => {
     const row = best?.requirements[index];
-    const lacks = row === undefined ? '' : ` has a margin of ${marginWords(row)}${row.at === null ? '' : ` at ${row.at.words}`}`;
-    const elsewhere = met_somewhere ? 'other values in the range meet it, but not together with the rest' : 'no value in the range meets it';
-    return { index, words: `${row === undefined ? '' : requirementWords(row)}${lacks}; ${elsewhere}.` };
+    const elsewhere = met_somewhere ? 'Other values in the range meet it, but not together with the rest.' : 'No value in the range meets it.';
+    return { index, words: `${row === undefined ? '' : lackWords(row)}${elsewhere}` };
   });
+}
+
+function lackWords({ margin, margin_kind, margin_unit }: RequirementResult): string {
+  if (margin === null || !(margin_kind === 'ratio' ? margin > 0 && margin < 1 : margin < 0)) return '';
+  return margin_kind === 'ratio' ? `It lacks a factor of ${writeNumber(1 / margin, 3)}. ` : `It lacks ${`${writeNumber(-margin, 3)} ${margin_unit}`.trim()}. `;
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { choiceOptions, nameForPlace, rangeAbout } from '../../components/hm-sizing/sizing-choices.ts';
+import { choiceOptions, likelyVariable, nameForPlace, rangeAbout } from '../../components/hm-sizing/sizing-choices.ts';
 import { marginTable, pictureOf, plainValue, shownUnit } from '../../components/hm-sizing/sizing-picture.ts';
 import { blockerWords, edgeWords, outcomeWords } from '../../components/hm-sizing/sizing-words.ts';
 import { size, type SizedAnswer, type SizedEdge } from '../../src/requirements/size.ts';
@@ -37,6 +37,17 @@ describe('what can be sized', () => {
     const more = given.layers.map((_, layer) => nameForPlace(given, { layer, part: 'thickness' }));
     expect(new Set([...more, ...given.variables!.map(({ name }) => name)]).size).toBe(7);
     expect(readVariables([...given.variables!, ...more.map((name) => ({ name, value: '1 nm' }))]).complaints).toEqual([]);
+  });
+
+  it('is, for a requirement, sooner a variable of the layer that it is about', () => {
+    const given = contactDesign((d) => {
+      d.variables!.push({ name: 'Nbase', value: '1e17 cm^-3' });
+      d.layers[1].dopants![0].concentration = '2*Nbase';
+    });
+    expect(likelyVariable(given, 'base')).toBe('Nbase');
+    expect(likelyVariable(given, 'bottom')).toBe('Nbase');
+    expect(likelyVariable(given, 'top')).toBe('Ncap');
+    expect(likelyVariable(designFixture(), 'buffer')).toBe(null);
   });
 
   it('is searched about its value: a doping over decades, a thickness by factors', () => {
@@ -113,7 +124,11 @@ describe('the words of a sizing', () => {
     expect(outcomeWords(missed)).toBe('No value of tcap in this range meets everything. The nearest is 200 nm, with 1 not met.');
     const [{ index, words }] = blockerWords(missed);
     expect(index).toBe(0);
-    expect(words).toMatch(/^sheet resistance of cap at most 1 ohm has a margin of 0\.\d+ times at 26\.9 degC; no value in the range meets it\.$/);
+    const { margin } = missed.best!.requirements[0];
+    const lacks = Number(/^It lacks a factor of ([\d.]+)\. No value in the range meets it\.$/.exec(words)?.[1]);
+    expect(lacks * margin!).toBeCloseTo(1, 2);
+    const lower = { ...missed.best!.requirements[1], met: false, margin: -0.12 };
+    expect(blockerWords({ ...missed, blockers: [{ index: 1, words: '', met_somewhere: true }], best: { ...missed.best!, requirements: [missed.best!.requirements[0], lower] } })[0].words).toMatch(/^It lacks 0\.12 eV\. Other values/);
     expect(outcomeWords({ ...missed, best: null })).toContain('no accepted answer');
   });
 
