@@ -13,6 +13,18 @@ export interface Visit {
   open(path?: string): Promise<void>;
   /** What went wrong so far. A scenario that provokes an error checks it here and takes it out. */
   problems: string[];
+  /** Serves a copy of the built page of the scenario's own, to be changed or taken away. */
+  serveCopy(): Promise<PageServer>;
+}
+
+export interface PageServer {
+  /** Where the copy lies. */
+  folder: string;
+  url: string;
+  /** After a change in the folder: makes it a whole build again, with a service worker that names its files. */
+  publish(): Promise<void>;
+  /** The network is cut: nothing answers any more. */
+  close(): Promise<void>;
 }
 
 export interface Scenario {
