@@ -1,6 +1,7 @@
 import { check } from './check.ts';
 import { compute } from './compute.ts';
 import { draw } from './draw.ts';
+import { metals } from './metals.ts';
 import { sweep } from './sweep.ts';
 import { vary } from './vary.ts';
 import { sheet } from './sheet.ts';
@@ -10,7 +11,7 @@ import { InputError } from '../design/complaint.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import { PROGRAM_VERSION } from '../version.ts';
 
-const COMMANDS: Readonly<Record<string, Command>> = { compute, check, size, draw, sheet, sweep, vary };
+const COMMANDS: Readonly<Record<string, Command>> = { compute, check, size, metals, draw, sheet, sweep, vary };
 
 /** The command line. Everything goes through `streams`, so that it can be tried without a process. */
 export async function run(args: readonly string[], streams: Streams): Promise<number> {

@@ -1,3 +1,5 @@
+import { closeUpSteps } from '../contacts/close-up.ts';
+import { rankMetals } from '../contacts/rank-metals.ts';
 import { judging } from '../requirements/judge.ts';
 import { sizeSteps } from '../requirements/size.ts';
 import type { JobInput, JobKind, JobSeen, JobValue } from './job-messages.ts';
@@ -9,4 +11,6 @@ export type JobSteps<K extends JobKind> = Generator<{ done: number; of: number; 
 export const JOB_KINDS: { readonly [K in JobKind]: (input: JobInput<K>) => JobSteps<K> } = {
   judge: ({ design, options }) => judging(design, options),
   size: ({ design, options }) => sizeSteps(design, options),
+  metals: ({ design, options }) => rankMetals(design, options),
+  closeUp: ({ design, options }) => closeUpSteps(design, options),
 };

@@ -1,3 +1,5 @@
+import type { CloseUpAnswer, CloseUpOptions } from '../contacts/close-up.ts';
+import type { MetalRow, RankAnswer, RankOptions } from '../contacts/rank-metals.ts';
 import type { Design } from '../design/types.ts';
 import type { JudgeOptions, Judgement } from '../requirements/judge.ts';
 import type { LookedAt, SearchedRange, SizeOptions, SizeResult } from '../requirements/size.ts';
@@ -9,6 +11,8 @@ import type { LookedAt, SearchedRange, SizeOptions, SizeResult } from '../requir
 export interface Jobs {
   judge: { input: { design: Design; options?: Omit<JudgeOptions, 'warmStart'> }; value: Judgement; seen: never };
   size: { input: { design: Design; options: SizeOptions }; value: SizeResult; seen: LookedAt | SearchedRange };
+  metals: { input: { design: Design; options: RankOptions }; value: RankAnswer; seen: MetalRow };
+  closeUp: { input: { design: Design; options?: CloseUpOptions }; value: CloseUpAnswer; seen: never };
 }
 
 export type JobKind = keyof Jobs;
