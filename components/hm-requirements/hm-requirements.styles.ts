@@ -15,7 +15,7 @@ export const styles = css`
   }
   li {
     display: grid;
-    grid-template-columns: minmax(0, 1fr) minmax(0, 24rem) max-content;
+    grid-template-columns: minmax(0, 1fr) minmax(0, 28rem) max-content;
     gap: 0.25rem 1.25rem;
     align-items: start;
     padding: 0.4rem 0;
@@ -27,17 +27,11 @@ export const styles = css`
     align-items: baseline;
     gap: 0.3rem 0.4rem;
     min-width: 0;
-    --field-width: 8.5rem;
+    --field-width: 7.5rem;
   }
   .number {
     min-width: 1.2em;
     font-weight: 600;
-  }
-  .acts {
-    display: flex;
-    flex-wrap: wrap;
-    justify-content: flex-end;
-    gap: 0.3rem 0.4rem;
   }
   button,
   select {
@@ -49,6 +43,7 @@ export const styles = css`
     field-sizing: content;
   }
   .size {
+    margin: 0.3rem 0 0 calc(102px + 0.6rem);
     border-color: var(--choice);
     border-width: 2px;
   }
@@ -139,9 +134,6 @@ export const styles = css`
   @container (max-width: 34rem) {
     li {
       grid-template-columns: minmax(0, 1fr);
-    }
-    .acts {
-      justify-content: flex-start;
     }
   }
   :host {

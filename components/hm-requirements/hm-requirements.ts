@@ -25,6 +25,9 @@ export interface Verdicts {
 
 export const NO_VERDICTS: Verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
 
+/** A figure and its unit stay on one line. */
+const unbroken = (words: string): string => words.replace(/(\d) (?=%|[a-zA-Zµ])/g, '$1\u00a0');
+
 const value = (event: Event): string => (event.target as HTMLSelectElement).value;
 
 /**
@@ -115,9 +118,10 @@ export class HmRequirements extends LitElement {
         ${boundsOf(requirement).map((bound) => this.renderLimit(requirement, bound, complaintAt(this.complaints, `${path}.${bound}`), (change) => this.edit(i, change, `limit of ${name}`)))}
         ${this.renderOver(requirement, (over) => this.edit(i, { over }, 'temperatures of a requirement'))}
       </div>
-      <div class="outcome">${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row, rows.length > 1))}</div>
-      <div class="acts">
+      <div class="outcome">${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row, rows.length > 1))}
         ${unmet && !this.verdicts.stale ? html`<button type="button" class="size" @click=${() => tell(this, 'hm-size', { requirement: i })}>Size a variable to meet this<span class="spoken">: ${name}</span></button>` : nothing}
+      </div>
+      <div>
         <button type="button" @click=${() => tell(this, 'hm-edit', { next: removeRequirement(this.design!, i), label: `requirement ${name} taken out` })}>Take out<span class="spoken">: ${name}</span></button>
       </div>
     </li>`;
@@ -172,7 +176,7 @@ export class HmRequirements extends LitElement {
     return html`<div class="verdict ${verdict.replace(' ', '-')}">
       ${share === null ? html`<span class="bar"></span>` : html`<svg class="bar" viewBox="-51 0 102 12" width="102" height="12" aria-hidden="true">${svg`<path d="M-50 6H50M-50 3V9M50 3V9" stroke="currentColor" fill="none" opacity="0.5"></path><rect x=${Math.min(0, 50 * share)} y="3" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M0 0V12" class="limit" fill="none"></path>`}</svg>`}
       <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, margin ${marginWords(row)}</span>
-      <span class="worst">${worst}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === '' ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${row.unanswered.words}: ${row.unanswered.reason}`}</span>
+      <span class="worst">${unbroken(worst)}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === '' ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${unbroken(row.unanswered.words)}: ${row.unanswered.reason}`}</span>
     </div>`;
   }
 
