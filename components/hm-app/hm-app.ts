@@ -19,24 +19,21 @@ import type { PlateView } from '../hm-plate/plate-view.ts';
 import type { HalfmarkEvents, PageAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
-import '../hm-about/hm-about.ts';
 import '../hm-assumptions/hm-assumptions.ts';
 import '../hm-conditions/hm-conditions.ts';
 import '../hm-desk/hm-desk.ts';
-import '../hm-dialog/hm-dialog.ts';
-import '../hm-leave/hm-leave.ts';
 import '../hm-messages/hm-messages.ts';
 import '../hm-plate/hm-plate.ts';
-import '../hm-projects/hm-projects.ts';
 import '../hm-rail/hm-rail.ts';
-import '../hm-starters/hm-starters.ts';
 import '../hm-strip/hm-strip.ts';
 import '../hm-variables/hm-variables.ts';
 import { choicesFor, fetchStarters, starterCards, type Choices } from './choices.ts';
+import { pageDialogs, type PageDialogs } from './dialogs.ts';
 import { styles } from './hm-app.styles.ts';
 import { IncomingController } from './incoming.ts';
 import { JudgingController } from './judging-controller.ts';
 import { pageKey } from './keys.ts';
+import { STORE_WORDS } from './store-words.ts';
 import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
 import { RemarkController } from './remark-controller.ts';
 import { StaleController } from './stale-controller.ts';
@@ -109,7 +106,7 @@ export class HmApp extends LitElement {
   override connectedCallback(): void {
     super.connectedCallback();
     setTheme(this.theme);
-    this.store = new ProjectStore((moment) => this.storeSays(moment), this.database);
+    this.store = new ProjectStore((moment) => this.say(STORE_WORDS[moment], true), this.database);
     this.keeper = new Keeper(this.session, this.store, this.database);
     this.desk = new ProjectDesk(this.store, this.keeper);
     for (const what of ['design', 'view', 'moment']) this.session.addEventListener(what, this.redraw);
@@ -192,15 +189,6 @@ export class HmApp extends LitElement {
     this.requestUpdate();
   }
 
-  private storeSays(moment: 'blocked' | 'blocking' | 'terminated'): void {
-    const sentence = {
-      blocked: 'An older version of this page is open in another tab and holds the projects. Close that tab, and this one goes on.',
-      blocking: 'A newer version of this page was opened in another tab. Reload this one to go on saving; what is on it is still here.',
-      terminated: 'The browser cut the connection to its storage. Saving is tried again at the next change.',
-    }[moment];
-    this.say(sentence, true);
-  }
-
   private say(text: string, urgent = false): void {
     this.remarks.say(text, urgent);
   }
@@ -251,6 +239,10 @@ export class HmApp extends LitElement {
         return this.show('hm-leave');
       case 'about':
         return this.show('hm-about');
+      case 'sheet':
+        // The dialogs are modal: the one that it was asked from makes room.
+        this.renderRoot.querySelector<HmLeave>('hm-leave')!.close();
+        return void import('../hm-sheet/hm-sheet.ts').then(() => this.show('hm-sheet'), () => this.say('The review sheet could not be fetched.', true));
       case 'open-file':
         return this.incoming.pick();
       case 'cancel':
@@ -266,6 +258,24 @@ export class HmApp extends LitElement {
       case 'take-other':
         return void this.keeper.takeTheOther().then((opened) => this.say(opened.ok ? 'This is what the other tab saved.' : opened.why, !opened.ok));
     }
+  }
+
+  /** What the dialogs show. */
+  private get dialogs(): PageDialogs {
+    const { session, keeper, desk, judging } = this;
+    const { verdicts } = judging;
+    return {
+      design: session.design,
+      result: session.findings.result,
+      stale: session.findings.stale,
+      plateLook: session.view as PlateView,
+      requirements: verdicts.status === 'complete' && !verdicts.stale ? verdicts.rows : null,
+      entries: desk?.entries ?? [],
+      damaged: desk?.damaged ?? [],
+      openId: keeper?.project.id ?? null,
+      remark: this.deskRemark,
+      unsaved: { closed: () => (this.regardless = null), save: () => void this.renderRoot.querySelector<HmLeave>('hm-leave')!.saveDesign().then((said) => this.say(said)), lose: () => this.letGo() },
+    };
   }
 
   private edit({ detail }: On<'hm-edit'>): void {
@@ -328,7 +338,7 @@ export class HmApp extends LitElement {
         ></hm-conditions>
       </header>
       <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remarks.remark} .layers=${this.handed?.names ?? []}></hm-messages>
-      ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${this.renderDialogs()}
+      ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${pageDialogs(this.dialogs)}
       ${this.incoming.over ? html`<p class="drop">Let go to open the file</p>` : nothing}
     </div>`;
   }
@@ -384,24 +394,6 @@ export class HmApp extends LitElement {
         )}
       </div>
     </main>`;
-  }
-
-  private renderDialogs(): TemplateResult {
-    const { session, keeper, desk } = this;
-    const { result, stale } = session.findings;
-    return html`
-      <hm-projects .entries=${desk?.entries ?? []} .damaged=${desk?.damaged ?? []} .openId=${keeper?.project.id ?? null} .remark=${this.deskRemark}></hm-projects>
-      <hm-starters></hm-starters>
-      <hm-leave .design=${session.design} .result=${result} .stale=${stale} .plateLook=${session.view as PlateView}></hm-leave>
-      <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>
-      <hm-dialog id="unsaved" heading="Not saved" @hm-closed=${() => (this.regardless = null)}>
-        <p>What is on this page could not be saved. Opening another project now would lose it.</p>
-        <p class="row">
-          <button type="button" @click=${() => void this.renderRoot.querySelector<HmLeave>('hm-leave')!.saveDesign().then((said) => this.say(said))}>Take it away as a file</button>
-          <button type="button" @click=${this.letGo}>Open the other and lose it</button>
-        </p>
-      </hm-dialog>
-    `;
   }
 }
 

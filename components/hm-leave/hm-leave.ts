@@ -2,6 +2,7 @@ import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { Design } from '../../src/design/types.ts';
 import type { StyleName } from '../../src/drawing/styles.ts';
 import type { Result } from '../../src/result/types.ts';
+import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
@@ -19,7 +20,10 @@ const STYLES: [StyleName, string][] = [
 /**
  * Taking something away: the plate as SVG or PNG or to the clipboard, the profiles and the ledger as tables, the design as its file
  * or inside a link. `show()` opens it.
+ * The review sheet is asked for from here.
  * Where the figures belong to an earlier design than the one on the page, they are not given away.
+ *
+ * @fires hm-act  the review sheet
  */
 export class HmLeave extends LitElement {
   static override styles = [look, styles];
@@ -52,6 +56,10 @@ export class HmLeave extends LitElement {
   show(): void {
     this.remark = '';
     void this.renderRoot.querySelector<HmDialog>('hm-dialog')!.show();
+  }
+
+  close(): void {
+    this.renderRoot.querySelector<HmDialog>('hm-dialog')!.close();
   }
 
   /** Takes the design's file away at once, without the dialog. @returns what to say about it */
@@ -108,6 +116,11 @@ export class HmLeave extends LitElement {
     return html`<hm-dialog heading="Take away">
       <p class="remark" role="status">${this.remark}</p>
       ${ready ? nothing : html`<p class="caution">The design on the page has no result yet, so only its file can be taken.</p>`}
+      <section aria-labelledby="of-sheet">
+        <h3 id="of-sheet">The review sheet</h3>
+        <div class="row"><button type="button" ?disabled=${!ready} @click=${() => tell(this, 'hm-act', { act: 'sheet' })}>Fill in and take away</button></div>
+        <p class="quiet">Plate, layers, figures, requirements and the source of every parameter, as PDF, SVG, PNG or print.</p>
+      </section>
       <section aria-labelledby="of-plate">
         <h3 id="of-plate">The plate</h3>
         <label>Look

@@ -27,7 +27,7 @@ export interface HalfmarkEvents {
 }
 
 export type PageAct =
-  | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'about' | 'open-file'
+  | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'sheet' | 'about' | 'open-file'
   /** stop the running solve */ | 'cancel'
   /** solve once more */ | 'again'
   /** stop the running judgement of the requirements; begin it anew */ | 'judge-stop' | 'judge-again'
