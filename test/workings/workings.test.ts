@@ -1,0 +1,150 @@
+import { describe, expect, it } from 'vitest';
+import { sources } from '../../presets/index.ts';
+import { starters } from '../../src/design/starters/index.ts';
+import type { Design } from '../../src/design/types.ts';
+import { ledgerTables } from '../../src/result/ledger.ts';
+import { solveDesign } from '../../src/result/solve-design.ts';
+import type { Result } from '../../src/result/types.ts';
+import { evaluate } from '../../src/workings/expression.ts';
+import type { Known } from '../../src/workings/known.ts';
+import { RESULT_DIGITS, readPrinted, shown, type Step } from '../../src/workings/step.ts';
+import { workingsOf } from '../../src/workings/workings-of.ts';
+import type { Workings } from '../../src/workings/workings.ts';
+
+interface Case {
+  name: string;
+  design: Design;
+}
+
+const starter = (id: string): Design => structuredClone(starters.find((s) => s.id === id)!.design);
+
+/** The starters, and designs that take the laws which no starter takes. */
+const CASES: Case[] = [
+  ...starters.map(({ id, design }) => ({ name: id, design })),
+  { name: 'narrowed diode with Kane bands', design: { ...starter('pn-diode'), assumptions: { narrowing: true, nonParabolic: true } } },
+  { name: 'Boltzmann diode', design: { ...starter('pn-diode'), assumptions: { statistics: 'boltzmann' } } },
+  { name: 'channel by the affinity rule, hot', design: { ...starter('modulation-doped'), conditions: { temperature: '77 K' }, requirements: [], assumptions: { alignment: 'affinity' } } },
+  { name: 'metal by its work function', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: 'none' } } },
+  { name: 'metal half pinned', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: '0.3' } } },
+];
+
+function solved(design: Design): Result {
+  const answer = solveDesign(design);
+  if (answer.kind !== 'result') throw new Error(JSON.stringify(answer));
+  return answer.result;
+}
+
+const all = CASES.map(({ name, design }) => {
+  const result = solved(design);
+  const tables = ledgerTables(result);
+  const figures = tables.flatMap((table) => table.rows.flatMap((row) => table.columns.map((column) => ({ table, row, column, workings: workingsOf(design, result, { table: table.id, index: row.index, column: column.id }) }))));
+  return { name, design, result, figures };
+});
+
+const everyStep = (w: Workings): Step[] => [...w.steps, ...(w.simpler?.steps ?? [])];
+const place = (name: string, w: Workings): string => `${name}: ${w.title}`;
+
+/** What a formula gives for the numbers as they stand on the page. */
+function byHand(step: Exclude<Step, { kind: 'law' }>): { mine: number; its: number } {
+  const page = shown(step);
+  const values = new Map<Known, number>(page.symbols.map(({ known, value }) => [known, readPrinted(value) * known.scale]));
+  const of = (known: Known): number => values.get(known)!;
+  if (step.kind === 'equation') return { mine: evaluate(step.left, of), its: evaluate(step.right, of) };
+  return { mine: evaluate(step.formula, of), its: readPrinted(page.result!.value) * step.result.scale };
+}
+
+/** The two agree to the printed digits: one unit of the last, since each may be rounded. */
+function closeToDigits(a: number, b: number): boolean {
+  return a === b || Math.abs(a - b) <= 1.01 * 10 ** (1 - RESULT_DIGITS) * 10 ** Math.floor(Math.log10(Math.max(Math.abs(a), Math.abs(b))));
+}
+
+/** The figure that the last line gives, in the ledger's unit. */
+function lastOf(w: Workings): number | null {
+  const last = w.steps.findLast((s) => s.kind !== 'law');
+  return last === undefined ? null : last.result.value / last.result.scale;
+}
+
+const WORDS = ['class', 'regime', 'kind', 'source', 'transport', 'material'];
+
+describe('the workings', () => {
+  it('exist for every figure that the ledger shows, with its own title, value and unit', () => {
+    let count = 0;
+    for (const { figures } of all) {
+      for (const { workings, row, column } of figures) {
+        expect(workings.value).toEqual(row.cells[column.id].lines);
+        expect(workings.title).toContain(column.heading);
+        expect(workings.unit).toBe(column.unit);
+        expect(workings.steps.length + workings.remarks.length, workings.title).toBeGreaterThan(0);
+        count++;
+      }
+    }
+    expect(count).toBeGreaterThan(500);
+  });
+
+  it('work every line out again from the numbers as they are printed', () => {
+    const wrong: string[] = [];
+    let lines = 0;
+    for (const { name, figures } of all) {
+      for (const { workings } of figures) {
+        for (const step of everyStep(workings)) {
+          if (step.kind === 'law') continue;
+          lines++;
+          const { mine, its } = byHand(step);
+          if (!closeToDigits(mine, its)) wrong.push(`${place(name, workings)}: ${shown(step).text}: ${mine} against ${its}`);
+        }
+      }
+    }
+    expect(wrong).toEqual([]);
+    expect(lines).toBeGreaterThan(3000);
+  });
+
+  it('end at the figure that the ledger shows', () => {
+    const wrong: string[] = [];
+    let figures = 0;
+    for (const { name, figures: of } of all) {
+      for (const { workings, row, column } of of) {
+        const { value } = row.cells[column.id];
+        if (typeof value !== 'number' || WORDS.includes(column.id)) continue;
+        figures++;
+        const last = lastOf(workings);
+        if (last === null || !(Math.abs(last - value) <= 1e-9 * Math.abs(value))) wrong.push(`${place(name, workings)}: ${last} against ${value}`);
+      }
+    }
+    expect(wrong).toEqual([]);
+    expect(figures).toBeGreaterThan(300);
+  });
+
+  it('say where every value stands, in a work that the list of sources holds or as an own value', () => {
+    const keys = new Set<string>();
+    for (const { name, figures } of all) {
+      for (const { workings } of figures) {
+        for (const step of everyStep(workings)) {
+          for (const { known } of shown(step).symbols) {
+            const { origin } = known;
+            if (origin.from === 'source') {
+              expect(Object.hasOwn(sources, origin.key), `${place(name, workings)}: ${known.words}: ${origin.key}`).toBe(true);
+              expect(origin.text).toBe(sources[origin.key]);
+              keys.add(origin.key);
+            } else if (origin.from === 'this design') expect(known.path === '' ? known.sign : known.path, known.words).toMatch(/\S/);
+          }
+        }
+      }
+    }
+    expect(keys.size).toBeGreaterThan(10);
+  });
+
+  it('give finite numbers only, each with words', () => {
+    for (const { name, figures } of all) {
+      for (const { workings } of figures) {
+        for (const step of everyStep(workings)) {
+          for (const { known, value } of shown(step).symbols) {
+            expect(Number.isNaN(known.value), `${place(name, workings)}: ${known.words}`).toBe(false);
+            expect(value).not.toBe('–');
+            expect(known.words.length).toBeGreaterThan(2);
+          }
+        }
+      }
+    }
+  });
+});
+
