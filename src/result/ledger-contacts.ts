@@ -1,3 +1,4 @@
+import { columnOf } from '../quantity/quantities.ts';
 import { decimalText, fieldText, figureText } from './figure-text.ts';
 import type { Cell, Column } from './ledger.ts';
 import type { ContactResult } from './types.ts';
@@ -31,18 +32,18 @@ export function contactWords(contact: ContactResult): string {
 }
 
 export const contactColumns: Column<ContactResult>[] = [
-  { id: 'kind', heading: 'Kind', words: 'kind of contact, or its metal', unit: '', kind: 'words', usual: true, cell: (c) => words(contactWords(c)) },
-  { id: 'barrierN', heading: 'φBn', words: 'barrier for electrons, without the image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.barrier_n_eV) },
-  { id: 'barrierP', heading: 'φBp', words: 'barrier for holes, without the image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.barrier_p_eV) },
-  { id: 'source', heading: 'Barrier', words: 'where the barrier comes from', unit: '', kind: 'words', usual: true, cell: (c) => words(c.barrier_source === null ? '–' : SOURCE_WORDS[c.barrier_source]) },
-  { id: 'rhoC', heading: 'Contact resistivity', words: 'specific contact resistivity at zero bias through the solved barrier, both carriers; the closed form of the depletion approximation beside it', unit: 'Ω cm²', kind: 'figure', usual: true, cell: resistivity },
-  { id: 'rhoCFloor', heading: 'Its floor', words: 'least contact resistivity that the majority carriers allow, without any barrier (ballistic limit)', unit: 'Ω cm²', kind: 'figure', usual: true, cell: (c) => figure(c.rho_c_floor_ohm_cm2) },
-  { id: 'rhoCn', heading: 'of electrons', words: 'contact resistivity of electrons alone', unit: 'Ω cm²', kind: 'figure', usual: false, cell: (c) => figure(c.rho_c_n_ohm_cm2) },
-  { id: 'rhoCp', heading: 'of holes', words: 'contact resistivity of holes alone', unit: 'Ω cm²', kind: 'figure', usual: false, cell: (c) => figure(c.rho_c_p_ohm_cm2) },
-  { id: 'saturation', heading: 'Saturation current', words: 'thermionic emission of the majority carriers over the lowered barrier', unit: 'A/cm²', kind: 'figure', usual: false, cell: (c) => figure(c.saturation_A_cm2) },
-  { id: 'lowering', heading: 'Lowering', words: 'image-force lowering', unit: 'eV', kind: 'figure', usual: true, cell: (c) => decimals(c.lowering_eV) },
-  { id: 'surfaceField', heading: 'Surface field', words: 'field just inside the semiconductor, along the depth', unit: 'kV/cm', kind: 'figure', usual: true, cell: (c) => ({ lines: [fieldText(c.surface_field_V_cm)], value: c.surface_field_V_cm * KV_PER_V }) },
-  { id: 'depletion', heading: 'Depleted', words: 'depletion width under the contact', unit: 'nm', kind: 'figure', usual: true, cell: (c) => figure(c.depletion_nm) },
-  { id: 'e00', heading: 'E00', words: 'characteristic energy of tunnelling', unit: 'meV', kind: 'figure', usual: true, cell: (c) => figure(c.e00_meV) },
-  { id: 'transport', heading: 'Transport', words: 'how carriers pass the barrier', unit: '', kind: 'words', usual: true, cell: (c) => words(c.transport === null ? '–' : c.transport === 'field' ? 'field emission' : c.transport === 'thermionic' ? 'thermionic emission' : 'thermionic-field emission') },
+  { ...columnOf('contacts', 'kind'), usual: true, cell: (c) => words(contactWords(c)) },
+  { ...columnOf('contacts', 'barrierN'), usual: true, cell: (c) => decimals(c.barrier_n_eV) },
+  { ...columnOf('contacts', 'barrierP'), usual: true, cell: (c) => decimals(c.barrier_p_eV) },
+  { ...columnOf('contacts', 'source'), usual: true, cell: (c) => words(c.barrier_source === null ? '–' : SOURCE_WORDS[c.barrier_source]) },
+  { ...columnOf('contacts', 'rhoC'), usual: true, cell: resistivity },
+  { ...columnOf('contacts', 'rhoCFloor'), usual: true, cell: (c) => figure(c.rho_c_floor_ohm_cm2) },
+  { ...columnOf('contacts', 'rhoCn'), usual: false, cell: (c) => figure(c.rho_c_n_ohm_cm2) },
+  { ...columnOf('contacts', 'rhoCp'), usual: false, cell: (c) => figure(c.rho_c_p_ohm_cm2) },
+  { ...columnOf('contacts', 'saturation'), usual: false, cell: (c) => figure(c.saturation_A_cm2) },
+  { ...columnOf('contacts', 'lowering'), usual: true, cell: (c) => decimals(c.lowering_eV) },
+  { ...columnOf('contacts', 'surfaceField'), usual: true, cell: (c) => ({ lines: [fieldText(c.surface_field_V_cm)], value: c.surface_field_V_cm * KV_PER_V }) },
+  { ...columnOf('contacts', 'depletion'), usual: true, cell: (c) => figure(c.depletion_nm) },
+  { ...columnOf('contacts', 'e00'), usual: true, cell: (c) => figure(c.e00_meV) },
+  { ...columnOf('contacts', 'transport'), usual: true, cell: (c) => words(c.transport === null ? '–' : c.transport === 'field' ? 'field emission' : c.transport === 'thermionic' ? 'thermionic emission' : 'thermionic-field emission') },
 ];

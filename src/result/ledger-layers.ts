@@ -1,3 +1,4 @@
+import { columnOf } from '../quantity/quantities.ts';
 import { decimalText, differenceText, figureText, percentText } from './figure-text.ts';
 import type { Cell, Column } from './ledger.ts';
 import type { LayerResult, Regime } from './types.ts';
@@ -53,22 +54,22 @@ function textbook(layer: LayerResult): Cell {
 }
 
 export const layerColumns: Column<LayerResult>[] = [
-  { id: 'material', heading: 'Material', words: 'material and composition', unit: '', kind: 'words', usual: false, cell: (l) => ({ lines: [l.x === null ? l.material : `${l.material}, x = ${figureText(l.x, 2)}`], value: l.x === null ? l.material : `${l.material}, x = ${figureText(l.x, 2)}` }) },
-  { id: 'thickness', heading: 'Thickness', words: 'thickness', unit: 'nm', kind: 'figure', usual: false, cell: (l) => figure(l.thickness_nm, 4) },
-  { id: 'regime', heading: 'Regime', words: 'type and regime of the neutral layer', unit: '', kind: 'words', usual: true, cell: (l) => ({ lines: [regimeWords(l)], value: regimeWords(l) }) },
-  { id: 'ecMinusEf', heading: 'Ec − EF', words: 'conduction band edge above the Fermi level in the neutral layer', unit: 'eV', kind: 'figure', usual: true, cell: (l) => energy(l.ec_minus_ef_eV) },
-  { id: 'efMinusEv', heading: 'EF − Ev', words: 'Fermi level above the valence band edge in the neutral layer', unit: 'eV', kind: 'figure', usual: true, cell: (l) => energy(l.ef_minus_ev_eV) },
-  { id: 'n', heading: 'n', words: 'electrons in the neutral layer', unit: 'cm⁻³', kind: 'figure', usual: true, cell: (l) => carriers(l, l.n_cm3) },
-  { id: 'p', heading: 'p', words: 'holes in the neutral layer', unit: 'cm⁻³', kind: 'figure', usual: true, cell: (l) => carriers(l, l.p_cm3) },
-  { id: 'ionised', heading: 'Ionised, neutral / depleted', words: 'share of each active dopant that is ionised: in the neutral layer / where the layer is depleted; copied and sorted: share of all in the neutral layer', unit: '%', kind: 'figure', usual: true, cell: ionised },
-  { id: 'textbook', heading: 'Textbook Ec − EF is off by', words: 'what Boltzmann statistics with every dopant ionised would give for Ec − EF, less the figure in force', unit: 'meV', kind: 'figure', usual: true, cell: textbook },
-  { id: 'debye', heading: 'Debye length', words: 'screening length of both carriers', unit: 'nm', kind: 'figure', usual: true, cell: (l) => figure(l.debye_nm) },
-  { id: 'mobility', heading: 'Mobility', words: 'mobility of the majority carrier', unit: 'cm²/(V s)', kind: 'figure', usual: true, cell: (l) => figure(l.mobility_cm2_Vs) },
-  { id: 'resistivity', heading: 'Resistivity', words: 'resistivity of the neutral layer', unit: 'Ω cm', kind: 'figure', usual: true, cell: (l) => figure(l.resistivity_ohm_cm) },
-  { id: 'sheet', heading: 'Sheet resistance', words: 'sheet resistance of the neutral layer, depletion left out', unit: 'Ω/sq', kind: 'figure', usual: true, cell: (l) => figure(l.sheet_ohm) },
-  { id: 'gap', heading: 'Gap', words: 'band gap', unit: 'eV', kind: 'figure', usual: false, cell: (l) => energy(l.gap_eV) },
-  { id: 'affinity', heading: 'Affinity', words: 'electron affinity', unit: 'eV', kind: 'figure', usual: false, cell: (l) => energy(l.affinity_eV) },
-  { id: 'ni', heading: 'ni', words: 'intrinsic density', unit: 'cm⁻³', kind: 'figure', usual: false, cell: (l) => carriers(l, l.ni_cm3) },
-  { id: 'nc', heading: 'Nc', words: 'effective density of states of the conduction band', unit: 'cm⁻³', kind: 'figure', usual: false, cell: (l) => carriers(l, l.nc_cm3) },
-  { id: 'nv', heading: 'Nv', words: 'effective density of states of the valence band', unit: 'cm⁻³', kind: 'figure', usual: false, cell: (l) => carriers(l, l.nv_cm3) },
+  { ...columnOf('layers', 'material'), usual: false, cell: (l) => ({ lines: [l.x === null ? l.material : `${l.material}, x = ${figureText(l.x, 2)}`], value: l.x === null ? l.material : `${l.material}, x = ${figureText(l.x, 2)}` }) },
+  { ...columnOf('layers', 'thickness'), usual: false, cell: (l) => figure(l.thickness_nm, 4) },
+  { ...columnOf('layers', 'regime'), usual: true, cell: (l) => ({ lines: [regimeWords(l)], value: regimeWords(l) }) },
+  { ...columnOf('layers', 'ecMinusEf'), usual: true, cell: (l) => energy(l.ec_minus_ef_eV) },
+  { ...columnOf('layers', 'efMinusEv'), usual: true, cell: (l) => energy(l.ef_minus_ev_eV) },
+  { ...columnOf('layers', 'n'), usual: true, cell: (l) => carriers(l, l.n_cm3) },
+  { ...columnOf('layers', 'p'), usual: true, cell: (l) => carriers(l, l.p_cm3) },
+  { ...columnOf('layers', 'ionised'), usual: true, cell: ionised },
+  { ...columnOf('layers', 'textbook'), usual: true, cell: textbook },
+  { ...columnOf('layers', 'debye'), usual: true, cell: (l) => figure(l.debye_nm) },
+  { ...columnOf('layers', 'mobility'), usual: true, cell: (l) => figure(l.mobility_cm2_Vs) },
+  { ...columnOf('layers', 'resistivity'), usual: true, cell: (l) => figure(l.resistivity_ohm_cm) },
+  { ...columnOf('layers', 'sheet'), usual: true, cell: (l) => figure(l.sheet_ohm) },
+  { ...columnOf('layers', 'gap'), usual: false, cell: (l) => energy(l.gap_eV) },
+  { ...columnOf('layers', 'affinity'), usual: false, cell: (l) => energy(l.affinity_eV) },
+  { ...columnOf('layers', 'ni'), usual: false, cell: (l) => carriers(l, l.ni_cm3) },
+  { ...columnOf('layers', 'nc'), usual: false, cell: (l) => carriers(l, l.nc_cm3) },
+  { ...columnOf('layers', 'nv'), usual: false, cell: (l) => carriers(l, l.nv_cm3) },
 ];

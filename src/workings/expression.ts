@@ -78,7 +78,7 @@ export function drawn(e: Expression): MathNode {
     case 'sum':
       return mrow(...e.terms.flatMap(({ sign, of }, i) => [...(sign < 0 ? [mo('−')] : i > 0 ? [mo('+')] : []), i > 0 || sign < 0 ? inSum(of) : drawn(of)]));
     case 'product':
-      return mrow(...e.factors.flatMap((factor, i) => [...(i === 0 ? [] : [mo(factor.kind === 'number' ? '·' : '\u2062')]), isOpen(factor) ? bracketed([drawn(factor)]) : drawn(factor)]));
+      return mrow(...e.factors.flatMap((factor, i) => [...(i === 0 ? [] : [mo(factor.kind === 'number' && factor.text !== 'π' ? '·' : '\u2062')]), isOpen(factor) ? bracketed([drawn(factor)]) : drawn(factor)]));
     case 'quotient':
       return mfrac(drawn(e.over), drawn(e.under));
     case 'power':

@@ -33,7 +33,7 @@ function polarisationSteps(context: Context, point: Point, mark: string): { know
     const read = (m: { polarisation?: Polarisation }): number | undefined => m.polarisation?.[key];
     if (!isAlloy(material)) return materialAsks(context.catalogue, material.id)(`polarisation.${key}`, sign, words, read(material), unit, scale);
     const x = composition(point);
-    const [a, b] = [material.first, material.second].map((c, i) => materialAsks(context.catalogue, c.id)(`polarisation.${key}`, `${sign.replace(/_.*/, '')}_${key}${i === 0 ? 'A' : 'B'}`, words, read(c), unit, scale));
+    const [a, b] = [material.first, material.second].map((c, i) => materialAsks(context.catalogue, c.id)(`polarisation.${key}`, sign.replace(mark, i === 0 ? 'A' : 'B'), words, read(c), unit, scale));
     const k = known(sign, `${words} of ${point.layer.name}`, constants[key] as number, unit, WORKED, { scale });
     steps.push(step(k, formula`(1 - ${x}) * ${a} + ${x} * ${b}`));
     return k;

@@ -88,3 +88,8 @@ export function agree(a: number, b: number): boolean {
   if (a === b) return true;
   return Math.abs(a - b) <= 0.5 * 10 ** (1 - RESULT_DIGITS) * 10 ** Math.floor(Math.log10(Math.max(Math.abs(a), Math.abs(b))));
 }
+
+/** "Ec−EF = 0.0123 eV". */
+export function knownText(known: Known, value: string): string {
+  return `${mathText(signOf(known.sign))} = ${value}${known.unit === '' ? '' : ` ${known.unit}`}`;
+}

@@ -36,7 +36,7 @@ export function workingsOf(design: Design, result: Result, asked: Asked, set: Re
     remarks: found.remarks ?? [],
     assumptions: assumptionsInForce(context, found.rests),
     simpler: found.simpler ? { ...found.simpler, steps: distinct(found.simpler.steps) } : null,
-    accuracy: [found.solved ? `The solved potential is good to ${(1000 * q.mesh_error_V).toPrecision(2)} mV by the estimate of the mesh (${q.mesh_nodes} nodes); charge is balanced to ${q.gauss_error.toExponential(0).replace('e-', 'e−')}.` : found.steps.length > 0 ? 'Worked out for the layer by itself: no mesh error enters; the charge balances to rounding.' : '', found.accuracy ?? ''].filter((text) => text !== '').join(' '),
+    accuracy: [found.solved ? `The solved potential is good to ${(1000 * q.mesh_error_V).toPrecision(2)} mV by the estimate of the mesh (${q.mesh_nodes} nodes); charge is balanced to ${q.gauss_error.toExponential(0).replace('e-', 'e−')}.` : found.steps.some(({ kind }) => kind === 'equation') ? 'Worked out from local charge neutrality, which is closed to rounding: no mesh error enters.' : found.steps.length > 0 ? 'Worked out from local values: no mesh error enters.' : '', found.accuracy ?? ''].filter((text) => text !== '').join(' '),
     rivals: found.rivals ?? [],
   };
 }
