@@ -51,6 +51,8 @@ export class HmDesk extends LitElement {
   /** how far each panel that was opened has been fetched */ declare private states: Readonly<Record<string, 'coming' | 'there' | 'missing'>>;
   declare private sizeFor: DeskContext['sizeFor'];
 
+  /** quantity and place of the requirement that a variable is sized for */ private asked = '';
+
   constructor() {
     super();
     this.design = null;
@@ -73,7 +75,10 @@ export class HmDesk extends LitElement {
     return this.panels.some(({ id }) => id === open) ? (open as string) : this.panels[0].id;
   }
 
-  protected override willUpdate(_: PropertyValues): void {
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    // The requirement that was asked about has gone, or another one has taken its place in the list.
+    const { sizeFor } = this;
+    if (changed.has('design') && sizeFor !== null && this.askedFor(sizeFor.requirement) !== this.asked) this.sizeFor = null;
     const { open } = this;
     if (this.states[open] === undefined) void this.fetch(open);
   }
@@ -90,7 +95,13 @@ export class HmDesk extends LitElement {
     tell(this, 'hm-view', { change: { desk: { open: id } } });
   }
 
+  private askedFor(requirement: number): string {
+    const row = this.design?.requirements?.[requirement];
+    return `${row?.quantity} of ${row?.of}`;
+  }
+
   private async sizeWish({ detail }: CustomEvent<HalfmarkEvents['hm-size']>): Promise<void> {
+    this.asked = this.askedFor(detail.requirement);
     this.sizeFor = { requirement: detail.requirement, wish: (this.sizeFor?.wish ?? 0) + 1 };
     this.show('sizing');
     // The button that was pressed is hidden now: the focus goes where the work goes on.

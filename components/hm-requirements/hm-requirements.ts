@@ -93,16 +93,27 @@ export class HmRequirements extends LitElement {
       ${this.renderAdd()}`;
   }
 
+  /** One element that stays, so that a verdict is spoken when it comes; the rest stands beside it. */
   private renderState(count: number): TemplateResult | typeof nothing {
-    const { status, progress, stale, reason } = this.verdicts;
+    const { status, progress } = this.verdicts;
     if (count === 0) return nothing;
     const act = (name: 'judge-stop' | 'judge-again', words: string): TemplateResult => html`<button type="button" @click=${() => tell(this, 'hm-act', { act: name })}>${words}</button>`;
+    return html`<div class="state">
+      <p role="status">${this.said()}</p>
+      ${progress === null ? nothing : html`<progress aria-label="Judging" max=${progress.of} .value=${progress.done}></progress> ${act('judge-stop', 'Stop')}`}
+      ${progress === null && status === 'error' ? act('judge-again', 'Judge again') : nothing}
+    </div>`;
+  }
+
+  private said(): string {
+    const { status, progress, stale, reason, rows } = this.verdicts;
     const older = stale ? ' Verdicts are of the stack before the last change.' : '';
-    if (progress !== null) return html`<p class="state"><progress aria-label="Judging" max=${progress.of} .value=${progress.done}></progress> Judging the worst case.${older} ${act('judge-stop', 'Stop')}</p>`;
-    if (status === 'error') return html`<p class="state"><span role="status">${reason}${older}</span> ${act('judge-again', 'Judge again')}</p>`;
-    if (status !== 'complete') return html`<p class="state">Not judged yet.${older}</p>`;
-    const met = this.verdicts.rows.filter((row) => row.met).length;
-    return html`<p class="state" role="status">${met === this.verdicts.rows.length ? (met === 1 ? 'The one there is is met' : `All ${met} met`) : `${met} of ${this.verdicts.rows.length} met`}, judged in the worst case over temperatures and tolerances.</p>`;
+    if (progress !== null) return `Judging the worst case.${older}`;
+    if (status === 'error') return `${reason}${older}`;
+    if (status !== 'complete') return `Not judged yet.${older}`;
+    const met = rows.filter((row) => row.met).length;
+    const count = met < rows.length ? `${met} of ${rows.length} met` : met === 1 ? 'The one there is is met' : `All ${met} met`;
+    return `${count}, judged in the worst case over temperatures and tolerances.`;
   }
 
   private renderRequirement(requirement: Requirement, i: number, rows: readonly RequirementResult[]): TemplateResult {

@@ -43,14 +43,13 @@ export const styles = css`
     color: var(--faint);
   }
   .state {
+    margin-top: 0.5rem;
+  }
+  .row {
     display: flex;
     flex-wrap: wrap;
     align-items: center;
     gap: 0.5rem;
-    min-height: 28px;
-  }
-  .state:empty {
-    min-height: 0;
   }
   progress {
     width: 8rem;
@@ -65,6 +64,7 @@ export const styles = css`
   .outcome {
     font-size: 1rem;
     font-weight: 600;
+    color: var(--ink);
   }
   .sides {
     display: flex;
@@ -82,7 +82,7 @@ export const styles = css`
   .stale .picture {
     opacity: 0.8;
   }
-  .stale .outcome,
+  .outcome.stale,
   .stale .sides > :last-child {
     font-style: italic;
     color: var(--faint);

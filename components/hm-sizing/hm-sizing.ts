@@ -184,15 +184,35 @@ export class HmSizing extends LitElement {
     return value.value.complaints.find((c) => c.path === path)?.message ?? null;
   }
 
+  /** One element that stays, so that what becomes of a search is spoken. */
   private renderState(): TemplateResult {
-    const { progress, reason, status, value } = this.job;
-    if (progress !== null) {
-      return html`<p class="state"><progress aria-label="Searching" max=${progress.of} .value=${progress.done}></progress> ${progress.done} solves of about ${progress.of}. <button type="button" @click=${() => this.job.stop()}>Stop</button></p>`;
-    }
-    if (status === 'error') return html`<p class="state" role="status">${reason}</p>`;
-    if (value?.value.kind !== 'complaints') return html`<p class="state" role="status">${value === null ? 'Each value is judged in the worst case, over temperatures and tolerances: that takes a few hundred solves.' : nothing}</p>`;
+    const { progress, value } = this.job;
+    const answer = progress === null && value?.value.kind === 'sized' ? value.value : null;
+    return html`<p class=${answer === null || this.job.status === 'error' ? 'state' : `state outcome ${this.stale ? 'stale' : ''}`} role="status">${this.said(answer)}</p>
+      ${progress === null
+        ? this.renderWrong()
+        : html`<p class="row"><progress aria-label="Searching" max=${progress.of} .value=${progress.done}></progress> ${progress.done} solves of about ${progress.of}. <button type="button" @click=${() => this.job.stop()}>Stop</button></p>`}`;
+  }
+
+  private said(answer: SizedAnswer | null): string {
+    const { progress, status, reason, value } = this.job;
+    if (progress !== null) return 'Searching. The margins below are those of the corners that are known so far.';
+    if (status === 'error') return `${reason}${answer === null ? '' : ' What stands below was found before.'}`;
+    if (answer !== null) return `${this.stale ? 'For the design before the last change: ' : ''}${outcomeWords(answer)}`;
+    return value === null ? 'Each value is judged in the worst case, over temperatures and tolerances: that takes a few hundred solves.' : '';
+  }
+
+  private renderWrong(): TemplateResult | typeof nothing {
+    const { value } = this.job;
+    if (value?.value.kind !== 'complaints') return nothing;
     const rest = value.value.complaints.filter(({ path }) => path !== '--from' && path !== '--to');
     return html`<div role="alert">${rest.map(({ path, message }) => html`<p class="wrong">${/\.range$/.test(path) ? 'The range' : path}: ${message}.</p>`)}</div>`;
+  }
+
+  /** What was found belongs to another design than the one on the page. */
+  private get stale(): boolean {
+    const { value } = this.job;
+    return value?.value.kind === 'sized' && sizingBasis(value.input.design, value.value.variable) !== sizingBasis(this.design!, value.value.variable);
   }
 
   /** What is known: the answer, or what a running search has looked at so far. */
@@ -209,10 +229,9 @@ export class HmSizing extends LitElement {
     if (value?.value.kind !== 'sized') return nothing;
     const answer = value.value;
     const { design } = value.input;
-    const stale = sizingBasis(design, answer.variable) !== sizingBasis(this.design!, answer.variable);
+    const { stale } = this;
     return html`<div class="found ${stale ? 'stale' : ''}">
       ${stale ? html`<p class="stale-mark">Found for the design before the last change: find the values again.</p>` : nothing}
-      <p class="outcome" role="status">${outcomeWords(answer)}</p>
       <div class="sides">
         <div>${this.renderPicture(answer, design)}</div>
         <div>${this.renderIntervals(answer)} ${this.renderKey(answer, design)} ${stale ? nothing : this.renderPut(answer)}</div>
