@@ -1,6 +1,6 @@
 import type { SaveOutcome } from './project-store.ts';
 import type { ProjectRecord } from './record.ts';
-import type { StorageFailure } from './failure.ts';
+import { storageFailure, type StorageFailure } from './failure.ts';
 
 /** How it stands with saving. */
 export type SavingState =
@@ -79,7 +79,8 @@ export class Autosave {
   async #once(): Promise<void> {
     this.#changed = false;
     this.#become({ kind: 'saving' });
-    const outcome = await this.#save();
+    // A save that throws has not saved: what is owed stays owed.
+    const outcome = await this.#save().catch((error: unknown): SaveOutcome => ({ kind: 'failed', failure: storageFailure(error) }));
     if (outcome.kind === 'saved') {
       if (this.#changed) this.#later(DELAY_MS);
       return this.#become({ kind: this.#changed ? 'waiting' : 'saved' });

@@ -26,10 +26,14 @@ export function writeBackup(records: readonly ProjectRecord[], written: number):
 /** Reads a backup. What is whole is given back, what is not is named with the reason. */
 export function readBackup(text: string): BackupReading {
   let file: unknown;
+  const refused: { name: string; why: string }[] = [];
   try {
     file = JSON.parse(text.replace(/^\ufeff/, ''));
   } catch {
-    return { ok: false, message: 'This is no backup file: it is not JSON, or it was cut short.' };
+    const rest = salvaged(text);
+    if (rest === null) return { ok: false, message: 'This is no backup file: it is not JSON, or it was cut short.' };
+    file = rest;
+    refused.push({ name: 'What follows', why: 'the file was cut short or damaged there' });
   }
   if (typeof file !== 'object' || file === null) return { ok: false, message: 'This is no backup file.' };
   const { format, projects } = file as { format?: unknown; projects?: unknown };
@@ -38,7 +42,6 @@ export function readBackup(text: string): BackupReading {
   if (format !== BACKUP_FORMAT) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads version 1. Reload the page to get its newest version.` };
   if (!Array.isArray(projects)) return { ok: false, message: 'This backup holds no list of projects.' };
   const good: Kept[] = [];
-  const refused: { name: string; why: string }[] = [];
   for (const [i, entry] of projects.entries()) {
     const fault = recordFault(typeof entry === 'object' && entry !== null ? { ...entry, id: '', revision: 1 } : entry);
     const { check, ...kept } = (entry ?? {}) as BackupEntry;
@@ -48,6 +51,43 @@ export function readBackup(text: string): BackupReading {
     else good.push(kept);
   }
   return { ok: true, projects: good, refused };
+}
+
+/**
+ * What a file that is no whole JSON document still holds: the projects that stand complete before the fault, each with its own check for the reader to look at.
+ * @returns null when it does not begin like a backup
+ */
+function salvaged(text: string): { format: string; projects: unknown[] } | null {
+  const head = /^\ufeff?\s*\{\s*"format"\s*:\s*"(halfmark-backup\/\d+)"[^[{}]*"projects"\s*:\s*\[/.exec(text.slice(0, 500));
+  if (head === null) return null;
+  const projects: unknown[] = [];
+  for (let at = head[0].length; ; ) {
+    while (/[\s,]/.test(text[at] ?? '')) at++;
+    const end = text[at] === '{' ? endOfObject(text, at) : -1;
+    if (end < 0) return { format: head[1], projects };
+    try {
+      projects.push(JSON.parse(text.slice(at, end)));
+    } catch {
+      // The next one may be whole again.
+    }
+    at = end;
+  }
+}
+
+/** @returns the place behind the bracket that closes the object which begins at `from`; -1 where the text ends before */
+function endOfObject(text: string, from: number): number {
+  let depth = 0;
+  let quoted = false;
+  for (let at = from; at < text.length; at++) {
+    const sign = text[at];
+    if (quoted) {
+      if (sign === '\\') at++;
+      else if (sign === '"') quoted = false;
+    } else if (sign === '"') quoted = true;
+    else if (sign === '{') depth++;
+    else if (sign === '}' && --depth === 0) return at + 1;
+  }
+  return -1;
 }
 
 function checkOf({ name, created, changed, binned, designText, history, view }: Kept): string {

@@ -5,10 +5,15 @@ import { writeDesign } from '../design/write.ts';
 import type { Session } from '../state/session.ts';
 import { Autosave, type SavingState } from './autosave.ts';
 import { storageFailure } from './failure.ts';
-import { dropLastWords, leaveLastWords, takeLastWords } from './last-words.ts';
+import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords } from './last-words.ts';
 import type { Content, ProjectStore, SaveOutcome } from './project-store.ts';
-import type { ProjectRecord } from './record.ts';
+import { isNewer, type ProjectRecord } from './record.ts';
 import { Tabs, type TabNotice } from './tabs.ts';
+
+/** Time from a change to its last words, ms: a tab that dies before the save has been made loses no more than this. */
+const WORDS_MS = 50;
+/** Stands in last words for a project that the database does not know yet. */
+const NOWHERE = '';
 
 /** The project that is open. Without an id it is not in the database yet, and lives in memory only. */
 export interface OpenProject {
@@ -29,11 +34,17 @@ export class Keeper extends EventTarget {
   /** counts the projects opened, so that a save that ends late is not taken for the next one's */ #opened = 0;
   readonly #tab: string = crypto.randomUUID();
   /** the design as this tab last read or saved it */ #base = '';
+  /** the project has a name here that the database does not know yet */ #nameOwed = false;
+  /** last words of an earlier visit that are on the page and not saved yet */ #takenUp: string[] = [];
   readonly #session: Session;
   readonly #store: ProjectStore;
   readonly #tabs: Tabs;
   readonly #autosave: Autosave;
-  readonly #touch = (): void => this.#autosave.touch();
+  #wordsTimer: ReturnType<typeof setTimeout> | undefined;
+  readonly #touch = (event: Event): void => {
+    this.#autosave.touch();
+    if (event.type === 'design') this.#wordsTimer ??= setTimeout(() => this.#leaveWords(), WORDS_MS);
+  };
 
   /** @param channel  name that tabs meet under; tests give their own */
   constructor(session: Session, store: ProjectStore, channel?: string) {
@@ -61,11 +72,13 @@ export class Keeper extends EventTarget {
 
   /** Opens the project that was open last, or the one changed last. @returns false when there is none, or nothing can be read */
   async openLast(): Promise<Opened> {
+    const unknown = await this.#openUnknown();
+    if (unknown !== null) return unknown;
     try {
       const last = await this.#store.setting('last');
       const entries = (await this.#store.list()).filter((entry) => entry.binned === null);
       for (const { id } of [...entries.filter((entry) => entry.id === last), ...entries.filter((entry) => entry.id !== last)]) {
-        const opened = await this.open(id);
+        const opened = await this.open(id).catch((error: unknown): Opened => ({ ok: false, why: storageFailure(error).sentence }));
         if (opened.ok) return opened;
       }
       return { ok: false, why: 'there is no project yet' };
@@ -90,24 +103,26 @@ export class Keeper extends EventTarget {
   async create(name: string, design: Design, abandon = false): Promise<Opened> {
     const held = await this.#leave(abandon);
     if (held !== null) return held;
-    this.#opened++;
-    this.#project = { id: null, name, revision: 0 };
-    this.#session.open(design);
-    this.#autosave.reset();
-    this.#autosave.touch();
-    await this.#autosave.flush();
-    this.dispatchEvent(new Event('project'));
+    await this.#begin(name, design, []);
     return { ok: true, recovered: false };
   }
 
-  /** Gives the open project another name. */
+  /** Gives the open project another name. Never rejects: a name that cannot be written now is owed like any other change. */
   async rename(name: string): Promise<void> {
     const wish = name.trim();
     if (wish === '') return;
+    const opened = this.#opened;
     this.#project = { ...this.#project, name: wish };
-    const { id } = this.#project;
-    if (id !== null) await this.#store.rename(id, wish);
     this.dispatchEvent(new Event('project'));
+    const { id } = this.#project;
+    if (id === null) return;
+    this.#nameOwed = true;
+    try {
+      await this.#store.rename(id, wish);
+      if (opened === this.#opened && this.#project.name === wish) this.#nameOwed = false;
+    } catch {
+      this.#autosave.touch();
+    }
   }
 
   /** After a conflict: what is on this page goes on as a project of its own. */
@@ -119,7 +134,12 @@ export class Keeper extends EventTarget {
     this.#forget();
     this.#project = { id: record.id, name: record.name, revision: record.revision };
     this.#base = content.designText;
+    this.#nameOwed = false;
+    this.#dropTakenUp();
+    // What changed while the copy was written is not in it.
+    const unsaved = writeDesign(this.#session.design) !== content.designText;
     this.#autosave.reset();
+    if (unsaved) this.#autosave.touch();
     await this.#remember(record.id);
     this.dispatchEvent(new Event('project'));
   }
@@ -135,9 +155,8 @@ export class Keeper extends EventTarget {
 
   /** Saves now. For the moment when the page is hidden or left. */
   async flush(): Promise<void> {
-    const { id, revision } = this.#project;
     // A page that is being closed may not live to see the transaction's end.
-    if (this.#autosave.unsaved && id !== null) leaveLastWords({ id, revision, designText: writeDesign(this.#session.design) }, this.#tab);
+    this.#leaveWords();
     await this.#autosave.flush();
   }
 
@@ -145,18 +164,62 @@ export class Keeper extends EventTarget {
   async close(): Promise<void> {
     for (const what of ['design', 'view']) this.#session.removeEventListener(what, this.#touch);
     await this.flush();
+    clearTimeout(this.#wordsTimer);
     this.#tabs.close();
     this.#autosave.reset();
+  }
+
+  /** A new project takes the place of the one on the page, and is written. `places` are the last words that it is made of. */
+  async #begin(name: string, design: Design, places: string[]): Promise<void> {
+    this.#opened++;
+    this.#takenUp = places;
+    this.#nameOwed = false;
+    this.#project = { id: null, name, revision: 0 };
+    this.#session.open(design);
+    this.#autosave.reset();
+    this.#autosave.touch();
+    await this.#autosave.flush();
+    this.dispatchEvent(new Event('project'));
+  }
+
+  /** Projects of an earlier visit that never came into the database: the first is opened, others are added. @returns null when there is none */
+  async #openUnknown(): Promise<Opened | null> {
+    let opened: Opened | null = null;
+    for (const { place, words } of hearLastWords(NOWHERE)) {
+      const reading = readDesign(words.designText);
+      if (!reading.ok) continue;
+      const name = reading.design.title.trim() || 'untitled';
+      if (opened !== null) await this.#rescue({ name, view: {} }, place, words.designText);
+      else {
+        await this.#begin(name, reading.design, [place]);
+        opened = { ok: true, recovered: true };
+      }
+    }
+    return opened;
+  }
+
+  #leaveWords(): void {
+    clearTimeout(this.#wordsTimer);
+    this.#wordsTimer = undefined;
+    const { id, revision } = this.#project;
+    if (this.#autosave.unsaved) leaveLastWords({ id: id ?? NOWHERE, revision, designText: writeDesign(this.#session.design) }, this.#tab);
   }
 
   async #take(record: ProjectRecord): Promise<Opened> {
     const reading = readDesign(record.designText);
     if (!reading.ok) {
       const why = complaintLine(reading.complaints[0]);
-      await this.#store.setAside(record.id, why);
-      return { ok: false, why: `"${record.name}" can no longer be read (${why}). It has been set aside as it is.` };
+      // It is whole, and the newer page will read it again.
+      if (isNewer(record.designText)) return { ok: false, why: `"${record.name}" ${why.replace(/^format:? /, '')}. Reload the page to get its newest version; the project stays as it is.` };
+      const aside = await this.#store.setAside(record.id, why).then(
+        () => 'It has been set aside as it is.',
+        () => 'It stays where it is.',
+      );
+      return { ok: false, why: `"${record.name}" can no longer be read (${why}). ${aside}` };
     }
     this.#opened++;
+    this.#nameOwed = false;
+    this.#takenUp = [];
     this.#project = { id: record.id, name: record.name, revision: record.revision };
     this.#base = record.designText;
     this.#session.open(reading.design, record);
@@ -172,13 +235,36 @@ export class Keeper extends EventTarget {
    */
   async #recover(record: ProjectRecord): Promise<boolean> {
     let recovered = false;
-    for (const { revision, designText } of takeLastWords(record.id)) {
-      const reading = readDesign(designText);
-      if (!reading.ok || designText === record.designText) continue;
-      if (revision === record.revision && !recovered) recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
-      else await this.#store.create(`${record.name} (unsaved changes)`, { designText, history: { past: [], future: [] }, view: record.view });
+    for (const { place, words } of hearLastWords(record.id)) {
+      const reading = readDesign(words.designText);
+      if (!reading.ok || words.designText === record.designText) forgetLastWords(place);
+      else if (words.revision === record.revision && !recovered) {
+        recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
+        // They stay where they are until the design that holds them now is saved.
+        this.#takenUp.push(place);
+      } else await this.#rescue(record, place, words.designText);
     }
     return recovered;
+  }
+
+  /** Makes a project of its own of what a losing tab left; where that cannot be written, it stays for the next visit. */
+  async #rescue({ name, view }: Pick<ProjectRecord, 'name' | 'view'>, place: string, designText: string): Promise<void> {
+    try {
+      await this.#store.create(`${name} (unsaved changes)`, { designText, history: { past: [], future: [] }, view });
+      forgetLastWords(place);
+    } catch {
+      // Told by the next save, which fails for the same reason.
+    }
+  }
+
+  #dropWords(): void {
+    clearTimeout(this.#wordsTimer);
+    this.#wordsTimer = undefined;
+    for (const id of [this.#project.id ?? NOWHERE, NOWHERE]) dropLastWords(id, this.#tab);
+  }
+
+  #dropTakenUp(): void {
+    for (const place of this.#takenUp.splice(0)) forgetLastWords(place);
   }
 
   /** @returns null when nothing is unsaved any more, else why the present project cannot be left yet */
@@ -191,7 +277,8 @@ export class Keeper extends EventTarget {
 
   /** The person has decided about what this tab had not saved. */
   #forget(): void {
-    if (this.#project.id !== null) dropLastWords(this.#project.id, this.#tab);
+    this.#dropWords();
+    this.#dropTakenUp();
   }
 
   #content(): Content {
@@ -208,11 +295,20 @@ export class Keeper extends EventTarget {
     const { id } = this.#project;
     if (outcome.kind === 'saved' && id !== null) {
       this.#base = content.designText;
-      dropLastWords(id, this.#tab);
+      // What changed while this was written is still owed.
+      if (writeDesign(this.#session.design) === content.designText) this.#dropWords();
+      this.#dropTakenUp();
       this.#project = { ...this.#project, revision: outcome.revision };
       this.#tabs.tell({ kind: 'saved', id, revision: outcome.revision });
+      if (this.#nameOwed) await this.#payName(id);
     }
     return outcome;
+  }
+
+  async #payName(id: string): Promise<void> {
+    const { name } = this.#project;
+    await this.#store.rename(id, name);
+    if (this.#project.name === name) this.#nameOwed = false;
   }
 
   async #saveOnTop(id: string, content: Content): Promise<SaveOutcome> {

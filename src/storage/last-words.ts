@@ -23,22 +23,29 @@ export function leaveLastWords(words: LastWords, tab: string, store: Storage = l
 
 /** What they said has been saved after all. */
 export function dropLastWords(id: string, tab: string, store: Storage = localStorage): void {
+  forgetLastWords(prefix(id) + tab, store);
+}
+
+/** Those of one project, of whichever tab, each with the place where they stand. What cannot be read is removed and left out. */
+export function hearLastWords(id: string, store: Storage = localStorage): { place: string; words: LastWords }[] {
   try {
-    store.removeItem(prefix(id) + tab);
+    const places = Array.from({ length: store.length }, (_, i) => store.key(i)!).filter((key) => key.startsWith(prefix(id)));
+    return places.flatMap((place) => {
+      const words = read(store.getItem(place) ?? '');
+      if (words === null) store.removeItem(place);
+      return words === null ? [] : [{ place, words }];
+    });
   } catch {
-    // A browser that keeps nothing has nothing to drop.
+    return [];
   }
 }
 
-/** Reads and removes those of one project, of whichever tab. What cannot be read is left out. */
-export function takeLastWords(id: string, store: Storage = localStorage): LastWords[] {
+/** Removes what stands at a place: to be called once it is kept elsewhere, or it would be lost between the two. */
+export function forgetLastWords(place: string, store: Storage = localStorage): void {
   try {
-    const keys = Array.from({ length: store.length }, (_, i) => store.key(i)!).filter((key) => key.startsWith(prefix(id)));
-    const texts = keys.map((key) => store.getItem(key) ?? '');
-    for (const key of keys) store.removeItem(key);
-    return texts.map(read).filter((words) => words !== null);
+    store.removeItem(place);
   } catch {
-    return [];
+    // A browser that keeps nothing has nothing to forget.
   }
 }
 

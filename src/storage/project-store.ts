@@ -11,6 +11,9 @@ export type SaveOutcome =
   /** somebody else saved in between, or (null) deleted it; nothing was written */ | { kind: 'conflict'; other: ProjectRecord | null }
   | { kind: 'failed'; failure: StorageFailure };
 
+/** When a project that comes from elsewhere was made, changed, and put in the bin. */
+export type NewTimes = Partial<Pick<ProjectRecord, 'created' | 'changed' | 'binned'>>;
+
 export interface Damaged {
   key: number;
   found: number;
@@ -36,32 +39,46 @@ export class ProjectStore {
 
   /** Projects, the one changed last first; those in the bin are among them. */
   async list(): Promise<ProjectEntry[]> {
-    const records = await this.#readAll();
+    const records = await this.all();
     return records.map(({ id, name, created, changed, binned }) => ({ id, name, created, changed, binned })).sort((a, b) => b.changed - a.changed);
   }
 
   /** @returns null when there is none, or it was damaged and has been set aside */
   async get(id: string): Promise<ProjectRecord | null> {
-    const value = await (await this.#db()).get('projects', id);
+    const value = await this.#with((db) => db.get('projects', id));
     if (value === undefined) return null;
     if (recordFault(value) === null) return value as ProjectRecord;
-    await this.setAside(id);
+    await this.#tidyAway(id);
     return null;
   }
 
-  /** Every whole project, for a backup. */
+  /** Every whole project, for a backup. What is damaged is set aside on the way. */
   async all(): Promise<ProjectRecord[]> {
-    return this.#readAll();
+    const [keys, values] = await this.#with((db) => Promise.all([db.getAllKeys('projects'), db.getAll('projects')]));
+    for (const [i, value] of values.entries()) if (recordFault(value) !== null) await this.#tidyAway(keys[i]);
+    return values.filter((value): value is ProjectRecord => recordFault(value) === null);
   }
 
   /** Adds a project under a name that is not taken yet. */
-  async create(name: string, content: Content, times: { created?: number; changed?: number; binned?: number | null } = {}): Promise<ProjectRecord> {
+  async create(name: string, content: Content, times: NewTimes = {}): Promise<ProjectRecord> {
+    return (await this.createAll([{ name, content, times }]))[0];
+  }
+
+  /** Adds several in one transaction: all of them, or none. */
+  async createAll(projects: readonly { name: string; content: Content; times?: NewTimes }[]): Promise<ProjectRecord[]> {
     const now = this.#now();
-    const tx = (await this.#db()).transaction('projects', 'readwrite');
-    const taken = (await tx.store.getAll()).map((value) => (recordFault(value) === null ? (value as ProjectRecord).name : ''));
-    const record: ProjectRecord = { id: crypto.randomUUID(), name: freeName(name.trim() || 'untitled', taken), created: now, changed: now, revision: 1, binned: null, ...content, ...times };
-    await Promise.all([tx.store.add(record), tx.done]);
-    return record;
+    return this.#with((db) =>
+      written(db.transaction('projects', 'readwrite'), async ({ store }) => {
+        const taken = (await store.getAll()).map((value) => (recordFault(value) === null ? (value as ProjectRecord).name : ''));
+        const records = projects.map(({ name, content, times = {} }): ProjectRecord => {
+          const free = freeName(name.trim() || 'untitled', taken);
+          taken.push(free);
+          return { id: crypto.randomUUID(), name: free, created: now, changed: now, revision: 1, binned: null, ...content, ...times };
+        });
+        for (const record of records) await store.add(record);
+        return records;
+      }),
+    );
   }
 
   /**
@@ -69,18 +86,17 @@ export class ProjectStore {
    */
   async save(id: string, revision: number, content: Content): Promise<SaveOutcome> {
     try {
-      const tx = (await this.#db()).transaction('projects', 'readwrite');
-      const current = await tx.store.get(id);
-      const fault = recordFault(current);
-      if (fault !== null || (current as ProjectRecord).revision !== revision) {
-        await tx.done;
-        return { kind: 'conflict', other: fault === null ? (current as ProjectRecord) : null };
-      }
-      const next: ProjectRecord = { ...(current as ProjectRecord), ...content, changed: this.#now(), revision: revision + 1 };
-      await Promise.all([tx.store.put(next), tx.done]);
-      return { kind: 'saved', revision: next.revision };
+      return await this.#with((db) =>
+        written(db.transaction('projects', 'readwrite'), async ({ store }): Promise<SaveOutcome> => {
+          const current = await store.get(id);
+          const fault = recordFault(current);
+          if (fault !== null || (current as ProjectRecord).revision !== revision) return { kind: 'conflict', other: fault === null ? (current as ProjectRecord) : null };
+          const next: ProjectRecord = { ...(current as ProjectRecord), ...content, changed: this.#now(), revision: revision + 1 };
+          await store.put(next);
+          return { kind: 'saved', revision: next.revision };
+        }),
+      );
     } catch (error) {
-      if (storageFailure(error).code === 'lost') this.#opening = null;
       return { kind: 'failed', failure: storageFailure(error) };
     }
   }
@@ -107,41 +123,44 @@ export class ProjectStore {
 
   /** Deletes for good; only what is in the bin. @returns whether it did */
   async delete(id: string): Promise<boolean> {
-    const tx = (await this.#db()).transaction('projects', 'readwrite');
-    const value = await tx.store.get(id);
-    const inBin = recordFault(value) === null && (value as ProjectRecord).binned !== null;
-    if (inBin) await tx.store.delete(id);
-    await tx.done;
-    return inBin;
+    return this.#with((db) =>
+      written(db.transaction('projects', 'readwrite'), async ({ store }) => {
+        const value = await store.get(id);
+        const inBin = recordFault(value) === null && (value as ProjectRecord).binned !== null;
+        if (inBin) await store.delete(id);
+        return inBin;
+      }),
+    );
   }
 
   /** What was set aside because it could not be read. */
   async damaged(): Promise<Damaged[]> {
-    return (await (await this.#db()).getAll('damaged')) as unknown as Damaged[];
+    return (await this.#with((db) => db.getAll('damaged'))) as unknown as Damaged[];
   }
 
   async deleteDamaged(key: number): Promise<void> {
-    await (await this.#db()).delete('damaged', key);
+    await this.#with((db) => db.delete('damaged', key));
   }
 
   /** Sets a record aside as it is, also one whose design turned out unreadable when it was opened. */
   async setAside(id: string, why?: string): Promise<void> {
-    const tx = (await this.#db()).transaction(['projects', 'damaged'], 'readwrite');
-    const projects = tx.objectStore('projects');
-    const value = await projects.get(id);
-    if (value !== undefined) {
-      await tx.objectStore('damaged').add({ found: this.#now(), why: why ?? recordFault(value) ?? 'it could not be opened', text: rawText(value) });
-      await projects.delete(id);
-    }
-    await tx.done;
+    await this.#with((db) =>
+      written(db.transaction(['projects', 'damaged'], 'readwrite'), async (tx) => {
+        const projects = tx.objectStore('projects');
+        const value = await projects.get(id);
+        if (value === undefined) return;
+        await tx.objectStore('damaged').add({ found: this.#now(), why: why ?? recordFault(value) ?? 'it could not be opened', text: rawText(value) } as never);
+        await projects.delete(id);
+      }),
+    );
   }
 
   async setting(key: string): Promise<unknown> {
-    return (await this.#db()).get('settings', key);
+    return this.#with((db) => db.get('settings', key));
   }
 
   async setSetting(key: string, value: unknown): Promise<void> {
-    await (await this.#db()).put('settings', value, key);
+    await this.#with((db) => db.put('settings', value, key));
   }
 
   /** Closes the connection; the next call opens it again. */
@@ -163,25 +182,53 @@ export class ProjectStore {
     return this.#opening;
   }
 
-  async #readAll(): Promise<ProjectRecord[]> {
-    const tx = (await this.#db()).transaction(['projects', 'damaged'], 'readwrite');
-    const good: ProjectRecord[] = [];
-    for (let cursor = await tx.objectStore('projects').openCursor(); cursor; cursor = await cursor.continue()) {
-      const fault = recordFault(cursor.value);
-      if (fault === null) good.push(cursor.value as ProjectRecord);
-      else {
-        await tx.objectStore('damaged').add({ found: this.#now(), why: fault, text: rawText(cursor.value) } as never);
-        await cursor.delete();
-      }
+  /** Works with the database. A connection that turns out to be cut is let go of, so that the next call opens another. */
+  async #with<T>(work: (db: Database) => Promise<T>): Promise<T> {
+    const opening = this.#db();
+    const db = await opening;
+    try {
+      return await work(db);
+    } catch (error) {
+      if (storageFailure(error).code === 'lost' && this.#opening === opening) await this.close();
+      throw error;
     }
-    await tx.done;
-    return good;
+  }
+
+  /** Sets a damaged record aside if there is room for it; else it stays where it is, in nobody's way. */
+  async #tidyAway(id: string): Promise<void> {
+    await this.setAside(id).catch(() => {});
   }
 
   async #change(id: string, change: (record: ProjectRecord) => ProjectRecord): Promise<void> {
-    const tx = (await this.#db()).transaction('projects', 'readwrite');
-    const value = await tx.store.get(id);
-    if (recordFault(value) === null) await tx.store.put(change(value as ProjectRecord));
-    await tx.done;
+    await this.#with((db) =>
+      written(db.transaction('projects', 'readwrite'), async ({ store }) => {
+        const value = await store.get(id);
+        if (recordFault(value) === null) await store.put(change(value as ProjectRecord));
+      }),
+    );
   }
+}
+
+/** Does the work of one transaction and waits until it is on the disk. Work that fails takes back what it had written. */
+async function written<Tx extends { done: Promise<void>; abort(): void }, T>(tx: Tx, work: (tx: Tx) => Promise<T>): Promise<T> {
+  // Heard here, whatever becomes of the work: what the work itself throws says more.
+  const done = tx.done.then(
+    () => null,
+    (error: unknown) => ({ error }),
+  );
+  let value: T;
+  try {
+    value = await work(tx);
+  } catch (error) {
+    try {
+      tx.abort();
+    } catch {
+      // It has ended already.
+    }
+    await done;
+    throw error;
+  }
+  const failed = await done;
+  if (failed !== null) throw failed.error;
+  return value;
 }

@@ -1,3 +1,4 @@
+import { DESIGN_FORMAT } from '../design/types.ts';
 import type { HistoryRecord } from '../state/history.ts';
 import type { View } from '../state/view.ts';
 
@@ -31,6 +32,16 @@ export function recordFault(value: unknown): string | null {
     return 'its design is cut short or garbled';
   }
   return null;
+}
+
+/** Whether a design was written by a newer program than this one: it is whole, and only cannot be read here. */
+export function isNewer(designText: string): boolean {
+  const version = (format: string): number => Number(/^halfmark-design\/(\d{1,6})$/.exec(format)?.[1] ?? 0);
+  try {
+    return version(String((JSON.parse(designText) as { format?: unknown } | null)?.format)) > version(DESIGN_FORMAT);
+  } catch {
+    return false;
+  }
 }
 
 /** Anything as text, for a person who wants to rescue what a damaged record holds. */

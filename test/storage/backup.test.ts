@@ -22,6 +22,15 @@ describe('a backup', () => {
     expect(reading.ok && reading.projects.map(({ name }) => name)).toEqual(['two']);
   });
 
+  it('that was cut short still gives back every project that stands before the cut, and says that more followed', () => {
+    const second = file.indexOf('"name": "two"');
+    for (let cut = second; cut < file.length - 8; cut += 7) {
+      const reading = readBackup(file.slice(0, cut));
+      expect(reading.ok && reading.projects.map(({ name }) => name), String(cut)).toEqual(['one']);
+      expect(reading.ok && reading.refused.map(({ why }) => why).join()).toContain('cut short');
+    }
+  });
+
   it('gives back nothing that it was not given, however it is cut or garbled', () => {
     const whole = readBackup(file);
     const known = whole.ok ? whole.projects.map((project) => JSON.stringify(project)) : [];

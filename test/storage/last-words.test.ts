@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { dropLastWords, leaveLastWords, takeLastWords } from '../../src/storage/last-words.ts';
+import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords } from '../../src/storage/last-words.ts';
 
 /** The part of the browser's small store that is used. */
 function shelf(full = false): Storage {
@@ -10,17 +10,19 @@ function shelf(full = false): Storage {
   };
   return { get length() { return map.size; }, key: (i: number) => [...map.keys()][i] ?? null, getItem: (key: string) => map.get(key) ?? null, setItem, removeItem: (key: string) => void map.delete(key) } as Storage;
 }
+const heard = (id: string, store: Storage) => hearLastWords(id, store).map(({ words }) => words);
 const words = (revision: number) => ({ id: 'a', revision, designText: '{}' });
 
 describe('what was not saved when the page went away', () => {
-  it('is there at the next visit, once, from every tab of that project and no other', () => {
+  it('is there at the next visit, from every tab of that project and no other, until it is kept elsewhere', () => {
     const store = shelf();
     expect(leaveLastWords(words(3), 'one', store)).toBe(true);
     leaveLastWords(words(2), 'two', store);
     leaveLastWords({ ...words(9), id: 'b' }, 'one', store);
-    expect(takeLastWords('a', store)).toEqual([words(3), words(2)]);
-    expect(takeLastWords('a', store)).toEqual([]);
-    expect(takeLastWords('b', store)).toHaveLength(1);
+    expect(heard('a', store)).toEqual([words(3), words(2)]);
+    forgetLastWords(hearLastWords('a', store)[0].place, store);
+    expect(heard('a', store)).toEqual([words(2)]);
+    expect(heard('b', store)).toHaveLength(1);
   });
 
   it('is dropped by the tab that saved it after all, and only its own', () => {
@@ -28,13 +30,13 @@ describe('what was not saved when the page went away', () => {
     leaveLastWords(words(3), 'one', store);
     leaveLastWords(words(2), 'two', store);
     dropLastWords('a', 'one', store);
-    expect(takeLastWords('a', store)).toEqual([words(2)]);
+    expect(heard('a', store)).toEqual([words(2)]);
   });
 
   it('is given up without harm when the browser refuses or gives back something else', () => {
     expect(leaveLastWords(words(3), 'one', shelf(true))).toBe(false);
     const store = shelf();
     for (const [i, bad] of ['nonsense', 'null', '{"id":1}'].entries()) store.setItem(`halfmark:unsaved:a:${i}`, bad);
-    expect(takeLastWords('a', store)).toEqual([]);
+    expect(heard('a', store)).toEqual([]);
   });
 });
