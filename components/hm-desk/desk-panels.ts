@@ -4,6 +4,7 @@ import type { Design } from '../../src/design/types.ts';
 import type { Result } from '../../src/result/types.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
+import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 import type { SizingView } from '../hm-sizing/sizing-view.ts';
 import type { HalfmarkEvents } from '../shared/events.ts';
@@ -54,5 +55,11 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     title: 'Sizing',
     load: () => import('../hm-sizing/hm-sizing.ts'),
     draw: ({ design, complaints, view, run, sizeFor, styleName }) => html`<hm-sizing .design=${design} .complaints=${complaints} .view=${(view.sizing ?? {}) as SizingView} .run=${run} .wish=${sizeFor} .styleName=${styleName}></hm-sizing>`,
+  },
+  {
+    id: 'contacts',
+    title: 'Contacts',
+    load: () => import('../hm-contacts/hm-contacts.ts'),
+    draw: ({ design, complaints, result, stale, view, run, styleName }) => html`<hm-contacts .design=${design} .complaints=${complaints} .result=${result} .stale=${stale} .view=${(view.metals ?? {}) as MetalsView} .run=${run} .styleName=${styleName}></hm-contacts>`,
   },
 ];

@@ -47,6 +47,7 @@ export class ContactSurface {
     readonly temperatureRange: readonly [number, number] | null,
     readonly majority: 'n' | 'p',
     readonly tolerances: Tolerances,
+    /** strictest upper limit of the contact resistivity here, ohm cm^2; null without one */ readonly limit: number | null,
   ) {
     const contact = design[side];
     const { carrier, pinning, imageForce } = contact.kind === 'barrier' ? contact : ({ imageForce: true } as BarrierInput);
@@ -64,10 +65,11 @@ export class ContactSurface {
     const reading = toStack({ ...design, [side]: standIn(undefined) }, set);
     if (!reading.ok) return reading.complaints;
     const { stack, temperatureRange } = reading;
+    const limits = reading.requirements.flatMap(({ quantity, target, bound, limit }) => (quantity === 'contactResistivity' && bound === 'max' && target.index === (side === 'top' ? 0 : 1) ? [limit as number] : []));
     try {
       const layer = surfaceLayer(stack, side);
       const figures = layerFigures(layer, stack.temperature, stack.assumptions, false);
-      return new ContactSurface(design, side, set, stack, temperatureRange, figures.p > figures.n ? 'p' : 'n', tolerances);
+      return new ContactSurface(design, side, set, stack, temperatureRange, figures.p > figures.n ? 'p' : 'n', tolerances, limits.length === 0 ? null : Math.min(...limits));
     } catch (error) {
       // What only the physics refuses, such as a gap that closes at this temperature.
       if (!(error instanceof RangeError)) throw error;

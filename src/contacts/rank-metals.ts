@@ -8,6 +8,7 @@ import type { Tolerances, Uncertainty } from '../requirements/uncertainties.ts';
 import { cornerWords, temperatureWriter } from '../requirements/words.ts';
 import { NOISE, worstCases, type Readable, type WorstCase } from '../requirements/worst-case.ts';
 import { barrierValues, heightsOf, valueInForce, type BarrierValue } from './barrier-values.ts';
+import { orderedRows } from './metal-order.ts';
 import { ContactSurface, isBarrierOf, type BarrierInput, type Found, type Side } from './contact-surface.ts';
 
 export interface RankOptions {
@@ -54,6 +55,7 @@ export interface Ranking {
   /** K, coldest first; null where the design states none */ temperature_range_K: [number, number] | null;
   /** tolerances that move the contact resistivity, as text: "barrier 50 meV" */ tolerances: string[];
   /** whose barrier is taken where both were measured */ carrier: 'n' | 'p';
+  /** the least that a requirement allows this end; null without one */ limit_ohm_cm2: number | null;
   /** best worst case first, then those without a figure, by name */ rows: MetalRow[];
   /** what holds for all rows */ notes: string[];
   /** solves that it took */ evaluations: number;
@@ -90,16 +92,10 @@ export function* rankMetals(design: Design, options: RankOptions): Generator<Ran
   const { temperature } = surface.stack;
   return {
     kind: 'ranked', side, layer: surface.layer.name, material: material.id, majority: surface.majority, temperature_K: temperature,
-    temperature_range_K: surface.temperatureRange === null ? null : [...surface.temperatureRange], carrier: surface.stated.carrier ?? 'n',
+    temperature_range_K: surface.temperatureRange === null ? null : [...surface.temperatureRange], carrier: surface.stated.carrier ?? 'n', limit_ohm_cm2: surface.limit,
     tolerances: surface.uncertainties.map(({ label, tolerance }) => `${label} ${tolerance}`),
-    rows: sortedByWorst(rows), notes: notesOf(surface), evaluations: surface.evaluations,
+    rows: orderedRows(rows, { by: 'worst', descending: false }, surface.majority), notes: notesOf(surface), evaluations: surface.evaluations,
   };
-}
-
-/** Best worst case first; a metal without one after those that have it. */
-export function sortedByWorst(rows: readonly MetalRow[]): MetalRow[] {
-  const value = (row: MetalRow): number => row.worst_ohm_cm2 ?? Infinity;
-  return [...rows].sort((a, b) => (value(a) === value(b) ? a.metal.localeCompare(b.metal) : value(a) - value(b)));
 }
 
 /** Only those uncertainties that move a contact on this surface, so that each metal takes few solves; the barrier's always. */

@@ -61,7 +61,7 @@ function besideEf(e: number): string {
   return Math.abs(e) < 5e-4 ? 'at EF' : `${energyText(Math.abs(e))} ${e > 0 ? 'above' : 'below'} EF`;
 }
 
-/** "2e-6 %" or "below 0.001 %" */
+/** "0.2 %", or "better than 0.001 %" */
 export function errorText(share: number): string {
   return share < 1e-5 ? 'better than 0.001 %' : `${figureText(100 * share, 1)} %`;
 }

@@ -1,0 +1,232 @@
+import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import type { BarrierValue } from '../../src/contacts/barrier-values.ts';
+import { orderedRows, rankingBasis, type MetalOrder, type OrderBy } from '../../src/contacts/metal-order.ts';
+import { bandWords, majorityBarrier, rankingSentence, regimeOf, valueOf, valueWords } from '../../src/contacts/metal-words.ts';
+import type { MetalRow, Ranking } from '../../src/contacts/rank-metals.ts';
+import type { Design } from '../../src/design/types.ts';
+import { decimalText, figureText } from '../../src/result/figure-text.ts';
+import { setContact, type Side } from '../../src/state/commands/index.ts';
+import type { RunJob } from '../../src/workers/job-client.ts';
+import { JobController } from '../hm-desk/job-controller.ts';
+import { tell } from '../shared/events.ts';
+import { look } from '../shared/look.ts';
+import { resistivitySpan, spanScale, type SpanScale } from './resistivity-span.ts';
+import { styles } from './hm-metals.styles.ts';
+
+/** What the project remembers of the ranking. */
+export interface MetalsView {
+  side?: Side;
+  order?: MetalOrder;
+}
+
+const USUAL: MetalOrder = { by: 'worst', descending: false };
+
+/** Metals ranked on one end; what is shown belongs to `design` and `side`. */
+interface Shown {
+  rows: MetalRow[];
+  majority: Ranking['majority'];
+  limit: number | null;
+  ranking: Ranking | null;
+}
+
+/**
+ * Every metal on one end of the stack, by the worst contact resistivity that it would have there. The values of its barrier stand side by side; each can be run
+ * with, and the metal be put on the stack with it.
+ *
+ * @fires hm-edit  the chosen metal on the stack
+ * @fires hm-view  { metals: MetalsView }
+ * @fires hm-say
+ */
+export class HmMetals extends LitElement {
+  static override styles = [look, styles];
+  static override properties = {
+    design: { attribute: false },
+    view: { attribute: false },
+    run: { attribute: false },
+    open: { state: true },
+    rivals: { state: true },
+  };
+
+  declare design: Design | null;
+  declare view: MetalsView;
+  declare run: RunJob | null;
+  /** metal whose values are shown */ declare private open: string | null;
+  /** rows that were run with another value, by metal; of the last ranking */ declare private rivals: ReadonlyMap<string, MetalRow>;
+
+  private readonly job = new JobController<'metals'>(this, 'metals');
+  private readonly again = new JobController<'metals'>(this, 'metals');
+  private taken: unknown = null;
+
+  constructor() {
+    super();
+    this.design = null;
+    this.view = {};
+    this.run = null;
+    this.open = null;
+    this.rivals = new Map();
+  }
+
+  protected override willUpdate(_: PropertyValues<this>): void {
+    const { value } = this.again;
+    if (value === null || value === this.taken) return;
+    this.taken = value;
+    if (value.value.kind !== 'ranked') return;
+    const [row] = value.value.rows;
+    if (row === undefined) return;
+    this.rivals = new Map([...this.rivals, [row.metal, row]]);
+    tell(this, 'hm-say', { text: `${row.metal} with ${decimalText(majorityBarrier(row, value.value.majority))} eV: worst ${row.worst_ohm_cm2 === null ? 'not known' : `${figureText(row.worst_ohm_cm2)} ohm cm²`}.` });
+  }
+
+  private get side(): Side {
+    const { top, bottom } = this.design!;
+    return this.view.side ?? (top.kind !== 'barrier' && bottom.kind === 'barrier' ? 'bottom' : 'top');
+  }
+
+  private get order(): MetalOrder {
+    return this.view.order ?? USUAL;
+  }
+
+  private change(view: MetalsView): void {
+    this.view = { ...this.view, ...view };
+    tell(this, 'hm-view', { change: { metals: this.view } });
+  }
+
+  private rank(): void {
+    this.again.stop();
+    this.rivals = new Map();
+    this.open = null;
+    void this.job.start(this.run!, { design: this.design!, options: { side: this.side } });
+  }
+
+  private rerun({ metal }: MetalRow, { key }: BarrierValue): void {
+    const asked = this.job.input!;
+    void this.again.start(this.run!, { design: asked.design, options: { side: asked.options.side, rerun: { metal, key } } });
+  }
+
+  private choose({ metal, contact }: MetalRow, side: Side): void {
+    tell(this, 'hm-edit', { next: setContact(this.design!, side, contact), label: `${metal} as the ${side} contact` });
+    tell(this, 'hm-say', { text: `${metal} is the ${side} contact now.` });
+  }
+
+  override render(): TemplateResult | typeof nothing {
+    if (this.design === null || this.run === null) return nothing;
+    return html`<h3>Metals on this surface</h3>${this.renderAsk()} ${this.renderState()} ${this.renderShown()}`;
+  }
+
+  private renderAsk(): TemplateResult {
+    const { layers } = this.design!;
+    const names = { top: layers[0].name, bottom: layers[layers.length - 1].name };
+    return html`<div class="ask" role="group" aria-label="What to rank">
+      <label>On the <select @change=${(e: Event) => this.change({ side: (e.target as HTMLSelectElement).value as Side })}>
+        ${(['top', 'bottom'] as const).map((side) => html`<option value=${side} .selected=${side === this.side}>${side}: ${names[side]}</option>`)}
+      </select></label>
+      <button type="button" class="go" ?disabled=${this.job.progress !== null} @click=${() => this.rank()}>Rank the metals</button>
+    </div>`;
+  }
+
+  private renderState(): TemplateResult | typeof nothing {
+    const { progress, status, reason, value } = this.job;
+    if (progress !== null) {
+      return html`<p class="state"><progress aria-label="Ranking" max=${progress.of} .value=${progress.done}></progress> ${Math.max(0, progress.done - 1)} of ${progress.of - 1} metals. <button type="button" @click=${() => this.job.stop()}>Stop</button></p>`;
+    }
+    if (status === 'error') return html`<p class="state" role="status">${reason}</p>`;
+    if (value?.value.kind === 'complaints') return html`<div role="alert">${value.value.complaints.map(({ path, message }) => html`<p class="wrong">${path === '' ? '' : `${path}: `}${message}.</p>`)}</div>`;
+    if (value === null) return html`<p class="state" role="status">Each metal of the presets and of this design, with its measured, pinned or ideal barrier, judged over the temperatures and the tolerances.</p>`;
+    return nothing;
+  }
+
+  /** What is known: the ranking, or the metals that a running one has come to; a stopped one keeps those. */
+  private shown(): Shown | null {
+    const { progress, status, value, seen } = this.job;
+    const done = value?.value.kind === 'ranked' ? value.value : null;
+    if (progress === null && status !== 'error' && done !== null) return { rows: done.rows, majority: done.majority, limit: done.limit_ohm_cm2, ranking: done };
+    if (seen.length === 0) return null;
+    // Only the end of a ranking says which carrier is the majority: until then the one whose barrier is taken stands in.
+    return { rows: seen, majority: seen[0].contact.carrier ?? 'n', limit: null, ranking: null };
+  }
+
+  private renderShown(): TemplateResult | typeof nothing {
+    const shown = this.shown();
+    const asked = this.job.input;
+    if (shown === null || asked === null) return nothing;
+    const { side } = asked.options;
+    const stale = rankingBasis(asked.design, side) !== rankingBasis(this.design!, side);
+    const rows = orderedRows(shown.rows.map((row) => this.rivals.get(row.metal) ?? row), this.order, shown.majority);
+    const scale = spanScale(rows, shown.limit);
+    return html`<div class=${stale ? 'stale' : ''}>
+      ${stale ? html`<p class="stale-mark">Ranked for the design before the last change: rank again.</p>` : nothing}
+      ${shown.ranking === null ? nothing : html`<p role="status">${rankingSentence(shown.ranking)}</p>`}
+      ${(shown.ranking?.notes ?? []).map((note) => html`<p class="wrong">${note}.</p>`)}
+      <div class="scroll" role="region" aria-label="Metals, figures" tabindex="0">
+        <table>
+          <thead><tr>
+            ${this.heading('metal', 'Metal', '')}
+            ${this.heading('barrier', shown.majority === 'n' ? 'φBn' : 'φBp', 'eV')}
+            <th scope="col">Barrier</th>
+            ${this.heading('rho', 'Contact resistivity', 'Ω cm²')}
+            <th scope="col" class="figure">Least … most<span class="unit">Ω cm²</span></th>
+            ${this.heading('worst', 'Worst', 'Ω cm²')}
+            <th scope="col"><span class="spoken">Drawn</span></th>
+            ${this.heading('regime', 'Regime', '')}
+            <th scope="col"><span class="spoken">Acts</span></th>
+          </tr></thead>
+          <tbody>${rows.map((row) => this.renderRow(row, shown, scale, side, stale))}</tbody>
+        </table>
+      </div>
+    </div>`;
+  }
+
+  private heading(by: OrderBy, words: string, unit: string): TemplateResult {
+    const { order } = this;
+    const here = order.by === by;
+    const figure = by !== 'metal' && by !== 'regime';
+    return html`<th scope="col" class=${figure ? 'figure' : ''} aria-sort=${here ? (order.descending ? 'descending' : 'ascending') : 'none'}>
+      <button type="button" title="press to sort" @click=${() => this.change({ order: { by, descending: here && !order.descending } })}>${words}<span class="arrow" aria-hidden="true">${here ? (order.descending ? '↓' : '↑') : ''}</span>${unit === '' ? nothing : html`<span class="unit">${unit}</span>`}</button>
+    </th>`;
+  }
+
+  private renderRow(row: MetalRow, { majority, limit }: Shown, scale: SpanScale | null, side: Side, stale: boolean): TemplateResult {
+    const contact = this.design![side];
+    const present = contact.kind === 'barrier' && contact.metal === row.metal;
+    const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack</b>` : nothing}</span></th>`;
+    const open = this.open === row.metal;
+    const value = valueOf(row);
+    const acts = html`<td class="figure">${row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`}</td>`;
+    const values = row.values.length === 0 ? nothing : html`<button type="button" class="plain" aria-expanded=${open} aria-controls=${open ? 'values-open' : nothing} @click=${() => (this.open = open ? null : row.metal)}>${row.values.length} ${row.values.length === 1 ? 'value' : 'values'}<span class="spoken"> of ${row.metal}</span> ${open ? '▾' : '▸'}</button>`;
+    const main = row.rho_c_ohm_cm2 === null
+      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${decimalText(majorityBarrier(row, majority))}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5"><span class="faint">No figure: ${row.reason}.</span></td>${acts}</tr>`
+      : html`<tr class=${present ? 'present' : ''}>
+          ${name}
+          <td class="figure">${decimalText(majorityBarrier(row, majority))}</td>
+          <td>${value === null ? '–' : valueWords(value)} ${values}</td>
+          <td class="figure">${figureText(row.rho_c_ohm_cm2)}</td>
+          <td class="figure">${bandWords(row)}</td>
+          <td class="figure"><span class=${limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${figureText(row.worst_ohm_cm2)}</span><span class="note at">${row.worst_at ?? row.reason}</span></td>
+          <td>${scale === null ? nothing : resistivitySpan(row, scale, limit)}</td>
+          <td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : `E00/kT ${figureText(row.e00_over_kT, 2)}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>
+          ${acts}
+        </tr>`;
+    return html`${main}${open ? this.renderValues(row, stale) : nothing}`;
+  }
+
+  private renderValues(row: MetalRow, stale: boolean): TemplateResult {
+    const running = this.again.progress !== null;
+    return html`<tr class="rivals"><td colspan="9"><ul id="values-open" aria-label="Values of the barrier of ${row.metal}">
+      ${row.values.map((value) => {
+        const used = value.key === row.value;
+        return html`<li>
+          <span class="words ${used ? 'in-use' : ''}">φBn ${decimalText(value.barrier_n_eV)} eV, φBp ${decimalText(value.barrier_p_eV)} eV: ${valueWords(value)}${value.note === null ? '' : `; ${value.note}`}</span>
+          ${used ? html`<span class="faint">in use</span>` : html`<button type="button" ?disabled=${running || stale || this.job.progress !== null} @click=${() => this.rerun(row, value)}>Run with this<span class="spoken"> value of ${row.metal}, ${decimalText(value.barrier_n_eV)} eV</span></button>`}
+        </li>`;
+      })}
+    </ul></td></tr>`;
+  }
+}
+
+customElements.define('hm-metals', HmMetals);
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'hm-metals': HmMetals;
+  }
+}
