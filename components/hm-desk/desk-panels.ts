@@ -37,7 +37,7 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     id: 'ledger',
     title: 'Ledger',
     load: () => import('../hm-ledger/hm-ledger.ts'),
-    draw: ({ result, view, chosen, stale }) => html`<hm-ledger .result=${result} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale}></hm-ledger>`,
+    draw: ({ result, view, chosen, stale }) => html`<hm-ledger .result=${result} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale} .workings=${true}></hm-ledger>`,
   },
   {
     id: 'requirements',

@@ -143,6 +143,10 @@ export const styles = css`
     margin: 10px 0 0;
     color: var(--faint);
   }
+  .hint {
+    color: var(--faint);
+    margin: 0 0 8px;
+  }
   .stale-mark {
     color: var(--ink);
     border-inline-start: 3px solid var(--choice);

@@ -59,6 +59,7 @@ export class HmLedger extends LitElement {
     if (!result) return html`<p class="empty">No figures yet: they stand here as soon as the stack is solved.</p>`;
     return html`
       ${this.stale ? html`<p class="stale-mark">Figures of the stack before the last change.</p>` : nothing}
+      ${this.workings ? html`<p class="hint">How does a figure come about? Press it, or walk to it with the arrows and press Enter.</p>` : nothing}
       ${ledgerTables(result).map((table) => this.renderTable(table))}
       <p class="quality">${qualityLine(result)}</p>
     `;
@@ -141,6 +142,7 @@ export class HmLedger extends LitElement {
     return html`<td
       class="${column.kind} asks"
       tabindex=${standsHere ? 0 : -1}
+      aria-haspopup="dialog"
       data-cell="${table.id} ${r} ${c}"
       @focus=${() => (this.at = { table: table.id, row: r, column: c })}
       @click=${() => this.ask(table, row, column)}
