@@ -87,10 +87,7 @@ export const styles = css`
     font-style: italic;
     color: var(--faint);
   }
-  .stale-mark {
-    font-style: italic;
-  }
-  .stale-mark::before {
+  .outcome.stale::before {
     content: '▲ ';
   }
   ul {

@@ -198,7 +198,7 @@ export class HmSizing extends LitElement {
     const { progress, status, reason, value } = this.job;
     if (progress !== null) return 'Searching. The margins below are those of the corners that are known so far.';
     if (status === 'error') return `${reason}${answer === null ? '' : ' What stands below was found before.'}`;
-    if (answer !== null) return `${this.stale ? 'For the design before the last change: ' : ''}${outcomeWords(answer)}`;
+    if (answer !== null) return `${this.stale ? 'Found for the design before the last change: find the values again. ' : ''}${outcomeWords(answer)}`;
     return value === null ? 'Each value is judged in the worst case, over temperatures and tolerances: that takes a few hundred solves.' : '';
   }
 
@@ -231,7 +231,6 @@ export class HmSizing extends LitElement {
     const { design } = value.input;
     const { stale } = this;
     return html`<div class="found ${stale ? 'stale' : ''}">
-      ${stale ? html`<p class="stale-mark">Found for the design before the last change: find the values again.</p>` : nothing}
       <div class="sides">
         <div>${this.renderPicture(answer, design)}</div>
         <div>${this.renderIntervals(answer)} ${this.renderKey(answer, design)} ${stale ? nothing : this.renderPut(answer)}</div>

@@ -73,7 +73,7 @@ export function drawMarginPlot(picture: MarginPicture, options: MarginPlotOption
   const narrow = width < NARROW * (style.textSize / 12);
   const measures = axesOf(curves);
   const labelRoom = narrow ? 2.2 * small : Math.min(0.28 * width, 20 * small);
-  const area = { left: 5.2 * small, right: width - labelRoom - (measures.length > 1 ? SECOND * small : 0.6 * small), top: 4.6 * small, bottom: height - 3.6 * small };
+  const area = { left: 5.2 * small, right: width - labelRoom - (measures.length > 1 ? SECOND * small : 0.6 * small), top: (0.6 + 1.35 * rowsOver(narrow)) * small, bottom: height - 3.6 * small };
   if (!(area.right - area.left >= 60 && area.bottom - area.top >= 60)) throw new RangeError(`no room for a picture of margins: ${width} by ${height} px`);
   const scores = curves.flatMap(({ points }) => points.flatMap(({ score }) => (score === null ? [] : [score])));
   const window = scoreWindow(scores, picture.best?.score ?? null);
@@ -167,10 +167,11 @@ function gaps({ picture, style, small, area, x }: Frame): Shape[] {
 }
 
 /** Upright lines at the best value, the ends of the intervals and the value in the design, their figures over the picture where there is room. */
-function marks({ picture, style, small, area, x, y }: Frame): Shape[] {
+function marks({ picture, style, small, area, x, y, narrow }: Frame): Shape[] {
   const { best, now, intervals } = picture;
   const shapes: Shape[] = [];
-  const rows: { from: number; to: number }[][] = [[], [], []];
+  const figures: Shape[] = [];
+  const rows: { from: number; to: number }[][] = Array.from({ length: rowsOver(narrow) }, () => []);
   const figure = (role: string, at: number, text: string, fill: string, weight?: 'bold'): number => {
     const width = textWidth(text, small) * (weight ? 1.1 : 1);
     const middle = Math.min(Math.max(at, area.left + width / 2), area.right - width / 2);
@@ -178,7 +179,9 @@ function marks({ picture, style, small, area, x, y }: Frame): Shape[] {
     if (row < 0) return area.top;
     rows[row].push({ from: middle - width / 2, to: middle + width / 2 });
     const base = area.top - 5 - row * 1.35 * small;
-    shapes.push({ kind: 'text', role, x: middle, y: base, size: small, anchor: 'middle', runs: [{ text }], fill, ...(weight ? { weight } : {}) });
+    // Lines of other figures that pass behind leave it legible.
+    figures.push({ kind: 'rect', role: 'margin-figure-ground', x: middle - width / 2 - 2, y: base - small, w: width + 4, h: 1.25 * small, fill: style.ground });
+    figures.push({ kind: 'text', role, x: middle, y: base, size: small, anchor: 'middle', runs: [{ text }], fill, ...(weight ? { weight } : {}) });
     return base + 3;
   };
   const upright = (role: string, value: number, top: number, paint: { stroke: string; dash?: string; width: number }): void => void shapes.push({ kind: 'line', role, x1: x(value), x2: x(value), y1: top, y2: area.bottom, ...paint });
@@ -195,7 +198,12 @@ function marks({ picture, style, small, area, x, y }: Frame): Shape[] {
     shapes.push({ kind: 'text', role: 'margin-closed-by', x: x(end.value) + 7, y: y(0) + 1.15 * small, size: small, anchor: 'start', runs: [{ text: String(end.curve + 1) }], fill: style.ink, weight: 'bold' });
   }
   if (now !== null && now.value >= picture.from && now.value <= picture.to) upright('margin-now', now.value, figure('margin-now-figure', x(now.value), `now ${now.text}`, style.ink), { stroke: style.ink, dash: '1 3', width: 1.2 });
-  return shapes;
+  return [...shapes, ...figures];
+}
+
+/** Rows of figures over the picture: where it is narrow they lie closer and need more. */
+function rowsOver(narrow: boolean): number {
+  return narrow ? 4 : 3;
 }
 
 function axes({ picture, style, small, area, x, y, window }: Frame, measures: readonly MarginMeasure[]): Shape[] {
