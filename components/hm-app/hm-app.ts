@@ -3,6 +3,7 @@ import { keyed } from 'lit/directives/keyed.js';
 import type { Design } from '../../src/design/types.ts';
 import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
 import { blankDesign } from '../../src/state/blank-design.ts';
+import { offlineCopy } from '../../src/offline/start.ts';
 import { setTitle } from '../../src/state/commands/index.ts';
 import { Session } from '../../src/state/session.ts';
 import { Keeper } from '../../src/storage/keeper.ts';
@@ -17,6 +18,7 @@ import type { HmLeave } from '../hm-leave/hm-leave.ts';
 import type { HmPlate, PlateAxes } from '../hm-plate/hm-plate.ts';
 import type { PlateView } from '../hm-plate/plate-view.ts';
 import type { HalfmarkEvents, PageAct } from '../shared/events.ts';
+import { WorkingsController } from '../hm-workings/workings-controller.ts';
 import { look } from '../shared/look.ts';
 import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
 import '../hm-assumptions/hm-assumptions.ts';
@@ -33,6 +35,7 @@ import { styles } from './hm-app.styles.ts';
 import { IncomingController } from './incoming.ts';
 import { JudgingController } from './judging-controller.ts';
 import { pageKey } from './keys.ts';
+import { OfflineController } from './offline-controller.ts';
 import { STORE_WORDS } from './store-words.ts';
 import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
 import { RemarkController } from './remark-controller.ts';
@@ -75,6 +78,7 @@ export class HmApp extends LitElement {
   private desk!: ProjectDesk;
   private readonly remarks = new RemarkController(this);
   private readonly staleness = new StaleController(this);
+  private readonly workings = new WorkingsController(this, (text) => this.say(text, true));
   private readonly jobs = new JobClient(startJobWorker);
   private readonly judging = new JudgingController(this, this.jobs.run);
   /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
@@ -101,6 +105,7 @@ export class HmApp extends LitElement {
     this.deskRemark = '';
     this.theme = readTheme();
     this.regardless = null;
+    new OfflineController(this, offlineCopy, (text) => this.say(text));
   }
 
   override connectedCallback(): void {
@@ -283,7 +288,8 @@ export class HmApp extends LitElement {
   }
 
   private view({ detail }: On<'hm-view'>): void {
-    const { theme, workings: _, ...change } = detail.change;
+    const { theme, workings, ...change } = detail.change;
+    void this.workings.ask(workings);
     if (isTheme(theme)) {
       this.theme = theme;
       setTheme(theme);
@@ -338,7 +344,7 @@ export class HmApp extends LitElement {
         ></hm-conditions>
       </header>
       <hm-messages .findings=${session.findings} .saving=${keeper?.saving ?? { kind: 'saved' }} .remark=${this.remarks.remark} .layers=${this.handed?.names ?? []}></hm-messages>
-      ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${pageDialogs(this.dialogs)}
+      ${this.ready ? this.renderWork() : html`<main><p role="status">Opening</p></main>`} ${pageDialogs(this.dialogs)} ${this.workings.render(session.design, session.findings.result, session.findings.stale)}
       ${this.incoming.over ? html`<p class="drop">Let go to open the file</p>` : nothing}
     </div>`;
   }

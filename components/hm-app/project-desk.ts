@@ -134,9 +134,9 @@ export class ProjectDesk {
     const { readBackup } = await import('../../src/storage/backup.ts');
     const reading = readBackup(text);
     if (!reading.ok) return { said: reading.message, urgent: true };
-    for (const { name, designText, history, view, created, changed, binned } of reading.projects) {
-      await this.#store.create(name, { designText, history, view }, { created, changed, binned });
-    }
+    await this.#store.createAll(
+      reading.projects.map(({ name, designText, history, view, created, changed, binned }) => ({ name, content: { designText, history, view }, times: { created, changed, binned } })),
+    );
     const refused = reading.refused.map(({ name, why }) => ` ${name} was left out: ${why}.`).join('');
     return { said: `${reading.projects.length === 1 ? 'One project' : `${reading.projects.length} projects`} added from the backup.${refused}`, ...(refused === '' ? {} : { urgent: true }) };
   }

@@ -3,7 +3,7 @@ import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Page } from 'puppeteer-core';
 import { scenario } from './harness.ts';
-import { at, catchFiles, press, until, untilSolved } from './inside.ts';
+import { at, catchFiles, press, said, until, untilSolved } from './inside.ts';
 
 /** Waits until the page is kept whole. */
 const kept = (page: Page) => page.evaluate(async () => void (await navigator.serviceWorker.ready));
@@ -68,6 +68,7 @@ scenario('A newer build waits while the page is worked on, and a reload takes it
   await server.publish();
   await page.evaluate(async () => void (await (await navigator.serviceWorker.getRegistration())!.update()));
   await until('the newer build', waits);
+  await until('word of it', async () => (await said(page)).includes('A newer version of this page is ready'));
   // It waits for as long as the person works.
   await new Promise((done) => setTimeout(done, 500));
   assert.equal(await waits(), true);
