@@ -18,7 +18,7 @@ interface Response {
 }
 
 /**
- * Capacitance of the junction below layer `index` at zero bias, F/cm^2: dQ/dV of the solved charge.
+ * Capacitance of every junction of the stack at zero bias, F/cm^2 [layers - 1]: dQ/dV of the solved charge.
  *
  * A small voltage dV is put on the n side: the electrons' level shifts by dV throughout, the holes' stays (flat quasi-Fermi levels, as across any
  * depletion layer that carries no heavy current). The linear equation d/dz(eps d(dpsi)/dz) = q [kn (dpsi - dV) + kp dpsi] with the solved kn = d(n - N_D+)/dpsi
@@ -31,20 +31,34 @@ interface Response {
  *
  * The neutral sides are the nearest ones: a layer next to the interface that is undoped (p-i-n) or depleted throughout hands on to the layer behind it.
  *
+ * Interfaces between the same two neutral sides share one capacitance, so each stretch of the stack is solved once however many layers it holds.
+ *
  * @returns null where it has no meaning: sides of one kind (n+/n, or a cut inside one side's depletion), no depletion, an insulator in between, a side
  *   that is neutral nowhere
  */
-export function junctionCapacitance(stack: Stack, profiles: Profiles, space: SpaceCharge, index: number): number | null {
-  const above = neutralSide(stack, profiles, space, index, -1);
-  const below = neutralSide(stack, profiles, space, index + 1, 1);
-  if (above < 0 || below < 0 || !(space.net[above] * space.net[below] < 0)) return null;
-  const step = space.ranges[index][1];
-  const handedOn = profiles.layer[above] !== index || profiles.layer[below] !== index + 1;
-  if (handedOn && space.net[step] * space.net[step + 1] > 0) return null;
+export function junctionCapacitances(stack: Stack, profiles: Profiles, space: SpaceCharge): (number | null)[] {
+  const neutral = stack.layers.map((_, l) => neutralNode(stack, profiles, space, l));
+  const downTo = nearestNeutral(neutral, 1);
+  const upTo = nearestNeutral(neutral, -1);
+  // Stretches between neutral sides do not overlap: the last one is the only one that can be met again.
+  let last: { above: number; below: number; capacitance: number | null } | null = null;
+  return Array.from({ length: Math.max(0, stack.layers.length - 1) }, (_, index) => {
+    const above = upTo[index];
+    const below = downTo[index + 1];
+    if (above < 0 || below < 0 || !(space.net[above] * space.net[below] < 0)) return null;
+    const step = space.ranges[index][1];
+    const handedOn = profiles.layer[above] !== index || profiles.layer[below] !== index + 1;
+    if (handedOn && space.net[step] * space.net[step + 1] > 0) return null;
+    if (last?.above !== above || last.below !== below) last = { above, below, capacitance: capacitanceBetween(stack, profiles, space, above, below) };
+    return last.capacitance;
+  });
+}
+
+/** Capacitance between two neutral sides of opposite doping, F/cm^2; null where they do not deplete each other. */
+function capacitanceBetween(stack: Stack, profiles: Profiles, space: SpaceCharge, above: number, below: number): number | null {
   // The n side of a junction that depletes lies at the higher potential.
   if (!((profiles.psi[below] - profiles.psi[above]) * space.net[below] > 0)) return null;
   const levelN = space.net[below] > 0 ? 1 : 0;
-
   const answers = answersOf(stack, profiles, space, above, below);
   const fine = movedCharge(profiles, answers, above, below, 1, levelN);
   // Meshes are halved ones: every other node is a mesh too, and from both the second-order rule gives a fourth-order figure.
@@ -124,25 +138,34 @@ function movedCharge(profiles: Profiles, answers: Answers, above: number, below:
   return Number.isFinite(moved) ? Math.abs(moved) : null;
 }
 
-/**
- * Node, every other one counted, whose charge is the smallest share of its dopants', in the nearest layer with a neutral part from `layer` on
- * (`step` -1: upwards). -1 where an insulator or the end of the stack comes first.
- */
-function neutralSide(stack: Stack, profiles: Profiles, space: SpaceCharge, layer: number, step: -1 | 1): number {
-  for (let l = layer; l >= 0 && l < stack.layers.length; l += step) {
-    if (localCharge(stack.layers[l], 0, stack.temperature, stack.assumptions).bands.insulator) return -1;
-    let best = -1;
-    let least = NEUTRAL;
-    for (let s = space.ranges[l][0]; s <= space.ranges[l][1]; s += 2) {
-      const share = Math.abs(depletedShare(profiles, space, s));
-      if (share < least) {
-        least = share;
-        best = s;
-      }
+/** What `neutralNode` says of a layer without a neutral part, and of an insulator. */
+const NOWHERE = -1;
+const INSULATOR = -2;
+
+/** Node, every other one counted, of a layer whose charge is the smallest share of its dopants'; NOWHERE where none is neutral. */
+function neutralNode(stack: Stack, profiles: Profiles, space: SpaceCharge, layer: number): number {
+  if (localCharge(stack.layers[layer], 0, stack.temperature, stack.assumptions).bands.insulator) return INSULATOR;
+  let best = NOWHERE;
+  let least = NEUTRAL;
+  for (let s = space.ranges[layer][0]; s <= space.ranges[layer][1]; s += 2) {
+    const share = Math.abs(depletedShare(profiles, space, s));
+    if (share < least) {
+      least = share;
+      best = s;
     }
-    if (best >= 0) return best;
   }
-  return -1;
+  return best;
+}
+
+/** The neutral node of each layer or, failing that, of the nearest one beyond it (`step` 1: below); negative where an insulator or the end of the stack comes first. */
+function nearestNeutral(neutral: readonly number[], step: -1 | 1): number[] {
+  const out = [...neutral];
+  let met = NOWHERE;
+  for (let l = step > 0 ? out.length - 1 : 0; l >= 0 && l < out.length; l -= step) {
+    if (out[l] === NOWHERE) out[l] = met;
+    met = out[l];
+  }
+  return out;
 }
 
 const electrons: CarrierLog = { log: 0, slope: 0 };

@@ -1,5 +1,4 @@
 import type { Alignment } from './alignment.ts';
-import { junctionCapacitance } from './capacitance.ts';
 import { localCharge, netDoping } from './charge.ts';
 import { ELEMENTARY_CHARGE, EPSILON_0 } from './constants.ts';
 import { depletionFrom, type SpaceCharge } from './depletion.ts';
@@ -14,12 +13,12 @@ function neutralPsi(stack: Stack, alignment: Alignment, layer: number, z: number
 }
 
 /**
- * Figures of the interface below layer `index`, with the values at the interface.
+ * Figures of the interface below layer `index`, with the values at the interface; its capacitance comes from capacitance.ts.
  *
  * Depletion approximation of an abrupt junction: W = sqrt(2 eps Vbi .../q), with the permittivity of each side (Sze and Ng, Physics of Semiconductor
  * Devices, 2007, sections 2.2 and 2.7; from memory); only where the two sides are doped oppositely.
  */
-export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, space: SpaceCharge, sheets: ArrayLike<number>, index: number): JunctionFigures {
+export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, space: SpaceCharge, sheets: ArrayLike<number>, capacitance: number | null, index: number): JunctionFigures {
   const above = stack.layers[index];
   const chargeAbove = localCharge(above, above.thickness, stack.temperature, stack.assumptions);
   const chargeBelow = localCharge(stack.layers[index + 1], 0, stack.temperature, stack.assumptions);
@@ -50,7 +49,7 @@ export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Pr
     depletionAbove, depletionBelow,
     depletionApproximationAbove: approximateAbove,
     depletionApproximationBelow: approximateBelow,
-    capacitance: junctionCapacitance(stack, profiles, space, index),
+    capacitance,
   };
 }
 

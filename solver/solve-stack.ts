@@ -1,5 +1,6 @@
 import { align, type Alignment } from './alignment.ts';
 import { barrierHeights } from './barrier.ts';
+import { junctionCapacitances } from './capacitance.ts';
 import { localCharge } from './charge.ts';
 import { EPSILON_0 } from './constants.ts';
 import { contactFigures } from './contact.ts';
@@ -37,9 +38,10 @@ export function solveStack(stack: Stack, options: SolveOptions = {}): Solution |
   const { profiles, quality } = answer;
   const space = spaceChargeOf(stack, profiles);
   const layers = stack.layers.map((layer, l) => layerFigures(layer, stack.temperature, stack.assumptions, isFullyDepleted(stack, profiles, space, l)));
+  const capacitances = junctionCapacitances(stack, profiles, space);
   const solution: Solution = {
     stack, profiles, quality, layers,
-    junctions: alignment.interfaces.map((_, i) => junctionFigures(stack, alignment, profiles, space, sheets, i)),
+    junctions: alignment.interfaces.map((_, i) => junctionFigures(stack, alignment, profiles, space, sheets, capacitances[i], i)),
     contacts: (['top', 'bottom'] as const).map((side) => contactFigures(stack, profiles, space, side, options.contacts ?? true)),
     warnings: [],
   };
