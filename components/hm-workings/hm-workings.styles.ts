@@ -21,6 +21,11 @@ export const styles = css`
     margin: 0;
     z-index: 5;
   }
+  dialog.left {
+    inset: 0 auto 0 0;
+    border-inline-start: 0;
+    border-inline-end: 1px solid var(--ink);
+  }
   dialog::backdrop {
     background: rgb(0 0 0 / 0.45);
   }
@@ -131,11 +136,12 @@ export const styles = css`
     padding-inline-start: 1.1rem;
   }
   @media (max-width: 56rem) {
-    dialog {
+    dialog,
+    dialog.left {
       inset: auto 0 0 0;
       width: 100%;
       height: min(88dvh, 100dvh);
-      border-inline-start: 0;
+      border-inline: 0;
       border-top: 1px solid var(--ink);
     }
     .sheet {

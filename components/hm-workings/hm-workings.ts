@@ -2,7 +2,7 @@ import { LitElement, html, nothing, type PropertyValues, type TemplateResult } f
 import type { Design } from '../../src/design/types.ts';
 import type { Result } from '../../src/result/types.ts';
 import type { Known } from '../../src/workings/known.ts';
-import { signOf } from '../../src/workings/math.ts';
+import { mathText, signOf } from '../../src/workings/math.ts';
 import { shown, type ShownStep, type Step } from '../../src/workings/step.ts';
 import { originText, workingsText } from '../../src/workings/text.ts';
 import { workingsOf } from '../../src/workings/workings-of.ts';
@@ -72,15 +72,24 @@ export class HmWorkings extends LitElement {
     const { dialog } = this;
     if (changed.has('asked')) {
       if (this.asked === null) return void dialog.close();
-      if (!dialog.open) this.open();
+      const asker = focused();
+      if (!dialog.open) this.open(asker);
+      else if (asker && !this.renderRoot.contains(asker)) this.asker = asker;
+      this.side();
       this.renderRoot.querySelector<HTMLElement>('h2')!.focus();
       dialog.scrollTop = 0;
     }
     for (const box of this.renderRoot.querySelectorAll<HTMLElement>('.formula')) box.tabIndex = box.scrollWidth > box.clientWidth ? 0 : -1;
   }
 
-  private open(): void {
-    this.asker = focused();
+  /** Away from the figure, so that both are seen. */
+  private side(): void {
+    const box = this.asker?.getBoundingClientRect();
+    this.dialog.classList.toggle('left', box !== undefined && box.left + box.width / 2 > innerWidth / 2);
+  }
+
+  private open(asker: HTMLElement | null): void {
+    this.asker = asker;
     addEventListener('keydown', this.key);
     // Beside the page the page stays in reach; over it, it does not.
     if (matchMedia(NARROW).matches) this.dialog.showModal();
@@ -159,10 +168,17 @@ export class HmWorkings extends LitElement {
         : html`<table>
             <caption class="spoken">Values that go in</caption>
             <thead class="spoken"><tr><th scope="col">Sign</th><th scope="col">Value</th><th scope="col">Meaning and source</th></tr></thead>
-            <tbody>${symbols.map(({ known, sign, value }) => html`<tr><th scope="row">${mathTemplate(sign)}</th><td class="number">${value} ${known.unit}</td><td>${known.words}<span class="source">${originText(known.origin)}</span></td></tr>`)}</tbody>
+            <tbody>${symbols.map(({ known, sign, value }, i) => html`<tr><th scope="row">${mathTemplate(sign)}</th><td class="number">${value} ${known.unit}</td><td>${known.words}<span class="source">${sourceWords(symbols, i)}</span></td></tr>`)}</tbody>
           </table>`}
     </li>`;
   }
+}
+
+/** Where a value stands; a work that was named for an earlier value of the same line is not named in full again. */
+function sourceWords(symbols: ShownStep['symbols'], i: number): string {
+  const text = originText(symbols[i].known.origin);
+  const first = symbols.findIndex(({ known }) => originText(known.origin) === text);
+  return first === i || symbols[i].known.origin.from !== 'source' ? text : `the same work as for ${mathText(symbols[first].sign)}`;
 }
 
 const signNode = (known: Known): ReturnType<typeof signOf> => signOf(known.sign);

@@ -8,6 +8,8 @@ import { electronMass, known, planck, temperatureOf, thermalJoule, WORKED, type 
 import { materialAsks } from './published.ts';
 import { step, type Step } from './step.ts';
 
+const POWERS = ['', '', '²', '³', '⁴', '⁵', '⁶', '⁷', '⁸', '⁹'];
+
 /** Density of states of a band at a place. */
 export function statesSteps(context: Context, point: Point, carrier: 'n' | 'p'): Worked {
   const T = context.stack.temperature;
@@ -35,7 +37,7 @@ function massSteps(context: Context, point: Point, carrier: 'n' | 'p', result: K
     const ask = materialAsks(context.catalogue, crystal.id);
     const t = temperatureOf(T);
     const terms = (mass ?? []).map((c, i) => {
-      const coefficient = ask(path, (mass ?? []).length === 1 ? `m_${crystal.id}` : `c_${i}`, i === 0 ? words : `${words}, power ${i} of T in K`, c, i === 0 ? 'm₀' : i === 1 ? 'm₀/K' : `m₀/K^${i}`);
+      const coefficient = ask(path, (mass ?? []).length === 1 ? `m_${crystal.id}` : `c_${i}`, i === 0 ? words : `${words}, power ${i} of T in K`, c, i === 0 ? 'm₀' : `m₀/K${i === 1 ? '' : POWERS[i] ?? `^${i}`}`);
       return { sign: 1 as const, of: i === 0 ? formula`${coefficient}` : i === 1 ? formula`${coefficient} * ${t}` : formula`${coefficient} * ${t} ^ ${{ kind: 'number', value: i, text: String(i) }}` };
     });
     return step(into, terms.length === 1 ? terms[0].of : { kind: 'sum', terms });

@@ -83,6 +83,18 @@ describe('hm-workings', () => {
     expect(dialog(workings).open).to.equal(true);
   });
 
+  it('stands away from the figure, so that both are seen', async () => {
+    const { ledger, workings } = await pair();
+    for (const column of [0, 9]) {
+      const cell = ledger.renderRoot.querySelector<HTMLElement>(`td[data-cell="layers 0 ${column}"]`)!;
+      cell.focus();
+      cell.click();
+      await settled(workings);
+      const [figure, box] = [cell.getBoundingClientRect(), dialog(workings).getBoundingClientRect()];
+      expect(figure.right <= box.left || figure.left >= box.right, `column ${column}`).to.equal(true);
+    }
+  });
+
   it('copies itself as text', async () => {
     const p = await panel('layers', 1, 'gap');
     const said = heard(p, 'hm-say');
