@@ -17,7 +17,7 @@ async function output(example: string): Promise<string> {
 }
 
 describe('the README', () => {
-  it('has examples that run as they stand', async () => {
+  it('has examples that run as they stand', { timeout: 60_000 }, async () => {
     expect(examples).toHaveLength(2);
     for (const example of examples) {
       const printed = await output(example);
