@@ -16,6 +16,8 @@ const SAFETY = 4;
 /** Two estimates of the coarse error that differ by more than this do not agree. */
 const AGREEMENT = 1.2;
 const MOST_ROUNDS = 10;
+/** Halvings of the best mesh where new meshes do not come to rest. */
+const MOST_HALVINGS = 5;
 /** A coarse mesh of this error leaves the halved one well within the accuracy. */
 const COARSE_SHARE = 2;
 /** Newton updates that end the passing solutions: that of the first mesh, V, and of coarse ones as a share of their target. Only the answer itself needs all digits. */
@@ -29,6 +31,13 @@ interface Solved {
   run: NewtonResult;
   /** V [nodes] */ errors: Float64Array;
   /** largest error of psi by the linear response to what the rows miss, V */ estimate: number;
+}
+
+interface Halved {
+  solved: Solved;
+  /** V [nodes] */ psi: Float64Array;
+  meshError: number;
+  /** null where the answer is not good enough */ accepted: PoissonSolution | null;
 }
 
 /**
@@ -66,45 +75,63 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     psi = bent(from.system, values, mesh);
     setEnds(problem, psi);
   };
+  /** Solves on the mesh of halved cells and holds the two against each other; null where Newton does not settle. */
+  const halve = (coarse: Solved, coarsePsi: Float64Array): Halved | null => {
+    const from = coarse.system.mesh;
+    const to = halved(from);
+    const finePsi = bent(coarse.system, coarsePsi, to);
+    const fine = solve(to, finePsi, 'compact', ACCEPTANCE.update);
+    if (!fine) return null;
+    let difference = 0;
+    for (let l = 0; l < from.local.length; l++) {
+      for (let k = 0; k < from.local[l].length; k++) {
+        const d = Math.abs(coarsePsi[from.first[l] + k] - finePsi[to.first[l] + 2 * k]);
+        if (!(d <= difference)) difference = d;
+      }
+    }
+    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY * fine.estimate);
+    const quality: Quality = {
+      converged: true,
+      newtonUpdates: updates,
+      lastUpdate: fine.run.lastUpdate,
+      meshNodes: to.nodes,
+      meshError,
+      gaussError: gaussError(fine.system, finePsi),
+      method: 'compact',
+    };
+    const accepted = refusalReason(quality, goal.accuracy) === null ? { profiles: profilesOf(fine.system, finePsi), quality } : null;
+    return { solved: fine, psi: finePsi, meshError, accepted };
+  };
   if (!start.warm) {
     const first = solve(mesh, psi, 'box', FIRST_UPDATE);
     if (!first) return { solution: null, updates };
     carryTo(first, psi);
   }
+  let best: { coarse: Solved; psi: Float64Array } | null = null;
   for (let round = 0; round < MOST_ROUNDS; round++) {
     if (2 * mesh.nodes > goal.maxNodes) break;
     const coarse = solve(mesh, psi, 'compact', Math.max(ACCEPTANCE.update, UPDATE_SHARE * target));
     if (!coarse) break;
+    if (!best || coarse.estimate < best.coarse.estimate) best = { coarse, psi };
     if (!(coarse.estimate <= target)) {
       if (round > 0 || start.warm) share *= Math.min(0.8, Math.max(0.05, (0.7 * target) / coarse.estimate));
       carryTo(coarse, psi);
       continue;
     }
-    const halfMesh = halved(mesh);
-    const finePsi = bent(coarse.system, psi, halfMesh);
-    const fine = solve(halfMesh, finePsi, 'compact', ACCEPTANCE.update);
+    const fine = halve(coarse, psi);
     if (!fine) break;
-    let difference = 0;
-    for (let l = 0; l < mesh.local.length; l++) {
-      for (let k = 0; k < mesh.local[l].length; k++) {
-        const d = Math.abs(psi[mesh.first[l] + k] - finePsi[halfMesh.first[l] + 2 * k]);
-        if (!(d <= difference)) difference = d;
-      }
-    }
-    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY * fine.estimate);
-    (globalThis as any).DBG = { d: difference, dc: coarse.estimate, df: fine.estimate, lump: fine.system.lumped.reduce((a: number, b: number) => a + b, 0), lumpc: coarse.system.lumped.reduce((a: number, b: number) => a + b, 0) };
-    const quality: Quality = {
-      converged: true,
-      newtonUpdates: updates,
-      lastUpdate: fine.run.lastUpdate,
-      meshNodes: halfMesh.nodes,
-      meshError,
-      gaussError: gaussError(fine.system, finePsi),
-      method: 'compact',
-    };
-    if (refusalReason(quality, goal.accuracy) === null) return { solution: { profiles: profilesOf(fine.system, finePsi), quality }, updates };
+    if (fine.accepted) return { solution: fine.accepted, updates };
+    const { meshError } = fine;
     target *= Math.min(0.5, Math.max(0.02, (0.5 * goal.accuracy) / meshError));
     carryTo(coarse, psi);
+  }
+  // Where the charge turns within a few millivolts (frozen dopants deep in a thick layer) every new mesh meets the turns elsewhere, and its estimate goes up and down.
+  // Halved meshes hold on to their nodes: their differences fall steadily.
+  for (let halving = 0; best && halving < MOST_HALVINGS && 2 * best.coarse.system.mesh.nodes <= goal.maxNodes; halving++) {
+    const fine = halve(best.coarse, best.psi);
+    if (!fine) break;
+    if (fine.accepted) return { solution: fine.accepted, updates };
+    best = { coarse: fine.solved, psi: fine.psi };
   }
   return { solution: null, updates };
 }

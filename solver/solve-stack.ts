@@ -4,6 +4,7 @@ import { junctionCapacitances } from './capacitance.ts';
 import { localCharge } from './charge.ts';
 import { EPSILON_0 } from './constants.ts';
 import { contactFigures } from './contact.ts';
+import { crossingsOf } from './crossings.ts';
 import { isFullyDepleted, spaceChargeOf } from './depletion.ts';
 import { neutralLevel } from './fermi-level.ts';
 import { junctionFigures } from './junction.ts';
@@ -55,7 +56,7 @@ function poissonProblem(stack: Stack, alignment: Alignment, sheets: Float64Array
     layers: stack.layers.map((layer, l) => ({
       thickness: layer.thickness,
       uniform: isUniform(layer),
-      landmarks: landmarksOf(layer),
+      landmarks: [...landmarksOf(layer), ...crossingsOf(layer, T, assumptions)],
       permittivity: (z) => localCharge(layer, z, T, assumptions).bands.permittivity * EPSILON_0,
       ecFlat: (z) => alignment.ecFlat(l, z),
       gap: (z) => localCharge(layer, z, T, assumptions).bands.gap,
