@@ -7,6 +7,7 @@ import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
 import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 import type { SizingView } from '../hm-sizing/sizing-view.ts';
+import type { TolerancesView } from '../hm-tolerances/tolerances-view.ts';
 import type { HalfmarkEvents } from '../shared/events.ts';
 
 /** Everything that a panel may be handed. Each takes what it shows and fires the page's own events. */
@@ -61,5 +62,11 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     title: 'Contacts',
     load: () => import('../hm-contacts/hm-contacts.ts'),
     draw: ({ design, complaints, result, stale, view, run, styleName }) => html`<hm-contacts .design=${design} .complaints=${complaints} .result=${result} .stale=${stale} .view=${(view.metals ?? {}) as MetalsView} .run=${run} .styleName=${styleName}></hm-contacts>`,
+  },
+  {
+    id: 'tolerances',
+    title: 'Tolerances',
+    load: () => import('../hm-tolerances/hm-tolerances.ts'),
+    draw: ({ design, complaints, view, styleName }) => html`<hm-tolerances .design=${design} .complaints=${complaints} .view=${(view.tolerances ?? {}) as TolerancesView} .styleName=${styleName}></hm-tolerances>`,
   },
 ];
