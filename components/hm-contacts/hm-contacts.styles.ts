@@ -13,6 +13,15 @@ export const styles = css`
     flex: 1 1 34rem;
     min-width: 0;
   }
+  .sides {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 0.25rem 2rem;
+  }
+  .words {
+    flex: 1 1 20rem;
+    min-width: 0;
+  }
   .contact.stale .picture,
   .contact.stale dl {
     opacity: 0.65;
@@ -74,9 +83,13 @@ export const styles = css`
   table {
     border-collapse: collapse;
   }
-  caption {
-    text-align: start;
+  .compare tbody th {
+    white-space: normal;
+  }
+  .off {
+    display: block;
     color: var(--faint);
+    font-size: 0.8125em;
   }
   th,
   td {
@@ -84,9 +97,11 @@ export const styles = css`
     font-weight: 400;
     padding: 2px 12px;
     white-space: nowrap;
+    vertical-align: baseline;
   }
   th:first-child {
     text-align: start;
+    padding-inline-start: 0;
   }
   thead th {
     font-weight: 600;

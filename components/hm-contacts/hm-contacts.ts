@@ -113,10 +113,10 @@ export class HmContacts extends LitElement {
     const d = drawCloseUp(contact, { width, height, style: this.styleName });
     return html`<section class="contact ${stale ? 'stale' : ''}" aria-label=${closeUpTitle(contact)}>
       ${stale ? html`<p class="stale-mark">Of the design before the last change.</p>` : nothing}
-      <svg class="picture" width=${width} height=${height} viewBox="0 0 ${width} ${height}" role="img" aria-label=${d.description}>${drawn(d)}</svg>
-      <dl>${closeUpFigures(contact).map(({ name, text, note }) => html`<dt>${name}</dt><dd>${text}${note === undefined ? nothing : html` <span class="note">${note}</span>`}</dd>`)}</dl>
+      <div class="sides"><svg class="picture" width=${width} height=${height} viewBox="0 0 ${width} ${height}" role="img" aria-label=${d.description}>${drawn(d)}</svg>
+      <div class="words"><dl>${closeUpFigures(contact).map(({ name, text, note }) => html`<dt>${name}</dt><dd>${text}${note === undefined ? nothing : html` <span class="note">${note}</span>`}</dd>`)}</dl>
       ${contact.notes.map((note) => html`<p class="wrong">${note}.</p>`)}
-      ${this.renderTable(contact)}
+      ${this.renderTable(contact)}</div></div>
     </section>`;
   }
 
@@ -141,10 +141,10 @@ export class HmContacts extends LitElement {
       return html`<p><button type="button" ?disabled=${stale} @click=${() => void this.compare.start(this.run!, { design: this.design!, options: { compare: true } })}>Compare WKB, Kemble and exact transmission</button> ${status === 'error' ? html`<span role="status">${reason}</span>` : nothing}</p>`;
     }
     const kinds = compared[0].compared ?? [];
-    return html`<div class="compare" role="region" aria-label="Comparison" tabindex="0"><table aria-label="Transmissions compared">
-      <caption>Contact resistivity by kind of transmission, Ω cm², and how far the quadrature may be off. The design uses ${transmissionWords(answer.contacts[0].transmission)}.</caption>
+    return html`<p class="state">Contact resistivity by kind of transmission, Ω cm², and how far the quadrature may be off. The design uses ${transmissionWords(answer.contacts[0].transmission)}.</p>
+      <div class="compare" role="region" aria-label="Comparison" tabindex="0"><table aria-label="Transmissions compared">
       <thead><tr><th scope="col">Contact</th>${kinds.map(({ transmission }) => html`<th scope="col">${transmissionWords(transmission)}</th>`)}</tr></thead>
-      <tbody>${compared.map((contact) => html`<tr><th scope="row">${closeUpTitle(contact)}</th>${(contact.compared ?? []).map(({ rho_c_ohm_cm2, error }) => html`<td>${figureText(rho_c_ohm_cm2)}${error === null ? nothing : ` (${errorText(error)})`}</td>`)}</tr>`)}</tbody>
+      <tbody>${compared.map((contact) => html`<tr><th scope="row">${closeUpTitle(contact)}</th>${(contact.compared ?? []).map(({ rho_c_ohm_cm2, error }) => html`<td>${figureText(rho_c_ohm_cm2)}${error === null ? nothing : html`<span class="off">${errorText(error)}</span>`}</td>`)}</tr>`)}</tbody>
     </table></div>`;
   }
 }

@@ -62,7 +62,8 @@ export const styles = css`
     border-block: 1px solid var(--ink);
   }
   table {
-    border-collapse: collapse;
+    border-collapse: separate;
+    border-spacing: 0;
     width: 100%;
   }
   th,
@@ -110,7 +111,8 @@ export const styles = css`
     border-top: 1px solid var(--line);
   }
   tbody th {
-    white-space: nowrap;
+    min-width: 4.5rem;
+    overflow-wrap: anywhere;
     font-weight: 600;
   }
   th:first-child {
@@ -146,6 +148,7 @@ export const styles = css`
   }
   .span {
     display: block;
+    margin-block-start: 2px;
     overflow: visible;
   }
   .span .axis {
@@ -195,6 +198,14 @@ export const styles = css`
     font-weight: 600;
   }
   @media (max-width: 40rem) {
+    th,
+    td {
+      padding-inline: 6px;
+    }
+    th:first-child {
+      width: 1%;
+      max-width: 6.5rem;
+    }
     .rivals ul {
       width: calc(100vw - 4.5rem);
     }

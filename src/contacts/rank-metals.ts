@@ -53,6 +53,7 @@ export interface Ranking {
   /** its majority */ majority: 'n' | 'p';
   temperature_K: number;
   /** K, coldest first; null where the design states none */ temperature_range_K: [number, number] | null;
+  /** the temperatures as the design writes them: "-40 degC to 125 degC" */ temperatures: string;
   /** tolerances that move the contact resistivity, as text: "barrier 50 meV" */ tolerances: string[];
   /** whose barrier is taken where both were measured */ carrier: 'n' | 'p';
   /** the least that a requirement allows this end; null without one */ limit_ohm_cm2: number | null;
@@ -93,6 +94,7 @@ export function* rankMetals(design: Design, options: RankOptions): Generator<Ran
   return {
     kind: 'ranked', side, layer: surface.layer.name, material: material.id, majority: surface.majority, temperature_K: temperature,
     temperature_range_K: surface.temperatureRange === null ? null : [...surface.temperatureRange], carrier: surface.stated.carrier ?? 'n', limit_ohm_cm2: surface.limit,
+    temperatures: (surface.temperatureRange ?? [temperature]).map(temperatureWriter(design)).join(' to '),
     tolerances: surface.uncertainties.map(({ label, tolerance }) => `${label} ${tolerance}`),
     rows: orderedRows(rows, { by: 'worst', descending: false }, surface.majority), notes: notesOf(surface), evaluations: surface.evaluations,
   };
