@@ -68,7 +68,7 @@ function dopantWarnings(layer: Layer): string[] {
     const name = d.id ?? d.kind;
     const peak = peakActive(layer, d);
     const mott = d.mottDensity ?? d.screened?.mottDensity;
-    if (mott !== undefined && peak > mott) out.push(`${layer.name}: ${name} at ${density(peak)} lies above its Mott density ${density(mott)}, where an impurity band conducts`);
+    if (mott !== undefined && peak > mott) out.push(`${layer.name}: ${name} at ${density(peak)} lies above its Mott density ${density(mott)}, where an impurity band conducts${d.model === 'dilute' ? '; "dilute" still binds carriers there and leaves too few free, "complete" frees them all' : ''}`);
     if (d.solubility !== undefined && peak > d.solubility) out.push(`${layer.name}: ${name} at ${density(peak)} lies above the ${density(d.solubility)} that was published as reachable`);
     if ((d.model === 'merging' && !d.merging) || (d.model === 'screened' && !d.screened)) out.push(`${layer.name}: ${name} has no parameters for "${d.model}"; its level is taken as that of dilute doping`);
   }

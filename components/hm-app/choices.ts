@@ -1,3 +1,4 @@
+import { modelsKnown } from '../../src/design/ionisation-models.ts';
 import type { Custom } from '../../src/design/types.ts';
 import type { StarterCard } from '../hm-starters/hm-starters.ts';
 import type { DopantChoice, MaterialChoice, MetalChoice } from '../shared/menus.ts';
@@ -14,7 +15,7 @@ export async function choicesFor(custom: Custom | undefined): Promise<Choices> {
   const { materials, dopants, metals } = catalogueOf(custom);
   return {
     materials: [...materials.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, alloy: entry.alloy !== undefined })),
-    dopants: [...dopants.values()].flatMap((rows) => [...rows.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, host: entry.host, kind: entry.kind }))),
+    dopants: [...dopants.values()].flatMap((rows) => [...rows.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, host: entry.host, kind: entry.kind, models: modelsKnown(entry) }))),
     metals: [...metals.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id })),
   };
 }

@@ -13,7 +13,7 @@ export interface CarriedDopants {
  * @param rows     of the layer as it was
  * @param choices  all known dopants, of every host
  */
-export function carriedDopants(rows: readonly DopantRow[], from: string, to: string, choices: readonly DopantChoice[]): CarriedDopants {
+export function carriedDopants(rows: readonly DopantRow[], from: string, to: string, choices: readonly Pick<DopantChoice, 'id' | 'host' | 'kind'>[]): CarriedDopants {
   const changes: string[] = [];
   const dopants = rows.map((row) => {
     if (row.dopant === undefined) return row;

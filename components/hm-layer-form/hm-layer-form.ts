@@ -15,13 +15,15 @@ import '../hm-profile-form/hm-profile-form.ts';
 import { carriedDopants } from './carried-dopants.ts';
 import { styles } from './hm-layer-form.styles.ts';
 
-const MODELS: Option[] = [
-  { value: '', text: 'usual' },
-  { value: 'dilute', text: 'dilute (isolated level)' },
-  { value: 'merging', text: 'merging with the band' },
-  { value: 'screened', text: 'screened level' },
-  { value: 'complete', text: 'complete ionisation' },
-];
+const MODELS: Record<DopantModel, string> = { dilute: 'dilute (isolated level)', merging: 'merging with the band', screened: 'screened level', complete: 'complete ionisation' };
+
+/** What a dopant given outright can be solved with: the other models take parameters that it does not have. */
+const MODELS_OUTRIGHT: readonly DopantModel[] = ['dilute', 'complete'];
+
+/** The menu of models, the usual one in words: what is taken unasked decides how many carriers there are. */
+function modelOptions(models: readonly DopantModel[]): Option[] {
+  return [{ value: '', text: `usual: ${MODELS[models[0]]}` }, ...models.map((value) => ({ value, text: MODELS[value] }))];
+}
 
 /** A new row starts lightly enough to change nothing by surprise (common practice, no source). */
 const FIRST_CONCENTRATION = '1e16 cm^-3';
@@ -105,7 +107,7 @@ export class HmLayerForm extends LitElement {
       ${select({ id: `dopant-${r}`, label: 'dopant', value: outright ? `:${row.kind ?? 'donor'}` : row.dopant!, unknown: `${row.dopant} (unknown in ${layer.material})`, options, complaint: complaintAt(this.complaints, `${path}.dopant`), onChoice: (id) => this.exchangeDopant(r, id) })}
       ${outright ? html`${this.rowField(r, 'depth', 'level depth', row.depth ?? '', 'eV')} ${this.rowField(r, 'degeneracy', 'degeneracy', String(row.degeneracy ?? ''), '', row.kind === 'acceptor' ? '4' : '2')}` : nothing}
       <hm-profile-form id="concentration-${r}" .label=${'concentration'} implants .value=${row.concentration} .unit=${'cm^-3'} .thickness=${layer.thickness} .path=${`${path}.concentration`} .complaints=${this.complaints} @profile-accept=${(e: CustomEvent<DepthValue>) => this.edited(setConcentration(this.design, this.index, r, e.detail as DopantRow['concentration']), 'doping')}></hm-profile-form>
-      ${select({ id: `model-${r}`, label: 'ionisation model', value: row.model ?? '', options: MODELS, complaint: complaintAt(this.complaints, `${path}.model`), onChoice: (m) => this.edited(setDopant(this.design, this.index, r, { model: m === '' ? undefined : (m as DopantModel) }), 'ionisation model') })}
+      ${select({ id: `model-${r}`, label: 'ionisation model', value: row.model ?? '', unknown: `${row.model} (no parameters)`, options: modelOptions(outright ? MODELS_OUTRIGHT : (here.find((d) => d.id === row.dopant)?.models ?? MODELS_OUTRIGHT)), complaint: complaintAt(this.complaints, `${path}.model`), onChoice: (m) => this.edited(setDopant(this.design, this.index, r, { model: m === '' ? undefined : (m as DopantModel) }), 'ionisation model') })}
       ${this.rowField(r, 'activation', 'active share', String(row.activation ?? ''), '', '1')}
       ${this.rowField(r, 'compensation', 'compensated share', String(row.compensation ?? ''), '', '0')}
       <button type="button" class="press" @click=${() => this.edited(removeDopant(this.design, this.index, r), 'dopant taken out')}>Remove<span class="spoken"> dopant ${r + 1}</span></button>

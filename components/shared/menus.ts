@@ -1,3 +1,5 @@
+import type { DopantModel } from '../../src/design/types.ts';
+
 /** What the menus of the forms offer. */
 export interface MaterialChoice {
   id: string;
@@ -10,6 +12,7 @@ export interface DopantChoice {
   name: string;
   /** id of the material it is known in */ host: string;
   kind: 'donor' | 'acceptor';
+  /** ionisation models that its parameters are known for, the usual one first */ models: DopantModel[];
 }
 
 export interface MetalChoice {

@@ -2,6 +2,7 @@ import type { Dopant } from '../../solver/index.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import type { Asker } from './ask.ts';
 import type { Catalogue, Entry } from './catalogue.ts';
+import { modelsKnown } from './ionisation-models.ts';
 import { readProfile } from './profile.ts';
 import type { DopantInput, DopantRow, Pure, Text } from './types.ts';
 
@@ -76,9 +77,9 @@ function levelOf({ entry, path }: Entry<DopantInput>, x: number, ask: Asker): Om
 
 /** "merging" where there are parameters for it, else "dilute", unless the row says otherwise. */
 function modelOf(row: DopantRow, { entry }: Entry<DopantInput>, path: string, ask: Asker): Dopant['model'] {
-  const model = row.model ?? (entry.merging ? 'merging' : 'dilute');
-  if ((model === 'merging' && !entry.merging) || (model === 'screened' && !entry.screened)) {
-    const known = ['dilute', ...(entry.merging ? ['merging'] : []), ...(entry.screened ? ['screened'] : []), 'complete'];
+  const known = modelsKnown(entry);
+  const model = row.model ?? known[0];
+  if (!known.includes(model)) {
     ask.wrong(`${path}.model`, `is ${quoted(model)}, but ${entry.id} in ${entry.host} has no parameters for it; ${known.join(', ')} would do`);
   }
   return model;

@@ -284,6 +284,16 @@ describe('hm-strip', () => {
     expect(edits.at(-1)!.detail.next.layers[0].dopants).to.deep.equal([]);
   });
 
+  it('offers the ionisation models that the dopant has parameters for, and names the usual one', async () => {
+    const { s } = await strip({ chosen: { kind: 'layer', index: 1 } });
+    const form = s.renderRoot.querySelector('hm-layer-form')!;
+    const texts = () => [...form.renderRoot.querySelectorAll<HTMLOptionElement>('#model-0 option')].map((o) => o.text);
+    expect(texts()).to.deep.equal(['usual: dilute (isolated level)', 'dilute (isolated level)', 'complete ionisation']);
+    form.design = { ...form.design, layers: form.design.layers.map((l, i) => (i === 1 ? { ...l, material: 'Si', x: undefined, dopants: [{ dopant: 'P', concentration: '1e18 cm^-3' }] } : l)) };
+    await form.updateComplete;
+    expect(texts()).to.deep.equal(['usual: merging with the band', 'merging with the band', 'dilute (isolated level)', 'screened level', 'complete ionisation']);
+  });
+
   it('says which dopant was exchanged when a new material does not know the old one', async () => {
     const { s, edits, said } = await strip({ chosen: { kind: 'layer', index: 3 } });
     const select = s.renderRoot.querySelector('hm-layer-form')!.renderRoot.querySelector<HTMLSelectElement>('#material')!;

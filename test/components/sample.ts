@@ -1,5 +1,6 @@
 import { sendKeys } from '@web/test-runner-commands';
 import { presetCatalogue } from '../../src/design/catalogue.ts';
+import { modelsKnown } from '../../src/design/ionisation-models.ts';
 import { starters } from '../../src/design/starters/index.ts';
 import type { Design } from '../../src/design/types.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
@@ -21,7 +22,7 @@ export function solved(design: Design): Result {
 export function menus() {
   return {
     materials: [...presetCatalogue.materials.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, alloy: entry.alloy !== undefined })),
-    dopants: [...presetCatalogue.dopants.values()].flatMap((rows) => [...rows.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, host: entry.host, kind: entry.kind }))),
+    dopants: [...presetCatalogue.dopants.values()].flatMap((rows) => [...rows.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id, host: entry.host, kind: entry.kind, models: modelsKnown(entry) }))),
     metals: [...presetCatalogue.metals.values()].map(({ entry }) => ({ id: entry.id, name: entry.name ?? entry.id })),
   };
 }
