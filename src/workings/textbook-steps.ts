@@ -32,9 +32,15 @@ export function textbookSteps(context: Context, point: Point, mark = ''): Textbo
   const level = known(mark === '' ? '(E_c−E_F)_B' : `(E_c−E_F)_B,${mark}`, 'the same by Boltzmann statistics', book.ecMinusEf, 'eV', WORKED);
   const majority = formula`${N} / 2 + sqrt((${N} / 2) ^ 2 + ${ni} ^ 2)`;
   const niStep = step(ni, formula`exp((ln(${nc}) + ln(${nv}) - ${gap} / ${kT}) / 2)`);
+  // Undoped, the closed form of the level outlives densities below the smallest number.
+  if (net === 0) return undoped({ level, ni, n, p, kT, gap, nc, nv, niStep });
   const nStep = isN ? step(n, majority) : step(n, formula`${nc} * exp(-${level} / ${kT})`);
   const pStep = isN ? step(p, formula`${nv} * exp((${level} - ${gap}) / ${kT})`) : step(p, majority);
   const levelStep = isN ? step(level, formula`${kT} * ln(${nc} / ${n})`) : step(level, formula`${gap} - ${kT} * ln(${nv} / ${p})`);
   const steps = isN ? [niStep, nStep, levelStep] : [niStep, pStep, levelStep];
   return { level, steps, n: { known: n, steps: isN ? steps.slice(0, 2) : [...steps, nStep] }, p: { known: p, steps: isN ? [...steps, pStep] : steps.slice(0, 2) } };
+}
+
+function undoped({ level, ni, n, p, kT, gap, nc, nv, niStep }: Record<'level' | 'ni' | 'n' | 'p' | 'kT' | 'gap' | 'nc' | 'nv', Known> & { niStep: Step }): Textbook {
+  return { level, steps: [step(level, formula`(${gap} + ${kT} * ln(${nc} / ${nv})) / 2`, 'Nothing is doped: n = p.')], n: { known: n, steps: [niStep, step(n, formula`${ni}`)] }, p: { known: p, steps: [niStep, step(p, formula`${ni}`)] } };
 }

@@ -29,15 +29,29 @@ function responseSteps(context: Context, point: Point, neutral: Neutral, carrier
   return { known: k, steps: [step(k, alpha > 0 ? formula`${states} * kaneSlope((${above}) / ${neutral.kT}, ${a} * ${neutral.kT})` : formula`${states} * fermiSlope((${above}) / ${neutral.kT})`)] };
 }
 
+/** Carriers below this, cm^-3, are near the end of what numbers hold. */
+const LEAST_SUM = 1e-290;
+
+/** The Debye length by the exponent of the majority, which is far from its band where there are so few. */
+function tinyCarriers(point: Point, neutral: Neutral, eps: Known, volts: Known, length: Known): Step {
+  const ofElectrons = point.ecMinusEf < point.bands.gap - point.ecMinusEf;
+  const states = ofElectrons ? neutral.nc : neutral.nv;
+  const away = ofElectrons ? formula`${neutral.level}` : formula`(${neutral.gap} - ${neutral.level})`;
+  const far = ofElectrons ? point.ecMinusEf : point.bands.gap - point.ecMinusEf;
+  const alone = Math.sqrt((eps.value * vacuumPermittivity.value * volts.value) / (charge.value * states.value)) * Math.exp(far / (2 * point.bands.kT));
+  const rest = known('r', 'share that the other carrier and the shape of the bands add', (alone / length.value) ** 2 - 1, '', SOLVED);
+  return step(length, formula`sqrt(${eps} * ${vacuumPermittivity} * ${volts} / (${charge} * ${states} * (1 + ${rest}))) * exp(${away} / (2 * ${neutral.kT}))`);
+}
+
 export function debyeWorkings(context: Context, point: Point, row: LayerResult, neutral: Neutral): Found {
   if (row.debye_nm === null) return { steps: groundOf(neutral), remarks: ['There are so few carriers that the length is beyond the largest number.'], rests: ['carriers', 'bands'] };
   const eps = permittivitySteps(context, point);
   const [n, p] = [responseSteps(context, point, neutral, 'n'), responseSteps(context, point, neutral, 'p')];
   const sum = n.known.value + p.known.value;
-  const length = known('L_D', 'Debye length', row.debye_nm * CM_PER_NM, 'nm', sum > 1e-290 ? WORKED : SOLVED, { scale: CM_PER_NM });
+  const length = known('L_D', 'Debye length', row.debye_nm * CM_PER_NM, 'nm', sum > LEAST_SUM ? WORKED : SOLVED, { scale: CM_PER_NM });
   const volts = known('kT/q', 'thermal voltage', neutral.kT.value, 'V', WORKED);
   const steps = [...groundOf(neutral), ...eps.steps, ...n.steps, ...p.steps];
-  if (!(sum > 1e-290)) return { steps, remarks: ['The carriers are below the smallest number; the length was worked out in logarithms.'], rests: ['carriers', 'bands'] };
+  if (!(sum > LEAST_SUM)) return { steps: [...groundOf(neutral), ...eps.steps, tinyCarriers(point, neutral, eps.known, volts, length)], remarks: ['The carriers are below the smallest number: the length is worked out by their exponent.'], rests: ['carriers', 'bands'] };
   const density = known('n', 'majority carriers', Math.max(neutral.n.value, neutral.p.value), 'cm⁻³', WORKED);
   const simple = known('L_D,B', 'by the textbook', Math.sqrt((point.bands.permittivity * vacuumPermittivity.value * volts.value) / (charge.value * density.value)), 'nm', WORKED, { scale: CM_PER_NM });
   return {

@@ -9,6 +9,7 @@ import { evaluate } from '../../src/workings/expression.ts';
 import type { Known } from '../../src/workings/known.ts';
 import { RESULT_DIGITS, readPrinted, shown, type Step } from '../../src/workings/step.ts';
 import { workingsOf } from '../../src/workings/workings-of.ts';
+import { workingsText } from '../../src/workings/text.ts';
 import type { Workings } from '../../src/workings/workings.ts';
 
 interface Case {
@@ -25,6 +26,7 @@ const CASES: Case[] = [
   { name: 'Boltzmann diode', design: { ...starter('pn-diode'), assumptions: { statistics: 'boltzmann' } } },
   { name: 'channel by the affinity rule, hot', design: { ...starter('modulation-doped'), conditions: { temperature: '77 K' }, requirements: [], assumptions: { alignment: 'affinity' } } },
   { name: 'metal by its work function', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: 'none' } } },
+  { name: 'undoped layer at 20 K', design: { ...starter('back-field'), conditions: { temperature: '20 K' }, requirements: [], layers: starter('back-field').layers.map((layer) => ({ ...layer, dopants: [] })), interfaces: [] } },
   { name: 'metal half pinned', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: '0.3' } } },
 ];
 
@@ -146,5 +148,40 @@ describe('the workings', () => {
       }
     }
   });
-});
 
+  it('flag a value of the person’s own', () => {
+    const design = starter('schottky');
+    const { material, dopants } = design.layers[0];
+    design.custom = { dopants: [{ id: 'mine', host: material, kind: 'donor', depth: '60 meV', source: 'our own Hall data' }] };
+    design.layers[0].dopants = [{ ...dopants![0], dopant: 'mine' }];
+    delete design.layers[0].dopants[0].model;
+    const w = workingsOf(design, solved(design), { table: 'layers', index: 0, column: 'n' });
+    const depth = w.steps.flatMap((s) => shown(s).symbols).find(({ known }) => known.path.endsWith(':mine depth'))!;
+    expect(depth.known.origin).toEqual({ from: 'own value', text: 'our own Hall data' });
+  });
+
+  it('set other published barriers of the pair beside the one in force', () => {
+    const design = starter('pn-diode');
+    const { rivals, steps } = workingsOf(design, solved(design), { table: 'contacts', index: 0, column: 'barrierN' });
+    expect(rivals.some(({ words }) => words.startsWith('measured barrier'))).toBe(true);
+    expect(rivals.some(({ words }) => words.startsWith('work function less affinity'))).toBe(true);
+    expect(steps.some((s) => shown(s).symbols.some(({ known }) => known.origin.from === 'source' && known.words.includes('measured')))).toBe(true);
+  });
+
+  it('are refused for a result of another design, and for a figure that is not there', () => {
+    const [diode, channel] = [starter('pn-diode'), starter('modulation-doped')];
+    const result = solved(diode);
+    expect(() => workingsOf(channel, result, { table: 'layers', index: 0, column: 'n' })).toThrow('not of this design');
+    expect(() => workingsOf(diode, result, { table: 'layers', index: 99, column: 'n' })).toThrow('row 99');
+    expect(() => workingsOf(diode, result, { table: 'layers', index: 0, column: 'colour' })).toThrow('colour');
+  });
+
+  it('as text name the figure, the formula, each value and its source', () => {
+    const design = starter('pn-diode');
+    const text = workingsText(workingsOf(design, solved(design), { table: 'layers', index: 1, column: 'gap' }));
+    expect(text).toContain('Gap of drift: 1.125 eV');
+    expect(text).toContain('Eg = Eg,0K − (α T^2)/(T + β) → Eg = 1.1245 eV');
+    expect(text).toContain('Thurmond');
+    expect(text).toContain('seen in print');
+  });
+});
