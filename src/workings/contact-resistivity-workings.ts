@@ -3,6 +3,7 @@ import { BOLTZMANN } from '../../solver/constants.ts';
 import { contactPath, type ContactPath } from '../../solver/contact-path.ts';
 import { carrierConductance, isMissing } from '../../solver/contact-resistivity.ts';
 import { spaceChargeOf } from '../../solver/depletion.ts';
+import type { ContactResult } from '../result/types.ts';
 import { barrierSteps } from './barrier-steps.ts';
 import { groundOf, neutralOf } from './carrier-steps.ts';
 import { richardsonSteps, tunnellingSteps, type End } from './contact-workings.ts';
@@ -53,12 +54,26 @@ function carrierSteps(context: Context, end: End, path: ContactPath, point: Poin
   const A = richardsonSteps(context, point, carrier);
   if (figure === null || A === null) return null;
   const letter = carrier === 'electron' ? 'n' : 'p';
-  const way = carrier === (path.electrons ? 'electron' : 'hole') ? (end.row.transmission ?? undefined) : undefined;
-  const asked = carrierConductance(context.stack, path, carrier, way ? { transmission: way } : { transmission: 'wkb' });
-  const value = isMissing(asked) || Math.abs(Math.exp(-asked.log) / figure - 1) > 1e-4 ? BOLTZMANN ** 2 / (A.known.value * figure) : Math.exp(asked.log) * (BOLTZMANN ** 2 / A.known.value);
+  const asked = conducted(context, end, path, carrier, figure);
+  if (asked === null) return null;
+  const value = Math.exp(asked) * (BOLTZMANN ** 2 / A.known.value);
   const rho = known(`ρ_${letter}`, `contact resistivity of ${carrier}s`, figure, 'Ω cm²', WORKED);
   const integral = known(`I_${letter}`, `∫ T f dE of ${carrier}s, summed over energy`, value, 'eV', SOLVED);
   return { rho, steps: [...A.steps, law(conductionIntegral(letter), 'Padovani and Stratton, Solid-State Electron. 9, 695 (1966); Chang, Fang and Sze, Solid-State Electron. 14, 541 (1971).'), step(rho, formula`${boltzmann} ^ 2 / (${A.known} * ${integral})`)] };
+}
+
+/** Off the figure by less than this, ln, it was worked out in the same way. */
+const SAME = 1e-4;
+
+/** ln of 1/rho of a carrier; a minority that hardly counts was taken by WKB whatever the way of the majority. */
+function conducted(context: Context, { row }: End, path: ContactPath, carrier: 'electron' | 'hole', figure: number): number | null {
+  const by = (transmission: NonNullable<ContactResult['transmission']>): number | null => {
+    const found = carrierConductance(context.stack, path, carrier, { transmission });
+    return isMissing(found) ? null : found.log;
+  };
+  const plain = by('wkb');
+  if (row.transmission === null || row.transmission === 'wkb' || plain === null || Math.abs(plain + Math.log(figure)) < SAME) return plain;
+  return by(row.transmission);
 }
 
 function floor(context: Context, path: ContactPath, point: Point, figure: number): Found {

@@ -27,6 +27,7 @@ const CASES: Case[] = [
   { name: 'channel by the affinity rule, hot', design: { ...starter('modulation-doped'), conditions: { temperature: '77 K' }, requirements: [], assumptions: { alignment: 'affinity' } } },
   { name: 'metal by its work function', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: 'none' } } },
   { name: 'undoped layer at 20 K', design: { ...starter('back-field'), conditions: { temperature: '20 K' }, requirements: [], layers: starter('back-field').layers.map((layer) => ({ ...layer, dopants: [] })), interfaces: [] } },
+  { name: 'metal by the exact transmission', design: { ...starter('schottky'), assumptions: { transmission: 'exact' } } },
   { name: 'metal half pinned', design: { ...starter('schottky'), top: { kind: 'barrier', metal: 'Ti', pinning: '0.3' } } },
 ];
 
