@@ -5,7 +5,7 @@ import type { HmApp } from '../../components/hm-app/hm-app.ts';
 import type { HmStrip } from '../../components/hm-strip/hm-strip.ts';
 import { tell } from '../../components/shared/events.ts';
 import { writeDesign } from '../../src/design/write.ts';
-import { addRequirement, setConcentration, setThickness } from '../../src/state/commands/index.ts';
+import { addRequirement, moveLayer, setConcentration, setThickness } from '../../src/state/commands/index.ts';
 import { ProjectStore } from '../../src/storage/project-store.ts';
 import { expectAccessible } from './accessible.ts';
 import { button, until } from './heard.ts';
@@ -90,6 +90,18 @@ describe('the page', () => {
     await until('a new picture', () => solved(app), PATIENCE);
     expect(part(app, 'hm-plate').stale).to.equal(false);
     expect(said(app)).to.contain('Solved.');
+  });
+
+  it('keeps the moved layer chosen when undo brings it back', async () => {
+    const app = await open();
+    const { name: moved } = strip(app).design!.layers[1];
+    tell(strip(app), 'hm-choose', { kind: 'layer', index: 0 });
+    tell(strip(app), 'hm-edit', { next: moveLayer(strip(app).design!, 1, 0), label: 'layer moved' });
+    await until('the move', () => strip(app).design!.layers[0].name === moved);
+    key({ key: 'z', ctrlKey: true });
+    await until('the move taken back', () => strip(app).design!.layers[1].name === moved);
+    await strip(app).updateComplete;
+    expect(strip(app).chosen).to.deep.equal({ kind: 'layer', index: 1 });
   });
 
   it('leaves undo to the browser while a field holds text that is not accepted yet', async () => {

@@ -72,6 +72,28 @@ describe('a session', () => {
     expect(session.findings).toMatchObject({ status: 'complete', stale: false, result: { title: 'c' } });
   });
 
+  it('keeps the same layer chosen when undo and redo move it', () => {
+    const { session } = rig();
+    session.open(designFixture());
+    const { name } = session.design.layers[0];
+    session.edit(commands.moveLayer(session.design, 0, 1), 'layer moved');
+    session.changeMoment({ chosen: { kind: 'layer', index: 1 } });
+    session.undo();
+    expect(session.design.layers[0].name).toBe(name);
+    expect(session.moment.chosen).toEqual({ kind: 'layer', index: 0 });
+    session.redo();
+    expect(session.moment.chosen).toEqual({ kind: 'layer', index: 1 });
+  });
+
+  it('leaves the choice where it is when undo takes a name back', () => {
+    const { session } = rig();
+    session.open(designFixture());
+    session.changeMoment({ chosen: { kind: 'layer', index: 1 } });
+    session.edit(commands.renameLayer(session.design, 1, 'another'), 'name');
+    session.undo();
+    expect(session.moment.chosen).toEqual({ kind: 'layer', index: 1 });
+  });
+
   it('ignores complaints about a design that is no longer the present one', async () => {
     const { session, asked, retitle } = rig();
     session.open(designFixture());
