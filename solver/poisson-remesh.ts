@@ -1,4 +1,5 @@
 import { meshOf, type Mesh } from './mesh.ts';
+import type { Landmark } from './profile.ts';
 import type { PoissonProblem, PoissonSystem } from './poisson-system.ts';
 
 /** How steeply the cell size may grow along a layer: neighbouring cells stay alike within about this share, on which the fourth order rests. */
@@ -9,6 +10,10 @@ const COARSER = 2.5;
 /** Least cells of a layer; the estimate takes five nodes, and a graded profile must not hide between them. */
 const LEAST_CELLS = 6;
 const LEAST_CELLS_GRADED = 48;
+/** Of a cell: landmarks nearer than this to each other share a node. */
+const NEAREST_MARK = 1 / 3;
+/** A whole number of cells that rounding put a hair above itself stays that number. */
+const ROUNDING = 1e-9;
 /** What a row misses grows with the fifth power of its cells. */
 const POWER = 1 / 5;
 
@@ -49,32 +54,51 @@ export function equidistributed(problem: PoissonProblem, system: PoissonSystem, 
       }
       for (let k = 1; k <= m; k++) size[k] = Math.min(size[k], size[k - 1] + GRADING * (z[k] - z[k - 1]));
       for (let k = m - 1; k >= 0; k--) size[k] = Math.min(size[k], size[k + 1] + GRADING * (z[k + 1] - z[k]));
-      return placed(z, size, least);
+      return placed(z, size, least, problem.layers[l].landmarks ?? []);
     }),
   );
 }
 
-/** Nodes at even steps of Int dz/size, size straight between the old nodes. */
-function placed(z: Float64Array, size: Float64Array, least: number): Float64Array {
+/**
+ * Nodes at even steps of Int dz/size, size straight between the old nodes, and one at each landmark: a kink between two nodes would be cut off, which no row
+ * of the mesh could see. A landmark closer to another, or to an end, than a third of the cell there gives way.
+ */
+function placed(z: Float64Array, size: Float64Array, least: number, landmarks: readonly Landmark[]): Float64Array {
   const m = z.length - 1;
   const count = new Float64Array(m + 1);
   // Int dz/size over a cell: h ln(1 + r)/(r s0), r = s1/s0 - 1.
-  for (let k = 0; k < m; k++) {
-    const r = size[k + 1] / size[k] - 1;
-    count[k + 1] = count[k] + ((z[k + 1] - z[k]) / size[k]) * (Math.abs(r) < 1e-6 ? 1 - r / 2 : Math.log1p(r) / r);
-  }
-  const cells = Math.max(least, Math.ceil(count[m]));
-  const out = new Float64Array(cells + 1);
+  for (let k = 0; k < m; k++) count[k + 1] = count[k] + steps(z, size, k, z[k + 1]);
+  const marks = landmarks.map((mark) => mark.z).filter((x) => x > 0 && x < z[m]).sort((x, y) => x - y);
+  const bounds: { z: number; count: number }[] = [{ z: z[0], count: 0 }];
   let k = 0;
-  for (let j = 1; j < cells; j++) {
-    const c = (count[m] * j) / cells;
-    while (k + 1 < m && count[k + 1] < c) k++;
-    const r = size[k + 1] / size[k] - 1;
-    const x = ((c - count[k]) * size[k]) / (z[k + 1] - z[k]);
-    out[j] = z[k] + (z[k + 1] - z[k]) * Math.min(1, Math.abs(r) < 1e-6 ? x : Math.expm1(r * x) / r);
+  for (const mark of marks) {
+    while (k + 1 < m && z[k + 1] <= mark) k++;
+    const at = count[k] + steps(z, size, k, mark);
+    if (at - bounds[bounds.length - 1].count > NEAREST_MARK && count[m] - at > NEAREST_MARK) bounds.push({ z: mark, count: at });
   }
-  out[cells] = z[m];
-  return out;
+  bounds.push({ z: z[m], count: count[m] });
+  const stretch = Math.max(1, least / Math.ceil(count[m]));
+  const out: number[] = [z[0]];
+  k = 0;
+  for (let s = 0; s + 1 < bounds.length; s++) {
+    const [from, to] = [bounds[s], bounds[s + 1]];
+    const cells = Math.max(1, Math.ceil((to.count - from.count) * stretch - ROUNDING));
+    for (let j = 1; j < cells; j++) {
+      const c = from.count + ((to.count - from.count) * j) / cells;
+      while (k + 1 < m && count[k + 1] < c) k++;
+      const r = size[k + 1] / size[k] - 1;
+      const x = ((c - count[k]) * size[k]) / (z[k + 1] - z[k]);
+      out.push(z[k] + (z[k + 1] - z[k]) * Math.min(1, Math.abs(r) < 1e-6 ? x : Math.expm1(r * x) / r));
+    }
+    out.push(to.z);
+  }
+  return Float64Array.from(out);
+}
+
+/** Int dz/size from old node k to a depth within its cell. */
+function steps(z: Float64Array, size: Float64Array, k: number, to: number): number {
+  const r = ((size[k + 1] / size[k] - 1) * (to - z[k])) / (z[k + 1] - z[k]);
+  return ((to - z[k]) / size[k]) * (Math.abs(r) < 1e-6 ? 1 - r / 2 : Math.log1p(r) / r);
 }
 
 /**
