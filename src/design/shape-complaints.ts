@@ -6,12 +6,17 @@ import { designShape } from './shape.ts';
 /** Keys that every object has without being asked: JSON can carry them, a schema would not see them. */
 const INHERITED = new Set(['__proto__', ...Object.getOwnPropertyNames(Object.prototype)]);
 const MOST_DEPTH = 40;
+/** Values in a document of which every fault is told: some 2000 layers. */
+const MOST_PARTS = 50_000;
+/** Inherited keys that are told one by one. */
+const MOST_HIDDEN = 100;
 
 /** Everything that is wrong with the shape of a document; empty when it is a design. */
 export function shapeComplaints(document: unknown): Complaint[] {
-  const hidden = inheritedKeys(document);
+  const { hidden, parts } = walked(document);
   if (hidden.length > 0) return hidden;
-  const answer = v.safeParse(designShape, document);
+  // Hundreds of thousands of faults would hold the page up for seconds and be read by nobody: of a huge document the first one is told.
+  const answer = v.safeParse(designShape, document, { abortEarly: parts > MOST_PARTS });
   if (answer.success) return [];
   return unique(answer.issues.flatMap((issue) => complaintsOf(issue, '')));
 }
@@ -125,20 +130,24 @@ function keysBeside(parent: unknown, path: string): string[] {
   return Object.keys(meant?.entries ?? {}).filter((k) => !Object.hasOwn(parent as object, k));
 }
 
-function inheritedKeys(document: unknown): Complaint[] {
-  const out: Complaint[] = [];
+/** Looks at every value once: keys that no design may have, and how many values there are. */
+function walked(document: unknown): { hidden: Complaint[]; parts: number } {
+  const hidden: Complaint[] = [];
+  let parts = 0;
   const open: { value: unknown; path: string; depth: number }[] = [{ value: document, path: '', depth: 0 }];
   for (let item = open.pop(); item; item = open.pop()) {
     const { value, path, depth } = item;
+    parts++;
     if (value === null || typeof value !== 'object') continue;
-    if (depth > MOST_DEPTH) return [{ path: path.slice(0, 80), message: 'is nested too deeply to be a design' }];
+    if (depth > MOST_DEPTH) return { hidden: [{ path: path.slice(0, 80), message: 'is nested too deeply to be a design' }], parts };
     for (const key of Object.keys(value)) {
       const place = Array.isArray(value) ? `${path}[${key}]` : path === '' ? key : `${path}.${key}`;
-      if (INHERITED.has(key)) out.push({ path: place, message: `there is no key ${quoted(key)} here` });
+      if (INHERITED.has(key)) hidden.push({ path: place, message: `there is no key ${quoted(key)} here` });
       else open.push({ value: (value as Record<string, unknown>)[key], path: place, depth: depth + 1 });
     }
+    if (hidden.length > MOST_HIDDEN) break;
   }
-  return out;
+  return { hidden, parts };
 }
 
 function unique(complaints: Complaint[]): Complaint[] {

@@ -90,11 +90,13 @@ function readLayer(input: LayerInput, path: string, catalogue: Catalogue, materi
 
 function readInterfaces(design: Design, ask: Asker): Interface[] {
   const seen = new Set<number>();
+  const at = new Map(design.layers.map((layer, index) => [layer.name, index]));
+  const all = listedNames(design.layers);
+  const between = listedNames(design.layers.slice(0, -1));
   return (design.interfaces ?? []).map((row, i) => {
     const path = `interfaces[${i}]`;
-    const index = design.layers.findIndex((layer) => layer.name === row.above);
-    const between = design.layers.slice(0, -1).map((l) => quoted(l.name)).join(', ');
-    if (index < 0) ask.wrong(`${path}.above`, `there is no layer ${quoted(row.above)}; the layers are ${design.layers.map((l) => quoted(l.name)).join(', ')}`);
+    const index = at.get(row.above) ?? -1;
+    if (index < 0) ask.wrong(`${path}.above`, `there is no layer ${quoted(row.above)}; the layers are ${all}`);
     else if (index === design.layers.length - 1) ask.wrong(`${path}.above`, `${quoted(row.above)} is the last layer, with no interface below it${between ? `; name one of ${between}` : ''}`);
     else if (seen.has(index)) ask.wrong(`${path}.above`, `the interface below ${quoted(row.above)} is there twice; put both into one row`);
     seen.add(index);
@@ -132,4 +134,10 @@ function readCrystal(design: Design, catalogue: Catalogue, ask: Asker): Crystal 
   const template = readMaterial(input.template, catalogue, ask, 'crystal.template');
   if (template && isAlloy(template)) ask.wrong('crystal.template', `${quoted(input.template)} is an alloy; name a crystal`);
   return template ? { face: input.face, strain: input.strain, template } : undefined;
+}
+
+/** Names for a complaint, the first dozen: with thousands of layers and of complaints whole lists would fill the memory. */
+function listedNames(layers: readonly LayerInput[]): string {
+  const named = layers.slice(0, 12).map((layer) => quoted(layer.name)).join(', ');
+  return layers.length > 12 ? `${named} and ${layers.length - 12} more` : named;
 }

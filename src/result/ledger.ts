@@ -3,6 +3,7 @@
  *
  * A cell keeps the number beside its text, so that sorting and copying never read a rounded text back.
  */
+import { textCell } from '../export/text-cell.ts';
 import { contactColumns } from './ledger-contacts.ts';
 import { junctionColumns } from './ledger-junctions.ts';
 import { layerColumns } from './ledger-layers.ts';
@@ -92,10 +93,9 @@ function plainCell(cell: Cell): string {
   return cell.value === null ? '' : cell.value;
 }
 
-/** No tab or line break may leave its field, and no spreadsheet may take a layer's name for a formula. */
+/** Figures stay figures; a name must not leave its field, nor be taken for a formula. */
 function field(text: string): string {
-  const flat = text.replace(/[\t\r\n]+/g, ' ');
-  return /^[=+@]/.test(flat) || (flat.startsWith('-') && Number.isNaN(Number(flat))) ? `'${flat}` : flat;
+  return text !== '' && Number.isFinite(Number(text)) ? text.trim() : textCell(text);
 }
 
 /** One line on how good the answer is. */

@@ -6,7 +6,9 @@ import { recordFault, type ProjectRecord } from './record.ts';
  * All projects in one file that a person can keep: JSON, each project with a check over its own text, so that a file cut short or altered is noticed
  * project by project and the others still come back.
  */
-export const BACKUP_FORMAT = 'halfmark-backup/1';
+export const BACKUP_FORMAT = 'halfmark-backup/2';
+/** Those that can be read: in version 1 a project had no variants. */
+const READABLE = ['halfmark-backup/1', BACKUP_FORMAT];
 
 type Kept = Omit<ProjectRecord, 'id' | 'revision'>;
 interface BackupEntry extends Kept {
@@ -39,12 +41,12 @@ export function readBackup(text: string): BackupReading {
   const { format, projects } = file as { format?: unknown; projects?: unknown };
   const version = typeof format === 'string' ? /^halfmark-backup\/(\d+)$/.exec(format) : null;
   if (version === null) return { ok: false, message: 'This is no backup file: it does not say "halfmark-backup" as its format.' };
-  if (format !== BACKUP_FORMAT) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads version 1. Reload the page to get its newest version.` };
+  if (!READABLE.includes(version[0])) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads versions 1 and 2. Reload the page to get its newest version.` };
   if (!Array.isArray(projects)) return { ok: false, message: 'This backup holds no list of projects.' };
   const good: Kept[] = [];
   for (const [i, entry] of projects.entries()) {
     const fault = recordFault(typeof entry === 'object' && entry !== null ? { ...entry, id: '', revision: 1 } : entry);
-    const { check, ...kept } = (entry ?? {}) as BackupEntry;
+    const { check, ...kept } = fields(entry);
     const name = typeof kept.name === 'string' ? kept.name : `number ${i + 1}`;
     if (fault !== null) refused.push({ name, why: fault });
     else if (check !== checkOf(kept)) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
@@ -90,6 +92,12 @@ function endOfObject(text: string, from: number): number {
   return -1;
 }
 
-function checkOf({ name, created, changed, binned, designText, history, view }: Kept): string {
-  return `sha256:${bytesToHex(sha256(utf8ToBytes(JSON.stringify([name, created, changed, binned, designText, history, view]))))}`;
+/** What a backup may say of a project, and nothing else that stands beside it. */
+function fields(entry: unknown): BackupEntry {
+  const { name, created, changed, binned, designText, history, view, variants, check } = (entry ?? {}) as BackupEntry;
+  return { name, created, changed, binned, designText, history, view, ...(variants === undefined ? {} : { variants }), check };
+}
+
+function checkOf({ name, created, changed, binned, designText, history, view, variants }: Kept): string {
+  return `sha256:${bytesToHex(sha256(utf8ToBytes(JSON.stringify([name, created, changed, binned, designText, history, view, ...(variants === undefined ? [] : [variants])]))))}`;
 }
