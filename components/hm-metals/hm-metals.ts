@@ -1,7 +1,7 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { BarrierValue } from '../../src/contacts/barrier-values.ts';
 import { orderedRows, rankingBasis, type MetalOrder, type OrderBy } from '../../src/contacts/metal-order.ts';
-import { bandWords, majorityBarrier, rankingSentence, regimeOf, valueOf, valueWords } from '../../src/contacts/metal-words.ts';
+import { bandWords, majorityBarrier, originWords, rankingSentence, regimeOf, valueOf, valueWords } from '../../src/contacts/metal-words.ts';
 import type { MetalRow, Ranking } from '../../src/contacts/rank-metals.ts';
 import type { Design } from '../../src/design/types.ts';
 import { decimalText, figureText } from '../../src/result/figure-text.ts';
@@ -215,7 +215,7 @@ export class HmMetals extends LitElement {
       ${row.values.map((value) => {
         const used = value.key === row.value;
         return html`<li>
-          <span class="words ${used ? 'in-use' : ''}">φBn ${decimalText(value.barrier_n_eV)} eV, φBp ${decimalText(value.barrier_p_eV)} eV: ${valueWords(value)}${value.note === null ? '' : `; ${value.note}`}</span>
+          <span class="words ${used ? 'in-use' : ''}">φBn ${decimalText(value.barrier_n_eV)} eV, φBp ${decimalText(value.barrier_p_eV)} eV: ${valueWords(value)}<span class="note">${originWords(value)}</span></span>
           ${used ? html`<span class="faint">in use</span>` : html`<button type="button" ?disabled=${running || stale || this.job.progress !== null} @click=${() => this.rerun(row, value)}>Run with this<span class="spoken"> value of ${row.metal}, ${decimalText(value.barrier_n_eV)} eV</span></button>`}
         </li>`;
       })}

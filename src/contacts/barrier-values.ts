@@ -1,3 +1,4 @@
+import { sources } from '../../presets/index.ts';
 import { barrierHeights, pinningSlope } from '../../solver/barrier.ts';
 import type { Boundary, Material } from '../../solver/index.ts';
 import type { LocalBands } from '../../solver/bands.ts';
@@ -16,6 +17,7 @@ export interface BarrierValue {
   barrier_p_eV: number;
   /** S of a model; null for a measured value */ slope: number | null;
   /** key of the presets' works, or what the design says */ source: string | null;
+  /** the work behind that key, in full; null where there is none */ work: string | null;
   checked: string | null;
   confidence: string | null;
   note: string | null;
@@ -40,12 +42,12 @@ export function barrierValues(metal: MetalInput, stated: Pick<BarrierInput, 'car
   const { carrier, imageForce } = stated;
   const own: BarrierInput = { kind: 'barrier', metal: metal.id, ...(carrier === undefined ? {} : { carrier }), ...(imageForce === undefined ? {} : { imageForce }) };
   const values: BarrierValue[] = [];
-  const add = (value: Omit<BarrierValue, 'barrier_n_eV' | 'barrier_p_eV'>): void => {
+  const add = (value: Omit<BarrierValue, 'barrier_n_eV' | 'barrier_p_eV' | 'work'>): void => {
     const boundary = surface.boundary(value.contact);
     if (typeof boundary === 'string') return;
     const heights = heightsOf(boundary.source, surface);
     if (heights === null || values.some(({ key }) => key === value.key)) return;
-    values.push({ ...value, barrier_n_eV: heights.barrierN, barrier_p_eV: heights.barrierP });
+    values.push({ ...value, work: value.source !== null && Object.hasOwn(sources, value.source) ? sources[value.source] : null, barrier_n_eV: heights.barrierN, barrier_p_eV: heights.barrierP });
   };
   const rows = (metal.barriers ?? []).filter((row) => row.material === surface.material.id);
   // The one that a design gets by naming the metal alone.

@@ -11,6 +11,12 @@ export function valueWords({ basis, carrier, slope, source, checked }: BarrierVa
   return `measured for ${carrier === 'n' ? 'electrons' : 'holes'}${where === '' ? '' : `, ${where}`}`;
 }
 
+/** Where a value stands, in full: the work, how sure its figure is, and what is to be known of it. Of a model, where the work function stands. */
+export function originWords({ basis, work, source, checked, confidence, note }: BarrierValue): string {
+  const from = work ?? source;
+  return [from === null ? null : `${basis === 'measured' ? '' : 'work function: '}${from}`, basis !== 'measured' && checked === 'memory' ? 'from memory' : null, confidence === null ? null : `${confidence} confidence`, note].filter((part) => part !== null).join('; ');
+}
+
 /** The value in use of a row; null without one. */
 export function valueOf(row: MetalRow): BarrierValue | null {
   return row.values.find(({ key }) => key === row.value) ?? null;

@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest';
-import { valueWords } from '../../src/contacts/metal-words.ts';
+import { originWords, valueWords } from '../../src/contacts/metal-words.ts';
 import { rankMetals, type MetalRow, type RankOptions, type Ranking } from '../../src/contacts/rank-metals.ts';
 import { starters } from '../../src/design/starters/index.ts';
 import type { Design, MetalInput } from '../../src/design/types.ts';
@@ -93,6 +93,14 @@ describe('the ranking of metals', () => {
     const words = (metal: string): string => valueWords(row(metal).values.find(({ key }) => key === row(metal).value)!);
     expect(words('Al')).toMatch(/^measured for electrons, \w+/);
     expect(words('Er')).toMatch(/^pinned, S = 0\.\d+$/);
+  });
+
+  it('cites the work behind each value', () => {
+    for (const value of row('Al').values) {
+      expect(value.work, value.key).toMatch(/\(\d{4}\)|\d{4}/);
+      expect(originWords(value)).toContain(value.work as string);
+      expect(originWords(value).startsWith('work function: ')).toBe(value.basis !== 'measured');
+    }
   });
 
   it('sets the measured, pinned and ideal values of a pair side by side', () => {
