@@ -13,6 +13,8 @@ const RICHARDSON = 1 / 3;
 /** One such estimate can be optimistic on graded meshes, so it is quoted four times as large. */
 const SAFETY = 4;
 const MOST_ROUNDS = 14;
+/** Newton updates times nodes that one answer may cost, some two seconds: beyond it the answer is refused, so that nothing hangs. */
+const MOST_WORK = 3e6;
 
 /**
  * The box scheme, for where the compact one does not settle: alternates a solution on the mesh and on its halved copy; their
@@ -26,16 +28,19 @@ export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: P
   let { mesh: coarse, psi } = start;
   let threshold = Infinity;
   let quality: Quality | null = null;
+  let work = 0;
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const system = new PoissonSystem(problem, coarse);
     let run: NewtonResult = newton(system, psi);
     updates += run.updates;
+    work += run.updates * coarse.nodes;
     if (!run.converged) return refuse(run, updates, coarse.nodes, quality);
     const fine = halved(coarse);
     const finePsi = interpolated(coarse, psi, fine);
     const fineSystem = new PoissonSystem(problem, fine);
     run = newton(fineSystem, finePsi);
     updates += run.updates;
+    work += run.updates * fine.nodes;
     if (!run.converged) return refuse(run, updates, fine.nodes, quality);
     let difference = 0;
     for (let l = 0; l < coarse.local.length; l++) {
@@ -63,7 +68,7 @@ export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: P
     }
     const refined = refinement(fineSystem, coarse, fine, accuracy, meshError, threshold);
     threshold = refined.threshold;
-    if (refined.mesh.nodes * 2 > maxNodes) {
+    if (refined.mesh.nodes * 2 > maxNodes || work > MOST_WORK) {
       return { refused: true, reason: `the estimated mesh error ${meshError.toExponential(1)} V stays above ${accuracy} V with ${fine.nodes} nodes`, quality };
     }
     psi = interpolated(fine, finePsi, refined.mesh);

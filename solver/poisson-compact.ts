@@ -17,7 +17,7 @@ const SAFETY = 4;
 const AGREEMENT = 1.2;
 const MOST_ROUNDS = 10;
 /** Halvings of the best mesh where new meshes do not come to rest. */
-const MOST_HALVINGS = 5;
+const MOST_HALVINGS = 2;
 /** A coarse mesh of this error leaves the halved one well within the accuracy. */
 const COARSE_SHARE = 2;
 /** Newton updates that end the passing solutions: that of the first mesh, V, and of coarse ones as a share of their target. Only the answer itself needs all digits. */
@@ -125,8 +125,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     target *= Math.min(0.5, Math.max(0.02, (0.5 * goal.accuracy) / meshError));
     carryTo(coarse, psi);
   }
-  // Where the charge turns within a few millivolts (frozen dopants deep in a thick layer) every new mesh meets the turns elsewhere, and its estimate goes up and down.
-  // Halved meshes hold on to their nodes: their differences fall steadily.
+  // Where every new mesh puts its nodes elsewhere and its estimate goes up and down, halved copies of the best one keep theirs: tried before the box scheme's turn.
   for (let halving = 0; best && halving < MOST_HALVINGS && 2 * best.coarse.system.mesh.nodes <= goal.maxNodes; halving++) {
     const fine = halve(best.coarse, best.psi);
     if (!fine) break;
