@@ -1,7 +1,9 @@
-// The part of the build that makes the page installable and has it kept: manifest, icons, service worker.
+// The part of the build that makes the page installable and has it kept: manifest, icons, licences, service worker.
+import { readFileSync } from 'node:fs';
 import type { Plugin } from 'vite';
 import { styleOf } from '../drawing/styles.ts';
 import { markPng } from './icon-png.ts';
+import { LICENCES_FILE } from './licences.mjs';
 import { WORKER_FILE, writeOfflineWorker } from './offline-worker.mjs';
 
 const { ground } = styleOf('light');
@@ -39,6 +41,8 @@ export function offlinePage(): Plugin {
     configResolved: (config) => void (folder = config.build.outDir.startsWith('/') ? config.build.outDir : `${config.root}/${config.build.outDir}`),
     generateBundle() {
       this.emitFile({ type: 'asset', fileName: MANIFEST_FILE, source: `${JSON.stringify(WEB_MANIFEST, null, 1)}\n` });
+      // Authors ask that their licences go wherever their work goes.
+      this.emitFile({ type: 'asset', fileName: 'licences.txt', source: readFileSync(LICENCES_FILE) });
       for (const { file, side, share } of ICONS) this.emitFile({ type: 'asset', fileName: file, source: markPng(side, share) });
     },
     transformIndexHtml: {
