@@ -135,7 +135,7 @@ export class ProjectDesk {
     const reading = readBackup(text);
     if (!reading.ok) return { said: reading.message, urgent: true };
     await this.#store.createAll(
-      reading.projects.map(({ name, designText, history, view, created, changed, binned }) => ({ name, content: { designText, history, view }, times: { created, changed, binned } })),
+      reading.projects.map(({ name, designText, history, view, variants, created, changed, binned }) => ({ name, content: { designText, history, view, variants }, times: { created, changed, binned } })),
     );
     const refused = reading.refused.map(({ name, why }) => ` ${name} was left out: ${why}.`).join('');
     return { said: `${reading.projects.length === 1 ? 'One project' : `${reading.projects.length} projects`} added from the backup.${refused}`, ...(refused === '' ? {} : { urgent: true }) };

@@ -2,6 +2,7 @@ import type { Complaint } from '../design/complaint.ts';
 import type { Design } from '../design/types.ts';
 import type { Answer, Result } from '../result/types.ts';
 import { History, type HistoryRecord } from './history.ts';
+import { loneVariant, parked, type VariantList } from './variants.ts';
 import { changedView, readView, type View } from './view.ts';
 
 /** How a question to the solver ended: answered; overtaken by a newer one or cancelled; or broken by a fault of ours. */
@@ -30,7 +31,7 @@ const NOWHERE: Moment = { depth_nm: null, chosen: null };
 /**
  * The open project while it is open: design, history, view, moment, and what the solver says. It knows no storage and no page.
  *
- * Fires plain events when something changed: `design` (also after undo, redo and opening), `findings`, `view`, `moment`. The last design asked for
+ * Fires plain events when something changed: `design` (also after undo, redo, opening and another variant), `findings`, `view`, `moment`, `variants`. The last design asked for
  * wins. While it is awaited, a result of an earlier one may be shown, marked stale, so that the bands follow the hand; never one older than what is
  * shown, and never anything of the project that was open before.
  */
@@ -38,6 +39,7 @@ export class Session extends EventTarget {
   #design: Design;
   #history: History;
   #view: View = {};
+  #variants: VariantList;
   #moment: Moment = NOWHERE;
   #findings: Findings = NOTHING_KNOWN;
   #asked = 0;
@@ -50,6 +52,7 @@ export class Session extends EventTarget {
     this.#design = design;
     this.#solve = solve;
     this.#history = new History(now);
+    this.#variants = loneVariant(design);
   }
 
   get design(): Design {
@@ -74,15 +77,34 @@ export class Session extends EventTarget {
     return this.#history.toRecord();
   }
 
+  /** With the open one as it is now. */
+  get variants(): VariantList {
+    return parked(this.#variants, { design: this.#design, history: this.#history.toRecord() });
+  }
+
   /** Opens another design: nothing of the last one stays, and it is asked for at once. */
-  open(design: Design, kept: { history?: unknown; view?: unknown } = {}): void {
-    this.#design = design;
-    this.#history.restore(kept.history);
+  open(design: Design, kept: { history?: unknown; view?: unknown; variants?: VariantList } = {}): void {
     this.#view = readView(kept.view);
+    this.#variants = kept.variants ?? loneVariant(design);
+    this.#begin(design, kept.history, ['variants', 'design', 'view', 'moment']);
+  }
+
+  /** Takes up what a command has made of `variants`. Another open one comes onto the page with its own history, as a project does. */
+  changeVariants(next: VariantList): void {
+    const { open } = this.#variants;
+    this.#variants = next;
+    const variant = next.list.find(({ id }) => id === next.open)!;
+    if (next.open === open) return this.#tell('variants');
+    this.#begin(variant.design, variant.history, ['variants', 'design', 'moment']);
+  }
+
+  #begin(design: Design, history: unknown, told: readonly string[]): void {
+    this.#design = design;
+    this.#history.restore(history);
     this.#moment = NOWHERE;
     this.#findings = NOTHING_KNOWN;
     this.#first = this.#asked + 1;
-    for (const what of ['design', 'view', 'moment']) this.#tell(what);
+    for (const what of told) this.#tell(what);
     this.#ask();
   }
 

@@ -1,5 +1,6 @@
 import { openDB, type DBSchema, type IDBPDatabase, type IDBPTransaction } from 'idb';
 import { to1 } from './migrations/to-1.ts';
+import { to2 } from './migrations/to-2.ts';
 
 /** What stands in the database. Records are read with care: what is written here is what they should be, not what a damaged disk gives back. */
 export interface HalfmarkDB extends DBSchema {
@@ -10,11 +11,11 @@ export interface HalfmarkDB extends DBSchema {
 
 export type Database = IDBPDatabase<HalfmarkDB>;
 type UpgradeTransaction = IDBPTransaction<HalfmarkDB, ('projects' | 'damaged' | 'settings')[], 'versionchange'>;
-/** Brings the database one version further, inside the upgrade's own transaction. */
-export type Migration = (db: Database, transaction: UpgradeTransaction) => void;
+/** Brings the database one version further, inside the upgrade's own transaction: it may wait for that one's requests, and for nothing else. */
+export type Migration = (db: Database, transaction: UpgradeTransaction) => void | Promise<void>;
 
 /** MIGRATIONS[n] leads from version n to n + 1. */
-export const MIGRATIONS: readonly Migration[] = [to1];
+export const MIGRATIONS: readonly Migration[] = [to1, to2];
 
 /** The moments in the life of a database that a person has to hear of. */
 export type DatabaseMoment =
@@ -28,8 +29,13 @@ export type DatabaseMoment =
  */
 export function openDatabase(name: string, told: (moment: DatabaseMoment) => void, migrations: readonly Migration[] = MIGRATIONS): Promise<Database> {
   return openDB<HalfmarkDB>(name, migrations.length, {
-    upgrade(db, from, to, transaction) {
-      for (let version = from; version < (to ?? migrations.length); version++) migrations[version](db, transaction);
+    async upgrade(db, from, to, transaction) {
+      try {
+        for (let version = from; version < (to ?? migrations.length); version++) await migrations[version](db, transaction);
+      } catch (error) {
+        // Nothing half climbed: what was written is taken back, and the opening fails.
+        if (!(error instanceof DOMException && error.name === 'AbortError')) transaction.abort();
+      }
     },
     blocked: () => told('blocked'),
     blocking(_current, _wanted, event) {

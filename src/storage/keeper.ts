@@ -3,8 +3,10 @@ import { readDesign } from '../design/read.ts';
 import type { Design } from '../design/types.ts';
 import { writeDesign } from '../design/write.ts';
 import type { Session } from '../state/session.ts';
+import { addVariant, openVariant, takeBackVariant } from '../state/variants.ts';
 import { Autosave, type SavingState } from './autosave.ts';
 import { storageFailure } from './failure.ts';
+import { keptVariants, readVariants, textOfVariant, workOf, LONE } from './kept-variants.ts';
 import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords } from './last-words.ts';
 import type { Content, ProjectStore, SaveOutcome } from './project-store.ts';
 import { isNewer, type ProjectRecord } from './record.ts';
@@ -12,6 +14,8 @@ import { Tabs, type TabNotice } from './tabs.ts';
 
 /** Time from a change to its last words, ms: a tab that dies before the save has been made loses no more than this. */
 const WORDS_MS = 50;
+/** What the session tells when something is to be saved. */
+const TOUCHING = ['design', 'view', 'variants'] as const;
 /** Stands in last words for a project that the database does not know yet. */
 const NOWHERE = '';
 
@@ -33,7 +37,7 @@ export class Keeper extends EventTarget {
   #project: OpenProject = { id: null, name: '', revision: 0 };
   /** counts the projects opened, so that a save that ends late is not taken for the next one's */ #opened = 0;
   readonly #tab: string = crypto.randomUUID();
-  /** the design as this tab last read or saved it */ #base = '';
+  /** the designs as this tab last read or saved them */ #base = '';
   /** the project has a name here that the database does not know yet */ #nameOwed = false;
   /** last words of an earlier visit that are on the page and not saved yet */ #takenUp: string[] = [];
   readonly #session: Session;
@@ -56,7 +60,7 @@ export class Keeper extends EventTarget {
       () => this.#save(),
       () => this.dispatchEvent(new Event('saving')),
     );
-    for (const what of ['design', 'view']) session.addEventListener(what, this.#touch);
+    for (const what of TOUCHING) session.addEventListener(what, this.#touch);
   }
 
   get project(): OpenProject {
@@ -133,11 +137,11 @@ export class Keeper extends EventTarget {
     this.#opened++;
     this.#forget();
     this.#project = { id: record.id, name: record.name, revision: record.revision };
-    this.#base = content.designText;
+    this.#base = workOf(content);
     this.#nameOwed = false;
     this.#dropTakenUp();
     // What changed while the copy was written is not in it.
-    const unsaved = writeDesign(this.#session.design) !== content.designText;
+    const unsaved = workOf(this.#content()) !== workOf(content);
     this.#autosave.reset();
     if (unsaved) this.#autosave.touch();
     await this.#remember(record.id);
@@ -162,7 +166,7 @@ export class Keeper extends EventTarget {
 
   /** Saves what is unsaved and lets go of the session. */
   async close(): Promise<void> {
-    for (const what of ['design', 'view']) this.#session.removeEventListener(what, this.#touch);
+    for (const what of TOUCHING) this.#session.removeEventListener(what, this.#touch);
     await this.flush();
     clearTimeout(this.#wordsTimer);
     this.#tabs.close();
@@ -202,15 +206,17 @@ export class Keeper extends EventTarget {
     clearTimeout(this.#wordsTimer);
     this.#wordsTimer = undefined;
     const { id, revision } = this.#project;
-    if (this.#autosave.unsaved) leaveLastWords({ id: id ?? NOWHERE, revision, designText: writeDesign(this.#session.design) }, this.#tab);
+    if (this.#autosave.unsaved) leaveLastWords({ id: id ?? NOWHERE, revision, designText: writeDesign(this.#session.design), variant: this.#session.variants.open }, this.#tab);
   }
 
   async #take(record: ProjectRecord): Promise<Opened> {
     const reading = readDesign(record.designText);
-    if (!reading.ok) {
-      const why = complaintLine(reading.complaints[0]);
+    const variants = reading.ok ? readVariants(record.variants ?? LONE, reading.design) : { ok: false as const, designText: record.designText, complaint: reading.complaints[0] };
+    if (!variants.ok || !reading.ok) {
+      const { designText, complaint } = variants as Extract<typeof variants, { ok: false }>;
+      const why = complaintLine(complaint);
       // It is whole, and the newer page will read it again.
-      if (isNewer(record.designText)) return { ok: false, why: `"${record.name}" ${why.replace(/^format:? /, '')}. Reload the page to get its newest version; the project stays as it is.` };
+      if (isNewer(designText)) return { ok: false, why: `"${record.name}" ${why.replace(/^format:? /, '')}. Reload the page to get its newest version; the project stays as it is.` };
       const aside = await this.#store.setAside(record.id, why).then(
         () => 'It has been set aside as it is.',
         () => 'It stays where it is.',
@@ -221,8 +227,8 @@ export class Keeper extends EventTarget {
     this.#nameOwed = false;
     this.#takenUp = [];
     this.#project = { id: record.id, name: record.name, revision: record.revision };
-    this.#base = record.designText;
-    this.#session.open(reading.design, record);
+    this.#base = workOf(record);
+    this.#session.open(reading.design, { history: record.history, view: record.view, variants: variants.all });
     this.#autosave.reset();
     await this.#remember(record.id);
     this.dispatchEvent(new Event('project'));
@@ -237,14 +243,23 @@ export class Keeper extends EventTarget {
     let recovered = false;
     for (const { place, words } of hearLastWords(record.id)) {
       const reading = readDesign(words.designText);
-      if (!reading.ok || words.designText === record.designText) forgetLastWords(place);
+      if (!reading.ok || words.designText === textOfVariant(record, words.variant)) forgetLastWords(place);
       else if (words.revision === record.revision && !recovered) {
+        this.#toVariant(words.variant);
         recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
         // They stay where they are until the design that holds them now is saved.
         this.#takenUp.push(place);
       } else await this.#rescue(record, place, words.designText);
     }
     return recovered;
+  }
+
+  /** The variant that unsaved changes belong to comes onto the page; one that was never saved is made again. */
+  #toVariant(id: string | undefined): void {
+    const all = this.#session.variants;
+    if (id === undefined || id === all.open) return;
+    const known = all.list.some((variant) => variant.id === id);
+    this.#session.changeVariants(known ? openVariant(takeBackVariant(all, id), id) : addVariant(all, 'unsaved changes', id));
   }
 
   /** Makes a project of its own of what a losing tab left; where that cannot be written, it stays for the next visit. */
@@ -282,7 +297,7 @@ export class Keeper extends EventTarget {
   }
 
   #content(): Content {
-    return { designText: writeDesign(this.#session.design), history: this.#session.historyRecord, view: this.#session.view };
+    return { designText: writeDesign(this.#session.design), history: this.#session.historyRecord, view: this.#session.view, variants: keptVariants(this.#session.variants) };
   }
 
   async #save(): Promise<SaveOutcome> {
@@ -294,9 +309,9 @@ export class Keeper extends EventTarget {
     // A project that was only in memory has its id now.
     const { id } = this.#project;
     if (outcome.kind === 'saved' && id !== null) {
-      this.#base = content.designText;
+      this.#base = workOf(content);
       // What changed while this was written is still owed.
-      if (writeDesign(this.#session.design) === content.designText) this.#dropWords();
+      if (workOf(this.#content()) === workOf(content)) this.#dropWords();
       this.#dropTakenUp();
       this.#project = { ...this.#project, revision: outcome.revision };
       this.#tabs.tell({ kind: 'saved', id, revision: outcome.revision });
@@ -313,7 +328,7 @@ export class Keeper extends EventTarget {
 
   async #saveOnTop(id: string, content: Content): Promise<SaveOutcome> {
     const outcome = await this.#store.save(id, this.#project.revision, content);
-    if (outcome.kind !== 'conflict' || outcome.other === null || outcome.other.designText !== this.#base) return outcome;
+    if (outcome.kind !== 'conflict' || outcome.other === null || workOf(outcome.other) !== this.#base) return outcome;
     // The other tab only looked at the same design from elsewhere: nobody's work is at stake.
     return this.#store.save(id, outcome.other.revision, content);
   }
@@ -339,7 +354,7 @@ export class Keeper extends EventTarget {
     const opened = this.#opened;
     const other = kind === 'saved' ? await this.#store.get(id).catch(() => null) : null;
     if (opened !== this.#opened || this.#autosave.unsaved) return;
-    if (other !== null && other.designText === this.#base) this.#project = { ...this.#project, revision: other.revision };
+    if (other !== null && workOf(other) === this.#base) this.#project = { ...this.#project, revision: other.revision };
     else this.#autosave.meet(other);
   }
 

@@ -6,6 +6,7 @@ export interface LastWords {
   /** id of the project */ id: string;
   /** the revision that the text was written on top of */ revision: number;
   designText: string;
+  /** id of the variant that the text is of; absent: the one that is open */ variant?: string;
 }
 
 /** One place a project and a tab, so that two tabs that close together do not talk over each other. */
@@ -51,8 +52,9 @@ export function forgetLastWords(place: string, store: Storage = localStorage): v
 
 function read(text: string): LastWords | null {
   try {
-    const { id, revision, designText } = JSON.parse(text) as Partial<LastWords>;
-    return typeof id === 'string' && typeof revision === 'number' && typeof designText === 'string' ? { id, revision, designText } : null;
+    const { id, revision, designText, variant } = JSON.parse(text) as Partial<LastWords>;
+    if (typeof id !== 'string' || typeof revision !== 'number' || typeof designText !== 'string') return null;
+    return { id, revision, designText, ...(typeof variant === 'string' ? { variant } : {}) };
   } catch {
     return null;
   }

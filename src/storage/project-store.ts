@@ -4,7 +4,7 @@ import { storageFailure, type StorageFailure } from './failure.ts';
 import { rawText, recordFault, type ProjectEntry, type ProjectRecord } from './record.ts';
 
 /** What an open project hands over to be saved. */
-export type Content = Pick<ProjectRecord, 'designText' | 'history' | 'view'>;
+export type Content = Pick<ProjectRecord, 'designText' | 'history' | 'view' | 'variants'>;
 
 export type SaveOutcome =
   | { kind: 'saved'; revision: number }
@@ -105,12 +105,12 @@ export class ProjectStore {
     await this.#change(id, (record) => ({ ...record, name: name.trim() || record.name }));
   }
 
-  /** A second project with the same design, history and view. @returns null when the first is gone */
+  /** A second project with the same design, history, view and variants. @returns null when the first is gone */
   async copy(id: string): Promise<ProjectRecord | null> {
     const record = await this.get(id);
     if (record === null) return null;
-    const { name, designText, history, view } = record;
-    return this.create(`${name} (copy)`, { designText, history, view });
+    const { name, designText, history, view, variants } = record;
+    return this.create(`${name} (copy)`, { designText, history, view, variants });
   }
 
   async bin(id: string): Promise<void> {

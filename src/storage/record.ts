@@ -1,6 +1,7 @@
 import { DESIGN_FORMAT } from '../design/types.ts';
 import type { HistoryRecord } from '../state/history.ts';
 import type { View } from '../state/view.ts';
+import { variantsFault, type KeptVariant } from './kept-variants.ts';
 
 /** A project as it is kept. Name and bin belong to the list of projects; design, history, view and revision to whoever has the project open. */
 export interface ProjectRecord {
@@ -9,9 +10,10 @@ export interface ProjectRecord {
   /** ms since 1970 */ created: number;
   /** of the design, ms since 1970 */ changed: number;
   /** counts the saves: who saves on top of another revision than the one read is told */ revision: number;
-  /** the design file, as text */ designText: string;
+  /** the design file of the open variant, as text */ designText: string;
   history: HistoryRecord;
   view: View;
+  /** absent: the design is the only one */ variants?: readonly KeptVariant[];
   /** when it was put in the bin, ms since 1970; null outside */ binned: number | null;
 }
 
@@ -31,7 +33,7 @@ export function recordFault(value: unknown): string | null {
   } catch {
     return 'its design is cut short or garbled';
   }
-  return null;
+  return record.variants === undefined ? null : variantsFault(record.variants);
 }
 
 /** Whether a design was written by a newer program than this one: it is whole, and only cannot be read here. */

@@ -48,8 +48,8 @@ describe('a backup', () => {
     expect(readBackup('nonsense')).toMatchObject({ ok: false, message: expect.stringContaining('not JSON') });
     expect(readBackup('null')).toMatchObject({ ok: false });
     expect(readBackup('{"format":"halfmark-design/1"}')).toMatchObject({ ok: false, message: expect.stringContaining('format') });
-    expect(readBackup('{"format":"halfmark-backup/2","projects":[]}')).toMatchObject({ ok: false, message: expect.stringContaining('version 2') });
+    expect(readBackup('{"format":"halfmark-backup/3","projects":[]}')).toMatchObject({ ok: false, message: expect.stringContaining('version 3') });
     expect(readBackup('{"format":"halfmark-backup/1"}')).toMatchObject({ ok: false, message: expect.stringContaining('no list') });
-    expect(readBackup('{"format":"halfmark-backup/1","projects":[null,7,{}]}')).toMatchObject({ ok: true, projects: [], refused: [{ name: 'number 1' }, {}, {}] });
+    expect(readBackup('{"format":"halfmark-backup/2","projects":[null,7,{}]}')).toMatchObject({ ok: true, projects: [], refused: [{ name: 'number 1' }, {}, {}] });
   });
 });
