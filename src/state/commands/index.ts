@@ -1,4 +1,5 @@
 /** Every change of a design that a person can make: pure functions (design, ...) -> next design, whose result is frozen and shares what did not change. */
+export { addCustomEntry } from './add-custom-entry.ts';
 export { addDopant } from './add-dopant.ts';
 export { addRequirement } from './add-requirement.ts';
 export { addVariable } from './add-variable.ts';
@@ -7,6 +8,7 @@ export { insertLayer } from './insert-layer.ts';
 export { makeVariable, textAtPlace, type VariablePlace } from './make-variable.ts';
 export { moveLayer } from './move-layer.ts';
 export type { Side } from './parts.ts';
+export { removeCustomEntry } from './remove-custom-entry.ts';
 export { removeDopant } from './remove-dopant.ts';
 export { removeLayer } from './remove-layer.ts';
 export { removeRequirement } from './remove-requirement.ts';
@@ -18,6 +20,7 @@ export { setBias } from './set-bias.ts';
 export { setComposition } from './set-composition.ts';
 export { setConcentration } from './set-concentration.ts';
 export { setContact } from './set-contact.ts';
+export { resetCustomValue, setCustomValue } from './set-custom-value.ts';
 export { setDopant } from './set-dopant.ts';
 export { setInterface } from './set-interface.ts';
 export { setMaterial, type MaterialChange } from './set-material.ts';
