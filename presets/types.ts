@@ -120,6 +120,7 @@ export interface DopantPreset extends Entry {
   degeneracy?: number;
   merging?: { depthReference: string; depthExponent: number; boundReference: string; boundExponent: number };
   screened?: { coefficient: string; mottDensity: string; boundExponent?: number };
+  /** the model taken where a design names none; by default "merging" where there are parameters for it, else "dilute" */ model?: 'dilute' | 'merging' | 'screened' | 'complete';
   /** highest active concentration reached */ solubility?: string;
   /** of the metal-insulator transition */ mottDensity?: string;
   /** rows of one host with the same word are levels of one atom */ centre?: string;

@@ -75,7 +75,7 @@ function levelOf({ entry, path }: Entry<DopantInput>, x: number, ask: Asker): Om
   };
 }
 
-/** "merging" where there are parameters for it, else "dilute", unless the row says otherwise. */
+/** What the row says, else the first of the models that the entry has. */
 function modelOf(row: DopantRow, { entry }: Entry<DopantInput>, path: string, ask: Asker): Dopant['model'] {
   const known = modelsKnown(entry);
   const model = row.model ?? known[0];

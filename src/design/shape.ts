@@ -102,6 +102,7 @@ const dopant = v.strictObject({
   depth: v.union([energy, v.strictObject({ points: v.pipe(v.array(v.strictTuple([pure, energy])), v.minLength(1)) })]), degeneracy: v.optional(pure),
   merging: v.optional(v.strictObject({ depthReference: density, depthExponent: pure, boundReference: density, boundExponent: pure })),
   screened: v.optional(v.strictObject({ coefficient: quantity('energyLength'), mottDensity: density, boundExponent: v.optional(pure) })),
+  model: v.optional(v.picklist(['dilute', 'merging', 'screened', 'complete'])),
   mottDensity: v.optional(density), solubility: v.optional(density), centre: v.optional(text),
   source, sources,
 });

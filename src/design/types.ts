@@ -149,6 +149,7 @@ export interface DopantInput {
   degeneracy?: Pure;
   merging?: { depthReference: Text; depthExponent: Pure; boundReference: Text; boundExponent: Pure };
   screened?: { coefficient: Text; mottDensity: Text; boundExponent?: Pure };
+  /** taken where a row names none; by default "merging" where there are parameters for it, else "dilute" */ model?: DopantModel;
   mottDensity?: Text;
   solubility?: Text;
   centre?: string;

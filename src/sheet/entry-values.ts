@@ -13,7 +13,7 @@ export interface EntryValue {
 }
 
 /** Keys that name or arrange rather than measure, at the top of an entry and everywhere in it. */
-const NOT_VALUES: ReadonlySet<string> = new Set(['id', 'name', 'kind', 'host', 'centre', 'insulator', 'source', 'sources', 'barriers', 'law', 'scale', 'carrier', 'first', 'second', 'checked', 'confidence', 'note']);
+const NOT_VALUES: ReadonlySet<string> = new Set(['id', 'name', 'kind', 'host', 'centre', 'model', 'insulator', 'source', 'sources', 'barriers', 'law', 'scale', 'carrier', 'first', 'second', 'checked', 'confidence', 'note']);
 
 /** An entry of the catalogue, preset or custom, as its values one by one, each with where it stands. */
 export function entryValues(entry: object): EntryValue[] {

@@ -86,4 +86,15 @@ describe('a design in solver units', () => {
     design.top = { kind: 'barrier', metal: 'Ti', pinning: 0.4 };
     expect(stackOf(design).top).toMatchObject({ source: { from: 'workFunction', slope: 0.4 } });
   });
+
+  it('takes the model that a preset names, so that a degenerate layer keeps its carriers', () => {
+    const design = fixture('gaas-contact.json');
+    expect(stackOf(design).layers[0].dopants[0]).toMatchObject({ id: 'Si', model: 'screened', screened: { coefficient: 0, mottDensity: 1.6e16 } });
+    const answer = solveDesign(design);
+    if (answer.kind !== 'result') throw new Error('not solved');
+    // Three decades above the Mott density every donor is free; as isolated levels a tenth of them would be.
+    expect(answer.result.layers[0].ionised[0].fraction).toBeGreaterThan(0.99);
+    design.layers[0].dopants = [{ dopant: 'Si', concentration: 'Ncap', model: 'dilute' }];
+    expect(stackOf(design).layers[0].dopants[0].model).toBe('dilute');
+  });
 });

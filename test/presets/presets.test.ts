@@ -34,7 +34,7 @@ const FORMS: [RegExp, RegExp | 'number'][] = [
   [/^outsideContactModel\.(low|high)$/, quantity('ohm cm^2')],
   [/^delta(Ev|Ec)\.(constant|perX)$/, ENERGY],
 ];
-const WORDS = ['id', 'name', 'host', 'kind', 'centre', 'insulator', 'barriers', 'source', 'sources', 'first', 'second'];
+const WORDS = ['id', 'name', 'host', 'kind', 'centre', 'model', 'insulator', 'barriers', 'source', 'sources', 'first', 'second'];
 
 /** Every value of an entry by its path; names are no values, a polynomial is one. */
 function valuesOf(entry: object): Map<string, unknown> {
