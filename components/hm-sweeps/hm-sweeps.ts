@@ -22,7 +22,7 @@ import { WidthController } from '../shared/width-controller.ts';
 import { BatchController, type Pool } from './batch-controller.ts';
 import './hm-film.ts';
 import { plotLook, styles } from './hm-sweeps.styles.ts';
-import { axisAbout, axisOptions, axisRequest, firstFigures, putIntoDesign, sweepBasis } from './sweep-choices.ts';
+import { axisAbout, axisOptions, axisRequest, firstFigures, heldAxis, heldFilm, putIntoDesign, sweepBasis } from './sweep-choices.ts';
 import { figureText, gapLines, mapPicture, placeOf, placeWords, plotPicture, withUnit } from './sweep-picture.ts';
 import { cursorAt, cursorMoved, cursorShapes } from './sweep-cursor.ts';
 import type { AxisView, SweepsView } from './sweeps-view.ts';
@@ -100,18 +100,16 @@ export class HmSweeps extends LitElement {
   // What is asked.
 
   private get first(): AxisView {
-    const { first } = this.view;
-    const known = first !== undefined && axisOptions(this.design!).some(({ value }) => value === first.variable);
-    return known ? first : axisAbout(this.design!, 'temperature');
+    return heldAxis(this.design!, this.view.first) ?? axisAbout(this.design!, 'temperature');
   }
 
   private get second(): AxisView | null {
-    return this.view.second ?? null;
+    return heldAxis(this.design!, this.view.second);
   }
 
   private get figures(): string[] {
     const known = new Set(figuresOf(this.design!).map(({ path }) => path));
-    const chosen = (this.view.figures ?? []).filter((path) => known.has(path));
+    const chosen = (Array.isArray(this.view.figures) ? this.view.figures : []).filter((path) => known.has(path));
     return chosen.length > 0 ? chosen : firstFigures(this.design!, this.result).map(({ path }) => path);
   }
 
@@ -200,7 +198,7 @@ export class HmSweeps extends LitElement {
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
     return html`${this.renderAsk()} ${this.renderState()} ${this.asked === null ? nothing : this.renderFound()}
-      <hm-film .design=${this.design} .view=${this.view.film ?? null} .styleName=${this.styleName} .pool=${this.batch.pool} @film-view=${(e: CustomEvent) => this.remember({ film: e.detail })}></hm-film>`;
+      <hm-film .design=${this.design} .view=${heldFilm(this.view.film)} .styleName=${this.styleName} .pool=${this.batch.pool} @film-view=${(e: CustomEvent) => this.remember({ film: e.detail })}></hm-film>`;
   }
 
   private complaint(path: string): string | null {

@@ -13,6 +13,21 @@ const FIRST_FIGURES = ['rho_c_ohm_cm2', 'ec_minus_ef_eV', 'sheet_ohm', 'builtin_
 /** What a film goes through. */
 export const TEMPERATURE: readonly Pick<SweepPlace, 'name' | 'put'>[] = [{ name: 'temperature', put: (design, text) => ({ design, set: { temperature: text } }) }];
 
+/** What is remembered, if it is of this version of the page and of something that this design has. */
+export function heldAxis(design: Design, held: unknown): AxisView | null {
+  if (!hasTexts(held, ['variable', 'from', 'to', 'points'])) return null;
+  const axis = held as unknown as AxisView;
+  return isComplaint(findPlace(design, axis.variable)) ? null : { ...axis, log: axis.log === true };
+}
+
+export function heldFilm(held: unknown): FilmView | null {
+  return hasTexts(held, ['from', 'to', 'frames']) ? { ...(held as unknown as FilmView), log: (held as { log?: unknown }).log === true } : null;
+}
+
+function hasTexts(held: unknown, keys: readonly string[]): held is Record<string, unknown> {
+  return typeof held === 'object' && held !== null && keys.every((key) => typeof (held as Record<string, unknown>)[key] === 'string');
+}
+
 /** The menu of what can be swept. */
 export function axisOptions(design: Design): { value: string; text: string }[] {
   return sweepNames(design).flatMap((name) => {

@@ -148,6 +148,15 @@ describe('sweeps', function () {
     await expectAccessible(element);
   });
 
+  it('begins anew where what is remembered is of another version, or of a variable that is gone', async () => {
+    const menu = () => shadow().querySelector('select')!.value;
+    await put({ view: { first: { variable: 'gone', from: '1', to: '2', points: '3', log: false }, second: 7, figures: 'all', film: {} } as unknown as SweepsView });
+    expect(menu()).to.equal('temperature');
+    expect(shadow().querySelectorAll('.ask')).to.have.length(1);
+    await ran();
+    expect(shadow().querySelectorAll('[data-role="sweep-curve"]').length).to.be.greaterThan(0);
+  });
+
   it('is usable from 360 px', async () => {
     await put();
     element.style.width = '344px';
