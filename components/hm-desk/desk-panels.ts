@@ -1,6 +1,7 @@
 import { html, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
+import type { Variant } from '../../src/drawing/marks/variants.ts';
 import type { Result } from '../../src/result/types.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
@@ -8,6 +9,7 @@ import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 import type { SizingView } from '../hm-sizing/sizing-view.ts';
 import type { TolerancesView } from '../hm-tolerances/tolerances-view.ts';
+import type { VariantsShown } from '../hm-variants/variants-shown.ts';
 import type { HalfmarkEvents } from '../shared/events.ts';
 
 /** Everything that a panel may be handed. Each takes what it shows and fires the page's own events. */
@@ -19,6 +21,8 @@ export interface DeskContext {
   /** of the project; a panel keeps entries under its own key and changes them by hm-view */ view: Readonly<Record<string, unknown>>;
   chosen: HalfmarkEvents['hm-choose'];
   verdicts: Verdicts;
+  variants: VariantsShown;
+  /** the variant that the ledger compares with, once it is solved */ against: Variant | null;
   /** starts a job in a worker of its own */ run: RunJob;
   /** 'light' or 'dark', for drawings */ styleName: 'light' | 'dark';
   /** requirement that a variable is to be sized for, counted anew at each wish; null before the first */ sizeFor: { requirement: number; wish: number } | null;
@@ -38,7 +42,7 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     id: 'ledger',
     title: 'Ledger',
     load: () => import('../hm-ledger/hm-ledger.ts'),
-    draw: ({ result, view, chosen, stale }) => html`<hm-ledger .result=${result} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale} .workings=${true}></hm-ledger>`,
+    draw: ({ result, view, chosen, stale, against }) => html`<hm-ledger .result=${result} .against=${against} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale} .workings=${true}></hm-ledger>`,
   },
   {
     id: 'requirements',
@@ -68,5 +72,25 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     title: 'Tolerances',
     load: () => import('../hm-tolerances/hm-tolerances.ts'),
     draw: ({ design, complaints, view, styleName }) => html`<hm-tolerances .design=${design} .complaints=${complaints} .view=${(view.tolerances ?? {}) as TolerancesView} .styleName=${styleName}></hm-tolerances>`,
+  },
+  {
+    id: 'variants',
+    title: 'Variants',
+    load: () => import('../hm-variants/hm-variants.ts'),
+    draw: ({ variants }) => html`<hm-variants .shown=${variants}></hm-variants>`,
+    remark: ({ variants: { all, over } }) => {
+      const there = all.list.filter(({ removed }) => !removed).length;
+      return there < 2 ? null : { text: `${all.list.find(({ id }) => id === all.open)!.name}${over.length > 0 ? `, ${over.length} over the plate` : `, ${there - 1} more`}`, trouble: false };
+    },
+  },
+  {
+    id: 'parameters',
+    title: 'Parameters',
+    load: () => import('../hm-parameters/hm-parameters.ts'),
+    draw: ({ design, complaints }) => html`<hm-parameters .design=${design} .complaints=${complaints}></hm-parameters>`,
+    remark: ({ design: { custom = {} } }) => {
+      const own = (custom.materials?.length ?? 0) + (custom.dopants?.length ?? 0) + (custom.metals?.length ?? 0);
+      return own === 0 ? null : { text: own === 1 ? '1 own entry' : `${own} own entries`, trouble: false };
+    },
   },
 ];
