@@ -37,9 +37,11 @@ import { JudgingController } from './judging-controller.ts';
 import { pageKey } from './keys.ts';
 import { OfflineController } from './offline-controller.ts';
 import { STORE_WORDS } from './store-words.ts';
+import { OverlayController } from './overlay-controller.ts';
 import { ProjectDesk, type DeskOutcome } from './project-desk.ts';
 import { RemarkController } from './remark-controller.ts';
 import { StaleController } from './stale-controller.ts';
+import { actOnVariants } from './variant-acts.ts';
 
 type On<K extends keyof HalfmarkEvents> = CustomEvent<HalfmarkEvents[K]>;
 /** Showing, or about to show: methods that every dialog of the page has. */
@@ -81,6 +83,7 @@ export class HmApp extends LitElement {
   private readonly workings = new WorkingsController(this, (text) => this.say(text, true));
   private readonly jobs = new JobClient(startJobWorker);
   private readonly judging = new JudgingController(this, this.jobs.run);
+  private readonly overlay = new OverlayController(this, startSolveWorker);
   /** what the plate and the messages are handed, new only when it changed: they are not drawn anew at every move of the pointer */
   private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
@@ -114,7 +117,7 @@ export class HmApp extends LitElement {
     this.store = new ProjectStore((moment) => this.say(STORE_WORDS[moment], true), this.database);
     this.keeper = new Keeper(this.session, this.store, this.database);
     this.desk = new ProjectDesk(this.store, this.keeper);
-    for (const what of ['design', 'view', 'moment']) this.session.addEventListener(what, this.redraw);
+    for (const what of ['design', 'view', 'moment', 'variants']) this.session.addEventListener(what, this.redraw);
     this.session.addEventListener('findings', () => this.found());
     for (const what of ['project', 'saving']) this.keeper.addEventListener(what, this.redraw);
     this.darkness.addEventListener('change', this.redraw);
@@ -154,6 +157,7 @@ export class HmApp extends LitElement {
 
   protected override willUpdate(_: PropertyValues): void {
     const { design, view } = this.session;
+    this.overlay.follow(this.session);
     const style = isDark(this.theme) ? 'dark' : 'light';
     const { handed } = this;
     if (handed?.view !== view || handed.style !== style || handed.design !== design) {
@@ -302,6 +306,14 @@ export class HmApp extends LitElement {
     this.session.edit(setTitle(this.session.design, detail.name.trim()), 'title');
   }
 
+  private variant({ detail }: On<'hm-variant'>): void {
+    const said = actOnVariants(this.session, detail);
+    if (said === null) return;
+    this.say(said);
+    // Another one is on the page: what was typed into the one that was left is safe before anything else happens.
+    void this.keeper.flush();
+  }
+
   private async starter({ detail }: On<'hm-starter'>): Promise<void> {
     const starter = (await fetchStarters()).find(({ id }) => id === detail.id);
     if (starter !== undefined) await this.settle(this.desk.open(starter.title, starter.design));
@@ -330,6 +342,7 @@ export class HmApp extends LitElement {
       @hm-say=${({ detail }: On<'hm-say'>) => this.say(detail.text, detail.urgent)}
       @hm-rename=${this.rename}
       @hm-starter=${this.starter}
+      @hm-variant=${this.variant}
       @hm-project=${this.project}
     >
       <header>
@@ -359,6 +372,7 @@ export class HmApp extends LitElement {
         <hm-plate
           .result=${result}
           .view=${plateView}
+          .variants=${this.overlay.over}
           .stale=${this.staleness.dim}
           .depth_nm=${depth_nm}
           @plate-drawn=${({ detail }: CustomEvent<PlateAxes>) => (this.axes = detail)}
@@ -394,6 +408,8 @@ export class HmApp extends LitElement {
             .view=${session.view}
             .chosen=${chosen}
             .verdicts=${this.judging.verdicts}
+            .variants=${this.overlay.shown}
+            .against=${this.overlay.against}
             .run=${this.jobs.run}
             .styleName=${style}
           ></hm-desk>`,

@@ -1,8 +1,10 @@
 import { LitElement, html, noChange, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
+import type { Variant } from '../../src/drawing/marks/variants.ts';
 import type { Result } from '../../src/result/types.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
+import { NO_VARIANTS, type VariantsShown } from '../hm-variants/variants-shown.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
@@ -31,6 +33,8 @@ export class HmDesk extends LitElement {
     view: { attribute: false },
     chosen: { attribute: false },
     verdicts: { attribute: false },
+    variants: { attribute: false },
+    against: { attribute: false },
     run: { attribute: false },
     styleName: {},
     panels: { attribute: false },
@@ -45,6 +49,8 @@ export class HmDesk extends LitElement {
   /** of the project */ declare view: Readonly<Record<string, unknown>>;
   declare chosen: HalfmarkEvents['hm-choose'];
   declare verdicts: Verdicts;
+  declare variants: VariantsShown;
+  /** the variant that the ledger compares with, once it is solved */ declare against: Variant | null;
   declare run: RunJob | null;
   declare styleName: 'light' | 'dark';
   declare panels: readonly DeskPanel[];
@@ -62,6 +68,8 @@ export class HmDesk extends LitElement {
     this.view = {};
     this.chosen = null;
     this.verdicts = NOT_JUDGED;
+    this.variants = NO_VARIANTS;
+    this.against = null;
     this.run = null;
     this.styleName = 'light';
     this.panels = DESK_PANELS;
@@ -127,8 +135,8 @@ export class HmDesk extends LitElement {
   override render(): TemplateResult | typeof nothing {
     const { design, run } = this;
     if (design === null || run === null) return nothing;
-    const { complaints, result, stale, view, chosen, verdicts, styleName, sizeFor, open } = this;
-    const context: DeskContext = { design, complaints, result, stale, view, chosen, verdicts, run, styleName, sizeFor };
+    const { complaints, result, stale, view, chosen, verdicts, variants, against, styleName, sizeFor, open } = this;
+    const context: DeskContext = { design, complaints, result, stale, view, chosen, verdicts, variants, against, run, styleName, sizeFor };
     return html`<div role="tablist" aria-label="Under the plate">${this.panels.map((panel, i) => this.renderTab(panel, i, context))}</div>
       ${this.panels.map(
         (panel) => html`<div role="tabpanel" id="panel-${panel.id}" aria-labelledby="tab-${panel.id}" ?hidden=${panel.id !== open} @hm-size=${this.sizeWish}>${this.renderPanel(panel, context)}</div>`,

@@ -108,6 +108,16 @@ export const styles = css`
     color: var(--faint);
     font-size: 0.8125em;
   }
+  td .change {
+    color: var(--faint);
+    font-size: 0.8125em;
+    border-inline-end: 2px solid var(--choice);
+    padding-inline-end: 4px;
+  }
+  .against {
+    margin: 0.2rem 0;
+    color: var(--faint);
+  }
   td.asks {
     cursor: help;
   }

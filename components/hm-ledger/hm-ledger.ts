@@ -1,5 +1,6 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import { ledgerTables, qualityLine, sortedRows, tableTsv, type LedgerColumn, type LedgerRow, type LedgerTable, type Order, type TableId } from '../../src/result/ledger.ts';
+import { cellDifference, loneRows, partnerRow } from '../../src/result/ledger-difference.ts';
 import type { Result } from '../../src/result/types.ts';
 import { look } from '../shared/look.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
@@ -31,6 +32,7 @@ export class HmLedger extends LitElement {
     chosen: { attribute: false },
     stale: { type: Boolean, reflect: true },
     workings: { type: Boolean },
+    against: { attribute: false },
     choosing: { state: true },
     at: { state: true },
   };
@@ -40,8 +42,11 @@ export class HmLedger extends LitElement {
   /** the row to mark, as told by hm-choose */ declare chosen: HalfmarkEvents['hm-choose'];
   declare stale: boolean;
   declare workings: boolean;
+  /** another result whose figures are set under these where they differ */ declare against: { name: string; result: Result } | null;
   /** the table whose columns are being chosen */ declare private choosing: TableId | null;
   /** the figure that the arrows stand on */ declare private at: { table: TableId; row: number; column: number };
+
+  /** tables of the other result */ private others: LedgerTable[] = [];
 
   constructor() {
     super();
@@ -50,6 +55,7 @@ export class HmLedger extends LitElement {
     this.chosen = null;
     this.stale = false;
     this.workings = false;
+    this.against = null;
     this.choosing = null;
     this.at = { table: 'layers', row: 0, column: 0 };
   }
@@ -60,9 +66,28 @@ export class HmLedger extends LitElement {
     return html`
       ${this.stale ? html`<p class="stale-mark">Figures of the stack before the last change.</p>` : nothing}
       ${this.workings ? html`<p class="hint">How does a figure come about? Press it, or walk to it with the arrows and press Enter.</p>` : nothing}
-      ${ledgerTables(result).map((table) => this.renderTable(table))}
+      ${this.renderAgainst(result)} ${ledgerTables(result).map((table) => this.renderTable(table))}
       <p class="quality">${qualityLine(result)}</p>
     `;
+  }
+
+  /** What the small lines under the figures are, and which rows only one of the two has. */
+  private renderAgainst(result: Result): TemplateResult | typeof nothing {
+    const { against } = this;
+    this.others = against === null ? [] : ledgerTables(against.result);
+    if (against === null) return nothing;
+    const lone = loneRows(ledgerTables(result), this.others);
+    const rows = (what: 'here' | 'there'): string => lone.flatMap((row) => row[what]).join(', ');
+    return html`<p class="against">Small lines under a figure: its value in ${against.name}, the change from there to here, and the change in per cent. No line: the two are the same.
+      ${rows('here') === '' ? nothing : html`Only here: ${rows('here')}.`} ${rows('there') === '' ? nothing : html`Only in ${against.name}: ${rows('there')}.`}</p>`;
+  }
+
+  private renderDifference(table: LedgerTable, column: LedgerColumn, row: LedgerRow): TemplateResult | typeof nothing {
+    const partner = this.others.length === 0 ? null : partnerRow(table, row, this.others);
+    const difference = partner === null ? null : cellDifference(column, row.cells[column.id], partner.cells[column.id]);
+    if (difference === null) return nothing;
+    const { other, change, percent } = difference;
+    return html`<span class="change">was ${other}</span>${change === null ? nothing : html`<span class="change">${change}${percent === null ? nothing : html` (${percent})`}</span>`}`;
   }
 
   private shownColumns(table: LedgerTable): LedgerColumn[] {
@@ -136,7 +161,7 @@ export class HmLedger extends LitElement {
 
   private renderCell(table: LedgerTable, column: LedgerColumn, row: LedgerRow, r: number, c: number): TemplateResult {
     const cell = row.cells[column.id];
-    const content = html`${cell.lines.map((line) => html`<span>${line}</span>`)}${cell.note ? html`<span class="note">${cell.note}</span>` : nothing}`;
+    const content = html`${cell.lines.map((line) => html`<span>${line}</span>`)}${cell.note ? html`<span class="note">${cell.note}</span>` : nothing}${this.renderDifference(table, column, row)}`;
     if (!this.workings) return html`<td class=${column.kind}>${content}</td>`;
     const standsHere = this.at.table === table.id ? this.at.row === r && this.at.column === c : r === 0 && c === 0;
     return html`<td

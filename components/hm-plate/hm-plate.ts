@@ -1,6 +1,7 @@
 import { LitElement, html, nothing, svg, type PropertyValues, type SVGTemplateResult, type TemplateResult } from 'lit';
 import { guard } from 'lit/directives/guard.js';
 import { layerEdges } from '../../src/drawing/depth-axis.ts';
+import type { Variant } from '../../src/drawing/marks/variants.ts';
 import { drawPlate, type Plate } from '../../src/drawing/plate.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
@@ -46,6 +47,7 @@ export class HmPlate extends LitElement {
     stale: { type: Boolean, reflect: true },
     notice: {},
     depth_nm: { attribute: false },
+    variants: { attribute: false },
     open: { state: true },
     dark: { state: true },
     holding: { state: true },
@@ -57,6 +59,7 @@ export class HmPlate extends LitElement {
   /** the result is of the stack before the last change */ declare stale: boolean;
   /** why there is no newer picture, in words */ declare notice: string | null;
   /** where the reading cursor stands, nm; null: nowhere */ declare depth_nm: number | null;
+  /** other results to lay over this one */ declare variants: readonly Variant[];
   declare private open: { dimensions: boolean; table: boolean };
   declare private dark: boolean;
   declare private holding: boolean;
@@ -78,6 +81,7 @@ export class HmPlate extends LitElement {
     this.stale = false;
     this.notice = null;
     this.depth_nm = null;
+    this.variants = [];
     this.open = { dimensions: false, table: false };
     this.dark = false;
     this.holding = false;
@@ -109,7 +113,7 @@ export class HmPlate extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues): void {
-    const drawnFrom = ['result', 'view', 'stale', 'dark'];
+    const drawnFrom = ['result', 'view', 'stale', 'dark', 'variants'];
     if (this.room.width === this.drawnWidth && !drawnFrom.some((name) => changed.has(name))) return;
     this.drawnWidth = this.room.width;
     this.plate = this.draw();
@@ -118,7 +122,7 @@ export class HmPlate extends LitElement {
   private draw(): Plate | null {
     if (!this.result || this.room.width < LEAST_WIDTH) return null;
     const view = heldView(this.view);
-    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
+    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, variants: [...this.variants], width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
   }
 
   protected override updated(): void {

@@ -20,6 +20,8 @@ export interface HalfmarkEvents {
   'hm-size': { requirement: number };
   /** an act on one of the projects in the list, or on all of them */
   'hm-project': ProjectAct;
+  /** an act on one of the variants of the open project */
+  'hm-variant': VariantAct;
   /** open a starter as a project of its own */
   'hm-starter': { id: string };
   /** something that the page should say: politely, or at once */
@@ -27,7 +29,7 @@ export interface HalfmarkEvents {
 }
 
 export type PageAct =
-  | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'sheet' | 'about' | 'open-file'
+  | 'undo' | 'redo' | 'projects' | 'starters' | 'leave' | 'sheet' | 'about' | 'help' | 'open-file'
   /** stop the running solve */ | 'cancel'
   /** solve once more */ | 'again'
   /** stop the running judgement of the requirements; begin it anew */ | 'judge-stop' | 'judge-again'
@@ -39,6 +41,8 @@ export type ProjectAct =
   | { act: 'new' | 'backup' }
   | { act: 'restore-backup'; text: string }
   | { act: 'rescue' | 'forget'; /** of a damaged record */ key: number };
+
+export type VariantAct = { act: 'add'; name: string } | { act: 'rename'; id: string; name: string } | { act: 'open' | 'remove' | 'take-back' | 'delete'; id: string };
 
 /** The one way an element speaks. */
 export function tell<K extends keyof HalfmarkEvents>(from: EventTarget, name: K, detail: HalfmarkEvents[K]): void {

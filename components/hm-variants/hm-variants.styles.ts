@@ -1,0 +1,81 @@
+import { css } from 'lit';
+
+export const styles = css`
+  p {
+    margin: 0.2rem 0;
+  }
+  h3 {
+    font-size: 0.875rem;
+    font-weight: 600;
+    margin: 0.8rem 0 0.2rem;
+  }
+  ul {
+    margin: 0;
+    padding-inline-start: 1.1rem;
+  }
+  .list {
+    list-style: none;
+    padding: 0;
+    border-top: 1px solid var(--ink);
+  }
+  .list > li {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 0.3rem 1rem;
+    padding: 0.3rem 0.4rem;
+    border-bottom: 1px solid var(--line);
+    --field-width: 11rem;
+  }
+  .list > li.open {
+    box-shadow: inset 3px 0 0 var(--choice);
+    background: var(--wash);
+  }
+  .here {
+    font-weight: 600;
+    min-width: 7.5rem;
+  }
+  .to {
+    min-width: 7.5rem;
+  }
+  .list label {
+    display: inline-flex;
+    align-items: center;
+    gap: 0.35rem;
+    min-height: 28px;
+  }
+  input[type='checkbox'],
+  input[type='radio'] {
+    width: 16px;
+    height: 16px;
+    min-height: 0;
+    accent-color: var(--ink);
+  }
+  button {
+    min-height: 28px;
+  }
+  .new {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: flex-end;
+    gap: 0.4rem 0.75rem;
+    --field-width: 11rem;
+    margin-top: 0.5rem;
+  }
+  .doc {
+    color: var(--faint);
+  }
+  .wrong {
+    color: var(--trouble);
+  }
+  .wrong::before {
+    content: '▲ ';
+  }
+  summary {
+    cursor: pointer;
+    min-height: 24px;
+  }
+  .log li {
+    overflow-wrap: anywhere;
+  }
+`;
