@@ -5,6 +5,7 @@ import type { PlateView } from '../hm-plate/plate-view.ts';
 import type { HmProjects } from '../hm-projects/hm-projects.ts';
 import '../hm-about/hm-about.ts';
 import '../hm-dialog/hm-dialog.ts';
+import '../hm-help/help-door.ts';
 import '../hm-leave/hm-leave.ts';
 import '../hm-projects/hm-projects.ts';
 import '../hm-starters/hm-starters.ts';
@@ -30,6 +31,7 @@ export function pageDialogs({ design, result, stale, plateLook, requirements, en
     <hm-leave .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook}></hm-leave>
     <hm-sheet .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook} .requirements=${requirements}></hm-sheet>
     <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>
+    <hm-help-door></hm-help-door>
     <hm-dialog id="unsaved" heading="Not saved" @hm-closed=${unsaved.closed}>
       <p>What is on this page could not be saved. Opening another project now would lose it.</p>
       <p class="row">

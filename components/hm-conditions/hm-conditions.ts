@@ -23,7 +23,7 @@ const THEMES: [Theme, string][] = [
  *
  * @fires hm-edit    temperature, range, bias
  * @fires hm-rename  the project's name
- * @fires hm-act     undo, redo, projects, starters, open-file, leave, about
+ * @fires hm-act     undo, redo, projects, starters, open-file, leave, help, about
  * @fires hm-view    { theme } : the page keeps it for every project
  */
 export class HmConditions extends LitElement {
@@ -97,6 +97,7 @@ export class HmConditions extends LitElement {
         <button type="button" @click=${() => this.act('open-file')}>Open file</button>
         <button type="button" @click=${() => this.act('leave')}>Take away</button>
         ${this.renderView()}
+        <button type="button" aria-keyshortcuts="F1" @click=${() => this.act('help')}>Help</button>
         <button type="button" @click=${() => this.act('about')}>About</button>
       </div>
     `;
