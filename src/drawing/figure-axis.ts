@@ -69,15 +69,17 @@ export function axisShapes(axis: FigureAxis, area: { left: number; right: number
   const small = style.smallSize;
   const line = { role: 'figure-axis', stroke: style.faint, width: style.thinWidth } as const;
   const shapes: Shape[] = [{ kind: 'line', ...line, x1: area.left, x2: area.right, y1: area.bottom, y2: area.bottom }];
+  // Room to the right of the area, as the pictures leave it.
+  const margin = 0.7 * small;
   let free = -Infinity;
   for (const { at, runs } of axis.ticks) {
     const x = axis.x(at);
     shapes.push({ kind: 'line', ...line, x1: x, x2: x, y1: area.bottom, y2: area.bottom + (runs.length > 0 ? 5 : 3) });
     const half = runsWidth(runs, small) / 2;
-    if (runs.length === 0 || x - half < free) continue;
+    if (runs.length === 0 || x - half < free || x + half > area.right + margin) continue;
     free = x + half + 6;
     shapes.push({ kind: 'text', role: 'figure-tick', x, y: area.bottom + 6 + small, size: small, anchor: 'middle', runs, fill: style.ink });
   }
-  shapes.push({ kind: 'text', role: 'figure-title', x: (area.left + area.right) / 2, y: area.bottom + 2.8 * small, size: small, anchor: 'middle', runs: title, fill: style.ink });
+  shapes.push({ kind: 'text', role: 'figure-title', x: Math.max(Math.min((area.left + area.right) / 2, area.right + margin - runsWidth(title, small) / 2), runsWidth(title, small) / 2), y: area.bottom + 2.8 * small, size: small, anchor: 'middle', runs: title, fill: style.ink });
   return shapes;
 }

@@ -51,6 +51,7 @@ export function drawHistogram(picture: HistogramPicture, options: SpreadOptions)
     shapes: [
       ...(beyond?.shapes ?? []),
       ...bars(axis, counts, edges, y, area, style),
+      ...(beyond?.words ?? []),
       ...countAxis(most, y, area, style),
       ...(middle === null ? [] : bracket(axis, middle, area, style)),
       ...(nominal === null ? [] : upright(axis.x(nominal), area, { role: 'histogram-nominal', text: `nominal ${writeNumber(nominal)}`, row: 1 }, style)),
@@ -133,17 +134,20 @@ function limitMark(axis: FigureAxis, limit: NonNullable<HistogramPicture['limit'
 }
 
 /** The part of the picture where the requirement is not met. */
-function beyondLimit(axis: FigureAxis, area: Area, { value, bound }: NonNullable<HistogramPicture['limit']>, style: Style, clip: string): { shapes: Shape[]; clips: Clip[] } | null {
+function beyondLimit(axis: FigureAxis, area: Area, { value, bound }: NonNullable<HistogramPicture['limit']>, style: Style, clip: string): { shapes: Shape[]; words: Shape[]; clips: Clip[] } | null {
   const at = axis.log && value <= 0 ? area.left : Math.min(Math.max(axis.x(value), area.left), area.right);
   const box = { x: bound === 'max' ? at : area.left, y: area.top, w: bound === 'max' ? area.right - at : at - area.left, h: area.bottom - area.top };
   if (box.w < 1) return null;
   const hatch = hatched(box, { role: 'histogram-beyond', title: 'not met here', stroke: mixed(style.ground, style.trouble, 0.55), width: 0.9 }, clip);
   const small = style.smallSize;
-  const word: Shape[] = box.w < textWidth('not met', small) + 12 ? [] : [
-    { kind: 'rect', role: 'histogram-beyond-ground', x: box.x + box.w / 2 - textWidth('not met', small) / 2 - 3, y: area.top + 3, w: textWidth('not met', small) + 6, h: 1.4 * small, fill: style.ground },
-    { kind: 'text', role: 'histogram-beyond-word', x: box.x + box.w / 2, y: area.top + 3 + 1.05 * small, size: small, anchor: 'middle', runs: [{ text: 'not met' }], fill: style.trouble },
+  // In the outer corner, where bars are lowest.
+  const wide = textWidth('not met', small) + 6;
+  const left = bound === 'max' ? box.x + box.w - wide - 2 : box.x + 2;
+  const word: Shape[] = box.w < wide + 6 ? [] : [
+    { kind: 'rect', role: 'histogram-beyond-ground', x: left, y: area.top + 3, w: wide, h: 1.4 * small, fill: style.ground },
+    { kind: 'text', role: 'histogram-beyond-word', x: left + wide / 2, y: area.top + 3 + 1.05 * small, size: small, anchor: 'middle', runs: [{ text: 'not met' }], fill: style.trouble },
   ];
-  return { shapes: [hatch.shape, ...word], clips: [hatch.clip] };
+  return { shapes: [hatch.shape], words: word, clips: [hatch.clip] };
 }
 
 function describe({ label, unit, histogram, nominal, middle, limit }: HistogramPicture): string {

@@ -21,7 +21,9 @@ export function partnerRow(table: LedgerTable, row: LedgerRow, others: readonly 
 /** @returns null where the two are the same */
 export function cellDifference(column: LedgerColumn, cell: Cell, other: Cell): CellDifference | null {
   const text = other.lines.join(', ');
-  if (column.kind === 'words' || typeof cell.value !== 'number' || typeof other.value !== 'number') return cell.lines.join() === other.lines.join() ? null : { other: text, change: null, percent: null };
+  // What reads the same is the same: a difference in digits that are not shown is the mesh's more often than not.
+  if (cell.lines.join() === other.lines.join()) return null;
+  if (column.kind === 'words' || typeof cell.value !== 'number' || typeof other.value !== 'number') return { other: text, change: null, percent: null };
   const change = cell.value - other.value;
   if (Math.abs(change) <= SAME * Math.max(Math.abs(cell.value), Math.abs(other.value))) return null;
   const percent = other.value === 0 ? null : (100 * change) / Math.abs(other.value);

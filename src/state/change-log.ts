@@ -111,11 +111,17 @@ function listed(what: string, before: Requirements, after: Requirements): string
   return [...old.filter((row) => !now.includes(row)).map((row) => `The ${what} "${row}" was taken out.`), ...now.filter((row) => !old.includes(row)).map((row) => `The ${what} "${row}" was put in.`)];
 }
 
+/** Places of a design in words. */
+const WORDS: Readonly<Record<string, string>> = {
+  'conditions.temperature': 'temperature', 'conditions.bias': 'bias', 'conditions.temperatureRange': 'temperature range', 'conditions.temperatureRange.0': 'lower end of the temperature range', 'conditions.temperatureRange.1': 'upper end of the temperature range',
+};
+
 /** What the sentences above do not speak of. */
 function rest(before: Design, after: Design): string[] {
   const others = ({ layers: _l, top: _t, bottom: _b, variables: _v, requirements: _r, ...more }: Design): Json => more as unknown as Json;
   return difference(others(before), others(after)).flatMap((change): string[] => {
-    const words = change.path.join('.');
+    const path = change.path.join('.');
+    const words = WORDS[path] ?? path;
     return 'at' in change ? [`The list ${words} was changed.`] : turned(words[0].toUpperCase() + words.slice(1), change.before, change.after);
   });
 }

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { runsWidth } from '../../src/drawing/glyph-widths.ts';
 import { figureAxis } from '../../src/drawing/figure-axis.ts';
 import { drawHistogram, type HistogramPicture } from '../../src/drawing/histogram.ts';
 import { plainText, type Drawing, type LineShape, type RectShape, type TextShape } from '../../src/drawing/shapes.ts';
@@ -78,7 +79,10 @@ describe('the histogram', () => {
     for (const width of [320, 900]) {
       const d = drawn({ label: '<b>&"cap"', limit: { value: 239, bound: 'max' } }, width);
       expect(() => wellFormed(svgText(d))).not.toThrow();
-      for (const text of d.shapes.filter((s): s is TextShape => s.kind === 'text')) expect(text.x).toBeLessThanOrEqual(width);
+      for (const text of d.shapes.filter((s): s is TextShape => s.kind === 'text')) {
+        const right = text.x + runsWidth(text.runs, text.size) * { start: 1, middle: 0.5, end: 0 }[text.anchor];
+        expect(right, plainText(text.runs)).toBeLessThanOrEqual(width);
+      }
     }
   });
 });

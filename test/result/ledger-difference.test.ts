@@ -39,6 +39,11 @@ describe('the ledger of two results', () => {
     expect(loneRows(here, here)).toEqual([]);
   });
 
+  it('takes for the same what reads the same', () => {
+    const column = here[0].columns.find(({ kind }) => kind === 'figure')!;
+    expect(cellDifference(column, { lines: ['≈ 0'], value: 6e-11 }, { lines: ['≈ 0'], value: 1e-11 })).toBeNull();
+  });
+
   it('gives no per cent of a figure that was zero', () => {
     const column = here[0].columns.find(({ kind }) => kind === 'figure')!;
     expect(cellDifference(column, { lines: ['2'], value: 2 }, { lines: ['0'], value: 0 })).toEqual({ other: '0', change: '+2.00', percent: null });

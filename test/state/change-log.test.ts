@@ -42,7 +42,7 @@ describe('the change log between two designs', () => {
       d.notes = 'cold';
     }));
     expect(lines).toEqual(expect.arrayContaining([
-      'Dopant C of buffer was taken out.', 'Composition x of spacer: 0.1 to 0.3 (linear), was 0.3.', 'Dopant Si of spacer was put in: 1e18 cm^-3 peak at 5 nm.', 'The variable new was put in: 3 nm.', 'Conditions.temperature: 77 K, was 300 K.',
+      'Dopant C of buffer was taken out.', 'Composition x of spacer: 0.1 to 0.3 (linear), was 0.3.', 'Dopant Si of spacer was put in: 1e18 cm^-3 peak at 5 nm.', 'The variable new was put in: 3 nm.', 'Temperature: 77 K, was 300 K.',
     ]));
     expect(lines.some((line) => /of the top contact: /.test(line))).toBe(true);
     expect(lines.some((line) => line.startsWith('Notes: cold'))).toBe(true);
