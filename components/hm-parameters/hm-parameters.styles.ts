@@ -92,6 +92,9 @@ export const styles = css`
       grid-column: 1 / -1;
       order: 4;
     }
+    hm-value-form {
+      order: 5;
+    }
     .figure {
       text-align: right;
       max-width: 11rem;

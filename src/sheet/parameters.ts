@@ -2,6 +2,7 @@ import { offsets, sources } from '../../presets/index.ts';
 import { catalogueOf, type Catalogue, type Entry } from '../design/catalogue.ts';
 import { readAssumptions } from '../design/stack.ts';
 import type { ContactInput, Design, DopantInput, DopantRow } from '../design/types.ts';
+import { isOwnBarrier, ownValues } from '../parameters/own-value.ts';
 import type { Result } from '../result/types.ts';
 import { entryValues, origin, type EntryValue, type ValueOrigin } from './entry-values.ts';
 
@@ -39,7 +40,7 @@ export function parametersInUse(design: Design, result: Result): ParameterRow[] 
   const rows: ParameterRow[] = [];
   for (const id of materialsOf(design, catalogue)) {
     const found = catalogue.materials.get(id);
-    if (found) rows.push(...grouped(id, entryValues(found.entry).filter(({ path }) => counts(path, inForce)), !found.preset));
+    if (found) rows.push(...grouped(id, entryValues(found.entry).filter(({ path }) => counts(path, inForce)), found.preset ? published : ownValues({ list: 'materials', id })));
   }
   rows.push(...dopantRows(design, catalogue));
   for (const side of ['top', 'bottom'] as const) rows.push(...contactRows(design, side, result, catalogue));
@@ -81,15 +82,19 @@ function materialsOf(design: Design, catalogue: Catalogue): Set<string> {
 }
 
 /** Values that stand in one place in one row, in the order of the entry. */
-function grouped(of: string, values: readonly EntryValue[], own: boolean): ParameterRow[] {
+function grouped(of: string, values: readonly EntryValue[], isOwn: (value: EntryValue) => boolean): ParameterRow[] {
   const rows = new Map<string, ParameterRow>();
-  for (const { path, text, origin: from } of values) {
-    const key = JSON.stringify(from);
+  for (const value of values) {
+    const { path, text, origin: from } = value;
+    const own = isOwn(value);
+    const key = JSON.stringify([from, own]);
     const row = rows.get(key) ?? { of, values: [], origin: from, work: workOf(from.source, own), own };
     rows.set(key, { ...row, values: [...row.values, { path, text }] });
   }
   return [...rows.values()];
 }
+
+const published = (): boolean => false;
 
 function workOf(source: string, own: boolean): string {
   if (own) return source === '' ? 'own value, no source given' : `own value: ${source}`;
@@ -118,7 +123,7 @@ function dopantRows(design: Design, catalogue: Catalogue): ParameterRow[] {
       const key = JSON.stringify([layer.material, row.dopant, law === 'merging' || law === 'screened' ? law : '']);
       if (!found || seen.has(key)) return;
       seen.add(key);
-      rows.push(...grouped(`${layer.material}:${row.dopant}`, entryValues(found.entry).filter(({ path }) => !/^(merging|screened)\b/.test(path) || path.startsWith(String(law))), !found.preset));
+      rows.push(...grouped(`${layer.material}:${row.dopant}`, entryValues(found.entry).filter(({ path }) => !/^(merging|screened)\b/.test(path) || path.startsWith(String(law))), found.preset ? published : ownValues({ list: 'dopants', id: row.dopant, host: layer.material })));
     });
   }
   return rows;
@@ -140,13 +145,13 @@ function contactRows(design: Design, side: 'top' | 'bottom', result: Result, cat
   const metal = contact.metal === undefined ? undefined : catalogue.metals.get(contact.metal);
   if (!metal) return [];
   const own = contact.pinning !== undefined && !['material', 'none', 'full'].includes(String(contact.pinning)) ? [ownRow(of, [{ path: 'pinning slope S', text: String(contact.pinning) }])] : [];
-  if (solved?.barrier_source !== 'measured') return [...grouped(metal.entry.id, entryValues(metal.entry), !metal.preset), ...own];
+  if (solved?.barrier_source !== 'measured') return [...grouped(metal.entry.id, entryValues(metal.entry), metal.preset ? published : ownValues({ list: 'metals', id: metal.entry.id })), ...own];
   const layer = design.layers[side === 'top' ? 0 : design.layers.length - 1];
   const measured = (metal.entry.barriers ?? []).filter((b) => b.material === layer.material);
   const row = measured.find((b) => b.carrier === (contact.carrier ?? 'n')) ?? measured[0];
   if (!row) return own;
   const value: EntryValue = { path: `barrier for ${row.carrier === 'n' ? 'electrons' : 'holes'}`, text: row.height, origin: origin(row) };
-  return [...grouped(`${metal.entry.id} on ${layer.material}`, [value], !metal.preset), ...own];
+  return [...grouped(`${metal.entry.id} on ${layer.material}`, [value], () => !metal.preset && isOwnBarrier(metal.entry.id, row)), ...own];
 }
 
 function interfaceRows(design: Design, result: Result): ParameterRow[] {
@@ -157,7 +162,7 @@ function interfaceRows(design: Design, result: Result): ParameterRow[] {
     if (junction.alignment === 'published') {
       const row = offsets.find((o) => (o.first === above.material && o.second === below.material) || (o.first === below.material && o.second === above.material));
       const of = row ? `${row.first} / ${row.second}` : '';
-      if (row && !seen.has(of)) rows.push(...grouped(of, entryValues(row).map((v) => ({ ...v, path: OFFSET_WORDS[v.path] ?? v.path })), false));
+      if (row && !seen.has(of)) rows.push(...grouped(of, entryValues(row).map((v) => ({ ...v, path: OFFSET_WORDS[v.path] ?? v.path })), published));
       seen.add(of);
     }
     const own = design.interfaces?.find((i) => i.above === above.name);

@@ -1,5 +1,7 @@
 import { sources } from '../../presets/index.ts';
 import type { Catalogue, Entry } from '../design/catalogue.ts';
+import type { EntryKey } from '../design/entry-key.ts';
+import { ownValues } from '../parameters/own-value.ts';
 import { entryValues, type ValueOrigin } from '../sheet/entry-values.ts';
 import { known, type Known, type Origin } from './known.ts';
 
@@ -18,24 +20,26 @@ export type Asks = (path: string, sign: string, words: string, value: number | u
  * @param id  of a material of the catalogue
  */
 export function materialAsks(catalogue: Catalogue, id: string): Asks {
-  return asks(catalogue.materials.get(id), id);
+  return asks(catalogue.materials.get(id), id, { list: 'materials', id });
 }
 
 export function dopantAsks(catalogue: Catalogue, host: string, id: string): Asks {
-  return asks(catalogue.dopants.get(host)?.get(id), `${host}:${id}`);
+  return asks(catalogue.dopants.get(host)?.get(id), `${host}:${id}`, { list: 'dopants', id, host });
 }
 
 export function metalAsks(catalogue: Catalogue, id: string): Asks {
-  return asks(catalogue.metals.get(id), id);
+  return asks(catalogue.metals.get(id), id, { list: 'metals', id });
 }
 
 const CONVENTION: Origin = { from: 'source', key: 'convention', text: sources.convention, checked: null, note: '' };
 
-function asks(found: Entry<object> | undefined, of: string): Asks {
+function asks(found: Entry<object> | undefined, of: string, key: EntryKey): Asks {
   const rows = found ? entryValues(found.entry) : [];
+  // A copy that changes one value keeps the published ones as such.
+  const isOwn = found === undefined || found.preset ? () => false : ownValues(key);
   return (path, sign, words, value, unit, scale = 1) => {
     const row = rows.find((r) => r.path === path) ?? rows.find((r) => r.path.startsWith(`${path}.`)) ?? rows.find((r) => path.startsWith(`${r.path}.`));
-    const origin = row === undefined ? CONVENTION : originOf(row.origin, !found!.preset);
+    const origin = row === undefined ? CONVENTION : originOf(row.origin, isOwn(row));
     return known(sign, `${words} of ${of}`, value ?? Number.NaN, unit, origin, { scale, path: `${of} ${path}` });
   };
 }

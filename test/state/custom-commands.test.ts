@@ -6,6 +6,8 @@ import type { Design } from '../../src/design/types.ts';
 import { allKeys, dopantsIn, presetOf, shownEntry } from '../../src/parameters/entry-view.ts';
 import { valueComplaint } from '../../src/parameters/check-value.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
+import { parametersInUse } from '../../src/sheet/parameters.ts';
+import { materialAsks } from '../../src/workings/published.ts';
 import { addCustomEntry, removeCustomEntry, resetCustomValue, setCustomValue } from '../../src/state/commands/index.ts';
 import { catalogueOf } from '../../src/design/catalogue.ts';
 import { designFixture } from './design-fixture.ts';
@@ -85,6 +87,20 @@ describe('a value of the design’s own', () => {
     expect(complaint(SILICON, 'degeneracy', '0')).toContain('not above zero');
     expect(complaint(TI, 'workFunction', '-4 eV')).toContain('not above zero');
     expect(complaint(GAAS, 'gap.zeroK', '1.5 eV + Ncap * 0 eV cm^3')).toBe(null);
+  });
+});
+
+describe('a value changed in the design, on the review sheet', () => {
+  it('is told as an own value with its source, and the published ones beside it keep their works', () => {
+    const design = setCustomValue(solvable(), GAAS, base(GAAS), 'gap.zeroK', '1.6 eV', 'measured here');
+    const answer = solveDesign(design);
+    if (answer.kind !== 'result') throw new Error(JSON.stringify(answer));
+    const rows = parametersInUse(design, answer.result).filter(({ of }) => of === 'GaAs');
+    expect(rows.filter(({ own }) => own).map(({ work, values }) => [work, values])).toEqual([['own value: measured here', [{ path: 'gap.zeroK', text: '1.6 eV' }]]]);
+    expect(rows.filter(({ own }) => !own).length).toBeGreaterThan(2);
+    const workings = materialAsks(catalogueOf(design.custom), 'GaAs');
+    expect(workings('gap.zeroK', 'E', 'gap', 1.6, 'eV').origin).toEqual({ from: 'own value', text: 'measured here' });
+    expect(workings('permittivity', 'e', 'permittivity', 12.9, '').origin.from).toBe('source');
   });
 });
 
