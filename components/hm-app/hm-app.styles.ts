@@ -81,4 +81,9 @@ export const styles = css`
       display: none;
     }
   }
+  .frame {
+    margin: 0 0 0.25rem;
+    padding-left: 0.5rem;
+    border-left: 3px solid var(--hm-choice, #b47a00);
+  }
 `;

@@ -31,6 +31,7 @@ import '../hm-strip/hm-strip.ts';
 import '../hm-variables/hm-variables.ts';
 import { choicesFor, fetchStarters, starterCards, type Choices } from './choices.ts';
 import { pageDialogs, type PageDialogs } from './dialogs.ts';
+import { FrameController } from './frame-controller.ts';
 import { styles } from './hm-app.styles.ts';
 import { IncomingController } from './incoming.ts';
 import { JudgingController } from './judging-controller.ts';
@@ -88,6 +89,7 @@ export class HmApp extends LitElement {
   private handed: { view: View; style: 'light' | 'dark'; plateView: PlateView; design: Design; names: string[] } | null = null;
   private customShown: unknown = this;
   private failed = false;
+  private readonly frames = new FrameController(this);
   private readonly incoming = new IncomingController(this, (text) => void this.settle(this.desk.take(text)), (text) => this.say(text, true));
   private readonly darkness = matchMedia('(prefers-color-scheme: dark)');
   private readonly redraw = (): void => this.requestUpdate();
@@ -343,6 +345,7 @@ export class HmApp extends LitElement {
       @hm-rename=${this.rename}
       @hm-starter=${this.starter}
       @hm-variant=${this.variant}
+      @hm-frame=${({ detail }: On<'hm-frame'>) => this.frames.show(detail, this.keeper.project.id)}
       @hm-project=${this.project}
     >
       <header>
@@ -365,12 +368,14 @@ export class HmApp extends LitElement {
   private renderWork(): TemplateResult {
     const { session, axes, choices } = this;
     const { result } = session.findings;
+    const frame = this.frames.of(this.keeper.project.id);
     const { chosen, depth_nm } = session.moment;
     const { style, plateView } = this.handed!;
     return html`<main>
       <div class="diagram">
+        ${frame ? html`<p class="frame" role="status">The picture is a ${frame.words} of the film; close the film to see the design's own.</p>` : nothing}
         <hm-plate
-          .result=${result}
+          .result=${frame?.result ?? result}
           .view=${plateView}
           .variants=${this.overlay.over}
           .stale=${this.staleness.dim}
@@ -378,7 +383,7 @@ export class HmApp extends LitElement {
           @plate-drawn=${({ detail }: CustomEvent<PlateAxes>) => (this.axes = detail)}
         ></hm-plate>
       </div>
-      <div class="beside"><hm-rail .result=${result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${this.staleness.dim}></hm-rail></div>
+      <div class="beside"><hm-rail .result=${frame?.result ?? result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${this.staleness.dim}></hm-rail></div>
       <div class="under">
         <h2 class="spoken">Layer stack</h2>
         <hm-strip

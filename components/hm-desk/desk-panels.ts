@@ -7,7 +7,9 @@ import type { RunJob } from '../../src/workers/job-client.ts';
 import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
 import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
+import type { MapView } from '../hm-map/map-view.ts';
 import type { SizingView } from '../hm-sizing/sizing-view.ts';
+import type { SweepsView } from '../hm-sweeps/sweeps-view.ts';
 import type { TolerancesView } from '../hm-tolerances/tolerances-view.ts';
 import type { VariantsShown } from '../hm-variants/variants-shown.ts';
 import type { HalfmarkEvents } from '../shared/events.ts';
@@ -66,6 +68,18 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     title: 'Contacts',
     load: () => import('../hm-contacts/hm-contacts.ts'),
     draw: ({ design, complaints, result, stale, view, run, styleName }) => html`<hm-contacts .design=${design} .complaints=${complaints} .result=${result} .stale=${stale} .view=${(view.metals ?? {}) as MetalsView} .run=${run} .styleName=${styleName}></hm-contacts>`,
+  },
+  {
+    id: 'sweeps',
+    title: 'Sweeps',
+    load: () => import('../hm-sweeps/hm-sweeps.ts'),
+    draw: ({ design, result, view, styleName }) => html`<hm-sweeps .design=${design} .result=${result} .view=${(view.sweeps ?? {}) as SweepsView} .styleName=${styleName}></hm-sweeps>`,
+  },
+  {
+    id: 'map',
+    title: 'Regime map',
+    load: () => import('../hm-map/hm-map.ts'),
+    draw: ({ design, view, chosen, styleName }) => html`<hm-map .design=${design} .view=${(view.map ?? {}) as MapView} .chosen=${chosen} .styleName=${styleName}></hm-map>`,
   },
   {
     id: 'tolerances',
