@@ -18,17 +18,17 @@ export class OfflineCopy extends EventTarget {
   #state: OfflineState = 'none';
   #registration: ServiceWorkerRegistration | null = null;
   #looked = 0;
-  readonly #container: ServiceWorkerContainer | undefined;
+  readonly #container: ServiceWorkerContainer | null;
   readonly #reload: () => void;
   readonly #seen = (): void => {
     if (document.visibilityState === 'visible' && Date.now() - this.#looked > LOOK_AGAIN_MS) void this.look();
   };
 
   /**
-   * @param container  the browser's; none on plain http and in some private windows
+   * @param container  the browser's; null on plain http and in some private windows
    * @param reload  tests give their own
    */
-  constructor(container: ServiceWorkerContainer | undefined = navigator.serviceWorker, reload: () => void = () => location.reload()) {
+  constructor(container: ServiceWorkerContainer | null = navigator.serviceWorker ?? null, reload: () => void = () => location.reload()) {
     super();
     this.#container = container;
     this.#reload = reload;
@@ -42,7 +42,7 @@ export class OfflineCopy extends EventTarget {
   async start(): Promise<void> {
     // Written into the built page; the page from its sources has no build to keep.
     const worker = document.querySelector<HTMLMetaElement>('meta[name="offline-worker"]')?.content;
-    if (this.#container === undefined || worker === undefined) return;
+    if (this.#container === null || worker === undefined) return;
     try {
       this.#registration = await this.#container.register(new URL(worker, document.baseURI), { updateViaCache: 'none' });
     } catch {
@@ -71,7 +71,7 @@ export class OfflineCopy extends EventTarget {
   /** Lets the newer build take over and reloads this page with it. To be called after what is unsaved has been saved. @returns whether there is one */
   apply(): boolean {
     const waiting = this.#registration?.waiting ?? null;
-    if (waiting === null || this.#container === undefined) return false;
+    if (waiting === null || this.#container === null) return false;
     this.#container.addEventListener('controllerchange', this.#reload, { once: true });
     waiting.postMessage(TAKE_OVER);
     return true;
