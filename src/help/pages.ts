@@ -6,6 +6,7 @@ export const HELP_PAGES = [
   { file: 'sizing.md', title: 'Sizing', address: new URL('./sizing.md', import.meta.url).href },
   { file: 'tolerance.md', title: 'Tolerances', address: new URL('./tolerance.md', import.meta.url).href },
   { file: 'keys.md', title: 'Keys', address: new URL('./keys.md', import.meta.url).href },
+  { file: 'promises.md', title: 'Promises', address: new URL('./promises.md', import.meta.url).href },
   { file: 'cautions.md', title: 'Cautions', address: new URL('./cautions.md', import.meta.url).href },
 ] as const;
 
