@@ -20,8 +20,9 @@ export default {
   files: 'test/**/*.browser.ts',
   rootDir: ROOT,
   nodeResolve: { exportConditions: ['production', 'default'] },
-  // Full Chromium with two pages at once times out on pointer drags and screenshots; the headless shell does not.
-  concurrency: headless === 'shell' ? 2 : 1,
+  // One page at a time: files share one origin and with it the stores that some of them break on purpose; and full Chromium with two pages at once times out on
+  // pointer drags and screenshots.
+  concurrency: 1,
   browsers: [chromeLauncher({ launchOptions: { executablePath, env, args, headless } })],
   plugins: [await prebundled(['mathjs', 'axe-core', 'immer']), watchErrors, esbuildPlugin({ ts: true, target: 'esnext', tsconfig: join(ROOT, 'tsconfig.json') })],
   reporters: [defaultReporter({ reportTestResults: true, reportTestProgress: process.stdout.isTTY === true }), browserReport(process.env.BROWSER_REPORT)],

@@ -17,7 +17,7 @@ export async function at<T, A = undefined>(page: Page, path: Path, read: (elemen
   return (await page.evaluate(body)) as T | null;
 }
 
-export async function until(what: string, holds: () => Promise<boolean>, patience_ms = 10_000): Promise<void> {
+export async function until(what: string, holds: () => Promise<boolean>, patience_ms = 30_000): Promise<void> {
   for (const end = Date.now() + patience_ms; Date.now() < end; ) {
     if (await holds()) return;
     await new Promise((done) => setTimeout(done, 50));
