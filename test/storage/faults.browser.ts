@@ -182,6 +182,20 @@ describe('whatever goes wrong with a write', () => {
     expect(localStorage.getItem(held[0])).to.equal(null);
   });
 
+  it('a name that could not be written is owed until it is', async () => {
+    const one = tab();
+    await one.keeper.create('first', designFixture());
+    faults = new Faults('refused', () => true);
+    await one.keeper.rename('renamed');
+    await one.keeper.flush();
+    expect(one.keeper.project.name).to.equal('renamed');
+    expect(one.keeper.atRisk).to.equal(true);
+    faults.mend();
+    await one.keeper.flush();
+    expect(one.keeper.saving.kind).to.equal('saved');
+    expect((await kept()).projects).to.deep.equal(['renamed: three layers']);
+  });
+
   it('a damaged record beside a full disk hides no other project', async () => {
     const one = tab();
     await one.keeper.create('good', designFixture());

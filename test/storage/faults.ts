@@ -2,8 +2,9 @@
 export type Fault =
   /** refused at once, as when the disk is full */ | 'refused'
   /** accepted, and taken back when the transaction ends */ | 'taken back'
-  /** the connection is cut under it */ | 'cut';
-export const FAULTS: readonly Fault[] = ['refused', 'taken back', 'cut'];
+  /** the connection is cut under it, and says so */ | 'cut'
+  /** the connection is cut and says nothing */ | 'cut in silence';
+export const FAULTS: readonly Fault[] = ['refused', 'taken back', 'cut', 'cut in silence'];
 
 const METHODS = ['put', 'add', 'delete'] as const;
 const originals = { put: IDBObjectStore.prototype.put, add: IDBObjectStore.prototype.add, delete: IDBObjectStore.prototype.delete };
@@ -33,7 +34,7 @@ export class Faults {
           // What a browser does that loses its disk: the transaction ends without effect and the connection says that it is closed.
           db.close();
           transaction.abort();
-          queueMicrotask(() => db.dispatchEvent(new Event('close')));
+          if (fault === 'cut') queueMicrotask(() => db.dispatchEvent(new Event('close')));
         }
         return request;
       };
