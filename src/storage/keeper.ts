@@ -328,8 +328,8 @@ export class Keeper extends EventTarget {
 
   async #saveOnTop(id: string, content: Content): Promise<SaveOutcome> {
     const outcome = await this.#store.save(id, this.#project.revision, content);
-    if (outcome.kind !== 'conflict' || outcome.other === null || workOf(outcome.other) !== this.#base) return outcome;
-    // The other tab only looked at the same design from elsewhere: nobody's work is at stake.
+    if (outcome.kind !== 'conflict' || outcome.other === null || ![this.#base, workOf(content)].includes(workOf(outcome.other))) return outcome;
+    // The other tab only looked at the same design from elsewhere, or came to the same one: nobody's work is at stake.
     return this.#store.save(id, outcome.other.revision, content);
   }
 

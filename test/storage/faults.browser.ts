@@ -196,6 +196,22 @@ describe('whatever goes wrong with a write', () => {
     expect((await kept()).projects).to.deep.equal(['renamed: three layers']);
   });
 
+  it('a second tab that opens a project while a change in the first is not saved yet shows that change, and neither asks about it', async () => {
+    const one = tab();
+    await one.keeper.create('cell', designFixture());
+    one.retitle('in flight');
+    // Its last words are there, its save is not.
+    await new Promise((done) => setTimeout(done, 120));
+    const two = tab();
+    await two.keeper.openLast();
+    expect(two.session.design.title).to.equal('in flight');
+    await one.keeper.flush();
+    await two.keeper.flush();
+    await new Promise((done) => setTimeout(done, 100));
+    expect([one.keeper.saving.kind, two.keeper.saving.kind]).to.deep.equal(['saved', 'saved']);
+    expect((await kept()).projects).to.deep.equal(['cell: in flight']);
+  });
+
   it('a damaged record beside a full disk hides no other project', async () => {
     const one = tab();
     await one.keeper.create('good', designFixture());
