@@ -5,7 +5,7 @@ export const styles = css`
     display: flex;
     flex-wrap: wrap;
     align-items: flex-end;
-    gap: 0.4rem 1.25rem;
+    gap: 0.4rem 0.8rem;
     border-bottom: 1px solid var(--ink);
     padding: 0.4rem 0 0.5rem;
   }
