@@ -21,10 +21,16 @@ function decimals(value: number | null): Cell {
   return { lines: [decimalText(value)], value };
 }
 
-/** Solved contact resistivity, with what the closed form of its regime would give for comparison. */
-function resistivity(c: ContactResult): Cell {
-  const cell = figure(c.rho_c_ohm_cm2);
-  return c.rho_c_ohm_cm2 === null || c.rho_c_closed_form_ohm_cm2 === null ? cell : { ...cell, note: `closed form ${figureText(c.rho_c_closed_form_ohm_cm2, 2)}` };
+/** The closed form, with the regime that chose it. */
+function closedForm(c: ContactResult): Cell {
+  const cell = figure(c.rho_c_closed_form_ohm_cm2);
+  return c.rho_c_closed_form_ohm_cm2 === null || c.closed_form === null ? cell : { ...cell, note: `${c.closed_form} emission` };
+}
+
+/** What the solved contact resistivity is times that of the closed form; null where one of the two is missing. */
+export function closedFormRatio({ rho_c_ohm_cm2: solved, rho_c_closed_form_ohm_cm2: closed }: Pick<ContactResult, 'rho_c_ohm_cm2' | 'rho_c_closed_form_ohm_cm2'>): number | null {
+  const ratio = solved === null || closed === null ? null : solved / closed;
+  return ratio !== null && Number.isFinite(ratio) && ratio > 0 ? ratio : null;
 }
 
 export function contactWords(contact: ContactResult): string {
@@ -36,7 +42,9 @@ export const contactColumns: Column<ContactResult>[] = [
   { ...columnOf('contacts', 'barrierN'), usual: true, cell: (c) => decimals(c.barrier_n_eV) },
   { ...columnOf('contacts', 'barrierP'), usual: true, cell: (c) => decimals(c.barrier_p_eV) },
   { ...columnOf('contacts', 'source'), usual: true, cell: (c) => words(c.barrier_source === null ? '–' : SOURCE_WORDS[c.barrier_source]) },
-  { ...columnOf('contacts', 'rhoC'), usual: true, cell: resistivity },
+  { ...columnOf('contacts', 'rhoC'), usual: true, cell: (c) => figure(c.rho_c_ohm_cm2) },
+  { ...columnOf('contacts', 'rhoCClosed'), usual: true, cell: closedForm },
+  { ...columnOf('contacts', 'closedRatio'), usual: true, cell: (c) => figure(closedFormRatio(c)) },
   { ...columnOf('contacts', 'rhoCFloor'), usual: true, cell: (c) => figure(c.rho_c_floor_ohm_cm2) },
   { ...columnOf('contacts', 'rhoCn'), usual: false, cell: (c) => figure(c.rho_c_n_ohm_cm2) },
   { ...columnOf('contacts', 'rhoCp'), usual: false, cell: (c) => figure(c.rho_c_p_ohm_cm2) },

@@ -3,6 +3,7 @@ import { BOLTZMANN } from '../../solver/constants.ts';
 import { contactPath, type ContactPath } from '../../solver/contact-path.ts';
 import { carrierConductance, isMissing } from '../../solver/contact-resistivity.ts';
 import { spaceChargeOf } from '../../solver/depletion.ts';
+import { closedFormRatio } from '../result/ledger-contacts.ts';
 import type { ContactResult } from '../result/types.ts';
 import { barrierSteps } from './barrier-steps.ts';
 import { groundOf, neutralOf } from './carrier-steps.ts';
@@ -16,7 +17,7 @@ import { boltzmann, known, SOLVED, thermal, WORKED, type Known } from './known.t
 import { law, step, type Step } from './step.ts';
 import type { Found, Simpler } from './workings.ts';
 
-type Column = 'rhoC' | 'rhoCn' | 'rhoCp' | 'rhoCFloor';
+type Column = 'rhoC' | 'rhoCn' | 'rhoCp' | 'rhoCFloor' | 'rhoCClosed' | 'closedRatio';
 
 const WAYS = {
   wkb: 'T(E) by WKB on the solved barrier, 1 above its top',
@@ -24,13 +25,15 @@ const WAYS = {
   exact: 'T(E) by the wave equation on the solved barrier',
 };
 
-/** Contact resistivity: its carriers one by one, their sum, its floor. */
+/** Contact resistivity: its carriers one by one, their sum, its floor, the closed form of its regime and how far that is off. */
 export function rhoWorkings(context: Context, end: End, column: Column): Found {
   const { row } = end;
-  const figure = { rhoC: row.rho_c_ohm_cm2, rhoCn: row.rho_c_n_ohm_cm2, rhoCp: row.rho_c_p_ohm_cm2, rhoCFloor: row.rho_c_floor_ohm_cm2 }[column];
+  const figure = { rhoC: row.rho_c_ohm_cm2, rhoCn: row.rho_c_n_ohm_cm2, rhoCp: row.rho_c_p_ohm_cm2, rhoCFloor: row.rho_c_floor_ohm_cm2, rhoCClosed: row.rho_c_closed_form_ohm_cm2, closedRatio: closedFormRatio(row) }[column];
   if (row.kind !== 'barrier') return { steps: [], remarks: [`The ${row.side} end is no barrier: an ideal contact has no resistivity of its own, and a free surface conducts nothing.`], rests: [] };
   const rests: Found['rests'] = ['stack', 'carriers', 'bands', 'image force', 'transmission'];
   if (figure === null) return { steps: [], remarks: context.result.warnings.filter((w) => w.includes(row.side)).concat('There is no figure: a constant that counts is missing, no layer takes the carriers up, or it is beyond the largest number.'), rests };
+  if (column === 'rhoCClosed') return closedFound(context, end);
+  if (column === 'closedRatio') return ratioFound(context, end, figure);
   const path = contactPath(context.stack, context.profiles, spaceChargeOf(context.stack, context.profiles), row.side);
   if (!path) return { steps: [], remarks: ['No layer of the stack is neutral anywhere and takes the carriers up.'], rests };
   const side = row.side === 'top' ? 0 : context.stack.layers[path.reservoir].thickness;
@@ -88,8 +91,26 @@ function floor(context: Context, path: ContactPath, point: Point, figure: number
   return { steps: [...A.steps, step(rho, formula`${boltzmann} ^ 2 / (${A.known} * ${kT} * ${filled})`, `The same integral with T = 1 above the edge${u > 20 ? '; ln(1 + e) is e here' : ''}: every carrier that moves to the metal arrives.`)], rests: ['carriers', 'bands'] };
 }
 
+/** The closed form as a figure of its own; what it leaves out, the solved one has. */
+function closedFound(context: Context, end: End): Found {
+  const found = closedForm(context, end);
+  const words = { thermionic: 'E00 lies below kT/2, or no barrier is left above EF: thermionic emission.', 'thermionic-field': 'Neither thermionic nor field emission rules: the peak between the two, a parabola in the exponent.', field: 'E00 is large against kT: field emission near EF, or near the edge of a cold layer.' }[end.row.closed_form!];
+  return { steps: found?.steps ?? [], remarks: [words, 'Of the majority alone, in the depletion approximation, without the image force.'], rests: ['carriers', 'bands'] };
+}
+
+function ratioFound(context: Context, end: End, figure: number): Found {
+  const solved = rhoWorkings(context, end, 'rhoC');
+  const closed = closedForm(context, end);
+  const last = solved.steps.at(-1);
+  if (closed === null || last === undefined || last.kind !== 'formula') return { steps: [], remarks: ['There is no ratio.'], rests: [] };
+  const { rho } = closed;
+  const ratio = known('r', 'solved over closed form', figure, '', WORKED);
+  const words = figure > 1 ? `The closed form promises ${factor(1, figure).replace('factor ', '')} of the solved resistivity: it is too good.` : 'The closed form promises more resistance than is solved: it is too cautious.';
+  return { ...solved, steps: [...closed.steps, ...solved.steps, step(ratio, formula`${last.result} / ${rho}`)], remarks: [words, ...(solved.remarks ?? [])], simpler: null };
+}
+
 /** The closed form of the regime, as the solver chooses it. */
-function closedForm(context: Context, end: End): Simpler | null {
+function closedForm(context: Context, end: End): (Simpler & { rho: Known }) | null {
   const { row, point, net, carrier } = end;
   const A = richardsonSteps(context, point, carrier);
   const e00 = tunnellingSteps(context, end);
@@ -105,7 +126,7 @@ function closedForm(context: Context, end: End): Simpler | null {
   const rho = known('ρ_closed', `${row.closed_form} emission in closed form`, closedFormResistivity(height, edgeValue, e00.known.value, A.known.value, context.stack.temperature).rhoC, 'Ω cm²', WORKED);
   const lines: Step[] = [step(edge, net > 0 ? formula`${neutral.level}` : formula`${neutral.gap} - ${neutral.level}`), step(V, formula`${phi} - ${edge}`)];
   const last = { thermionic: () => thermionic(rho, A.known, kT, phi, edge), 'thermionic-field': () => [step(rho, formula`${boltzmann} ^ 2 / ${A.known} * cosh(${e00.known} / ${kT}) / (2 * sqrt(pi * ${e00.known} * ${V} * tanh(${e00.known} / ${kT}))) * exp(${V} * tanh(${e00.known} / ${kT}) / ${e00.known} + ${edge} / ${kT})`)], field: () => field(rho, A.known, kT, e00.known, edge, V) }[row.closed_form]();
-  return { words: `${row.closed_form} emission in closed form: depletion approximation, no image force (Padovani and Stratton 1966; Yu, Solid-State Electron. 13, 239, 1970)`, steps: [...groundOf(neutral).slice(-1), ...e00.steps, ...lines, ...last], difference: factor(rho.value, row.rho_c_ohm_cm2 ?? Number.NaN) };
+  return { rho, words: `${row.closed_form} emission in closed form: depletion approximation, no image force (Padovani and Stratton 1966; Yu, Solid-State Electron. 13, 239, 1970)`, steps: [...groundOf(neutral), ...barriers.steps, ...A.steps, ...e00.steps, ...lines, ...last], difference: factor(rho.value, row.rho_c_ohm_cm2 ?? Number.NaN) };
 }
 
 function thermionic(rho: Known, A: Known, kT: Known, phi: Known, edge: Known): Step[] {

@@ -62,6 +62,8 @@ export function contactWorkings(context: Context, index: number, column: string)
     case 'rhoCn':
     case 'rhoCp':
     case 'rhoCFloor':
+    case 'rhoCClosed':
+    case 'closedRatio':
       return rhoWorkings(context, end, column);
     default:
       return null;

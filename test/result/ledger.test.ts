@@ -84,12 +84,16 @@ describe('the ledger', () => {
     expect(table.rows[0].cells.ionised).toEqual({ lines: ['C 50 % / 100 %', 'donor 100 % / 100 %'], value: 75 });
   });
 
-  it('puts the closed form beside the solved contact resistivity', () => {
+  it('puts the closed form, its regime and how far it is off beside the solved contact resistivity', () => {
     const schottky = solved('schottky');
     const [top] = ledgerTables(schottky).at(-1)!.rows;
     const { rho_c_ohm_cm2: rho, rho_c_closed_form_ohm_cm2: closed } = schottky.contacts[0];
     expect(rho).toBeGreaterThan(0);
-    expect(top.cells.rhoC).toEqual({ lines: [figureText(rho)], value: rho, note: `closed form ${figureText(closed, 2)}` });
+    expect(top.cells.rhoC).toEqual({ lines: [figureText(rho)], value: rho });
+    expect(top.cells.rhoCClosed).toEqual({ lines: [figureText(closed)], value: closed, note: 'thermionic emission' });
+    expect(top.cells.closedRatio).toEqual({ lines: [figureText(rho! / closed!)], value: rho! / closed! });
+    const blocked = ledgerTables({ ...schottky, contacts: [{ ...schottky.contacts[0], rho_c_ohm_cm2: null }] }).at(-1)!.rows[0];
+    expect(blocked.cells.closedRatio).toEqual({ lines: ['–'], value: null });
     expect(contacts.rows[0].cells.rhoC, 'a neutral end has none').toEqual({ lines: ['–'], value: null });
   });
 
