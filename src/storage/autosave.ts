@@ -4,7 +4,7 @@ import { storageFailure, type StorageFailure } from './failure.ts';
 
 /** How it stands with saving. */
 export type SavingState =
-  | { kind: 'saved' }
+  | { kind: 'saved'; /** the browser has refused to promise that it keeps it when its disk runs short */ clearable?: true }
   /** changed, and about to be saved */ | { kind: 'waiting' }
   | { kind: 'saving' }
   | { kind: 'failed'; failure: StorageFailure }
@@ -107,7 +107,7 @@ export class Autosave {
 export function savingWords(state: SavingState): string {
   switch (state.kind) {
     case 'saved':
-      return 'All changes saved in this browser';
+      return state.clearable ? 'All changes saved in this browser, which may clear them when short of room: keep a backup' : 'All changes saved in this browser';
     case 'waiting':
       return 'Changes about to be saved';
     case 'saving':

@@ -8,6 +8,7 @@ import { Autosave, type SavingState } from './autosave.ts';
 import { storageFailure } from './failure.ts';
 import { keptVariants, readVariants, textOfVariant, workOf, LONE } from './kept-variants.ts';
 import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords } from './last-words.ts';
+import { Lasting } from './lasting.ts';
 import type { Content, ProjectStore, SaveOutcome } from './project-store.ts';
 import { isNewer, type ProjectRecord } from './record.ts';
 import { Tabs, type TabNotice } from './tabs.ts';
@@ -16,6 +17,8 @@ import { Tabs, type TabNotice } from './tabs.ts';
 const WORDS_MS = 50;
 /** What the session tells when something is to be saved. */
 const TOUCHING = ['design', 'view', 'variants'] as const;
+/** Saved, by a browser that may clear it. */
+const CLEARABLE: SavingState = { kind: 'saved', clearable: true };
 /** Stands in last words for a project that the database does not know yet. */
 const NOWHERE = '';
 
@@ -44,15 +47,20 @@ export class Keeper extends EventTarget {
   readonly #store: ProjectStore;
   readonly #tabs: Tabs;
   readonly #autosave: Autosave;
+  readonly #lasting: Lasting;
   #wordsTimer: ReturnType<typeof setTimeout> | undefined;
   readonly #touch = (event: Event): void => {
     this.#autosave.touch();
     if (event.type === 'design') this.#wordsTimer ??= setTimeout(() => this.#leaveWords(), WORDS_MS);
   };
 
-  /** @param channel  name that tabs meet under; tests give their own */
-  constructor(session: Session, store: ProjectStore, channel?: string) {
+  /**
+   * @param channel  name that tabs meet under; tests give their own
+   * @param lasting  asked once there is an edit to keep
+   */
+  constructor(session: Session, store: ProjectStore, channel?: string, lasting = new Lasting()) {
     super();
+    this.#lasting = lasting;
     this.#session = session;
     this.#store = store;
     this.#tabs = new Tabs((notice) => void this.#heard(notice), channel);
@@ -71,7 +79,8 @@ export class Keeper extends EventTarget {
     return this.#autosave.unsaved && (this.saving.kind === 'failed' || this.saving.kind === 'conflict');
   }
   get saving(): SavingState {
-    return this.#autosave.state;
+    const { state } = this.#autosave;
+    return state.kind === 'saved' && this.#lasting.clearable ? CLEARABLE : state;
   }
 
   /** Opens the project that was open last, or the one changed last. @returns false when there is none, or nothing can be read */
@@ -316,6 +325,7 @@ export class Keeper extends EventTarget {
       this.#project = { ...this.#project, revision: outcome.revision };
       this.#tabs.tell({ kind: 'saved', id, revision: outcome.revision });
       if (this.#nameOwed) await this.#payName(id);
+      if (this.#session.historyRecord.past.length > 0) void this.#lasting.ask().then((answered) => answered && this.dispatchEvent(new Event('saving')));
     }
     return outcome;
   }

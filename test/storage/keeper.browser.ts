@@ -5,6 +5,7 @@ import * as commands from '../../src/state/commands/index.ts';
 import { Session } from '../../src/state/session.ts';
 import { Keeper } from '../../src/storage/keeper.ts';
 import { leaveLastWords } from '../../src/storage/last-words.ts';
+import { Lasting } from '../../src/storage/lasting.ts';
 import { ProjectStore } from '../../src/storage/project-store.ts';
 import { designFixture } from '../state/design-fixture.ts';
 
@@ -52,6 +53,30 @@ describe('the keeper of the open project', () => {
     expect(two.session.view).to.deep.equal({ depth: 'true' });
     expect(two.session.undo()).to.equal('title');
     expect(two.session.design).to.deep.equal(designFixture());
+  });
+
+  it('asks the browser to keep its storage once there is an edit to keep, not before, and tells a refusal beside the saved state', async () => {
+    let asked = 0;
+    const store = new ProjectStore(() => {}, name);
+    const session = new Session(designFixture(), async () => ({ kind: 'dropped' }));
+    const keeper = new Keeper(session, store, name, new Lasting({ persisted: async () => false, persist: async () => ++asked > 1 }));
+    ends.push(async () => {
+      await keeper.close();
+      await store.close();
+    });
+    await keeper.create('cell', designFixture());
+    await new Promise((done) => setTimeout(done, 20));
+    expect(asked).to.equal(0);
+    expect(keeper.saving).to.deep.equal({ kind: 'saved' });
+    let told = 0;
+    keeper.addEventListener('saving', () => (told = keeper.saving.kind === 'saved' && keeper.saving.clearable ? told + 1 : told));
+    for (const title of ['one', 'two']) {
+      session.edit(commands.setTitle(session.design, title), 'title');
+      await keeper.flush();
+      await until(() => told > 0);
+    }
+    expect(asked).to.equal(1);
+    expect(keeper.saving).to.deep.equal({ kind: 'saved', clearable: true });
   });
 
   it('opens a design with a mistake in it: a mistake is no damage', async () => {
