@@ -18,7 +18,7 @@ function neutralPsi(stack: Stack, alignment: Alignment, layer: number, z: number
  * Depletion approximation of an abrupt junction: W = sqrt(2 eps Vbi .../q), with the permittivity of each side (Sze and Ng, Physics of Semiconductor
  * Devices, 2007, sections 2.2 and 2.7; from memory); only where the two sides are doped oppositely.
  */
-export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, space: SpaceCharge, sheets: ArrayLike<number>, capacitance: number | null, index: number): JunctionFigures {
+export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Profiles, space: SpaceCharge, sheets: ArrayLike<number>, index: number): Omit<JunctionFigures, 'capacitance'> {
   const above = stack.layers[index];
   const chargeAbove = localCharge(above, above.thickness, stack.temperature, stack.assumptions);
   const chargeBelow = localCharge(stack.layers[index + 1], 0, stack.temperature, stack.assumptions);
@@ -49,7 +49,6 @@ export function junctionFigures(stack: Stack, alignment: Alignment, profiles: Pr
     depletionAbove, depletionBelow,
     depletionApproximationAbove: approximateAbove,
     depletionApproximationBelow: approximateBelow,
-    capacitance,
   };
 }
 
