@@ -107,7 +107,7 @@ export class Autosave {
 export function savingWords(state: SavingState): string {
   switch (state.kind) {
     case 'saved':
-      return state.clearable ? 'All changes saved in this browser, which may clear them when short of room: keep a backup' : 'All changes saved in this browser';
+      return state.clearable ? 'All changes saved; this browser may clear them' : 'All changes saved in this browser';
     case 'waiting':
       return 'Changes about to be saved';
     case 'saving':

@@ -4,7 +4,7 @@ import { scenario } from './harness.ts';
 import { at, catchFiles, designText, press, said, until, untilSolved } from './inside.ts';
 
 const saving = async (page: Page): Promise<string> => (await at(page, ['hm-app', 'hm-conditions', '.saving'], (element) => element.textContent!)) ?? '';
-const saved = (page: Page) => until('all saved', async () => /^All changes saved in this browser/.test(await saving(page)));
+const saved = (page: Page) => until('all saved', async () => /^All changes saved/.test(await saving(page)));
 
 /** An edit as the strip tells it. */
 async function setThickness(page: Page, thickness: string): Promise<void> {

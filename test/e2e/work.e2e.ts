@@ -87,7 +87,7 @@ scenario('A doping is changed by the keyboard alone, seen in the diagram, taken 
   await page.keyboard.up('Shift');
   await page.keyboard.up('Control');
   await until('the other diagram again', async () => (await solved(page)) && !alike(await conductionEdge(page), before));
-  await until('the save', async () => /^All changes saved in this browser/.test((await at(page, SAVING, (element) => element.textContent)) ?? ''));
+  await until('the save', async () => /^All changes saved/.test((await at(page, SAVING, (element) => element.textContent)) ?? ''));
 
   await page.reload({ waitUntil: 'networkidle0' });
   await until('a diagram', async () => (await conductionEdge(page)) !== null && (await solved(page)));

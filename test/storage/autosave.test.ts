@@ -98,7 +98,7 @@ describe('saving as one works', () => {
 
   it('says in words how it stands', () => {
     expect(savingWords({ kind: 'saved' })).toBe('All changes saved in this browser');
-    expect(savingWords({ kind: 'saved', clearable: true })).toMatch(/^All changes saved in this browser, which may clear them/);
+    expect(savingWords({ kind: 'saved', clearable: true })).toBe('All changes saved; this browser may clear them');
     expect(savingWords({ kind: 'failed', failure: (full as { failure: ReturnType<typeof storageFailure> }).failure })).toMatch(/no room.*file/);
     expect(savingWords({ kind: 'conflict', other: null })).toMatch(/deleted in another tab/);
   });
