@@ -8,8 +8,6 @@ export const styles = css`
     display: inline;
   }
   summary {
-    cursor: pointer;
-    min-height: 24px;
     border-bottom: 1px solid var(--ink);
     margin-bottom: 0.25rem;
   }
@@ -35,12 +33,5 @@ export const styles = css`
     flex-wrap: nowrap;
     min-height: 28px;
     color: var(--ink);
-  }
-  .check input {
-    flex: none;
-    width: 18px;
-    height: 18px;
-    min-height: 0;
-    accent-color: var(--choice);
   }
 `;

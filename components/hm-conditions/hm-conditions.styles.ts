@@ -95,12 +95,6 @@ export const styles = css`
     gap: 0.5rem;
     min-height: 28px;
   }
-  fieldset input {
-    width: 18px;
-    height: 18px;
-    min-height: 0;
-    accent-color: var(--choice);
-  }
   @media (max-width: 640px) {
     .who,
     .conditions,

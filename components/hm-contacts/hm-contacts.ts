@@ -12,6 +12,8 @@ import '../hm-metals/hm-metals.ts';
 import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import { drawn } from '../shared/drawn.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { styles } from './hm-contacts.styles.ts';
 
@@ -29,7 +31,7 @@ const QUIET = 200;
  * @fires hm-say
  */
 export class HmContacts extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, tableLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },

@@ -27,48 +27,12 @@ export const styles = css`
     border-collapse: collapse;
     width: 100%;
   }
-  th,
-  td {
-    text-align: start;
-    vertical-align: baseline;
-    padding: 3px 10px;
-    font-weight: 400;
-  }
   thead th {
     border-bottom: 1px solid var(--line);
-    vertical-align: bottom;
-    line-height: 1.2;
     padding-block: 0;
   }
   thead button {
-    border: 0;
-    background: none;
     padding: 4px 0;
-    text-align: inherit;
-    font-weight: 600;
-    line-height: 1.2;
-  }
-  thead .unit {
-    display: block;
-    font-weight: 400;
-    color: var(--faint);
-    white-space: nowrap;
-  }
-  .arrow {
-    display: inline-block;
-    width: 1em;
-    text-align: center;
-  }
-  th.figure,
-  td.figure {
-    text-align: end;
-    white-space: nowrap;
-  }
-  th:first-child {
-    position: sticky;
-    inset-inline-start: 0;
-    background: var(--ground);
-    z-index: 1;
   }
   tbody th button {
     border: 0;
@@ -104,10 +68,6 @@ export const styles = css`
   td span {
     display: block;
   }
-  td .note {
-    color: var(--faint);
-    font-size: 0.8125em;
-  }
   td .change {
     color: var(--faint);
     font-size: 0.8125em;
@@ -142,12 +102,6 @@ export const styles = css`
     align-items: center;
     gap: 5px;
     min-height: 24px;
-  }
-  fieldset input {
-    width: 16px;
-    height: 16px;
-    min-height: 0;
-    accent-color: var(--ink);
   }
   .quality {
     margin: 10px 0 0;

@@ -3,6 +3,7 @@ import { ledgerTables, qualityLine, sortedRows, tableTsv, type LedgerColumn, typ
 import { cellDifference, loneRows, partnerRow } from '../../src/result/ledger-difference.ts';
 import type { Result } from '../../src/result/types.ts';
 import { look } from '../shared/look.ts';
+import { sortedTableLook } from '../shared/table-look.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
 import { styles } from './hm-ledger.styles.ts';
 
@@ -25,7 +26,7 @@ const KIND_OF: Record<TableId, 'layer' | 'interface' | 'contact'> = { layers: 'l
  * @fires hm-say     the table was copied, or could not be
  */
 export class HmLedger extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, sortedTableLook, styles];
   static override properties = {
     result: { attribute: false },
     view: { attribute: false },

@@ -13,7 +13,10 @@ import { BatchController, type Pool } from '../hm-sweeps/batch-controller.ts';
 import { plotLook } from '../hm-sweeps/hm-sweeps.styles.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
+import { controlLook } from '../shared/form-look.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import { select } from '../shared/select.ts';
 import { WidthController } from '../shared/width-controller.ts';
@@ -36,7 +39,7 @@ const DOPING: readonly [number, number] = [1e12, 1e21];
  * @fires hm-say
  */
 export class HmMap extends LitElement {
-  static override styles = [look, plotLook, styles];
+  static override styles = [look, panelLook, controlLook, tableLook, plotLook, styles];
   static override properties = {
     design: { attribute: false },
     view: { attribute: false },

@@ -36,14 +36,6 @@ export const styles = css`
     align-items: center;
     gap: 0.5rem;
   }
-  progress {
-    width: 8rem;
-    accent-color: var(--choice);
-  }
-  summary {
-    cursor: pointer;
-    min-height: 24px;
-  }
   .line {
     display: flex;
     flex-wrap: wrap;

@@ -31,7 +31,6 @@ export const styles = css`
     padding: 0 0 0.5rem;
   }
   summary {
-    cursor: pointer;
     min-height: 28px;
     padding: 4px 0;
   }

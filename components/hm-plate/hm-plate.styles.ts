@@ -128,26 +128,12 @@ export const styles = css`
     margin: 8px 0;
   }
   .scroll {
-    overflow: auto;
     max-height: 22rem;
-    border-block: 1px solid var(--ink);
-  }
-  table {
-    border-collapse: collapse;
   }
   th,
   td {
-    padding: 2px 10px;
+    padding-inline: 10px;
     text-align: start;
-    font-weight: 400;
-    white-space: nowrap;
-  }
-  thead th {
-    position: sticky;
-    top: 0;
-    background: var(--ground);
-    font-weight: 600;
-    vertical-align: bottom;
   }
   .figure {
     text-align: end;
@@ -184,12 +170,6 @@ export const styles = css`
     align-items: center;
     min-width: 9rem;
     min-height: 24px;
-  }
-  .dimensions input {
-    width: 16px;
-    height: 16px;
-    min-height: 0;
-    accent-color: var(--ink);
   }
   .meaning,
   .none {

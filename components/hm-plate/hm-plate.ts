@@ -7,6 +7,7 @@ import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { panned, zoomed, zoomedEnergies } from './depth-window.ts';
 import { styles } from './hm-plate.styles.ts';
@@ -39,7 +40,7 @@ let plates = 0;
  * @fires plate-drawn  detail PlateAxes, does not bubble: the axes have changed; told of drawings, not of acts, for the strip and the rail to stand in line
  */
 export class HmPlate extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, tableLook, styles];
   static override properties = {
     result: { attribute: false },
     // By its contents: the page hands over a new record with every pointer move, and the picture is not drawn anew for that.

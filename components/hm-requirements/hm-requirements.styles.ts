@@ -1,9 +1,6 @@
 import { css } from 'lit';
 
 export const styles = css`
-  p {
-    margin: 0.2rem 0;
-  }
   ol {
     list-style: none;
     margin: 0;
@@ -33,10 +30,6 @@ export const styles = css`
     min-width: 1.2em;
     font-weight: 600;
   }
-  button,
-  select {
-    min-height: 28px;
-  }
   select {
     max-width: min(100%, 17rem);
     /* As wide as the choice, where browsers know it: the row reads as a sentence. */
@@ -47,11 +40,6 @@ export const styles = css`
     border-color: var(--choice);
     border-width: 2px;
   }
-  .state,
-  .doc,
-  .worst {
-    color: var(--faint);
-  }
   .doc {
     font-size: 0.8125rem;
   }
@@ -61,10 +49,7 @@ export const styles = css`
     align-items: center;
     gap: 0.5rem;
     min-height: 28px;
-  }
-  progress {
-    width: 8rem;
-    accent-color: var(--choice);
+    margin-top: 0;
   }
   .verdict {
     display: grid;
@@ -76,12 +61,10 @@ export const styles = css`
   .met strong::before {
     content: '✓ ';
   }
-  .not-met strong,
-  .wrong {
+  .not-met strong {
     color: var(--trouble);
   }
-  .not-met strong::before,
-  .wrong::before {
+  .not-met strong::before {
     content: '▲ ';
   }
   .no-answer strong::before {
@@ -99,6 +82,7 @@ export const styles = css`
     stroke-width: 2;
   }
   .worst {
+    color: var(--faint);
     grid-column: 2;
     overflow-wrap: anywhere;
   }

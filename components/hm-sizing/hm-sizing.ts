@@ -13,6 +13,8 @@ import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { panelLook, verdictLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { choiceOptions, likelyVariable, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
@@ -32,7 +34,7 @@ const LEAST_WIDTH = 320;
  * @fires hm-say
  */
 export class HmSizing extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, verdictLook, tableLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },
@@ -173,7 +175,7 @@ export class HmSizing extends LitElement {
         <option value="log" .selected=${this.view.scale === 'log'}>decades</option>
         <option value="linear" .selected=${this.view.scale === 'linear'}>even steps</option>
       </select></label>
-      <button type="button" class="find" ?disabled=${running} @click=${() => this.find(option)}>${make}</button>
+      <button type="button" class="go" ?disabled=${running} @click=${() => this.find(option)}>${make}</button>
     </div>`;
   }
 

@@ -10,7 +10,9 @@ import { filmJob, planFilm, type FilmPlan, type Frame } from '../../src/sweep/fi
 import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
+import { controlLook } from '../shared/form-look.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { BatchController, type Pool } from './batch-controller.ts';
@@ -37,7 +39,7 @@ const FRAME_MS = 160;
  * @fires film-view  detail FilmView; does not bubble: the range was changed
  */
 export class HmFilm extends LitElement {
-  static override styles = [look, plotLook];
+  static override styles = [look, panelLook, controlLook, plotLook];
   static override properties = {
     design: { attribute: false },
     view: { attribute: false },
@@ -188,7 +190,7 @@ export class HmFilm extends LitElement {
         <hm-field label="to" .unit=${unitOf(to) ?? 'K'} .value=${to} .complaint=${this.complaint('to')} @field-accept=${(e: CustomEvent<string>) => this.set({ to: e.detail })}></hm-field>
         <hm-field class="short" label="frames" .value=${frames} .complaint=${this.complaint('points')} @field-accept=${(e: CustomEvent<string>) => this.set({ frames: e.detail })}></hm-field>
         <label class="check"><input type="checkbox" .checked=${log} @change=${(e: Event) => this.set({ log: (e.target as HTMLInputElement).checked })} /> logarithmic</label>
-        <button type="button" class="main check" ?disabled=${this.batch.status === 'pending'} @click=${this.start}>Make the film</button>
+        <button type="button" class="go check" ?disabled=${this.batch.status === 'pending'} @click=${this.start}>Make the film</button>
       </div>
       ${this.complaints.length === 0 ? nothing : html`<div role="alert">${others.map(({ path, message }) => html`<p class="wrong">${path}: ${message}</p>`)}<span class="spoken">The film was not made: ${this.complaints.map(({ path, message }) => `${path} ${message}`).join('. ')}</span></div>`}
       ${this.renderState()} ${this.plan === null ? nothing : this.renderPlayer(this.plan)}`;

@@ -1,20 +1,9 @@
 import { css } from 'lit';
 
-/** What sweeps, film and map share. */
+/** What sweeps, film and map share beyond every panel: a picture that is read by a cursor. */
 export const plotLook = css`
-  p {
-    margin: 0.2rem 0;
-  }
-  h3 {
-    font-size: 0.9375rem;
-    font-weight: 600;
-    margin: 0.9rem 0 0.3rem;
-  }
   .ask {
-    display: flex;
-    flex-wrap: wrap;
     align-items: flex-start;
-    gap: 0.4rem 0.75rem;
     --field-width: 7.5rem;
   }
   .ask + .ask {
@@ -23,69 +12,12 @@ export const plotLook = css`
   .ask .short {
     --field-width: 4rem;
   }
-  .select {
-    display: inline-flex;
-    flex-direction: column;
-    gap: 1px;
-    max-width: 100%;
-  }
-  .label {
-    color: var(--faint);
-    font-size: 0.8125rem;
-  }
-  select {
-    max-width: min(100%, 18rem);
-    min-height: 28px;
-  }
-  .complaint,
   .wrong {
-    color: var(--trouble);
     font-size: 0.8125rem;
     max-width: 40rem;
   }
-  .complaint::before,
-  .wrong::before {
-    content: '▲ ';
-  }
-  .check {
-    display: inline-flex;
-    align-items: center;
-    gap: 6px;
-    min-height: 28px;
-    margin-top: 1.15rem;
-  }
-  .check input {
-    width: 18px;
-    height: 18px;
-    min-height: 0;
-    accent-color: var(--ink);
-  }
-  button {
-    min-height: 28px;
-  }
-  .main {
-    border-color: var(--ink);
-    font-weight: 600;
-  }
   .row {
-    display: flex;
-    flex-wrap: wrap;
-    align-items: center;
-    gap: 0.4rem 0.75rem;
     margin-top: 0.5rem;
-  }
-  progress {
-    width: 8rem;
-    accent-color: var(--choice);
-  }
-  .faint {
-    color: var(--faint);
-  }
-  .stale-mark {
-    font-style: italic;
-  }
-  .stale-mark::before {
-    content: '▲ ';
   }
   .stale .picture svg {
     opacity: 0.6;
@@ -133,35 +65,6 @@ export const plotLook = css`
   }
   details {
     margin-top: 0.5rem;
-  }
-  summary {
-    cursor: pointer;
-    min-height: 24px;
-  }
-  .scroll {
-    overflow: auto;
-    max-height: 24rem;
-    max-width: 100%;
-    border-block: 1px solid var(--ink);
-  }
-  table {
-    border-collapse: collapse;
-  }
-  th,
-  td {
-    text-align: end;
-    font-weight: 400;
-    padding: 2px 12px;
-    vertical-align: bottom;
-    white-space: nowrap;
-  }
-  thead th {
-    position: sticky;
-    inset-block-start: 0;
-    background: var(--ground);
-    font-weight: 600;
-    max-width: 14rem;
-    white-space: normal;
   }
 `;
 

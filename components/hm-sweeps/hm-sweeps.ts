@@ -14,7 +14,10 @@ import { planSweep, pointsOf, sweepJob, sweepResult, type SweepPlan, type SweepP
 import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
+import { controlLook } from '../shared/form-look.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import { select } from '../shared/select.ts';
 import { unitOf } from '../shared/typed-text.ts';
@@ -42,7 +45,7 @@ const MOST_ROWS = 500;
  * @fires hm-frame  of the film
  */
 export class HmSweeps extends LitElement {
-  static override styles = [look, plotLook, styles];
+  static override styles = [look, panelLook, controlLook, tableLook, plotLook, styles];
   static override properties = {
     design: { attribute: false },
     result: { attribute: false },
@@ -215,7 +218,7 @@ export class HmSweeps extends LitElement {
       ${second === null ? html`<p><button type="button" @click=${() => this.addSecond()}>Sweep a second quantity as well</button></p>` : this.renderAxis(second, 'second.', 'and')}
       <div class="row"><ul class="figures" aria-label="Figures of the sweep">${figures.map((path) => html`<li><button type="button" aria-label="Leave out ${words.get(path)}" ?disabled=${figures.length === 1} @click=${() => this.remember({ figures: figures.filter((p) => p !== path) })}>${words.get(path)}</button></li>`)}</ul>
         ${select({ id: 'add', label: 'Show another figure', value: '', unknown: 'choose', options: asMenu, complaint: this.complaint('figure'), onChoice: (path) => this.remember({ figures: [...figures, path] }) })}</div>
-      <div class="row"><button type="button" class="main" ?disabled=${this.batch.status === 'pending'} @click=${this.start}>Run the sweep</button></div>
+      <div class="row"><button type="button" class="go" ?disabled=${this.batch.status === 'pending'} @click=${this.start}>Run the sweep</button></div>
       ${this.complaints.length === 0 ? nothing : html`<div role="alert">${this.complaints.filter(({ path }) => path !== 'figure' && !shownAtFields.includes(path)).map(({ path, message }) => html`<p class="wrong">${path}: ${message}</p>`)}<span class="spoken">The sweep was not run: ${this.complaints.map(({ path, message }) => `${path} ${message}`).join('. ')}</span></div>`}`;
   }
 

@@ -12,6 +12,8 @@ import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { histogramOf, tornadoOf, usualShown } from './tolerance-pictures.ts';
@@ -32,7 +34,7 @@ const USUAL = { count: '1000', seed: '1' } as const;
  * @fires hm-say   a file was written, a text copied, or could not be
  */
 export class HmTolerances extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, tableLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },

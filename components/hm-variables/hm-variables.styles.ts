@@ -39,10 +39,8 @@ export const styles = css`
     accent-color: var(--choice);
   }
   summary {
-    cursor: pointer;
     color: var(--faint);
     font-size: 0.8125rem;
-    min-height: 24px;
   }
   .remove {
     min-height: 28px;

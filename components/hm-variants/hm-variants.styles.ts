@@ -1,14 +1,6 @@
 import { css } from 'lit';
 
 export const styles = css`
-  p {
-    margin: 0.2rem 0;
-  }
-  h3 {
-    font-size: 0.875rem;
-    font-weight: 600;
-    margin: 0.8rem 0 0.2rem;
-  }
   ul {
     margin: 0;
     padding-inline-start: 1.1rem;
@@ -44,16 +36,6 @@ export const styles = css`
     gap: 0.35rem;
     min-height: 28px;
   }
-  input[type='checkbox'],
-  input[type='radio'] {
-    width: 16px;
-    height: 16px;
-    min-height: 0;
-    accent-color: var(--ink);
-  }
-  button {
-    min-height: 28px;
-  }
   .new {
     display: flex;
     flex-wrap: wrap;
@@ -61,19 +43,6 @@ export const styles = css`
     gap: 0.4rem 0.75rem;
     --field-width: 11rem;
     margin-top: 0.5rem;
-  }
-  .doc {
-    color: var(--faint);
-  }
-  .wrong {
-    color: var(--trouble);
-  }
-  .wrong::before {
-    content: '▲ ';
-  }
-  summary {
-    cursor: pointer;
-    min-height: 24px;
   }
   .log li {
     overflow-wrap: anywhere;

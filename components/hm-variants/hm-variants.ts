@@ -5,6 +5,7 @@ import type { Variant } from '../../src/state/variants.ts';
 import '../hm-field/hm-field.ts';
 import { tell, type VariantAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
 import { MOST_OVER, NO_VARIANTS, type VariantsShown, type VariantsView } from './variants-shown.ts';
 import { styles } from './hm-variants.styles.ts';
 
@@ -15,7 +16,7 @@ import { styles } from './hm-variants.styles.ts';
  * @fires hm-view     { variants: VariantsView }
  */
 export class HmVariants extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, styles];
   static override properties = { shown: { attribute: false }, wish: { state: true } };
 
   declare shown: VariantsShown;

@@ -126,10 +126,8 @@ export const styles = css`
     padding-top: 6px;
   }
   summary {
-    cursor: pointer;
     font-weight: 600;
     font-size: 0.9375rem;
-    min-height: 24px;
   }
   ul {
     margin: 4px 0;

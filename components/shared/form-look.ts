@@ -1,32 +1,17 @@
 import { css } from 'lit';
 
-/** Fields in a row that wraps; labels above; a complaint under its field. */
-export const formLook = css`
-  .row {
-    display: flex;
-    flex-wrap: wrap;
-    align-items: flex-start;
-    gap: 8px 12px;
-  }
-  .row + .row {
-    margin-top: 10px;
-  }
-  .wide {
-    --field-width: 11rem;
-  }
+/** Single controls, wherever they stand: a labelled menu, its complaint, a check with its words, a button in line with fields. */
+export const controlLook = css`
   .select {
     display: inline-flex;
     flex-direction: column;
     gap: 1px;
     max-width: 100%;
   }
-  .label {
+  .label,
+  legend {
     color: var(--faint);
     font-size: 0.8125rem;
-  }
-  select {
-    max-width: 16rem;
-    min-height: 28px;
   }
   select[aria-invalid] {
     border-color: var(--trouble);
@@ -41,6 +26,7 @@ export const formLook = css`
   .complaint::before {
     content: '▲ ';
   }
+  /* As low as a field beside it, which has its label above. */
   .check {
     display: inline-flex;
     align-items: center;
@@ -48,15 +34,30 @@ export const formLook = css`
     min-height: 28px;
     margin-top: 1.15rem;
   }
-  .check input {
-    width: 16px;
-    height: 16px;
-    min-height: 0;
-    accent-color: var(--ink);
-  }
   .press {
     min-height: 28px;
     margin-top: 1.15rem;
+  }
+`;
+
+/** Fields in a row that wraps; labels above; a complaint under its field. */
+export const formLook = css`
+  ${controlLook}
+  .row {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: flex-start;
+    gap: 8px 12px;
+  }
+  .row + .row {
+    margin-top: 10px;
+  }
+  .wide {
+    --field-width: 11rem;
+  }
+  select {
+    max-width: 16rem;
+    min-height: 28px;
   }
   fieldset {
     border: 0;
@@ -67,7 +68,5 @@ export const formLook = css`
   }
   legend {
     padding: 0 8px 0 0;
-    color: var(--faint);
-    font-size: 0.8125rem;
   }
 `;

@@ -51,6 +51,22 @@ export const look = css`
     min-width: 24px;
     cursor: pointer;
   }
+  input[type='checkbox'],
+  input[type='radio'] {
+    flex: none;
+    width: 16px;
+    height: 16px;
+    min-height: 0;
+    accent-color: var(--ink);
+  }
+  progress {
+    width: 8rem;
+    accent-color: var(--choice);
+  }
+  summary {
+    cursor: pointer;
+    min-height: 24px;
+  }
   button.plain {
     border-color: transparent;
     background: none;
