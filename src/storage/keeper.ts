@@ -7,7 +7,7 @@ import { addVariant, openVariant, takeBackVariant } from '../state/variants.ts';
 import { Autosave, type SavingState } from './autosave.ts';
 import { storageFailure } from './failure.ts';
 import { keptVariants, readVariants, textOfVariant, workOf, LONE } from './kept-variants.ts';
-import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords } from './last-words.ts';
+import { dropLastWords, forgetLastWords, hearLastWords, leaveLastWords, rewriteLastWords, type LastWords } from './last-words.ts';
 import { Lasting } from './lasting.ts';
 import type { Content, ProjectStore, SaveOutcome } from './project-store.ts';
 import { isNewer, type ProjectRecord } from './record.ts';
@@ -39,6 +39,7 @@ export type Opened = { ok: true; /** unsaved changes of the last visit were take
 export class Keeper extends EventTarget {
   #project: OpenProject = { id: null, name: '', revision: 0 };
   /** counts the projects opened, so that a save that ends late is not taken for the next one's */ #opened = 0;
+  /** the id that the open project gets in the database, if it is not in it yet */ #born = '';
   readonly #tab: string = crypto.randomUUID();
   /** the designs as this tab last read or saved them */ #base = '';
   /** the project has a name here that the database does not know yet */ #nameOwed = false;
@@ -116,7 +117,7 @@ export class Keeper extends EventTarget {
   async create(name: string, design: Design, abandon = false): Promise<Opened> {
     const held = await this.#leave(abandon);
     if (held !== null) return held;
-    await this.#begin(name, design, []);
+    await this.#begin(name, design, [], crypto.randomUUID());
     return { ok: true, recovered: false };
   }
 
@@ -182,9 +183,10 @@ export class Keeper extends EventTarget {
     this.#autosave.reset();
   }
 
-  /** A new project takes the place of the one on the page, and is written. `places` are the last words that it is made of. */
-  async #begin(name: string, design: Design, places: string[]): Promise<void> {
+  /** A new project takes the place of the one on the page, and is written under an id of its own. `places` are the last words that it is made of. */
+  async #begin(name: string, design: Design, places: string[], born: string): Promise<void> {
     this.#opened++;
+    this.#born = born;
     this.#takenUp = places;
     this.#nameOwed = false;
     this.#project = { id: null, name, revision: 0 };
@@ -195,27 +197,39 @@ export class Keeper extends EventTarget {
     this.dispatchEvent(new Event('project'));
   }
 
-  /** Projects of an earlier visit that never came into the database: the first is opened, others are added. @returns null when there is none */
+  /** Projects of an earlier visit that may never have come into the database: the first is opened, others are added. @returns null when there is none */
   async #openUnknown(): Promise<Opened | null> {
     let opened: Opened | null = null;
     for (const { place, words } of hearLastWords(NOWHERE)) {
       const reading = readDesign(words.designText);
       if (!reading.ok) continue;
+      const { born = crypto.randomUUID() } = words;
+      // The tab died after the database had the project and before it heard so: what it had to say is about that one.
+      if (await this.#isKept(born)) {
+        if (leaveLastWords({ ...words, id: born, revision: 1 }, born)) forgetLastWords(place);
+        if (opened === null) opened = await this.open(born).then((outcome) => (outcome.ok ? outcome : null));
+        continue;
+      }
       const name = reading.design.title.trim() || 'untitled';
-      if (opened !== null) await this.#rescue({ name, view: {} }, place, words.designText);
+      if (opened !== null) await this.#rescue({ name, view: {} }, place, { ...words, born });
       else {
-        await this.#begin(name, reading.design, [place]);
+        await this.#begin(name, reading.design, [place], born);
         opened = { ok: true, recovered: true };
       }
     }
     return opened;
   }
 
+  async #isKept(id: string): Promise<boolean> {
+    return this.#store.get(id).then((record) => record !== null, () => false);
+  }
+
   #leaveWords(): void {
     clearTimeout(this.#wordsTimer);
     this.#wordsTimer = undefined;
     const { id, revision } = this.#project;
-    if (this.#autosave.unsaved) leaveLastWords({ id: id ?? NOWHERE, revision, designText: writeDesign(this.#session.design), variant: this.#session.variants.open }, this.#tab);
+    if (!this.#autosave.unsaved) return;
+    leaveLastWords({ id: id ?? NOWHERE, revision, designText: writeDesign(this.#session.design), variant: this.#session.variants.open, ...(id === null ? { born: this.#born } : {}) }, this.#tab);
   }
 
   async #take(record: ProjectRecord): Promise<Opened> {
@@ -258,7 +272,7 @@ export class Keeper extends EventTarget {
         recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
         // They stay where they are until the design that holds them now is saved.
         this.#takenUp.push(place);
-      } else await this.#rescue(record, place, words.designText);
+      } else await this.#rescue(record, place, words);
     }
     return recovered;
   }
@@ -272,9 +286,12 @@ export class Keeper extends EventTarget {
   }
 
   /** Makes a project of its own of what a losing tab left; where that cannot be written, it stays for the next visit. */
-  async #rescue({ name, view }: Pick<ProjectRecord, 'name' | 'view'>, place: string, designText: string): Promise<void> {
+  async #rescue({ name, view }: Pick<ProjectRecord, 'name' | 'view'>, place: string, words: LastWords): Promise<void> {
+    // Its id is noted first: a visit that dies before it has forgotten the words leads to no second copy.
+    const { born = crypto.randomUUID(), designText } = words;
     try {
-      await this.#store.create(`${name} (unsaved changes)`, { designText, history: { past: [], future: [] }, view });
+      rewriteLastWords(place, { ...words, born });
+      if (!(await this.#isKept(born))) await this.#store.create(`${name} (unsaved changes)`, { designText, history: { past: [], future: [] }, view }, {}, born);
       forgetLastWords(place);
     } catch {
       // Told by the next save, which fails for the same reason.
@@ -346,7 +363,7 @@ export class Keeper extends EventTarget {
   async #add(content: Content): Promise<SaveOutcome> {
     const opened = this.#opened;
     try {
-      const record = await this.#store.create(this.#project.name, content);
+      const record = await this.#store.create(this.#project.name, content, {}, this.#born);
       if (opened !== this.#opened) return { kind: 'saved', revision: 0 };
       this.#project = { id: record.id, name: record.name, revision: record.revision };
       await this.#remember(record.id);

@@ -7,6 +7,7 @@ export interface LastWords {
   /** the revision that the text was written on top of */ revision: number;
   designText: string;
   /** id of the variant that the text is of; absent: the one that is open */ variant?: string;
+  /** of what was about to become a project of its own: the id that it gets in the database */ born?: string;
 }
 
 /** One place a project and a tab, so that two tabs that close together do not talk over each other. */
@@ -14,8 +15,13 @@ const prefix = (id: string): string => `halfmark:unsaved:${id}:`;
 
 /** @returns whether they were kept; a browser may refuse */
 export function leaveLastWords(words: LastWords, tab: string, store: Storage = localStorage): boolean {
+  return rewriteLastWords(prefix(words.id) + tab, words, store);
+}
+
+/** Writes more into words where they stand. @returns whether they were kept */
+export function rewriteLastWords(place: string, words: LastWords, store: Storage = localStorage): boolean {
   try {
-    store.setItem(prefix(words.id) + tab, JSON.stringify(words));
+    store.setItem(place, JSON.stringify(words));
     return true;
   } catch {
     return false;
@@ -52,9 +58,9 @@ export function forgetLastWords(place: string, store: Storage = localStorage): v
 
 function read(text: string): LastWords | null {
   try {
-    const { id, revision, designText, variant } = JSON.parse(text) as Partial<LastWords>;
+    const { id, revision, designText, variant, born } = JSON.parse(text) as Partial<LastWords>;
     if (typeof id !== 'string' || typeof revision !== 'number' || typeof designText !== 'string') return null;
-    return { id, revision, designText, ...(typeof variant === 'string' ? { variant } : {}) };
+    return { id, revision, designText, ...(typeof variant === 'string' ? { variant } : {}), ...(typeof born === 'string' ? { born } : {}) };
   } catch {
     return null;
   }

@@ -59,23 +59,29 @@ export class ProjectStore {
     return values.filter((value): value is ProjectRecord => recordFault(value) === null);
   }
 
-  /** Adds a project under a name that is not taken yet. */
-  async create(name: string, content: Content, times: NewTimes = {}): Promise<ProjectRecord> {
-    return (await this.createAll([{ name, content, times }]))[0];
+  /**
+   * Adds a project under a name that is not taken yet.
+   * @param id  a fresh one of the caller's. One that is there already was written by the same caller, who did not live to hear of it: it is saved anew, not added twice.
+   */
+  async create(name: string, content: Content, times: NewTimes = {}, id?: string): Promise<ProjectRecord> {
+    return (await this.createAll([{ name, content, times, id }]))[0];
   }
 
   /** Adds several in one transaction: all of them, or none. */
-  async createAll(projects: readonly { name: string; content: Content; times?: NewTimes }[]): Promise<ProjectRecord[]> {
+  async createAll(projects: readonly { name: string; content: Content; times?: NewTimes; id?: string }[]): Promise<ProjectRecord[]> {
     const now = this.#now();
     return this.#with((db) =>
       written(db.transaction('projects', 'readwrite'), async ({ store }) => {
-        const taken = (await store.getAll()).map((value) => (recordFault(value) === null ? (value as ProjectRecord).name : ''));
-        const records = projects.map(({ name, content, times = {} }): ProjectRecord => {
+        const there = (await store.getAll()).filter((value): value is ProjectRecord => recordFault(value) === null);
+        const taken = there.map((record) => record.name);
+        const records = projects.map(({ name, content, times = {}, id = crypto.randomUUID() }): ProjectRecord => {
+          const mine = there.find((record) => record.id === id);
+          if (mine !== undefined) return { ...mine, ...content, changed: now, revision: mine.revision + 1 };
           const free = freeName(name.trim() || 'untitled', taken);
           taken.push(free);
-          return { id: crypto.randomUUID(), name: free, created: now, changed: now, revision: 1, binned: null, ...content, ...times };
+          return { id, name: free, created: now, changed: now, revision: 1, binned: null, ...content, ...times };
         });
-        for (const record of records) await store.add(record);
+        for (const record of records) await (record.revision === 1 ? store.add(record) : store.put(record));
         return records;
       }),
     );

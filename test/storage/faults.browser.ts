@@ -168,6 +168,55 @@ describe('whatever goes wrong with a write', () => {
     expect((await kept()).projects).to.include('cell: in the last second');
   });
 
+  /** A tab whose database does what it is asked to, and whose page dies before it hears so. */
+  function dyingTab() {
+    const store = new (class extends ProjectStore {
+      override async createAll(...given: Parameters<ProjectStore['createAll']>): Promise<never> {
+        await super.createAll(...given);
+        return new Promise(() => {});
+      }
+    })(() => {}, name);
+    const session = new Session(designFixture(), async () => ({ kind: 'dropped' }));
+    return { session, store, keeper: new Keeper(session, store, `${name}-dying`) };
+  }
+  const untilKept = async (count: number): Promise<void> => {
+    for (let i = 0; i < 200 && (await kept()).projects.length < count; i++) await new Promise((done) => setTimeout(done, 5));
+  };
+
+  it('a tab that dies between the write of a new project and the next write leaves it once, with what was typed meanwhile', async () => {
+    for (const typed of [null, 'typed meanwhile']) {
+      name = `faults-${Date.now()}-${count++}`;
+      const dying = dyingTab();
+      void dying.keeper.create('cell', designFixture());
+      await untilKept(1);
+      if (typed !== null) dying.session.edit(commands.setTitle(dying.session.design, typed), 'typed');
+      void dying.keeper.flush();
+      await dying.store.close();
+      const next = tab();
+      expect(await next.keeper.openLast()).to.deep.equal({ ok: true, recovered: typed !== null });
+      expect(next.session.design.title).to.equal(typed ?? designFixture().title);
+      await next.keeper.flush();
+      expect((await kept()).projects).to.deep.equal([`cell: ${typed ?? designFixture().title}`]);
+      for (const id of ['', next.keeper.project.id]) expect(Object.keys(localStorage).filter((key) => key.startsWith(`halfmark:unsaved:${id}:`))).to.deep.equal([]);
+      await end(next);
+    }
+  });
+
+  it('a visit that dies while it makes a project of what a losing tab left makes one of it, not two', async () => {
+    const one = tab();
+    await one.keeper.create('cell', designFixture());
+    const { id } = one.keeper.project;
+    await one.leave();
+    leaveLastWords({ id: id!, revision: 77, designText: writeDesign(commands.setTitle(designFixture(), 'of the losing tab')) }, 'losing tab');
+    const dying = dyingTab();
+    void dying.keeper.openLast();
+    await untilKept(2);
+    await dying.store.close();
+    const next = tab();
+    await next.keeper.openLast();
+    expect((await kept()).projects).to.deep.equal(['cell (unsaved changes): of the losing tab', 'cell: three layers']);
+  });
+
   it('a change is written down within a blink, before the database has it', async () => {
     const one = tab();
     await one.keeper.create('cell', designFixture());
