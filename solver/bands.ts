@@ -1,4 +1,5 @@
 import { BOLTZMANN, ELECTRON_MASS, ELEMENTARY_CHARGE, PLANCK } from './constants.ts';
+import { formulaAt, type Formula } from './formula.ts';
 import { narrowing } from './narrowing.ts';
 import { isAlloy, type AlloyMaterial, type Assumptions, type CrystalMaterial, type GapLaw, type MassPolynomial, type Material, type NarrowingLaw } from './stack.ts';
 
@@ -31,6 +32,7 @@ export function materialId(m: Material): string {
  * Varshni, Physica 34, 149 (1967), eq. (1); O'Donnell and Chen, Appl. Phys. Lett. 58, 2924 (1991), eq. (3) (equation number from memory).
  */
 export function gapAt(law: GapLaw, T: number): number {
+  if (law.law === 'formula') return formulaAt(law.formula, T, Number.NaN);
   if (law.law === 'linear') return law.at300K - law.slope * (T - 300);
   // coth(u/2) - 1 = 2/(e^u - 1): the difference itself would lose its digits where the phonons freeze.
   if (law.law === 'odonnell-chen') return law.zeroK - (2 * law.coupling * law.phonon) / Math.expm1(law.phonon / (BOLTZMANN * T));
@@ -55,11 +57,11 @@ export function densityOfStates(mass: number, T: number): number {
  * @param x       share of the alloy's `second`, 0..1; ignored for a crystal
  * @param T       K, > 0
  * @param doping  sums of all active donors and acceptors, cm^-3; only narrowing uses them
- * @throws {RangeError} T not positive, x outside 0..1, a semiconductor without masses, or a gap that is not positive
+ * @throws {RangeError} T not positive, x outside 0..1, a semiconductor without masses, or a gap, a mass or a permittivity that cannot be
  *
  * An alloy's rule P(x) = (1 - x) P_A + x P_B - x (1 - x) b holds for each valley's gap at T, for chi at 300 K, for the share kappa, for masses and
  * permittivities. A further valley counts in the alloy only where both ends know it. chi(x, T) follows from the alloy's own gap:
- * chi = chi(x, 300 K) + kappa [Eg(x, 300 K) - Eg(x, T)].
+ * chi = chi(x, 300 K) + kappa [Eg(x, 300 K) - Eg(x, T)]. An own formula counts instead of the law, or of the rule, that it stands for.
  */
 export function localBands(material: Material, x: number, T: number, a: Assumptions, doping: { donors: number; acceptors: number }): LocalBands {
   if (!(T > 0) || !Number.isFinite(T)) throw new RangeError(`temperature must be positive and finite: ${T}`);
@@ -75,7 +77,9 @@ export function localBands(material: Material, x: number, T: number, a: Assumpti
   const at300 = T === T_AFFINITY ? now : lowestValley(A, B, share, T_AFFINITY, alloy);
   let gap = now.gap;
   const kappa = mix(A.affinityShare, B.affinityShare);
-  let affinity = mix(A.affinity, B.affinity, bowing.affinity) + kappa * (at300.gap - now.gap);
+  const own = alloy?.formulas ?? {};
+  const by = (formula: Formula | undefined, otherwise: () => number): number => (formula === undefined ? otherwise() : formulaAt(formula, T, x));
+  let affinity = by(own.affinity, () => mix(A.affinity, B.affinity, bowing.affinity)) + kappa * (at300.gap - now.gap);
   if (a.narrowing) {
     const fall = (law: NarrowingLaw | undefined): number => (law ? narrowing(law, doping.donors, doping.acceptors) : 0);
     const fallA = fall(A.narrowing);
@@ -83,15 +87,18 @@ export function localBands(material: Material, x: number, T: number, a: Assumpti
     gap -= mix(fallA, fallB);
     affinity += mix(fallA * (A.narrowing?.conductionShare ?? 0), fallB * (B.narrowing?.conductionShare ?? 0));
   }
-  if (!(gap > 0)) throw new RangeError(`the gap of ${material.id} is not positive at ${T} K: ${gap} eV`);
+  if (!(gap > 0) || !Number.isFinite(affinity)) throw new RangeError(`the gap of ${material.id} is not positive at ${T} K: ${gap} eV`);
 
   const insulator = A.insulator || (share > 0 && B.insulator);
   let nc = 0;
   let nv = 0;
   if (!insulator) {
-    nc = densityOfStates(mix(massAt(now.massA, T, A.id), massAt(now.massB, T, B.id), bowing.electronMass), T);
-    nv = densityOfStates(mix(massAt(A.holeMass, T, A.id), massAt(B.holeMass, T, B.id), bowing.holeMass), T);
+    nc = densityOfStates(positive(by(own.electronMass, () => mix(now.massA(), now.massB(), bowing.electronMass)), material.id, T), T);
+    nv = densityOfStates(positive(by(own.holeMass, () => mix(massAt(A, 'holeMass', T), massAt(B, 'holeMass', T), bowing.holeMass)), material.id, T), T);
   }
+  const permittivity = by(own.permittivity, () => mix(permittivityAt(A, 'permittivity', T), permittivityAt(B, 'permittivity', T), bowing.permittivity));
+  const permittivityHighFrequency = by(own.permittivityHighFrequency, () => mix(permittivityAt(A, 'permittivityHighFrequency', T), permittivityAt(B, 'permittivityHighFrequency', T), bowing.permittivity));
+  if (!(permittivity > 0 && permittivityHighFrequency > 0)) throw new RangeError(`a permittivity of ${material.id} is not positive at ${T} K`);
   return {
     T,
     kT: BOLTZMANN * T,
@@ -99,8 +106,8 @@ export function localBands(material: Material, x: number, T: number, a: Assumpti
     affinity,
     nc,
     nv,
-    permittivity: mix(A.permittivity, B.permittivity, bowing.permittivity),
-    permittivityHighFrequency: mix(A.permittivityHighFrequency, B.permittivityHighFrequency, bowing.permittivity),
+    permittivity,
+    permittivityHighFrequency,
     insulator,
     kaneN: a.nonParabolic ? mix(A.nonParabolicity?.electron ?? 0, B.nonParabolicity?.electron ?? 0) : 0,
     kaneP: a.nonParabolic ? mix(A.nonParabolicity?.hole ?? 0, B.nonParabolicity?.hole ?? 0) : 0,
@@ -110,24 +117,27 @@ export function localBands(material: Material, x: number, T: number, a: Assumpti
 
 interface Valley {
   gap: number;
-  massA: MassPolynomial | undefined;
-  massB: MassPolynomial | undefined;
+  /** m0; asked for only where there are carriers */ massA: () => number;
+  massB: () => number;
 }
 
 function lowestValley(A: CrystalMaterial, B: CrystalMaterial, x: number, T: number, alloy: AlloyMaterial | null): Valley {
   const rule = (a: GapLaw, b: GapLaw, bow: number): number => (1 - x) * gapAt(a, T) + x * gapAt(b, T) - x * (1 - x) * bow;
-  let lowest: Valley = { gap: rule(A.gap, B.gap, polynomial(alloy?.bowing.gap ?? 0, x)), massA: A.electronMass, massB: B.electronMass };
+  const main = { massA: () => massAt(A, 'electronMass', T), massB: () => massAt(B, 'electronMass', T) };
+  if (alloy?.formulas?.gap) return { gap: formulaAt(alloy.formulas.gap, T, x), ...main };
+  let lowest: Valley = { gap: rule(A.gap, B.gap, polynomial(alloy?.bowing.gap ?? 0, x)), ...main };
   for (const valley of A.otherValleys ?? []) {
     // At x = 0 the other end has no say, so its valley is not needed.
     const partner = x === 0 ? valley : B.otherValleys?.find((v) => v.name === valley.name);
     if (!partner) continue;
     const gap = rule(valley.gap, partner.gap, alloy?.valleyBowing?.[valley.name] ?? 0);
-    if (gap < lowest.gap) lowest = { gap, massA: valley.electronMass, massB: partner.electronMass };
+    if (gap < lowest.gap) lowest = { gap, massA: () => polynomialMass(valley.electronMass, T, A.id), massB: () => polynomialMass(partner.electronMass, T, B.id) };
   }
   if (x === 1) {
     for (const valley of B.otherValleys ?? []) {
       const gap = gapAt(valley.gap, T);
-      if (gap < lowest.gap) lowest = { gap, massA: valley.electronMass, massB: valley.electronMass };
+      const mass = (): number => polynomialMass(valley.electronMass, T, B.id);
+      if (gap < lowest.gap) lowest = { gap, massA: mass, massB: mass };
     }
   }
   return lowest;
@@ -140,9 +150,24 @@ function polynomial(c: number | readonly number[], x: number): number {
   return sum;
 }
 
-function massAt(mass: MassPolynomial | undefined, T: number, id: string): number {
+/** Density-of-states mass of a crystal, m0. @throws {RangeError} there is none, or it is not positive */
+export function massAt(crystal: CrystalMaterial, which: 'electronMass' | 'holeMass', T: number): number {
+  const own = crystal.formulas?.[which];
+  return own ? positive(formulaAt(own, T, Number.NaN), crystal.id, T) : polynomialMass(crystal[which], T, crystal.id);
+}
+
+/** Relative permittivity of a crystal. */
+export function permittivityAt(crystal: CrystalMaterial, which: 'permittivity' | 'permittivityHighFrequency', T: number): number {
+  const own = crystal.formulas?.[which];
+  return own ? formulaAt(own, T, Number.NaN) : crystal[which];
+}
+
+function polynomialMass(mass: MassPolynomial | undefined, T: number, id: string): number {
   if (!mass) throw new RangeError(`${id} has no density-of-states mass`);
-  const m = polynomial(mass, T);
-  if (!(m > 0)) throw new RangeError(`the density-of-states mass of ${id} is not positive at ${T} K: ${m}`);
-  return m;
+  return positive(polynomial(mass, T), id, T);
+}
+
+function positive(mass: number, id: string, T: number): number {
+  if (!(mass > 0) || mass === Number.POSITIVE_INFINITY) throw new RangeError(`the density-of-states mass of ${id} is not positive at ${T} K: ${mass}`);
+  return mass;
 }

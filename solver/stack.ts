@@ -5,8 +5,10 @@
  * Frame: z = 0 at the top contact, growing into the stack. Layers run from the top down.
  */
 
+import type { Formula } from './formula.ts';
+
 /** Band gap against temperature; without `law` it is Varshni's. */
-export type GapLaw = VarshniGap | LinearGap | ODonnellChenGap;
+export type GapLaw = VarshniGap | LinearGap | ODonnellChenGap | FormulaGap;
 
 /** Eg = zeroK - alpha T^2/(T + beta); Varshni, Physica 34, 149 (1967), eq. (1). */
 export interface VarshniGap {
@@ -29,6 +31,20 @@ export interface ODonnellChenGap {
   /** gap at 0 K, eV */ zeroK: number;
   /** S, dimensionless */ coupling: number;
   /** mean phonon energy, eV, > 0 */ phonon: number;
+}
+
+/** Eg by a formula of whoever made the stack, eV. */
+export interface FormulaGap {
+  law: 'formula';
+  formula: Formula;
+}
+
+/** Formulas over T and x that count instead of the values and mixing rules beside them. Masses in m0, permittivities relative. */
+export interface OwnFormulas {
+  permittivity?: Formula;
+  permittivityHighFrequency?: Formula;
+  electronMass?: Formula;
+  holeMass?: Formula;
 }
 
 /** A mass, m0, as a polynomial in T/K, lowest power first; one coefficient is a constant mass. */
@@ -99,6 +115,7 @@ export interface CrystalMaterial {
   naturalValence?: { scale: string; edge: number };
   validity?: Validity;
   outsideContactModel?: OutsideContactModel;
+  /** over T alone: a crystal has no composition */ formulas?: OwnFormulas;
 }
 
 /** Contacts to one type of a material whose published resistivities lie decades away from what its barrier lets through. */
@@ -123,6 +140,8 @@ export interface AlloyMaterial {
   neutralityLevel?: number;
   pinningSlope?: number;
   /** of the alloy's own laws; those of its ends count as well */ validity?: Validity;
+  /** The gap is then that of the lowest band, whatever valleys the ends have (eV, over T and x); the affinity that at 300 K (eV, over x alone). */
+  formulas?: OwnFormulas & { gap?: Formula; affinity?: Formula };
 }
 
 export type Material = CrystalMaterial | AlloyMaterial;

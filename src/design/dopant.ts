@@ -1,10 +1,12 @@
+import { formulaAt } from '../../solver/formula.ts';
 import type { Dopant } from '../../solver/index.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import type { Asker } from './ask.ts';
 import type { Catalogue, Entry } from './catalogue.ts';
+import { askFormula, isFormula } from './formula.ts';
 import { modelsKnown } from './ionisation-models.ts';
 import { readProfile } from './profile.ts';
-import type { DopantInput, DopantRow, Pure, Text } from './types.ts';
+import type { DopantInput, DopantRow, Pure } from './types.ts';
 
 const MOST_CONCENTRATION: [number, string] = [1e23, '1e23 cm^-3'];
 const SHARE = { least: [0, '0'] as [number, string], most: [1, '1'] as [number, string] };
@@ -85,7 +87,14 @@ function modelOf(row: DopantRow, { entry }: Entry<DopantInput>, path: string, as
   return model;
 }
 
-function readDepth(depth: Text | { points: [Pure, Text][] }, x: number, path: string, ask: Asker): number {
+function readDepth(depth: DopantInput['depth'], x: number, path: string, ask: Asker): number {
+  if (isFormula(depth)) {
+    const { steps } = askFormula(depth, 'energy', path, ['x'], ask);
+    const value = formulaAt({ steps }, Number.NaN, x);
+    // A formula that is wrong in itself has been told of.
+    if (!Number.isNaN(steps[0]) && !(value >= -2 && value <= 20)) ask.wrong(`${path}.formula`, `${Number.isFinite(value) ? `comes to ${Number(value.toPrecision(4))} eV` : 'has no finite value'} at x = ${Number(x.toPrecision(4))}; a depth lies between -2 and 20 eV`);
+    return value;
+  }
   if (typeof depth !== 'object') return ask.quantity(depth, 'energy', path, { most: [20, '20 eV'], least: [-2, '-2 eV'] });
   const xs = depth.points.map(([p], i) => ask.quantity(p, 'number', `${path}.points[${i}][0]`, SHARE));
   const values = depth.points.map(([, v], i) => ask.quantity(v, 'energy', `${path}.points[${i}][1]`));

@@ -2,7 +2,8 @@ import type { AlloyMaterial, CrystalMaterial, GapLaw, Material, MobilityLaw, Nar
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import type { Asker } from './ask.ts';
 import type { Catalogue } from './catalogue.ts';
-import type { GapInput, MassInput, MaterialInput, MobilityInput, NarrowingInput } from './types.ts';
+import { askFormula, isFormula } from './formula.ts';
+import type { FormulaInput, GapInput, MassInput, MaterialInput, MobilityInput, NarrowingInput, Pure } from './types.ts';
 
 /**
  * Turns an entry of the catalogue, preset or custom alike, into the solver's material.
@@ -54,8 +55,23 @@ function readAlloy(m: MaterialInput, path: string, catalogue: Catalogue, ask: As
     ...(m.mobility ? { mobility: readMobilities(m.mobility, path, ask) } : {}),
     neutralityLevel: ask.maybe(m.neutralityLevel, 'energy', `${path}.neutralityLevel`),
     pinningSlope: ask.maybe(m.pinningSlope, 'number', `${path}.pinningSlope`, { least: [0, '0'], most: [1, '1'] }),
+    ...alloyFormulas(m, path, ask),
     ...readValidity(m, path, ask),
   };
+}
+
+/** What an alloy says of itself counts instead of the rule of its ends; a plain value is a formula that stands still. */
+function alloyFormulas(m: MaterialInput, path: string, ask: Asker): Pick<AlloyMaterial, 'formulas'> {
+  const formulas: NonNullable<AlloyMaterial['formulas']> = {};
+  for (const key of ['gap', 'affinity', 'permittivity', 'permittivityHighFrequency', 'electronMass', 'holeMass'] as const) {
+    const given = m[key];
+    if (given === undefined) continue;
+    const kind = key === 'gap' || key === 'affinity' ? 'energy' : 'number';
+    if (isFormula(given)) formulas[key] = askFormula(given, kind, `${path}.${key}`, key === 'affinity' ? ['x'] : ['T', 'x'], ask);
+    else if (typeof given === 'object') ask.wrong(`${path}.${key}`, 'is a law of a crystal; an alloy takes its own as one value or as { "formula": ... } over T and x');
+    else formulas[key] = { steps: [ask.quantity(given, kind, `${path}.${key}`)] };
+  }
+  return Object.keys(formulas).length === 0 ? {} : { formulas };
 }
 
 function readCrystal(m: MaterialInput, path: string, ask: Asker): CrystalMaterial | null {
@@ -64,7 +80,27 @@ function readCrystal(m: MaterialInput, path: string, ask: Asker): CrystalMateria
   const missing = needed.filter((key) => m[key] === undefined);
   for (const key of missing) ask.wrong(`${path}.${key}`, `is missing; ${quoted(m.id)} cannot be used without it${key.endsWith('Mass') ? ' (or say "insulator": true)' : ''}`);
   if (missing.length > 0) return null;
-  const permittivity = ask.quantity(m.permittivity, 'number', `${path}.permittivity`, { least: [1, '1'] });
+  if (isFormula(m.affinity)) {
+    ask.wrong(`${path}.affinity.formula`, 'is a formula, which only an alloy takes; a crystal has one affinity at 300 K, and its share of the gap moves it');
+    return null;
+  }
+  const formulas: NonNullable<CrystalMaterial['formulas']> = {};
+  // Where a formula counts nothing reads the value beside it.
+  const value = (key: 'permittivity' | 'permittivityHighFrequency', given: Pure | FormulaInput | undefined): number | undefined => {
+    if (!isFormula(given)) return ask.maybe(given, 'number', `${path}.${key}`, { least: [1, '1'] });
+    formulas[key] = askFormula(given, 'number', `${path}.${key}`, ['T'], ask);
+    return 1;
+  };
+  const mass = (key: 'electronMass' | 'holeMass'): number[] | undefined => {
+    const given = m[key];
+    if (!isFormula(given)) return given === undefined ? undefined : readMass(given, `${path}.${key}`, ask);
+    formulas[key] = askFormula(given, 'number', `${path}.${key}`, ['T'], ask);
+    return undefined;
+  };
+  const permittivity = value('permittivity', m.permittivity) as number;
+  const highFrequency = value('permittivityHighFrequency', m.permittivityHighFrequency);
+  if (formulas.permittivity && highFrequency === undefined) formulas.permittivityHighFrequency = formulas.permittivity;
+  const [electronMass, holeMass] = [mass('electronMass'), mass('holeMass')];
   const pair = <K extends 'number' | 'perEnergy' | 'richardson'>(key: 'tunnellingMass' | 'nonParabolicity' | 'richardson', kind: K, positive: boolean) => {
     const value = m[key];
     return value ? { [key]: { electron: ask.maybe(value.electron, kind, `${path}.${key}.electron`, positive ? { positive } : { least: [0, '0'] }), hole: ask.maybe(value.hole, kind, `${path}.${key}.hole`, positive ? { positive } : { least: [0, '0'] }) } } : {};
@@ -77,9 +113,10 @@ function readCrystal(m: MaterialInput, path: string, ask: Asker): CrystalMateria
     affinity: ask.quantity(m.affinity, 'energy', `${path}.affinity`, { least: [-10, '-10 eV'], most: [20, '20 eV'] }),
     affinityShare: ask.maybe(m.affinityShare, 'number', `${path}.affinityShare`) ?? 0.5,
     permittivity,
-    permittivityHighFrequency: ask.maybe(m.permittivityHighFrequency, 'number', `${path}.permittivityHighFrequency`, { least: [1, '1'] }) ?? permittivity,
-    ...(m.electronMass !== undefined ? { electronMass: readMass(m.electronMass, `${path}.electronMass`, ask) } : {}),
-    ...(m.holeMass !== undefined ? { holeMass: readMass(m.holeMass, `${path}.holeMass`, ask) } : {}),
+    permittivityHighFrequency: highFrequency ?? permittivity,
+    ...(electronMass ? { electronMass } : {}),
+    ...(holeMass ? { holeMass } : {}),
+    ...(Object.keys(formulas).length > 0 ? { formulas } : {}),
     ...pair('nonParabolicity', 'perEnergy', false),
     ...pair('tunnellingMass', 'number', true),
     ...pair('richardson', 'richardson', true),
@@ -98,12 +135,14 @@ function readCrystal(m: MaterialInput, path: string, ask: Asker): CrystalMateria
 function readGap(g: GapInput, path: string, ask: Asker): GapLaw {
   const bounds = { positive: true, most: [30, '30 eV'] as [number, string] };
   if (typeof g !== 'object') return { zeroK: ask.quantity(g, 'energy', path, bounds), alpha: 0, beta: 1 };
+  if (isFormula(g)) return { law: 'formula', formula: askFormula(g, 'energy', path, ['T'], ask) };
   if (g.law === 'linear') return { law: 'linear', at300K: ask.quantity(g.at300K, 'energy', `${path}.at300K`, bounds), slope: ask.quantity(g.slope, 'energyPerKelvin', `${path}.slope`) };
   if (g.law === 'odonnell-chen') return { law: 'odonnell-chen', zeroK: ask.quantity(g.zeroK, 'energy', `${path}.zeroK`, bounds), coupling: ask.quantity(g.coupling, 'number', `${path}.coupling`), phonon: ask.quantity(g.phonon, 'energy', `${path}.phonon`, { positive: true }) };
   return { zeroK: ask.quantity(g.zeroK, 'energy', `${path}.zeroK`, bounds), alpha: ask.quantity(g.alpha, 'energyPerKelvin', `${path}.alpha`), beta: ask.quantity(g.beta, 'temperature', `${path}.beta`, { least: [0, '0 K'] }) };
 }
 
 function readMass(m: MassInput, path: string, ask: Asker): number[] {
+  if (isFormula(m)) return [ask.wrong(`${path}.formula`, 'is a formula, which the mass of a further valley does not take; write a value, or a list of powers of T')];
   if (Array.isArray(m)) return m.map((c, i) => ask.quantity(c, 'number', `${path}[${i}]`));
   return [ask.quantity(m, 'number', path, { positive: true })];
 }

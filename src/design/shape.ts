@@ -57,13 +57,15 @@ const contact = v.variant('kind', [
   v.strictObject({ kind: v.literal('open'), sheetCharge: v.optional(sheetDensity) }),
 ]);
 
+const formula = v.strictObject({ formula: v.pipe(v.string(), v.maxLength(500), v.description('over T (with its unit) and, in an alloy, x; e.g. "1.519 eV - 5.4e-4 eV/K * T^2/(T + 204 K)"')) });
 const gapLaw = v.union([
   energy,
+  formula,
   v.strictObject({ law: v.optional(v.literal('varshni')), zeroK: energy, alpha: quantity('energyPerKelvin'), beta: temperature }),
   v.strictObject({ law: v.literal('linear'), at300K: energy, slope: quantity('energyPerKelvin') }),
   v.strictObject({ law: v.literal('odonnell-chen'), zeroK: energy, coupling: pure, phonon: energy }),
 ]);
-const mass = v.union([v.number(), v.string(), v.pipe(v.array(pure), v.minLength(1), v.maxLength(8))]);
+const mass = v.union([v.number(), v.string(), formula, v.pipe(v.array(pure), v.minLength(1), v.maxLength(8))]);
 const mobility = v.union([quantity('mobility'), v.strictObject({ min: quantity('mobility'), max: quantity('mobility'), reference: density, exponent: pure })]);
 const mobilities = v.optional(v.strictObject({ electron: v.optional(mobility), hole: v.optional(mobility) }));
 const narrowingCarrier = v.strictObject({ third: energy, quarter: energy, half: energy });
@@ -81,8 +83,8 @@ const material = v.strictObject({
   alloy: v.optional(v.strictObject({ first: name, second: name, bowing: v.optional(bowing), valleyBowing: v.optional(v.record(v.string(), energy)) })),
   gap: v.optional(gapLaw),
   otherValleys: v.optional(v.array(v.strictObject({ name, gap: gapLaw, electronMass: mass }))),
-  affinity: v.optional(energy), affinityShare: v.optional(pure),
-  permittivity: v.optional(pure), permittivityHighFrequency: v.optional(pure),
+  affinity: v.optional(v.union([energy, formula])), affinityShare: v.optional(pure),
+  permittivity: v.optional(v.union([v.number(), v.string(), formula])), permittivityHighFrequency: v.optional(v.union([v.number(), v.string(), formula])),
   electronMass: v.optional(mass), holeMass: v.optional(mass),
   nonParabolicity: v.optional(v.strictObject({ electron: v.optional(quantity('perEnergy')), hole: v.optional(quantity('perEnergy')) })),
   tunnellingMass: v.optional(v.strictObject({ electron: v.optional(pure), hole: v.optional(pure) })),
@@ -99,7 +101,7 @@ const material = v.strictObject({
 
 const dopant = v.strictObject({
   id: name, name: v.optional(text), host: name, kind: v.picklist(['donor', 'acceptor']),
-  depth: v.union([energy, v.strictObject({ points: v.pipe(v.array(v.strictTuple([pure, energy])), v.minLength(1)) })]), degeneracy: v.optional(pure),
+  depth: v.union([energy, formula, v.strictObject({ points: v.pipe(v.array(v.strictTuple([pure, energy])), v.minLength(1)) })]), degeneracy: v.optional(pure),
   merging: v.optional(v.strictObject({ depthReference: density, depthExponent: pure, boundReference: density, boundExponent: pure })),
   screened: v.optional(v.strictObject({ coefficient: quantity('energyLength'), mottDensity: density, boundExponent: v.optional(pure) })),
   model: v.optional(v.picklist(['dilute', 'merging', 'screened', 'complete'])),

@@ -5,6 +5,7 @@ import { catalogueOf, type Catalogue } from './catalogue.ts';
 import type { Complaint } from './complaint.ts';
 import { readContact, sheetBounds } from './contact.ts';
 import { readDopant } from './dopant.ts';
+import { tryFormulas } from './formula.ts';
 import { readMaterial } from './material.ts';
 import { publishedOffset } from './offset.ts';
 import { readProfile } from './profile.ts';
@@ -14,8 +15,8 @@ import { readVariables } from './variables.ts';
 
 export type StackReading = { ok: true; stack: Stack; notes: string[]; requirements: ReadRequirement[]; /** K, coldest first */ temperatureRange: [number, number] | null } | { ok: false; complaints: Complaint[] };
 
-const TEMPERATURE = { least: [1, '1 K'] as [number, string], most: [2000, '2000 K'] as [number, string] };
-const THICKNESS = { least: [1e-9, '0.01 nm'] as [number, string], most: [10, '10 cm'] as [number, string] };
+const TEMPERATURE = { of: 'a temperature', least: [1, '1 K'] as [number, string], most: [2000, '2000 K'] as [number, string] };
+const THICKNESS = { of: 'a thickness', least: [1e-9, '0.01 nm'] as [number, string], most: [10, '10 cm'] as [number, string] };
 
 /**
  * A design in the solver's units, or everything that is wrong with it.
@@ -48,6 +49,7 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
   const crystal = readCrystal(design, catalogue, ask);
   const requirements = readRequirements(design, ask);
   ask.complaints.push(...variables.afterthoughts);
+  if (ask.complaints.length === 0) tryFormulas(layers as Layer[], temperature, temperatureRange, catalogue, ask);
   if (ask.complaints.length > 0) return { ok: false, complaints: ask.complaints };
   const solved = layers as Layer[];
   const stack: Stack = {

@@ -86,14 +86,20 @@ export interface CrystalInput {
   template?: string;
 }
 
+/** A property as a formula over T and, in an alloy, x: "1.519 eV - 5.4e-4 eV/K * T^2/(T + 204 K)". */
+export interface FormulaInput {
+  formula: Text;
+}
+
 export type GapInput =
   | Text
+  | FormulaInput
   | { law?: 'varshni'; zeroK: Text; alpha: Text; beta: Text }
   | { law: 'linear'; at300K: Text; slope: Text }
   | { law: 'odonnell-chen'; zeroK: Text; coupling: Pure; phonon: Text };
 
 export type MobilityInput = Text | { min: Text; max: Text; reference: Text; exponent: Pure };
-export type MassInput = Pure | Pure[];
+export type MassInput = Pure | Pure[] | FormulaInput;
 export type NarrowingInput =
   | { law: 'slotboom'; energy: Text; reference: Text; constant: Pure; conductionShare: Pure }
   | { law: 'jain-roulston'; donor: NarrowingTerms; acceptor: NarrowingTerms; conductionShare: Pure };
@@ -119,10 +125,10 @@ export interface MaterialInput {
   alloy?: AlloyInput;
   gap?: GapInput;
   otherValleys?: { name: string; gap: GapInput; electronMass: MassInput }[];
-  affinity?: Text;
+  /** as a formula in an alloy alone, over x */ affinity?: Text | FormulaInput;
   affinityShare?: Pure;
-  permittivity?: Pure;
-  permittivityHighFrequency?: Pure;
+  permittivity?: Pure | FormulaInput;
+  permittivityHighFrequency?: Pure | FormulaInput;
   electronMass?: MassInput;
   holeMass?: MassInput;
   nonParabolicity?: { electron?: Text; hole?: Text };
@@ -145,7 +151,7 @@ export interface DopantInput {
   name?: string;
   host: string;
   kind: 'donor' | 'acceptor';
-  /** in an alloy against x: straight between the points, the nearest value beyond them */ depth: Text | { points: [Pure, Text][] };
+  /** in an alloy against x: straight between the points, the nearest value beyond them; or a formula over x */ depth: Text | { points: [Pure, Text][] } | FormulaInput;
   degeneracy?: Pure;
   merging?: { depthReference: Text; depthExponent: Pure; boundReference: Text; boundExponent: Pure };
   screened?: { coefficient: Text; mottDensity: Text; boundExponent?: Pure };

@@ -49,6 +49,19 @@ export function evaluate(text: string, scope: Scope): Value {
   const degrees = /^([-+]?(?:\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?)\s*degC$/.exec(plain);
   if (degrees) return celsius(Number(degrees[1]));
   if (/\bdegC\b/.test(plain)) throw new ExpressionError('uses degC in a calculation; write kelvin there, or a bare "25 degC"');
+  const tree = treeOf(plain);
+  const budget = { nodes: MOST_NODES };
+  const value = walk(tree, scope, budget, 0);
+  const size = isUnitValue(value) ? value.toSI().toNumeric() : value;
+  if (!Number.isFinite(size)) throw new ExpressionError('is not a finite number');
+  return value;
+}
+
+/**
+ * The tree of a text that `normalise` has been through; whoever takes it sees to what may be in it.
+ * @throws {ExpressionError} the text is no expression
+ */
+export function treeOf(plain: string): MathNode {
   let tree = parsed.get(plain);
   if (!tree) {
     try {
@@ -59,11 +72,7 @@ export function evaluate(text: string, scope: Scope): Value {
     if (parsed.size >= MOST_PARSED) parsed.clear();
     parsed.set(plain, tree);
   }
-  const budget = { nodes: MOST_NODES };
-  const value = walk(tree, scope, budget, 0);
-  const size = isUnitValue(value) ? value.toSI().toNumeric() : value;
-  if (!Number.isFinite(size)) throw new ExpressionError('is not a finite number');
-  return value;
+  return tree;
 }
 
 function walk(node: MathNode, scope: Scope, budget: { nodes: number }, depth: number): Value {

@@ -90,6 +90,11 @@ function targetUnit(unit: string): Unit {
   return target;
 }
 
+/** a temperature, K */
+export function kelvin(T: number): Unit {
+  return math.unit!(T, 'K');
+}
+
 /** kelvin from degrees Celsius */
 export function celsius(degrees: number): Unit {
   return math.unit!(degrees + 273.15, 'K');

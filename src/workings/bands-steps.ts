@@ -1,5 +1,5 @@
 import { isAlloy, type AlloyMaterial, type CrystalMaterial, type GapLaw, type Material } from '../../solver/index.ts';
-import { gapAt, localBands } from '../../solver/bands.ts';
+import { gapAt, localBands, permittivityAt } from '../../solver/bands.ts';
 import { BOLTZMANN } from '../../solver/constants.ts';
 import type { Context, Point } from './context.ts';
 import type { Expression } from './expression.ts';
@@ -48,6 +48,7 @@ function crystalGap(crystal: CrystalMaterial, T: number, gap: number, ask: Asks,
 
 function gapLaw(law: GapLaw, T: number, ask: Asks, path: string, valley: string): Expression {
   const of = valley === '' ? '' : `, ${valley} valley,`;
+  if (law.law === 'formula') return formula`${ask(`${path}.formula`, 'E_g,own', `gap by the formula of this design${of}`, gapAt(law, T), 'eV')}`;
   const t = temperatureOf(T);
   if (law.law === 'linear') return formula`${ask(`${path}.at300K`, 'E_g,300', `gap at 300 K${of}`, law.at300K, 'eV')} - ${ask(`${path}.slope`, 'a', `fall of the gap per kelvin${of}`, law.slope, 'eV/K')} * (${t} - 300)`;
   if (law.law === 'odonnell-chen') {
@@ -90,6 +91,7 @@ function bowingOf(material: AlloyMaterial, x: number): number {
 function alloyGap(context: Context, point: Point, material: AlloyMaterial, result: Known): Step[] {
   const T = context.stack.temperature;
   const { catalogue } = context;
+  if (material.formulas?.gap) return [step(result, formula`${materialAsks(catalogue, material.id)('gap.formula', 'E_g,own', 'gap by the formula of this design', result.value, 'eV')}`)];
   const { name, A, B } = valleyOf(context, material, point.x);
   const x = composition(point);
   const steps: Step[] = [];
@@ -119,8 +121,11 @@ function alloyGap(context: Context, point: Point, material: AlloyMaterial, resul
 /** Straight between an alloy's ends, with a bowing where it has one. */
 export function mixed(context: Context, point: Point, result: Known, path: string, words: string, unit: string, read: (crystal: CrystalMaterial) => number | undefined, bowing: { path: string; value: number | undefined } | null = null): Worked {
   const { material } = point.layer;
-  if (!isAlloy(material)) return { known: materialAsks(context.catalogue, material.id)(path, result.sign, words, read(material), unit, result.scale), steps: [] };
-  const ask = (crystal: CrystalMaterial, mark: string): Known => materialAsks(context.catalogue, crystal.id)(path, `${result.sign.split('_')[0]}_${mark}`, words, read(crystal) ?? Number.NaN, unit, result.scale);
+  const T = context.stack.temperature;
+  const value = (crystal: CrystalMaterial): number | undefined => (path === 'permittivity' || path === 'permittivityHighFrequency' ? permittivityAt(crystal, path, T) : read(crystal));
+  if (!isAlloy(material)) return { known: materialAsks(context.catalogue, material.id)(path, result.sign, words, value(material), unit, result.scale), steps: [] };
+  if (Object.hasOwn(material.formulas ?? {}, path)) return { known: materialAsks(context.catalogue, material.id)(path, result.sign, words, result.value, unit, result.scale), steps: [] };
+  const ask = (crystal: CrystalMaterial, mark: string): Known => materialAsks(context.catalogue, crystal.id)(path, `${result.sign.split('_')[0]}_${mark}`, words, value(crystal) ?? Number.NaN, unit, result.scale);
   const x = composition(point);
   const [a, b] = [ask(material.first, 'A'), ask(material.second, 'B')];
   // An end that does not count need not know the value.

@@ -1,5 +1,5 @@
 import { isAlloy, type CrystalMaterial } from '../../solver/index.ts';
-import { densityOfStates, gapAt } from '../../solver/bands.ts';
+import { densityOfStates, gapAt, massAt } from '../../solver/bands.ts';
 import { M3_PER_CM3 } from '../../solver/units.ts';
 import { composition, pureBands, valleyOf, type Worked } from './bands-steps.ts';
 import type { Context, Point } from './context.ts';
@@ -35,6 +35,7 @@ function massSteps(context: Context, point: Point, carrier: 'n' | 'p', result: K
   const words = result.words;
   const polynomial = (into: Known, crystal: CrystalMaterial, path: string, mass: readonly number[] | undefined): Step => {
     const ask = materialAsks(context.catalogue, crystal.id);
+    if (path === key && crystal.formulas?.[key]) return step(into, formula`${ask(key, `m_${crystal.id}`, `${words}, by the formula of this design`, massAt(crystal, key, T), 'm₀')}`);
     const t = temperatureOf(T);
     const terms = (mass ?? []).map((c, i) => {
       const coefficient = ask(path, (mass ?? []).length === 1 ? `m_${crystal.id}` : `c_${i}`, i === 0 ? words : `${words}, power ${i} of T in K`, c, i === 0 ? 'm₀' : `m₀/K${i === 1 ? '' : POWERS[i] ?? `^${i}`}`);
@@ -51,11 +52,13 @@ function massSteps(context: Context, point: Point, carrier: 'n' | 'p', result: K
     const { mass, path } = massOf(material, other?.name ?? null);
     return [polynomial(result, material, path, mass)];
   }
-  const { name } = valleyOf(context, material, point.x);
+  if (material.formulas?.[key]) return [step(result, formula`${materialAsks(context.catalogue, material.id)(key, `m_${material.id}`, `${words}, by the formula of this design`, result.value, 'm₀')}`)];
+  const { name } = material.formulas?.gap ? { name: null } : valleyOf(context, material, point.x);
   const x = composition(point);
   const worked = (crystal: CrystalMaterial, mark: string): { known: Known; step: Step } => {
     const { mass, path } = massOf(crystal, name);
-    const k = known(`m_${mark}`, `${words} in ${crystal.id}`, (mass ?? []).reduce((sum, c, i) => sum + c * T ** i, 0), 'm₀', WORKED);
+    const own = path === key && crystal.formulas?.[key];
+    const k = known(`m_${mark}`, `${words} in ${crystal.id}`, own ? massAt(crystal, key, T) : (mass ?? []).reduce((sum, c, i) => sum + c * T ** i, 0), 'm₀', WORKED);
     return { known: k, step: polynomial(k, crystal, path, mass) };
   };
   const [a, b] = [worked(material.first, 'A'), worked(material.second, 'B')];
