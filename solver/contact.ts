@@ -4,7 +4,8 @@ import { localCharge, netDoping } from './charge.ts';
 import { closedFormResistivity, saturationCurrent } from './closed-forms.ts';
 import { contactPath } from './contact-path.ts';
 import { BOLTZMANN } from './constants.ts';
-import { carrierConductance, isMissing, logOccupancyAbove } from './contact-resistivity.ts';
+import { logOccupancyAbove } from './contact-integral.ts';
+import { carrierConductance, isMissing } from './contact-resistivity.ts';
 import { depletionFrom, type SpaceCharge } from './depletion.ts';
 import { neutralLevel } from './fermi-level.ts';
 import { profileAt } from './profile.ts';
@@ -29,7 +30,7 @@ export function contactFigures(stack: Stack, profiles: Profiles, space: SpaceCha
   const figures: ContactFigures = {
     side, kind: boundary.kind, barrierN: null, barrierP: null, barrierSource: null, lowering: null, surfaceField,
     e00: null, transport: null, depletion: depletionFrom(stack, profiles, space, index, side),
-    rhoC: null, rhoCn: null, rhoCp: null, rhoCFloor: null, rhoCClosedForm: null, closedForm: null, saturationCurrent: null, transmission: null, rhoError: null, rhoCNotes: [],
+    rhoC: null, rhoCn: null, rhoCp: null, rhoCFloor: null, rhoCClosedForm: null, closedForm: null, saturationCurrent: null, transmission: null, blocks: false, rhoError: null, rhoCNotes: [],
   };
   if (boundary.kind === 'pinned') {
     figures.barrierN = boundary.level;
@@ -70,7 +71,7 @@ export function contactFigures(stack: Stack, profiles: Profiles, space: SpaceCha
   return figures;
 }
 
-type Conduction = Pick<ContactFigures, 'rhoC' | 'rhoCn' | 'rhoCp' | 'rhoCFloor' | 'transmission' | 'rhoError' | 'rhoCNotes'>;
+type Conduction = Pick<ContactFigures, 'rhoC' | 'rhoCn' | 'rhoCp' | 'rhoCFloor' | 'transmission' | 'blocks' | 'rhoError' | 'rhoCNotes'>;
 
 /** A carrier of unknown constants is left out where even A* = 1200 A/(cm^2 K^2), ten free electrons', without a barrier would add less than this share. */
 const NEGLIGIBLE = 1e-6;
@@ -80,7 +81,7 @@ const DOUBTFUL = 0.01;
 
 /** Both carriers through the solved barrier, in parallel. What cannot be computed is null, and a note says why. */
 function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 'top' | 'bottom'): Conduction {
-  const out: Conduction = { rhoC: null, rhoCn: null, rhoCp: null, rhoCFloor: null, transmission: null, rhoError: null, rhoCNotes: [] };
+  const out: Conduction = { rhoC: null, rhoCn: null, rhoCp: null, rhoCFloor: null, transmission: null, blocks: false, rhoError: null, rhoCNotes: [] };
   const path = contactPath(stack, profiles, space, side);
   if (!path) {
     out.rhoCNotes.push('no contact resistivity, since no layer is neutral anywhere and takes the carriers up');
@@ -111,7 +112,10 @@ function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 
     out.rhoC = Math.exp(-minority.log);
     out.rhoError = minority.error;
   }
-  if (out.rhoC === Infinity) out.rhoCNotes.push('its resistivity is beyond the largest number: it blocks');
+  if (out.rhoC === Infinity) {
+    out.blocks = true;
+    out.rhoCNotes.push('its resistivity is beyond the largest number: it blocks');
+  }
   if (out.rhoError > DOUBTFUL) out.rhoCNotes.push(`its ${out.transmission} resistivity is uncertain by ${Math.ceil(100 * out.rhoError)} %, for waves ring in the layers under it; "wkb" has no such trouble`);
   return out;
 }

@@ -79,6 +79,7 @@ export interface ContactFigures {
   closedForm: 'thermionic' | 'thermionic-field' | 'field' | null;
   /** A T^2 exp(-phi/kT) of the majority at the metal, lowered barrier, A/cm^2 */ saturationCurrent: number | null;
   transmission: 'wkb' | 'kemble' | 'exact' | null;
+  /** what passes is too little for a finite resistivity: rhoC is beyond the largest number. False where none could be worked out, and at an end that is no barrier */ blocks: boolean;
   /** relative, of the integrals of rhoC */ rhoError: number | null;
   /** why there is no rhoC, or what to keep in mind with it */ rhoCNotes: string[];
 }
@@ -103,6 +104,7 @@ export interface Quality {
   converged: boolean;
   newtonUpdates: number;
   /** V */ lastUpdate: number;
+  /** looks at the charge or the properties of a mesh node, over all meshes that it took (poisson-work.ts) */ looks: number;
   meshNodes: number;
   /** estimated error in psi, V */ meshError: number;
   /** charge balance over the stack and each layer, share of the largest sheet charge */ gaussError: number;

@@ -70,7 +70,7 @@ export function marginTable(known: Known, design: Design): { headings: string[];
     if (score === null || score === undefined) return 'no answer';
     const measure = measureOf(limit);
     if (measure.kind === 'difference') return `${writeNumber(score * measure.step, 3)} ${measure.unit}`.trim();
-    return Math.abs(score) > 690 ? (score > 0 ? 'without end' : '0') : `×${writeNumber(Math.exp(score), 3)}`;
+    return Math.abs(score) > 690 ? (score > 0 ? 'without end' : 'none') : `×${writeNumber(Math.exp(score), 3)}`;
   };
   return {
     headings: [known.variable, ...limits.map(limitWords)],

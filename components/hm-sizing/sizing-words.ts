@@ -1,5 +1,5 @@
 import type { SizedAnswer, SizedEdge } from '../../src/requirements/size.ts';
-import { marginWords, verdictWords } from '../../src/requirements/verdict.ts';
+import { marginWords, unansweredWords, verdictWords, worstWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
 
@@ -23,8 +23,8 @@ export function edgeWords({ text, reason, requirement, at }: SizedEdge, side: 'b
 
 /** "met, margin 2.5 times; worst 4e-7 ohm cm^2 at -40 degC" of a requirement at a value. */
 export function marginLine(row: RequirementResult): string {
-  const at = row.at === null ? '' : ` at ${row.at.words}`;
-  const blank = row.unanswered === null ? '' : `; no answer at ${row.unanswered.words}: ${row.unanswered.reason}`;
+  const at = row.at === null ? '' : `${row.blocks ? `: ${worstWords(row)}` : ''} at ${row.at.words}`;
+  const blank = row.unanswered === null ? '' : `; ${unansweredWords(row, ['corner', 'corners'])}`;
   return `${verdictWords(row)}, margin ${marginWords(row)}${at}${blank}`;
 }
 

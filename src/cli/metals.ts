@@ -24,7 +24,7 @@ export const metals: Command = {
     const answer = ranked(design, { side: sideOf(options.side, design), set, tolerances: tolerancesOf(options.tolerances) }, streams);
     if (answer.kind === 'complaints') throw new InputError(answer.complaints);
     streams.out(options.json === undefined ? rankingText(answer) : `${JSON.stringify(answer, null, 1)}\n`);
-    return answer.rows.some(({ worst_ohm_cm2 }) => worst_ohm_cm2 !== null) ? EXIT.done : EXIT.noAnswer;
+    return answer.rows.some(({ worst_ohm_cm2, blocks }) => worst_ohm_cm2 !== null || blocks !== null) ? EXIT.done : EXIT.noAnswer;
   },
 };
 
@@ -57,7 +57,7 @@ export function rankingText(ranking: Ranking): string {
   const heading = ['metal', `phi_B${majority} (eV)`, 'rho_c (ohm cm^2)', 'least ... most', 'worst', 'regime', 'barrier', 'worst at'];
   const known = rows.filter(({ reason }) => reason === null);
   const table = known.map((row) => [
-    `${row.metal}${row.present ? ' *' : ''}`, decimalText(majorityBarrier(row, majority)), figureText(row.rho_c_ohm_cm2), bandWords(row), figureText(row.worst_ohm_cm2), regimeOf(row),
+    `${row.metal}${row.present ? ' *' : ''}`, decimalText(majorityBarrier(row, majority)), figureText(row.rho_c_ohm_cm2), bandWords(row), row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks', regimeOf(row),
     barrierWords(row), row.worst_at ?? '–',
   ].map((cell) => onOneLine(cell).replace(/−/g, '-').replace('…', '...')));
   const widths = heading.map((text, i) => Math.max(text.length, ...table.map((cells) => cells[i].length)));

@@ -14,8 +14,9 @@ const REGIMES = ['field', 'thermionic-field', 'thermionic'];
 export function orderedRows(rows: readonly MetalRow[], { by, descending }: MetalOrder, majority: Ranking['majority']): MetalRow[] {
   const value = (row: MetalRow): number | null => {
     switch (by) {
-      case 'worst': return row.worst_ohm_cm2;
-      case 'rho': return row.rho_c_ohm_cm2;
+      // What blocks is the worst that there is, and known to be.
+      case 'worst': return row.blocks === null ? row.worst_ohm_cm2 : Infinity;
+      case 'rho': return row.blocks === 'here' ? Infinity : row.rho_c_ohm_cm2;
       case 'barrier': return majority === 'n' ? row.barrier_n_eV : row.barrier_p_eV;
       case 'regime': return row.transport === null ? null : REGIMES.indexOf(row.transport);
       case 'metal': return 0;

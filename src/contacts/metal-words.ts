@@ -38,7 +38,8 @@ export function bandWords({ band_ohm_cm2 }: MetalRow): string {
 
 /** What is ranked, in a sentence. */
 export function rankingSentence({ side, layer, material, majority, rows, tolerances, temperatures, limit_ohm_cm2 }: Ranking): string {
-  const known = rows.filter(({ worst_ohm_cm2 }) => worst_ohm_cm2 !== null).length;
+  const known = rows.filter(({ worst_ohm_cm2, blocks }) => worst_ohm_cm2 !== null || blocks !== null).length;
+  const blocking = rows.filter(({ blocks }) => blocks !== null).length;
   const met = limit_ohm_cm2 === null ? '' : ` ${rows.filter(({ worst_ohm_cm2 }) => worst_ohm_cm2 !== null && worst_ohm_cm2 <= limit_ohm_cm2).length} of them stay within the limit of ${figureText(limit_ohm_cm2, 2)} ohm cm².`;
-  return `${known} of ${rows.length} metals on ${layer} (${majority}-type ${material}, ${side}), by their worst contact resistivity over ${temperatures} and ${tolerances.length === 0 ? 'no tolerance' : `within ${tolerances.map((text) => `±${text.replace(/^(.*) (\S+ \S+)$/, '$2 of $1')}`).join(', ')}`}.${met}`;
+  return `${known} of ${rows.length} metals on ${layer} (${majority}-type ${material}, ${side}), by their worst contact resistivity over ${temperatures} and ${tolerances.length === 0 ? 'no tolerance' : `within ${tolerances.map((text) => `±${text.replace(/^(.*) (\S+ \S+)$/, '$2 of $1')}`).join(', ')}`}.${met}${blocking === 0 ? '' : ` ${blocking} ${blocking === 1 ? 'blocks' : 'block'} in the worst case.`}`;
 }

@@ -5,6 +5,7 @@ import type { Complaint } from '../design/complaint.ts';
 import type { Design, MetalInput } from '../design/types.ts';
 import type { Point, Reading } from '../requirements/point.ts';
 import type { Tolerances, Uncertainty } from '../requirements/uncertainties.ts';
+import { BLOCKS } from '../requirements/verdict.ts';
 import { cornerWords, temperatureWriter } from '../requirements/words.ts';
 import { NOISE, worstCases, type Readable, type WorstCase } from '../requirements/worst-case.ts';
 import { barrierValues, heightsOf, valueInForce, type BarrierValue } from './barrier-values.ts';
@@ -36,12 +37,20 @@ export interface MetalRow {
   /** least and most at the design's temperature, within the tolerances; null where one of them is not known */ band_ohm_cm2: [number, number] | null;
   /** over the temperatures and the tolerances */ worst_ohm_cm2: number | null;
   /** "-40 degC, Ncap -20 %, barrier +50 meV" */ worst_at: string | null;
+  /** where least, most and worst were found; null without them */ points: { least: MetalPoint | null; most: MetalPoint | null; worst: MetalPoint | null };
+  /** no finite resistivity: at the design's temperature, or only in the worst case; a largest limit is then missed */ blocks: 'here' | 'worst' | null;
   e00_over_kT: number | null;
   transport: ContactFigures['transport'];
   lowering_eV: number | null;
   saturation_A_cm2: number | null;
   /** why a figure is missing */ reason: string | null;
   notes: string[];
+}
+
+/** A temperature and the tolerances that are moved there, as signed counts. */
+export interface MetalPoint {
+  temperature_K: number;
+  tolerances: { name: string; count: number }[];
 }
 
 /** Metals on one surface. */
@@ -127,7 +136,7 @@ function searched(surface: ContactSurface): 'wkb' | 'kemble' {
 function logOf(found: Found): number | null {
   if (!('figures' in found)) return null;
   const { rhoC } = found.figures;
-  // One beyond the largest number is still the worst of all.
+  // What blocks is still the worst of all.
   return rhoC === null ? null : Math.log(Math.min(rhoC, Number.MAX_VALUE));
 }
 
@@ -144,7 +153,7 @@ function metalRow(surface: ContactSurface, metal: MetalInput, own: boolean, key:
   const row: MetalRow = {
     metal: metal.id, name: metal.name ?? metal.id, kind: metal.kind ?? null, own, present: there.kind === 'barrier' && there.metal === metal.id, value: value?.key ?? null, values, contact,
     barrier_n_eV: asked?.barrier_n_eV ?? heights?.barrierN ?? null, barrier_p_eV: asked?.barrier_p_eV ?? heights?.barrierP ?? null,
-    rho_c_ohm_cm2: null, rho_c_n_ohm_cm2: null, rho_c_p_ohm_cm2: null, band_ohm_cm2: null, worst_ohm_cm2: null, worst_at: null,
+    rho_c_ohm_cm2: null, rho_c_n_ohm_cm2: null, rho_c_p_ohm_cm2: null, band_ohm_cm2: null, worst_ohm_cm2: null, worst_at: null, points: { least: null, most: null, worst: null }, blocks: null,
     e00_over_kT: null, transport: null, lowering_eV: null, saturation_A_cm2: null, reason: null, notes: [],
   };
   if (asked === undefined && typeof boundary === 'string') return { ...row, reason: boundary };
@@ -162,6 +171,7 @@ function figuresOf(surface: ContactSurface, contact: BarrierInput): Figured {
   const figured: Figured = {
     ...withRho(f), e00_over_kT: f.e00 === null ? null : f.e00 / (BOLTZMANN * temperature), transport: f.transport, lowering_eV: f.lowering, saturation_A_cm2: f.saturationCurrent, notes: [...f.rhoCNotes],
   };
+  if (f.blocks) return { ...figured, blocks: 'here', reason: `${BLOCKS} at ${temperatureWriter(surface.design)(temperature)}` };
   if (f.rhoC === null || !Number.isFinite(f.rhoC)) return { ...figured, reason: f.rhoCNotes[0] ?? 'no contact resistivity', notes: f.rhoCNotes.slice(1) };
   const [most, least] = run(new Study(surface, contact), [MOST, LEAST], [temperature], temperature);
   const range = surface.temperatureRange ?? [temperature];
@@ -171,13 +181,18 @@ function figuresOf(surface: ContactSurface, contact: BarrierInput): Figured {
   const high = rhoAt(surface, contact, most);
   const top = rhoAt(surface, contact, worst);
   if (low !== null && high !== null) figured.band_ohm_cm2 = [low, high];
+  const place = ({ reading }: WorstCase): MetalPoint | null => reading && { temperature_K: reading.point.temperature, tolerances: reading.point.counts.flatMap((count, i) => (count === 0 ? [] : [{ name: surface.uncertainties[i].label, count }])) };
+  figured.points = { least: place(least), most: place(most), worst: place(worst) };
+  const words = (found: WorstCase): string => cornerWords((found.reading as Reading).point, named(surface, contact), temperatureWriter(surface.design), found.effects);
+  if (worst.reading !== null && blocksAt(surface, contact, worst.reading.point)) return { ...figured, blocks: 'worst', worst_at: words(worst) };
   if (worst.unanswered.length > 0 || top === null) {
     const blank = worst.unanswered[0];
     const where = cornerWords(blank?.point ?? (worst.reading?.point as Point), named(surface, contact), temperatureWriter(surface.design));
-    return { ...figured, reason: `no worst case: ${blank?.refusal ?? 'it blocks'} (${where})` };
+    const count = worst.unanswered.length;
+    return { ...figured, reason: `no worst case: ${blank?.refusal ?? 'no contact resistivity'} (${count > 1 ? `at ${count} corners, first at ` : ''}${where})` };
   }
   figured.worst_ohm_cm2 = top;
-  figured.worst_at = cornerWords(worst.reading!.point, named(surface, contact), temperatureWriter(surface.design), worst.effects);
+  figured.worst_at = words(worst);
   return figured;
 }
 
@@ -199,6 +214,11 @@ function rhoAt(surface: ContactSurface, contact: BarrierInput, found: WorstCase)
   if (found.reading === null) return null;
   const there = surface.at(contact, found.reading.point);
   return 'figures' in there && there.figures.rhoC !== null && Number.isFinite(there.figures.rhoC) ? there.figures.rhoC : null;
+}
+
+function blocksAt(surface: ContactSurface, contact: BarrierInput, point: Point): boolean {
+  const there = surface.at(contact, point);
+  return 'figures' in there && there.figures.blocks;
 }
 
 function run(study: Study, rows: readonly number[], temperatures: readonly number[], nominal: number): WorstCase[] {

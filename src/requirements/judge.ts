@@ -67,7 +67,8 @@ export function requirementResult(requirement: ReadRequirement, index: number, f
   const blank = unanswered[0];
   return {
     quantity, of, bound, unit, limit, over,
-    worst: figure === null ? null : kind === 'flag' ? figure > 0 : figure,
+    worst: figure === null || !Number.isFinite(figure) ? null : kind === 'flag' ? figure > 0 : figure,
+    blocks: figure === Infinity,
     at: reading === null ? null : {
       temperature_K: reading.point.temperature,
       tolerances: reading.point.counts.flatMap((count, i) => (count === 0 ? [] : [{ name: uncertainties[i].label, count, words: uncertainties[i].words(count) }])),

@@ -19,9 +19,10 @@ export function scoreOf(requirement: ReadRequirement, figure: number): number {
   return Math.max(-MOST, Math.min(MOST, requirement.bound === 'max' ? -log : log));
 }
 
-/** The margin as it is told: a ratio, or a difference in the quantity's `marginUnit`; null without end. */
+/** The margin as it is told: a ratio (0 where nothing is left of it), or a difference in the quantity's `marginUnit`; null without end. */
 export function marginOf(requirement: ReadRequirement, score: number): number | null {
   const { margin, step } = requirementQuantity(requirement.quantity);
   if (margin === 'difference') return score * step;
+  if (score <= -MOST) return 0;
   return score >= MOST ? null : Math.exp(score);
 }

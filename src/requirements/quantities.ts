@@ -3,17 +3,18 @@ import { profileAt } from '../../solver/profile.ts';
 import type { Stack } from '../../solver/index.ts';
 import { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
-import type { ContactResult, JunctionResult, LayerResult, Result } from '../result/types.ts';
+import type { Asked } from '../result/asked-result.ts';
+import type { ContactResult, JunctionResult, LayerResult } from '../result/types.ts';
 
 export { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantity, type RequirementQuantityName };
 
 /** What a figure is read from: the result, and the stack of which it is. */
 export interface Solved {
-  result: Pick<Result, 'layers' | 'junctions' | 'contacts' | 'profile' | 'conditions'>;
+  result: Asked;
   stack: Stack;
 }
 
-/** A figure in its result unit, or null where there is none. Of a flag: how far it holds (above zero) or fails (below), in the quantity's `marginUnit`. */
+/** A figure in its result unit, Infinity of a contact that blocks, or null where there is none. Of a flag: how far it holds (above zero) or fails (below), in the quantity's `marginUnit`. */
 type Reader = (solved: Solved, target: ReadRequirement['target']) => number | null;
 
 const layer = (read: (row: LayerResult, solved: Solved, index: number) => number | null): Reader => (solved, { index }) => {
@@ -31,7 +32,8 @@ const contact = (read: (row: ContactResult, solved: Solved) => number | null): R
 const DEGENERATE = 3;
 
 const READERS: Record<RequirementQuantityName, Reader> = {
-  contactResistivity: contact((c) => c.rho_c_ohm_cm2),
+  // What blocks is known: it is worse than every limit from above.
+  contactResistivity: contact((c) => (c.blocks ? Infinity : c.rho_c_ohm_cm2)),
   leakage: contact((c) => c.saturation_A_cm2),
   barrier: contact((c, solved) => (under(c, solved).p_cm3 > under(c, solved).n_cm3 ? c.barrier_p_eV : c.barrier_n_eV)),
   barrierN: contact((c) => c.barrier_n_eV),
@@ -65,7 +67,7 @@ const READERS: Record<RequirementQuantityName, Reader> = {
   valenceOffset: junction((j) => j.delta_ev_eV),
 };
 
-/** The figure that a requirement is about; null where the result has none. */
+/** The figure that a requirement is about; null where the result has none, Infinity of the resistivity of a contact that blocks. */
 export function figureOf(requirement: ReadRequirement, solved: Solved): number | null {
   const figure = READERS[requirement.quantity](solved, requirement.target);
   return figure === null || Number.isNaN(figure) ? null : figure;

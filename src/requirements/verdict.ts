@@ -15,19 +15,37 @@ export function requirementWords({ quantity, of, bound, limit, unit }: Pick<Requ
 }
 
 /** "2.5 times" or "0.12 eV"; of a requirement that is not met what is lacking, as a share of the limit or a negative difference. */
-export function marginWords({ margin, margin_kind, margin_unit, met }: RequirementResult): string {
+export function marginWords({ margin, margin_kind, margin_unit, met, blocks }: RequirementResult): string {
+  if (blocks) return met ? 'without end' : 'none, however high the limit';
   if (margin === null) return met ? 'without end' : 'none';
   return margin_kind === 'ratio' ? `${rounded(margin, 3)} times` : withUnit(margin, margin_unit, 3);
+}
+
+/** What a contact without a finite resistivity is said to do. */
+export const BLOCKS = 'blocks; no finite resistivity';
+
+/** The worst figure with its unit: "1.2e-7 ohm cm^2", "yes", "blocks; no finite resistivity"; null where there is none. */
+export function worstWords({ worst, unit, blocks }: Pick<RequirementResult, 'worst' | 'unit' | 'blocks'>, digits = 4): string | null {
+  if (blocks) return BLOCKS;
+  if (worst === null) return null;
+  return typeof worst === 'boolean' ? (worst ? 'yes' : 'no') : withUnit(worst, unit, digits);
+}
+
+/** "no answer at 3 points, first at -40 degC: ..."; null where every point has an answer. */
+export function unansweredWords({ unanswered }: Pick<RequirementResult, 'unanswered'>, of: readonly [string, string] = ['point', 'points']): string | null {
+  if (unanswered === null) return null;
+  const { points, words, reason } = unanswered;
+  return `no answer at ${points} ${of[points === 1 ? 0 : 1]}, ${points === 1 ? '' : 'first '}at ${words}: ${reason}`;
 }
 
 /** One line a requirement: verdict, limit, worst case and where it is, margin. */
 export function verdictLine(row: RequirementResult): string {
   const parts = [`${verdictWords(row).padEnd(9)}  ${requirementWords(row)}`];
-  if (row.worst !== null && row.at !== null) {
-    parts.push(`worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : withUnit(row.worst, row.unit)} at ${row.at.words}`, `margin ${marginWords(row)}`);
-  }
+  const worst = worstWords(row);
+  if (worst !== null && row.at !== null) parts.push(`worst ${worst} at ${row.at.words}`, `margin ${marginWords(row)}`);
   if (!row.corners_sufficed) parts.push('worse inside the ranges than at their corners');
-  if (row.unanswered !== null) parts.push(`no answer at ${row.unanswered.points} ${row.unanswered.points === 1 ? 'point' : 'points'}, first at ${row.unanswered.words}: ${row.unanswered.reason}`);
+  const blank = unansweredWords(row);
+  if (blank !== null) parts.push(blank);
   return onOneLine(parts.join('; '));
 }
 

@@ -24,7 +24,8 @@ export function resultOf(solution: Solution, title: string, provenance: Provenan
   };
 }
 
-function layerResult(f: LayerFigures, { stack }: Solution, l: number): LayerResult {
+/** One row each: of a layer, of a junction, of a contact. */
+export function layerResult(f: LayerFigures, { stack }: Pick<Solution, 'stack'>, l: number): LayerResult {
   const layer = stack.layers[l];
   const { material } = layer;
   const majority = f.type === 'p' || (f.type === 'i' && f.p > f.n) ? f.mobilityP : f.mobilityN;
@@ -62,7 +63,7 @@ function layerResult(f: LayerFigures, { stack }: Solution, l: number): LayerResu
   };
 }
 
-function junctionResult(f: JunctionFigures, { stack }: Solution): JunctionResult {
+export function junctionResult(f: JunctionFigures, { stack }: Pick<Solution, 'stack'>): JunctionResult {
   return {
     above: stack.layers[f.index].name,
     below: stack.layers[f.index + 1].name,
@@ -81,7 +82,7 @@ function junctionResult(f: JunctionFigures, { stack }: Solution): JunctionResult
   };
 }
 
-function contactResult(f: ContactFigures, { stack }: Solution): ContactResult {
+export function contactResult(f: ContactFigures, { stack }: Pick<Solution, 'stack'>): ContactResult {
   const boundary = stack[f.side];
   return {
     side: f.side,
@@ -103,6 +104,7 @@ function contactResult(f: ContactFigures, { stack }: Solution): ContactResult {
     rho_c_floor_ohm_cm2: finite(f.rhoCFloor),
     saturation_A_cm2: f.saturationCurrent,
     transmission: f.transmission,
+    blocks: f.blocks,
     rho_c_error: f.rhoError,
   };
 }

@@ -42,7 +42,7 @@ export const contactColumns: Column<ContactResult>[] = [
   { ...columnOf('contacts', 'barrierN'), usual: true, cell: (c) => decimals(c.barrier_n_eV) },
   { ...columnOf('contacts', 'barrierP'), usual: true, cell: (c) => decimals(c.barrier_p_eV) },
   { ...columnOf('contacts', 'source'), usual: true, cell: (c) => words(c.barrier_source === null ? '–' : SOURCE_WORDS[c.barrier_source]) },
-  { ...columnOf('contacts', 'rhoC'), usual: true, cell: (c) => figure(c.rho_c_ohm_cm2) },
+  { ...columnOf('contacts', 'rhoC'), usual: true, cell: (c) => (c.blocks ? { lines: ['blocks'], value: null, note: 'no finite resistivity' } : figure(c.rho_c_ohm_cm2)) },
   { ...columnOf('contacts', 'rhoCClosed'), usual: true, cell: closedForm },
   { ...columnOf('contacts', 'closedRatio'), usual: true, cell: (c) => figure(closedFormRatio(c)) },
   { ...columnOf('contacts', 'rhoCFloor'), usual: true, cell: (c) => figure(c.rho_c_floor_ohm_cm2) },

@@ -6,7 +6,8 @@ export interface RequirementResult {
   /** of `limit` and `worst`; empty for a pure number and for true or false */ unit: string;
   limit: number | boolean;
   over: 'temperature' | 'temperatureRange';
-  /** null where there was a figure nowhere */ worst: number | boolean | null;
+  /** null where there was a figure nowhere, and where `blocks` */ worst: number | boolean | null;
+  /** at the worst point the contact blocks: its resistivity is beyond every number, and misses every largest one */ blocks: boolean;
   /** where that is; tolerances that are not moved there are left out */ at: {
     temperature_K: number;
     /** `count` is in units of the whole tolerance, -1 to 1 */ tolerances: { name: string; count: number; words: string }[];

@@ -90,6 +90,7 @@ export interface ContactResult {
   /** the ballistic limit of the majority */ rho_c_floor_ohm_cm2: number | null;
   /** thermionic emission of the majority over the lowered barrier */ saturation_A_cm2: number | null;
   transmission: 'wkb' | 'kemble' | 'exact' | null;
+  /** what passes is too little for a finite number, and rho_c is null for that */ blocks: boolean;
   /** relative, of the integrals over energy and depth */ rho_c_error: number | null;
 }
 

@@ -2,7 +2,7 @@ import { ledgerTables, type LedgerTable } from '../result/ledger.ts';
 import { figureText } from '../result/figure-text.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import { writeNumber } from '../quantity/write-quantity.ts';
-import { marginWords, verdictWords } from '../requirements/verdict.ts';
+import { BLOCKS, marginWords, unansweredWords, verdictWords } from '../requirements/verdict.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
 import { heldTogether, printedUnits } from './lines.ts';
 import type { Cell, SheetTable } from './table.ts';
@@ -49,16 +49,16 @@ export function requirementTable(rows: readonly RequirementResult[], at: { tempe
       const limit = typeof row.limit === 'boolean' ? (row.limit ? 'must be' : 'must not be') : `${row.bound === 'max' ? '≤' : '≥'} ${printedUnits(writeNumber(row.limit, 6))}${unit}`;
       const remarks = [
         ...(row.corners_sufficed ? [] : ['worse inside the ranges than at their corners']),
-        ...(row.unanswered === null ? [] : [`no answer at ${row.unanswered.points} ${row.unanswered.points === 1 ? 'point' : 'points'}, first at ${printedUnits(row.unanswered.words)}: ${row.unanswered.reason}`]),
+        ...(row.unanswered === null ? [] : [printedUnits(unansweredWords(row) as string)]),
       ];
       return [[
         [{ text: heldTogether(words.replace(' - ', ' − ')) }],
         [{ text: row.of }],
         [{ text: limit }],
         [{ text: row.over === 'temperatureRange' && at.range !== null ? at.range : at.temperature }],
-        [{ text: row.worst === null ? '–' : value(row.worst) }],
+        [{ text: row.blocks ? BLOCKS : row.worst === null ? '–' : value(row.worst) }],
         [{ text: row.at === null ? '–' : printedUnits(row.at.words) }, ...remarks.map((text) => ({ text, faint: true }))],
-        [{ text: row.worst === null ? '–' : printedUnits(marginWords(row)) }],
+        [{ text: row.worst === null && !row.blocks ? '–' : printedUnits(marginWords(row)) }],
         [{ text: verdict.replace(' ', '\u00a0'), bold: true, trouble: verdict !== 'met' }],
       ]];
     }),

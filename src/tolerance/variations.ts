@@ -1,9 +1,8 @@
-import { isRefusal, solveStack, type Profiles, type Solution, type SolveOptions, type Stack } from '../../solver/index.ts';
+import { isRefusal, solveBands, type Profiles, type SolveOptions, type SolvedBands, type Stack } from '../../solver/index.ts';
 import type { Job } from '../batch/job.ts';
 import { scoreOf } from '../requirements/margin.ts';
 import { figureOf } from '../requirements/quantities.ts';
-import { resultOf } from '../result/from-solution.ts';
-import type { Result } from '../result/types.ts';
+import { askedResult, type Asked } from '../result/asked-result.ts';
 import { drawCounts, reachOf } from './draw.ts';
 import { MovedStacks } from './moved-stacks.ts';
 import type { VariationPlan } from './plan.ts';
@@ -22,7 +21,6 @@ export interface VariationRows {
 export const CHUNK = 32;
 /** Ends of a tolerance are solved finer, so that small effects can be told apart, V. */
 const FINE = 1e-5;
-const NO_PROVENANCE = { program: '', model: '', presets: '', design: '' } as const;
 
 /** The first chunk is the nominal design; one follows for each uncertainty, at both ends of its tolerance with the others nominal; then come the variations. */
 export interface ChunkOfVariations {
@@ -73,40 +71,33 @@ class VariationRunner {
   }
 
   #add(rows: VariationRows, index: number, counts: readonly number[], accuracy: number | undefined): void {
-    const { columns } = this.#plan;
-    const stack = this.#stacks.at(counts);
-    const solved = typeof stack === 'string' ? stack : this.#solve(stack, accuracy);
-    const requirements = columns.filter((c) => c.kind === 'requirement').length;
-    if (typeof solved === 'string') {
-      rows.gaps.push({ index, reason: solved });
+    const read = this.#read(counts, accuracy);
+    if (typeof read === 'string') {
+      const { columns } = this.#plan;
+      rows.gaps.push({ index, reason: read });
       for (let c = 0; c < columns.length; c++) rows.values.push(null);
-      for (let r = 0; r < requirements; r++) rows.met.push(-1);
+      for (const { kind } of columns) if (kind === 'requirement') rows.met.push(-1);
       return;
     }
-    for (const column of columns) {
-      if (column.kind === 'figure') {
-        rows.values.push(column.figure.read(solved[0].result));
-        continue;
-      }
-      const { requirement } = column;
-      let worst: { figure: number; score: number } | null = null;
-      let known = true;
-      for (const at of requirement.over === 'temperature' ? solved.slice(0, 1) : solved) {
-        const figure = figureOf(requirement, at);
-        if (figure === null) known = false;
-        else if (worst === null || scoreOf(requirement, figure) < worst.score) worst = { figure, score: scoreOf(requirement, figure) };
-      }
-      rows.values.push(known ? (worst?.figure ?? null) : null);
-      // One temperature at which it fails is enough to know.
-      rows.met.push(worst !== null && worst.score < 0 ? 0 : known ? 1 : -1);
-    }
+    rows.values.push(...read.values);
+    rows.met.push(...read.met);
+  }
+
+  /** The figures of one variation, or why it has none. */
+  #read(counts: readonly number[], accuracy: number | undefined): { values: (number | null)[]; met: number[] } | string {
+    const stack = this.#stacks.at(counts);
+    if (typeof stack === 'string') return stack;
+    return orReason(() => {
+      const solved = this.#solve(stack, accuracy);
+      return typeof solved === 'string' ? solved : figuresOf(this.#plan, solved);
+    });
   }
 
   /** At every temperature of the plan; or why there is none at one of them. */
   #solve(stack: Stack, accuracy: number | undefined): SolvedStack[] | string {
     const out: SolvedStack[] = [];
     for (const temperature of this.#plan.temperatures) {
-      const answer = solved({ ...stack, temperature }, { accuracy, contacts: this.#plan.conduction, warmStart: this.#nominal(temperature) });
+      const answer = solved({ ...stack, temperature }, { accuracy, warmStart: this.#nominal(temperature) });
       if (typeof answer === 'string') return answer;
       out.push(answer);
     }
@@ -116,7 +107,7 @@ class VariationRunner {
   #nominal(temperature: number): Profiles | undefined {
     const key = String(temperature);
     if (!this.#start.has(key)) {
-      const answer = solutionOf({ ...this.#plan.stack, temperature }, { contacts: false });
+      const answer = bandsOf({ ...this.#plan.stack, temperature }, {});
       this.#start.set(key, typeof answer === 'string' ? undefined : answer.profiles);
     }
     return this.#start.get(key);
@@ -124,34 +115,53 @@ class VariationRunner {
 }
 
 interface SolvedStack {
-  result: Result;
+  result: Asked;
   stack: Stack;
+}
+
+function figuresOf({ columns }: VariationPlan, solved: readonly SolvedStack[]): { values: (number | null)[]; met: number[] } {
+  const values: (number | null)[] = [];
+  const met: number[] = [];
+  for (const column of columns) {
+    if (column.kind === 'figure') {
+      values.push(column.figure.read(solved[0].result));
+      continue;
+    }
+    const { requirement } = column;
+    let worst: { figure: number; score: number } | null = null;
+    let known = true;
+    for (const at of requirement.over === 'temperature' ? solved.slice(0, 1) : solved) {
+      const figure = figureOf(requirement, at);
+      if (figure === null) known = false;
+      else if (worst === null || scoreOf(requirement, figure) < worst.score) worst = { figure, score: scoreOf(requirement, figure) };
+    }
+    // Of a contact that blocks the figure is beyond every number: known not to meet its limit, but in no spread.
+    values.push(known && worst !== null && Number.isFinite(worst.figure) ? worst.figure : null);
+    // One temperature at which it fails is enough to know.
+    met.push(worst !== null && worst.score < 0 ? 0 : known ? 1 : -1);
+  }
+  return { values, met };
 }
 
 /** From the profiles of a like stack, and afresh where that comes to nothing. */
 function solved(stack: Stack, options: SolveOptions): SolvedStack | string {
-  let answer = solutionOf(stack, options);
-  if (typeof answer === 'string' && options.warmStart !== undefined) answer = solutionOf(stack, { ...options, warmStart: undefined });
-  return typeof answer === 'string' ? answer : { result: resultOf({ ...answer, profiles: endsOf(answer.profiles) }, '', NO_PROVENANCE), stack };
+  let answer = bandsOf(stack, options);
+  if (typeof answer === 'string' && options.warmStart !== undefined) answer = bandsOf(stack, { ...options, warmStart: undefined });
+  return typeof answer === 'string' ? answer : { result: askedResult(answer), stack };
 }
 
-/** The first and the last node: no figure reads more of the profiles, and writing all of them takes as long as a tenth of the solution. */
-function endsOf(profiles: Profiles): Profiles {
-  const last = profiles.z.length - 1;
-  const ends = (column: Float64Array): Float64Array => Float64Array.of(column[0], column[last]);
-  const { z, ec, ev, psi, field, n, p, ionisedDonors, ionisedAcceptors, charge } = profiles;
-  return {
-    z: ends(z), layer: Int32Array.of(profiles.layer[0], profiles.layer[last]), ec: ends(ec), ev: ends(ev), psi: ends(psi), field: ends(field), n: ends(n), p: ends(p),
-    ionisedDonors: ends(ionisedDonors), ionisedAcceptors: ends(ionisedAcceptors), charge: ends(charge),
-  };
-}
-
-function solutionOf(stack: Stack, options: SolveOptions): Solution | string {
-  try {
-    const answer = solveStack(stack, options);
+function bandsOf(stack: Stack, options: SolveOptions): SolvedBands | string {
+  return orReason(() => {
+    const answer = solveBands(stack, options);
     return isRefusal(answer) ? `no accepted answer: ${answer.reason}` : answer;
+  });
+}
+
+/** What the solver refuses at its door, such as a gap that closes, is the reason of a gap. */
+function orReason<T>(work: () => T | string): T | string {
+  try {
+    return work();
   } catch (error) {
-    // What the solver refuses at its door, such as a gap that closes.
     if (!(error instanceof RangeError)) throw error;
     return error.message;
   }

@@ -40,7 +40,7 @@ export function inventedResult(names: [string, string, string] = ['n cap', 'barr
     boltzmann: { ec_minus_ef_eV: 0.09, n_cm3: 1e18, p_cm3: 1e2 }, nc_cm3: 2.8e19, nv_cm3: 2.5e19, kane_n_per_eV: 0, kane_p_per_eV: 0, ...values,
   });
   const contact = { barrier_n_eV: null, barrier_p_eV: null, barrier_source: null, lowering_eV: null, surface_field_V_cm: 0, e00_meV: null, transport: null, depletion_nm: null,
-    rho_c_ohm_cm2: null, rho_c_n_ohm_cm2: null, rho_c_p_ohm_cm2: null, rho_c_closed_form_ohm_cm2: null, closed_form: null, rho_c_floor_ohm_cm2: null, saturation_A_cm2: null, transmission: null, rho_c_error: null };
+    rho_c_ohm_cm2: null, rho_c_n_ohm_cm2: null, rho_c_p_ohm_cm2: null, rho_c_closed_form_ohm_cm2: null, closed_form: null, rho_c_floor_ohm_cm2: null, saturation_A_cm2: null, transmission: null, blocks: false, rho_c_error: null };
   const junction = {
     builtin_V: null, sheet_charge_cm2: 0, peak_field_V_cm: 1e5, depletion_above_nm: null, depletion_below_nm: null, depletion_approximation_above_nm: null, depletion_approximation_below_nm: null, capacitance_F_cm2: null,
   };

@@ -45,7 +45,7 @@ function toResult(s: Solution, title: string): Result {
         side: c.side, kind: c.kind, metal: boundary.kind === 'barrier' ? boundary.metal : null, barrier_n_eV: c.barrierN, barrier_p_eV: c.barrierP, barrier_source: c.barrierSource, lowering_eV: c.lowering, surface_field_V_cm: c.surfaceField,
         e00_meV: c.e00 === null ? null : 1000 * c.e00, transport: c.transport, depletion_nm: nm(c.depletion),
         rho_c_ohm_cm2: c.rhoC, rho_c_n_ohm_cm2: c.rhoCn, rho_c_p_ohm_cm2: c.rhoCp, rho_c_closed_form_ohm_cm2: c.rhoCClosedForm, closed_form: c.closedForm, rho_c_floor_ohm_cm2: c.rhoCFloor, saturation_A_cm2: c.saturationCurrent,
-        transmission: c.transmission, rho_c_error: c.rhoError,
+        transmission: c.transmission, blocks: c.blocks, rho_c_error: c.rhoError,
       };
     }),
     profile: {
