@@ -48,7 +48,7 @@ export class HmContactForm extends LitElement {
       ${select({ id: 'kind', label: 'kind of contact', value: contact.kind, options: KINDS, complaint: complaintsWithin(this.complaints, this.side, ['metal', 'barrier', 'pinning', 'level', 'sheetCharge', 'carrier'].map((k) => `${this.side}.${k}`))[0], onChoice: (kind) => this.edit(this.startOf(kind as ContactInput['kind']), 'kind') })}
       ${contact.kind === 'barrier' ? this.renderBarrier(contact) : nothing}
       ${contact.kind === 'pinned' ? this.field('level', 'Ec − EF at the surface', contact.level, 'eV', (level) => ({ kind: 'pinned', level })) : nothing}
-      ${contact.kind === 'open' ? this.field('sheetCharge', 'sheet charge, in units of +q', contact.sheetCharge ?? '', 'cm^-2', (text) => (text === '' ? { kind: 'open' } : { kind: 'open', sheetCharge: text }), 'none') : nothing}
+      ${contact.kind === 'open' ? this.field('sheetCharge', 'sheet charge (cm⁻² or C/m²)', contact.sheetCharge ?? '', '', (text) => (text === '' ? { kind: 'open' } : { kind: 'open', sheetCharge: text }), 'none') : nothing}
     </div>`;
   }
 

@@ -8,8 +8,9 @@ import { formLook } from '../shared/form-look.ts';
 import { look } from '../shared/look.ts';
 import '../hm-field/hm-field.ts';
 
+/** A bare number of a sheet charge gets no unit: charges per cm² and coulombs per m² are both usual, and lie 17 orders of magnitude apart. */
 const FIELDS: { key: Exclude<keyof InterfaceInput, 'above'>; label: string; unit: string; hint: string }[] = [
-  { key: 'sheetCharge', label: 'sheet charge, in units of +q', unit: 'cm^-2', hint: 'none' },
+  { key: 'sheetCharge', label: 'sheet charge (cm⁻² or C/m²)', unit: '', hint: 'none' },
   { key: 'dEc', label: 'ΔEc, below less above', unit: 'eV', hint: 'from the materials' },
   { key: 'dEv', label: 'ΔEv, below less above', unit: 'eV', hint: 'from the materials' },
 ];

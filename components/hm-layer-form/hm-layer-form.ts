@@ -132,7 +132,7 @@ export class HmLayerForm extends LitElement {
     const { dopants, changes } = carriedDopants(layer.dopants ?? [], layer.material, id, this.dopants);
     const choice = this.materials.find((m) => m.id === id);
     const x = choice?.alloy === undefined ? undefined : choice.alloy ? (layer.x ?? '0.3') : null;
-    if (changes.length > 0) tell(this, 'hm-say', { text: `In ${id}, ${changes.join(', ')}: the material knows no such dopant.` });
+    if (changes.length > 0) tell(this, 'hm-say', { text: `${layer.name} is ${id} now; ${changes.join(', ')}, since ${id} knows no such dopant. Undo brings back ${layer.material} with ${changes.length === 1 ? 'its dopant' : 'its dopants'}.` });
     this.edited(setMaterial(this.design, this.index, id, { x, dopants: layer.dopants === undefined ? undefined : dopants }), 'material');
   }
 

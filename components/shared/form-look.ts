@@ -17,6 +17,13 @@ export const controlLook = css`
     border-color: var(--trouble);
     border-width: 2px;
   }
+  .select:has([data-waits]) .label::after {
+    content: ' · Enter takes it';
+    color: var(--ink);
+  }
+  [data-waits] {
+    border-style: dashed;
+  }
   .complaint {
     color: var(--trouble);
     font-size: 0.8125rem;

@@ -1,4 +1,5 @@
 import { html, nothing, type TemplateResult } from 'lit';
+import { settledChoice } from './settled-choice.ts';
 
 export interface Option {
   value: string;
@@ -15,9 +16,10 @@ export interface SelectSettings {
   onChoice: (value: string) => void;
 }
 
-/** A labelled menu. A value that the menu does not know stays visible as such: nothing is changed unasked. */
+/** A labelled menu. A value that the menu does not know stays visible as such: nothing is changed unasked, and what arrows and letters pass through is not chosen. */
 export function select(s: SelectSettings): TemplateResult {
   const known = s.options.some((o) => o.value === s.value);
+  const { change, keydown, blur } = settledChoice(s.value, s.onChoice);
   const options = known ? s.options : [{ value: s.value, text: s.unknown ?? `${s.value} (unknown)` }, ...s.options];
   return html`<label class="select">
     <span class="label">${s.label}</span>
@@ -25,7 +27,10 @@ export function select(s: SelectSettings): TemplateResult {
       id=${s.id}
       aria-invalid=${s.complaint ? 'true' : nothing}
       aria-describedby=${s.complaint ? `${s.id}-complaint` : nothing}
-      @change=${(event: Event) => s.onChoice((event.target as HTMLSelectElement).value)}
+      aria-description="arrows and letters look, Enter or leaving takes, Escape goes back"
+      @change=${change}
+      @keydown=${keydown}
+      @blur=${blur}
     >
       ${options.map((o) => html`<option value=${o.value} .selected=${o.value === s.value}>${o.text}</option>`)}
     </select>

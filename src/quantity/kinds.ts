@@ -1,16 +1,19 @@
+import { ELEMENTARY_CHARGE } from '../../solver/constants.ts';
+
 /** The kinds of quantity that a design asks for, each with the solver's unit (solver/units.ts) and an example for the person. */
 export interface Kind {
   /** with its article: "a length" */ words: string;
   /** the solver's unit, in the notation that units.ts reads; empty for a pure number */ unit: string;
   /** what a person could type */ example: string;
   /** units that would fit, likeliest first */ units: readonly string[];
+  /** another quantity that stands for this one: its unit, how much of the solver's unit one of it is, an example */ also?: { unit: string; size: number; example: string };
 }
 
 export const KINDS = {
   length: { words: 'a length', unit: 'cm', example: '200 nm', units: ['nm', 'um', 'angstrom', 'mm', 'cm'] },
   energy: { words: 'an energy', unit: 'eV', example: '0.6 eV', units: ['eV', 'meV'] },
   density: { words: 'a concentration', unit: 'cm^-3', example: '5e17 cm^-3', units: ['cm^-3', 'm^-3'] },
-  sheetDensity: { words: 'a sheet density', unit: 'cm^-2', example: '1e12 cm^-2', units: ['cm^-2', 'm^-2'] },
+  sheetDensity: { words: 'a sheet density', unit: 'cm^-2', example: '1e12 cm^-2', units: ['cm^-2', 'm^-2'], also: { unit: 'C/cm^2', size: 1 / ELEMENTARY_CHARGE, example: '-0.034 C/m^2' } },
   temperature: { words: 'a temperature', unit: 'K', example: '300 K or 25 degC', units: ['K', 'degC'] },
   potential: { words: 'a voltage', unit: 'V', example: '0 V', units: ['V', 'mV'] },
   field: { words: 'a field', unit: 'V/cm', example: '3e5 V/cm', units: ['V/cm', 'kV/cm', 'MV/cm'] },

@@ -1,6 +1,6 @@
 import { didYouMean, quoted } from './wording.ts';
 import { evaluate, ExpressionError, NO_NAMES, type Scope } from './expression.ts';
-import { KINDS, type KindName } from './kinds.ts';
+import { KINDS, type Kind, type KindName } from './kinds.ts';
 import { normalise } from './normalise.ts';
 import { inUnit, UNIT_NAMES, type Value } from './units.ts';
 
@@ -13,13 +13,14 @@ export type Reading = { ok: true; value: number } | { ok: false; message: string
  * @returns      the value in the solver's unit of that kind (KINDS), finite; or a sentence with the mend
  */
 export function readQuantity(text: unknown, kind: KindName, scope: Scope = NO_NAMES): Reading {
-  const wanted = KINDS[kind];
+  const wanted: Kind = KINDS[kind];
+  const example = wanted.also === undefined ? `"${wanted.example}"` : `"${wanted.example}" or "${wanted.also.example}"`;
   const fail = (message: string): Reading => ({ ok: false, message });
   if (typeof text === 'number') {
-    if (kind !== 'number') return fail(`${text} has no unit; ${wanted.words} is wanted here, as text, such as "${wanted.example}"`);
+    if (kind !== 'number') return fail(`${text} has no unit; ${wanted.words} is wanted here, as text, such as ${example}`);
     return Number.isFinite(text) ? { ok: true, value: text } : fail(`${text} is no finite number`);
   }
-  if (typeof text !== 'string') return fail(`${quoted(text)} is no text; ${wanted.words} is wanted here, such as "${wanted.example}"`);
+  if (typeof text !== 'string') return fail(`${quoted(text)} is no text; ${wanted.words} is wanted here, such as ${example}`);
   const share = kind === 'number' ? /^\s*([-+]?(?:\d+\.?\d*|\.\d+)(?:[eE][-+]?\d+)?)\s*%\s*$/.exec(text) : null;
   if (share) return { ok: true, value: Number(share[1]) / 100 };
   // "25C" is a temperature where a temperature is asked for, a charge elsewhere.
@@ -35,10 +36,13 @@ export function readQuantity(text: unknown, kind: KindName, scope: Scope = NO_NA
   }
   const number = inUnit(value, wanted.unit);
   if (number !== null) return { ok: true, value: number };
-  if (typeof value === 'number') return fail(`${quoted(text)} has no unit; ${wanted.words} is wanted here, such as "${wanted.example}"`);
+  // A charge per area is as good as the number of charges on it.
+  const charge = wanted.also === undefined ? null : inUnit(value, wanted.also.unit);
+  if (charge !== null) return { ok: true, value: charge * wanted.also!.size };
+  if (typeof value === 'number') return fail(`${quoted(text)} has no unit; ${wanted.words} is wanted here, such as ${example}`);
   const other = kindOf(value);
   const found = other ? `is ${KINDS[other].words}, not ${wanted.words}` : `is not ${wanted.words}`;
-  return fail(`${quoted(text)} ${found}; ${wanted.unit === '' ? 'write it without a unit' : 'write it'} such as "${wanted.example}"`);
+  return fail(`${quoted(text)} ${found}; ${wanted.unit === '' ? 'write it without a unit' : 'write it'} such as ${example}`);
 }
 
 /** Powers of ten from a unit to the solver's unit of the kind. */

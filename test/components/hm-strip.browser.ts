@@ -304,10 +304,36 @@ describe('hm-strip', () => {
     expect(layer.material).to.equal('Si');
     const taken = menus().dopants.find((d) => d.host === 'Si' && d.id === layer.dopants[0].dopant)!;
     expect(taken.kind).to.equal('acceptor');
-    expect(said.at(-1)!.detail.text).to.equal(`In Si, C became ${taken.id}: the material knows no such dopant.`);
+    expect(said.at(-1)!.detail.text).to.equal(`channel is Si now; C became ${taken.id}, since Si knows no such dopant. Undo brings back GaAs with its dopant.`);
   });
 
-  it('edits an interface: a sheet charge gets its unit, an emptied field takes the row out', async () => {
+  it('takes what arrows and letters pass in a menu only by Enter or by leaving it, and Escape gives it up', async () => {
+    const { s, edits } = await strip({ chosen: { kind: 'layer', index: 3 } });
+    const menu = (): HTMLSelectElement => s.renderRoot.querySelector('hm-layer-form')!.renderRoot.querySelector<HTMLSelectElement>('#material')!;
+    const before = menu().value;
+    menu().focus();
+    await sendKeys({ press: 'ArrowDown' });
+    await sendKeys({ press: 'ArrowDown' });
+    expect(menu().value).not.to.equal(before);
+    expect(menu().hasAttribute('data-waits')).to.equal(true);
+    await sendKeys({ press: 'Escape' });
+    expect(menu().value).to.equal(before);
+    expect(edits).to.have.length(0);
+    await type('Si');
+    const passed = menu().value;
+    expect(passed).not.to.equal(before);
+    expect(edits).to.have.length(0);
+    await sendKeys({ press: 'Enter' });
+    await settled(s);
+    expect(edits.map(({ detail }) => detail.next.layers[3].material)).to.deep.equal([passed]);
+    await sendKeys({ press: 'ArrowDown' });
+    const next = menu().value;
+    menu().blur();
+    await settled(s);
+    expect(edits.map(({ detail }) => detail.next.layers[3].material)).to.deep.equal([passed, next]);
+  });
+
+  it('edits an interface: a sheet charge waits for its unit, an emptied field takes the row out', async () => {
     const { s, edits } = await strip({ chosen: { kind: 'layer', index: 1 } });
     column(s, 1).focus();
     await sendKeys({ press: 'ArrowDown' });
@@ -315,12 +341,12 @@ describe('hm-strip', () => {
     await settled(s);
     await settled(s);
     expect(innermost()!.id).to.equal('box');
-    await type('2e11');
+    await type('-0.23');
     await sendKeys({ press: 'Enter' });
     await settled(s);
-    expect(edits.at(-1)!.detail.next.interfaces).to.deep.equal([{ above: 'supply', sheetCharge: '2e11 cm^-2' }]);
+    expect(edits.at(-1)!.detail.next.interfaces).to.deep.equal([{ above: 'supply', sheetCharge: '-0.23' }]);
     expect([...s.renderRoot.querySelectorAll('.lane button')].filter((b) => b.textContent === '◆').length).to.equal(1);
-    const { input } = field(s, 'sheet charge, in units of +q');
+    const { input } = field(s, 'sheet charge (cm⁻² or C/m²)');
     input.focus();
     input.value = '';
     await sendKeys({ press: 'Enter' });

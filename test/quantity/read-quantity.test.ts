@@ -24,7 +24,7 @@ describe('reading a quantity', () => {
       ['5e17 cm^-3', 'density', 5e17], ['5e17 cm-3', 'density', 5e17], ['5e17 cm⁻³', 'density', 5e17], ['5e17/cm^3', 'density', 5e17], ['1e24 m^-3', 'density', 1e18],
       ['1.2 eV', 'energy', 1.2], ['45.5 meV', 'energy', 0.0455], ['77 K', 'temperature', 77], ['-40 degC', 'temperature', 233.15], ['25 °C', 'temperature', 298.15], ['25C', 'temperature', 298.15],
       ['112 A/(cm^2 K^2)', 'richardson', 112], ['1300 cm^2/(V s)', 'mobility', 1300], ['1300 cm2/(V s)', 'mobility', 1300], ['-0.034 C/m^2', 'chargeDensity', -3.4e-6], ['1e-6 ohm cm²', 'contactResistivity', 1e-6],
-      ['1 Ω mm²', 'contactResistivity', 0.01], ['3e5 V/cm', 'field', 3e5], ['4.73e-4 eV/K', 'energyPerKelvin', 4.73e-4], ['0.5 eV^-1', 'perEnergy', 0.5], ['10 %', 'number', 0.1], ['0.3', 'number', 0.3], ['−5e12 cm^-2', 'sheetDensity', -5e12],
+      ['1 Ω mm²', 'contactResistivity', 0.01], ['3e5 V/cm', 'field', 3e5], ['4.73e-4 eV/K', 'energyPerKelvin', 4.73e-4], ['0.5 eV^-1', 'perEnergy', 0.5], ['10 %', 'number', 0.1], ['0.3', 'number', 0.3], ['−5e12 cm^-2', 'sheetDensity', -5e12], ['-0.034 C/m^2', 'sheetDensity', -0.034 * 1e-4 / 1.602176634e-19],
       ['106 GPa', 'stiffness', 106], ['3.1e-8 eV cm', 'energyLength', 3.1e-8],
     ];
     for (const [text, kind, expected] of cases) expect(Math.abs(value(text, kind) / expected - 1), `${text} is ${value(text, kind)}`).toBeLessThan(1e-15);
@@ -60,6 +60,10 @@ describe('reading a quantity', () => {
     expect(message('5e17 cm^-2', 'density')).toContain("is a sheet density, not a concentration");
     expect(message('5 eV', 'length')).toContain('is an energy, not a length');
     expect(message('2*Ncpa', 'density', { Ncap: '1e19 cm^-3' })).toContain('did you mean Ncap?');
+  });
+
+  it('asks for the unit of a sheet charge that is a bare number, and names both that fit', () => {
+    expect(message('-0.23', 'sheetDensity')).toBe("'-0.23' has no unit; a sheet density is wanted here, such as \"1e12 cm^-2\" or \"-0.034 C/m^2\"");
   });
 
   it('runs nothing that is not arithmetic', () => {
