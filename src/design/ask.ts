@@ -9,6 +9,7 @@ export interface Bounds {
   /** in the solver's unit, with the words that the person reads */
   least?: [number, string];
   most?: [number, string];
+  /** what it bounds, with its article: "a thickness"; by default the kind's words */ of?: string;
   /** zero is refused as well as what lies below */ positive?: boolean;
 }
 
@@ -24,10 +25,10 @@ export class Asker {
     const reading = readQuantity(text, kind, this.scope);
     if (!reading.ok) return this.wrong(path, reading.message);
     const { value } = reading;
-    const words = KINDS[kind].words.replace(/^an? /, '');
-    if (bounds.positive && !(value > 0)) return this.wrong(path, `${quoted(text)} is not above zero; the ${words} must be positive`);
-    if (bounds.least && !(value >= bounds.least[0] * (1 - Math.sign(bounds.least[0]) * 1e-12))) return this.wrong(path, `${quoted(text)} is below ${bounds.least[1]}, the least that is taken here`);
-    if (bounds.most && !(value <= bounds.most[0] * (1 + Math.sign(bounds.most[0]) * 1e-12))) return this.wrong(path, `${quoted(text)} is above ${bounds.most[1]}, the most that is taken here`);
+    const refuse = (limit: string): number => this.wrong(path, `${capital(bounds.of ?? (kind === 'number' ? 'this' : KINDS[kind].words))} must be ${limit}; ${quoted(text)} was given`);
+    if (bounds.positive && !(value > 0)) return refuse('above zero');
+    if (bounds.least && !(value >= bounds.least[0] * (1 - Math.sign(bounds.least[0]) * 1e-12))) return refuse(`at least ${bounds.least[1]}`);
+    if (bounds.most && !(value <= bounds.most[0] * (1 + Math.sign(bounds.most[0]) * 1e-12))) return refuse(`at most ${bounds.most[1]}`);
     return value;
   }
 
@@ -40,4 +41,8 @@ export class Asker {
     this.complaints.push({ path, message });
     return NaN;
   }
+}
+
+function capital(words: string): string {
+  return words[0].toUpperCase() + words.slice(1);
 }

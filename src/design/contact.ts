@@ -17,8 +17,8 @@ export function readContact(input: ContactInput, side: 'top' | 'bottom', materia
   return source && { kind: 'barrier', source, metal: input.metal ?? null, imageForce: input.imageForce ?? true };
 }
 
-export const sheetBounds = { least: [-1e16, '-1e16 cm^-2'] as [number, string], most: [1e16, '1e16 cm^-2'] as [number, string] };
-const heightBounds = { least: [-10, '-10 eV'] as [number, string], most: [20, '20 eV'] as [number, string] };
+export const sheetBounds = { of: 'a sheet charge', least: [-1e16, '-1e16 cm^-2'] as [number, string], most: [1e16, '1e16 cm^-2'] as [number, string] };
+const heightBounds = { of: 'a height', least: [-10, '-10 eV'] as [number, string], most: [20, '20 eV'] as [number, string] };
 
 /** A height given outright wins; then, unless a pinning is asked for, a measured barrier of the pair; then the work function with the slope S. */
 function barrierSource(input: Extract<ContactInput, { kind: 'barrier' }>, side: 'top' | 'bottom', material: Material | null, catalogue: Catalogue, ask: Asker): Extract<Boundary, { kind: 'barrier' }>['source'] | null {

@@ -37,7 +37,7 @@ describe('a requirement', () => {
     expect(read({ quantity: 'sheetResistance', of: 'cap' })).toMatch(/^requirements\[0\]: has no limit/);
     expect(read({ quantity: 'sheetResistance', of: 'cap', max: '1 ohm cm' })).toMatch(/requirements\[0\]\.max: '1 ohm cm' is a resistivity, not a sheet resistance/);
     expect(read({ quantity: 'sheetResistance', of: 'cap', max: '100' })).toMatch(/has no unit/);
-    expect(read({ quantity: 'sheetResistance', of: 'cap', max: '0 ohm' })).toMatch(/not above zero/);
+    expect(read({ quantity: 'sheetResistance', of: 'cap', max: '0 ohm' })).toMatch(/must be above zero/);
     expect(read({ quantity: 'sheetResistance', of: 'cap', max: true })).toMatch(/is true, but sheetResistance is a figure/);
     expect(read({ quantity: 'barrier', of: 'top', max: '0.3 eV', min: '0.5 eV' })).toMatch(/"max" below its "min"/);
   });

@@ -82,10 +82,10 @@ describe('a value of the design’s own', () => {
     expect(complaint(GAAS, 'gap.zeroK', '')).toContain('empty');
     expect(complaint(GAAS, 'gap.zeroK', '20 nm')).toContain('is a length, not an energy');
     expect(complaint(GAAS, 'gap.zeroK', '1.6')).toContain('has no unit');
-    expect(complaint(GAAS, 'gap.zeroK', '40 eV')).toContain('above 30 eV');
-    expect(complaint(GAAS, 'permittivity', '0.5')).toContain('below 1');
-    expect(complaint(SILICON, 'degeneracy', '0')).toContain('not above zero');
-    expect(complaint(TI, 'workFunction', '-4 eV')).toContain('not above zero');
+    expect(complaint(GAAS, 'gap.zeroK', '40 eV')).toContain('at most 30 eV');
+    expect(complaint(GAAS, 'permittivity', '0.5')).toContain('at least 1');
+    expect(complaint(SILICON, 'degeneracy', '0')).toContain('must be above zero');
+    expect(complaint(TI, 'workFunction', '-4 eV')).toContain('must be above zero');
     expect(complaint(GAAS, 'gap.zeroK', '1.5 eV + Ncap * 0 eV cm^3')).toBe(null);
   });
 });

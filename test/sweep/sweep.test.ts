@@ -139,7 +139,7 @@ describe('a sweep', () => {
     expect(refusal({ to: '1e15 cm^-3' })).toMatch(/^to: .*empty sweep/);
     expect(refusal({ from: '0 cm^-3' })).toMatch(/^from: .*above zero/);
     expect(refusal({ from: '5 nm' })).toMatch(/^from: .*is a length, not a concentration/);
-    expect(refusal({ to: '1e25 cm^-3' })).toMatch(/^to: .*is above 1e23 cm\^-3/);
+    expect(refusal({ to: '1e25 cm^-3' })).toMatch(/^to: .*must be at most 1e23 cm\^-3/);
     expect(refusal({}, { figures: ['layers.drift.n_cm'] })).toMatch(/^figure: .*did you mean layers\.drift\.n_cm3\?/);
     expect(refusal({}, { figures: ['profile.z_nm'] })).toMatch(/^figure: there is no figure/);
     expect(refusal({}, { second: { ...doping } })).toMatch(/^second\.variable: /);

@@ -116,7 +116,7 @@ describe('a tolerance run', { timeout: 60_000 }, () => {
     design.layers[0].thickness = 'tcore';
     const { result } = await varied(planned(design, { count: 150, figures: ['layers.n.thickness_nm'] }));
     expect(result.gaps.length).toBeGreaterThan(0);
-    expect(result.gaps[0].reason).toMatch(/layers\[0\]\.thickness: .*below 0\.01 nm|not above zero/);
+    expect(result.gaps[0].reason).toMatch(/layers\[0\]\.thickness: .*must be (?:at least 0\.01 nm|above zero)/);
     expect(result.figures[0].known).toBe(150 - result.gaps.length);
     expect(result.yield!.of).toBe(150);
   });
