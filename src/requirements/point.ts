@@ -1,9 +1,9 @@
-import { isRefusal, solveStack, type Profiles, type Stack } from '../../solver/index.ts';
+import { isRefusal, solveBands, type Profiles, type Stack } from '../../solver/index.ts';
 import { complaintLine } from '../design/complaint.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
-import { resultOf } from '../result/from-solution.ts';
+import { askedResult } from '../result/asked-result.ts';
 import { scoreOf } from './margin.ts';
 import { figureOf } from './quantities.ts';
 import type { Uncertainty } from './uncertainties.ts';
@@ -21,8 +21,6 @@ export interface Reading {
   figures: readonly (number | null)[];
   /** why nothing was solved there */ refusal: string | null;
 }
-
-const NO_PROVENANCE = { program: '', model: '', presets: '', design: '' } as const;
 
 /** Accepted estimate of the mesh error in psi, V: 4e-4 of kT at 300 K, so that corners can be told apart. */
 const ACCURACY = 1e-5;
@@ -67,21 +65,20 @@ export class PointSolver {
     const refused = (refusal: string): Reading => ({ point, scores: nothing, figures: nothing, refusal });
     const stack = this.#stackAt(point);
     if (typeof stack === 'string') return refused(stack);
-    let solution;
     try {
-      solution = solveStack(stack, { accuracy: ACCURACY, ...(this.#start ? { warmStart: this.#start } : {}) });
+      let bands = solveBands(stack, { accuracy: ACCURACY, ...(this.#start ? { warmStart: this.#start } : {}) });
       // A start from far away must not cost an answer.
-      if (isRefusal(solution) && this.#start) solution = solveStack(stack, { accuracy: ACCURACY });
+      if (isRefusal(bands) && this.#start) bands = solveBands(stack, { accuracy: ACCURACY });
+      if (isRefusal(bands)) return refused(bands.reason);
+      this.#start ??= bands.profiles;
+      const solved = { result: askedResult(bands), stack };
+      const figures = this.requirements.map((r) => figureOf(r, solved));
+      return { point, figures, scores: figures.map((f, r) => (f === null ? null : scoreOf(this.requirements[r], f))), refusal: null };
     } catch (error) {
       // What the solver refuses at its door, such as a gap that closes at this temperature.
       if (!(error instanceof RangeError)) throw error;
       return refused(error.message);
     }
-    if (isRefusal(solution)) return refused(solution.reason);
-    this.#start ??= solution.profiles;
-    const solved = { result: resultOf(solution, '', NO_PROVENANCE), stack };
-    const figures = this.requirements.map((r) => figureOf(r, solved));
-    return { point, figures, scores: figures.map((f, r) => (f === null ? null : scoreOf(this.requirements[r], f))), refusal: null };
   }
 
   /** The stack of a point, or what is wrong with the design there (a composition beyond 1). */

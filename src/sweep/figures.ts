@@ -3,13 +3,16 @@ import type { Complaint } from '../design/complaint.ts';
 import type { Design } from '../design/types.ts';
 import type { Result } from '../result/types.ts';
 
+/** The rows of a result that figures are read from. */
+export type FigureRows = Pick<Result, 'layers' | 'junctions' | 'contacts'>;
+
 /** A number of a result, by its path. */
 export interface Figure {
   /** "layers.cap.sheet_ohm", "junctions.0.builtin_V", "contacts.top.barrier_n_eV" */ path: string;
   /** "cap: sheet resistance" */ words: string;
   /** '' for a pure number */ unit: string;
   /** a figure that spans decades: its axis is logarithmic */ log: boolean;
-  /** null where it does not apply, or where the solver does not stand behind one */ read(result: Result): number | null;
+  /** null where it does not apply, or where the solver does not stand behind one */ read(result: FigureRows): number | null;
 }
 
 interface Field {
@@ -79,7 +82,7 @@ const CONTACT_FIELDS: readonly Field[] = [
 
 const CONTACTS = ['top', 'bottom'] as const;
 
-function figure(path: string, place: string, field: Field, holder: (result: Result) => unknown): Figure {
+function figure(path: string, place: string, field: Field, holder: (result: FigureRows) => unknown): Figure {
   const keys = field.key.split('.');
   return { path: `${path}.${field.key}`, words: `${place}: ${field.words}`, unit: field.unit, log: field.log ?? false, read: (result) => numberAt(holder(result), keys) };
 }
@@ -99,7 +102,7 @@ function numberAt(at: unknown, keys: readonly string[]): number | null {
  */
 export function figuresOf(design: Design, which: 'all' | 'usual' = 'all'): Figure[] {
   const out: Figure[] = [];
-  const add = (fields: readonly Field[], path: string, place: string, holder: (result: Result) => unknown): void => {
+  const add = (fields: readonly Field[], path: string, place: string, holder: (result: FigureRows) => unknown): void => {
     for (const field of fields) if (which === 'all' || field.usual) out.push(figure(path, place, field, holder));
   };
   design.layers.forEach((layer, l) => {

@@ -29,7 +29,6 @@ export interface VariationPlan {
   stack: Stack;
   uncertainties: Uncertainty[];
   columns: VariedFigure[];
-  /** some column asks how a contact conducts, which takes a third of the time */ conduction: boolean;
   /** K: the design's own first, then the ends of its range where a requirement is held over it */ temperatures: number[];
 }
 
@@ -54,12 +53,7 @@ export function planVariations(design: Design, request: VariationRequest): { ok:
     ...figures.figures.map((figure): VariedFigure => ({ kind: 'figure', figure })),
     ...requirements.map((requirement): VariedFigure => ({ kind: 'requirement', requirement, ...requirementText(requirement) })),
   ];
-  return { ok: true, plan: { design, request: { ...request, distribution }, set, stack, uncertainties, columns, conduction: columns.some(asksConduction), temperatures: [...new Set([stack.temperature, ...ends])] } };
-}
-
-function asksConduction(column: VariedFigure): boolean {
-  if (column.kind === 'requirement') return ['contactResistivity', 'leakage'].includes(column.requirement.quantity);
-  return /^contacts\..*\.(?:rho_c|saturation)/.test(column.figure.path);
+  return { ok: true, plan: { design, request: { ...request, distribution }, set, stack, uncertainties, columns, temperatures: [...new Set([stack.temperature, ...ends])] } };
 }
 
 function requirementText(r: ReadRequirement): { words: string; unit: string } {
