@@ -5,7 +5,7 @@ export interface NewtonResult {
   converged: boolean;
   updates: number;
   /** V */ lastUpdate: number;
-  reason: 'small update' | 'singular matrix' | 'no progress' | 'too many updates' | 'not finite';
+  reason: 'small update' | 'singular matrix' | 'no progress' | 'too many updates' | 'not finite' | 'work exhausted';
 }
 
 const MOST_UPDATES = 200;
@@ -39,6 +39,7 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
   let convex = false;
   if (!evaluated) system.evaluate(psi, true);
   while (updates < MOST_UPDATES) {
+    if (system.work.exhausted) return { converged: false, updates, lastUpdate, reason: 'work exhausted' };
     if (!system.factor()) return { converged: false, updates, lastUpdate, reason: 'singular matrix' };
     for (let i = 0; i < n; i++) step[i] = -system.residual[i];
     system.solve(step);

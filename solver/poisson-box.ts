@@ -6,6 +6,7 @@ import { setEnds } from './poisson-guess.ts';
 import { profilesOf } from './poisson-profiles.ts';
 import { PoissonSystem, type PoissonProblem } from './poisson-system.ts';
 import type { PoissonGoal, PoissonSolution, PoissonStart } from './poisson.ts';
+import { PoissonWork } from './poisson-work.ts';
 import type { Quality, Refusal } from './solution.ts';
 
 /** Halving a mesh cuts the box scheme's error to a quarter; a third of the difference is then the finer one's error. */
@@ -13,8 +14,6 @@ const RICHARDSON = 1 / 3;
 /** One such estimate can be optimistic on graded meshes, so it is quoted four times as large. */
 const SAFETY = 4;
 const MOST_ROUNDS = 14;
-/** Newton updates times nodes that one answer may cost, some two seconds: beyond it the answer is refused, so that nothing hangs. */
-const MOST_WORK = 3e6;
 
 /**
  * The box scheme, for where the compact one does not settle: alternates a solution on the mesh and on its halved copy; their
@@ -22,26 +21,24 @@ const MOST_WORK = 3e6;
  *
  * @param start    mesh and potential to begin with; the potential is changed in place
  * @param updates  Newton updates already spent, for the count in the quality
+ * @param work     what is spent already, and how much may be
  */
-export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: PoissonGoal, updates: number): PoissonSolution | Refusal {
+export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: PoissonGoal, updates: number, work: PoissonWork = new PoissonWork()): PoissonSolution | Refusal {
   const { accuracy, maxNodes } = goal;
   let { mesh: coarse, psi } = start;
   let threshold = Infinity;
   let quality: Quality | null = null;
-  let work = 0;
   for (let round = 0; round < MOST_ROUNDS; round++) {
-    const system = new PoissonSystem(problem, coarse);
+    const system = new PoissonSystem(problem, coarse, 'box', work);
     let run: NewtonResult = newton(system, psi);
     updates += run.updates;
-    work += run.updates * coarse.nodes;
-    if (!run.converged) return refuse(run, updates, coarse.nodes, quality);
+    if (!run.converged) return refuse(run, updates, coarse.nodes, quality, work);
     const fine = halved(coarse);
     const finePsi = interpolated(coarse, psi, fine);
-    const fineSystem = new PoissonSystem(problem, fine);
+    const fineSystem = new PoissonSystem(problem, fine, 'box', work);
     run = newton(fineSystem, finePsi);
     updates += run.updates;
-    work += run.updates * fine.nodes;
-    if (!run.converged) return refuse(run, updates, fine.nodes, quality);
+    if (!run.converged) return refuse(run, updates, fine.nodes, quality, work);
     let difference = 0;
     for (let l = 0; l < coarse.local.length; l++) {
       for (let k = 0; k < coarse.local[l].length; k++) {
@@ -54,6 +51,7 @@ export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: P
       converged: true,
       newtonUpdates: updates,
       lastUpdate: run.lastUpdate,
+      looks: work.spent,
       meshNodes: fine.nodes,
       meshError,
       gaussError: gaussError(fineSystem, finePsi),
@@ -68,7 +66,7 @@ export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: P
     }
     const refined = refinement(fineSystem, coarse, fine, accuracy, meshError, threshold);
     threshold = refined.threshold;
-    if (refined.mesh.nodes * 2 > maxNodes || work > MOST_WORK) {
+    if (refined.mesh.nodes * 2 > maxNodes) {
       return { refused: true, reason: `the estimated mesh error ${meshError.toExponential(1)} V stays above ${accuracy} V with ${fine.nodes} nodes`, quality };
     }
     psi = interpolated(fine, finePsi, refined.mesh);
@@ -78,12 +76,18 @@ export function solveByBox(problem: PoissonProblem, start: PoissonStart, goal: P
   return { refused: true, reason: quality ? (refusalReason(quality, accuracy) ?? 'the mesh did not settle') : 'the mesh did not settle', quality };
 }
 
-function refuse(run: NewtonResult, updates: number, nodes: number, earlier: Quality | null): Refusal {
-  const reason =
-    run.reason === 'singular matrix'
-      ? 'nothing fixes the potential: neither a contact nor a carrier is there to hold it; give one end a contact'
-      : `Newton's iteration did not settle: ${run.reason} after ${updates} updates (last update ${run.lastUpdate.toExponential(1)} V)`;
-  return { refused: true, reason, quality: earlier ?? { converged: false, newtonUpdates: updates, lastUpdate: run.lastUpdate, meshNodes: nodes, meshError: Infinity, gaussError: Infinity, method: 'box' } };
+function refuse(run: NewtonResult, updates: number, nodes: number, earlier: Quality | null, work: PoissonWork): Refusal {
+  const quality = earlier ?? { converged: false, newtonUpdates: updates, lastUpdate: run.lastUpdate, looks: work.spent, meshNodes: nodes, meshError: Infinity, gaussError: Infinity, method: 'box' };
+  return { refused: true, reason: reasonOf(run, updates, earlier, work), quality: { ...quality, looks: work.spent } };
+}
+
+function reasonOf(run: NewtonResult, updates: number, earlier: Quality | null, work: PoissonWork): string {
+  if (run.reason === 'singular matrix') return 'nothing fixes the potential: neither a contact nor a carrier is there to hold it; give one end a contact';
+  if (run.reason === 'work exhausted') {
+    const reached = earlier ? `, when the estimated mesh error was ${earlier.meshError.toExponential(1)} V with ${earlier.meshNodes} nodes` : '';
+    return `the answer was given up after ${work.spent} looks at mesh nodes, the most that are spent on one${reached}; a larger accepted error or fewer layers would need less`;
+  }
+  return `Newton's iteration did not settle: ${run.reason} after ${updates} updates (last update ${run.lastUpdate.toExponential(1)} V)`;
 }
 
 /**

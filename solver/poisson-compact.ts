@@ -6,6 +6,7 @@ import { profilesOf } from './poisson-profiles.ts';
 import { bent, equidistributed, rowErrors } from './poisson-remesh.ts';
 import { PoissonSystem, type PoissonProblem } from './poisson-system.ts';
 import type { PoissonGoal, PoissonSolution, PoissonStart } from './poisson.ts';
+import type { PoissonWork } from './poisson-work.ts';
 import { ACCEPTANCE, refusalReason } from './quality.ts';
 import type { Quality } from './solution.ts';
 
@@ -47,13 +48,13 @@ interface Halved {
  * @param start  mesh and potential to begin with; the potential is changed in place
  * @returns no solution where Newton's iteration or the meshes do not settle: the box scheme's turn
  */
-export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goal: PoissonGoal): { solution: PoissonSolution | null; updates: number } {
+export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goal: PoissonGoal, work: PoissonWork): { solution: PoissonSolution | null; updates: number } {
   let { mesh, psi } = start;
   let updates = 0;
   let target = COARSE_SHARE * goal.accuracy;
   let share = ROW_SHARE;
   const solve = (on: Mesh, values: Float64Array, scheme: 'compact' | 'box', tolerance: number): Solved | null => {
-    const system = new PoissonSystem(problem, on, scheme);
+    const system = new PoissonSystem(problem, on, scheme, work);
     system.chooseRows(values, false);
     let run = newton(system, values, true, tolerance);
     updates += run.updates;
@@ -94,6 +95,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
       converged: true,
       newtonUpdates: updates,
       lastUpdate: fine.run.lastUpdate,
+      looks: work.spent,
       meshNodes: to.nodes,
       meshError,
       gaussError: gaussError(fine.system, finePsi),

@@ -4,14 +4,15 @@ import { neutralLevel } from './fermi-level.ts';
 import { gradedLayer, meshOf, type Mesh } from './mesh.ts';
 import { PoissonSystem, type PoissonLayer, type PoissonProblem } from './poisson-system.ts';
 import type { PoissonStart } from './poisson.ts';
+import type { PoissonWork } from './poisson-work.ts';
 import type { Landmark } from './profile.ts';
 
 /** Local neutrality on a coarse mesh. */
-export function coldStart(problem: PoissonProblem): PoissonStart {
+export function coldStart(problem: PoissonProblem, work?: PoissonWork): PoissonStart {
   const mesh = meshOf(problem.layers.map(firstLayerMesh));
   const psi = neutralGuess(problem, mesh);
   setEnds(problem, psi);
-  shiftToBalance(problem, mesh, psi);
+  shiftToBalance(problem, mesh, psi, work);
   return { mesh, psi, warm: false };
 }
 
@@ -91,9 +92,9 @@ export function setEnds(problem: PoissonProblem, psi: Float64Array): void {
  * With both ends open the carriers alone fix the level: shifts the guess evenly until the whole stack is neutral. The total falls with
  * psi, so bisection finds the place even where frozen layers leave Newton no slope.
  */
-function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array): void {
+function shiftToBalance(problem: PoissonProblem, mesh: Mesh, psi: Float64Array, work?: PoissonWork): void {
   if (problem.top.kind === 'potential' || problem.bottom.kind === 'potential') return;
-  const system = new PoissonSystem(problem, mesh);
+  const system = new PoissonSystem(problem, mesh, 'box', work);
   const start = Float64Array.from(psi);
   const total = (shift: number): number => {
     for (let i = 0; i < psi.length; i++) psi[i] = start[i] + shift;

@@ -2,6 +2,7 @@ import { chargeAt, type ChargeValues, type LocalCharge } from './charge.ts';
 import { ELEMENTARY_CHARGE } from './constants.ts';
 import type { Mesh } from './mesh.ts';
 import { compactDefects, compactEnd, compactRow } from './poisson-weights.ts';
+import { PoissonWork } from './poisson-work.ts';
 import type { Landmark } from './profile.ts';
 import { TridiagonalFactors } from './tridiagonal.ts';
 
@@ -66,6 +67,7 @@ export class PoissonSystem {
   readonly weights: Float64Array;
   /** rows of sides that are of the box scheme [sides] */
   readonly lumped: Uint8Array;
+  readonly work: PoissonWork;
   private readonly lower: Float64Array;
   private readonly diagonal: Float64Array;
   private readonly upper: Float64Array;
@@ -76,13 +78,16 @@ export class PoissonSystem {
   private readonly problem: PoissonProblem;
   private readonly out: ChargeValues = { n: 0, p: 0, donors: 0, acceptors: 0, net: 0, slope: 0 };
 
-  constructor(problem: PoissonProblem, mesh: Mesh, scheme: 'compact' | 'box' = 'box') {
+  /** @param work  where its cost is counted */
+  constructor(problem: PoissonProblem, mesh: Mesh, scheme: 'compact' | 'box' = 'box', work: PoissonWork = new PoissonWork()) {
     this.problem = problem;
+    this.work = work;
     this.mesh = mesh;
     this.scheme = scheme;
     const n = mesh.nodes;
     const layers = mesh.local.length;
     const sides = n + layers - 1;
+    work.spent += sides;
     // One piece of memory for all: twenty small ones cost more than the arithmetic on them.
     const memory = new Float64Array(5 * n + 9 * sides + 2 * layers);
     let used = 0;
@@ -205,6 +210,7 @@ export class PoissonSystem {
 
   private charge(psi: Float64Array): void {
     const { mesh, density, slope, ecFlat, charges, out } = this;
+    this.work.spent += charges.length;
     const q = ELEMENTARY_CHARGE;
     for (let l = 0; l < mesh.local.length; l++) {
       const from = mesh.first[l] + l;

@@ -3,6 +3,7 @@ import { solveByBox } from './poisson-box.ts';
 import { solveByCompact } from './poisson-compact.ts';
 import { coldStart, setEnds } from './poisson-guess.ts';
 import type { PoissonLayer, PoissonProblem } from './poisson-system.ts';
+import { PoissonWork } from './poisson-work.ts';
 import { ACCEPTANCE } from './quality.ts';
 import type { Profiles, Quality, Refusal } from './solution.ts';
 import type { SolveOptions } from './stack.ts';
@@ -39,16 +40,17 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
   const problem: PoissonProblem = { ...given, layers: given.layers.map(askedOnce) };
   const goal: PoissonGoal = { accuracy: options.accuracy ?? ACCEPTANCE.meshError, maxNodes: options.maxNodes ?? 40000 };
   const warm = options.warmStart ? warmStart(problem, options.warmStart) : null;
+  const work = new PoissonWork();
   let updates = 0;
   for (const first of warm ? [warm, null] : [null]) {
-    const compact = solveByCompact(problem, first ?? coldStart(problem), goal);
+    const compact = solveByCompact(problem, first ?? coldStart(problem, work), goal, work);
     updates += compact.updates;
     if (compact.solution) {
       compact.solution.quality.newtonUpdates = updates;
       return compact.solution;
     }
   }
-  return solveByBox(problem, coldStart(problem), goal, updates);
+  return solveByBox(problem, coldStart(problem, work), goal, updates, work);
 }
 
 /** A uniform layer's functions, asked once and remembered. */
