@@ -10,6 +10,8 @@ import type { RunJob } from '../../src/workers/job-client.ts';
 import { JobController } from '../hm-desk/job-controller.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { panelLook, verdictLook } from '../shared/panel-look.ts';
+import { sortedTableLook, tableLook } from '../shared/table-look.ts';
 import { resistivitySpan, spanScale, type SpanScale } from './resistivity-span.ts';
 import { styles } from './hm-metals.styles.ts';
 
@@ -38,7 +40,7 @@ interface Shown {
  * @fires hm-say
  */
 export class HmMetals extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, verdictLook, tableLook, sortedTableLook, styles];
   static override properties = {
     design: { attribute: false },
     view: { attribute: false },
@@ -74,7 +76,7 @@ export class HmMetals extends LitElement {
     const [row] = value.value.rows;
     if (row === undefined) return;
     this.rivals = new Map([...this.rivals, [row.metal, row]]);
-    tell(this, 'hm-say', { text: `${row.metal} with ${decimalText(majorityBarrier(row, value.value.majority))} eV: worst ${row.worst_ohm_cm2 === null ? 'not known' : `${figureText(row.worst_ohm_cm2)} ohm cm²`}.` });
+    tell(this, 'hm-say', { text: `${row.metal} with ${decimalText(majorityBarrier(row, value.value.majority))} eV: worst ${row.blocks !== null ? 'without a finite resistivity' : row.worst_ohm_cm2 === null ? 'not known' : `${figureText(row.worst_ohm_cm2)} ohm cm²`}.` });
   }
 
   private get side(): Side {
@@ -194,14 +196,14 @@ export class HmMetals extends LitElement {
     const acts = html`<td class="figure">${row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`}</td>`;
     const values = row.values.length === 0 ? nothing : html`<button type="button" class="plain" aria-expanded=${open} aria-controls=${open ? 'values-open' : nothing} @click=${() => (this.open = open ? null : row.metal)}>${row.values.length} ${row.values.length === 1 ? 'value' : 'values'}<span class="spoken"> of ${row.metal}</span> ${open ? '▾' : '▸'}</button>`;
     const main = row.rho_c_ohm_cm2 === null
-      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${decimalText(majorityBarrier(row, majority))}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5"><span class="faint">No figure: ${row.reason}.</span></td>${acts}</tr>`
+      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${decimalText(majorityBarrier(row, majority))}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5">${row.blocks === null ? html`<span class="faint">No figure: ${row.reason}.</span>` : html`<span class="not-met">${row.reason}</span>`}</td>${acts}</tr>`
       : html`<tr class=${present ? 'present' : ''}>
           ${name}
           <td class="figure">${decimalText(majorityBarrier(row, majority))}</td>
           <td>${value === null ? '–' : valueWords(value)} ${values}</td>
           <td class="figure">${figureText(row.rho_c_ohm_cm2)}</td>
           <td class="figure">${bandWords(row)}</td>
-          <td class="figure"><span class=${limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${figureText(row.worst_ohm_cm2)}</span><span class="note at">${row.worst_at ?? row.reason}</span></td>
+          <td class="figure"><span class=${row.blocks !== null ? 'not-met' : limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks'}</span><span class="note at">${row.blocks === null ? '' : 'no finite resistivity, '}${row.worst_at ?? row.reason}</span></td>
           <td>${scale === null ? nothing : resistivitySpan(row, scale, limit)}</td>
           <td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : `E00/kT ${figureText(row.e00_over_kT, 2)}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>
           ${acts}

@@ -24,7 +24,7 @@ export const styles = css`
     align-items: baseline;
     gap: 0.3rem 0.4rem;
     min-width: 0;
-    --field-width: 7.5rem;
+    --field-width: 9.5rem;
   }
   .number {
     min-width: 1.2em;

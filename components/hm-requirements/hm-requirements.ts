@@ -3,13 +3,14 @@ import type { Complaint } from '../../src/design/complaint.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../../src/design/requirement-quantities.ts';
 import type { Design, Requirement } from '../../src/design/types.ts';
 import { quantityOf, quantityWords } from '../../src/requirements/limits.ts';
-import { marginWords, verdictWords } from '../../src/requirements/verdict.ts';
+import { standingWords, verdictWords, worstWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
-import { writeNumber } from '../../src/quantity/write-quantity.ts';
 import { addRequirement, removeRequirement, setRequirement, setRequirementQuantity } from '../../src/state/commands/index.ts';
 import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import { panelLook } from '../shared/panel-look.ts';
+import { settledChoice } from '../shared/settled-choice.ts';
 import '../hm-field/hm-field.ts';
 import { TURNS, boundsOf, firstLimit, fitting, marginShare, quantityGroups, targetsOf, turned } from './requirement-parts.ts';
 import { styles } from './hm-requirements.styles.ts';
@@ -25,6 +26,10 @@ export interface Verdicts {
 
 export const NO_VERDICTS: Verdicts = { status: 'initial', rows: [], stale: false, progress: null, reason: null };
 
+function overRange({ over: _, ...rest }: Requirement, ranges: boolean): Requirement {
+  return ranges ? { ...rest, over: 'temperatureRange' } : rest;
+}
+
 /** A figure and its unit stay on one line. */
 const unbroken = (words: string): string => words.replace(/(\d) (?=%|[a-zA-Zµ])/g, '$1\u00a0');
 
@@ -39,7 +44,7 @@ const value = (event: Event): string => (event.target as HTMLSelectElement).valu
  * @fires hm-act   'judge-stop', 'judge-again'
  */
 export class HmRequirements extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, panelLook, styles];
   static override properties = { design: { attribute: false }, complaints: { attribute: false }, verdicts: { attribute: false }, draft: { state: true } };
 
   declare design: Design | null;
@@ -57,6 +62,9 @@ export class HmRequirements extends LitElement {
 
   protected override willUpdate(changed: PropertyValues<this>): void {
     if (!changed.has('design') || this.design === null) return;
+    // What a design is to bear belongs to its whole temperature range, once it has one.
+    const ranges = (design: Design | null | undefined): boolean => design?.conditions.temperatureRange !== undefined;
+    if (ranges(this.design) !== ranges(changed.get('design'))) this.draft = overRange(this.draft, ranges(this.design));
     // The layer that it was for may have gone or have another name.
     const { draft } = this;
     const targets = targetsOf(this.design, draft.quantity as RequirementQuantityName);
@@ -140,7 +148,8 @@ export class HmRequirements extends LitElement {
 
   private renderQuantity(requirement: Requirement, choose: (quantity: RequirementQuantityName) => void): TemplateResult {
     const known = quantityOf(requirement.quantity) !== null;
-    return html`<select aria-label="Quantity" @change=${(e: Event) => choose(value(e) as RequirementQuantityName)}>
+    const { change, keydown, blur } = settledChoice(requirement.quantity, (name) => choose(name as RequirementQuantityName));
+    return html`<select aria-label="Quantity" @change=${change} @keydown=${keydown} @blur=${blur}>
       ${known ? nothing : html`<option .value=${requirement.quantity} selected>${requirement.quantity} (unknown)</option>`}
       ${quantityGroups().map(
         ({ of, quantities }) => html`<optgroup label="of a ${of}">${quantities.map(({ name, words }) => html`<option value=${name} .selected=${name === requirement.quantity}>${words}</option>`)}</optgroup>`,
@@ -182,11 +191,12 @@ export class HmRequirements extends LitElement {
   private renderVerdict(row: RequirementResult, named: boolean): TemplateResult {
     const verdict = verdictWords(row);
     const share = marginShare(row);
-    const worst = row.worst === null || row.at === null ? '' : `worst ${typeof row.worst === 'boolean' ? (row.worst ? 'yes' : 'no') : `${writeNumber(row.worst, 3)} ${row.unit}`.trim()} at ${row.at.words}`;
+    const figure = worstWords(row, 3);
+    const worst = figure === null || row.at === null ? '' : `worst ${figure} at ${row.at.words}`;
     const points = row.unanswered?.points ?? 0;
     return html`<div class="verdict ${verdict.replace(' ', '-')}">
       ${share === null ? html`<span class="bar"></span>` : html`<svg class="bar" viewBox="-51 0 102 12" width="102" height="12" aria-hidden="true">${svg`<path d="M-50 6H50M-50 3V9M50 3V9" stroke="currentColor" fill="none" opacity="0.5"></path><rect x=${Math.min(0, 50 * share)} y="3" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M0 0V12" class="limit" fill="none"></path>`}</svg>`}
-      <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, margin ${marginWords(row)}</span>
+      <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, ${standingWords(row)}</span>
       <span class="worst">${unbroken(worst)}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === '' ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${unbroken(row.unanswered.words)}: ${row.unanswered.reason}`}</span>
     </div>`;
   }

@@ -1,5 +1,5 @@
 import type { SizedAnswer, SizedEdge } from '../../src/requirements/size.ts';
-import { marginWords, unansweredWords, verdictWords, worstWords } from '../../src/requirements/verdict.ts';
+import { standingWords, unansweredWords, verdictWords, worstWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
 
@@ -25,7 +25,7 @@ export function edgeWords({ text, reason, requirement, at }: SizedEdge, side: 'b
 export function marginLine(row: RequirementResult): string {
   const at = row.at === null ? '' : `${row.blocks ? `: ${worstWords(row)}` : ''} at ${row.at.words}`;
   const blank = row.unanswered === null ? '' : `; ${unansweredWords(row, ['corner', 'corners'])}`;
-  return `${verdictWords(row)}, margin ${marginWords(row)}${at}${blank}`;
+  return `${verdictWords(row)}, ${standingWords(row)}${at}${blank}`;
 }
 
 /** What stands against the nearest miss, and by how much. */

@@ -1,7 +1,7 @@
 import { InputError } from '../design/complaint.ts';
 import { quoted } from '../quantity/wording.ts';
 import { size as sizeDesign, type SizedAnswer, type SizedEdge } from '../requirements/size.ts';
-import { marginWords, onOneLine, requirementWords } from '../requirements/verdict.ts';
+import { onOneLine, requirementWords, standingWords } from '../requirements/verdict.ts';
 import { parseArguments } from './arguments.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
@@ -46,7 +46,7 @@ export function sizedText(answer: SizedAnswer): string {
     lines.push(`no value of ${variable} in its range meets every requirement${best === null ? '' : `; the nearest is ${best.text}`}`);
     for (const { words, met_somewhere } of blockers) lines.push(`  blocked by: ${words}, ${met_somewhere ? 'which other values meet' : 'which no value meets'}`);
   } else if (best !== null) lines.push(`best: ${best.text}, where the least margin is largest`);
-  for (const row of best?.requirements ?? []) lines.push(`  ${row.met ? 'met' : 'not met'}: ${requirementWords(row)}, margin ${marginWords(row)}${row.at === null ? '' : ` at ${row.at.words}`}`);
+  for (const row of best?.requirements ?? []) lines.push(`  ${row.met ? 'met' : 'not met'}: ${requirementWords(row)}, ${standingWords(row)}${row.at === null ? '' : ` at ${row.at.words}`}`);
   if (answer.refusal !== null) lines.push(`some values have no answer: ${answer.refusal}`);
   if (!answer.confirmed) lines.push('not confirmed: a worse corner turned up at the last judgement; narrow the range');
   return `${lines.map(onOneLine).join('\n')}\n`;

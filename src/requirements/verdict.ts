@@ -21,6 +21,15 @@ export function marginWords({ margin, margin_kind, margin_unit, met, blocks }: R
   return margin_kind === 'ratio' ? `${rounded(margin, 3)} times` : withUnit(margin, margin_unit, 3);
 }
 
+/** How far a requirement is from its limit, as a part of a sentence: "margin 1.5 times" where it is met, "missed by a factor 6.0e4" or "missed by 0.12 eV" where it is not. */
+export function standingWords(row: RequirementResult): string {
+  const { margin, margin_kind, margin_unit, blocks } = row;
+  if (verdictWords(row) !== 'not met' || blocks || margin === null) return `margin ${marginWords(row)}`;
+  if (margin_kind === 'difference') return margin < 0 ? `missed by ${withUnit(-margin, margin_unit, 3)}` : `margin ${marginWords(row)}`;
+  if (margin === 0) return 'missed by more than any factor';
+  return margin < 1 ? `missed by a factor ${rounded(1 / margin, 3)}` : `margin ${marginWords(row)}`;
+}
+
 /** What a contact without a finite resistivity is said to do. */
 export const BLOCKS = 'blocks; no finite resistivity';
 
@@ -42,7 +51,7 @@ export function unansweredWords({ unanswered }: Pick<RequirementResult, 'unanswe
 export function verdictLine(row: RequirementResult): string {
   const parts = [`${verdictWords(row).padEnd(9)}  ${requirementWords(row)}`];
   const worst = worstWords(row);
-  if (worst !== null && row.at !== null) parts.push(`worst ${worst} at ${row.at.words}`, `margin ${marginWords(row)}`);
+  if (worst !== null && row.at !== null) parts.push(`worst ${worst} at ${row.at.words}`, standingWords(row));
   if (!row.corners_sufficed) parts.push('worse inside the ranges than at their corners');
   const blank = unansweredWords(row);
   if (blank !== null) parts.push(blank);

@@ -80,7 +80,7 @@ describe('the desk', () => {
   });
 
   it('says beside the tab how many requirements are not met, in words and with a sign', async () => {
-    const row = (met: boolean): RequirementResult => ({ quantity: 'barrierN', of: 'top', bound: 'max', unit: 'eV', limit: 1, over: 'temperature', worst: 1, at: null, met, judged: true, margin: 0, margin_kind: 'difference', margin_unit: 'eV', corners_sufficed: true, unanswered: null });
+    const row = (met: boolean): RequirementResult => ({ quantity: 'barrierN', of: 'top', bound: 'max', unit: 'eV', limit: 1, over: 'temperature', worst: 1, at: null, met, judged: true, margin: 0, margin_kind: 'difference', margin_unit: 'eV', corners_sufficed: true, unanswered: null, blocks: false });
     await put({ verdicts: { status: 'complete', rows: [row(true), row(false)], stale: false, progress: null, reason: null } });
     expect(tabs()[1].textContent!.replace(/\s+/g, ' ').trim()).to.equal('Requirements 1 not met');
     expect(getComputedStyle(tabs()[1].querySelector('.remark')!, '::before').content).to.contain('▲');

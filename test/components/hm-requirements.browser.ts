@@ -12,7 +12,7 @@ import { button, heard } from './heard.ts';
 const designFixture = (): Design => ({ ...fixture(), requirements: [fixture().requirements![0], { quantity: 'fullyDepleted', of: 'spacer', min: true }] });
 const row = (change: Partial<RequirementResult> = {}): RequirementResult => ({
   quantity: 'contactResistivity', of: 'top', bound: 'max', unit: 'ohm cm^2', limit: 1e-6, over: 'temperature', worst: 4e-7, at: { temperature_K: 233, tolerances: [], words: '-40 degC, Ncap -10 %' },
-  met: true, judged: true, margin: 2.5, margin_kind: 'ratio', margin_unit: '', corners_sufficed: true, unanswered: null, ...change,
+  met: true, judged: true, margin: 2.5, margin_kind: 'ratio', margin_unit: '', corners_sufficed: true, unanswered: null, blocks: false, ...change,
 });
 const flag = row({ quantity: 'fullyDepleted', of: 'spacer', bound: 'min', limit: true, unit: '', worst: false, met: false, margin: -0.2, margin_kind: 'difference' });
 let element: HmRequirements;
@@ -47,7 +47,7 @@ describe('the requirements of a design', () => {
   it('say for each limit whether it is met, the margin, and where the worst case is', () => {
     const [first, second] = [...element.shadowRoot!.querySelectorAll('li')].map((item) => item.textContent!.replace(/\s+/g, ' '));
     expect(first).to.contain('met, margin 2.5 times').and.to.contain('worst 4e-7 ohm cm^2 at -40 degC, Ncap -10 %');
-    expect(second).to.contain('not met').and.to.contain('worst no at');
+    expect(second).to.contain('not met, missed by 0.2').and.to.contain('worst no at');
     expect(text()).to.contain('1 of 2 met');
   });
 
@@ -99,11 +99,28 @@ describe('the requirements of a design', () => {
     const of = menu('of', 2);
     expect([...of.options].map((option) => option.text)).to.deep.equal(['cap / spacer', 'spacer / buffer']);
     choose('of', 'spacer', 2);
-    choose('Temperatures', 'range', 2);
     const edits = heard(element, 'hm-edit');
     await element.updateComplete;
     button(element, 'Add').click();
     expect(edits[0].next.requirements!.at(-1)).to.deep.equal({ quantity: 'peakField', of: 'spacer', max: '3e5 V/cm', over: 'temperatureRange' });
+  });
+
+  it('begin over the temperature range of the design where it has one, and at its temperature once it has none', async () => {
+    expect(menu('Temperatures', 2).value).to.equal('range');
+    choose('Temperatures', 'one', 2);
+    element.design = { ...designFixture(), title: 'another' };
+    await element.updateComplete;
+    expect(menu('Temperatures', 2).value).to.equal('one');
+    choose('Temperatures', 'range', 2);
+    element.design = { ...designFixture(), conditions: { temperature: '300 K' } };
+    await element.updateComplete;
+    expect(menu('Temperatures', 2).value).to.equal('one');
+  });
+
+  it('have room for a limit with its unit', () => {
+    const box = element.shadowRoot!.querySelector('hm-field')!.shadowRoot!.querySelector('input')!;
+    expect(box.value).to.equal('1e-6 ohm cm^2');
+    expect(box.scrollWidth).to.be.at.most(box.clientWidth);
   });
 
   it('show progress with a way to stop, and why there is no verdict with a way to begin anew', async () => {

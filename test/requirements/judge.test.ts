@@ -1,5 +1,6 @@
 import { describe, expect, it, vi } from 'vitest';
 import { REQUIREMENT_QUANTITIES, type RequirementQuantityName } from '../../src/requirements/quantities.ts';
+import { standingWords } from '../../src/requirements/verdict.ts';
 import { judge, judging, type JudgeOptions } from '../../src/requirements/judge.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import { starters } from '../../src/design/starters/index.ts';
@@ -95,6 +96,9 @@ describe('the requirements of a design', () => {
     expect(d.margin).toBeCloseTo(-0.1, 9);
     expect([a.limit, a.unit, c.unit, c.margin_kind, a.margin_kind]).toEqual([2 * sheet, 'ohm', 'eV', 'difference', 'ratio']);
     expect(contacts[0].barrier_n_eV).toBe(0.55);
+    expect([a, b, c, d].map(standingWords)).toEqual(['margin 2 times', 'missed by a factor 2', 'margin 0.1 eV', 'missed by 0.1 eV']);
+    expect(standingWords({ ...b, margin: 1.66e-5 })).toBe('missed by a factor 60200');
+    expect(standingWords({ ...b, margin: 0 })).toBe('missed by more than any factor');
   });
 
   it('take degenerate and fully depleted as asked for or forbidden', () => {
