@@ -3,7 +3,8 @@ import type { Job } from '../batch/job.ts';
 import type { Complaint } from '../design/complaint.ts';
 import type { Design } from '../design/types.ts';
 import type { Regime, Result } from '../result/types.ts';
-import { CHAIN, planSweep, reasonOf, solveFrom } from './sweep.ts';
+import { solveDesign } from '../result/solve-design.ts';
+import { CHAIN, planSweep, reasonOf } from './sweep.ts';
 
 export interface FilmRequest {
   /** as typed, the lower first */ from: string;
@@ -36,7 +37,10 @@ export function filmJob({ design, temperatures, set }: FilmPlan): Job<Frame[]> {
     run(chunk) {
       let last: Profiles | undefined;
       return range(chunk).map((temperature_K): Frame => {
-        const answer = solveFrom(design, { ...set, temperature: `${temperature_K} K` }, last);
+        const options = { set: { ...set, temperature: `${temperature_K} K` } };
+        let answer = solveDesign(design, { ...options, warmStart: last });
+        // What came before must not decide whether there is an answer.
+        if (answer.kind === 'refused' && last !== undefined) answer = solveDesign(design, options);
         if (answer.kind !== 'result') return { temperature_K, gap: reasonOf(answer) };
         last = answer.profiles;
         return { temperature_K, result: answer.result, regimes: answer.result.layers.map((layer) => layer.regime) };

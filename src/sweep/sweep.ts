@@ -4,7 +4,7 @@ import { complaintLine, type Complaint } from '../design/complaint.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import { provenanceOf } from '../result/provenance.ts';
-import { solveDesign, type SolvedAnswer } from '../result/solve-design.ts';
+import { solveFigures, type SolvedAnswer } from '../result/solve-design.ts';
 import type { Provenance } from '../result/types.ts';
 import { MOST_POINTS, readAxis, type Axis, type AxisRequest } from './axis.ts';
 import { findFigures, type Figure } from './figures.ts';
@@ -102,17 +102,8 @@ export function atPoint(plan: SweepPlan, index: number): { design: Design; set: 
   return putAt(plan, parts);
 }
 
-/**
- * Solves a design from an earlier answer's profiles where there are any, and afresh where that comes to nothing: what came before must not decide whether
- * there is an answer.
- */
-export function solveFrom(design: Design, set: Readonly<Record<string, string>>, warmStart: Profiles | undefined): SolvedAnswer {
-  const answer = solveDesign(design, { set, warmStart });
-  return answer.kind === 'refused' && warmStart !== undefined ? solveDesign(design, { set }) : answer;
-}
-
 /** Why an answer is none, in one line. */
-export function reasonOf(answer: Exclude<SolvedAnswer, { kind: 'result' }>): string {
+export function reasonOf(answer: Extract<SolvedAnswer, { kind: 'complaints' | 'refused' }>): string {
   return answer.kind === 'refused' ? `no accepted answer: ${answer.reason}` : complaintLine(answer.complaints[0]);
 }
 
@@ -131,10 +122,13 @@ export function* chainPoints(plan: SweepPlan, chunk: number): Generator<SweepPoi
   let last: Profiles | undefined;
   for (let index = from; index < to; index++) {
     const { design, set } = atPoint(plan, index);
-    const answer = solveFrom(design, set, last);
-    if (answer.kind === 'result') {
+    const solve = (warmStart?: Profiles): ReturnType<typeof solveFigures<(number | null)[]>> => solveFigures(design, { set, warmStart }, (rows) => plan.figures.map((figure) => figure.read(rows)));
+    let answer = solve(last);
+    // What came before must not decide whether there is an answer.
+    if (answer.kind === 'refused' && last !== undefined) answer = solve();
+    if (answer.kind === 'figures') {
       last = answer.profiles;
-      yield { values: plan.figures.map((figure) => figure.read(answer.result)) };
+      yield { values: answer.figures };
     } else yield { gap: reasonOf(answer) };
   }
 }

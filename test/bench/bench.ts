@@ -8,28 +8,35 @@ import { fermiHalf, fermiHalfInto, inverseFermiHalf } from '../../solver/fermi-i
 import { isRefusal, solveStack, type Solution, type Stack } from '../../solver/index.ts';
 import { barrier, doped, layer, stackOf } from '../solver/stack-fixtures.ts';
 import { longRows } from './long-runs.ts';
+import type { BenchRow, Ratio } from './ratio.ts';
 import { starterRows } from './starter-rows.ts';
+import { wholeRun } from './whole-run.ts';
 
 const ARGUMENTS = Float64Array.from({ length: 4096 }, (_, i) => -30 + (80 * ((i * 2654435761) % 4096)) / 4096);
 const VALUES = ARGUMENTS.map((eta) => fermiHalf(eta));
 let sink = 0;
 const WARMING = 6;
+const NS_PER_MS = 1e6;
 
-/** Median over rounds of the time of one call, ns; each round also times Math.exp, and the ratio is taken round by round. */
-function ratio(calls: number, body: () => void, rounds = 21): number {
+/** Medians over rounds of the time of one call: in multiples of Math.exp, which each round times too, and in ns. */
+const ratio: Ratio = (calls, body, rounds = 21, warming = WARMING) => {
   const ratios: number[] = [];
+  const times: number[] = [];
   // The first rounds would time the compiler.
-  for (let r = 0; r < WARMING; r++) body();
+  for (let r = 0; r < warming; r++) body();
   for (let r = 0; r < rounds; r++) {
     const start = performance.now();
     body();
     const middle = performance.now();
     for (let k = 0; k < 20; k++) for (let i = 0; i < ARGUMENTS.length; i++) sink += Math.exp(ARGUMENTS[i]);
     const end = performance.now();
-    ratios.push((middle - start) / calls / ((end - middle) / (20 * ARGUMENTS.length)));
+    const each = (middle - start) / calls;
+    times.push(each * NS_PER_MS);
+    ratios.push(each / ((end - middle) / (20 * ARGUMENTS.length)));
   }
-  return ratios.sort((a, b) => a - b)[rounds >> 1];
-}
+  const median = (values: number[]): number => values.sort((a, b) => a - b)[rounds >> 1];
+  return { timesExp: median(ratios), ns: median(times) };
+};
 
 const five: Stack = stackOf(
   [
@@ -52,18 +59,22 @@ const thirty: Stack = stackOf(Array.from({ length: 30 }, (_, i) => layer(`l${i}`
 const pair = new Float64Array(2);
 const points = [4, 77, 300, 600].map((T) => localCharge(five.layers[2], 0, T, five.assumptions));
 
-const rows = [
-  { name: 'F_1/2', timesExp: ratio(20 * ARGUMENTS.length, () => { for (let k = 0; k < 20; k++) for (let i = 0; i < ARGUMENTS.length; i++) sink += fermiHalf(ARGUMENTS[i]); }) },
-  { name: 'F_1/2 and its derivative, one pass', timesExp: ratio(20 * ARGUMENTS.length, () => { for (let k = 0; k < 20; k++) for (let i = 0; i < ARGUMENTS.length; i++) { fermiHalfInto(ARGUMENTS[i], pair); sink += pair[1]; } }) },
-  { name: 'inverse of F_1/2', timesExp: ratio(ARGUMENTS.length, () => { for (let i = 0; i < VALUES.length; i++) sink += inverseFermiHalf(VALUES[i]); }) },
-  { name: 'Fermi level of a layer', timesExp: ratio(400, () => { for (let k = 0; k < 100; k++) for (const c of points) sink += neutralLevel(c).ecMinusEf; }) },
-  { name: 'five-layer stack, cold, 0.1 mV', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(five).quality.meshNodes; }) },
-  { name: 'the same to 1 uV', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(five, undefined, 1e-6).quality.meshNodes; }) },
-  { name: 'the same at 20 K', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(cold).quality.meshNodes; }) },
-  { name: '300 um wafer under a cap, cold, 0.1 mV', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(thick).quality.meshNodes; }) },
-  { name: '30 layers, cold, 0.1 mV', timesExp: ratio(4, () => { for (let k = 0; k < 4; k++) sink += solved(thirty).quality.meshNodes; }) },
-  { name: 'five-layer stack, warm, one doping moved', timesExp: ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(nudged, first).quality.meshNodes; }) },
+const rows: BenchRow[] = [
+  { name: 'F_1/2', ...ratio(20 * ARGUMENTS.length, () => { for (let k = 0; k < 20; k++) for (let i = 0; i < ARGUMENTS.length; i++) sink += fermiHalf(ARGUMENTS[i]); }) },
+  { name: 'F_1/2 and its derivative, one pass', ...ratio(20 * ARGUMENTS.length, () => { for (let k = 0; k < 20; k++) for (let i = 0; i < ARGUMENTS.length; i++) { fermiHalfInto(ARGUMENTS[i], pair); sink += pair[1]; } }) },
+  { name: 'inverse of F_1/2', ...ratio(ARGUMENTS.length, () => { for (let i = 0; i < VALUES.length; i++) sink += inverseFermiHalf(VALUES[i]); }) },
+  { name: 'Fermi level of a layer', ...ratio(400, () => { for (let k = 0; k < 100; k++) for (const c of points) sink += neutralLevel(c).ecMinusEf; }) },
+  { name: 'five-layer stack, cold, 0.1 mV', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(five).quality.meshNodes; }) },
+  { name: 'the same to 1 uV', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(five, undefined, 1e-6).quality.meshNodes; }) },
+  { name: 'the same at 20 K', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(cold).quality.meshNodes; }) },
+  { name: '300 um wafer under a cap, cold, 0.1 mV', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(thick).quality.meshNodes; }) },
+  { name: '30 layers, cold, 0.1 mV', ...ratio(4, () => { for (let k = 0; k < 4; k++) sink += solved(thirty).quality.meshNodes; }) },
+  { name: 'five-layer stack, warm, one doping moved', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(nudged, first).quality.meshNodes; }) },
 ];
-rows.push(...starterRows(ratio), ...longRows(ratio));
-for (const row of rows) console.log(`${row.name.padEnd(44)} ${row.timesExp.toPrecision(3).padStart(10)} x Math.exp`);
+rows.push(...starterRows(ratio), ...longRows(ratio), wholeRun(ratio));
+for (const row of rows) console.log(`${row.name.padEnd(60)} ${row.timesExp.toPrecision(3).padStart(10)} x Math.exp ${timeText(row.ns).padStart(9)}${row.goal === undefined ? '' : `  goal ${row.goal.toExponential(0)}`}`);
 console.log(JSON.stringify({ rows, cold: first.quality, tight: tight.quality, wafer: solved(thick).quality, finite: Number.isFinite(sink) }));
+
+function timeText(ns: number): string {
+  return ns < 1e3 ? `${ns.toPrecision(3)} ns` : ns < 1e6 ? `${(ns / 1e3).toPrecision(3)} us` : ns < 1e9 ? `${(ns / 1e6).toPrecision(3)} ms` : `${(ns / 1e9).toPrecision(3)} s`;
+}

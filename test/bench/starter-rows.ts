@@ -1,8 +1,7 @@
 import { starters } from '../../src/design/starters/index.ts';
 import { toStack } from '../../src/design/stack.ts';
 import { isRefusal, solveStack, type Solution, type Stack } from '../../solver/index.ts';
-
-type Ratio = (calls: number, body: () => void, rounds?: number) => number;
+import type { BenchRow, Ratio, Taken } from './ratio.ts';
 
 function solved(stack: Stack, warmStart?: Solution): Solution {
   // Contact resistivities have times of their own.
@@ -21,9 +20,9 @@ function nudged(stack: Stack): Stack {
 }
 
 /** The nine starters, each cold and after a small change: medians and the slowest. Goals: medians of 2e5 cold, 5e4 warm. */
-export function starterRows(ratio: Ratio): { name: string; timesExp: number }[] {
-  const cold: number[] = [];
-  const warm: number[] = [];
+export function starterRows(ratio: Ratio): BenchRow[] {
+  const cold: Taken[] = [];
+  const warm: Taken[] = [];
   for (const { id, design } of starters) {
     const reading = toStack(design);
     if (!reading.ok) throw new Error(`${id}: ${JSON.stringify(reading.complaints)}`);
@@ -32,13 +31,13 @@ export function starterRows(ratio: Ratio): { name: string; timesExp: number }[] 
     cold.push(ratio(3, () => { for (let k = 0; k < 3; k++) solved(reading.stack); }, 7));
     warm.push(ratio(3, () => { for (let k = 0; k < 3; k++) solved(moved, first); }, 7));
   }
-  const sorted = (list: number[]): number[] => [...list].sort((a, b) => a - b);
+  const sorted = (list: Taken[]): Taken[] => [...list].sort((a, b) => a.timesExp - b.timesExp);
   const [c, w] = [sorted(cold), sorted(warm)];
   const middle = c.length >> 1;
   return [
-    { name: 'nine starters, cold, 0.1 mV: median', timesExp: c[middle] },
-    { name: 'the slowest of them', timesExp: c[c.length - 1] },
-    { name: 'nine starters, warm: median', timesExp: w[middle] },
-    { name: 'the slowest of them', timesExp: w[w.length - 1] },
+    { name: 'nine starters, cold, 0.1 mV: median', ...c[middle], goal: 2e5 },
+    { name: 'the slowest of them', ...c[c.length - 1] },
+    { name: 'nine starters, warm: median', ...w[middle], goal: 5e4 },
+    { name: 'the slowest of them', ...w[w.length - 1] },
   ];
 }
