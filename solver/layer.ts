@@ -9,7 +9,7 @@ import type { IonisedRow, LayerFigures, Regime } from './solution.ts';
 import type { Assumptions, Layer } from './stack.ts';
 
 /** EF closer to its band than this, in kT, is degenerate (common practice, no source). */
-const DEGENERATE_WITHIN = 3;
+export const DEGENERATE_WITHIN = 3;
 /** Majority carriers below this share of the net doping: freeze-out (common practice, no source). */
 const FROZEN_BELOW = 0.9;
 /** Minority over majority above this: intrinsic (common practice, no source). */
@@ -53,7 +53,7 @@ export function layerFigures(layer: Layer, T: number, a: Assumptions, fullyDeple
     p: v.p,
     ni: b.insulator ? 0 : Math.exp(0.5 * (Math.log(b.nc) + Math.log(b.nv) - b.gap / b.kT)),
     ionised: ionisedRows(layer, z, c, ecMinusEf),
-    regime: regimeOf(c, ecMinusEf, v),
+    regime: regimeAt(c, ecMinusEf, v),
     type: typeOf(c, v),
     debyeLength: b.insulator ? null : debyeLength(c, ecMinusEf),
     mobilityN: mobilities.n,
@@ -91,18 +91,24 @@ function chargedShare(c: LocalCharge, level: LocalCharge['levels'][number], ecMi
   return 1 - level.bound + level.bound * Math.exp(logNeutralShare(-distance(c.bands, level, ecMinusEf), -level.logG));
 }
 
-/** Degenerate before all: a degenerate layer conducts like a metal whatever its dopants hold. */
-function regimeOf(c: LocalCharge, ecMinusEf: number, v: ChargeValues): Regime {
-  const b = c.bands;
-  if (b.insulator) return 'intrinsic';
-  const reach = DEGENERATE_WITHIN * b.kT;
-  if (ecMinusEf < reach || b.gap - ecMinusEf < reach) return 'degenerate';
-  const majority = Math.max(v.n, v.p);
-  if (Math.min(v.n, v.p) > INTRINSIC_ABOVE * majority) return 'intrinsic';
-  const net = Math.abs(netDoping(c));
+/**
+ * Regime of one point of a semiconductor, by the first that holds: degenerate before all, since a degenerate layer conducts like a metal whatever its dopants hold.
+ *
+ * @param bandDistance  of EF from the nearer band edge, kT; negative inside the band
+ * @param majority      the larger carrier density, cm^-3
+ * @param minority      the smaller, cm^-3
+ * @param net           size of the net doping, every dopant charged, cm^-3
+ */
+export function regimeOf(bandDistance: number, majority: number, minority: number, net: number): Regime {
+  if (bandDistance < DEGENERATE_WITHIN) return 'degenerate';
   // Both carriers may be below the smallest number: then the doping decides.
-  if (majority === 0 && net === 0) return 'intrinsic';
+  if (minority > INTRINSIC_ABOVE * majority || (majority === 0 && net === 0)) return 'intrinsic';
   return majority < FROZEN_BELOW * net ? 'freeze-out' : 'extrinsic';
+}
+
+function regimeAt(c: LocalCharge, ecMinusEf: number, v: ChargeValues): Regime {
+  const { insulator, gap, kT } = c.bands;
+  return insulator ? 'intrinsic' : regimeOf(Math.min(ecMinusEf, gap - ecMinusEf) / kT, Math.max(v.n, v.p), Math.min(v.n, v.p), Math.abs(netDoping(c)));
 }
 
 /** By the carrier that is more than the other; by the doping where both underflow. */

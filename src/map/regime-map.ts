@@ -3,12 +3,9 @@ import { localBands, type LocalBands } from '../../solver/bands.ts';
 import { chargeAt, netDoping, type ChargeValues, type LocalCharge } from '../../solver/charge.ts';
 import { levelInForce } from '../../solver/dopants.ts';
 import { neutralLevel } from '../../solver/fermi-level.ts';
+import { DEGENERATE_WITHIN, regimeOf } from '../../solver/layer.ts';
 import type { Regime } from '../result/types.ts';
 
-/** EF closer to its band than this, in kT, is degenerate (common practice, no source); as in the layer's own figures, which a test holds beside these. */
-const DEGENERATE_WITHIN = 3;
-const FROZEN_BELOW = 0.9;
-const INTRINSIC_ABOVE = 0.1;
 const MEV_PER_EV = 1e3;
 
 /** Codes of `regime`. */
@@ -147,7 +144,7 @@ function fill(map: RegimeMap, i: number, c: LocalCharge, v: ChargeValues): void 
   map.carrierShare[i] = net > 0 ? majority / net : 1;
   map.minorityShare[i] = majority > 0 ? minority / majority : net > 0 ? 0 : 1;
   map.degeneracy[i] = distance < 0 ? 0 : distance < DEGENERATE_WITHIN ? 1 : 2;
-  map.regime[i] = distance < DEGENERATE_WITHIN ? 0 : minority > INTRINSIC_ABOVE * majority || (majority === 0 && net === 0) ? 2 : majority < FROZEN_BELOW * net ? 1 : 3;
+  map.regime[i] = REGIMES.indexOf(regimeOf(distance, majority, minority, net));
   // ln of ni; asinh(net/2ni) is where Boltzmann's two carriers balance the net doping, and beyond its range the logarithm alone is left.
   const logNi = 0.5 * (Math.log(nc * nv) - gap / kT);
   const ratio = 0.5 * net * Math.exp(-logNi);

@@ -1,4 +1,5 @@
 import { BOLTZMANN } from '../../solver/constants.ts';
+import { DEGENERATE_WITHIN } from '../../solver/layer.ts';
 import { profileAt } from '../../solver/profile.ts';
 import type { Stack } from '../../solver/index.ts';
 import { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
@@ -28,9 +29,6 @@ const contact = (read: (row: ContactResult, solved: Solved) => number | null): R
   return row === undefined ? null : read(row, solved);
 };
 
-/** A layer counts as degenerate with the Fermi level closer than this to a band, kT (common practice, no source). */
-const DEGENERATE = 3;
-
 const READERS: Record<RequirementQuantityName, Reader> = {
   // What blocks is known: it is worse than every limit from above.
   contactResistivity: contact((c) => (c.blocks ? Infinity : c.rho_c_ohm_cm2)),
@@ -50,7 +48,7 @@ const READERS: Record<RequirementQuantityName, Reader> = {
   electronDensity: layer((l) => l.n_cm3),
   holeDensity: layer((l) => l.p_cm3),
   ionisedShare: layer((l) => (l.ionised.length === 0 ? null : Math.min(...l.ionised.map((row) => row.fraction)))),
-  degenerate: layer((l, { result }) => DEGENERATE - Math.min(l.ec_minus_ef_eV, l.ef_minus_ev_eV) / (BOLTZMANN * result.conditions.temperature_K)),
+  degenerate: layer((l, { result }) => DEGENERATE_WITHIN - Math.min(l.ec_minus_ef_eV, l.ef_minus_ev_eV) / (BOLTZMANN * result.conditions.temperature_K)),
   ecMinusEf: layer((l) => l.ec_minus_ef_eV),
   efMinusEv: layer((l) => l.ef_minus_ev_eV),
   solubility: layer((_, { stack }, index) => overSolubility(stack, index)),
