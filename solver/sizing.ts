@@ -31,7 +31,8 @@ export interface Sizing {
 }
 
 const POINTS = 25;
-const TOLERANCE = 1e-4;
+/** Edges are closed to this unless asked otherwise. */
+export const TOLERANCE = 1e-4;
 /** The refinement divides a cell of the first scan down to this share of it. */
 const FINEST = 1 / 32;
 /** Width, in u, to which the best point is searched. */

@@ -1,5 +1,7 @@
 import { energyText } from './figures.ts';
+import type { PanelColumn } from '../quantity/panel-quantities.ts';
 import { decimalText, figureText } from '../result/figure-text.ts';
+import { closedFormRatio } from '../result/ledger-contacts.ts';
 import type { CarrierCloseUp, CloseUp, Compared } from '../contacts/close-up.ts';
 
 const REGIMES = { thermionic: 'thermionic emission', 'thermionic-field': 'thermionic-field emission', field: 'field emission' } as const;
@@ -28,22 +30,36 @@ export function carrierShown(closeUp: CloseUp): { words: 'electrons' | 'holes'; 
   return { words, curve: closeUp[words] };
 }
 
+/** A figure of a contact from near. */
+export interface CloseUpFigure {
+  column: PanelColumn<'nearContact'>;
+  name: string;
+  text: string;
+  /** the number behind the text, in its unit; null of words */ value: number | null;
+  note?: string;
+}
+
 /** Figures with their names, in the order in which they are asked for. */
-export function closeUpFigures(c: CloseUp): { name: string; text: string; note?: string }[] {
-  const rho = (value: number | null, digits = 3): string => (value === null ? '–' : `${figureText(value, digits)} Ω cm²`);
-  const rows: { name: string; text: string; note?: string }[] = [
-    { name: 'Barriers', text: `φBn ${decimalText(c.barrier_n_eV)} eV, φBp ${decimalText(c.barrier_p_eV)} eV`, note: c.barrier_source === null ? undefined : SOURCES[c.barrier_source] },
-    { name: 'Image-force lowering', text: c.lowering_eV === null ? 'off' : energyText(c.lowering_eV), note: c.lowering_eV === null ? undefined : 'closed form, from the surface field' },
-    { name: 'Regime', text: regimeWords(c.transport), note: c.e00_over_kT === null ? undefined : `E00 ${figureText(c.e00_meV)} meV, E00/kT ${figureText(c.e00_over_kT, 2)}` },
-    { name: 'Contact resistivity', text: rho(c.rho_c_ohm_cm2), note: c.rho_c_error === null ? undefined : `${transmissionWords(c.transmission)}; quadrature good to ${errorText(c.rho_c_error)}` },
-    { name: 'of electrons', text: rho(c.rho_c_n_ohm_cm2) },
-    { name: 'of holes', text: rho(c.rho_c_p_ohm_cm2) },
-    { name: 'Its floor', text: rho(c.rho_c_floor_ohm_cm2), note: 'the majority without any barrier' },
-    { name: 'Closed form', text: rho(c.rho_c_closed_form_ohm_cm2), note: c.closed_form === null ? undefined : `${REGIMES[c.closed_form]}, depletion approximation, no image force` },
-    { name: 'Saturation current', text: c.saturation_A_cm2 === null ? '–' : `${figureText(c.saturation_A_cm2)} A/cm²` },
-  ];
+export function closeUpFigures(c: CloseUp): CloseUpFigure[] {
+  const rows: CloseUpFigure[] = [];
+  const add = (column: CloseUpFigure['column'], name: string, text: string, value: number | null, note?: string | null): void => void rows.push({ column, name, text, value, ...(note == null ? {} : { note }) });
+  const rho = (column: CloseUpFigure['column'], name: string, value: number | null, note?: string | null): void => add(column, name, value === null ? '–' : `${figureText(value)} Ω cm²`, value, note);
+  const source = c.barrier_source === null ? null : SOURCES[c.barrier_source];
+  add('barrierN', 'Barrier for electrons', `${decimalText(c.barrier_n_eV)} eV`, c.barrier_n_eV, source);
+  add('barrierP', 'Barrier for holes', `${decimalText(c.barrier_p_eV)} eV`, c.barrier_p_eV, source);
+  add('lowering', 'Image-force lowering', c.lowering_eV === null ? 'off' : energyText(c.lowering_eV), c.lowering_eV, c.lowering_eV === null ? null : 'closed form, from the surface field');
+  add('transport', 'Regime', regimeWords(c.transport), null, c.e00_over_kT === null ? null : `E00/kT ${figureText(c.e00_over_kT, 2)}`);
+  add('e00', 'E00', c.e00_meV === null ? '–' : `${figureText(c.e00_meV)} meV`, c.e00_meV);
+  rho('rhoC', 'Contact resistivity', c.rho_c_ohm_cm2, c.rho_c_error === null ? null : `${transmissionWords(c.transmission)}; quadrature good to ${errorText(c.rho_c_error)}`);
+  rho('rhoCn', 'of electrons', c.rho_c_n_ohm_cm2);
+  rho('rhoCp', 'of holes', c.rho_c_p_ohm_cm2);
+  rho('rhoCFloor', 'Its floor', c.rho_c_floor_ohm_cm2, 'the majority without any barrier');
+  rho('rhoCClosed', 'Closed form', c.rho_c_closed_form_ohm_cm2, c.closed_form === null ? null : `${REGIMES[c.closed_form]}, depletion approximation, no image force`);
+  const ratio = closedFormRatio(c);
+  add('closedRatio', 'Solved / closed form', figureText(ratio), ratio);
+  add('saturation', 'Saturation current', c.saturation_A_cm2 === null ? '–' : `${figureText(c.saturation_A_cm2)} A/cm²`, c.saturation_A_cm2);
   const where = passageWords(c);
-  if (where !== null) rows.push({ name: 'Passes at', text: where });
+  if (where !== null) add('passage', 'Passes at', where, carrierShown(c).curve?.peak_eV ?? null);
   return rows;
 }
 

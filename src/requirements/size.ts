@@ -1,4 +1,4 @@
-import { sizing, type Sizing, type SizingEdge } from '../../solver/sizing.ts';
+import { sizing, TOLERANCE, type Sizing, type SizingEdge } from '../../solver/sizing.ts';
 import { Asker } from '../design/ask.ts';
 import type { Complaint } from '../design/complaint.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
@@ -49,6 +49,7 @@ export interface SizedEdge {
   /** the requirement that ends it: its index among the judged ones, and in words */ requirement: { index: number; words: string } | null;
   /** the corner at which it ends: "-40 degC, Ncap -20 %" */ at: string | null;
   /** nearest value looked at beyond the edge */ beyond: number | null;
+  /** the requirement that ends it as judged at the edge; null where it was not */ row: RequirementResult | null;
 }
 
 export interface SizedAnswer {
@@ -64,6 +65,7 @@ export interface SizedAnswer {
   /** the ends of the intervals, values inside them and the best point were judged in full, and no worse corner was left */ confirmed: boolean;
   /** values looked at, with the score of each requirement (0 at its limit, above where met; null without an answer) */ scan: LookedAt[];
   /** what is narrower than this share of the range can have been missed */ resolution: number;
+  /** edges are closed to this: relative on a log scale, a share of the range on a linear one */ tolerance: number;
   /** solves */ evaluations: number;
   /** why some values have no answer; null where all have one */ refusal: string | null;
 }
@@ -125,7 +127,7 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Size
     confirmed = !(yield* judgeAll(toJudge(found)));
     if (confirmed || round + 1 >= MOST_ROUNDS) break;
   }
-  return answerOf(found, study, { variable, requirements, confirmed, writeTemperature: temperatureWriter(design) });
+  return answerOf(found, study, { variable, requirements, confirmed, tolerance: tolerance ?? TOLERANCE, writeTemperature: temperatureWriter(design) });
 }
 
 /** What is judged in full: the ends of each interval, two values inside it, and the best. */
@@ -151,7 +153,7 @@ function prepare(design: Design, { variable: name, from, to, scale, set = {} }: 
   return variable === null ? { complaints: ask.complaints } : { variable, requirements: reading.requirements };
 }
 
-function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, confirmed, writeTemperature }: { variable: SizedVariable; requirements: readonly ReadRequirement[]; confirmed: boolean; writeTemperature: (T: number) => string }): SizedAnswer {
+function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, confirmed, tolerance, writeTemperature }: { variable: SizedVariable; requirements: readonly ReadRequirement[]; confirmed: boolean; tolerance: number; writeTemperature: (T: number) => string }): SizedAnswer {
   const words = (i: number): string => requirementWords({ ...requirements[i], unit: requirementQuantity(requirements[i].quantity).unit });
   const edge = ({ value, reason, binding, beyond }: SizingEdge): SizedEdge => {
     let at: string | null = null;
@@ -160,7 +162,8 @@ function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, c
       const judged = reason === 'requirement' ? study.rows(value)?.[binding].at?.words : undefined;
       at = judged ?? cornerOf(study.look(beyond), binding, study.uncertainties, writeTemperature);
     }
-    return { value, text: shownText(variable, value), reason, requirement: binding === null ? null : { index: binding, words: words(binding) }, at, beyond };
+    const row = binding === null ? null : (study.rows(value)?.[binding] ?? null);
+    return { value, text: shownText(variable, value), reason, requirement: binding === null ? null : { index: binding, words: words(binding) }, at, beyond, row };
   };
   const { best } = found;
   let refusal: string | null = null;
@@ -173,6 +176,7 @@ function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, c
     confirmed,
     scan: found.nodes.map((node) => ({ value: node.value, scores: [...node.scores] })),
     resolution: found.resolution,
+    tolerance,
     evaluations: study.evaluations,
     refusal,
   };

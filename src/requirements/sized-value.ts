@@ -22,6 +22,11 @@ export function textWithin(answer: Pick<SizedAnswer, 'unit'>, value: number, [lo
   return valueText(answer, value, MOST_DIGITS);
 }
 
+/** What sets the variable of a sizing to a value, exactly as the search did. */
+export function sizingSet({ variable, unit }: Pick<SizedAnswer, 'variable' | 'unit'>, value: number): Record<string, string> {
+  return { [variable]: unit === '' ? String(value) : `${value} ${unit}` };
+}
+
 /** What a sizing depends on, as text: the design without the values and the words that it does not look at. */
 export function sizingBasis(design: Design, variable: string): string {
   const { title: _, notes: __, variables = [], ...rest } = design;

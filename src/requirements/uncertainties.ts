@@ -18,6 +18,7 @@ export interface Uncertainty {
   /** "-20 %", "+50 meV" */ words(count: number): string;
   /** the full tolerance, as text */ tolerance: string;
   origin: 'stated' | 'default';
+  /** what a default tolerance moves and by how much, a share or eV, of the layer `at` (of a barrier 0 top, 1 bottom; of an offset the layer above); null of a variable */ default: { of: 'doping' | 'thickness' | 'barrier' | 'offset'; at: number; size: number } | null;
 }
 
 /**
@@ -51,13 +52,13 @@ function moves(tolerance: Tolerance | undefined): boolean {
 }
 
 function ofVariable({ name, tolerance }: Variable): Uncertainty {
-  return { label: name, variable: name, apply: (stack) => stack, words: (count) => amountText(tolerance as string, count), tolerance: tolerance as string, origin: 'stated' };
+  return { label: name, variable: name, apply: (stack) => stack, words: (count) => amountText(tolerance as string, count), tolerance: tolerance as string, origin: 'stated', default: null };
 }
 
 function defaults(design: Design, governed: (...parts: unknown[]) => boolean): Uncertainty[] {
   const out: Uncertainty[] = [];
-  const add = (label: string, size: number, words: (size: number) => string, apply: (stack: Stack, amount: number) => Stack): void => {
-    out.push({ label, variable: null, apply: (stack, count) => (count === 0 ? stack : apply(stack, count * size)), words: (count) => words(count * size), tolerance: words(size).replace(/^\+/, ''), origin: 'default' });
+  const add = (label: string, of: NonNullable<Uncertainty['default']>['of'], at: number, size: number, words: (size: number) => string, apply: (stack: Stack, amount: number) => Stack): void => {
+    out.push({ label, variable: null, apply: (stack, count) => (count === 0 ? stack : apply(stack, count * size)), words: (count) => words(count * size), tolerance: words(size).replace(/^\+/, ''), origin: 'default', default: { of, at, size } });
   };
   design.layers.forEach((layer, l) => {
     (layer.dopants ?? []).forEach((row, d) => {
@@ -65,16 +66,16 @@ function defaults(design: Design, governed: (...parts: unknown[]) => boolean): U
       const implanted = typeof row.concentration === 'object' && 'peak' in row.concentration;
       const name = row.dopant ?? row.kind ?? 'dopant';
       const twice = (layer.dopants ?? []).filter((other) => (other.dopant ?? other.kind) === name).length > 1;
-      add(`${layer.name} ${name}${twice ? ` (${d + 1})` : ''}`, implanted ? DEFAULT_TOLERANCES.implantedDose : DEFAULT_TOLERANCES.epitaxialDoping, shareText, (stack, share) => withDopant(stack, l, d, 1 + share));
+      add(`${layer.name} ${name}${twice ? ` (${d + 1})` : ''}`, 'doping', l, implanted ? DEFAULT_TOLERANCES.implantedDose : DEFAULT_TOLERANCES.epitaxialDoping, shareText, (stack, share) => withDopant(stack, l, d, 1 + share));
     });
-    if (!governed(layer.thickness)) add(`${layer.name} thickness`, DEFAULT_TOLERANCES.thickness, shareText, (stack, share) => withLayer(stack, l, { thickness: stack.layers[l].thickness * (1 + share) }));
+    if (!governed(layer.thickness)) add(`${layer.name} thickness`, 'thickness', l, DEFAULT_TOLERANCES.thickness, shareText, (stack, share) => withLayer(stack, l, { thickness: stack.layers[l].thickness * (1 + share) }));
   });
   const ends = (['top', 'bottom'] as const).filter((side) => hasBarrier(design[side]) && !governed(heightText(design[side])));
-  for (const side of ends) add(ends.length > 1 ? `${side} barrier` : 'barrier', DEFAULT_TOLERANCES.barrier, energyText, (stack, amount) => withBarrier(stack, side, carrierOf(design, side), amount));
+  for (const side of ends) add(ends.length > 1 ? `${side} barrier` : 'barrier', 'barrier', side === 'top' ? 0 : 1, DEFAULT_TOLERANCES.barrier, energyText, (stack, amount) => withBarrier(stack, side, carrierOf(design, side), amount));
   design.layers.slice(0, -1).forEach((layer, l) => {
     const row = design.interfaces?.find((i) => i.above === layer.name);
     if (oneCrystal(design, l) || governed(row?.dEc, row?.dEv)) return;
-    add(`offset below ${layer.name}`, DEFAULT_TOLERANCES.offset, energyText, (stack, amount) => withOffset(stack, l, amount));
+    add(`offset below ${layer.name}`, 'offset', l, DEFAULT_TOLERANCES.offset, energyText, (stack, amount) => withOffset(stack, l, amount));
   });
   return out;
 }

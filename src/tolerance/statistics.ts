@@ -5,7 +5,7 @@ export interface Spread {
   /** of the sample, n - 1; null of fewer than two */ sd: number | null;
   least: number | null;
   most: number | null;
-  quantiles: { p: number; value: number }[];
+  /** each between two neighbours of the sorted values */ quantiles: { p: number; value: number; below: number; above: number }[];
   histogram: Histogram | null;
 }
 
@@ -33,7 +33,7 @@ export function spreadOf(values: readonly (number | null)[], log: boolean): Spre
   const sorted = Float64Array.from(known).sort();
   return {
     known: n, mean, sd: n > 1 ? Math.sqrt(squares / (n - 1)) : null, least: sorted[0], most: sorted[n - 1],
-    quantiles: QUANTILES.map((p) => ({ p, value: quantile(sorted, p) })),
+    quantiles: QUANTILES.map((p) => ({ p, value: quantile(sorted, p), ...neighbours(sorted, p) })),
     histogram: histogramOf(sorted, log && sorted[0] > 0),
   };
 }
@@ -44,6 +44,11 @@ export function quantile(sorted: ArrayLike<number>, p: number): number {
   const below = Math.floor(at);
   const above = Math.min(below + 1, sorted.length - 1);
   return sorted[below] + (at - below) * (sorted[above] - sorted[below]);
+}
+
+function neighbours(sorted: ArrayLike<number>, p: number): { below: number; above: number } {
+  const below = Math.floor((sorted.length - 1) * p);
+  return { below: sorted[below], above: sorted[Math.min(below + 1, sorted.length - 1)] };
 }
 
 /** Bins of 2 IQR n^(-1/3) (Freedman and Diaconis, Z. Wahrscheinlichkeitstheorie 57, 453, 1981), within FEWEST_BINS and MOST_BINS. One bin where all values are the same. */

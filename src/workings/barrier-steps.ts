@@ -1,9 +1,10 @@
-import { pinningSlope } from '../../solver/barrier.ts';
+import { barrierHeights, pinningSlope } from '../../solver/barrier.ts';
 import { isAlloy } from '../../solver/index.ts';
 import { origin } from '../sheet/entry-values.ts';
 import { affinitySteps, composition, gapSteps } from './bands-steps.ts';
 import type { End } from './contact-workings.ts';
-import type { Context } from './context.ts';
+import { NO_SHIFTS, type BarrierShift, type Context } from './context.ts';
+import { knownsOf } from './expression.ts';
 import { formula } from './formula.ts';
 import { DESIGN, known, WORKED, type Known } from './known.ts';
 import { materialAsks, metalAsks, originOf } from './published.ts';
@@ -20,6 +21,8 @@ export interface Barrier {
 /** Both barriers of an end by whatever fixes them. */
 export function barrierSteps(context: Context, end: End): Barrier {
   const { row, point } = end;
+  const shift = context.shifts.barriers[row.side];
+  if (shift) return movedBarrier(context, end, shift);
   const boundary = context.stack[row.side];
   const gap = gapSteps(context, point);
   const n = known('φ_Bn', 'barrier for electrons', row.barrier_n_eV ?? Number.NaN, 'eV', WORKED);
@@ -49,6 +52,22 @@ export function barrierSteps(context: Context, end: End): Barrier {
     n, p, ideal,
     steps: [...gap.steps, ...chi.steps, ...slopeSteps, ...cnlSteps, step(below, formula`${gap.known} - ${cnl}`), step(n, formula`${S} * (${phi} - ${chi.known} - ${below}) + ${below}`, 'Cowley and Sze, J. Appl. Phys. 36, 3212 (1965).'), other(p, n)],
   };
+}
+
+/** A barrier that its tolerance has moved: the nominal one by whatever fixes it, then the tolerance. */
+function movedBarrier(context: Context, end: End, { nominal, carrier, amount }: BarrierShift): Barrier {
+  const { row, point } = end;
+  const gap = gapSteps(context, point);
+  const heights = nominal.kind === 'barrier' ? barrierHeights(nominal.source, point.layer.material, point.x, point.bands) : { barrierN: nominal.kind === 'pinned' ? nominal.level : Number.NaN, barrierP: nominal.kind === 'pinned' ? point.bands.gap - nominal.level : Number.NaN, source: null };
+  const found = barrierSteps({ ...context, stack: { ...context.stack, [row.side]: nominal }, shifts: NO_SHIFTS }, { ...end, row: { ...row, barrier_n_eV: heights.barrierN, barrier_p_eV: heights.barrierP, barrier_source: heights.source } });
+  const [mine, its] = carrier === 'n' ? [found.n, found.p] : [found.p, found.n];
+  const base: Known = { ...mine, sign: `${mine.sign},0`, words: `${mine.words}, without its tolerance` };
+  const steps = found.steps.filter((s) => s.kind === 'law' || s.result !== its || found.steps.some((t) => t.kind === 'formula' && knownsOf(t.formula).includes(its) && t.result === mine)).map((s): Step => (s.kind === 'formula' && s.result === mine ? { ...s, result: base } : s));
+  const n = known('φ_Bn', 'barrier for electrons at this corner', row.barrier_n_eV ?? Number.NaN, 'eV', WORKED);
+  const p = known('φ_Bp', 'barrier for holes at this corner', row.barrier_p_eV ?? Number.NaN, 'eV', WORKED);
+  const delta = known('Δ', 'tolerance of the barrier at this corner', amount, 'eV', WORKED);
+  const [moved, other] = carrier === 'n' ? [n, p] : [p, n];
+  return { n, p, steps: [...gap.steps, ...steps, step(moved, formula`${base} + ${delta}`), step(other, formula`${gap.known} - ${moved}`)], ideal: found.ideal };
 }
 
 /** The neutrality level below Ec that the solved barrier rests on. */

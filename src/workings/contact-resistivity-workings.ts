@@ -40,7 +40,7 @@ export function rhoWorkings(context: Context, end: End, column: Column): Found {
   const point = pointOf(context, path.reservoir, side);
   if (column === 'rhoCFloor') return floor(context, path, point, figure);
   const [n, p] = [carrierSteps(context, end, path, point, 'electron', row.rho_c_n_ohm_cm2), carrierSteps(context, end, path, point, 'hole', row.rho_c_p_ohm_cm2)];
-  const start = [law(poisson(), 'Poisson’s equation over the whole stack gives the barrier that the carriers meet; the image force is added to it where it is on.'), ...(row.transmission === 'wkb' ? [law(wkb(), 'One band, κ from the tunnelling mass, between the turning points.')] : [])];
+  const start = [...barrierSteps(context, end).steps, law(poisson(), 'Poisson’s equation over the whole stack gives the barrier that the carriers meet; the image force is added to it where it is on.'), ...(row.transmission === 'wkb' ? [law(wkb(), 'One band, κ from the tunnelling mass, between the turning points.')] : [])];
   const accuracy = row.rho_c_error === null ? '' : `The integrals over energy and depth are good to ${Number((100 * row.rho_c_error).toPrecision(2))} % by their own estimate.`;
   const common = { remarks: [`Zero bias; ${WAYS[row.transmission ?? 'wkb']}. The carriers of ${point.layer.name} take part; nothing passes below their band edge there.`], rests, solved: true, accuracy };
   if (column !== 'rhoC') {

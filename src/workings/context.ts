@@ -1,4 +1,4 @@
-import { profileAt, type Layer, type Profiles, type Stack } from '../../solver/index.ts';
+import { profileAt, type Boundary, type Layer, type Profiles, type Stack } from '../../solver/index.ts';
 import { align, type Alignment } from '../../solver/alignment.ts';
 import type { LocalBands } from '../../solver/bands.ts';
 import { chargeAt, localCharge, type ChargeValues, type LocalCharge } from '../../solver/charge.ts';
@@ -17,7 +17,20 @@ export interface Context {
   catalogue: Catalogue;
   alignment: Alignment;
   profiles: Profiles;
+  /** heights and steps that a tolerance has moved, as they were before it */ shifts: Shifts;
 }
+
+/** What of a corner is told from the nominal value on. */
+export interface Shifts {
+  barriers: { top?: BarrierShift; bottom?: BarrierShift };
+  /** by the layer above: the stack whose offset there is not moved, and by how much Ec is, eV */ offsets: ReadonlyMap<number, { stack: Stack; amount: number }>;
+}
+export interface BarrierShift {
+  nominal: Boundary;
+  carrier: 'n' | 'p';
+  /** eV */ amount: number;
+}
+export const NO_SHIFTS: Shifts = { barriers: {}, offsets: new Map() };
 
 /** One place of a layer, neutral. */
 export interface Point {
@@ -39,8 +52,12 @@ export interface Point {
 export function contextOf(design: Design, result: Result, set: Readonly<Record<string, string>> = {}): Context {
   const reading = toStack(design, set);
   if (!reading.ok || reading.stack.layers.length !== result.layers.length) throw new RangeError('the result is not of this design');
-  const { stack } = reading;
-  return { design, result, stack, catalogue: catalogueOf(design.custom), alignment: align(stack), profiles: profilesOf(result) };
+  return contextAt(design, reading.stack, result);
+}
+
+/** The same of a stack that is at hand, such as one at a corner of its tolerances. @param result  of that very stack */
+export function contextAt(design: Design, stack: Stack, result: Result, shifts = NO_SHIFTS): Context {
+  return { design, result, stack, catalogue: catalogueOf(design.custom), alignment: align(stack), profiles: profilesOf(result), shifts };
 }
 
 export function pointOf({ stack, design }: Context, index: number, z: number): Point {

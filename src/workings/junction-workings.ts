@@ -1,4 +1,6 @@
+import { align } from '../../solver/alignment.ts';
 import { netDoping } from '../../solver/charge.ts';
+import type { Stack } from '../../solver/index.ts';
 import { spaceChargeOf } from '../../solver/depletion.ts';
 import { EPSILON_0 } from '../../solver/constants.ts';
 import { CM_PER_NM } from '../../solver/units.ts';
@@ -6,13 +8,13 @@ import { differenceText } from '../result/figure-text.ts';
 import type { JunctionResult } from '../result/types.ts';
 import { affinitySteps, gapSteps, permittivitySteps } from './bands-steps.ts';
 import { groundOf, neutralOf } from './carrier-steps.ts';
-import { pointOf, type Context, type Point } from './context.ts';
+import { NO_SHIFTS, pointOf, type Context, type Point } from './context.ts';
 import { formula } from './formula.ts';
 import { capacitanceLaw, poisson } from './governing.ts';
 import { charge, DESIGN, known, SOLVED, vacuumPermittivity, WORKED, type Known } from './known.ts';
 import { offsetRivals, offsetSteps } from './offset-steps.ts';
 import { sheetChargeSteps } from './polarisation-steps.ts';
-import { law, step, type Step } from './step.ts';
+import { lastResult, law, step, type Step } from './step.ts';
 import { textbookSteps } from './textbook-steps.ts';
 import type { Found, Simpler } from './workings.ts';
 
@@ -57,6 +59,8 @@ export function junctionWorkings(context: Context, index: number, column: string
 }
 
 function offset(context: Context, index: number, row: JunctionResult, sides: Sides, column: 'deltaEc' | 'deltaEv'): Found {
+  const shift = context.shifts.offsets.get(index);
+  if (shift) return movedOffset(context, index, row, sides, column, shift);
   const { steps, deltaEc, deltaEv, remark } = offsetSteps(context, index, sides);
   const gapA = gapSteps(context, sides.above);
   const gapB = gapSteps(context, sides.below);
@@ -77,6 +81,23 @@ function offset(context: Context, index: number, row: JunctionResult, sides: Sid
     steps: [...steps, ...gaps, step(result, column === 'deltaEc' ? formula`${deltaEv!} + ${b} - ${a}` : formula`${deltaEc!} + ${a} - ${b}`)],
     remarks: [remark], simpler, rests: ['alignment', 'bands'],
   };
+}
+
+/** An offset that its tolerance has moved: the nominal one by its rule, then the tolerance; the gaps do not move. */
+function movedOffset(context: Context, index: number, row: JunctionResult, sides: Sides, column: 'deltaEc' | 'deltaEv', { stack, amount }: { stack: Stack; amount: number }): Found {
+  const alignment = align(stack);
+  const flat = alignment.interfaces[index];
+  const nominal: JunctionResult = { ...row, delta_ec_eV: flat.deltaEc, delta_ev_eV: flat.deltaEv, class: flat.class, alignment: flat.source };
+  const plain: Context = { ...context, stack, alignment, shifts: NO_SHIFTS, result: { ...context.result, junctions: context.result.junctions.map((j, i) => (i === index ? nominal : j)) } };
+  const found = offset(plain, index, nominal, sides, 'deltaEc');
+  const last = lastResult(found)!;
+  const base: Known = { ...last, sign: 'ΔE_c,0', words: 'step of Ec without its tolerance' };
+  const ec = known('ΔE_c', 'step of Ec at this corner', row.delta_ec_eV, 'eV', WORKED);
+  const steps = [...found.steps.map((s): Step => (s.kind === 'formula' && s.result === last ? { ...s, result: base } : s)), step(ec, formula`${base} + ${known('Δ', 'tolerance of the offset at this corner', amount, 'eV', WORKED)}`)];
+  if (column === 'deltaEc') return { ...found, steps, simpler: null };
+  const [gapA, gapB] = [gapSteps(context, sides.above), gapSteps(context, sides.below)];
+  const [a, b] = [{ ...gapA.known, sign: 'E_g,above' }, { ...gapB.known, sign: 'E_g,below' }];
+  return { ...found, simpler: null, steps: [...gapA.steps, ...gapB.steps, ...steps, step(known('ΔE_v', 'step of Ev at this corner', row.delta_ev_eV, 'eV', WORKED), formula`${ec} + ${a} - ${b}`)] };
 }
 
 function lineUp(context: Context, index: number, row: JunctionResult, sides: Sides): Found {

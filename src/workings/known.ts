@@ -7,6 +7,7 @@ export type Origin =
   | { from: 'this design' }
   | { from: 'solved' }
   | { from: 'worked out' }
+  | { from: 'usual tolerance' }
   | { from: 'constant' };
 
 /** A quantity in a formula. */

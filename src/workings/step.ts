@@ -20,6 +20,12 @@ export function law(law: MathNode, note: string): Step {
   return { kind: 'law', law, note };
 }
 
+/** The quantity that the last line gives, laws aside; null without one. */
+export function lastResult({ steps }: { steps: readonly Step[] }): Known | null {
+  const last = steps.findLast((s) => s.kind !== 'law');
+  return last === undefined ? null : last.result;
+}
+
 /** A step as it is shown: the formula, and every number as it is printed. */
 export interface ShownStep {
   math: MathNode;

@@ -39,6 +39,8 @@ export function originText(origin: Origin): string {
       return 'SI 2019 and CODATA 2018';
     case 'this design':
       return 'this design';
+    case 'usual tolerance':
+      return 'usual where the design states none: suppliers’ tables; Colaux et al., Analyst 2015; Stevie et al., SIMS XI 1998; Martin et al., Appl. Phys. Lett. 1994; Waldrop and Grant, Appl. Phys. Lett. 1996';
     case 'solved':
       return 'solved';
     case 'worked out':

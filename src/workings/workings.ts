@@ -1,4 +1,5 @@
 import type { TableId } from '../result/ledger.ts';
+import type { PanelAsked } from './panel-figures.ts';
 import type { Step } from './step.ts';
 
 /** Which figure of the ledger is asked for. */
@@ -7,6 +8,9 @@ export interface Asked {
   /** row of the result's list */ index: number;
   /** id of the ledger's column */ column: string;
 }
+
+/** Any figure whose workings can be asked for: of the ledger, or of a panel with what it knows. */
+export type Question = Asked | PanelAsked;
 
 /** What a simpler formula would give. */
 export interface Simpler {
@@ -23,7 +27,7 @@ export interface Rival {
 }
 
 export interface Workings {
-  asked: Asked;
+  asked: Question;
   /** "Ec − EF of drift" */ title: string;
   words: string;
   /** lines as the ledger shows them; an en dash where there is no figure */ value: string[];

@@ -133,7 +133,7 @@ describe('the words of a sizing', () => {
   });
 
   it('say where an interval ends and why', () => {
-    const edge = (change: Partial<SizedEdge>): SizedEdge => ({ value: 1, text: '1 nm', reason: 'requirement', requirement: { index: 2, words: 'barrier of top at most 1 eV' }, at: '-40 degC', beyond: 2, ...change });
+    const edge = (change: Partial<SizedEdge>): SizedEdge => ({ value: 1, text: '1 nm', reason: 'requirement', requirement: { index: 2, words: 'barrier of top at most 1 eV' }, at: '-40 degC', beyond: 2, row: null, ...change });
     expect(edgeWords(edge({}), 'below')).toBe('Below 1 nm it fails on requirement 3, at -40 degC.');
     expect(edgeWords(edge({ reason: 'no answer', at: null }), 'above')).toBe('Above 1 nm there is no answer for barrier of top at most 1 eV.');
     expect(edgeWords(edge({ reason: 'range', requirement: null, at: null }), 'above')).toContain('end of the range');

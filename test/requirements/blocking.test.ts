@@ -37,7 +37,7 @@ describe('a contact that blocks', () => {
     const [row] = judged(design('300 K', [{ quantity: 'contactResistivity', of: 'top', max: '1e9 ohm cm^2', over: 'temperatureRange' }]));
     expect(row).toMatchObject({ met: false, judged: true, worst: null, blocks: true, margin: 0, unanswered: null });
     expect(row.at!.temperature_K).toBe(4);
-    expect(verdictLine(row)).toContain('not met').and.toContain('worst blocks; no finite resistivity at 4 K').and.toContain('margin none');
+    for (const words of ['not met', 'worst blocks; no finite resistivity at 4 K', 'margin none']) expect(verdictLine(row)).toContain(words);
     expect(JSON.parse(JSON.stringify(row))).toEqual(row);
   });
 

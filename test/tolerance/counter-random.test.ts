@@ -47,7 +47,7 @@ describe('random numbers by counter', () => {
   });
 
   it('never take more than there is', () => {
-    const input = (tolerance: string) => ({ label: '', variable: null, apply: (s: never) => s, words: () => '', tolerance, origin: 'stated' as const });
+    const input = (tolerance: string) => ({ label: '', variable: null, apply: (s: never) => s, words: () => '', tolerance, origin: 'stated' as const, default: null });
     expect(reachOf(input('60 %'))).toBeCloseTo(0.95 / 0.6, 12);
     expect(reachOf(input('10 %'))).toBe(2);
     expect(reachOf(input('50 meV'))).toBe(2);

@@ -5,12 +5,11 @@ import type { Design } from '../../src/design/types.ts';
 import { ledgerTables } from '../../src/result/ledger.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import type { Result } from '../../src/result/types.ts';
-import { evaluate } from '../../src/workings/expression.ts';
-import type { Known } from '../../src/workings/known.ts';
-import { RESULT_DIGITS, readPrinted, shown, type Step } from '../../src/workings/step.ts';
+import { shown } from '../../src/workings/step.ts';
 import { workingsOf } from '../../src/workings/workings-of.ts';
 import { workingsText } from '../../src/workings/text.ts';
 import type { Workings } from '../../src/workings/workings.ts';
+import { byHand, closeToDigits, everyStep, lastOf } from './by-hand.ts';
 
 interface Case {
   name: string;
@@ -44,28 +43,7 @@ const all = CASES.map(({ name, design }) => {
   return { name, design, result, figures };
 });
 
-const everyStep = (w: Workings): Step[] => [...w.steps, ...(w.simpler?.steps ?? [])];
 const place = (name: string, w: Workings): string => `${name}: ${w.title}`;
-
-/** What a formula gives for the numbers as they stand on the page. */
-function byHand(step: Exclude<Step, { kind: 'law' }>): { mine: number; its: number } {
-  const page = shown(step);
-  const values = new Map<Known, number>(page.symbols.map(({ known, value }) => [known, readPrinted(value) * known.scale]));
-  const of = (known: Known): number => values.get(known)!;
-  if (step.kind === 'equation') return { mine: evaluate(step.left, of), its: evaluate(step.right, of) };
-  return { mine: evaluate(step.formula, of), its: readPrinted(page.result!.value) * step.result.scale };
-}
-
-/** The two agree to the printed digits: one unit of the last, since each may be rounded. */
-function closeToDigits(a: number, b: number): boolean {
-  return a === b || Math.abs(a - b) <= 1.01 * 10 ** (1 - RESULT_DIGITS) * 10 ** Math.floor(Math.log10(Math.max(Math.abs(a), Math.abs(b))));
-}
-
-/** The figure that the last line gives, in the ledger's unit. */
-function lastOf(w: Workings): number | null {
-  const last = w.steps.findLast((s) => s.kind !== 'law');
-  return last === undefined ? null : last.result.value / last.result.scale;
-}
 
 const WORDS = ['class', 'regime', 'kind', 'source', 'transport', 'material'];
 
