@@ -1,6 +1,6 @@
 import { verdictLine } from '../requirements/verdict.ts';
 import { parseArguments } from './arguments.ts';
-import { EXIT, type Command } from './command.ts';
+import { EXIT, SET, TOLERANCES, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
 import { judged, tolerancesOf } from './judged.ts';
 import { solved } from './solved.ts';
@@ -11,6 +11,8 @@ const usage = 'check FILE [--set NAME=VALUE ...] [--tolerances all|stated|none]'
 export const check: Command = {
   usage,
   summary: 'judge the requirements in their worst case, one line each',
+  options: [SET, TOLERANCES],
+  notes: 'Ends with 1 where a requirement is not met, with 3 where one cannot be judged: a script or a pipeline can hold a design file to its requirements.',
   async run(args, streams) {
     const { file, set, options } = parseArguments(args, usage, { '--tolerances': 'tolerances' });
     const tolerances = tolerancesOf(options.tolerances);

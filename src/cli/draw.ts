@@ -1,11 +1,11 @@
-import { writeFile } from 'node:fs/promises';
 import { drawPlate } from '../drawing/plate.ts';
 import { svgText } from '../drawing/svg-text.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import { parseArguments } from './arguments.ts';
-import { EXIT, UsageError, type Command } from './command.ts';
+import { EXIT, SET, UsageError, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
 import { solved } from './solved.ts';
+import { writeWhole } from './write-file.ts';
 
 const STYLES = ['light', 'dark', 'slide', 'journal'] as const;
 const DEPTHS = ['even', 'true'] as const;
@@ -16,6 +16,14 @@ const usage = 'draw FILE -o OUT.svg [--set NAME=VALUE ...] [--style light|dark|s
 export const draw: Command = {
   usage,
   summary: 'solve the stack, write the band diagram as SVG',
+  options: [
+    ['-o OUT.svg, --output OUT.svg', 'the file, written whole or not at all; - prints it'],
+    SET,
+    ['--style WORD', 'light (the default) or dark as on the screen, slide, or journal (black and white)'],
+    ['--depth WORD', 'even: each layer gets room in proportion to the bending it holds (the default); true: to its thickness'],
+    ['--shading WORD', 'occupancy (the default), carriers, or none'],
+  ],
+  notes: '',
   async run(args, streams) {
     const { file, set, options } = parseArguments(args, usage, { '-o': 'output', '--output': 'output', '--style': 'style', '--depth': 'depth', '--shading': 'shading' });
     const { output } = options;
@@ -28,13 +36,7 @@ export const draw: Command = {
     if (result === null) return EXIT.noAnswer;
     const svg = svgText(drawPlate(result, { width: 1200, height: 760, frame: 'full', style, depth, shading }));
     if (output === '-') streams.out(svg);
-    else {
-      try {
-        await writeFile(output, svg);
-      } catch (error) {
-        throw new UsageError(`${quoted(output)} cannot be written (${(error as NodeJS.ErrnoException).code ?? 'unknown reason'})`);
-      }
-    }
+    else await writeWhole(output, svg);
     return EXIT.done;
   },
 };

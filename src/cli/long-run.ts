@@ -7,11 +7,13 @@ import type { Streams } from './command.ts';
 const BETWEEN_LINES = 200;
 
 /**
- * Computes a job's chunks on the machine's threads, or in this one where there are none or the job has a single chunk. Progress goes to a terminal and is wiped in the end.
+ * Computes a job's chunks on the machine's threads, or in this one where there are none or the job has a single chunk. Progress goes to a terminal and is wiped in the end. After
+ * Ctrl-C it comes back with the chunks that it has, and no thread is left.
  *
  * @param workers  threads at most; all cores by default
  */
 export async function longRun<V>(spec: JobSpec, job: Job<V>, chunks: readonly number[], streams: Streams, workers?: number): Promise<JobOutcome<V>> {
+  const signal = streams.stopSignal?.();
   let shown = -Infinity;
   const onProgress = ({ done, total }: Progress): void => {
     const now = performance.now();
@@ -22,7 +24,7 @@ export async function longRun<V>(spec: JobSpec, job: Job<V>, chunks: readonly nu
   const size = Math.min(workers ?? streams.cores ?? 1, chunks.length);
   const pool = streams.startWorker && size > 1 ? new WorkerPool(streams.startWorker, size) : null;
   try {
-    return pool ? await pool.run(spec, job, { chunks, onProgress }) : await runHere(job, { chunks, onProgress });
+    return pool ? await pool.run(spec, job, { chunks, onProgress, signal }) : await runHere(job, { chunks, onProgress, signal });
   } finally {
     pool?.close();
     if (shown > -Infinity) streams.progress?.('');

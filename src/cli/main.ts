@@ -22,5 +22,11 @@ if (isMainThread) {
     ...(process.stderr.isTTY ? { progress: (text: string) => void process.stderr.write(`\r${text}\u001b[K`) } : {}),
     startWorker: () => threadSide(new URL(import.meta.url)),
     cores: availableParallelism(),
+    stopSignal() {
+      const stop = new AbortController();
+      // Once each: whoever presses Ctrl-C again does not want to wait.
+      for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => stop.abort());
+      return stop.signal;
+    },
   });
 } else serveThread();

@@ -6,7 +6,7 @@ import { quoted } from '../quantity/wording.ts';
 import { onOneLine } from '../requirements/verdict.ts';
 import { decimalText, figureText } from '../result/figure-text.ts';
 import { parseArguments } from './arguments.ts';
-import { EXIT, UsageError, type Command, type Streams } from './command.ts';
+import { EXIT, JSON_OPTION, SET, TOLERANCES, UsageError, type Command, type Streams } from './command.ts';
 import { readDesignFile } from './design-file.ts';
 import { tolerancesOf } from './judged.ts';
 
@@ -18,6 +18,8 @@ const BETWEEN_LINES = 200;
 export const metals: Command = {
   usage,
   summary: 'rank the metals on one end of the stack by their worst contact resistivity',
+  options: [['--side WORD', 'top or bottom; by default the end that has a metal now, the top first'], SET, TOLERANCES, JSON_OPTION],
+  notes: '',
   async run(args, streams) {
     const { file, set, options } = parseArguments(args, usage, { '--side': 'side', '--tolerances': 'tolerances' }, { '--json': 'json' });
     const design = await readDesignFile(file, streams);

@@ -9,7 +9,7 @@ import { variationResult } from '../tolerance/result.ts';
 import { readShards, writeShard } from '../tolerance/shards.ts';
 import { variationJob, type VariationRows } from '../tolerance/variations.ts';
 import { parseArguments } from './arguments.ts';
-import { EXIT, UsageError, type Command, type Streams } from './command.ts';
+import { EXIT, JSON_OPTION, SET, UsageError, type Command, type Streams } from './command.ts';
 import { readDesignFile } from './design-file.ts';
 import { shardOf, takeFlags, wholeNumber } from './flags.ts';
 import { tolerancesOf } from './judged.ts';
@@ -24,6 +24,19 @@ const DISTRIBUTIONS: readonly Distribution[] = ['normal', 'uniform'];
 export const vary: Command = {
   usage,
   summary: 'draw the design within its tolerances, print spreads and yield',
+  options: [
+    ['--count N', 'how many variations'],
+    ['--seed S', 'of the random numbers, 1 by default; the same seed gives the same answer whatever the workers and shards'],
+    ['--distribution WORD', 'normal: a tolerance is two standard deviations (the default); uniform: even within it'],
+    ['--tolerances WORD', 'which count: all (the default; where none is stated, the usual one) or stated'],
+    ['--figure PATH', 'a figure such as layers.cap.sheet_ohm or contacts.top.rho_c_ohm_cm2, any number of times; by default the usual ones'],
+    JSON_OPTION,
+    ['--shard I/N', 'compute only part I of N and print it for --gather'],
+    ['--gather FILE', 'print the run whose parts are in the file, one after the other in any order; - reads them from standard input'],
+    ['--workers N', 'threads at most; all cores by default'],
+    SET,
+  ],
+  notes: 'Requirements of the design are judged in every variation. Ends with 3 where no variation has an answer. After Ctrl-C: the spreads of the variations that were reached.',
   async run(args, streams) {
     const { rest, flags, repeated } = takeFlags(args, ['--json'], ['--figure'], Object.keys(VALUED));
     const { file, set, options } = parseArguments(rest, usage, { ...VALUED, '--json': 'json', '--figure': 'figure' });
@@ -47,13 +60,19 @@ export const vary: Command = {
     if (solved(design, set, streams) === null) return EXIT.noAnswer;
     const job = variationJob(plan);
     if (shard) {
-      const { values } = await longRun({ kind: 'variations', design, request }, job, shardChunks(job.chunks, ...shard), streams, workers);
+      const chunks = shardChunks(job.chunks, ...shard);
+      const { values, stopped } = await longRun({ kind: 'variations', design, request }, job, chunks, streams, workers);
       streams.out(writeShard(plan, values));
-      return EXIT.done;
+      if (stopped) streams.error(`halfmark: stopped; this part is partial: ${values.size} of ${chunks.length} pieces. Run it again: --gather refuses a run with pieces missing\n`);
+      return stopped ? EXIT.stopped : EXIT.done;
     }
-    const values = options.gather === undefined ? (await longRun({ kind: 'variations', design, request }, job, allChunks(job), streams, workers)).values : await gathered(plan, options.gather, streams);
+    const { values, stopped } = options.gather === undefined ? await longRun({ kind: 'variations', design, request }, job, allChunks(job), streams, workers) : { values: await gathered(plan, options.gather, streams), stopped: false };
     const result = variationResult(plan, values);
     streams.out(flags.has('--json') ? `${JSON.stringify(result, null, 1)}\n` : variationReport(result));
+    if (stopped) {
+      streams.error(`halfmark: stopped; this is partial: ${result.done} of ${result.count} variations\n`);
+      return EXIT.stopped;
+    }
     return result.gaps.length === result.done ? EXIT.noAnswer : EXIT.done;
   },
 };

@@ -36,6 +36,7 @@ export interface SweepResult {
   figures: { path: string; words: string; unit: string; log: boolean; values: (number | null)[] }[];
   /** points without an answer, and why */ gaps: { index: number; reason: string }[];
   /** points that were solved or found to be gaps */ done: number;
+  /** some were not reached */ partial: boolean;
   provenance: Provenance;
 }
 
@@ -165,6 +166,7 @@ export function sweepResult(plan: SweepPlan, chunks: ReadonlyMap<number, SweepPo
     figures: plan.figures.map(({ path, words, unit, log }, f) => ({ path, words, unit, log, values: columns[f] })),
     gaps,
     done: points.size,
+    partial: points.size < plan.points,
     provenance: provenanceOf(plan.design, plan.set),
   };
 }

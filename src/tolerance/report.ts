@@ -12,6 +12,7 @@ const LEAST_SHARE = 1e-3;
 export function variationReport(result: VariationResult): string {
   const { count, done, seed, distribution, figures, inputs, gaps } = result;
   const lines = [
+    ...(result.partial ? ['partial: stopped before the end'] : []),
     `${result.title}: ${done}${done < count ? ` of ${count}` : ''} variations, seed ${seed}, ${distribution === 'normal' ? 'normal, tolerances are two standard deviations' : 'even within the tolerances'}`,
     `at ${result.temperatures_K.map((T) => `${writeNumber(T, 5)} K`).join(', ')}${result.temperatures_K.length > 1 ? ' (requirements over the range: the worst of these)' : ''}`,
     '', 'tolerances', ...inputs.map(({ label, tolerance, origin }) => `  ${label} ${tolerance}${origin === 'default' ? ' (default)' : ''}`),

@@ -4,7 +4,7 @@ import type { Provenance } from '../result/types.ts';
 import type { Distribution } from './draw.ts';
 import type { VariationPlan } from './plan.ts';
 import { spreadOf, yieldOf, type Spread, type Yield } from './statistics.ts';
-import { chunkOf, type VariationRows } from './variations.ts';
+import { chunkOf, variationChunks, type VariationRows } from './variations.ts';
 
 /** One figure of a tolerance run. */
 export interface VariedFigureResult extends Spread {
@@ -17,12 +17,13 @@ export interface VariedFigureResult extends Spread {
   /** of a requirement: share of the variations that meet it */ yield: Yield | null;
 }
 
-/** What a tolerance run gives; a stopped one says so by `done` < `count`. */
+/** What a tolerance run gives. */
 export interface VariationResult {
   format: 'halfmark-variations/1';
   title: string;
   count: number;
   /** variations that were drawn and solved, or found to be gaps */ done: number;
+  /** the run was stopped: some variations, or some ends of the tolerances, were not reached */ partial: boolean;
   seed: number;
   distribution: Distribution;
   /** K; requirements over the temperature range were held at each of them */ temperatures_K: number[];
@@ -59,7 +60,7 @@ export function variationResult(plan: VariationPlan, chunks: ReadonlyMap<number,
   let allMet = 0;
   for (let i = 0; i < done && requirements > 0; i++) if (met.slice(i * requirements, (i + 1) * requirements).every((m) => m === 1)) allMet++;
   return {
-    format: 'halfmark-variations/1', title: plan.design.title, count: plan.request.count, done, seed: plan.request.seed, distribution: plan.request.distribution, temperatures_K: plan.temperatures,
+    format: 'halfmark-variations/1', title: plan.design.title, count: plan.request.count, done, partial: chunks.size < variationChunks(plan), seed: plan.request.seed, distribution: plan.request.distribution, temperatures_K: plan.temperatures,
     inputs: plan.uncertainties.map(({ label, tolerance, origin }) => ({ label, tolerance, origin })),
     figures,
     yield: requirements > 0 ? yieldOf(allMet, done) : null,

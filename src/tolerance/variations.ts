@@ -37,11 +37,16 @@ export function chunkOf(plan: VariationPlan, chunk: number): ChunkOfVariations {
   return { kind: 'draws', first, count: Math.min(CHUNK, plan.request.count - first) };
 }
 
+/** Chunks of a whole run. */
+export function variationChunks({ uncertainties, request }: VariationPlan): number {
+  return 1 + uncertainties.length + Math.ceil(request.count / CHUNK);
+}
+
 /** A tolerance run as a job. Every solve starts from the nominal solution at its temperature: what comes before in a chunk decides nothing. */
 export function variationJob(plan: VariationPlan): Job<VariationRows> {
   const runner = new VariationRunner(plan);
   return {
-    chunks: 1 + plan.uncertainties.length + Math.ceil(plan.request.count / CHUNK),
+    chunks: variationChunks(plan),
     size: (chunk) => chunkOf(plan, chunk).count,
     run: (chunk) => runner.run(chunkOf(plan, chunk)),
   };
