@@ -20,13 +20,16 @@ export function reachOf(uncertainty: Uncertainty): number {
 /**
  * Where each input of one variation lies, in counts of its tolerance. Depends on seed, index and the input's place in the list only.
  *
+ * @param reaches        of each input (reachOf)
+ * @param distributions  of each input
+ *
  * "normal": the tolerance is two standard deviations, by Box and Muller, Ann. Math. Stat. 29, 610 (1958). "uniform": even between the ends of the tolerance.
  */
-export function drawCounts(seed: number, index: number, reaches: readonly number[], distribution: Distribution): number[] {
+export function drawCounts(seed: number, index: number, reaches: readonly number[], distributions: readonly Distribution[]): number[] {
   return reaches.map((reach, input) => {
     for (let attempt = 0; ; attempt++) {
       const [u, v] = evenPair(seed, index, input, attempt);
-      if (distribution === 'uniform') return 2 * u - 1;
+      if (distributions[input] === 'uniform') return 2 * u - 1;
       const count = COUNTS_PER_SIGMA * Math.sqrt(-2 * Math.log(u)) * Math.cos(2 * Math.PI * v);
       if (Math.abs(count) <= reach) return count;
     }

@@ -15,7 +15,7 @@ export function variationReport(result: VariationResult): string {
     ...(result.partial ? ['partial: stopped before the end'] : []),
     `${result.title}: ${done}${done < count ? ` of ${count}` : ''} variations, seed ${seed}, ${distribution === 'normal' ? 'normal, tolerances are two standard deviations' : 'even within the tolerances'}`,
     `at ${result.temperatures_K.map((T) => `${writeNumber(T, 5)} K`).join(', ')}${result.temperatures_K.length > 1 ? ' (requirements over the range: the worst of these)' : ''}`,
-    '', 'tolerances', ...inputs.map(({ label, tolerance, origin }) => `  ${label} ${tolerance}${origin === 'default' ? ' (default)' : ''}`),
+    '', 'tolerances', ...inputs.map(({ label, tolerance, origin, span, distribution: own }) => `  ${label} ${tolerance}${origin === 'default' ? ' (default)' : ''}: ${span[0]} to ${span[1]}${own === distribution ? '' : `, ${own}`}`),
     '', ...table(figures),
     '', 'moved most by (low end to high end of the tolerance)', ...figures.flatMap((figure) => strongestLine(result, figure)),
   ];

@@ -27,7 +27,7 @@ export interface VariationResult {
   seed: number;
   distribution: Distribution;
   /** K; requirements over the temperature range were held at each of them */ temperatures_K: number[];
-  inputs: { label: string; tolerance: string; origin: 'stated' | 'default' }[];
+  inputs: { label: string; tolerance: string; origin: 'stated' | 'default'; distribution: Distribution; /** values at its ends, or changes where it is no one number */ span: [low: string, high: string] }[];
   figures: VariedFigureResult[];
   /** variations that meet every requirement; null without requirements */ yield: Yield | null;
   /** variations without an answer: not in the spreads, not met in the yields */ gaps: { index: number; reason: string }[];
@@ -61,7 +61,7 @@ export function variationResult(plan: VariationPlan, chunks: ReadonlyMap<number,
   for (let i = 0; i < done && requirements > 0; i++) if (met.slice(i * requirements, (i + 1) * requirements).every((m) => m === 1)) allMet++;
   return {
     format: 'halfmark-variations/1', title: plan.design.title, count: plan.request.count, done, partial: chunks.size < variationChunks(plan), seed: plan.request.seed, distribution: plan.request.distribution, temperatures_K: plan.temperatures,
-    inputs: plan.uncertainties.map(({ label, tolerance, origin }) => ({ label, tolerance, origin })),
+    inputs: plan.uncertainties.map(({ label, tolerance, origin, distribution, span }) => ({ label, tolerance, origin, distribution, span })),
     figures,
     yield: requirements > 0 ? yieldOf(allMet, done) : null,
     gaps: drawn.flatMap(([, rows]) => rows.gaps),

@@ -15,8 +15,8 @@ export function writeShard(plan: VariationPlan, chunks: ReadonlyMap<number, Vari
 /** What decides every number of a run. */
 function runName(plan: VariationPlan): string {
   const { model, presets, design, program } = provenanceOf(plan.design, plan.set);
-  const { count, seed, distribution, tolerances = 'all' } = plan.request;
-  return canonical({ program, model, presets, design, count, seed, distribution, tolerances, figures: plan.columns.map((c) => (c.kind === 'figure' ? c.figure.path : c.words)) });
+  const { count, seed, distribution, tolerances = 'all', inputs = {} } = plan.request;
+  return canonical({ program, model, presets, design, count, seed, distribution, tolerances, inputs, figures: plan.columns.map((c) => (c.kind === 'figure' ? c.figure.path : c.words)) });
 }
 
 /**

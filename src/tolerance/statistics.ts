@@ -74,6 +74,12 @@ export interface Yield {
   high: number;
 }
 
+/** A share in per cent, one decimal: 999 of 1000 must not read as all of them. */
+export function sharePercent(share: number): string {
+  const text = (100 * share).toFixed(1);
+  return text === '100.0' && share < 1 ? '99.9 %' : text === '0.0' && share > 0 ? '0.1 %' : `${text.replace(/\.0$/, '')} %`;
+}
+
 /** Two-sided 95 % of a normal distribution. */
 const Z = 1.959963984540054;
 

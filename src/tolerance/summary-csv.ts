@@ -24,8 +24,8 @@ export function summaryCsv(result: VariationResult): string {
       ...strongestInputs(f).slice(0, NAMED).flatMap(({ input, low, high }) => [textCell(inputs[input].label), numberCell(low), numberCell(high)]),
     ]),
     [],
-    ['input', 'tolerance', 'origin'],
-    ...inputs.map(({ label, tolerance, origin }) => [textCell(label), textCell(tolerance), origin]),
+    ['input', 'tolerance', 'origin', 'distribution', 'low end', 'high end'],
+    ...inputs.map(({ label, tolerance, origin, distribution: own, span }) => [textCell(label), textCell(tolerance), origin, own, textCell(span[0]), textCell(span[1])]),
     ...(gaps.length === 0 ? [] : [[], ['variation without an answer', 'reason'], ...gaps.map(({ index, reason }) => [String(index), textCell(reason)])]),
   ];
   return `${rows.map((row) => row.map(quoted).join(',')).join('\r\n')}\r\n`;

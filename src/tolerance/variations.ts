@@ -3,7 +3,7 @@ import type { Job } from '../batch/job.ts';
 import { scoreOf } from '../requirements/margin.ts';
 import { figureOf } from '../requirements/quantities.ts';
 import { askedResult, type Asked } from '../result/asked-result.ts';
-import { drawCounts, reachOf } from './draw.ts';
+import { drawCounts, reachOf, type Distribution } from './draw.ts';
 import { MovedStacks } from './moved-stacks.ts';
 import type { VariationPlan } from './plan.ts';
 
@@ -56,12 +56,14 @@ class VariationRunner {
   readonly #plan: VariationPlan;
   readonly #stacks: MovedStacks;
   readonly #reaches: number[];
+  readonly #distributions: Distribution[];
   /** profiles of the nominal design by temperature; none where it has no answer */ readonly #start = new Map<string, Profiles | undefined>();
 
   constructor(plan: VariationPlan) {
     this.#plan = plan;
-    this.#stacks = new MovedStacks(plan.design, plan.set, plan.uncertainties, plan.stack);
+    this.#stacks = new MovedStacks(plan.varied, plan.set, plan.uncertainties, plan.stack);
     this.#reaches = plan.uncertainties.map(reachOf);
+    this.#distributions = plan.uncertainties.map(({ distribution }) => distribution);
   }
 
   run({ kind, first, count }: ChunkOfVariations): VariationRows {
@@ -69,7 +71,7 @@ class VariationRunner {
     const nominal = uncertainties.map(() => 0);
     const rows: VariationRows = { values: [], met: [], gaps: [] };
     for (let i = 0; i < count; i++) {
-      if (kind === 'draws') this.#add(rows, first + i, drawCounts(request.seed, first + i, this.#reaches, request.distribution), undefined);
+      if (kind === 'draws') this.#add(rows, first + i, drawCounts(request.seed, first + i, this.#reaches, this.#distributions), undefined);
       else this.#add(rows, i, kind === 'nominal' ? nominal : nominal.map((_, u) => (u === first ? 2 * i - 1 : 0)), FINE);
     }
     return rows;

@@ -73,6 +73,16 @@ describe('halfmark sweep', { timeout: 60_000 }, () => {
 describe('halfmark vary', { timeout: 60_000 }, () => {
   const base = ['vary', fixture, '--count', '40', '--seed', '9'];
 
+  it('takes another tolerance and distribution of an input', async () => {
+    const { code, out } = await call(['vary', fixture, '--count', '4', '--tolerance', 'p thickness=3 %', '--draw=p thickness=uniform', '--tolerance', 'Nn=0 %', '--figure', 'layers.n.n_cm3']);
+    expect(code).toBe(0);
+    expect(out).toContain('  p thickness 3 %: 970 nm to 1.03 um, uniform\n');
+    expect(out).not.toContain('Nn');
+    expectRefusal(await call(['vary', fixture, '--count', '4', '--tolerance', 'p thickness=130 %']), /input 'p thickness': '130 %' is the whole value or more/);
+    expectRefusal(await call(['vary', fixture, '--count', '4', '--tolerance', 'p thickness']), /--tolerance is 'p thickness'; it takes INPUT=3 %/);
+    expectRefusal(await call(['vary', fixture, '--count', '4', '--draw', 'Nn=unform']), /--draw is 'unform'; normal or uniform would do; did you mean uniform\?/);
+  });
+
   it('prints spreads, sensitivities and the yield', async () => {
     const seen: string[] = [];
     const { code, out, error } = await call(base, '', (text) => seen.push(text));

@@ -33,7 +33,7 @@ describe('random numbers by counter', () => {
   it('make normal counts of half a tolerance, and even ones within it', () => {
     const n = 20000;
     const spread = (distribution: 'normal' | 'uniform') => {
-      const counts = Array.from({ length: n }, (_, i) => drawCounts(3, i, [2], distribution)[0]);
+      const counts = Array.from({ length: n }, (_, i) => drawCounts(3, i, [2], [distribution])[0]);
       return { sd: Math.sqrt(counts.reduce((a, c) => a + c * c, 0) / n), most: Math.max(...counts.map(Math.abs)), beyond: counts.filter((c) => Math.abs(c) > 1).length / n };
     };
     const normal = spread('normal');
@@ -51,6 +51,6 @@ describe('random numbers by counter', () => {
     expect(reachOf(input('60 %'))).toBeCloseTo(0.95 / 0.6, 12);
     expect(reachOf(input('10 %'))).toBe(2);
     expect(reachOf(input('50 meV'))).toBe(2);
-    for (let i = 0; i < 2000; i++) expect(1 + 0.95 * drawCounts(1, i, [reachOf(input('95 %'))], 'normal')[0]).toBeGreaterThan(0);
+    for (let i = 0; i < 2000; i++) expect(1 + 0.95 * drawCounts(1, i, [reachOf(input('95 %'))], ['normal'])[0]).toBeGreaterThan(0);
   });
 });
