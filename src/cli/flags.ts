@@ -18,7 +18,7 @@ export interface Flags {
 export function takeFlags(args: readonly string[], known: readonly string[], repeated: readonly string[], valued: readonly string[]): Flags {
   const out: Flags & { flags: Set<string>; repeated: Record<string, string[]> } = { rest: [], flags: new Set(), repeated: Object.fromEntries(repeated.map((name) => [name, []])) };
   for (let i = 0; i < args.length; i++) {
-    const [, name = args[i], inline] = /^(--[a-z]+2?)=(.*)$/s.exec(args[i]) ?? [];
+    const [, name = args[i], inline] = /^(--[a-z-]+2?)=(.*)$/s.exec(args[i]) ?? [];
     if (known.includes(name)) {
       if (inline !== undefined) throw new UsageError(`${name} takes no value; write it alone`);
       out.flags.add(name);

@@ -1,4 +1,4 @@
-import { readFile, writeFile } from 'node:fs/promises';
+import { readFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
 import type { FontFiles } from '../export/pdf.ts';
 import { sheetPdf, sheetSvgs } from '../export/sheet-files.ts';
@@ -6,20 +6,39 @@ import { didYouMean, quoted } from '../quantity/wording.ts';
 import { PAPERS, SHEET_STYLES } from '../sheet/look.ts';
 import { reviewSheet } from '../sheet/review-sheet.ts';
 import { parseArguments } from './arguments.ts';
-import { EXIT, UsageError, type Command } from './command.ts';
+import { EXIT, SET, TOLERANCES, UsageError, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
+import { takeFlags } from './flags.ts';
 import { judged, tolerancesOf } from './judged.ts';
+import { closeUpsOf, comparisonOf, cornerOf, workingsAsked } from './sheet-sections.ts';
 import { solved } from './solved.ts';
+import { writeWhole } from './write-file.ts';
 
-const usage = 'sheet FILE -o OUT.pdf|OUT.svg [--set NAME=VALUE ...] [--style screen|slide|journal] [--paper A4|letter] [--author A] [--date D] [--revision R] [--tolerances all|stated|none]';
+const usage = 'sheet FILE -o OUT.pdf|OUT.svg [--set NAME=VALUE ...] [--style screen|slide|journal] [--paper A4|letter] [--author A] [--date D] [--revision R] [--tolerances all|stated|none] [--over FILE ...] [--worst-corner] [--contacts] [--workings FIGURE ...]';
 
-/** Solves a design, judges its requirements, and writes the review sheet: one PDF, or an SVG a page (OUT-1.svg, OUT-2.svg, ...). */
+/**
+ * Solves a design, judges its requirements, and writes the review sheet: one PDF, or an SVG a page (OUT-1.svg, OUT-2.svg, ...). More sections where they are asked for: other designs laid over
+ * this one, the plate at the worst corner, the contacts from near, the workings of figures.
+ */
 export const sheet: Command = {
   usage,
   summary: 'write the review sheet: plate, tables, requirements, sources',
+  options: [
+    ['-o OUT, --output OUT', 'a PDF, or an SVG a page (OUT-1.svg, OUT-2.svg, ...), each written whole or not at all'],
+    ['--style WORD', 'screen (the default), slide, or journal (black and white)'],
+    ['--paper WORD', 'A4 (the default) or letter'],
+    ['--author A, --date D, --revision R', 'for the title block; no date is set unless it is given, so the same design gives the same bytes'],
+    ['--over FILE', 'another design laid over this one, with what differs and what was changed; up to three times'],
+    ['--worst-corner', 'the plate where the hardest requirement is at its worst'],
+    ['--contacts', 'each metal contact from near'],
+    ['--workings FIGURE', 'how a figure comes about, as an appendix; layers.cap.ecMinusEf, junctions.0.builtin, contacts.top.rhoC; any number of times'],
+    SET, TOLERANCES,
+  ],
+  notes: '',
   async run(args, streams) {
     const known = { '-o': 'output', '--output': 'output', '--style': 'style', '--paper': 'paper', '--author': 'author', '--date': 'date', '--revision': 'revision', '--tolerances': 'tolerances' };
-    const { file, set, options } = parseArguments(args, usage, known);
+    const { rest, flags, repeated } = takeFlags(args, ['--worst-corner', '--contacts'], ['--over', '--workings'], Object.keys(known));
+    const { file, set, options } = parseArguments(rest, usage, known);
     const { output, author = '', date = '', revision = '' } = options;
     if (output === undefined) throw new UsageError('no output is named; write -o OUT.pdf or -o OUT.svg');
     const ending = /\.(pdf|svg)$/i.exec(output)?.[1].toLowerCase();
@@ -30,9 +49,16 @@ export const sheet: Command = {
     const design = await readDesignFile(file, streams);
     const result = solved(design, set, streams);
     if (result === null) return EXIT.noAnswer;
-    const pages = reviewSheet({ design, result, requirements: judged(design, set, tolerances), tolerances, set, author, date, revision, style, paper });
-    if (ending === 'pdf') await write(output, sheetPdf(pages, await installedFonts(), { title: design.title, author, provenance: result.provenance }));
-    else for (const { name, text } of sheetSvgs(pages, output.slice(0, -'.svg'.length))) await write(name, text);
+    const requirements = judged(design, set, tolerances);
+    const of = { design, result, set, requirements, tolerances };
+    const comparison = await comparisonOf(file, repeated['--over'], streams);
+    if (comparison === null) return EXIT.noAnswer;
+    const pages = reviewSheet({
+      ...of, author, date, revision, style, paper, comparison, workings: workingsAsked(of, repeated['--workings']),
+      ...(flags.has('--worst-corner') ? { corner: cornerOf(of) } : {}), ...(flags.has('--contacts') ? { closeUps: closeUpsOf(of) } : {}),
+    });
+    if (ending === 'pdf') await writeWhole(output, sheetPdf(pages, await installedFonts(), { title: design.title, author, provenance: result.provenance }));
+    else for (const { name, text } of sheetSvgs(pages, output.slice(0, -'.svg'.length))) await writeWhole(name, text);
     return EXIT.done;
   },
 };
@@ -53,13 +79,5 @@ async function installedFonts(): Promise<FontFiles> {
     return { normal, bold };
   } catch {
     throw new UsageError('the letters of the PDF are not installed; run npm ci, or write -o OUT.svg');
-  }
-}
-
-async function write(file: string, content: string | Uint8Array): Promise<void> {
-  try {
-    await writeFile(file, content);
-  } catch (error) {
-    throw new UsageError(`${quoted(file)} cannot be written (${(error as NodeJS.ErrnoException).code ?? 'unknown reason'})`);
   }
 }

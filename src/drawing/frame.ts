@@ -39,11 +39,14 @@ export interface FrameOptions {
   vacuum: boolean;
   full: boolean;
   captionLines: number;
+  /** a full frame keeps a line free above the area for the key of what is laid over */ keyed?: boolean;
   prefix: string;
 }
 
 /** Below this width texts and lanes shrink, px. */
 const NARROW = 600;
+/** Of the small letters. */
+const KEY_LINE = 1.4;
 
 export function plateFrame(result: Result, style: Style, options: FrameOptions): Frame {
   const { width, height } = options;
@@ -58,7 +61,7 @@ export function plateFrame(result: Result, style: Style, options: FrameOptions):
   const area = {
     left: 2.6 * text + 2.9 * small + lanes.top,
     right: width - 3 * text - lanes.bottom,
-    top: options.full ? 3.2 * text : 1.2 * text,
+    top: options.full ? 3.2 * text + (options.keyed ? KEY_LINE * small : 0) : 1.2 * text,
     bottom: height - strip - 2.1 * small - 1.6 * text - (options.full ? options.captionLines * 1.4 * small + 0.6 * text : 0),
   };
   if (!(area.right - area.left >= 40 && area.bottom - area.top >= 40)) throw new RangeError(`no room for a plate: ${width} by ${height} px`);

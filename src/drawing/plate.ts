@@ -33,8 +33,10 @@ export interface PlateOptions {
   /** ids of dimension lines put away */ hidden?: string[];
   /** dragged dimension lines: offset in px from where they would stand */ moved?: Record<string, [number, number]>;
   /** other results to compare with: their band edges on the same axes, thin and dashed, the energy axis wide enough for all */ variants?: Variant[];
+  /** name of the plate's own result, at the head of the key of the variants */ base?: string;
   /** the result is of an earlier input */ stale?: boolean;
   /** full: with strip of layer names, title and caption, for export. bare: the page draws the strip itself */ frame?: 'bare' | 'full';
+  /** sentences that the caption of a full frame begins with */ remarks?: readonly string[];
   /** of the ids in this drawing; give each of several drawings on a page its own */ prefix?: string;
 }
 
@@ -73,20 +75,20 @@ export function drawPlate(result: Result, options: Partial<PlateOptions>): Plate
   const style = styleOf(o.style);
   const full = o.frame === 'full';
   const frameOf = (captionLines: number): Frame => {
-    const asked: FrameOptions = { ...o, full, captionLines, energyDomain: o.energyDomain ?? sharedDomain(result, o.variants ?? [], o.vacuum) };
+    const asked: FrameOptions = { ...o, full, captionLines, keyed: (o.variants ?? []).length > 0, energyDomain: o.energyDomain ?? sharedDomain(result, o.variants ?? [], o.vacuum) };
     return plateFrame(result, style, asked);
   };
   let frame = frameOf(1);
   let lines: string[] = [];
   if (full) {
     // The caption's length decides the height left for the plate; its words depend on widths alone.
-    lines = wrapped(captionSentences(frame, o.shading), frame.small, o.width - 2.4 * frame.text);
+    lines = wrapped([...(o.remarks ?? []), ...captionSentences(frame, o.shading)], frame.small, o.width - 2.4 * frame.text);
     frame = frameOf(lines.length);
   }
   const spans = visibleSpans(result, frame.depth);
   const shading = shadingOf(frame, spans, o.shading);
   const metalShapes = metals(frame);
-  const variantShapes = variantEdges(frame, o.variants ?? []);
+  const variantShapes = variantEdges(frame, o.variants ?? [], o.base);
   const taken = [...metalShapes, ...variantShapes].flatMap((s) => (s.kind === 'rect' ? [s] : []));
   const { shapes: dimensionShapes, dimensions } = dimensionMarks(frame, spans, taken, o.hidden ?? [], o.moved ?? {});
   const inked: Shape[] = [

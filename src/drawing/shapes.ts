@@ -23,6 +23,18 @@ export interface Paint {
   /** id of a clip of this drawing */ clip?: string;
   cap?: 'butt' | 'round';
   join?: 'miter' | 'round';
+  /** what it belongs to for those who hear the page; shapes that share one object are one thing, those without are ornament */ part?: Part;
+}
+
+/** A thing on a page, as a program that reads documents aloud tells it. */
+export type Part =
+  | { as: 'title' | 'heading' | 'paragraph' }
+  | { as: 'figure'; /** what it shows, in words */ alt: string }
+  | { as: 'cell'; /** cells that share one object are one table */ table: PartTable; row: number; column: number };
+
+export interface PartTable {
+  columns: number;
+  /** rows of headings */ heads: number;
 }
 
 export interface PathShape extends Paint {

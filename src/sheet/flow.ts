@@ -1,4 +1,4 @@
-import type { Shape } from '../drawing/shapes.ts';
+import type { Clip, Gradient, Part, Shape } from '../drawing/shapes.ts';
 import { brokenLines, oneLine } from './lines.ts';
 import type { SheetLook } from './look.ts';
 
@@ -6,6 +6,8 @@ import type { SheetLook } from './look.ts';
 export interface Piece {
   /** px */ height: number;
   draw(x: number, y: number): Shape[];
+  /** what its shapes refer to; ids unique within the sheet */ defs?(x: number, y: number): { gradients: Gradient[]; clips: Clip[] };
+  /** of a picture: what it shows, in words */ description?: string;
 }
 
 /** A heading with pieces under it, such as a table with its rows. */
@@ -14,6 +16,14 @@ export interface Section {
   /** a sentence under it, on its first page */ note?: string;
   /** repeated on every page that the section reaches */ head?: Piece;
   pieces: Piece[];
+}
+
+/** What stands on a page. */
+export interface PageMarks {
+  shapes: Shape[];
+  gradients: Gradient[];
+  clips: Clip[];
+  /** of its pictures, in words */ descriptions: string[];
 }
 
 /** px */
@@ -31,18 +41,25 @@ const TOGETHER = 2;
 /**
  * Lays sections under each other, page after page. A piece that does not fit begins the next page; its section's heading comes with it, marked as continued.
  *
- * @returns shapes of each page; at least one page
+ * @returns at least one page
  */
-export function pagesOf(sections: readonly Section[], room: Room, look: SheetLook): Shape[][] {
-  const pages: Shape[][] = [[]];
+export function pagesOf(sections: readonly Section[], room: Room, look: SheetLook): PageMarks[] {
+  const blank = (): PageMarks => ({ shapes: [], gradients: [], clips: [], descriptions: [] });
+  const pages: PageMarks[] = [blank()];
   let y = room.y;
   const bottom = room.y + room.height;
   const turn = (): void => {
-    pages.push([]);
+    pages.push(blank());
     y = room.y;
   };
-  const put = (piece: Piece): void => {
-    pages[pages.length - 1].push(...piece.draw(room.x, y));
+  const put = (piece: Piece, again = false): void => {
+    const page = pages[pages.length - 1];
+    const shapes = piece.draw(room.x, y);
+    page.shapes.push(...(again ? shapes.map(({ part: _, ...shape }) => shape as Shape) : shapes));
+    const defs = piece.defs?.(room.x, y);
+    page.gradients.push(...(defs?.gradients ?? []));
+    page.clips.push(...(defs?.clips ?? []));
+    if (piece.description !== undefined) page.descriptions.push(piece.description);
     y += piece.height;
   };
   for (const section of sections) {
@@ -51,7 +68,7 @@ export function pagesOf(sections: readonly Section[], room: Room, look: SheetLoo
     const start = height(first) + height(section.pieces.slice(0, TOGETHER));
     if (y > room.y) y += GAP;
     if (y > room.y && y + Math.min(start, room.height) > bottom) turn();
-    first.forEach(put);
+    first.forEach((piece) => put(piece));
     let alone = true;
     for (const [i, piece] of section.pieces.entries()) {
       // The last one is not left alone on its page: the one before it goes along.
@@ -60,7 +77,8 @@ export function pagesOf(sections: readonly Section[], room: Room, look: SheetLoo
       // A piece of more than a page stays where it is: a new page would not help it.
       if (!alone && y + needed > bottom) {
         turn();
-        headingPieces(section, true, room, look).forEach(put);
+        // Headings that are repeated are said once.
+        headingPieces(section, true, room, look).forEach((piece) => put(piece, true));
       }
       put(piece);
       alone = false;
@@ -83,7 +101,8 @@ function headingPieces(section: Section, continued: boolean, room: Room, look: S
   const { style, head, small, leading } = look;
   if (section.title !== '') {
     const title = oneLine(continued ? `${section.title}, continued` : section.title, head, room.width, true);
-    out.push({ height: 1.5 * head, draw: (x, y) => [{ kind: 'text', role: 'section', x, y: y + 1.05 * head, size: head, anchor: 'start', weight: 'bold', runs: [{ text: title }], fill: style.ink }] });
+    const part: Part = { as: 'heading' };
+    out.push({ height: 1.5 * head, draw: (x, y) => [{ kind: 'text', role: 'section', part, x, y: y + 1.05 * head, size: head, anchor: 'start', weight: 'bold', runs: [{ text: title }], fill: style.ink }] });
   }
   if (section.note && !continued) out.push(paragraph(section.note, look, room.width, { size: small, fill: style.faint }));
   if (section.head) out.push(section.head);
@@ -97,11 +116,12 @@ export function paragraph(text: string, look: SheetLook, width: number, of: { si
   const size = of.size ?? look.text;
   const indent = of.lead ? 1.6 * size : 0;
   const lines = brokenLines(text, size, width - indent, MOST_LINES);
+  const part: Part = { as: 'paragraph' };
   return {
     height: lines.length * leading * size + 2,
     draw: (x, y) => [
-      ...(of.lead ? [{ kind: 'text' as const, role: 'lead', x, y: y + 0.8 * leading * size, size, anchor: 'start' as const, runs: [{ text: of.lead }], fill: of.fill ?? style.ink }] : []),
-      ...lines.map((line, i): Shape => ({ kind: 'text', role: 'sentence', x: x + indent, y: y + (i + 0.8) * leading * size, size, anchor: 'start', runs: [{ text: line }], fill: of.fill ?? style.ink })),
+      ...(of.lead ? [{ kind: 'text' as const, role: 'lead', part, x, y: y + 0.8 * leading * size, size, anchor: 'start' as const, runs: [{ text: of.lead }], fill: of.fill ?? style.ink }] : []),
+      ...lines.map((line, i): Shape => ({ kind: 'text', role: 'sentence', part, x: x + indent, y: y + (i + 0.8) * leading * size, size, anchor: 'start', runs: [{ text: line }], fill: of.fill ?? style.ink })),
     ],
   };
 }

@@ -88,7 +88,7 @@ export function printedUnits(text: string): string {
     .replace(/(\d)e\+0*(\d)/g, '$1e$2')
     .replace(/(\d)e-0*(\d)/g, '$1e−$2')
     .replace(/(^|[\s(])-(?=[\d.])/g, '$1−')
-    .replace(/\^([-+]?\d+)(?![\d.])/g, (_, digits: string) => [...digits].map((d) => RAISED[d]).join(''))
+    .replace(/\^([-+]?\d+)(?!\d|\.\d)/g, (_, digits: string) => [...digits].map((d) => RAISED[d]).join(''))
     .replace(/(^|[\d\s(])um(?=$|[\s,;)])/g, '$1µm')
     .replace(/(^|[\d\s(])ohm(?=$|[\s,;)/])/g, '$1Ω')
     .replace(/(^|[\d\s(])deg ?C(?=$|[\s,;)])/g, '$1°C');

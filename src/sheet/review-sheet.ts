@@ -1,19 +1,25 @@
+import type { CloseUp } from '../contacts/close-up.ts';
 import type { Design } from '../design/types.ts';
 import { drawPlate, type PlateOptions } from '../drawing/plate.ts';
-import type { Variant } from '../drawing/marks/variants.ts';
-import type { Drawing, Shape } from '../drawing/shapes.ts';
+import type { Drawing } from '../drawing/shapes.ts';
+import type { Corner } from '../requirements/corner.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
+import type { Workings } from '../workings/workings.ts';
 import { assumptionSentences, CAUTIONS } from './assumptions.ts';
+import { closeUpSections, comparisonSections, cornerSection } from './closer-looks.ts';
+import { MOST_VARIANTS, type SheetVariant } from './comparison.ts';
 import { pagesOf, paragraph, sectionHeight, type Piece, type Room, type Section } from './flow.ts';
 import { printedUnits } from './lines.ts';
 import { sheetLook, type Paper, type SheetLook, type SheetStyle } from './look.ts';
-import { placed } from './place-drawing.ts';
+import { picturePiece } from './pictures.ts';
 import { requirementTable, resultTables } from './result-tables.ts';
-import { sourceTables } from './source-tables.ts';
+import { parametersInUse } from './parameters.ts';
+import { citedWorks, sourceTables } from './source-tables.ts';
 import { layerTable, variableTable } from './stack-tables.ts';
 import { tableSection, type SheetTable } from './table.ts';
 import { titleBlock, titleBlockHeight } from './title-block.ts';
+import { workingsSections } from './workings-sections.ts';
 
 /** How the plate looks on the page, which it keeps on the sheet. */
 export type SheetPlate = Partial<Pick<PlateOptions, 'depth' | 'window' | 'energyWindow' | 'shading' | 'vacuum' | 'levels' | 'hidden'>>;
@@ -31,7 +37,10 @@ export interface SheetInput {
   style: SheetStyle;
   paper: Paper;
   plate?: SheetPlate;
-  /** results laid over the plate for comparison */ variants?: readonly Variant[];
+  /** up to three designs laid over this one on a plate of their own, with what differs and what was changed */ comparison?: { /** of this design beside the others */ base: string; variants: readonly SheetVariant[] };
+  /** the plate where a requirement is at its worst */ corner?: Corner;
+  /** metal contacts from near */ closeUps?: readonly CloseUp[];
+  /** figures whose workings stand at the end */ workings?: readonly Workings[];
   /** of random draws behind figures of the result */ seed?: number;
 }
 
@@ -39,10 +48,11 @@ export interface SheetInput {
  * The review sheet of a design: pages with the plate, the layer table, requirements, results, assumptions, parameters with their sources, and on each page the title block with
  * the cautions. The same input gives the same drawings.
  *
- * @throws {RangeError} unknown style or paper
+ * @throws {RangeError} unknown style or paper; more designs than one plate tells apart
  */
 export function reviewSheet(input: SheetInput): Drawing[] {
   const look = sheetLook(input.style, input.paper);
+  if ((input.comparison?.variants.length ?? 0) > MOST_VARIANTS) throw new RangeError(`no more than ${MOST_VARIANTS} designs can be laid over the sheet's own`);
   const title = input.title?.trim() || input.design.title || 'Untitled design';
   const caution = CAUTIONS.join(' ');
   const room: Room = {
@@ -51,15 +61,15 @@ export function reviewSheet(input: SheetInput): Drawing[] {
   };
   const sections = sectionsOf(input, look, room);
   const plate = plateOf(input, look, room, sections);
-  const pages = pagesOf([{ title: '', pieces: [plate.piece] }, ...sections], room, look);
+  const pages = pagesOf([{ title: '', pieces: [plate] }, ...sections], room, look);
   const { program, model, presets, design } = input.result.provenance;
-  return pages.map((shapes, i): Drawing => {
+  return pages.map(({ shapes, gradients, clips, descriptions }, i): Drawing => {
     const block = titleBlock({ title, author: input.author, date: input.date, revision: input.revision, page: i + 1, pages: pages.length, program: `Halfmark ${program}, model ${model}`, parameters: presets, design, caution }, look);
+    const seen = [...(i === 0 ? [] : [`Page ${i + 1} of the review sheet of ${title}.`]), ...descriptions];
     return {
-      width: look.width, height: look.height, background: look.style.ground, font: look.font, shapes: [...shapes, ...block],
-      gradients: i === 0 ? plate.drawing.gradients : [], clips: i === 0 ? plate.drawing.clips : [],
+      width: look.width, height: look.height, background: look.style.ground, font: look.font, shapes: [...shapes, ...block], gradients, clips,
       title: `Review sheet: ${title}, page ${i + 1} of ${pages.length}`,
-      description: i === 0 ? `${plate.description} ${caution}` : `Page ${i + 1} of the review sheet of ${title}. ${caution}`,
+      description: `${seen.join(' ')} ${caution}`,
     };
   });
 }
@@ -84,11 +94,14 @@ function sectionsOf(input: SheetInput, look: SheetLook, room: Room): Section[] {
     ...(judged || unjudged === 0 ? [] : [sentences('Requirements', [`The design states ${unjudged} ${unjudged === 1 ? 'requirement, which was' : 'requirements, which were'} not judged for this sheet.`])]),
     ...maybe(variableTable(design, set)),
     ...resultTables(result).map(section),
-    ...maybe(variantTable(input.variants ?? [])),
+    ...(input.comparison && input.comparison.variants.length > 0 ? comparisonSections({ name: input.comparison.base, design, result }, input.comparison.variants, input.plate ?? {}, room, look) : []),
+    ...(input.corner ? [cornerSection(input.corner, result, input.plate ?? {}, room, look)] : []),
+    ...closeUpSections(input.closeUps ?? [], room, look),
     sentences('Conditions and assumptions', assumptionSentences(design, result, { set, tolerances, judged, seed: input.seed ?? null })),
     sentences('Validity: where this design strains the model', result.warnings.length === 0 ? ['Nothing was found.'] : result.warnings.map(printedUnits)),
     ...(design.notes?.trim() ? [sentences('Notes', notesOf(design.notes))] : []),
     ...sourceTables(design, result).map(section),
+    ...workingsSections(input.workings ?? [], citedWorks(parametersInUse(design, result)), room, look),
   ];
 }
 
@@ -99,18 +112,8 @@ function notesOf(notes: string): string[] {
   return whole ? paragraphs : [...paragraphs.slice(0, MOST_PARAGRAPHS), '… (the rest stands in the design file)'];
 }
 
-/** The other results on the plate, so that each can be found again. */
-function variantTable(variants: readonly Variant[]): SheetTable | null {
-  if (variants.length === 0) return null;
-  return {
-    title: 'Laid over the plate',
-    columns: [{ heading: 'Name', align: 'start' }, { heading: 'Title', align: 'start', wide: true }, { heading: 'Temperature', unit: 'K', align: 'end' }, { heading: 'Design', align: 'start' }],
-    rows: variants.map(({ name, result }) => [[[{ text: name }], [{ text: result.title }], [{ text: String(Number(result.conditions.temperature_K.toPrecision(6))) }], [{ text: result.provenance.design }]]]),
-  };
-}
-
 /** The plate takes what the layer table (and the requirements, if both fit) leave of the first page, within bounds. */
-function plateOf({ result, plate, variants, title, design, requirements }: SheetInput, look: SheetLook, room: Room, sections: Section[]): { piece: Piece; drawing: ReturnType<typeof placed>; description: string } {
+function plateOf({ result, plate, title, design, requirements }: SheetInput, look: SheetLook, room: Room, sections: Section[]): Piece {
   const [least, most] = look.plateShare.map((share) => share * room.height);
   const gap = 14;
   let height = least;
@@ -119,9 +122,7 @@ function plateOf({ result, plate, variants, title, design, requirements }: Sheet
     const rest = room.height - sections.slice(0, count).reduce((sum, s) => sum + sectionHeight(s, room, look) + gap, 0);
     if (rest >= least) height = Math.min(rest, most);
   }
-  const shown = drawPlate(title?.trim() ? { ...result, title: title.trim() } : { ...result, title: result.title || design.title }, { ...plate, variants: variants ? [...variants] : undefined, style: look.plate, width: room.width, height, frame: 'full', prefix: 'sheet-plate' });
+  const shown = drawPlate(title?.trim() ? { ...result, title: title.trim() } : { ...result, title: result.title || design.title }, { ...plate, style: look.plate, width: room.width, height, frame: 'full', prefix: 'sheet-plate' });
   // Its own fonts give way to the sheet's; its ground is the sheet's already.
-  const drawing = placed(shown, room.x, room.y);
-  const shapes: Shape[] = drawing.shapes;
-  return { piece: { height, draw: () => shapes }, drawing, description: shown.description };
+  return picturePiece(shown);
 }

@@ -12,17 +12,13 @@ const MOST_VALUES = 12;
 /** Every parameter in use, and the works that they stand in, numbered as they are first met. */
 export function sourceTables(design: Design, result: Result): SheetTable[] {
   const rows = parametersInUse(design, result);
-  const works: string[] = [];
-  const numberOf = (work: string): number => {
-    if (!works.includes(work)) works.push(work);
-    return works.indexOf(work) + 1;
-  };
+  const works = citedWorks(rows);
   const parameters: SheetTable = {
     title: 'Parameters in use and where they stand',
     note: 'Seen in print: the figure was read on the page cited. From memory: the work is cited from memory, look it up before you rely on the figure. Computed: derived from others, as the remark says. Own value: entered in this design.',
     columns: [{ heading: 'Of', align: 'start' }, { heading: 'Values', align: 'start', wide: true }, { heading: 'Source', align: 'start' }, { heading: 'Checked', align: 'start' }, { heading: 'Remark', align: 'start', wide: true }],
     rows: rows.flatMap((row) => {
-      const source: Cell = [{ text: `[${numberOf(row.work)}]` }];
+      const source: Cell = [{ text: `[${works.indexOf(row.work) + 1}]` }];
       return inParts(row.values, MOST_VALUES).map((values): Cell[][] => [[[{ text: row.of }], [{ text: values.map(valueText).join('; ') }], source, [{ text: checkedWords(row) }], [{ text: printedUnits(row.origin.note) }]]]);
     }),
   };
@@ -32,6 +28,11 @@ export function sourceTables(design: Design, result: Result): SheetTable[] {
     rows: works.map((work, i) => [[[{ text: `[${i + 1}]` }], [{ text: work }]]]),
   };
   return [parameters, cited];
+}
+
+/** The works behind parameters in the order in which they are met: a work's number is its place. */
+export function citedWorks(rows: readonly ParameterRow[]): string[] {
+  return [...new Set(rows.map(({ work }) => work))];
 }
 
 function valueText({ path, text }: { path: string; text: string }): string {

@@ -1,4 +1,4 @@
-import type { Shape } from '../drawing/shapes.ts';
+import type { Part, PartTable, Shape } from '../drawing/shapes.ts';
 import { mixed } from '../drawing/styles.ts';
 import type { Piece, Section } from './flow.ts';
 import { brokenLines, lineWidth, widestWord } from './lines.ts';
@@ -54,6 +54,8 @@ export function tableSection(table: SheetTable, look: SheetLook, width: number):
   const at = (column: number, x: number): { x: number; anchor: 'start' | 'end' } =>
     table.columns[column].align === 'end' ? { x: x + lefts[column] + widths[column] - PAD_X, anchor: 'end' } : { x: x + lefts[column] + PAD_X, anchor: 'start' };
 
+  const parts: PartTable = { columns: table.columns.length, heads: 1 };
+  const headParts = table.columns.map((_, column): Part => ({ as: 'cell', table: parts, row: 0, column }));
   const headings = table.columns.map((column, i) => [...brokenLines(column.heading, small, widths[i] - 2 * PAD_X), ...(column.unit ? brokenLines(`(${column.unit})`, small, widths[i] - 2 * PAD_X) : [])]);
   const deepest = Math.max(...headings.map((h) => h.length));
   const headHeight = deepest * leading * small + 2 * PAD_Y;
@@ -61,20 +63,28 @@ export function tableSection(table: SheetTable, look: SheetLook, width: number):
     height: headHeight,
     draw: (x, y) => [
       ...headings.flatMap((lines, i) =>
-        lines.map((line, l): Shape => ({ kind: 'text', role: 'column-heading', ...at(i, x), y: y + PAD_Y + (deepest - lines.length + l + 0.8) * leading * small, size: small, runs: [{ text: line }], fill: style.faint })),
+        lines.map((line, l): Shape => ({ kind: 'text', role: 'column-heading', part: headParts[i], ...at(i, x), y: y + PAD_Y + (deepest - lines.length + l + 0.8) * leading * small, size: small, runs: [{ text: line }], fill: style.faint })),
       ),
       { kind: 'line', role: 'head-rule', x1: x, x2: x + width, y1: y + headHeight, y2: y + headHeight, stroke: style.ink, width: 1 },
     ],
   };
-  return { title: table.title, note: table.note, head: columnHeads, pieces: table.rows.map((row) => rowPiece(row, widths, at, look, width)) };
+  let count = 1;
+  const pieces = table.rows.map((row) => {
+    const piece = rowPiece(row, { parts, first: count }, widths, at, look, width);
+    count += row.length;
+    return piece;
+  });
+  return { title: table.title, note: table.note, head: columnHeads, pieces };
 }
 
-function rowPiece(row: Cell[][], widths: number[], at: (column: number, x: number) => { x: number; anchor: 'start' | 'end' }, look: SheetLook, width: number): Piece {
+/** @param of  the table and the number of the row's first line in it */
+function rowPiece(row: Cell[][], of: { parts: PartTable; first: number }, widths: number[], at: (column: number, x: number) => { x: number; anchor: 'start' | 'end' }, look: SheetLook, width: number): Piece {
   const { style, text, leading } = look;
   const most = Math.max(2, Math.floor(MOST_LINES / row.length));
   const lines = row.map((cells) => cells.map((cell, c) => set(cell, widths[c] - 2 * PAD_X, look, most)));
   const heights = lines.map((cells) => Math.max(leading * text, ...cells.map((cell) => cell.reduce((sum, line) => sum + leading * line.size, 0))));
   const height = heights.reduce((a, b) => a + b, 0) + 2 * PAD_Y;
+  const cellParts = lines.map((cells, l) => cells.map((_, column): Part => ({ as: 'cell', table: of.parts, row: of.first + l, column })));
   return {
     height,
     draw(x, y) {
@@ -84,7 +94,7 @@ function rowPiece(row: Cell[][], widths: number[], at: (column: number, x: numbe
         cells.forEach((cell, c) => {
           let down = top;
           for (const { words, size, line } of cell) {
-            if (line !== '') shapes.push({ kind: 'text', role: 'cell', ...at(c, x), y: down + 0.8 * leading * size, size, runs: [{ text: line }], fill: words.trouble ? style.trouble : words.faint ? style.faint : style.ink, ...(words.bold ? { weight: 'bold' as const } : {}) });
+            if (line !== '') shapes.push({ kind: 'text', role: 'cell', part: cellParts[l][c], ...at(c, x), y: down + 0.8 * leading * size, size, runs: [{ text: line }], fill: words.trouble ? style.trouble : words.faint ? style.faint : style.ink, ...(words.bold ? { weight: 'bold' as const } : {}) });
             down += leading * size;
           }
         });

@@ -1,4 +1,4 @@
-import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
@@ -42,6 +42,17 @@ describe('halfmark sheet', () => {
     expect(wordsOf(at('d.pdf'))).toContain('Set for this sheet: temperature = 77 K.');
   });
 
+  it('adds the sections that are asked for', async () => {
+    const starter = join(import.meta.dirname, '../../src/design/starters/graded-cap.json');
+    const other = JSON.parse(readFileSync(starter, 'utf8')) as { variables: { value: string }[] };
+    other.variables[0].value = '3e18 cm^-3';
+    writeFileSync(at('lighter.halfmark.json'), JSON.stringify(other));
+    const { code, error } = await call([starter, '-o', at('more.pdf'), '--over', at('lighter.halfmark.json'), '--worst-corner', '--contacts', '--workings=layers.cap.ecMinusEf', '--workings', 'layers.0.n']);
+    expect([code, error]).toEqual([0, '']);
+    const words = wordsOf(at('more.pdf'));
+    for (const text of ['Changes from graded-cap to lighter', 'At the worst corner', 'From near: Ti on cap', 'Workings: Ec − EF of cap', 'Workings: n of cap']) expect(words).toContain(text);
+  }, 30_000);
+
   it('writes an SVG a page', async () => {
     expect((await call([fixture, '-o', at('e.svg'), '--tolerances', 'none'])).code).toBe(0);
     let pages = 0;
@@ -54,6 +65,10 @@ describe('halfmark sheet', () => {
       [[fixture], /no output is named/],
       [[fixture, '-o', at('x.png')], /neither \.pdf nor \.svg/],
       [[fixture, '-o', at('x.pdf'), '--style', 'jurnal'], /--style is 'jurnal'; screen, slide, journal would do; did you mean journal\?/],
+      [[fixture, '-o', at('x.pdf'), '--tolerances', 'none', '--workings', 'layers.cap.ecMinus'], /there is no figure 'layers\.cap\.ecMinus' to show the workings of; did you mean layers\.cap\.ecMinusEf\?/],
+      [[fixture, '-o', at('x.pdf'), '--tolerances', 'none', '--over', fixture, '--over', fixture, '--over', fixture, '--over', fixture], /no more than 3/],
+      [[fixture, '-o', at('x.pdf'), '--tolerances', 'none', '--over', at('none.json')], /there is no file/],
+      [[fixture, '-o', at('x.pdf'), '--worst-corner=1'], /takes no value/],
       [[fixture, '-o', at('x.pdf'), '--paper', 'A3'], /--paper is 'A3'; A4, letter would do/],
       [[fixture, '-o', at('no/such/folder/x.pdf')], /cannot be written/],
       [[at('none.json'), '-o', at('x.pdf')], /there is no file/],

@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { plainText, type Shape } from '../../src/drawing/shapes.ts';
-import { pagesOf, type Piece, type Section } from '../../src/sheet/flow.ts';
+import { pagesOf as laidOut, type Piece, type Section } from '../../src/sheet/flow.ts';
 import { sheetLook } from '../../src/sheet/look.ts';
 
 const look = sheetLook('screen', 'A4');
+const pagesOf = (...args: Parameters<typeof laidOut>): Shape[][] => laidOut(...args).map((page) => page.shapes);
 const room = { x: 10, y: 10, width: 300, height: 200 };
 const piece = (name: string, height: number): Piece => ({ height, draw: (x, y) => [{ kind: 'rect', role: name, x, y, w: 1, h: height }] });
 const section = (title: string, heights: number[], head?: Piece): Section => ({ title, head, pieces: heights.map((h, i) => piece(`${title} ${i + 1}`, h)) });

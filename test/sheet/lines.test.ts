@@ -49,6 +49,7 @@ describe('a typed quantity in print', () => {
     expect(printedUnits('-40 degC')).toBe('−40 °C');
     expect(printedUnits('(m_hh^1.5 + m_lh^1.5)^(2/3)')).toBe('(m_hh^1.5 + m_lh^1.5)^(2/3)');
     expect(printedUnits('Ncap-2')).toBe('Ncap-2');
+    expect(printedUnits('It was 1e17 cm^-3.')).toBe('It was 1e17 cm⁻³.');
   });
 
   it('keeps a heading of two symbols on one line', () => {

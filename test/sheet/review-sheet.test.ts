@@ -182,11 +182,11 @@ describe('the review sheet', () => {
   it('says what was set for it, the seed, and what is laid over the plate', () => {
     const design = starter('graded-cap');
     const set = { temperature: '77 K', Ncap: '2e19 cm^-3' };
-    const text = allText(reviewSheet({ ...inputOf('graded-cap'), design, result: solved(design, set), set, seed: 1234, variants: [{ name: 'warm', result: solved(design) }], requirements: [] }));
+    const text = allText(reviewSheet({ ...inputOf('graded-cap'), design, result: solved(design, set), set, seed: 1234, comparison: { base: 'cold', variants: [{ name: 'warm', design, result: solved(design) }] }, requirements: [] }));
     expect(text).toContain('Set for this sheet: temperature = 77 K, Ncap = 2e19 cm⁻³.');
     expect(text).toContain('for this sheet; the design says 1e19 cm⁻³');
     expect(text).toContain('Seed of the random draws: 1234.');
-    expect(text).toContain('Laid over the plate');
+    expect(text).toContain('Variants laid over each other');
     expect(text).toContain('warm');
   });
 
