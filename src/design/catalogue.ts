@@ -46,6 +46,12 @@ function byHost(entries: Entry<DopantInput>[]): Map<string, Map<string, Entry<Do
   return hosts;
 }
 
+/** Nothing is said of where a value stands. */
+export function isUnsourced(source: unknown): boolean {
+  if (source !== null && typeof source === 'object') return 'source' in source ? isUnsourced(source.source) : Object.keys(source).length === 0;
+  return source === undefined || source === null || (typeof source === 'string' && source.trim() === '');
+}
+
 /** The presets with a design's own entries over them. */
 export function catalogueOf(custom: Custom | undefined, complaints: Complaint[] = []): Catalogue {
   if (!custom) return presetCatalogue;
@@ -55,6 +61,7 @@ export function catalogueOf(custom: Custom | undefined, complaints: Complaint[] 
       const path = `custom.${key}[${i}]`;
       if (seen.has(name(entry))) complaints.push({ path: `${path}.id`, message: `'${entry.id}' is there twice; each entry needs an id of its own` });
       seen.add(name(entry));
+      if (isUnsourced((entry as { source?: unknown }).source)) complaints.push({ path: `${path}.source`, message: 'is empty; say where the values stand: author, year, table, or the measurement' });
       return { entry, path, preset: false };
     });
   };

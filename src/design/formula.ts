@@ -48,7 +48,8 @@ export function askFormula({ formula: text }: FormulaInput, kind: KindName, path
  */
 export function tryFormulas(layers: readonly Layer[], temperature: number, range: readonly [number, number] | null, catalogue: Catalogue, ask: Asker): void {
   const [low, high] = [Math.min(temperature, range?.[0] ?? temperature), Math.max(temperature, range?.[1] ?? temperature)];
-  const temperatures = [temperature, REFERENCE, low, high, ...Array.from({ length: range === null ? 0 : TEMPERATURES }, (_, i) => low + ((high - low) * i) / (TEMPERATURES - 1))].filter((T) => T > 0);
+  const tried = [temperature, REFERENCE, low, high, ...Array.from({ length: range === null ? 0 : TEMPERATURES }, (_, i) => low + ((high - low) * i) / (TEMPERATURES - 1))].filter((T) => T > 0);
+  const temperatures = tried.sort((a, b) => a - b);
   const said = new Set<string>();
   for (const layer of layers) {
     const compositions = layer.x.kind === 'constant' ? [layer.x.value] : Array.from({ length: PLACES }, (_, i) => profileAt(layer.x, (layer.thickness * i) / (PLACES - 1), layer.thickness));

@@ -115,6 +115,9 @@ const metal = v.strictObject({
   source, sources,
 });
 
+const step = v.optional(v.strictObject({ constant: v.optional(energy), perX: v.optional(energy) }));
+const pairOffset = v.strictObject({ first: name, second: name, deltaEv: step, deltaEc: step, source });
+
 export const designShape = v.strictObject({
   format: v.literal(DESIGN_FORMAT),
   title: v.pipe(v.string(), v.maxLength(500)),
@@ -133,5 +136,5 @@ export const designShape = v.strictObject({
   requirements: v.optional(v.pipe(v.array(v.strictObject({
     quantity: limited, of: limitedOf, max: v.optional(v.union([text, flag])), min: v.optional(v.union([text, flag])), over: v.optional(v.picklist(['temperature', 'temperatureRange'])),
   })), v.maxLength(500))),
-  custom: v.optional(v.strictObject({ materials: v.optional(v.array(material)), dopants: v.optional(v.array(dopant)), metals: v.optional(v.array(metal)) })),
+  custom: v.optional(v.strictObject({ materials: v.optional(v.array(material)), dopants: v.optional(v.array(dopant)), metals: v.optional(v.array(metal)), offsets: v.optional(v.array(pairOffset)) })),
 });

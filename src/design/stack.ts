@@ -7,7 +7,7 @@ import { readContact, sheetBounds } from './contact.ts';
 import { readDopant } from './dopant.ts';
 import { tryFormulas } from './formula.ts';
 import { readMaterial } from './material.ts';
-import { publishedOffset } from './offset.ts';
+import { checkOffsets, ownOffset, publishedOffset } from './offset.ts';
 import { readProfile } from './profile.ts';
 import { readRequirements, type ReadRequirement } from './requirements.ts';
 import type { AssumptionsInput, Design, LayerInput } from './types.ts';
@@ -46,6 +46,7 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
   const top = readContact(design.top, 'top', layers[0]?.material ?? null, design.layers[0].name, catalogue, ask);
   const bottom = readContact(design.bottom, 'bottom', layers[last]?.material ?? null, design.layers[last].name, catalogue, ask);
   const rows = readInterfaces(design, ask);
+  checkOffsets(design.custom, catalogue, ask);
   const crystal = readCrystal(design, catalogue, ask);
   const requirements = readRequirements(design, ask);
   ask.complaints.push(...variables.afterthoughts);
@@ -54,7 +55,7 @@ export function toStack(design: Design, set: Readonly<Record<string, string>> = 
   const solved = layers as Layer[];
   const stack: Stack = {
     layers: solved,
-    interfaces: withPublished(solved, rows, catalogue, ask),
+    interfaces: withPublished(solved, rows, catalogue, design.custom, ask),
     top: top as Stack['top'],
     bottom: bottom as Stack['bottom'],
     temperature,
@@ -112,15 +113,19 @@ function readInterfaces(design: Design, ask: Asker): Interface[] {
   });
 }
 
-/** Puts the published offset of each pair of presets beside the design's own rows. */
-function withPublished(layers: Layer[], rows: Interface[], catalogue: Catalogue, ask: Asker): Interface[] {
+/** Puts the offset of each pair beside the design's own rows: the published one, and, where an interface says nothing itself, the design's own of the pair. */
+function withPublished(layers: Layer[], rows: Interface[], catalogue: Catalogue, custom: Design['custom'], ask: Asker): Interface[] {
   const out = [...rows];
   for (let l = 0; l + 1 < layers.length; l++) {
     const published = publishedOffset(layers[l], layers[l + 1], catalogue, ask);
-    if (!published) continue;
+    const own = ownOffset(layers[l], layers[l + 1], custom, ask);
+    if (!published && !own) continue;
     const at = out.findIndex((row) => row.index === l);
-    if (at < 0) out.push({ index: l, sheetCharge: 0, published });
-    else out[at] = { ...out[at], published };
+    const row: Interface = at < 0 ? { index: l, sheetCharge: 0 } : out[at];
+    const silent = row.dEc === undefined && row.dEv === undefined;
+    const next: Interface = { ...row, ...(published ? { published } : {}), ...(own && silent ? { ...(own.dEc === undefined ? {} : { dEc: own.dEc }), ...(own.dEv === undefined ? {} : { dEv: own.dEv }) } : {}) };
+    if (at < 0) out.push(next);
+    else out[at] = next;
   }
   return out;
 }

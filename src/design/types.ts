@@ -173,10 +173,20 @@ export interface MetalInput {
   sources?: Record<string, unknown>;
 }
 
+/** Band offset of a pair, edge of `second` less that of `first`: constant + perX x, x of the alloy of the two. One of both edges. */
+export interface OffsetInput {
+  first: string;
+  second: string;
+  deltaEv?: { constant?: Text; perX?: Text };
+  deltaEc?: { constant?: Text; perX?: Text };
+  source: unknown;
+}
+
 export interface Custom {
   materials?: MaterialInput[];
   dopants?: DopantInput[];
   metals?: MetalInput[];
+  /** win over the published ones, and count for own materials too */ offsets?: OffsetInput[];
 }
 
 export interface Design {

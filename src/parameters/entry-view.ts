@@ -5,7 +5,7 @@ import { textAtPath } from '../design/entry-path.ts';
 import type { Design, DopantInput, MaterialInput, MetalInput } from '../design/types.ts';
 import { entryValues, origin, type ValueOrigin } from '../sheet/entry-values.ts';
 import { parameterWords } from '../sheet/parameter-words.ts';
-import { missingValues, valueKind } from './value-kind.ts';
+import { missingFormulas, missingValues, valueKind } from './value-kind.ts';
 import type { KindName } from '../quantity/kinds.ts';
 
 /** One value of an entry as the page shows it. */
@@ -29,6 +29,7 @@ export interface ShownEntry {
   /** a preset of the same id is behind it */ preset: boolean;
   values: ShownValue[];
   /** paths that can be put in */ missing: { path: string; words: string }[];
+  /** paths of values that can be written as a formula instead */ formulas: { path: string; words: string }[];
 }
 
 /** The entry as the design has it, and the preset behind it. */
@@ -52,14 +53,24 @@ export function shownEntry(catalogue: Catalogue, key: EntryKey): ShownEntry | nu
     const published = before.find((row) => row.path === path);
     const differs = own && (published === undefined || published.text !== text || published.origin.source !== from.source);
     return {
-      path, text, words: wordsOf(path, entry), kind: valueKind(path), edited: textAtPath(entry, path) ?? text, origin: from, work: workOf(from.source, differs), own: differs, presetText: published?.text ?? null,
+      path, text, words: wordsOf(path, entry), kind: valueKind(path), edited: textAtPath(entry, path) ?? text, origin: from, work: workOf(from.source, differs), own: differs, presetText: published?.text ?? lawText(before, path),
     };
   });
-  const missing = missingValues(kindOf(key, entry), values.map(({ path }) => path)).map((path) => ({ path, words: parameterWords(path) }));
-  return { key, text: keyText(key), name: entry.name ?? entry.id, own, preset: preset !== null, values, missing };
+  const paths = values.map(({ path }) => path);
+  const named = (list: string[]): { path: string; words: string }[] => list.map((path) => ({ path, words: parameterWords(path) }));
+  return { key, text: keyText(key), name: entry.name ?? entry.id, own, preset: preset !== null, values, missing: named(missingValues(kindOf(key, entry), paths)), formulas: named(missingFormulas(kindOf(key, entry), paths)) };
 }
 
-function kindOf(key: EntryKey, entry: AnyEntry): Parameters<typeof missingValues>[0] {
+/** The published law that a formula stands for, in a line; null where there is none. */
+function lawText(published: readonly { path: string; text: string }[], path: string): string | null {
+  if (!path.endsWith('.formula')) return null;
+  const law = path.slice(0, path.lastIndexOf('.'));
+  const rows = published.filter((row) => row.path === law || row.path.startsWith(`${law}.`));
+  // An alloy without a law of its own is mixed from its ends.
+  return rows.length === 0 ? 'the rule between the ends' : rows.map((row) => (row.path === law ? row.text : `${parameterWords(row.path)} ${row.text}`)).join(', ');
+}
+
+export function kindOf(key: EntryKey, entry: AnyEntry): Parameters<typeof missingValues>[0] {
   if (key.list === 'dopants') return 'dopant';
   if (key.list === 'metals') return 'metal';
   const { alloy, insulator } = entry as MaterialInput;

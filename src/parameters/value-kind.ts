@@ -1,4 +1,5 @@
 import type { KindName } from '../quantity/kinds.ts';
+import type { Over } from '../quantity/read-formula.ts';
 
 /** Which kind of quantity a value of an entry is, by its path (design/entry-path.ts). The first pattern that fits counts. */
 const KINDS_BY_PATH: readonly [path: RegExp, kind: KindName][] = [
@@ -24,7 +25,28 @@ const KINDS_BY_PATH: readonly [path: RegExp, kind: KindName][] = [
 
 /** Shares, masses, permittivities, exponents and degeneracies are pure numbers. */
 export function valueKind(path: string): KindName {
-  return KINDS_BY_PATH.find(([pattern]) => pattern.test(path))?.[1] ?? 'number';
+  const value = path.replace(/\.formula$/, '');
+  return KINDS_BY_PATH.find(([pattern]) => pattern.test(value))?.[1] ?? 'number';
+}
+
+/** Values that can be written as a formula, and over what; each takes the place of the whole law that stands there. */
+const FORMULAS: Readonly<Record<'crystal' | 'alloy' | 'insulator' | 'dopant' | 'metal', Readonly<Record<string, readonly Over[]>>>> = {
+  crystal: { gap: ['T'], electronMass: ['T'], holeMass: ['T'], permittivity: ['T'], permittivityHighFrequency: ['T'] },
+  alloy: { gap: ['T', 'x'], affinity: ['x'], electronMass: ['T', 'x'], holeMass: ['T', 'x'], permittivity: ['T', 'x'], permittivityHighFrequency: ['T', 'x'] },
+  insulator: { gap: ['T'], permittivity: ['T'], permittivityHighFrequency: ['T'] },
+  dopant: { depth: ['x'] },
+  metal: {},
+};
+
+/** Over what a value may be a formula; null for one that may not. @param path  of the value, or of its formula */
+export function formulaOver(kind: keyof typeof FORMULAS, path: string): readonly Over[] | null {
+  const value = path.replace(/\.formula$/, '');
+  return Object.hasOwn(FORMULAS[kind], value) ? FORMULAS[kind][value] : null;
+}
+
+/** @returns paths of formulas that the entry does not have yet */
+export function missingFormulas(kind: keyof typeof FORMULAS, paths: readonly string[]): string[] {
+  return Object.keys(FORMULAS[kind]).map((value) => `${value}.formula`).filter((path) => !paths.includes(path));
 }
 
 /** Values that an entry may have and that can be put in where it has none, in the order of the document. */

@@ -62,6 +62,8 @@ const WORDS: readonly [path: RegExp, words: string][] = [
 
 /** Words of a value; a path that the list does not know is shown as it is, so that no value goes missing. */
 export function parameterWords(path: string): string {
+  const formula = /^(.+)\.formula$/.exec(path);
+  if (formula) return `${parameterWords(formula[1])} by formula`;
   for (const [pattern, words] of WORDS) {
     const found = pattern.exec(path);
     if (found) return words.replace('*', found[1] === undefined ? '' : found[1].replace(/([a-z])([A-Z])/g, (_, a: string, b: string) => `${a} ${b.toLowerCase()}`));

@@ -2,6 +2,7 @@ import { offsets, sources } from '../../presets/index.ts';
 import { catalogueOf, type Catalogue, type Entry } from '../design/catalogue.ts';
 import { readAssumptions } from '../design/stack.ts';
 import type { ContactInput, Design, DopantInput, DopantRow } from '../design/types.ts';
+import { isPair } from '../design/offset.ts';
 import { isOwnBarrier, ownValues } from '../parameters/own-value.ts';
 import type { Result } from '../result/types.ts';
 import { entryValues, origin, type EntryValue, type ValueOrigin } from './entry-values.ts';
@@ -166,6 +167,10 @@ function interfaceRows(design: Design, result: Result): ParameterRow[] {
       seen.add(of);
     }
     const own = design.interfaces?.find((i) => i.above === above.name);
+    const pair = junction.alignment === 'own' && own?.dEc === undefined && own?.dEv === undefined ? design.custom?.offsets?.find((o) => isPair(o, above.material, below.material)) : undefined;
+    const pairOf = pair ? `${pair.first} / ${pair.second}` : '';
+    if (pair && !seen.has(pairOf)) rows.push(...grouped(pairOf, entryValues(pair).map((v) => ({ ...v, path: OFFSET_WORDS[v.path] ?? v.path })), () => true));
+    if (pair) seen.add(pairOf);
     const values = own ? (['dEc', 'dEv', 'sheetCharge'] as const).flatMap((key) => (own[key] === undefined ? [] : [{ path: key === 'sheetCharge' ? 'sheet charge' : key === 'dEc' ? 'ΔEc' : 'ΔEv', text: own[key] }])) : [];
     if (values.length > 0) rows.push(ownRow(`below ${above.name}`, values));
   });

@@ -1,6 +1,7 @@
 import { naturalValence } from '../../solver/alignment.ts';
 import { isAlloy } from '../../solver/index.ts';
 import { OFFSETS, type PublishedOffset } from '../design/catalogue.ts';
+import { isPair } from '../design/offset.ts';
 import { decimalText } from '../result/figure-text.ts';
 import { entryValues } from '../sheet/entry-values.ts';
 import { affinitySteps, composition, mixed, pureBands, type Worked } from './bands-steps.ts';
@@ -30,7 +31,11 @@ export function offsetSteps(context: Context, index: number, sides: Sides): Offs
   if (row.alignment === 'own') {
     const at = context.design.interfaces?.findIndex((i) => i.above === context.design.layers[index].name) ?? -1;
     const edge = solved?.dEc !== undefined ? 'c' : 'v';
-    const own = known(`ΔE_${edge},own`, `offset given in the design`, (edge === 'c' ? solved?.dEc : solved?.dEv) ?? Number.NaN, 'eV', DESIGN, { path: `interfaces[${at}].dE${edge}` });
+    const written = context.design.interfaces?.[at];
+    // An interface that says nothing itself has the design's own offset of the pair.
+    const pair = written?.dEc === undefined && written?.dEv === undefined ? context.design.custom?.offsets?.find((o) => isPair(o, sides.above.layer.material.id, sides.below.layer.material.id)) : undefined;
+    const origin = pair ? originOf(entryValues(pair)[0].origin, true) : DESIGN;
+    const own = known(`ΔE_${edge},own`, pair ? `own offset of ${pair.first} and ${pair.second}` : `offset given in the design`, (edge === 'c' ? solved?.dEc : solved?.dEv) ?? Number.NaN, 'eV', origin, { path: pair ? `custom.offsets ${pair.first}/${pair.second}` : `interfaces[${at}].dE${edge}` });
     const k = result(edge);
     return { deltaEc: edge === 'c' ? k : null, deltaEv: edge === 'v' ? k : null, steps: [step(k, formula`${own}`)], remark: 'An offset given in the design wins over every rule.' };
   }

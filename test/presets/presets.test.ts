@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { dopants, materials, metals, offsets, sources, type Provenance, type Sources } from '../../presets/index.ts';
+import { rivals } from '../../presets/rivals.ts';
 
 const NUMBER = '-?\\d+(\\.\\d+)?(e[-+]?\\d+)?';
 const quantity = (unit: string): RegExp => new RegExp(`^${NUMBER} ${unit.replace(/[\^().]/g, '\\$&')}$`);
@@ -98,7 +99,7 @@ describe('every preset', () => {
   });
 
   it('draws on works named with author and year, and every work listed is used', () => {
-    const used = new Set(entries.flatMap(([, e]) => [e.source, ...Object.values(e.sources).map((s) => s.source)]));
+    const used = new Set([...entries.flatMap(([, e]) => [e.source, ...Object.values(e.sources).map((s) => s.source)]), ...[...rivals.values, ...rivals.offsets].map((r) => r.source)]);
     for (const m of metals) for (const b of m.barriers) used.add(b.source);
     expect(Object.keys(sources).sort()).toEqual([...used].sort());
     // Tables on the web, one survey and the two words for "no work" carry no year.

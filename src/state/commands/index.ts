@@ -1,4 +1,5 @@
 /** Every change of a design that a person can make: pure functions (design, ...) -> next design, whose result is frozen and shares what did not change. */
+export { addBarrier } from './add-barrier.ts';
 export { addCustomEntry } from './add-custom-entry.ts';
 export { addDopant } from './add-dopant.ts';
 export { addRequirement } from './add-requirement.ts';
@@ -25,6 +26,7 @@ export { setDopant } from './set-dopant.ts';
 export { setInterface } from './set-interface.ts';
 export { setMaterial, type MaterialChange } from './set-material.ts';
 export { setNotes } from './set-notes.ts';
+export { removePairOffset, setPairOffset } from './set-pair-offset.ts';
 export { setRequirement } from './set-requirement.ts';
 export { setRequirementQuantity } from './set-requirement-quantity.ts';
 export { setTemperature } from './set-temperature.ts';

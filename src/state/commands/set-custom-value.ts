@@ -13,6 +13,12 @@ import type { Design } from '../../design/types.ts';
 export function setCustomValue(design: Design, key: EntryKey, base: AnyEntry, path: string, text: string, source: string): Design {
   return produce(design, (draft) => {
     const entry = ownEntry(draft, key, base);
+    const formula = lawOf(path);
+    if (formula !== null) {
+      (entry as unknown as Record<string, unknown>)[formula] = { formula: text };
+      entry.sources = { ...withoutLaw(entry.sources, formula), [path]: source };
+      return;
+    }
     putAtPath(entry, path, text);
     const barrier = /^barriers\.(\d+)$/.exec(path);
     if (barrier !== null && 'barriers' in entry) {
@@ -30,21 +36,42 @@ export function resetCustomValue(design: Design, key: EntryKey, preset: AnyEntry
   if (ownIndex(design.custom, key) < 0) return design;
   return produce(design, (draft) => {
     const entry = ownEntry(draft, key, preset);
-    const text = textAtPath(preset, path);
+    const formula = lawOf(path);
+    if (formula !== null) restoreLaw(entry, preset, formula);
+    const text = formula === null ? textAtPath(preset, path) : null;
     const barrier = /^barriers\.(\d+)$/.exec(path);
     const published = barrier && 'barriers' in preset ? preset.barriers?.[Number(barrier[1])] : undefined;
     if (published && 'barriers' in entry) entry.barriers![Number(barrier![1])] = structuredClone(published);
-    else if (text === null) dropAtPath(entry, path);
-    else copyValue(entry, preset, path);
-    const { [path]: _, ...others } = entry.sources ?? {};
-    const before = preset.sources;
-    entry.sources = before && Object.hasOwn(before, path) ? { ...others, [path]: before[path] } : others;
+    else if (formula === null && text === null) dropAtPath(entry, path);
+    else if (formula === null) copyValue(entry, preset, path);
+    if (formula === null) {
+      const { [path]: _, ...others } = entry.sources ?? {};
+      const before = preset.sources;
+      entry.sources = before && Object.hasOwn(before, path) ? { ...others, [path]: before[path] } : others;
+    }
     if (sameContent(entry, preset)) {
       draft.custom![key.list]!.splice(ownIndex(draft.custom, key), 1);
       tidy(draft);
     }
   });
 }
+
+/** What a formula stands for as a whole: "gap" of "gap.formula"; null for any other value. */
+function lawOf(path: string): string | null {
+  return /^(\w+)\.formula$/.exec(path)?.[1] ?? null;
+}
+
+/** The published law again, with where its values stand. */
+function restoreLaw(entry: AnyEntry, preset: AnyEntry, law: string): void {
+  const [own, published] = [entry, preset] as unknown as Record<string, unknown>[];
+  if (Object.hasOwn(published, law)) own[law] = structuredClone(published[law]);
+  else delete own[law];
+  const before = Object.entries(preset.sources ?? {}).filter(([path]) => isOfLaw(path, law));
+  entry.sources = { ...withoutLaw(entry.sources, law), ...Object.fromEntries(before) };
+}
+
+const isOfLaw = (path: string, law: string): boolean => path === law || path.startsWith(`${law}.`);
+const withoutLaw = (sources: Record<string, unknown> | undefined, law: string): Record<string, unknown> => Object.fromEntries(Object.entries(sources ?? {}).filter(([path]) => !isOfLaw(path, law)));
 
 /** A number stays a number, a list a list: the value itself is copied, not its text. */
 function copyValue(entry: AnyEntry, preset: AnyEntry, path: string): void {
@@ -80,6 +107,6 @@ function ownEntry(draft: Design, key: EntryKey, base: AnyEntry): AnyEntry {
 export function tidy(draft: Design): void {
   const { custom } = draft;
   if (!custom) return;
-  for (const list of ['materials', 'dopants', 'metals'] as const) if (custom[list]?.length === 0) delete custom[list];
+  for (const list of ['materials', 'dopants', 'metals', 'offsets'] as const) if (custom[list]?.length === 0) delete custom[list];
   if (Object.keys(custom).length === 0) delete draft.custom;
 }
