@@ -8,6 +8,21 @@ export const styles = css`
   :host([stale]) svg {
     opacity: 0.45;
   }
+  details {
+    font-size: 0.8125rem;
+  }
+  summary {
+    min-height: 24px;
+    align-content: center;
+    color: var(--faint);
+  }
+  details p {
+    margin: 0.2rem 0;
+  }
+  th,
+  td {
+    padding: 1px 5px;
+  }
   .empty {
     display: grid;
     place-content: center;

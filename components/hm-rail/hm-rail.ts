@@ -1,10 +1,14 @@
-import { LitElement, html, type TemplateResult } from 'lit';
+import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { EnergyAxis } from '../../src/drawing/energy-axis.ts';
+import { lengthText } from '../../src/drawing/figures.ts';
 import { drawRail } from '../../src/drawing/rail.ts';
+import { railRows } from '../../src/drawing/rail-table.ts';
 import type { StyleName } from '../../src/drawing/styles.ts';
+import { decimalText, figureText } from '../../src/result/figure-text.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
 import { look } from '../shared/look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { styles } from './hm-rail.styles.ts';
 
@@ -18,7 +22,7 @@ let rails = 0;
  * of the stack.
  */
 export class HmRail extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, tableLook, styles];
   static override properties = {
     result: { attribute: false },
     energy: { attribute: false },
@@ -27,6 +31,7 @@ export class HmRail extends LitElement {
     styleName: {},
     stale: { type: Boolean, reflect: true },
     dark: { state: true },
+    tabled: { state: true },
   };
 
   declare result: Result | null;
@@ -36,6 +41,7 @@ export class HmRail extends LitElement {
   /** style of the drawing; by default light or dark as the page */ declare styleName: StyleName | undefined;
   declare stale: boolean;
   declare private dark: boolean;
+  /** the table is open: it is made only then */ declare private tabled: boolean;
 
   private kept_nm: number | null = null;
   private readonly ids = `rail-${++rails}`;
@@ -51,6 +57,7 @@ export class HmRail extends LitElement {
     this.depth_nm = null;
     this.stale = false;
     this.dark = false;
+    this.tabled = false;
   }
 
   override connectedCallback(): void {
@@ -76,7 +83,19 @@ export class HmRail extends LitElement {
     const depth = Math.min(this.kept_nm ?? total / 2, total);
     const drawing = drawRail(result, depth, { width: this.room.width, height: this.height, energy, style: this.styleName ?? (this.dark ? 'dark' : 'light'), prefix: this.ids });
     return html`<svg width=${drawing.width} height=${drawing.height} viewBox="0 0 ${drawing.width} ${drawing.height}" role="img" aria-label=${drawing.title} aria-describedby="words">${drawn(drawing)}</svg>
-      <p class="spoken" id="words">${drawing.description}</p>`;
+      <p class="spoken" id="words">${drawing.description}</p>
+      <details @toggle=${(event: Event) => (this.tabled = (event.target as HTMLDetailsElement).open)}>
+        <summary>Occupancy as a table</summary>
+        ${this.tabled ? this.renderTable(result, depth, energy) : nothing}
+      </details>`;
+  }
+
+  private renderTable(result: Result, depth_nm: number, { domain }: EnergyAxis): TemplateResult {
+    return html`<p>At ${lengthText(depth_nm)}; g, and g f of electrons or g (1 − f) of holes, in cm⁻³ eV⁻¹.</p>
+      <div class="scroll" role="region" aria-label="Occupancy, table" tabindex="0"><table>
+        <thead><tr><th scope="col">E (eV)</th><th scope="col">f</th><th scope="col">g</th><th scope="col">carriers</th></tr></thead>
+        <tbody>${railRows(result, depth_nm, domain).map(({ energy_eV, occupancy, states, carriers }) => html`<tr><th scope="row">${decimalText(energy_eV, 3)}</th><td>${figureText(occupancy)}</td><td>${figureText(states)}</td><td>${figureText(carriers)}</td></tr>`)}</tbody>
+      </table></div>`;
   }
 }
 

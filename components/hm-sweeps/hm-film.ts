@@ -13,6 +13,7 @@ import { tell } from '../shared/events.ts';
 import { controlLook } from '../shared/form-look.ts';
 import { look } from '../shared/look.ts';
 import { panelLook } from '../shared/panel-look.ts';
+import { tableLook } from '../shared/table-look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { BatchController, type Pool } from './batch-controller.ts';
@@ -39,7 +40,7 @@ const FRAME_MS = 160;
  * @fires film-view  detail FilmView; does not bubble: the range was changed
  */
 export class HmFilm extends LitElement {
-  static override styles = [look, panelLook, controlLook, plotLook];
+  static override styles = [look, panelLook, controlLook, tableLook, plotLook];
   static override properties = {
     design: { attribute: false },
     view: { attribute: false },
@@ -227,7 +228,19 @@ export class HmFilm extends LitElement {
           @keydown=${this.key} @pointerdown=${this.press} @pointermove=${(e: PointerEvent) => e.buttons === 1 && this.press(e)}></div>
       </div>
       <p class="reading" aria-hidden="true">${at === null ? nothing : words}</p>
+      ${this.renderTable(plan)}
       ${[...new Set(this.frames.flatMap((f) => (f && 'gap' in f ? [f.gap] : [])))].map((reason) => html`<p class="wrong">Frames without an answer: ${reason.replace(/^no accepted answer: /, '')}.</p>`)}`;
+  }
+
+  private renderTable({ temperatures, design: { layers } }: FilmPlan): TemplateResult {
+    return html`<details><summary>Regimes as a table, ${temperatures.length} temperatures</summary>
+      <div class="scroll" role="region" aria-label="Regimes over the temperature, table" tabindex="0"><table>
+        <thead><tr><th scope="col">temperature (K)</th>${layers.map(({ name }) => html`<th scope="col">${name}</th>`)}</tr></thead>
+        <tbody>${guard([this.framesOf, temperatures], () => temperatures.map((t, i) => {
+          const frame = this.frames[i];
+          return html`<tr><th scope="row">${writeNumber(t, 4)}</th>${layers.map((_, l) => html`<td>${frame === undefined ? '–' : 'gap' in frame ? 'no answer' : frame.regimes[l]}</td>`)}</tr>`;
+        }))}</tbody>
+      </table></div></details>`;
   }
 
   private strip({ temperatures, design }: FilmPlan): FilmStrip {

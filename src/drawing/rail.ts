@@ -22,7 +22,8 @@ export interface RailOptions {
 /** f = 90 % and 10 % lie at -+ ln 9 kT from EF. */
 const TENTHS = Math.log(9);
 
-interface Here {
+export interface Here {
+  /** nm, within the stack */ z: number;
   layer: number;
   ec: number;
   ev: number;
@@ -56,9 +57,8 @@ export function drawRail(result: Result, depth_nm: number, options: RailOptions)
   const prefix = options.prefix ?? 'rail';
   const [top, bottom] = [Math.min(...energy.range), Math.max(...energy.range)];
   const rail: Rail = { style, energy, left: 8, right: width - 8, top, bottom, small: style.smallSize, clip: `${prefix}-area` };
-  const edges = layerEdges(result);
-  const z = Math.min(Math.max(depth_nm, 0), edges[edges.length - 1]);
-  const here = hereAt(result, z, edges);
+  const here = hereAt(result, depth_nm);
+  const { z } = here;
   const layer = result.layers[here.layer];
   return {
     width, height, background: style.ground, font: style.font,
@@ -72,12 +72,15 @@ export function drawRail(result: Result, depth_nm: number, options: RailOptions)
   };
 }
 
-function hereAt(result: Result, z: number, edges: number[]): Here {
+/** Bands, Fermi level, eV, and carriers, cm^-3, at a depth in nm, held within the stack; at an interface the layer above it. */
+export function hereAt(result: Result, depth_nm: number): Here {
   const { profile } = result;
+  const edges = layerEdges(result);
+  const z = Math.min(Math.max(depth_nm, 0), edges[edges.length - 1]);
   let layer = 0;
   while (layer < result.layers.length - 1 && z > edges[layer + 1]) layer++;
   const at = (values: number[]): number => valueAt(result, values, Math.min(Math.max(z, profile.z_nm[0]), profile.z_nm[profile.z_nm.length - 1]));
-  return { layer, ec: at(profile.ec_eV), ev: at(profile.ev_eV), ef: at(profile.ef_eV), n: at(profile.n_cm3), p: at(profile.p_cm3), kT: BOLTZMANN * result.conditions.temperature_K };
+  return { z, layer, ec: at(profile.ec_eV), ev: at(profile.ev_eV), ef: at(profile.ef_eV), n: at(profile.n_cm3), p: at(profile.p_cm3), kT: BOLTZMANN * result.conditions.temperature_K };
 }
 
 function frameMarks(r: Rail): Shape[] {

@@ -33,6 +33,18 @@ describe('hm-rail', () => {
     expect(description(r)).to.match(/^At 3 µm in drift/);
   });
 
+  it('has the picture as a table too, with the half at the Fermi level', async () => {
+    const r = await rail();
+    expect(r.renderRoot.querySelector('table')).to.equal(null);
+    r.renderRoot.querySelector('summary')!.click();
+    await new Promise((done) => setTimeout(done, 50));
+    await settled(r);
+    const rows = [...r.renderRoot.querySelectorAll('tbody tr')].map((row) => [...row.children].map((cell) => cell.textContent));
+    expect(rows.find(([e]) => e === '0.000')![1]).to.equal('0.500');
+    expect(rows.length).to.be.greaterThan(15);
+    await expectAccessible(r);
+  });
+
   it('keeps the last depth while nothing is read', async () => {
     const r = await rail();
     r.depth_nm = null;

@@ -176,6 +176,13 @@ describe('the temperature film', function () {
     const said = heard(element, 'hm-say');
     button(film(), 'Make the film').click();
     await until('the film', () => said.some(({ text: words }) => words.startsWith('Film ready')), 8000);
+    // Its regimes are there as a table too: a row a temperature, a column a layer.
+    const cells = [...film().shadowRoot!.querySelectorAll('tbody tr')].map((row) => [...row.children].map((cell) => cell.textContent!));
+    expect(cells.length).to.be.greaterThan(3);
+    for (const [kelvin, ...regimes] of cells) {
+      expect(Number(kelvin)).to.be.greaterThan(0);
+      for (const regime of regimes) expect(regime).to.match(/^(degenerate|freeze-out|extrinsic|intrinsic|insulator|[a-z-]+)$/);
+    }
     await settled(film());
   }
   const slider = () => film().shadowRoot!.querySelector<HTMLElement>('.surface')!;
