@@ -201,6 +201,7 @@ export class HmApp extends LitElement implements Page {
       stale: session.findings.stale,
       plateLook: session.view as PlateView,
       requirements: verdicts.status === 'complete' && !verdicts.stale ? verdicts.rows : null,
+      variants: session.variants,
       entries: desk?.entries ?? [],
       damaged: desk?.damaged ?? [],
       openId: keeper?.project.id ?? null,

@@ -1,7 +1,6 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Design } from '../../src/design/types.ts';
 import type { Drawing } from '../../src/drawing/shapes.ts';
-import type { Variant } from '../../src/drawing/marks/variants.ts';
 import type { RequirementResult, Result } from '../../src/result/types.ts';
 import type { Paper, SheetStyle } from '../../src/sheet/look.ts';
 import type { SheetInput, SheetPlate } from '../../src/sheet/review-sheet.ts';
@@ -11,6 +10,8 @@ import { look } from '../shared/look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
 import '../hm-dialog/hm-dialog.ts';
+import './hm-sheet-sections.ts';
+import { NOTHING_CHOSEN, type OtherDesign, type SectionsChosen } from './hm-sheet-sections.ts';
 import { styles } from './hm-sheet.styles.ts';
 
 const STYLES: [SheetStyle, string][] = [
@@ -43,9 +44,12 @@ export class HmSheet extends LitElement {
     design: { attribute: false },
     result: { attribute: false },
     requirements: { attribute: false },
-    variants: { attribute: false },
+    // A list that says the same is the same: the page makes it anew at every drawing.
+    others: { attribute: false, hasChanged: (next: readonly OtherDesign[], before?: readonly OtherDesign[]) => !sameOthers(next, before) },
+    ownName: { attribute: false },
     plateLook: { attribute: false },
     stale: { type: Boolean },
+    sections: { state: true },
     block: { state: true },
     sheetStyle: { state: true },
     paper: { state: true },
@@ -58,7 +62,9 @@ export class HmSheet extends LitElement {
   declare design: Design | null;
   declare result: Result | null;
   /** judged rows; null while they are not known */ declare requirements: readonly RequirementResult[] | null;
-  /** results laid over the plate on the page */ declare variants: readonly Variant[];
+  /** variants of the project that are not on the page */ declare others: readonly OtherDesign[];
+  /** of the variant on the page */ declare ownName: string;
+  declare private sections: SectionsChosen;
   /** how the plate looks on the page */ declare plateLook: SheetPlate;
   /** the result is of an earlier design */ declare stale: boolean;
   declare private block: { title: string; author: string; date: string; revision: string };
@@ -77,7 +83,9 @@ export class HmSheet extends LitElement {
     this.design = null;
     this.result = null;
     this.requirements = null;
-    this.variants = [];
+    this.others = [];
+    this.ownName = '';
+    this.sections = NOTHING_CHOSEN;
     this.plateLook = {};
     this.stale = false;
     this.block = { title: '', author: '', date: '', revision: '' };
@@ -107,7 +115,7 @@ export class HmSheet extends LitElement {
   }
 
   protected override updated(changed: PropertyValues): void {
-    const inputs = ['design', 'result', 'requirements', 'variants', 'plateLook', 'block', 'sheetStyle', 'paper'];
+    const inputs = ['design', 'result', 'requirements', 'others', 'ownName', 'plateLook', 'sections', 'block', 'sheetStyle', 'paper'];
     if (!this.dialog.open || !inputs.some((name) => changed.has(name))) return;
     clearTimeout(this.timer);
     this.timer = window.setTimeout(() => void this.draw(), PAUSE);
@@ -118,19 +126,35 @@ export class HmSheet extends LitElement {
     if (design === null || result === null || this.stale) return null;
     return {
       ...this.block, design, result, style: this.sheetStyle, paper: this.paper, plate: this.plateLook,
-      ...(this.requirements ? { requirements: this.requirements } : {}), ...(this.variants.length > 0 ? { variants: this.variants } : {}),
+      ...(this.requirements ? { requirements: this.requirements } : {}),
     };
+  }
+
+  /** With the sections that are switched on; says of those that cannot be had why not. */
+  private async whole(): Promise<SheetInput | null> {
+    const { input, sections } = this;
+    if (input === null || sections === NOTHING_CHOSEN) return input;
+    const { furtherSections } = await import('../../src/sheet/further.ts');
+    const { over, corner, contacts } = sections;
+    const { ledgerTables } = await import('../../src/result/ledger.ts');
+    const tables = ledgerTables(input.result);
+    // A layer that is gone since takes its figures along.
+    const workings = sections.workings.filter(({ table, index }) => tables.some(({ id, rows }) => id === table && rows.some((row) => row.index === index)));
+    const { sections: further, missing } = furtherSections(input.design, input.result, this.requirements, { over: this.others.filter(({ id }) => over.includes(id)), base: this.ownName || 'this design', corner, contacts, workings });
+    if (missing.length > 0) this.remark = missing.join(' ');
+    return { ...input, ...further };
   }
 
   /** The picture of the pages. What draws them comes with the first one. */
   private async draw(): Promise<void> {
     const call = ++this.call;
-    const { input } = this;
-    if (input === null) {
-      this.pages = null;
-      return;
-    }
     try {
+      const input = await this.whole();
+      if (call !== this.call) return;
+      if (input === null) {
+        this.pages = null;
+        return;
+      }
       const { reviewSheet } = await import('../../src/sheet/review-sheet.ts');
       if (call !== this.call) return;
       this.pages = reviewSheet(input);
@@ -165,7 +189,7 @@ export class HmSheet extends LitElement {
     const { ending, type } = FORMS[form];
     const name = fileName(this.block.title, ending);
     await this.run(async () => {
-      const file = import('../../src/sheet/takeaway.ts').then(({ sheetTakeaway }) => sheetTakeaway(form, input));
+      const file = Promise.all([import('../../src/sheet/takeaway.ts'), this.whole()]).then(([{ sheetTakeaway }, whole]) => sheetTakeaway(form, whole ?? input));
       // Where the person gives the file up, nobody asks any more whether it could be made.
       file.catch(() => undefined);
       const outcome = await saveFile(name, type, file);
@@ -177,8 +201,8 @@ export class HmSheet extends LitElement {
     const { input } = this;
     if (input === null || this.busy) return;
     await this.run(async () => {
-      const [{ reviewSheet }, { svgText }, { printPages }] = await Promise.all([import('../../src/sheet/review-sheet.ts'), import('../../src/drawing/svg-text.ts'), import('./print-pages.ts')]);
-      printPages(reviewSheet(input).map(svgText), input.paper);
+      const [{ reviewSheet }, { svgText }, { printPages }, whole] = await Promise.all([import('../../src/sheet/review-sheet.ts'), import('../../src/drawing/svg-text.ts'), import('./print-pages.ts'), this.whole()]);
+      printPages(reviewSheet(whole ?? input).map(svgText), input.paper);
       return 'Handed to the printer’s dialog.';
     });
   }
@@ -223,6 +247,7 @@ export class HmSheet extends LitElement {
           </select>
         </label>
       </div>
+      <hm-sheet-sections .result=${this.stale ? null : this.result} .others=${this.others} ?judged=${(this.requirements ?? []).some(({ at }) => at !== null)} .chosen=${this.sections} @sections-change=${({ detail }: CustomEvent<SectionsChosen>) => (this.sections = detail)}></hm-sheet-sections>
       <div class="row">
         ${(Object.keys(FORMS) as SheetForm[]).map((form) => html`<button type="button" ?disabled=${!ready || this.busy} @click=${() => void this.take(form)}>${FORMS[form].words}</button>`)}
         <button type="button" ?disabled=${!ready || this.busy} @click=${() => void this.print()}>Print</button>
@@ -246,6 +271,10 @@ function pictureOf(drawing: Drawing, write: (drawing: Drawing) => string): strin
 
 function words(error: unknown): string {
   return error instanceof Error ? error.message : String(error);
+}
+
+function sameOthers(a: readonly OtherDesign[], b: readonly OtherDesign[] = []): boolean {
+  return a.length === b.length && a.every(({ id, name, design }, i) => id === b[i].id && name === b[i].name && design === b[i].design);
 }
 
 function keptAuthor(): string {

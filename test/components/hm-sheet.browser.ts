@@ -109,6 +109,49 @@ describe('the review sheet in its dialog', () => {
     }
   });
 
+  it('adds the sections that are switched on: others laid over, contacts from near, workings', async function () {
+    this.timeout(40_000);
+    const other = structuredClone(of.design);
+    other.layers[1].thickness = '3 um';
+    element.others = [{ id: 'b', name: 'thinner drift', design: other }];
+    element.ownName = 'base';
+    await element.updateComplete;
+    const sections = inside<HTMLElementTagNameMap['hm-sheet-sections']>('hm-sheet-sections')!;
+    await sections.updateComplete;
+    const pages = (): number => Number(/of (\d+)/.exec(inside<HTMLElement>('[role=group] span')!.textContent!)![1]);
+    const before = pages();
+    sections.shadowRoot!.querySelector('details')!.open = true;
+    for (const box of sections.shadowRoot!.querySelectorAll<HTMLInputElement>('input:not(:disabled)')) {
+      box.click();
+      await sections.updateComplete;
+      await element.updateComplete;
+    }
+    button(sections, 'Add').click();
+    await until('more pages', () => pages() >= before + 2, 10_000);
+    await expectAccessible(element);
+    const { bytes } = await bytesOf('PDF');
+    expect(bytes.length).to.be.greaterThan(20_000);
+    expect(sections.chosen.over).to.deep.equal(['b']);
+    expect(sections.chosen.contacts).to.equal(true);
+    expect(sections.chosen.workings).to.have.length(1);
+    button(sections, 'Leave out').click();
+    await element.updateComplete;
+    await sections.updateComplete;
+    expect(sections.chosen.workings).to.have.length(0);
+  });
+
+  it('says why another design has no place on the sheet, and draws the rest', async () => {
+    const broken = structuredClone(of.design);
+    broken.layers[0].thickness = '-1 nm';
+    element.others = [{ id: 'b', name: 'broken', design: broken }];
+    await element.updateComplete;
+    const sections = inside<HTMLElementTagNameMap['hm-sheet-sections']>('hm-sheet-sections')!;
+    await sections.updateComplete;
+    sections.shadowRoot!.querySelector('input')!.click();
+    await until('the reason', () => inside<HTMLElement>('.remark')!.textContent!.includes('broken has no result'));
+    expect(inside('img')).not.to.equal(null);
+  });
+
   it('gives nothing away while the result belongs to an earlier design, and says why', async () => {
     element.stale = true;
     await element.updateComplete;
