@@ -5,6 +5,7 @@ import { storageFailure } from '../../src/storage/failure.ts';
 import type { Keeper, Opened } from '../../src/storage/keeper.ts';
 import type { Damaged, ProjectStore } from '../../src/storage/project-store.ts';
 import type { ProjectEntry } from '../../src/storage/record.ts';
+import { keyOfItem, shelfKey } from '../../src/storage/shelf.ts';
 import type { ProjectAct } from '../shared/events.ts';
 import { saveFile } from '../shared/save-file.ts';
 import type { Incoming } from './incoming.ts';
@@ -122,11 +123,11 @@ export class ProjectDesk {
     await this.#keeper.flush();
     const now = new Date();
     const make = async (): Promise<Blob> => {
-      const [{ writeBackup }, records] = await Promise.all([import('../../src/storage/backup.ts'), this.#store.all()]);
-      return new Blob([writeBackup(records, now.getTime())], { type: 'application/json' });
+      const [{ writeBackup }, records, shelf] = await Promise.all([import('../../src/storage/backup.ts'), this.#store.all(), this.#store.shelf()]);
+      return new Blob([writeBackup(records, now.getTime(), shelf)], { type: 'application/json' });
     };
     const outcome = await saveFile(`halfmark-backup-${now.toISOString().slice(0, 10)}.json`, 'application/json', make());
-    return { said: outcome === 'given up' ? 'No backup was written.' : 'The backup holds every project, those in the bin too.' };
+    return { said: outcome === 'given up' ? 'No backup was written.' : 'The backup holds every project, those in the bin too, and your shelf.' };
   }
 
   /** Adds what the backup holds; nothing that is here is replaced. */
@@ -137,8 +138,14 @@ export class ProjectDesk {
     await this.#store.createAll(
       reading.projects.map(({ name, designText, history, view, variants, created, changed, binned }) => ({ name, content: { designText, history, view, variants }, times: { created, changed, binned } })),
     );
+    // What is on the shelf under the same name stays: the backup may be old.
+    const there = new Set((await this.#store.shelf()).map(({ key }) => key));
+    const fresh = reading.shelf.filter((item) => !there.has(shelfKey(keyOfItem(item))));
+    await this.#store.shelve(fresh);
+    const kept = reading.shelf.length - fresh.length;
+    const shelf = `${fresh.length === 0 ? '' : ` ${fresh.length} put on your shelf.`}${kept === 0 ? '' : ` ${kept} of the shelf ${kept === 1 ? 'was' : 'were'} there already and stayed as ${kept === 1 ? 'it is' : 'they are'}.`}`;
     const refused = reading.refused.map(({ name, why }) => ` ${name} was left out: ${why}.`).join('');
-    return { said: `${reading.projects.length === 1 ? 'One project' : `${reading.projects.length} projects`} added from the backup.${refused}`, ...(refused === '' ? {} : { urgent: true }) };
+    return { said: `${reading.projects.length === 1 ? 'One project' : `${reading.projects.length} projects`} added from the backup.${shelf}${refused}`, ...(refused === '' ? {} : { urgent: true }) };
   }
 
   #outcome(opened: Opened, said: string, regardless: () => Promise<DeskOutcome>): DeskOutcome {

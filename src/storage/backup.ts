@@ -1,28 +1,30 @@
 import { sha256 } from '@noble/hashes/sha2';
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils';
 import { recordFault, type ProjectRecord } from './record.ts';
+import { keyOfItem, shelfFault, shelfKey, type ShelfItem } from './shelf.ts';
 
 /**
  * All projects in one file that a person can keep: JSON, each project with a check over its own text, so that a file cut short or altered is noticed
- * project by project and the others still come back.
+ * project by project and the others still come back. The person's shelf stands behind them.
  */
-export const BACKUP_FORMAT = 'halfmark-backup/2';
-/** Those that can be read: in version 1 a project had no variants. */
-const READABLE = ['halfmark-backup/1', BACKUP_FORMAT];
+export const BACKUP_FORMAT = 'halfmark-backup/3';
+/** Those that can be read: in version 1 a project had no variants, before version 3 there was no shelf. */
+const READABLE = ['halfmark-backup/1', 'halfmark-backup/2', BACKUP_FORMAT];
 
+type Shelved = Pick<ShelfItem, 'list' | 'entry'>;
 type Kept = Omit<ProjectRecord, 'id' | 'revision'>;
 interface BackupEntry extends Kept {
   check: string;
 }
 
 export type BackupReading =
-  | { ok: true; projects: Kept[]; refused: { name: string; why: string }[] }
+  | { ok: true; projects: Kept[]; shelf: Shelved[]; refused: { name: string; why: string }[] }
   | { ok: false; message: string };
 
 /** @param written  ms since 1970 */
-export function writeBackup(records: readonly ProjectRecord[], written: number): string {
+export function writeBackup(records: readonly ProjectRecord[], written: number, shelf: readonly Shelved[] = []): string {
   const projects = records.map(({ id: _id, revision: _revision, ...kept }): BackupEntry => ({ ...kept, check: checkOf(kept) }));
-  return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects }, null, 1)}\n`;
+  return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects, shelf: shelf.map(({ list, entry }) => ({ list, entry, check: checkOfEntry({ list, entry }) })) }, null, 1)}\n`;
 }
 
 /** Reads a backup. What is whole is given back, what is not is named with the reason. */
@@ -38,10 +40,10 @@ export function readBackup(text: string): BackupReading {
     refused.push({ name: 'What follows', why: 'the file was cut short or damaged there' });
   }
   if (typeof file !== 'object' || file === null) return { ok: false, message: 'This is no backup file.' };
-  const { format, projects } = file as { format?: unknown; projects?: unknown };
+  const { format, projects, shelf = [] } = file as { format?: unknown; projects?: unknown; shelf?: unknown };
   const version = typeof format === 'string' ? /^halfmark-backup\/(\d+)$/.exec(format) : null;
   if (version === null) return { ok: false, message: 'This is no backup file: it does not say "halfmark-backup" as its format.' };
-  if (!READABLE.includes(version[0])) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads versions 1 and 2. Reload the page to get its newest version.` };
+  if (!READABLE.includes(version[0])) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads versions 1 to 3. Reload the page to get its newest version.` };
   if (!Array.isArray(projects)) return { ok: false, message: 'This backup holds no list of projects.' };
   const good: Kept[] = [];
   for (const [i, entry] of projects.entries()) {
@@ -52,8 +54,24 @@ export function readBackup(text: string): BackupReading {
     else if (check !== checkOf(kept)) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
     else good.push(kept);
   }
-  return { ok: true, projects: good, refused };
+  return { ok: true, projects: good, shelf: readShelf(shelf, refused), refused };
 }
+
+function readShelf(shelf: unknown, refused: { name: string; why: string }[]): Shelved[] {
+  const good: Shelved[] = [];
+  for (const row of Array.isArray(shelf) ? (shelf as unknown[]) : []) {
+    const { list, entry, check } = (row ?? {}) as Partial<Shelved & { check: string }>;
+    const id: unknown = (entry as { id?: unknown } | undefined)?.id;
+    const name = `${typeof id === 'string' ? id : 'an entry'} of the shelf`;
+    const fault = shelfFault({ key: typeof id === 'string' && list !== undefined ? shelfKey(keyOfItem({ list, entry: entry! })) : '', list, entry, kept: 0 });
+    if (fault !== null) refused.push({ name, why: fault });
+    else if (check !== checkOfEntry({ list: list!, entry: entry! })) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
+    else good.push({ list: list!, entry: entry! });
+  }
+  return good;
+}
+
+const checkOfEntry = ({ list, entry }: Shelved): string => `sha256:${bytesToHex(sha256(utf8ToBytes(JSON.stringify([list, entry]))))}`;
 
 /**
  * What a file that is no whole JSON document still holds: the projects that stand complete before the fault, each with its own check for the reader to look at.

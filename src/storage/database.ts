@@ -1,21 +1,23 @@
 import { openDB, type DBSchema, type IDBPDatabase, type IDBPTransaction } from 'idb';
 import { to1 } from './migrations/to-1.ts';
 import { to2 } from './migrations/to-2.ts';
+import { to3 } from './migrations/to-3.ts';
 
 /** What stands in the database. Records are read with care: what is written here is what they should be, not what a damaged disk gives back. */
 export interface HalfmarkDB extends DBSchema {
   projects: { key: string; value: unknown };
   /** set aside, never thrown away by the program */ damaged: { key: number; value: { found: number; why: string; text: string } };
   settings: { key: string; value: unknown };
+  /** own entries that outlive a project, shelf.ts */ shelf: { key: string; value: unknown };
 }
 
 export type Database = IDBPDatabase<HalfmarkDB>;
-type UpgradeTransaction = IDBPTransaction<HalfmarkDB, ('projects' | 'damaged' | 'settings')[], 'versionchange'>;
+type UpgradeTransaction = IDBPTransaction<HalfmarkDB, ('projects' | 'damaged' | 'settings' | 'shelf')[], 'versionchange'>;
 /** Brings the database one version further, inside the upgrade's own transaction: it may wait for that one's requests, and for nothing else. */
 export type Migration = (db: Database, transaction: UpgradeTransaction) => void | Promise<void>;
 
 /** MIGRATIONS[n] leads from version n to n + 1. */
-export const MIGRATIONS: readonly Migration[] = [to1, to2];
+export const MIGRATIONS: readonly Migration[] = [to1, to2, to3];
 
 /** The moments in the life of a database that a person has to hear of. */
 export type DatabaseMoment =

@@ -2,6 +2,7 @@ import { freeName } from '../state/commands/free-name.ts';
 import { openDatabase, type Database, type DatabaseMoment } from './database.ts';
 import { storageFailure, type StorageFailure } from './failure.ts';
 import { rawText, recordFault, type ProjectEntry, type ProjectRecord } from './record.ts';
+import { keyOfItem, shelfFault, shelfKey, type ShelfItem } from './shelf.ts';
 
 /** What an open project hands over to be saved. */
 export type Content = Pick<ProjectRecord, 'designText' | 'history' | 'view' | 'variants'>;
@@ -159,6 +160,38 @@ export class ProjectStore {
         await projects.delete(id);
       }),
     );
+  }
+
+  /** The person's shelf, by name. What cannot be read is set aside. */
+  async shelf(): Promise<ShelfItem[]> {
+    const [keys, values] = await this.#with((db) => Promise.all([db.getAllKeys('shelf'), db.getAll('shelf')]));
+    for (const [i, value] of values.entries()) {
+      const why = shelfFault(value);
+      if (why === null) continue;
+      // If there is no room for it elsewhere it stays where it is, in nobody's way.
+      await this.#with((db) =>
+        written(db.transaction(['shelf', 'damaged'], 'readwrite'), async (tx) => {
+          await tx.objectStore('damaged').add({ found: this.#now(), why, text: rawText(value) } as never);
+          await tx.objectStore('shelf').delete(keys[i]);
+        }),
+      ).catch(() => {});
+    }
+    return values.filter((value): value is ShelfItem => shelfFault(value) === null);
+  }
+
+  /** Puts entries on the shelf, all or none; one of the same name gives way. */
+  async shelve(entries: readonly Pick<ShelfItem, 'list' | 'entry'>[]): Promise<void> {
+    const kept = this.#now();
+    const items = entries.map(({ list, entry }): ShelfItem => ({ key: shelfKey(keyOfItem({ list, entry })), list, entry, kept }));
+    await this.#with((db) =>
+      written(db.transaction('shelf', 'readwrite'), async ({ store }) => {
+        for (const item of items) await store.put(item);
+      }),
+    );
+  }
+
+  async unshelve(key: string): Promise<void> {
+    await this.#with((db) => written(db.transaction('shelf', 'readwrite'), ({ store }) => store.delete(key)));
   }
 
   async setting(key: string): Promise<unknown> {

@@ -13,7 +13,7 @@ describe('a backup', () => {
   it('gives every project back as it was, but for its place in this browser', () => {
     const reading = readBackup(file);
     const bare = ({ id: _, revision: __, ...rest }: ProjectRecord) => rest;
-    expect(reading).toEqual({ ok: true, projects: [bare(record('one')), bare({ ...record('two'), binned: 5 })], refused: [] });
+    expect(reading).toEqual({ ok: true, projects: [bare(record('one')), bare({ ...record('two'), binned: 5 })], shelf: [], refused: [] });
   });
 
   it('names the project that was altered and still gives the others back', () => {
@@ -22,9 +22,26 @@ describe('a backup', () => {
     expect(reading.ok && reading.projects.map(({ name }) => name)).toEqual(['two']);
   });
 
+  it('holds the shelf, each entry with a check of its own, and leaves out what was altered or is no entry', () => {
+    const metal = { list: 'metals' as const, entry: { id: 'M', workFunction: '4.2 eV', source: 'measured' } };
+    const dopant = { list: 'dopants' as const, entry: { id: 'D', host: 'GaAs', kind: 'donor' as const, depth: '6 meV', source: 'measured' } };
+    const kept = writeBackup([record('one')], 0, [metal, dopant]);
+    expect(readBackup(kept)).toMatchObject({ ok: true, shelf: [metal, dopant], refused: [] });
+    expect(readBackup(kept.replace('4.2 eV', '4.3 eV'))).toMatchObject({ ok: true, shelf: [dopant], refused: [{ name: 'M of the shelf', why: expect.stringContaining('check') }] });
+    expect(readBackup(kept.replace('"workFunction"', '"workfunction"'))).toMatchObject({ ok: true, shelf: [dopant], refused: [{ name: 'M of the shelf' }] });
+    for (const shelf of ['7', 'null', '[null]', '[{"list":"__proto__"}]', '[{"list":"metals","entry":{"id":"a"}}]']) {
+      const reading = readBackup(`{"format":"halfmark-backup/3","projects":[],"shelf":${shelf}}`);
+      expect(reading.ok && reading.shelf, shelf).toEqual([]);
+    }
+    // A backup of an earlier version had none.
+    expect(readBackup('{"format":"halfmark-backup/2","projects":[]}')).toMatchObject({ ok: true, shelf: [] });
+  });
+
   it('that was cut short still gives back every project that stands before the cut, and says that more followed', () => {
     const second = file.indexOf('"name": "two"');
-    for (let cut = second; cut < file.length - 8; cut += 7) {
+    // The shelf stands behind the projects: a cut there leaves both.
+    const end = file.lastIndexOf('"check"');
+    for (let cut = second; cut < end; cut += 7) {
       const reading = readBackup(file.slice(0, cut));
       expect(reading.ok && reading.projects.map(({ name }) => name), String(cut)).toEqual(['one']);
       expect(reading.ok && reading.refused.map(({ why }) => why).join()).toContain('cut short');
@@ -48,7 +65,7 @@ describe('a backup', () => {
     expect(readBackup('nonsense')).toMatchObject({ ok: false, message: expect.stringContaining('not JSON') });
     expect(readBackup('null')).toMatchObject({ ok: false });
     expect(readBackup('{"format":"halfmark-design/1"}')).toMatchObject({ ok: false, message: expect.stringContaining('format') });
-    expect(readBackup('{"format":"halfmark-backup/3","projects":[]}')).toMatchObject({ ok: false, message: expect.stringContaining('version 3') });
+    expect(readBackup('{"format":"halfmark-backup/4","projects":[]}')).toMatchObject({ ok: false, message: expect.stringContaining('version 4') });
     expect(readBackup('{"format":"halfmark-backup/1"}')).toMatchObject({ ok: false, message: expect.stringContaining('no list') });
     expect(readBackup('{"format":"halfmark-backup/2","projects":[null,7,{}]}')).toMatchObject({ ok: true, projects: [], refused: [{ name: 'number 1' }, {}, {}] });
   });
