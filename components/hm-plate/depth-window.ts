@@ -6,6 +6,9 @@ export type DepthWindow = [number, number] | undefined;
 /** Narrowest part that can be looked at, nm: below the distance of atoms there is nothing to see. */
 const NARROWEST = 0.5;
 
+/** How far an end may move to stand on a neat figure, px of the axis: after a press of a key; while a wheel turns, where more would be felt. */
+const NEAT = { step: 6, turn: 0.5 } as const;
+
 /**
  * Nearer (factor above 1) or farther about a place that stays where it is. In px of the axis, so that it feels the same on an even-handed one.
  *
@@ -14,7 +17,35 @@ const NARROWEST = 0.5;
 export function zoomed(axis: DepthAxis, total_nm: number, x: number, factor: number): DepthWindow {
   const [left, right] = axis.range;
   const at = Math.min(Math.max(x, left), right);
-  return held([axis.depth(at - (at - left) / factor), axis.depth(at + (right - at) / factor)], total_nm);
+  return neat(axis, held([axis.depth(at - (at - left) / factor), axis.depth(at + (right - at) / factor)], total_nm), total_nm, NEAT.turn);
+}
+
+/** Nearer or farther with a depth in the middle of the picture, as far as the ends of the stack allow it; the ends on neat figures. */
+export function zoomedOnto(axis: DepthAxis, total_nm: number, depth_nm: number, factor: number): DepthWindow {
+  const [left, right] = axis.range;
+  // Not beyond the ends of the stack: there the picture would show less than was asked for.
+  const [least, most] = [axis.x(0), axis.x(total_nm)];
+  const width = Math.min((right - left) / factor, most - least);
+  const start = Math.min(Math.max(axis.x(depth_nm) - width / 2, least), most - width);
+  return neat(axis, held([axis.depth(start), axis.depth(start + width)], total_nm), total_nm, NEAT.step);
+}
+
+function neat(axis: DepthAxis, window: DepthWindow, total: number, slack_px: number): DepthWindow {
+  if (window === undefined) return undefined;
+  const [from, to] = window.map((z) => (z <= 0 || z >= total ? z : neatDepth(axis, z, slack_px)));
+  return to - from < NARROWEST ? window : held([Math.max(from, 0), Math.min(to, total)], total);
+}
+
+/** The depth with the fewest digits that lies within so many px. */
+function neatDepth(axis: DepthAxis, z: number, slack_px: number): number {
+  for (let power = Math.ceil(Math.log10(z)); power > -6; power--) {
+    for (const size of [5, 2, 1]) {
+      const step = size * 10 ** power;
+      const rounded = Number((Math.round(z / step) * step).toPrecision(12));
+      if (Math.abs(axis.x(rounded) - axis.x(z)) <= slack_px) return rounded;
+    }
+  }
+  return z;
 }
 
 /** Moved along by px of the axis; to the right shows what lies deeper. */

@@ -5,11 +5,11 @@ import type { Variant } from '../../src/drawing/marks/variants.ts';
 import { drawPlate, type Plate } from '../../src/drawing/plate.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawn } from '../shared/drawn.ts';
-import { tell } from '../shared/events.ts';
+import { tell, type HalfmarkEvents } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { tableLook } from '../shared/table-look.ts';
 import { WidthController } from '../shared/width-controller.ts';
-import { panned, zoomed, zoomedEnergies } from './depth-window.ts';
+import { panned, zoomed, zoomedEnergies, zoomedOnto } from './depth-window.ts';
 import { styles } from './hm-plate.styles.ts';
 import { plateTable } from './plate-table.ts';
 import { dimensionPanel, tools, type ToolsInput } from './plate-tools.ts';
@@ -48,6 +48,7 @@ export class HmPlate extends LitElement {
     stale: { type: Boolean, reflect: true },
     notice: {},
     depth_nm: { attribute: false },
+    chosen: { attribute: false },
     variants: { attribute: false },
     open: { state: true },
     dark: { state: true },
@@ -60,6 +61,7 @@ export class HmPlate extends LitElement {
   /** the result is of the stack before the last change */ declare stale: boolean;
   /** why there is no newer picture, in words */ declare notice: string | null;
   /** where the reading cursor stands, nm; null: nowhere */ declare depth_nm: number | null;
+  /** what is chosen in the strip: a zoom without a pointer goes there */ declare chosen: HalfmarkEvents['hm-choose'];
   /** other results to lay over this one */ declare variants: readonly Variant[];
   declare private open: { dimensions: boolean; table: boolean };
   declare private dark: boolean;
@@ -82,6 +84,7 @@ export class HmPlate extends LitElement {
     this.stale = false;
     this.notice = null;
     this.depth_nm = null;
+    this.chosen = null;
     this.variants = [];
     this.open = { dimensions: false, table: false };
     this.dark = false;
@@ -227,9 +230,19 @@ export class HmPlate extends LitElement {
   private zoom(factor: number, x?: number): void {
     if (!this.plate) return;
     const { depth, area } = this.plate.axes;
-    const cursor = this.depth_nm === null ? Number.NaN : depth.x(this.depth_nm);
-    const about = x ?? (cursor >= area.left && cursor <= area.right ? cursor : (area.left + area.right) / 2);
-    this.change({ window: zoomed(depth, this.total, about, factor) });
+    this.change({ window: x === undefined ? zoomedOnto(depth, this.total, this.interest(depth.depth((area.left + area.right) / 2)), factor) : zoomed(depth, this.total, x, factor) });
+  }
+
+  /** The depth that a person looks at, nm: that of the reading, of what is chosen in the strip, else the one given. */
+  private interest(otherwise: number): number {
+    if (this.depth_nm !== null) return this.depth_nm;
+    const { chosen, result } = this;
+    if (chosen === null || result === null) return otherwise;
+    const edges = layerEdges(result);
+    if (chosen.kind === 'contact') return chosen.index === 0 ? 0 : this.total;
+    const below = edges[chosen.index + 1];
+    if (below === undefined) return otherwise;
+    return chosen.kind === 'interface' ? below : (edges[chosen.index] + below) / 2;
   }
 
   private zoomEnergy(factor: number, y?: number): void {

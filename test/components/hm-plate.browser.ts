@@ -114,6 +114,20 @@ describe('hm-plate', () => {
     expect(p.axes!.depth.window).to.deep.equal([0, 548]);
   });
 
+  it('looks nearer about the layer that is chosen, where nothing is being read', async () => {
+    const p = await plate({ chosen: { kind: 'layer', index: 1 } });
+    const views = heard(p, 'hm-view');
+    surface(p).focus();
+    await sendKeys({ press: '+' });
+    await settled(p);
+    await sendKeys({ press: '+' });
+    await settled(p);
+    const [from, to] = views.at(-1)!.detail.change.window;
+    const { depth, area } = p.axes!;
+    expect([from < 5, to > 40], 'the layer from 5 to 40 nm is in view').to.deep.equal([true, true]);
+    expect(Math.abs(depth.x(22.5) - (area.left + area.right) / 2)).to.be.lessThan(area.right - area.left);
+  });
+
   it('looks nearer by the wheel over the depth axis and leaves the wheel over the picture to the page', async () => {
     const p = await plate();
     const views = heard(p, 'hm-view');
