@@ -30,6 +30,7 @@ export const styles = css`
     display: grid;
     grid-template-columns: max-content minmax(0, 1fr);
     gap: 2px 12px;
+    align-items: baseline;
     margin: 0.5rem 0;
   }
   dt {

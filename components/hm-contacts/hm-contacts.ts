@@ -2,15 +2,17 @@ import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { CloseUp, CloseUpAnswer } from '../../src/contacts/close-up.ts';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
-import { carrierShown, closeUpFigures, closeUpTable, closeUpTitle, errorText, transmissionWords } from '../../src/drawing/contact-closeup-words.ts';
+import { carrierShown, closeUpTable, closeUpTitle, errorText, transmissionWords } from '../../src/drawing/contact-closeup-words.ts';
 import { drawCloseUp } from '../../src/drawing/contact-closeup.ts';
 import { decimalText, figureText } from '../../src/result/figure-text.ts';
 import type { Result } from '../../src/result/types.ts';
+import { nearContactFigures } from '../../src/workings/panel-figures.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import { JobController } from '../hm-desk/job-controller.ts';
 import '../hm-metals/hm-metals.ts';
 import type { MetalsView } from '../hm-metals/hm-metals.ts';
 import { drawn } from '../shared/drawn.ts';
+import { focusedFigure, how, howLook, settleFigures, walkFigures } from '../shared/how.ts';
 import { look } from '../shared/look.ts';
 import { panelLook } from '../shared/panel-look.ts';
 import { tableLook } from '../shared/table-look.ts';
@@ -31,7 +33,7 @@ const QUIET = 200;
  * @fires hm-say
  */
 export class HmContacts extends LitElement {
-  static override styles = [look, panelLook, tableLook, styles];
+  static override styles = [look, panelLook, tableLook, howLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },
@@ -74,6 +76,7 @@ export class HmContacts extends LitElement {
   }
 
   protected override updated(): void {
+    for (const list of this.renderRoot.querySelectorAll('dl')) settleFigures(list);
     const { design, result, stale, near } = this;
     if (design === null || result === null || stale || this.run === null || this.waitsFor === design) return;
     // A job that is on its way is let finish: ending its worker would cost more than what is left of it.
@@ -106,17 +109,17 @@ export class HmContacts extends LitElement {
     const total = this.size.width || WIDTH.half;
     const beside = contacts.length > 1 && total >= 2 * WIDTH.half + GAP;
     const width = Math.round(Math.min(WIDTH.most, Math.max(WIDTH.least, beside ? (total - GAP) / 2 : total)));
-    return html`<div class="contacts">${contacts.map((contact) => this.renderContact(contact, width, stale))}</div>
+    return html`<div class="contacts">${contacts.map((contact) => this.renderContact(contact, value.input.design, width, stale))}</div>
       ${this.renderCompare(answer, stale)}`;
   }
 
-  private renderContact(contact: CloseUp, width: number, stale: boolean): TemplateResult {
+  private renderContact(contact: CloseUp, design: Design, width: number, stale: boolean): TemplateResult {
     const height = Math.round(Math.min(420, Math.max(280, 0.5 * width)));
     const d = drawCloseUp(contact, { width, height, style: this.styleName });
     return html`<section class="contact ${stale ? 'stale' : ''}" aria-label=${closeUpTitle(contact)}>
       ${stale ? html`<p class="stale-mark">Of the design before the last change.</p>` : nothing}
       <div class="sides"><svg class="picture" width=${width} height=${height} viewBox="0 0 ${width} ${height}" role="img" aria-label=${d.description}>${drawn(d)}</svg>
-      <div class="words"><dl>${closeUpFigures(contact).map(({ name, text, note }) => html`<dt>${name}</dt><dd>${text}${note === undefined ? nothing : html` <span class="note">${note}</span>`}</dd>`)}</dl>
+      <div class="words"><dl @keydown=${walkFigures} @focusin=${focusedFigure}>${nearContactFigures(design, contact).map((figure) => html`<dt>${figure.name}</dt><dd>${how(figure, { walked: true })}${figure.note === undefined ? nothing : html` <span class="note">${figure.note}</span>`}</dd>`)}</dl>
       ${contact.notes.map((note) => html`<p class="wrong">${note}.</p>`)}
       ${this.renderTable(contact)}</div></div>
     </section>`;

@@ -1,14 +1,17 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { BarrierValue } from '../../src/contacts/barrier-values.ts';
 import { orderedRows, rankingBasis, type MetalOrder, type OrderBy } from '../../src/contacts/metal-order.ts';
-import { bandWords, majorityBarrier, originWords, rankingSentence, regimeOf, valueOf, valueWords } from '../../src/contacts/metal-words.ts';
+import { majorityBarrier, originWords, rankingSentence, regimeOf, valueOf, valueWords } from '../../src/contacts/metal-words.ts';
 import type { MetalRow, Ranking } from '../../src/contacts/rank-metals.ts';
 import type { Design } from '../../src/design/types.ts';
 import { decimalText, figureText } from '../../src/result/figure-text.ts';
 import { setContact, type Side } from '../../src/state/commands/index.ts';
+import { metalFigures } from '../../src/workings/panel-figures.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
+import type { JobInput } from '../../src/workers/job-messages.ts';
 import { JobController } from '../hm-desk/job-controller.ts';
 import { tell } from '../shared/events.ts';
+import { figureAt, focusedFigure, how, howLook, settleFigures, walkFigures } from '../shared/how.ts';
 import { look } from '../shared/look.ts';
 import { panelLook, verdictLook } from '../shared/panel-look.ts';
 import { sortedTableLook, tableLook } from '../shared/table-look.ts';
@@ -40,7 +43,7 @@ interface Shown {
  * @fires hm-say
  */
 export class HmMetals extends LitElement {
-  static override styles = [look, panelLook, verdictLook, tableLook, sortedTableLook, styles];
+  static override styles = [look, panelLook, verdictLook, tableLook, sortedTableLook, howLook, styles];
   static override properties = {
     design: { attribute: false },
     view: { attribute: false },
@@ -77,6 +80,10 @@ export class HmMetals extends LitElement {
     if (row === undefined) return;
     this.rivals = new Map([...this.rivals, [row.metal, row]]);
     tell(this, 'hm-say', { text: `${row.metal} with ${decimalText(majorityBarrier(row, value.value.majority))} eV: worst ${row.blocks !== null ? 'without a finite resistivity' : row.worst_ohm_cm2 === null ? 'not known' : `${figureText(row.worst_ohm_cm2)} ohm cm²`}.` });
+  }
+
+  protected override updated(): void {
+    settleFigures(this.renderRoot.querySelector('tbody'));
   }
 
   private get side(): Side {
@@ -172,7 +179,7 @@ export class HmMetals extends LitElement {
             ${this.heading('regime', 'Regime', '')}
             <th scope="col"><span class="spoken">Acts</span></th>
           </tr></thead>
-          <tbody>${rows.map((row) => this.renderRow(row, shown, scale, side, stale))}</tbody>
+          <tbody @keydown=${walkFigures} @focusin=${focusedFigure}>${rows.map((row) => this.renderRow(row, shown, scale, asked, stale))}</tbody>
         </table>
       </div>
     </div>`;
@@ -187,7 +194,15 @@ export class HmMetals extends LitElement {
     </th>`;
   }
 
-  private renderRow(row: MetalRow, { majority, limit }: Shown, scale: SpanScale | null, side: Side, stale: boolean): TemplateResult {
+  private renderRow(row: MetalRow, { majority, limit, ranking }: Shown, scale: SpanScale | null, asked: JobInput<'metals'>, stale: boolean): TemplateResult {
+    const { side } = asked.options;
+    // While the ranking runs its temperature is not told yet.
+    const figures = ranking === null ? [] : metalFigures(asked.design, ranking, row);
+    const shown = (column: (typeof figures)[number]['asked']['column'], text: string): unknown => {
+      const figure = figureAt(figures, column);
+      return figure === null ? text : how(figure, { content: text, walked: true });
+    };
+    const barrier = shown(majority === 'n' ? 'barrierN' : 'barrierP', decimalText(majorityBarrier(row, majority)));
     const contact = this.design![side];
     const present = contact.kind === 'barrier' && contact.metal === row.metal;
     const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack</b>` : nothing}</span></th>`;
@@ -196,28 +211,32 @@ export class HmMetals extends LitElement {
     const acts = html`<td class="figure">${row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`}</td>`;
     const values = row.values.length === 0 ? nothing : html`<button type="button" class="plain" aria-expanded=${open} aria-controls=${open ? 'values-open' : nothing} @click=${() => (this.open = open ? null : row.metal)}>${row.values.length} ${row.values.length === 1 ? 'value' : 'values'}<span class="spoken"> of ${row.metal}</span> ${open ? '▾' : '▸'}</button>`;
     const main = row.rho_c_ohm_cm2 === null
-      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${decimalText(majorityBarrier(row, majority))}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5">${row.blocks === null ? html`<span class="faint">No figure: ${row.reason}.</span>` : html`<span class="not-met">${row.reason}</span>`}</td>${acts}</tr>`
+      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${barrier}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5">${row.blocks === null ? html`<span class="faint">No figure: ${row.reason}.</span>` : html`<span class="not-met">${row.reason}</span>`}</td>${acts}</tr>`
       : html`<tr class=${present ? 'present' : ''}>
           ${name}
-          <td class="figure">${decimalText(majorityBarrier(row, majority))}</td>
+          <td class="figure">${barrier}</td>
           <td>${value === null ? '–' : valueWords(value)} ${values}</td>
-          <td class="figure">${figureText(row.rho_c_ohm_cm2)}</td>
-          <td class="figure">${bandWords(row)}</td>
-          <td class="figure"><span class=${row.blocks !== null ? 'not-met' : limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks'}</span><span class="note at">${row.blocks === null ? '' : 'no finite resistivity, '}${row.worst_at ?? row.reason}</span></td>
+          <td class="figure">${shown('rho', figureText(row.rho_c_ohm_cm2))}</td>
+          <td class="figure">${row.band_ohm_cm2 === null ? '–' : html`${shown('least', figureText(row.band_ohm_cm2[0], 2))} … ${shown('most', figureText(row.band_ohm_cm2[1], 2))}`}</td>
+          <td class="figure"><span class=${row.blocks !== null ? 'not-met' : limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${shown('worst', row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks')}</span><span class="note at">${row.blocks === null ? '' : 'no finite resistivity, '}${row.worst_at ?? row.reason}</span></td>
           <td>${scale === null ? nothing : resistivitySpan(row, scale, limit)}</td>
-          <td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : `E00/kT ${figureText(row.e00_over_kT, 2)}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>
+          <td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : html`E00/kT ${shown('e00OverKt', figureText(row.e00_over_kT, 2))}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>
           ${acts}
         </tr>`;
-    return html`${main}${open ? this.renderValues(row, stale) : nothing}`;
+    return html`${main}${open ? this.renderValues(row, asked, ranking, stale) : nothing}`;
   }
 
-  private renderValues(row: MetalRow, stale: boolean): TemplateResult {
+  private renderValues(row: MetalRow, asked: JobInput<'metals'>, ranking: Ranking | null, stale: boolean): TemplateResult {
+    const barrier = (value: BarrierValue, column: 'barrierN' | 'barrierP', text: string): unknown => {
+      const figure = ranking === null ? null : figureAt(metalFigures(asked.design, ranking, row, value), column);
+      return figure === null ? text : how(figure, { content: text, walked: true });
+    };
     const running = this.again.progress !== null;
     return html`<tr class="rivals"><td colspan="9"><ul id="values-open" aria-label="Values of the barrier of ${row.metal}">
       ${row.values.map((value) => {
         const used = value.key === row.value;
         return html`<li>
-          <span class="words ${used ? 'in-use' : ''}">φBn ${decimalText(value.barrier_n_eV)} eV, φBp ${decimalText(value.barrier_p_eV)} eV: ${valueWords(value)}<span class="note">${originWords(value)}</span></span>
+          <span class="words ${used ? 'in-use' : ''}">φBn ${barrier(value, 'barrierN', decimalText(value.barrier_n_eV))} eV, φBp ${barrier(value, 'barrierP', decimalText(value.barrier_p_eV))} eV: ${valueWords(value)}<span class="note">${originWords(value)}</span></span>
           ${used ? html`<span class="faint">in use</span>` : html`<button type="button" ?disabled=${running || stale || this.job.progress !== null} @click=${() => this.rerun(row, value)}>Run with this<span class="spoken"> value of ${row.metal}, ${decimalText(value.barrier_n_eV)} eV</span></button>`}
         </li>`;
       })}

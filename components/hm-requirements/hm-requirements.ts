@@ -3,11 +3,13 @@ import type { Complaint } from '../../src/design/complaint.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../../src/design/requirement-quantities.ts';
 import type { Design, Requirement } from '../../src/design/types.ts';
 import { quantityOf, quantityWords } from '../../src/requirements/limits.ts';
-import { standingWords, verdictWords, worstWords } from '../../src/requirements/verdict.ts';
+import { standingWords, verdictWords } from '../../src/requirements/verdict.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
+import { requirementFigures } from '../../src/workings/panel-figures.ts';
 import { addRequirement, removeRequirement, setRequirement, setRequirementQuantity } from '../../src/state/commands/index.ts';
 import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';
+import { figureAt, how, howLook } from '../shared/how.ts';
 import { look } from '../shared/look.ts';
 import { panelLook } from '../shared/panel-look.ts';
 import { settledChoice } from '../shared/settled-choice.ts';
@@ -44,7 +46,7 @@ const value = (event: Event): string => (event.target as HTMLSelectElement).valu
  * @fires hm-act   'judge-stop', 'judge-again'
  */
 export class HmRequirements extends LitElement {
-  static override styles = [look, panelLook, styles];
+  static override styles = [look, panelLook, howLook, styles];
   static override properties = { design: { attribute: false }, complaints: { attribute: false }, verdicts: { attribute: false }, draft: { state: true } };
 
   declare design: Design | null;
@@ -93,8 +95,9 @@ export class HmRequirements extends LitElement {
       <ol class=${this.verdicts.stale ? 'stale' : ''}>
         ${requirements.map((requirement, i) => {
           const count = boundsOf(requirement).length;
+          const first = at;
           const rows = this.verdicts.rows.slice(at, (at += count));
-          return this.renderRequirement(requirement, i, rows.every((row) => row.quantity === requirement.quantity && row.of === requirement.of) ? rows : []);
+          return this.renderRequirement(requirement, i, first, rows.every((row) => row.quantity === requirement.quantity && row.of === requirement.of) ? rows : []);
         })}
       </ol>
       ${requirements.length === 0 ? nothing : html`<p class="doc">Bars: the limit in the middle, met to the right of it; half a bar is a factor of ten, or a difference as large as the limit.</p>`}
@@ -124,7 +127,7 @@ export class HmRequirements extends LitElement {
     return `${count}, judged in the worst case over temperatures and tolerances.`;
   }
 
-  private renderRequirement(requirement: Requirement, i: number, rows: readonly RequirementResult[]): TemplateResult {
+  private renderRequirement(requirement: Requirement, i: number, first: number, rows: readonly RequirementResult[]): TemplateResult {
     const name = quantityWords(requirement);
     const path = `requirements[${i}]`;
     const wrong = complaintsWithin(this.complaints, path, [`${path}.max`, `${path}.min`]);
@@ -137,7 +140,7 @@ export class HmRequirements extends LitElement {
         ${boundsOf(requirement).map((bound) => this.renderLimit(requirement, bound, complaintAt(this.complaints, `${path}.${bound}`), (change) => this.edit(i, change, `limit of ${name}`)))}
         ${this.renderOver(requirement, (over) => this.edit(i, { over }, 'temperatures of a requirement'))}
       </div>
-      <div class="outcome">${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row) => this.renderVerdict(row, rows.length > 1))}
+      <div class="outcome">${wrong.map((message) => html`<p class="wrong">${message}</p>`)} ${rows.map((row, r) => this.renderVerdict(row, first + r, rows.length > 1))}
         ${unmet && !this.verdicts.stale ? html`<button type="button" class="size" @click=${() => tell(this, 'hm-size', { requirement: i })}>Size a variable to meet this<span class="spoken">: ${name}</span></button>` : nothing}
       </div>
       <div>
@@ -188,16 +191,22 @@ export class HmRequirements extends LitElement {
     </select>`;
   }
 
-  private renderVerdict(row: RequirementResult, named: boolean): TemplateResult {
+  /** @param index  among the limits of the design */
+  private renderVerdict(row: RequirementResult, index: number, named: boolean): TemplateResult {
     const verdict = verdictWords(row);
     const share = marginShare(row);
-    const figure = worstWords(row, 3);
-    const worst = figure === null || row.at === null ? '' : `worst ${figure} at ${row.at.words}`;
+    const figures = requirementFigures(this.design!, row, index);
+    // Of an earlier design's rows the corner is no longer here to be solved.
+    const shown = (column: (typeof figures)[number]['asked']['column']): unknown => {
+      const figure = figureAt(figures, column);
+      return figure === null ? nothing : this.verdicts.stale ? unbroken(figure.text) : how(figure, { content: unbroken(figure.text) });
+    };
+    const worst = figureAt(figures, 'worst') === null || row.at === null ? nothing : html`worst ${shown('worst')} at ${shown('corner')}`;
     const points = row.unanswered?.points ?? 0;
     return html`<div class="verdict ${verdict.replace(' ', '-')}">
       ${share === null ? html`<span class="bar"></span>` : html`<svg class="bar" viewBox="-51 0 102 12" width="102" height="12" aria-hidden="true">${svg`<path d="M-50 6H50M-50 3V9M50 3V9" stroke="currentColor" fill="none" opacity="0.5"></path><rect x=${Math.min(0, 50 * share)} y="3" width=${Math.max(1, Math.abs(50 * share))} height="6" fill="currentColor"></rect><path d="M0 0V12" class="limit" fill="none"></path>`}</svg>`}
-      <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, ${standingWords(row)}</span>
-      <span class="worst">${unbroken(worst)}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === '' ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${unbroken(row.unanswered.words)}: ${row.unanswered.reason}`}</span>
+      <span><strong>${verdict}</strong>${named ? ` (${row.bound === 'max' ? 'at most' : 'at least'})` : ''}, ${figureAt(figures, 'margin') === null ? standingWords(row) : shown('margin')}; limit ${shown('limit')}</span>
+      <span class="worst">${worst}${row.corners_sufficed ? '' : '; worse inside the ranges than at their corners'}${row.unanswered === null ? '' : html`${worst === nothing ? '' : '; '}<b>no answer at ${points} ${points === 1 ? 'corner' : 'corners'}</b>, first at ${unbroken(row.unanswered.words)}: ${row.unanswered.reason}`}</span>
     </div>`;
   }
 

@@ -2,28 +2,38 @@ import { LitElement, html, nothing, svg, type PropertyValues, type TemplateResul
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
 import { drawMarginPlot, lineCode } from '../../src/drawing/margin-plot.ts';
+import type { Drawing } from '../../src/drawing/shapes.ts';
 import { styleOf } from '../../src/drawing/styles.ts';
 import { limitWords, writtenLimits } from '../../src/requirements/limits.ts';
 import type { LookedAt, SearchedRange, SizedAnswer } from '../../src/requirements/size.ts';
+import { unansweredWords, verdictWords } from '../../src/requirements/verdict.ts';
+import type { Tolerances } from '../../src/requirements/uncertainties.ts';
+import type { RequirementResult } from '../../src/result/types.ts';
 import { sizingBasis, textWithin } from '../../src/requirements/sized-value.ts';
 import { makeVariable, setVariable, textAtPlace } from '../../src/state/commands/index.ts';
+import { bestFigures, sizingFigures, type PanelFigure } from '../../src/workings/panel-figures.ts';
+import type { RequirementAsked } from '../../src/workings/requirement-workings.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import { JobController } from '../hm-desk/job-controller.ts';
 import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
+import { figureAt, how, howLook, sentenceWith } from '../shared/how.ts';
 import { look } from '../shared/look.ts';
 import { panelLook, verdictLook } from '../shared/panel-look.ts';
 import { tableLook } from '../shared/table-look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { choiceOptions, likelyVariable, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
+import { saveSizing, type SizingFile } from './sizing-files.ts';
 import { marginTable, pictureOf, type Known } from './sizing-picture.ts';
 import type { SizingView } from './sizing-view.ts';
 import { blockerWords, edgeWords, marginLine, outcomeWords } from './sizing-words.ts';
 import { styles } from './hm-sizing.styles.ts';
 
 const LEAST_WIDTH = 320;
+/** px of an exported picture, for a slide of 16 to 9. */
+const SLIDE = [1280, 720] as const;
 
 /**
  * Sizing: the values of one variable at which every requirement is met in its worst case. The margins are drawn against the variable; what closes each interval
@@ -34,7 +44,7 @@ const LEAST_WIDTH = 320;
  * @fires hm-say
  */
 export class HmSizing extends LitElement {
-  static override styles = [look, panelLook, verdictLook, tableLook, styles];
+  static override styles = [look, panelLook, verdictLook, tableLook, howLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },
@@ -130,7 +140,7 @@ export class HmSizing extends LitElement {
       this.choose(`v ${name}`);
     }
     this.other = null;
-    void this.job.start(this.run!, { design, options: { variable: name, from, to, ...(this.view.scale === undefined ? {} : { scale: this.view.scale }) } });
+    void this.job.start(this.run!, { design, options: { variable: name, from, to, ...(this.view.scale === undefined ? {} : { scale: this.view.scale }), ...(this.view.tolerances === undefined ? {} : { tolerances: this.view.tolerances }) } });
   }
 
   private put(name: string, text: string): void {
@@ -175,6 +185,11 @@ export class HmSizing extends LitElement {
         <option value="log" .selected=${this.view.scale === 'log'}>decades</option>
         <option value="linear" .selected=${this.view.scale === 'linear'}>even steps</option>
       </select></label>
+      <label>within <select @change=${(e: Event) => this.remember({ tolerances: ({ stated: 'stated', none: 'none' } as const)[(e.target as HTMLSelectElement).value] })}>
+        <option value="" .selected=${this.view.tolerances === undefined}>all tolerances</option>
+        <option value="stated" .selected=${this.view.tolerances === 'stated'}>those that the design states</option>
+        <option value="none" .selected=${this.view.tolerances === 'none'}>no tolerance</option>
+      </select></label>
       <button type="button" class="go" ?disabled=${running} @click=${() => this.find(option)}>${make}</button>
     </div>`;
   }
@@ -200,7 +215,7 @@ export class HmSizing extends LitElement {
     const { progress, status, reason, value } = this.job;
     if (progress !== null) return 'Searching. The margins below are those of the corners that are known so far.';
     if (status === 'error') return `${reason}${answer === null ? '' : ' What stands below was found before.'}`;
-    if (answer !== null) return `${this.stale ? 'Found for the design before the last change: find the values again. ' : ''}${outcomeWords(answer)}`;
+    if (answer !== null) return `${this.recounted ? 'Found within other tolerances: find the values again. ' : this.stale ? 'Found for the design before the last change: find the values again. ' : ''}${outcomeWords(answer)}`;
     return value === null ? 'Each value is judged in the worst case, over temperatures and tolerances: that takes a few hundred solves.' : '';
   }
 
@@ -214,7 +229,7 @@ export class HmSizing extends LitElement {
   /** What was found belongs to another design than the one on the page. */
   private get stale(): boolean {
     const { value } = this.job;
-    return value?.value.kind === 'sized' && sizingBasis(value.input.design, value.value.variable) !== sizingBasis(this.design!, value.value.variable);
+    return value?.value.kind === 'sized' && (this.recounted || sizingBasis(value.input.design, value.value.variable) !== sizingBasis(this.design!, value.value.variable));
   }
 
   /** What is known: the answer, or what a running search has looked at so far. */
@@ -234,20 +249,33 @@ export class HmSizing extends LitElement {
     const { stale } = this;
     return html`<div class="found ${stale ? 'stale' : ''}">
       <div class="sides">
-        <div>${this.renderPicture(answer, design)}</div>
-        <div>${this.renderIntervals(answer)} ${this.renderKey(answer, design)} ${stale ? nothing : this.renderPut(answer)}</div>
+        <div>${this.renderPicture(answer, design)} ${this.renderFiles(answer, design)}</div>
+        <div>${this.renderIntervals(answer, design)} ${this.renderKey(answer, design)} ${stale ? nothing : this.renderPut(answer)}</div>
       </div>
       ${this.renderNotes(answer)} ${this.renderTable(answer, design)}
     </div>`;
   }
 
   /** @param design  whose requirements were asked for; the value that the variable has is that of the page's design */
+  private picture(known: Known, design: Design, width: number, height: number): Drawing {
+    const picture = pictureOf(known, { ...design, variables: this.design!.variables ?? [] }, this.wish?.requirement ?? null);
+    return drawMarginPlot(picture, { width, height, style: this.styleName, prefix: 'sizing' });
+  }
+
   private renderPicture(known: Known, design: Design): TemplateResult {
     const width = Math.max(LEAST_WIDTH, this.pictureWidth);
     const height = Math.round(Math.min(400, Math.max(260, 0.5 * width)));
-    const picture = pictureOf(known, { ...design, variables: this.design!.variables ?? [] }, this.wish?.requirement ?? null);
-    const d = drawMarginPlot(picture, { width, height, style: this.styleName, prefix: 'sizing' });
+    const d = this.picture(known, design, width, height);
     return html`<svg class="picture" width=${width} height=${height} viewBox="0 0 ${width} ${height}" role="img" aria-label=${d.description}>${drawn(d)}</svg>`;
+  }
+
+  private renderFiles(answer: SizedAnswer, design: Design): TemplateResult {
+    const save = async (ending: SizingFile): Promise<void> => {
+      const { name, outcome } = await saveSizing(ending, answer, design, () => this.picture(answer, design, ...SLIDE));
+      if (outcome !== 'given up') tell(this, 'hm-say', outcome === null ? { text: `${name} could not be written.`, urgent: true } : { text: `${name} written.` });
+    };
+    const button = (ending: SizingFile, words: string): TemplateResult => html`<button type="button" @click=${() => save(ending)}>${words}<span class="spoken">, margins against ${answer.variable}</span></button>`;
+    return html`<p class="row">${button('.svg', 'SVG')} ${button('.png', 'PNG')} ${button('.csv', 'CSV')}</p>`;
   }
 
   private get pictureWidth(): number {
@@ -255,24 +283,52 @@ export class HmSizing extends LitElement {
     return width > 1000 ? Math.round(0.62 * width) : width;
   }
 
-  private renderIntervals({ intervals }: SizedAnswer): TemplateResult | typeof nothing {
+  /** Other tolerances are to count than those that it was found with. */
+  private get recounted(): boolean {
+    return (this.view.tolerances ?? 'all') !== this.counted;
+  }
+
+  /** Which tolerances the answer was found with. */
+  private get counted(): Tolerances {
+    return this.job.value?.input.options.tolerances ?? 'all';
+  }
+
+  private renderIntervals(answer: SizedAnswer, design: Design): TemplateResult | typeof nothing {
+    const { intervals } = answer;
     if (intervals.length === 0) return nothing;
-    return html`<h3>What ends it</h3><ul>${intervals.flatMap(({ from, to }) => [html`<li>${edgeWords(from, 'below')}</li>`, html`<li>${edgeWords(to, 'above')}</li>`])}</ul>`;
+    const figures = sizingFigures(design, answer, this.counted);
+    const end = (i: number, column: 'from' | 'to'): TemplateResult => {
+      const figure = figures.find(({ asked }) => asked.column === column && asked.index === i)!;
+      return html`<li>${sentenceWith(edgeWords(intervals[i][column], column === 'from' ? 'below' : 'above'), figure)}</li>`;
+    };
+    return html`<h3>What ends it</h3><ul>${intervals.flatMap((_, i) => [end(i, 'from'), end(i, 'to')])}</ul>`;
   }
 
   private renderKey(answer: SizedAnswer, design: Design): TemplateResult {
     const style = styleOf(this.styleName);
     const { best, blockers } = answer;
     const against = new Map(blockerWords(answer).map(({ index, words }) => [index, words]));
-    return html`<h3>${best === null ? 'The requirements' : `At ${best.text}${blockers.length > 0 ? ', the nearest' : ', the best'}`}</h3>
+    const heading = best === null ? 'The requirements' : `At ${best.text}${blockers.length > 0 ? ', the nearest' : ', the best'}`;
+    const rows = bestFigures(design, answer, this.counted);
+    return html`<h3>${sentenceWith(heading, figureAt(sizingFigures(design, answer, this.counted), 'best'))}</h3>
       <ol>${writtenLimits(design).map((limit, i) => {
         const { dash, width, color } = lineCode(i, style);
         const row = best?.requirements[i];
         return html`<li class=${limit.row === this.wish?.requirement ? 'asked' : ''}>
           <svg width="36" height="10" aria-hidden="true">${svg`<line x1="0" x2="36" y1="5" y2="5" stroke=${color} stroke-width=${width} stroke-dasharray=${dash ?? nothing}></line>`}</svg>
-          <span><b>${i + 1}</b> ${limitWords(limit)}${row === undefined ? nothing : html`<span class="line ${row.met ? 'met' : 'not-met'}">${marginLine(row)}</span>`}${against.has(i) ? html`<span class="line">${against.get(i)}</span>` : nothing}</span>
+          <span><b>${i + 1}</b> ${rows[i] === undefined ? limitWords(limit) : sentenceWith(limitWords(limit), figureAt(rows[i], 'limit'), typeof limit.limit === 'string' ? limit.limit : '')}${row === undefined ? nothing : html`<span class="line ${row.met ? 'met' : 'not-met'}">${this.renderMargin(row, rows[i])}</span>`}${against.has(i) ? html`<span class="line">${against.get(i)}</span>` : nothing}</span>
         </li>`;
       })}</ol>`;
+  }
+
+  /** As marginLine says it, each figure to be asked. */
+  private renderMargin(row: RequirementResult, figures: readonly PanelFigure<RequirementAsked>[]): TemplateResult {
+    const figure = (column: RequirementAsked['column']): unknown => {
+      const found = figureAt(figures, column);
+      return found === null ? nothing : how(found);
+    };
+    if (figureAt(figures, 'margin') === null) return html`${marginLine(row)}`;
+    return html`${verdictWords(row)}, ${figure('margin')}: worst ${figure('worst')}${row.at === null ? nothing : html` at ${figure('corner')}`}${row.unanswered === null ? nothing : `; ${unansweredWords(row, ['corner', 'corners'])}`}`;
   }
 
   private renderPut(answer: SizedAnswer): TemplateResult | typeof nothing {

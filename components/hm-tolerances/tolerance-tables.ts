@@ -1,18 +1,25 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { VariationResult, VariedFigureResult } from '../../src/tolerance/result.ts';
-import { figureWord, gapReasons, percent, strongestWords } from './tolerance-words.ts';
+import { spreadFigures, yieldFigures } from '../../src/workings/panel-figures.ts';
+import { figureAt, focusedFigure, how, walkFigures } from '../shared/how.ts';
+import { figureWord, gapReasons, strongestWords } from './tolerance-words.ts';
 
 /** How many variations meet each requirement, and all of them. */
-export function yieldTable({ figures, yield: all }: VariationResult): TemplateResult | typeof nothing {
+export function yieldTable(result: VariationResult): TemplateResult | typeof nothing {
+  const { figures, yield: all } = result;
   const required = figures.filter((figure) => figure.yield !== null);
   if (all === null || required.length === 0) return nothing;
-  const row = (words: string, y: NonNullable<VariedFigureResult['yield']>): TemplateResult =>
-    html`<tr><th scope="row">${words}</th><td class=${y.met < y.of ? 'less' : ''}>${percent(y.share)}</td><td>${y.met} of ${y.of}</td><td>${percent(y.low)} to ${percent(y.high)}</td></tr>`;
+  const row = (words: string, figure: VariedFigureResult | null): TemplateResult => {
+    const y = (figure === null ? all : figure.yield)!;
+    const figures = yieldFigures(result, figure);
+    const cell = (column: (typeof figures)[number]['asked']['column']): TemplateResult => how(figureAt(figures, column)!, { walked: true });
+    return html`<tr><th scope="row">${words}</th><td class=${y.met < y.of ? 'less' : ''}>${cell('yield')}</td><td>${y.met} of ${y.of}</td><td>${cell('yieldLow')} to ${cell('yieldHigh')}</td></tr>`;
+  };
   return html`<h3>Yield</h3>
     <div class="scroll" role="region" aria-label="Yield, figures" tabindex="0">
       <table>
         <thead><tr><th scope="col">Requirement</th><th scope="col">Met</th><th scope="col">Variations</th><th scope="col">True share, 95 %</th></tr></thead>
-        <tbody>${required.map((figure) => row(figure.words, figure.yield!))} ${required.length > 1 ? row('all of them', all) : nothing}</tbody>
+        <tbody @keydown=${walkFigures} @focusin=${focusedFigure}>${required.map((figure) => row(figure.words, figure))} ${required.length > 1 ? row('all of them', null) : nothing}</tbody>
       </table>
     </div>`;
 }
@@ -20,14 +27,24 @@ export function yieldTable({ figures, yield: all }: VariationResult): TemplateRe
 const COLUMNS = ['Nominal', 'Mean', 'sd', '2.5 %', 'Median', '97.5 %', 'Unit'];
 
 /** Every figure's spread, with the input that moves it most. */
-export function spreadTable({ figures, inputs }: VariationResult): TemplateResult {
-  const at = (figure: VariedFigureResult, p: number): number | null => figure.quantiles.find((q) => q.p === p)?.value ?? null;
+export function spreadTable(result: VariationResult): TemplateResult {
+  const { figures, inputs } = result;
   return html`<div class="scroll" role="region" aria-label="Spreads, figures" tabindex="0">
     <table>
       <thead><tr><th scope="col">Figure</th>${COLUMNS.map((words) => html`<th scope="col">${words}</th>`)}<th scope="col" class="words">Moved most by, low end to high end</th></tr></thead>
-      <tbody>${figures.map((f) => html`<tr><th scope="row">${f.words}</th>${[f.nominal, f.mean, f.sd, at(f, 0.025), at(f, 0.5), at(f, 0.975)].map((value) => html`<td>${figureWord(value)}</td>`)}<td>${f.unit}</td><td class="words">${strongestWords(f, inputs)}</td></tr>`)}</tbody>
+      <tbody @keydown=${walkFigures} @focusin=${focusedFigure}>${figures.map((f) => html`<tr><th scope="row">${f.words}</th><td>${figureWord(f.nominal)}</td>${spreadCells(result, f)}<td>${f.unit}</td><td class="words">${strongestWords(f, inputs)}</td></tr>`)}</tbody>
     </table>
   </div>`;
+}
+
+const SPREAD = ['mean', 'sd', 'low', 'median', 'high'] as const;
+
+function spreadCells(result: VariationResult, figure: VariedFigureResult): TemplateResult[] {
+  const figures = spreadFigures(result, figure);
+  return SPREAD.map((column) => {
+    const found = figureAt(figures, column);
+    return html`<td>${found === null ? '–' : how(found, { walked: true })}</td>`;
+  });
 }
 
 /** Variations without an answer, counted by reason. */

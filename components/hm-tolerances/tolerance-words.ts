@@ -1,7 +1,9 @@
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
 import type { VariationResult, VariedFigureResult } from '../../src/tolerance/result.ts';
 import { strongestInputs } from '../../src/tolerance/result.ts';
-import type { Yield } from '../../src/tolerance/statistics.ts';
+import { sharePercent as percent, type Yield } from '../../src/tolerance/statistics.ts';
+
+export { percent };
 
 /** An input that moves a figure by less than this share of it (of its logarithm, where it spans decades) is not named. */
 const LEAST_SHARE = 1e-3;
@@ -11,12 +13,6 @@ export const figureWord = (value: number | null): string => (value === null ? 'â
 
 export function yieldWords({ met, of, share, low, high }: Yield): string {
   return `${percent(share)} (${met} of ${of}; true share ${percent(low)} to ${percent(high)} in 95 of 100 cases)`;
-}
-
-export function percent(share: number): string {
-  // 999 of 1000 must not read as all of them.
-  const text = (100 * share).toFixed(1);
-  return text === '100.0' && share < 1 ? '99.9 %' : text === '0.0' && share > 0 ? '0.1 %' : `${text.replace(/\.0$/, '')} %`;
 }
 
 /** What the run came to, in one or two sentences. */

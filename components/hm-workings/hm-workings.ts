@@ -5,11 +5,13 @@ import type { Known } from '../../src/workings/known.ts';
 import { mathText, signOf } from '../../src/workings/math.ts';
 import { shown, type ShownStep, type Step } from '../../src/workings/step.ts';
 import { originText, workingsText } from '../../src/workings/text.ts';
+import { panelWorkings } from '../../src/workings/panel-workings.ts';
 import { workingsOf } from '../../src/workings/workings-of.ts';
-import type { Asked, Workings } from '../../src/workings/workings.ts';
+import type { Workings } from '../../src/workings/workings.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { mathTemplate } from './math-template.ts';
+import type { AskedFigure } from './workings-controller.ts';
 import { styles } from './hm-workings.styles.ts';
 
 /** Narrower than this there is no room beside a table: the workings lie over the page. */
@@ -34,7 +36,7 @@ export class HmWorkings extends LitElement {
   /** the one that the result is of */ declare design: Design | null;
   declare result: Result | null;
   /** the result belongs to an earlier design than `design` */ declare stale: boolean;
-  /** the figure; null: closed */ declare asked: Asked | null;
+  /** the figure, of the ledger by its place or of a panel with what it is of; null: closed */ declare asked: AskedFigure | null;
   private workings: Workings | null = null;
   /** what had the focus when it was opened */ private asker: HTMLElement | null = null;
 
@@ -63,9 +65,14 @@ export class HmWorkings extends LitElement {
   protected override willUpdate(changed: PropertyValues): void {
     const { asked, design, result } = this;
     if (!['asked', 'design', 'result', 'stale'].some((key) => changed.has(key))) return;
+    // A panel's figure is of the design that the panel had, whatever becomes of the page's.
+    if (asked && 'text' in asked) {
+      if (changed.has('asked')) this.workings = tried(() => panelWorkings(asked));
+      return;
+    }
     // Of an earlier stack's figures the last workings stay, dimmed with the rest of the page: its design is no longer here.
     if (this.stale && !changed.has('asked')) return;
-    this.workings = asked && design && result && !this.stale ? attempted(design, result, asked) : null;
+    this.workings = asked && design && result && !this.stale ? tried(() => workingsOf(design, result, asked)) : null;
   }
 
   protected override updated(changed: PropertyValues): void {
@@ -140,7 +147,7 @@ export class HmWorkings extends LitElement {
     const last = steps.at(-1);
     const before = steps.slice(0, -1);
     return html`
-      ${this.stale ? html`<p class="quiet">Of the stack before the last change.</p>` : nothing}
+      ${this.stale && !(this.asked && 'text' in this.asked) ? html`<p class="quiet">Of the stack before the last change.</p>` : nothing}
       <p class="value">${w.value.map((line) => html`<span>${line}${w.unit === '' || line === '–' || line.endsWith(w.unit) || line.includes('%') ? '' : ` ${w.unit}`}</span>`)}</p>
       <p class="words">${w.words}</p>
       ${last === undefined ? nothing : html`<ol>${this.renderStep(last)}</ol>`} ${w.remarks.map((remark) => html`<p>${remark}</p>`)}
@@ -184,9 +191,9 @@ function sourceWords(symbols: ShownStep['symbols'], i: number): string {
 const signNode = (known: Known): ReturnType<typeof signOf> => signOf(known.sign);
 
 /** A result that is not of this design, as between a change and its answer, has no workings. */
-function attempted(design: Design, result: Result, asked: Asked): Workings | null {
+function tried(work: () => Workings): Workings | null {
   try {
-    return workingsOf(design, result, asked);
+    return work();
   } catch (error) {
     if (error instanceof RangeError) return null;
     throw error;

@@ -30,6 +30,15 @@ export function standingWords(row: RequirementResult): string {
   return margin < 1 ? `missed by a factor ${rounded(1 / margin, 3)}` : `margin ${marginWords(row)}`;
 }
 
+/** The number that standingWords tells, in its unit: what it is missed by where it is not met; null of words. */
+export function standingFigure(row: RequirementResult): number | null {
+  const { margin, margin_kind, blocks } = row;
+  if (margin === null || blocks) return null;
+  if (verdictWords(row) !== 'not met') return margin;
+  if (margin_kind === 'difference') return Math.abs(margin);
+  return margin === 0 ? null : margin < 1 ? 1 / margin : margin;
+}
+
 /** What a contact without a finite resistivity is said to do. */
 export const BLOCKS = 'blocks; no finite resistivity';
 

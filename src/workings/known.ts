@@ -1,4 +1,5 @@
 import { BOLTZMANN, ELECTRON_MASS, ELEMENTARY_CHARGE, EPSILON_0, PLANCK } from '../../solver/constants.ts';
+import { printedUnits } from '../sheet/lines.ts';
 
 /** Where a value comes from. */
 export type Origin =
@@ -25,9 +26,9 @@ export const SOLVED: Origin = { from: 'solved' };
 export const DESIGN: Origin = { from: 'this design' };
 export const WORKED: Origin = { from: 'worked out' };
 
-/** @param value  in the formula's units */
+/** @param value  in the formula's units @param unit  as typed or as printed; it is shown as printed */
 export function known(sign: string, words: string, value: number, unit: string, origin: Origin, more: { scale?: number; path?: string } = {}): Known {
-  return { sign, words, value, unit, origin, scale: more.scale ?? 1, path: more.path ?? '' };
+  return { sign, words, value, unit: printedUnits(unit), origin, scale: more.scale ?? 1, path: more.path ?? '' };
 }
 
 const constant = (sign: string, words: string, value: number, unit: string): Known => known(sign, words, value, unit, { from: 'constant' });

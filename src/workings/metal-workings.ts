@@ -6,6 +6,7 @@ import type { Tolerances } from '../requirements/uncertainties.ts';
 import { contactWorkings } from './contact-workings.ts';
 import type { Context } from './context.ts';
 import { againWords, solvedCorner } from './corner.ts';
+import { metalFigure } from './panel-figures.ts';
 import type { Found } from './workings.ts';
 
 /** A figure of a ranked metal, with the design in which the metals were ranked. */
@@ -32,29 +33,9 @@ export function metalWorkings({ column, design, side, temperature_K, row, value,
   const { context, steps } = corner;
   const index = context.result.contacts.findIndex((c) => c.side === side);
   const found = contactWorkings(context, index, LEDGER[column])!;
-  const shown = figureOf(column, row);
+  const shown = metalFigure(column, row);
   const now = context.result.contacts[index].rho_c_ohm_cm2;
   const solved = shown !== null && now !== null && column !== 'e00OverKt' && column !== 'barrierN' && column !== 'barrierP';
   const remarks = [...(column === 'worst' && row.worst_at !== null ? [`Worst at ${row.worst_at}, found among the corners of temperatures and tolerances.`] : column === 'least' || column === 'most' ? ['Found among the corners of the tolerances that move a contact on this surface.'] : []), ...(row.blocks !== null && (column === 'worst' || column === 'rho') ? ['It blocks there: what passes is too little for a finite resistivity.'] : []), ...(found.remarks ?? [])];
   return { context, found: { ...found, steps: [...steps, ...found.steps], remarks, accuracy: [found.accuracy ?? '', solved ? againWords(shown, { value: now, scale: 1 }) : ''].filter((text) => text !== '').join(' ') } };
-}
-
-/** The number that the ranking shows; null without one. */
-export function figureOf(column: PanelColumn<'metal'>, row: MetalRow, value: BarrierValue | null = null): number | null {
-  switch (column) {
-    case 'barrierN':
-      return (value ?? row).barrier_n_eV;
-    case 'barrierP':
-      return (value ?? row).barrier_p_eV;
-    case 'rho':
-      return row.rho_c_ohm_cm2;
-    case 'least':
-      return row.band_ohm_cm2?.[0] ?? null;
-    case 'most':
-      return row.band_ohm_cm2?.[1] ?? null;
-    case 'worst':
-      return row.worst_ohm_cm2;
-    case 'e00OverKt':
-      return row.e00_over_kT;
-  }
 }

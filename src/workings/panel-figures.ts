@@ -7,12 +7,13 @@ import type { PanelColumn } from '../quantity/panel-quantities.ts';
 import { writeNumber } from '../quantity/write-quantity.ts';
 import type { SizedAnswer } from '../requirements/size.ts';
 import { sizingSet } from '../requirements/sized-value.ts';
-import { marginWords, worstWords } from '../requirements/verdict.ts';
+import { standingFigure, standingWords, worstWords } from '../requirements/verdict.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
-import { decimalText, figureText, percentText } from '../result/figure-text.ts';
+import { decimalText, figureText } from '../result/figure-text.ts';
 import type { RequirementResult } from '../result/types.ts';
+import { sharePercent } from '../tolerance/statistics.ts';
 import type { VariationResult, VariedFigureResult } from '../tolerance/result.ts';
-import { figureOf, type MetalAsked } from './metal-workings.ts';
+import type { MetalAsked } from './metal-workings.ts';
 import type { NearContactAsked } from './near-contact-workings.ts';
 import type { RequirementAsked } from './requirement-workings.ts';
 import type { SizingAsked } from './sizing-workings.ts';
@@ -32,7 +33,7 @@ export function requirementFigures(design: Design, row: RequirementResult, index
   const figure = (column: PanelColumn<'requirement'>, text: string, value: number | null): PanelFigure<RequirementAsked> => ({ asked: { table: 'requirement', column, design, row, index, tolerances, set }, text, value });
   const worst = worstWords(row, 3);
   return [
-    ...(worst === null ? [] : [figure('worst', worst, typeof row.worst === 'number' ? row.worst : null), figure('margin', marginWords(row), row.margin !== null && !row.blocks ? row.margin : null)]),
+    ...(worst === null ? [] : [figure('worst', worst, typeof row.worst === 'number' ? row.worst : null), figure('margin', standingWords(row), standingFigure(row))]),
     ...(row.at === null ? [] : [figure('corner', row.at.words, null)]),
     figure('limit', typeof row.limit === 'boolean' ? (row.limit ? 'must be' : 'must not be') : `${writeNumber(row.limit, 6)} ${row.unit}`.trim(), typeof row.limit === 'number' ? row.limit : null),
   ];
@@ -58,7 +59,7 @@ export function bestFigures(design: Design, answer: SizedAnswer, tolerances: Tol
 export function metalFigures(design: Design, { side, temperature_K }: Pick<Ranking, 'side' | 'temperature_K'>, row: MetalRow, value: BarrierValue | null = null, tolerances: Tolerances = 'all'): PanelFigure<MetalAsked>[] {
   const columns: PanelColumn<'metal'>[] = value === null ? ['barrierN', 'barrierP', 'rho', 'least', 'most', 'worst', 'e00OverKt'] : ['barrierN', 'barrierP'];
   return columns.flatMap((column) => {
-    const number = figureOf(column, row, value);
+    const number = metalFigure(column, row, value);
     const blocks = column === 'worst' && row.blocks !== null;
     if (number === null && !blocks) return [];
     const text = blocks ? 'blocks' : column === 'barrierN' || column === 'barrierP' ? decimalText(number) : figureText(number, column === 'rho' || column === 'worst' ? 3 : 2);
@@ -83,6 +84,25 @@ export function yieldFigures(result: VariationResult, figure: VariedFigureResult
   const share = figure === null ? result.yield : figure.yield;
   if (share === null) return [];
   const list: [PanelColumn<'spread'>, number][] = [['yield', share.share], ['yieldLow', share.low], ['yieldHigh', share.high]];
-  return list.map(([column, value]) => ({ asked: { table: 'spread', column, result, figure }, text: percentText(value), value: 100 * value }));
+  return list.map(([column, value]) => ({ asked: { table: 'spread', column, result, figure }, text: sharePercent(value), value: 100 * value }));
 }
 
+/** The number that the ranking shows; null without one. */
+export function metalFigure(column: PanelColumn<'metal'>, row: MetalRow, value: BarrierValue | null = null): number | null {
+  switch (column) {
+    case 'barrierN':
+      return (value ?? row).barrier_n_eV;
+    case 'barrierP':
+      return (value ?? row).barrier_p_eV;
+    case 'rho':
+      return row.rho_c_ohm_cm2;
+    case 'least':
+      return row.band_ohm_cm2?.[0] ?? null;
+    case 'most':
+      return row.band_ohm_cm2?.[1] ?? null;
+    case 'worst':
+      return row.worst_ohm_cm2;
+    case 'e00OverKt':
+      return row.e00_over_kT;
+  }
+}

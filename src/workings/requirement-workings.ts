@@ -1,6 +1,7 @@
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import type { Design } from '../design/types.ts';
 import { writtenLimits } from '../requirements/limits.ts';
+import { standingFigure } from '../requirements/verdict.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
 import type { RequirementResult } from '../result/types.ts';
 import type { PanelColumn } from '../quantity/panel-quantities.ts';
@@ -10,7 +11,7 @@ import { formula } from './formula.ts';
 import { CM_PER_NM } from '../../solver/units.ts';
 import { DESIGN, known, WORKED, type Known } from './known.ts';
 import { requirementFigure } from './requirement-figure.ts';
-import { step, type Step } from './step.ts';
+import { lastResult, step, type Step } from './step.ts';
 import type { Found } from './workings.ts';
 
 /** A figure of a judged requirement, with the design that it is of. */
@@ -39,7 +40,17 @@ export function requirementWorkings({ column, design, row, index, tolerances, se
   const accuracy = [found.accuracy ?? '', typeof row.worst === 'number' ? againWords(row.worst, figure.figure) : ''].filter((text) => text !== '').join(' ');
   const worst: Found = { ...found, steps: [...steps, ...found.steps], remarks: [...remarks, ...(found.remarks ?? [])], accuracy };
   if (column === 'worst') return { context, found: worst };
-  return { context, found: { ...worst, steps: [...worst.steps, ...marginSteps(design, row, index, figure.figure)], remarks: [...(worst.remarks ?? []), row.margin_kind === 'ratio' ? 'Met from 1 up.' : 'Met from 0 up.'] } };
+  return { context, found: { ...worst, steps: [...worst.steps, ...standingSteps(design, row, index, figure.figure)], remarks: [...(worst.remarks ?? []), row.margin_kind === 'ratio' ? 'Met from 1 up.' : 'Met from 0 up.'] } };
+}
+
+/** The margin, and what it is missed by where it is told so. */
+function standingSteps(design: Design, row: RequirementResult, index: number, x: Known): Step[] {
+  const steps = marginSteps(design, row, index, x);
+  const told = standingFigure(row);
+  const m = lastResult({ steps });
+  if (m === null || told === null || told === row.margin) return steps;
+  const missed = (value: number): Known => known('k', row.margin_kind === 'ratio' ? 'factor that it is missed by' : 'what it is missed by', value, m.unit, WORKED, { scale: m.scale });
+  return [...steps, row.margin_kind === 'ratio' ? step(missed(1 / m.value), formula`1 / ${m}`) : step(missed(Math.abs(m.value)), formula`abs(${m})`)];
 }
 
 /** Limit against figure, as src/requirements/margin.ts sets them. */

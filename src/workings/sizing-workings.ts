@@ -1,4 +1,5 @@
 import { CM_PER_NM } from '../../solver/units.ts';
+import { printedUnits } from '../sheet/lines.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import type { Design } from '../design/types.ts';
 import type { PanelColumn } from '../quantity/panel-quantities.ts';
@@ -14,7 +15,7 @@ import { mi, mn, mo, mrow, signOf, type MathNode } from './math.ts';
 import { DESIGN, known, SOLVED, WORKED, type Known } from './known.ts';
 import { requirementFigure } from './requirement-figure.ts';
 import { limitOf } from './requirement-workings.ts';
-import { law, step, type Step } from './step.ts';
+import { law, printed, step, type Step } from './step.ts';
 import type { Found } from './workings.ts';
 
 /** A figure of a sizing, with the design that was sized. */
@@ -56,7 +57,7 @@ function edge({ column, design, answer, index, tolerances }: SizingAsked): { fou
   const sides = [side(design, answer, end.row, end.requirement!.index, tolerances, { value: end.value, mark: 'in' }), side(design, answer, end.row, end.requirement!.index, tolerances, { value: end.beyond, mark: 'out' })];
   return {
     context: sides[0].context,
-    found: { steps: [start, ...sides.flatMap((s) => s.steps), gap, last], remarks: [`${column === 'from' ? 'Below' : 'Above'} it ${end.requirement!.words} is missed, at ${end.at ?? end.row.at.words}. Both sides are verified at that corner: at v_in the score is not below zero, at v_out it is.`, ...remarks], rests: ['stack'], solved: true },
+    found: { steps: [start, ...sides.flatMap((s) => s.steps), gap, last], remarks: [`${column === 'from' ? 'Below' : 'Above'} it ${end.requirement!.words} is missed, at ${end.at ?? end.row.at.words}. Both sides are verified at that corner: on the inner one the score is not below zero, on the outer one it is.`, ...remarks], rests: ['stack'], solved: true },
   };
 }
 
@@ -74,7 +75,7 @@ function side(design: Design, answer: SizedAnswer, row: RequirementResult, index
   if (typeof corner === 'string') return { context: null, steps: [] };
   const figure = requirementFigure(corner.context, row);
   if (figure === null) return { context: corner.context, steps: [] };
-  const x = known(`x_${mark}`, `${figure.figure.words} with ${answer.variable} = ${Number((v.value / v.scale).toPrecision(9))} ${v.unit}`.trim(), figure.figure.value, figure.figure.unit, SOLVED, { scale: figure.figure.scale });
+  const x = known(`x_${mark}`, `${figure.figure.words} with ${answer.variable} = ${printed(v.value / v.scale, 9)} ${v.unit}`.trim(), figure.figure.value, figure.figure.unit, SOLVED, { scale: figure.figure.scale });
   return { context: corner.context, steps: [scoreStep(design, row, index, x, mark)] };
 }
 
@@ -105,7 +106,7 @@ function best({ design, answer }: SizingAsked): { found: Found; context: Context
   });
   if (scores.length > 1) steps.push(step(known('s', 'least score, the one to be made largest', Math.min(...scores.map(({ value }) => value)), '', WORKED), { kind: 'call', law: 'min', of: scores.map((k): Expression => ({ kind: 'known', of: k })) }));
   const [below, above] = neighbours(answer.scan, point.value);
-  const beside = [below, above].filter((p) => p !== null).map((p, i) => known(`s_${i === 0 && below !== null ? 'below' : 'above'}`, `least score at the next value looked at, ${Number(p.value.toPrecision(6))} ${answer.unit}`.trim(), leastOf(p), '', SOLVED));
+  const beside = [below, above].filter((p) => p !== null).map((p, i) => known(`s_${i === 0 && below !== null ? 'below' : 'above'}`, `least score at the next value looked at, ${printed(p.value, 6)} ${printedUnits(answer.unit)}`.trim(), leastOf(p), '', SOLVED));
   const here = answer.scan.find(({ value }) => value === point.value);
   if (here !== undefined && beside.length > 0 && [leastOf(here), ...beside.map(({ value }) => value)].every(Number.isFinite)) {
     const mine = known('s_best', 'least score at the best value, in the corners that the search knew', leastOf(here), '', SOLVED);

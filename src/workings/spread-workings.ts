@@ -40,8 +40,9 @@ export function spreadWorkings({ column, result, figure }: SpreadAsked): Found {
   return { ...common, ...quantileSteps(figure, { low: 0.025, median: 0.5, high: 0.975 }[column]) };
 }
 
-function runRemark({ done, seed, distribution, gaps }: VariationResult): string {
-  return `${done} variations with seed ${seed}, ${distribution === 'normal' ? 'normal: a tolerance is two standard deviations (JCGM 100:2008, 6.2, coverage factor 2; from memory)' : 'even between the ends of each tolerance'}${gaps.length > 0 ? `; ${gaps.length} have no answer, stay out of the spreads and count as not met` : ''}.`;
+function runRemark({ done, seed, distribution, gaps, inputs }: VariationResult): string {
+  const others = inputs.filter((input) => input.distribution !== distribution).map(({ label, distribution: own }) => `${label} ${own}`);
+  return `${done} variations with seed ${seed}, ${distribution === 'normal' ? 'normal: a tolerance is two standard deviations (JCGM 100:2008, 6.2, coverage factor 2; from memory)' : 'even between the ends of each tolerance'}${others.length > 0 ? ` (but ${others.join(', ')})` : ''}${gaps.length > 0 ? `; ${gaps.length} have no answer, stay out of the spreads and count as not met` : ''}.`;
 }
 
 function yieldSteps(column: 'yield' | 'yieldLow' | 'yieldHigh', { met, of, share, low, high }: Yield): Pick<Found, 'steps' | 'accuracy'> {

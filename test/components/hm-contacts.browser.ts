@@ -87,8 +87,39 @@ describe('hm-contacts', () => {
     expect(picture.getAttribute('aria-label')).to.include('Barrier of electrons');
     expect(picture.querySelectorAll('[data-role="closeup-product"]').length).to.equal(1);
     const figures = new Map([...element.shadowRoot!.querySelectorAll('dt')].map((dt) => [dt.textContent, dt.nextElementSibling!.textContent!]));
-    expect(figures.get('Regime')).to.match(/^thermionic-field emission E00 [\d.]+ meV, E00\/kT 2\.\d$/);
+    expect(figures.get('Regime')).to.match(/^thermionic-field emission E00\/kT 2\.\d$/);
+    expect(figures.get('E00')).to.match(/^[\d.]+ meV$/);
     expect(figures.get('Contact resistivity')).to.match(/^8\.\d+e−6 Ω cm² WKB; quadrature good to better than 0\.001 %$/);
+  });
+
+  it('asks of each figure how it comes about; one stop of Tab, the arrows from there', async () => {
+    await seen();
+    const told = heard(element, 'hm-view');
+    const figures = [...element.shadowRoot!.querySelectorAll<HTMLButtonElement>('dl button.how')];
+    expect(figures.length).to.equal(element.shadowRoot!.querySelectorAll('dt').length);
+    expect(figures.map(({ tabIndex }) => tabIndex).filter((stop) => stop === 0)).to.have.length(1);
+    for (const figure of figures) expect(Math.min(figure.getBoundingClientRect().height, figure.getBoundingClientRect().width)).to.be.at.least(24);
+    figures[0].focus();
+    await sendKeys({ press: 'ArrowDown' });
+    expect(element.shadowRoot!.activeElement).to.equal(figures[1]);
+    expect([figures[0].tabIndex, figures[1].tabIndex]).to.deep.equal([-1, 0]);
+    await sendKeys({ press: 'Enter' });
+    expect(told.at(-1)!.change.workings).to.deep.include({ text: figures[1].textContent, value: closeUps(design).kind === 'seen' ? (closeUps(design) as Extract<ReturnType<typeof closeUps>, { kind: 'seen' }>).contacts[0].barrier_p_eV : null });
+  });
+
+  it('asks the same of the ranked metals, row by row', async () => {
+    await withMetals();
+    const told = heard(element, 'hm-view');
+    const rows = [...list().shadowRoot!.querySelectorAll<HTMLElement>('tbody tr')].map((row) => [...row.querySelectorAll<HTMLButtonElement>('button.how')]);
+    expect(rows[0].length).to.equal(6);
+    rows[0][0].focus();
+    await sendKeys({ press: 'ArrowDown' });
+    expect(list().shadowRoot!.activeElement).to.equal(rows[1][0]);
+    await sendKeys({ press: 'End' });
+    expect(list().shadowRoot!.activeElement).to.equal(rows[1].at(-1));
+    await sendKeys({ press: 'Space' });
+    const { asked: question } = told.at(-1)!.change.workings as { asked: { table: string; column: string } };
+    expect([question.table, question.column]).to.deep.equal(['metal', 'e00OverKt']);
   });
 
   it('says so where neither end has a metal', async () => {
@@ -177,7 +208,7 @@ describe('hm-contacts', () => {
     expect(values.filter((text) => text.includes('in use')).length).to.equal(1);
     expect(values.join()).to.include('ideal, S = 1').and.include('pinned, S = ').and.include('measured for electrons').and.include('measured for holes');
     const before = words();
-    list().shadowRoot!.querySelectorAll<HTMLButtonElement>('.rivals button')[2].click();
+    list().shadowRoot!.querySelectorAll<HTMLButtonElement>('.rivals button:not(.how)')[2].click();
     await until('it is run again', () => jobs('metals').length === 2);
     expect((jobs('metals')[1].input as JobInput<'metals'>).options.rerun!.metal).to.equal('Al');
     answer(jobs('metals')[1]);

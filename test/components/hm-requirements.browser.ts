@@ -51,6 +51,25 @@ describe('the requirements of a design', () => {
     expect(text()).to.contain('1 of 2 met');
   });
 
+  it('can each be asked how their figures come about, while they are those of the design', async () => {
+    const views = heard(element, 'hm-view');
+    const figures = [...element.shadowRoot!.querySelectorAll<HTMLButtonElement>('li')][0].querySelectorAll<HTMLButtonElement>('button.how');
+    expect([...figures].map(({ textContent }) => textContent!.replace(/\u00a0/g, ' '))).to.deep.equal(['margin 2.5 times', '1e-6 ohm cm^2', '4e-7 ohm cm^2', '-40 degC, Ncap -10 %']);
+    for (const figure of figures) expect(figure.getBoundingClientRect().height).to.be.at.least(24);
+    figures[0].click();
+    expect((views[0].change.workings as { asked: unknown }).asked).to.deep.include({ table: 'requirement', column: 'margin', index: 0 });
+    element.verdicts = { ...element.verdicts, stale: true };
+    await element.updateComplete;
+    expect(element.shadowRoot!.querySelector('button.how')).to.equal(null);
+  });
+
+  it('say that a contact blocks, in words, and count it as not met', async () => {
+    element.verdicts = { ...element.verdicts, rows: [row({ met: false, blocks: true, worst: null, margin: 0 }), flag] };
+    await element.updateComplete;
+    expect(text()).to.contain('not met').and.to.contain('worst blocks; no finite resistivity at -40 degC');
+    await expectAccessible(element);
+  });
+
   it('are edited in place: limit, the other way about, temperatures, taken out', () => {
     const edits = heard(element, 'hm-edit');
     const box = element.shadowRoot!.querySelector('hm-field')!.shadowRoot!.querySelector('input')!;

@@ -109,6 +109,62 @@ describe('sizing', () => {
     await expectAccessible(element);
   });
 
+  it('can be asked how each end, the best value and its margins come about', async () => {
+    await put({ view: { variable: 'tcap' } });
+    button(element, 'Find the values').click();
+    await answered();
+    const views = heard(element, 'hm-view');
+    const figures = [...element.shadowRoot!.querySelectorAll<HTMLButtonElement>('button.how')];
+    for (const figure of figures) expect(figure.getBoundingClientRect().height, figure.textContent!).to.be.at.least(24);
+    figures.forEach((figure) => figure.click());
+    const asked = views.map(({ change }) => (change.workings as { asked: { table: string; column: string } }).asked).map(({ table, column }) => `${table} ${column}`);
+    expect(asked.slice(0, 3)).to.deep.equal(['sizing from', 'sizing to', 'sizing best']);
+    expect(asked.filter((words) => words === 'requirement margin')).to.have.length(2);
+    expect(asked.filter((words) => words === 'requirement limit')).to.have.length(2);
+  });
+
+  it('lets the person choose which tolerances count, and asks anew for what was found with others', async () => {
+    await put({ view: { variable: 'tcap' } });
+    const views = heard(element, 'hm-view');
+    const [, , within] = element.shadowRoot!.querySelectorAll('select');
+    within.value = 'stated';
+    within.dispatchEvent(new Event('change'));
+    await settled(element);
+    expect(views.at(-1)!.change).to.deep.equal({ sizing: { variable: 'tcap', tolerances: 'stated' } });
+    button(element, 'Find the values').click();
+    expect(asked.at(-1)!.options.tolerances).to.equal('stated');
+    await answered();
+    expect(text()).to.not.contain('before the last change');
+    within.value = '';
+    within.dispatchEvent(new Event('change'));
+    await settled(element);
+    expect(text()).to.contain('Found within other tolerances: find the values again');
+  });
+
+  it('writes the picture and the margins as files', async () => {
+    await put({ view: { variable: 'tcap' } });
+    button(element, 'Find the values').click();
+    await answered();
+    const files: { name: string; blob: Blob }[] = [];
+    const picker = async ({ suggestedName }: { suggestedName: string }) => ({ createWritable: async () => ({ write: async (blob: Blob) => void files.push({ name: suggestedName, blob }), close: async () => {} }) });
+    Object.defineProperty(window, 'showSaveFilePicker', { configurable: true, value: picker });
+    const said = heard(element, 'hm-say');
+    try {
+      for (const [i, ending] of ['SVG', 'PNG', 'CSV'].entries()) {
+        button(element, ending).click();
+        await until(`a ${ending} file`, () => said.length > i, 8000);
+      }
+    } finally {
+      delete (window as { showSaveFilePicker?: unknown }).showSaveFilePicker;
+    }
+    expect(files.map(({ name }) => name)).to.deep.equal(['svg', 'png', 'csv'].map((ending) => `metal-on-silicon-margins-against-tcap.${ending}`));
+    expect(await files[0].blob.text()).to.contain('<svg').and.to.contain('margin');
+    expect(files[1].blob.type).to.equal('image/png');
+    const [heading, first] = (await files[2].blob.text()).split('\r\n');
+    expect(heading).to.equal('tcap (cm),"sheet resistance of cap, at most 250 ohm, margin (times)","carrier density of cap, at least 1e19 cm^-3, margin (times)"');
+    expect(first.split(',').map(Number).every(Number.isFinite)).to.equal(true);
+  });
+
   it('tells the margins as a table', async () => {
     await put({ view: { variable: 'tcap' } });
     button(element, 'Find the values').click();

@@ -4,6 +4,8 @@ import '../../components/hm-ledger/hm-ledger.ts';
 import '../../components/hm-workings/hm-workings.ts';
 import type { HmLedger } from '../../components/hm-ledger/hm-ledger.ts';
 import type { HmWorkings } from '../../components/hm-workings/hm-workings.ts';
+import { judge } from '../../src/requirements/judge.ts';
+import { requirementFigures } from '../../src/workings/panel-figures.ts';
 import { expectAccessible } from './accessible.ts';
 import { heard, mounted, sample, settled } from './sample.ts';
 
@@ -93,6 +95,17 @@ describe('hm-workings', () => {
       const [figure, box] = [cell.getBoundingClientRect(), dialog(workings).getBoundingClientRect()];
       expect(figure.right <= box.left || figure.left >= box.right, `column ${column}`).to.equal(true);
     }
+  });
+
+  it('shows the workings of a figure of a panel, of the design that the panel had', async () => {
+    const { requirements: rows } = judge(design, { samples: 0 }) as Extract<ReturnType<typeof judge>, { kind: 'judged' }>;
+    const figure = requirementFigures(design, rows[0], 0)[0];
+    const p = await mounted<HmWorkings>('hm-workings', { design, result, stale: true, asked: figure });
+    await settled(p);
+    expect(p.renderRoot.querySelector('h2')!.textContent).to.match(/^Worst of /);
+    expect(p.renderRoot.querySelector('.value')!.textContent!.trim()).to.equal(figure.text);
+    expect(p.renderRoot.querySelector('.sheet')!.textContent).to.contain('Worst at ').and.not.to.contain('before the last change');
+    await expectAccessible(p);
   });
 
   it('copies itself as text', async () => {
