@@ -38,6 +38,29 @@ export const styles = css`
     gap: 0.35rem;
     min-height: 24px;
   }
+  .figures {
+    list-style: none;
+    display: inline-flex;
+    flex-wrap: wrap;
+    gap: 0.25rem;
+    margin: 0;
+    padding: 0;
+  }
+  .add {
+    max-width: 16rem;
+  }
+  .inputs {
+    --field-width: 7rem;
+  }
+  .inputs th {
+    max-width: 12rem;
+    min-width: 6rem;
+    text-align: start;
+  }
+  .inputs hm-field {
+    display: inline-block;
+    vertical-align: middle;
+  }
   pre {
     margin: 0;
     padding: 0.3rem 0;

@@ -1,9 +1,14 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
+import { toStack } from '../../src/design/stack.ts';
 import type { Design } from '../../src/design/types.ts';
 import { drawHistogram } from '../../src/drawing/histogram.ts';
 import type { Drawing } from '../../src/drawing/shapes.ts';
 import { drawTornado, tornadoHeight } from '../../src/drawing/tornado.ts';
+import { setVariable } from '../../src/state/commands/index.ts';
+import { figuresOf } from '../../src/sweep/figures.ts';
+import { choicesFor, inputRows, type InputRow } from '../../src/tolerance/input-rows.ts';
+import type { InputChoices } from '../../src/tolerance/inputs.ts';
 import { variationReport } from '../../src/tolerance/report.ts';
 import { summaryCsv } from '../../src/tolerance/summary-csv.ts';
 import type { WorkerPool } from '../../src/workers/pool.ts';
@@ -11,11 +16,13 @@ import { startPool } from '../../src/workers/start-pool.ts';
 import '../hm-field/hm-field.ts';
 import { drawn } from '../shared/drawn.ts';
 import { tell } from '../shared/events.ts';
+import { howLook, settleFigures } from '../shared/how.ts';
 import { look } from '../shared/look.ts';
 import { panelLook } from '../shared/panel-look.ts';
 import { tableLook } from '../shared/table-look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import { WidthController } from '../shared/width-controller.ts';
+import { addedFigures, inputTable, withChoice } from './tolerance-inputs.ts';
 import { histogramOf, tornadoOf, usualShown } from './tolerance-pictures.ts';
 import { ToleranceRun, type Found } from './tolerance-run.ts';
 import { gapList, spreadTable, yieldTable } from './tolerance-tables.ts';
@@ -31,10 +38,11 @@ const USUAL = { count: '1000', seed: '1' } as const;
  * Tolerances: the design drawn many times within them, on all cores. Yield against the requirements, how each figure spreads, and what moves it.
  *
  * @fires hm-view  { tolerances: TolerancesView }
+ * @fires hm-edit  another tolerance of a variable
  * @fires hm-say   a file was written, a text copied, or could not be
  */
 export class HmTolerances extends LitElement {
-  static override styles = [look, panelLook, tableLook, styles];
+  static override styles = [look, panelLook, tableLook, howLook, styles];
   static override properties = {
     design: { attribute: false },
     complaints: { attribute: false },
@@ -52,6 +60,8 @@ export class HmTolerances extends LitElement {
   private readonly job = new ToleranceRun(this);
   private readonly box = new WidthController(this);
   private stale = false;
+  /** a variable's tolerance that was typed and cannot be */ private refused: { label: string; text: string; message: string } | null = null;
+  private listed = { from: [] as unknown[], rows: null as InputRow[] | null };
   private written = { design: null as Design | null, text: '' };
 
   constructor() {
@@ -68,6 +78,10 @@ export class HmTolerances extends LitElement {
     this.stale = found !== null && this.design !== null && found.plan.design !== this.design && JSON.stringify(found.plan.design) !== this.ownText();
   }
 
+  protected override updated(): void {
+    for (const body of this.renderRoot.querySelectorAll('tbody')) settleFigures(body);
+  }
+
   /** The design as text, made anew only for another one. */
   private ownText(): string {
     if (this.written.design !== this.design) this.written = { design: this.design, text: JSON.stringify(this.design) };
@@ -81,12 +95,34 @@ export class HmTolerances extends LitElement {
 
   private start(): void {
     const { count = USUAL.count, seed = USUAL.seed, distribution = 'normal', tolerances = 'all' } = this.view;
-    void this.job.start(this.design!, { count: whole(count), seed: whole(seed), distribution, tolerances }, this.pool());
+    const { added, choices } = this;
+    const figures = added.length === 0 ? {} : { figures: [...figuresOf(this.design!, 'usual').map(({ path }) => path), ...added] };
+    const inputs = choicesFor((this.inputs ?? []).map(({ label }) => label), choices);
+    void this.job.start(this.design!, { count: whole(count), seed: whole(seed), distribution, tolerances, ...figures, ...(Object.keys(inputs).length === 0 ? {} : { inputs }) }, this.pool());
+  }
+
+  /** Figures beside the usual ones that this design has. */
+  private get added(): string[] {
+    const known = new Set(figuresOf(this.design!).map(({ path }) => path));
+    return (Array.isArray(this.view.figures) ? this.view.figures : []).filter((path) => known.has(path));
+  }
+
+  private get choices(): InputChoices {
+    const { inputs } = this.view;
+    return typeof inputs === 'object' && inputs !== null ? inputs : {};
+  }
+
+  /** What will be moved; read anew only where something of it has changed. Null while the design cannot be read. */
+  private get inputs(): InputRow[] | null {
+    const { distribution = 'normal', tolerances = 'all' } = this.view;
+    const from = [this.design, this.choices, distribution, tolerances];
+    if (from.some((part, i) => part !== this.listed.from[i])) this.listed = { from, rows: inputRows(this.design!, { distribution, tolerances, choices: this.choices }) };
+    return this.listed.rows;
   }
 
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
-    return html`${this.renderAsk()} ${this.renderState()} ${this.job.found === null ? nothing : this.renderFound(this.job.found)}`;
+    return html`${this.renderAsk()} ${this.renderInputs()} ${this.renderState()} ${this.job.found === null ? nothing : this.renderFound(this.job.found)}`;
   }
 
   private renderAsk(): TemplateResult {
@@ -105,6 +141,37 @@ export class HmTolerances extends LitElement {
       </select></label>
       <button type="button" class="go" ?disabled=${this.job.progress !== null || this.complaints.length > 0} @click=${() => this.start()}>Draw the variations</button>
     </div>`;
+  }
+
+  private renderInputs(): TemplateResult {
+    const { inputs, added } = this;
+    const { distribution = 'normal' } = this.view;
+    const refused = new Map(this.job.complaints.flatMap(({ path, message }) => (path.startsWith('inputs.') ? [[path.slice('inputs.'.length), message]] : [])));
+    const all = figuresOf(this.design!);
+    const usual = new Set(figuresOf(this.design!, 'usual').map(({ path }) => path));
+    const typed = this.refused;
+    const rows = typed === null ? inputs : (inputs?.map((row) => (row.label === typed.label ? { ...row, tolerance: typed.text, complaint: typed.message } : row)) ?? null);
+    return html`${rows === null || rows.length === 0 ? nothing : inputTable(rows, distribution, refused, {
+      tolerance: (row, text) => this.wishTolerance(row, text),
+      distribution: (row, own) => this.remember({ inputs: withChoice(this.choices, row.label, { distribution: own }) }),
+    })}
+    ${addedFigures(all, usual, added, this.wrong('figure'), (figures) => this.remember({ figures, ...(this.view.shown === undefined ? {} : { shown: [...this.view.shown, ...figures.filter((path) => !added.includes(path))] }) }))}`;
+  }
+
+  /** A variable's tolerance is the design's own, so that its requirements are judged with it too. */
+  private wishTolerance({ label, variable }: InputRow, text: string | null): void {
+    const index = this.design!.variables?.findIndex(({ name }) => name === variable) ?? -1;
+    // What the last run was refused for may be mended by this.
+    this.job.complaints = this.job.complaints.filter(({ path }) => path !== `inputs.${label}`);
+    if (index < 0) this.remember({ inputs: withChoice(this.choices, label, { tolerance: text }) });
+    else {
+      const next = setVariable(this.design!, index, { tolerance: text ?? undefined });
+      const reading = toStack(next);
+      // What cannot be read must not take the design with it: it stands in its field with the reason.
+      this.refused = reading.ok || text === null ? null : { label, text, message: reading.complaints[0].message };
+      if (this.refused === null) tell(this, 'hm-edit', { next, label: `tolerance of ${label}` });
+      else this.requestUpdate();
+    }
   }
 
   private wrong(path: string): string | null {
@@ -130,7 +197,7 @@ export class HmTolerances extends LitElement {
   }
 
   private renderWrong(): TemplateResult | typeof nothing {
-    const rest = this.job.complaints.filter(({ path }) => path !== 'count' && path !== 'seed');
+    const rest = this.job.complaints.filter(({ path }) => path !== 'count' && path !== 'seed' && path !== 'figure');
     return rest.length === 0 ? nothing : html`<div role="alert">${rest.map(({ path, message }) => html`<p class="wrong">${path}: ${message}.</p>`)}</div>`;
   }
 
@@ -155,7 +222,7 @@ export class HmTolerances extends LitElement {
 
   private shown({ result }: Found): string[] {
     const known = new Set(result.figures.map(({ path }) => path));
-    return (this.view.shown ?? usualShown(result.figures)).filter((path) => known.has(path));
+    return (this.view.shown ?? [...usualShown(result.figures), ...this.added]).filter((path) => known.has(path));
   }
 
   private renderChoice({ result }: Found, shown: readonly string[]): TemplateResult {

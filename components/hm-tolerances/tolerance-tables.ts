@@ -43,7 +43,7 @@ function spreadCells(result: VariationResult, figure: VariedFigureResult): Templ
   const figures = spreadFigures(result, figure);
   return SPREAD.map((column) => {
     const found = figureAt(figures, column);
-    return html`<td>${found === null ? '–' : how(found, { walked: true })}</td>`;
+    return html`<td>${found === null ? '–' : how(found, { content: figureWord(found.value), walked: true })}</td>`;
   });
 }
 

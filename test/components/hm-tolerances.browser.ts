@@ -175,4 +175,61 @@ describe('the tolerance run', () => {
     expect(element.scrollWidth).to.be.at.most(345);
     for (const target of element.shadowRoot!.querySelectorAll('button, select, summary, fieldset label')) if (target.getBoundingClientRect().height > 0) expect(target.getBoundingClientRect().height).to.be.at.least(24);
   });
+
+  it('lists what it will draw, takes another tolerance and distribution of one input, and any figure', async () => {
+    await put({ view: { count: '20', tolerances: 'all' } });
+    const root = element.shadowRoot!;
+    const field = (label: string) => root.querySelector<HTMLElement>(`hm-field[label="Tolerance of ${label}"]`)!;
+    const accept = async (label: string, value: string): Promise<void> => {
+      field(label).dispatchEvent(new CustomEvent('field-accept', { detail: value }));
+      await settled(element);
+    };
+    expect(text()).to.contain('What is drawn: 6 inputs');
+    expect(text()).to.contain('950 nm to 1.05 um');
+    await accept('p thickness', '20 nm');
+    const how = root.querySelector<HTMLSelectElement>('select[aria-label="How p thickness is drawn"]')!;
+    how.value = 'uniform';
+    how.dispatchEvent(new Event('change'));
+    await settled(element);
+    expect(text()).to.contain('1 changed for this run').and.to.contain('980 nm to 1.02 um');
+    // A variable's tolerance goes into the design.
+    const edits = heard(element, 'hm-edit');
+    await accept('tcore', '3 nm');
+    expect((edits[0] as { next: Design }).next.variables![0].tolerance).to.equal('3 nm');
+    const menu = root.querySelector<HTMLSelectElement>('select.add')!;
+    menu.value = 'layers.n.debye_nm';
+    menu.dispatchEvent(new Event('change'));
+    await settled(element);
+    expect(root.querySelector('[aria-label="Figures added"]')!.textContent).to.contain('n: Debye length');
+    await expectAccessible(element);
+    await run();
+    const { request } = asked[0] as Extract<JobSpec, { kind: 'variations' }>;
+    expect(request.inputs).to.deep.equal({ 'p thickness': { tolerance: '20 nm', distribution: 'uniform' } });
+    expect(request.figures).to.include('layers.n.debye_nm').and.to.include('layers.n.sheet_ohm');
+    expect(text()).to.contain('n: Debye length');
+  });
+
+  it('refuses a tolerance that leaves nothing in its own row, and asks no worker', async () => {
+    await put({ view: { count: '20', tolerances: 'all' } });
+    const root = element.shadowRoot!;
+    const complaint = (label: string) => (root.querySelector(`hm-field[label="Tolerance of ${label}"]`) as unknown as { complaint: string | null }).complaint;
+    const accept = async (label: string, value: string): Promise<void> => {
+      root.querySelector(`hm-field[label="Tolerance of ${label}"]`)!.dispatchEvent(new CustomEvent('field-accept', { detail: value }));
+      await settled(element);
+    };
+    const edits = heard(element, 'hm-edit');
+    await accept('tcore', '150 %');
+    expect(edits).to.deep.equal([]);
+    expect(complaint('tcore')).to.contain('stays below 100 %');
+    await accept('p thickness', '150 %');
+    expect(complaint('p thickness')).to.contain('stays below 100 %');
+    expect(root.querySelector('details')!.open).to.equal(true);
+    button(element, 'Draw the variations').click();
+    await settled(element);
+    expect(asked).to.deep.equal([]);
+    expect(root.querySelector('[role="alert"]')!.textContent).to.contain('p thickness');
+    button(element, 'back to 5 %').click();
+    await settled(element);
+    expect(complaint('p thickness')).to.equal(null);
+  });
 });
