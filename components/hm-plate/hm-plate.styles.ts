@@ -18,6 +18,9 @@ export const styles = css`
     color: var(--faint);
     margin-inline-end: 2px;
   }
+  .left-out {
+    color: var(--faint);
+  }
   .beside {
     display: grid;
     grid-template-columns: minmax(0, 1fr) auto;

@@ -21,6 +21,7 @@ function pressed(text: string, on: boolean, act: () => void, title = ''): Templa
 export function tools(t: ToolsInput): TemplateResult {
   const { view } = t;
   const even = (view.depth ?? 'even') === 'even';
+  const leftOut = t.dimensions.filter(({ crowded, hidden }) => crowded && !hidden).length;
   const shading = view.shading ?? 'occupancy';
   return html`<div class="tools">
     <div role="group" aria-label="depth axis" class="set">
@@ -38,7 +39,7 @@ export function tools(t: ToolsInput): TemplateResult {
       <span class="of" aria-hidden="true">Show</span>
       ${pressed('dopant levels', view.levels !== false, () => t.change({ levels: view.levels === false }))}
       ${pressed('vacuum level', view.vacuum === true, () => t.change({ vacuum: view.vacuum !== true, energyWindow: undefined }))}
-      <button type="button" aria-expanded=${t.open.dimensions} @click=${() => t.toggle('dimensions')}>dimensions…</button>
+      <button type="button" aria-expanded=${t.open.dimensions} @click=${() => t.toggle('dimensions')}>dimensions…${leftOut === 0 ? nothing : html` <span class="left-out" title="no room for them here: zoom in, or drag others away">${leftOut} left out</span>`}</button>
       <button type="button" aria-expanded=${t.open.table} @click=${() => t.toggle('table')}>data table</button>
     </div>
     <div role="group" aria-label="zoom" class="set">

@@ -6,6 +6,12 @@ import { depthRoom } from './depth-room.ts';
 /** true: nm are even. even: "even-handed", each layer gets room by the bending that it holds, see depth-room.ts. */
 export type DepthMode = 'true' | 'even';
 
+export interface DepthTick {
+  /** nm */ z: number;
+  /** px */ x: number;
+  label: string;
+}
+
 export interface DepthAxis {
   mode: DepthMode;
   /** px of the window's two ends */ range: [number, number];
@@ -13,7 +19,8 @@ export interface DepthAxis {
   /** nm -> px, strictly rising with z; goes on beyond the stack and the window */ x(z_nm: number): number;
   /** px -> nm */ depth(x: number): number;
   /** px of the layer boundaries [layers + 1], not clipped to the range */ edges: number[];
-  ticks: { x: number; label: string }[];
+  ticks: DepthTick[];
+  /** px of ticks without a figure between them; none on a true axis */ marks: number[];
   title: string;
 }
 
@@ -21,8 +28,12 @@ export interface DepthAxis {
 const LONGEST_IN_NM = 2000;
 /** Between two tick labels, of the font size. */
 const TICK_GAP = 0.9;
-/** Gap between two tick labels that gets another between them, of the font size. */
-const DIVIDED = 9;
+/** Distance wished for between two tick labels of an uneven axis, of the font size. */
+const SPACING = 6.5;
+/** How far a tick may stray from its even place for a rounder figure, of that distance. */
+const STRAY = 0.25;
+/** Least distance of ticks without figures, px: nearer ones run into a bar. */
+const CLOSEST = 4;
 
 /**
  * @param options.range   px of the top and of the bottom of the window; the first must be the smaller
@@ -43,8 +54,9 @@ export function depthAxis(result: Result, options: { mode: DepthMode; range: [nu
   const depth = (at: number): number => piecewise(table.room, table.z, start + (at - range[0]) / scale);
   const inMicrometres = mode === 'true' && window[1] - window[0] > LONGEST_IN_NM;
   const title = mode === 'even' ? 'depth (nm), even-handed' : inMicrometres ? 'depth (µm)' : 'depth (nm)';
-  const axis: DepthAxis = { mode, range, window, x, depth, edges: edges_nm.map(x), ticks: [], title };
+  const axis: DepthAxis = { mode, range, window, x, depth, edges: edges_nm.map(x), ticks: [], marks: [], title };
   axis.ticks = mode === 'even' ? evenTicks(axis, edges_nm, textSize) : trueTicks(axis, inMicrometres, textSize);
+  if (mode === 'even') axis.marks = subdivisions(axis);
   return axis;
 }
 
@@ -70,40 +82,59 @@ function piecewise(from: number[], to: number[], value: number): number {
   return to[i] + ((value - from[i]) * (to[i + 1] - to[i])) / (from[i + 1] - from[i]);
 }
 
-function trueTicks(axis: DepthAxis, inMicrometres: boolean, textSize: number): DepthAxis['ticks'] {
+function trueTicks(axis: DepthAxis, inMicrometres: boolean, textSize: number): DepthTick[] {
   const unit = inMicrometres ? 1000 : 1;
   const [from, to] = axis.window.map((z) => z / unit);
   const wanted = Math.max(2, Math.floor((axis.range[1] - axis.range[0]) / (8 * textSize)));
-  return niceTicks(from, to, wanted).map((value) => ({ x: axis.x(value * unit), label: plainNumber(value) }));
+  return niceTicks(from, to, wanted).map((value) => ({ z: value * unit, x: axis.x(value * unit), label: plainNumber(value) }));
 }
 
 /**
- * Ends and boundaries first, where the reader of an uneven axis needs the figures most; then, between each two, the roundest depth near the middle of the gap,
- * as long as there is room.
+ * Ends and boundaries first, where the reader of an uneven axis needs the figures most; between each two of them round depths at even distances in the picture, as many as have room.
  */
-function evenTicks(axis: DepthAxis, edges_nm: number[], textSize: number): DepthAxis['ticks'] {
+function evenTicks(axis: DepthAxis, edges_nm: number[], textSize: number): DepthTick[] {
   const [from, to] = axis.window;
-  const placed: { z: number; x: number; label: string; half: number }[] = [];
-  const place = (z: number): boolean => {
+  const placed: (DepthTick & { half: number })[] = [];
+  const place = (z: number): void => {
     const label = depthLabel(z);
     const half = textWidth(label, textSize) / 2;
     const x = axis.x(z);
-    if (placed.some((other) => Math.abs(other.x - x) < other.half + half + TICK_GAP * textSize)) return false;
+    if (placed.some((other) => Math.abs(other.x - x) < other.half + half + TICK_GAP * textSize)) return;
     placed.push({ z, x, label, half });
-    return true;
   };
   for (const z of [from, to, ...edges_nm]) if (z >= from && z <= to) place(z);
-  const divide = (a: number, b: number): void => {
-    const gap = axis.x(b) - axis.x(a);
-    if (gap < DIVIDED * textSize) return;
-    const z = roundest(axis.depth(axis.x(a) + 0.35 * gap), axis.depth(axis.x(b) - 0.35 * gap));
-    if (!place(z)) return;
-    divide(a, z);
-    divide(z, b);
-  };
   const first = [...placed].sort((a, b) => a.x - b.x);
-  for (let i = 0; i + 1 < first.length; i++) divide(first[i].z, first[i + 1].z);
-  return placed.sort((a, b) => a.x - b.x).map(({ x, label }) => ({ x, label }));
+  for (let i = 0; i + 1 < first.length; i++) {
+    const [left, right] = [first[i].x, first[i + 1].x];
+    const parts = Math.round((right - left) / (SPACING * textSize));
+    const share = (right - left) / parts;
+    for (let k = 1; k < parts; k++) {
+      const at = left + k * share;
+      place(roundest(axis.depth(at - STRAY * share), axis.depth(at + STRAY * share)));
+    }
+  }
+  return placed.sort((a, b) => a.x - b.x).map(({ z, x, label }) => ({ z, x, label }));
+}
+
+/** Depths at even steps between two labels, each a whole multiple of the step: how closely they stand shows how the axis is stretched there. */
+function subdivisions(axis: DepthAxis): number[] {
+  const marks: number[] = [];
+  for (let i = 0; i + 1 < axis.ticks.length; i++) {
+    const [a, b] = [axis.ticks[i].z, axis.ticks[i + 1].z];
+    const between = stepsBetween(a, b).map(axis.x);
+    const all = [axis.x(a), ...between, axis.x(b)];
+    if (all.every((x, k) => k === 0 || x - all[k - 1] >= CLOSEST)) marks.push(...between);
+  }
+  return marks;
+}
+
+function stepsBetween(a: number, b: number): number[] {
+  const tenth = (b - a) / 10;
+  const power = 10 ** Math.floor(Math.log10(tenth));
+  const step = [1, 2, 5, 10].map((size) => size * power).find((size) => size >= tenth * (1 - 1e-9))!;
+  const found: number[] = [];
+  for (let n = Math.floor(a / step + 1e-6) + 1; n * step < b - 1e-6 * step; n++) found.push(n * step);
+  return found;
 }
 
 /** The number with the fewest digits between two depths: a multiple of the largest 1, 2 or 5 times a power of ten that has one there, nearest to their middle. */

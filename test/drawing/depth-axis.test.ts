@@ -54,6 +54,27 @@ describe('the depth axis', () => {
     });
   }
 
+  it('sets the figures of an uneven axis at much the same distances between two boundaries', () => {
+    const axis = depthAxis(inventedResult(), { mode: 'even', range: [0, 1200] });
+    for (let l = 0; l < axis.edges.length - 1; l++) {
+      const within = axis.ticks.map(({ x }) => x).filter((x) => x >= axis.edges[l] - 0.01 && x <= axis.edges[l + 1] + 0.01);
+      const gaps = within.slice(1).map((x, i) => x - within[i]);
+      if (gaps.length > 1) expect(Math.max(...gaps) / Math.min(...gaps), `layer ${l}: ${gaps.map(Math.round).join(' ')}`).toBeLessThan(2.4);
+    }
+  });
+
+  it('shows by ticks without figures, at even steps of depth, how an uneven axis is stretched', () => {
+    const axis = depthAxis(inventedResult(), { mode: 'even', range: [0, 1200] });
+    expect(axis.marks.length).toBeGreaterThan(10);
+    const all = [...axis.ticks.map(({ x }) => x), ...axis.marks].sort((a, b) => a - b);
+    all.slice(1).forEach((x, i) => expect(x - all[i]).toBeGreaterThanOrEqual(4 - 1e-9));
+    for (const x of axis.marks) {
+      const z = axis.depth(x);
+      expect(Math.abs(z - Number(z.toPrecision(4))), String(z)).toBeLessThan(1e-6 * z);
+    }
+    expect(depthAxis(inventedResult(), { mode: 'true', range: [0, 1200] }).marks).toEqual([]);
+  });
+
   it('is even in nm in true mode', () => {
     const axis = depthAxis(inventedResult(), { mode: 'true', range: [0, 2120] });
     expect(axis.x(1000)).toBeCloseTo(1000, 9);

@@ -27,6 +27,7 @@ function depthAxisMarks(frame: Frame): Shape[] {
   const y = area.bottom + frame.strip;
   const line = { role: 'depth-axis', stroke: style.faint, width: style.thinWidth } as const;
   const shapes: Shape[] = [{ kind: 'line', ...line, x1: area.left, x2: area.right, y1: y, y2: y }];
+  for (const x of depth.marks) shapes.push({ kind: 'line', ...line, x1: x, x2: x, y1: y, y2: y + 3 });
   for (const tick of depth.ticks) {
     shapes.push({ kind: 'line', ...line, x1: tick.x, x2: tick.x, y1: y, y2: y + 5 });
     const half = textWidth(tick.label, small) / 2;
