@@ -1,6 +1,7 @@
 import { halved, type Mesh } from './mesh.ts';
 import { largest, newton, type NewtonResult } from './newton.ts';
 import { gaussError } from './poisson-balance.ts';
+import { betweenErrors, displacementsOf } from './poisson-fields.ts';
 import { setEnds } from './poisson-guess.ts';
 import { profilesOf } from './poisson-profiles.ts';
 import { bent, equidistributed, rowErrors } from './poisson-remesh.ts';
@@ -26,12 +27,16 @@ const FIRST_UPDATE = 1e-5;
 const UPDATE_SHARE = 1e-3;
 /** Share of the goal that a single row may miss, at first. */
 const ROW_SHARE = 1 / 6;
+/** Share of it that the cubic of a cell may miss between nodes, where errors do not add up. */
+const BETWEEN_SHARE = 0.7;
 
 interface Solved {
   system: PoissonSystem;
   run: NewtonResult;
-  /** V [nodes] */ errors: Float64Array;
-  /** largest error of psi by the linear response to what the rows miss, V */ estimate: number;
+  /** shares of the rows in the error at the nodes, V [nodes] */ errors: Float64Array;
+  /** of the cubic between nodes, V [sides], a cell's at its upper node */ between: Float64Array;
+  /** largest error at a node by the linear response to what the rows miss, V */ nodal: number;
+  /** the same with what the cubic between nodes may be off, V */ estimate: number;
 }
 
 interface Halved {
@@ -69,10 +74,12 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     const missed = system.defects(values);
     const errors = rowErrors(missed, system.response());
     system.solve(missed);
-    return { system, run, errors, estimate: largest(missed) };
+    const between = betweenErrors(system, values, displacementsOf(system, values));
+    const nodal = largest(missed);
+    return { system, run, errors, between, nodal, estimate: Math.max(nodal, largest(between)) };
   };
   const carryTo = (from: Solved, values: Float64Array): void => {
-    mesh = equidistributed(problem, from.system, from.errors, share * target);
+    mesh = equidistributed(problem, from.system, from.errors, share * target, from.between, BETWEEN_SHARE * target);
     psi = bent(from.system, values, mesh);
     setEnds(problem, psi);
   };
@@ -83,14 +90,8 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     const finePsi = bent(coarse.system, coarsePsi, to);
     const fine = solve(to, finePsi, 'compact', ACCEPTANCE.update);
     if (!fine) return null;
-    let difference = 0;
-    for (let l = 0; l < from.local.length; l++) {
-      for (let k = 0; k < from.local[l].length; k++) {
-        const d = Math.abs(coarsePsi[from.first[l] + k] - finePsi[to.first[l] + 2 * k]);
-        if (!(d <= difference)) difference = d;
-      }
-    }
-    const meshError = Math.max(halvingError(difference, coarse.estimate, fine.estimate), SAFETY * fine.estimate);
+    const { nodal, between } = differences(coarse.system, coarsePsi, fine.system, finePsi);
+    const meshError = Math.max(halvingError(nodal, coarse.nodal, fine.nodal), halvingError(between, coarse.estimate, fine.estimate), SAFETY * fine.estimate);
     const quality: Quality = {
       converged: true,
       newtonUpdates: updates,
@@ -116,7 +117,7 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     if (!coarse) break;
     if (!best || coarse.estimate < best.coarse.estimate) best = { coarse, psi };
     if (!(coarse.estimate <= target)) {
-      if (round > 0 || start.warm) share *= Math.min(0.8, Math.max(0.05, (0.7 * target) / coarse.estimate));
+      if ((round > 0 || start.warm) && !(coarse.nodal <= target)) share *= Math.min(0.8, Math.max(0.05, (0.7 * target) / coarse.nodal));
       carryTo(coarse, psi);
       continue;
     }
@@ -135,6 +136,26 @@ export function solveByCompact(problem: PoissonProblem, start: PoissonStart, goa
     best = { coarse: fine.solved, psi: fine.psi };
   }
   return { solution: null, updates };
+}
+
+/** Largest differences of a solution from that on its halved mesh, V: at the nodes that both have, and of the cubic in the middle of each cell from the node there. */
+function differences(coarse: PoissonSystem, coarsePsi: Float64Array, fine: PoissonSystem, finePsi: Float64Array): { nodal: number; between: number } {
+  const displacements = displacementsOf(coarse, coarsePsi);
+  let nodal = 0;
+  let between = 0;
+  coarse.mesh.local.forEach((z, l) => {
+    for (let k = 0; k < z.length; k++) {
+      const i = coarse.mesh.first[l] + k;
+      const j = fine.mesh.first[l] + 2 * k;
+      const d = Math.abs(coarsePsi[i] - finePsi[j]);
+      if (!(d <= nodal)) nodal = d;
+      if (k + 1 === z.length) break;
+      const bend = (z[k + 1] - z[k]) * (displacements[i + l + 1] / coarse.permittivity[i + l + 1] - displacements[i + l] / coarse.permittivity[i + l]);
+      const b = Math.abs(0.5 * (coarsePsi[i] + coarsePsi[i + 1]) + bend / 8 - finePsi[j + 1]);
+      if (!(b <= between)) between = b;
+    }
+  });
+  return { nodal, between };
 }
 
 /**

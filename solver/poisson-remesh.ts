@@ -16,6 +16,9 @@ const NEAREST_MARK = 1 / 3;
 const ROUNDING = 1e-9;
 /** What a row misses grows with the fifth power of its cells. */
 const POWER = 1 / 5;
+/** What a cubic between nodes misses grows with the fourth power of its cell, but more slowly at a bend of the doping that the cells do not resolve yet. */
+const POWER_BETWEEN = 1 / 4;
+const POWER_KINK = 1 / 2;
 
 /** Rows' shares in the error of psi: the charge that each misses times the response of its own node, V [nodes]. */
 export function rowErrors(defects: Float64Array, response: Float64Array): Float64Array {
@@ -30,8 +33,9 @@ export function rowErrors(defects: Float64Array, response: Float64Array): Float6
  *
  * @param errors  of the rows of `system`, V [nodes]
  * @param aim     wished error of a row, V
+ * @param between  of the cubic between nodes, V [sides]; the larger of the two demands counts
  */
-export function equidistributed(problem: PoissonProblem, system: PoissonSystem, errors: Float64Array, aim: number): Mesh {
+export function equidistributed(problem: PoissonProblem, system: PoissonSystem, errors: Float64Array, aim: number, between: Float64Array, betweenAim: number): Mesh {
   const { mesh } = system;
   return meshOf(
     mesh.local.map((z, l) => {
@@ -47,7 +51,10 @@ export function equidistributed(problem: PoissonProblem, system: PoissonSystem, 
         let error = errors[first + k];
         if (k > 0) error = Math.max(error, errors[first + k - 1]);
         if (k < m) error = Math.max(error, errors[first + k + 1]);
-        size[k] = Math.min(most, h * Math.min(COARSER, Math.max(FINER, (aim / error) ** POWER)));
+        const cell = first + l + k;
+        const off = Math.max(k > 0 ? between[cell - 1] : 0, k < m ? between[cell] : 0) / betweenAim;
+        const change = Math.min((aim / error) ** POWER, off > 1 ? off ** -POWER_KINK : off ** -POWER_BETWEEN);
+        size[k] = Math.min(most, h * Math.min(COARSER, Math.max(FINER, change)));
       }
       for (const mark of problem.layers[l].landmarks ?? []) {
         for (let k = 0; k <= m; k++) size[k] = Math.min(size[k], mark.reach + GRADING * Math.abs(z[k] - mark.z));
