@@ -8,7 +8,7 @@ const KEYS: [keys: string[], what: string][] = [
   [['Ctrl Z', '⌘ Z'], 'take the last change back'],
   [['Ctrl Shift Z', '⌘ ⇧ Z'], 'do it again'],
   [['Ctrl O', '⌘ O'], 'open a design file'],
-  [['Ctrl S', '⌘ S'], 'take the design away as a file'],
+  [['Ctrl S', '⌘ S'], 'save the design to the file it was opened from, else take it away as a file'],
   [['← →'], 'in the strip: choose a layer or a contact'],
   [['Enter', 'Escape'], 'in the strip: edit the chosen one, and back'],
   [['[', ']'], 'in the strip: thinner, thicker'],

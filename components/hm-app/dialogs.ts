@@ -3,6 +3,7 @@ import type { Design } from '../../src/design/types.ts';
 import type { RequirementResult, Result } from '../../src/result/types.ts';
 import type { PlateView } from '../hm-plate/plate-view.ts';
 import type { HmProjects } from '../hm-projects/hm-projects.ts';
+import type { OpenedFile } from '../shared/opened-file.ts';
 import type { VariantList } from '../../src/state/variants.ts';
 import '../hm-about/hm-about.ts';
 import '../hm-dialog/hm-dialog.ts';
@@ -18,6 +19,7 @@ export interface PageDialogs {
   plateLook: PlateView;
   /** judged rows of this very design; null while they are not known */ requirements: readonly RequirementResult[] | null;
   variants: VariantList;
+  /** that the project was opened from and can be written back to */ file: OpenedFile | null;
   entries: HmProjects['entries'];
   damaged: HmProjects['damaged'];
   openId: string | null;
@@ -26,11 +28,11 @@ export interface PageDialogs {
 }
 
 /** The page's dialogs, shut until they are asked for. The review sheet's code is fetched when it first opens. */
-export function pageDialogs({ design, result, stale, plateLook, requirements, variants, entries, damaged, openId, remark, unsaved }: PageDialogs): TemplateResult {
+export function pageDialogs({ design, result, stale, plateLook, requirements, variants, file, entries, damaged, openId, remark, unsaved }: PageDialogs): TemplateResult {
   return html`
     <hm-projects .entries=${entries} .damaged=${damaged} .openId=${openId} .remark=${remark}></hm-projects>
     <hm-starters></hm-starters>
-    <hm-leave .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook}></hm-leave>
+    <hm-leave .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook} .file=${file}></hm-leave>
     <hm-sheet .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook} .requirements=${requirements} .others=${variants.list.filter(({ id, removed }) => id !== variants.open && !removed)} .ownName=${variants.list.find(({ id }) => id === variants.open)?.name ?? ''}></hm-sheet>
     <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>
     <hm-help-door></hm-help-door>

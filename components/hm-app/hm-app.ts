@@ -16,6 +16,7 @@ import type { PlateView } from '../hm-plate/plate-view.ts';
 import { WorkingsController } from '../hm-workings/workings-controller.ts';
 import type { HalfmarkEvents } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import type { OpenedFile } from '../shared/opened-file.ts';
 import { isDark, isTheme, readTheme, setTheme, type Theme } from '../shared/theme.ts';
 import '../hm-conditions/hm-conditions.ts';
 import '../hm-messages/hm-messages.ts';
@@ -24,7 +25,7 @@ import { ChoicesController } from './choices-controller.ts';
 import { pageDialogs, type PageDialogs } from './dialogs.ts';
 import { FrameController } from './frame-controller.ts';
 import { styles } from './hm-app.styles.ts';
-import { IncomingController } from './incoming.ts';
+import { IncomingController, type Incoming } from './incoming.ts';
 import { JudgingController } from './judging-controller.ts';
 import { pageKey } from './keys.ts';
 import { OfflineController } from './offline-controller.ts';
@@ -34,6 +35,7 @@ import { actOnPage } from './page-acts.ts';
 import { ProjectDesk } from './project-desk.ts';
 import { ProjectWishes } from './project-wishes.ts';
 import { RemarkController } from './remark-controller.ts';
+import { answerShelfWishes } from './shelf-wishes.ts';
 import { StaleController } from './stale-controller.ts';
 import { STORE_WORDS } from './store-words.ts';
 import { WindowController } from './window-controller.ts';
@@ -68,7 +70,8 @@ export class HmApp extends LitElement implements Page {
   private readonly jobs = new JobClient(startJobWorker);
   readonly judging = new JudgingController(this, this.jobs.run);
   private readonly wishes = new ProjectWishes(this);
-  readonly incoming = new IncomingController(this, (text) => void this.wishes.settle(this.desk.take(text)), (text) => this.say(text, true));
+  readonly incoming = new IncomingController(this, (incoming) => void this.take(incoming), (text) => this.say(text, true));
+  /** files that projects were opened from since the page is open */ private readonly files = new Map<string, OpenedFile>();
   private readonly remarks = new RemarkController(this);
   private readonly staleness = new StaleController(this);
   private readonly workings = new WorkingsController(this, (text) => this.say(text, true));
@@ -87,6 +90,7 @@ export class HmApp extends LitElement implements Page {
     this.axes = null;
     this.theme = readTheme();
     new OfflineController(this, offlineCopy, (text) => this.say(text));
+    answerShelfWishes(this, () => this.store, (text) => this.say(text, true));
     new WindowController(this, {
       key: (event) => this.key(event),
       hidden: () => void (this.ready && this.keeper.flush()),
@@ -191,6 +195,15 @@ export class HmApp extends LitElement implements Page {
     return this.renderRoot.querySelector<HmDialog>('#unsaved')!;
   }
 
+  private async take(incoming: Incoming): Promise<void> {
+    const before = this.keeper.project.id;
+    await this.wishes.settle(this.desk.take(incoming));
+    const { id } = this.keeper.project;
+    if (incoming.file === undefined || id === null || id === before) return;
+    this.files.set(id, incoming.file);
+    this.requestUpdate();
+  }
+
   /** What the dialogs show. */
   private get dialogs(): PageDialogs {
     const { session, keeper, desk, judging, wishes } = this;
@@ -202,6 +215,7 @@ export class HmApp extends LitElement implements Page {
       plateLook: session.view as PlateView,
       requirements: verdicts.status === 'complete' && !verdicts.stale ? verdicts.rows : null,
       variants: session.variants,
+      file: this.files.get(keeper?.project.id ?? '') ?? null,
       entries: desk?.entries ?? [],
       damaged: desk?.damaged ?? [],
       openId: keeper?.project.id ?? null,

@@ -1,9 +1,11 @@
 import type { ReactiveController, ReactiveControllerHost } from 'lit';
+import { droppedHandle, OpenedFile, pickedHandle, type FileHandle } from '../shared/opened-file.ts';
 
 /** A text that came to the page, and what it came as. */
 export interface Incoming {
   text: string;
   /** name of the file; empty for a text that was pasted */ name: string;
+  /** the file itself, where the browser lets it be written back */ file?: OpenedFile;
 }
 
 /** Files above this are not even read: the reader refuses them anyway. Bytes. */
@@ -42,7 +44,10 @@ export class IncomingController implements ReactiveController {
   }
 
   /** Lets the person pick a file. */
-  pick(): void {
+  async pick(): Promise<void> {
+    const handle = await pickedHandle();
+    if (handle === null) return;
+    if (handle !== undefined) return this.#readHandle(handle);
     const input = document.createElement('input');
     input.type = 'file';
     input.accept = '.json,application/json';
@@ -85,7 +90,8 @@ export class IncomingController implements ReactiveController {
     const file = event.dataTransfer?.files[0];
     if (file === undefined) return;
     event.preventDefault();
-    void this.#read(file);
+    // The browser answers for the item only while it tells of the drop.
+    void droppedHandle(event.dataTransfer!).then((handle) => this.#read(file, handle));
   };
 
   readonly #paste = (event: ClipboardEvent): void => {
@@ -96,11 +102,19 @@ export class IncomingController implements ReactiveController {
     if (text.trimStart().startsWith('{')) this.#take({ text, name: '' });
   };
 
-  async #read(file: File | undefined): Promise<void> {
+  async #readHandle(handle: FileHandle): Promise<void> {
+    try {
+      await this.#read(await handle.getFile(), handle);
+    } catch (error) {
+      this.#refuse(`${handle.name} could not be read (${error instanceof Error ? error.message : String(error)}).`);
+    }
+  }
+
+  async #read(file: File | undefined, handle: FileHandle | null = null): Promise<void> {
     if (file === undefined) return;
     if (file.size > LARGEST) return this.#refuse(`${file.name} has ${Math.round(file.size / 1e6)} MB: that is no design and no backup.`);
     try {
-      this.#take({ text: await file.text(), name: file.name });
+      this.#take({ text: await file.text(), name: file.name, ...(handle === null ? {} : { file: new OpenedFile(handle, file) }) });
     } catch (error) {
       this.#refuse(`${file.name} could not be read (${error instanceof Error ? error.message : String(error)}).`);
     }

@@ -31,7 +31,7 @@ export function actOnPage(page: Page, wishes: ProjectWishes, act: PageAct): void
       page.element('hm-leave').close();
       return void import('../hm-sheet/hm-sheet.ts').then(() => page.element('hm-sheet').show(), () => page.say('The review sheet could not be fetched.', true));
     case 'open-file':
-      return page.incoming.pick();
+      return void page.incoming.pick();
     case 'cancel':
       return solver.cancel();
     case 'again':

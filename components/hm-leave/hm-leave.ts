@@ -4,6 +4,7 @@ import type { StyleName } from '../../src/drawing/styles.ts';
 import type { Result } from '../../src/result/types.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
+import type { OpenedFile, WrittenBack } from '../shared/opened-file.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
 import '../hm-dialog/hm-dialog.ts';
@@ -19,7 +20,7 @@ const STYLES: [StyleName, string][] = [
 
 /**
  * Taking something away: the plate as SVG or PNG or to the clipboard, the profiles and the ledger as tables, the design as its file
- * or inside a link. `show()` opens it.
+ * or inside a link; the design back to the file that it was opened from. `show()` opens it.
  * The review sheet is asked for from here.
  * Where the figures belong to an earlier design than the one on the page, they are not given away.
  *
@@ -32,6 +33,8 @@ export class HmLeave extends LitElement {
     result: { attribute: false },
     stale: { type: Boolean },
     plateLook: { attribute: false },
+    file: { attribute: false },
+    trouble: { state: true },
     remark: { state: true },
     plateStyle: { state: true },
   };
@@ -40,6 +43,8 @@ export class HmLeave extends LitElement {
   declare result: Result | null;
   declare stale: boolean;
   /** how the plate looks on the page */ declare plateLook: PlateLook;
+  /** that the design was opened from and can be written back to */ declare file: OpenedFile | null;
+  /** why the last writing back came to nothing */ declare private trouble: WrittenBack | null;
   declare private remark: string;
   declare private plateStyle: StyleName;
 
@@ -49,12 +54,15 @@ export class HmLeave extends LitElement {
     this.result = null;
     this.stale = false;
     this.plateLook = {};
+    this.file = null;
+    this.trouble = null;
     this.remark = '';
     this.plateStyle = 'light';
   }
 
   show(): void {
     this.remark = '';
+    this.trouble = null;
     void this.renderRoot.querySelector<HmDialog>('hm-dialog')!.show();
   }
 
@@ -62,8 +70,31 @@ export class HmLeave extends LitElement {
     this.renderRoot.querySelector<HmDialog>('hm-dialog')!.close();
   }
 
-  /** Takes the design's file away at once, without the dialog. @returns what to say about it */
+  /**
+   * Saves the design at once, without the dialog: back to the file that it was opened from, else to one of its own. Where the file cannot be written the dialog opens, with the reason
+   * and other ways.
+   *
+   * @returns what to say about it
+   */
   async saveDesign(): Promise<string> {
+    if (this.file === null) return this.designFile();
+    const said = await this.writeBack();
+    if (this.trouble !== null) {
+      const { trouble } = this;
+      if (!this.renderRoot.querySelector<HmDialog>('hm-dialog')!.open) this.show();
+      this.trouble = trouble;
+      this.remark = said;
+    }
+    return said;
+  }
+
+  private async writeBack(over = false): Promise<string> {
+    const outcome = await this.file!.write(designBlob(this.design!), over);
+    this.trouble = outcome.kind === 'written' ? null : outcome;
+    return outcome.said;
+  }
+
+  private designFile(): Promise<string> {
     return this.written(fileName(this.design!.title, '.halfmark.json'), 'application/json', designBlob(this.design!));
   }
 
@@ -111,6 +142,16 @@ export class HmLeave extends LitElement {
     void this.run(copy());
   }
 
+  private renderBack(): TemplateResult | typeof nothing {
+    const { file, trouble } = this;
+    if (file === null) return nothing;
+    return html`<div class="row"><button type="button" @click=${() => void this.run(this.writeBack())}>Save to ${file.name}</button></div>
+      ${trouble === null
+        ? nothing
+        : html`<p class="caution">${trouble.said} Everything is still here: take the design as a new file${trouble.kind === 'changed' ? ', or write over what the other program left' : ''}.</p>
+            ${trouble.kind === 'changed' ? html`<div class="row"><button type="button" @click=${() => void this.run(this.writeBack(true))}>Write over ${file.name}</button></div>` : nothing}`}`;
+  }
+
   override render(): TemplateResult {
     const ready = this.result !== null && !this.stale;
     return html`<hm-dialog heading="Take away">
@@ -143,7 +184,8 @@ export class HmLeave extends LitElement {
       </section>
       <section aria-labelledby="of-design">
         <h3 id="of-design">The design</h3>
-        <div class="row"><button type="button" @click=${() => void this.run(this.saveDesign())}>Design file, JSON</button> <button type="button" @click=${this.copyLink}>Copy a link</button></div>
+        ${this.renderBack()}
+        <div class="row"><button type="button" @click=${() => void this.run(this.designFile())}>Design file, JSON</button> <button type="button" @click=${this.copyLink}>Copy a link</button></div>
         <p class="quiet">Read again by dropping it on the page, and by the command line.</p>
       </section>
       <p class="caution">Estimates of an ideal one-dimensional structure from published parameters, to be confirmed by measurement before a process or a product relies on them.</p>

@@ -1,12 +1,14 @@
 import { expect } from 'chai';
 import '../../components/hm-leave/hm-leave.ts';
 import type { HmLeave } from '../../components/hm-leave/hm-leave.ts';
+import { OpenedFile } from '../../components/shared/opened-file.ts';
 import { fileName, saveFile } from '../../components/shared/save-file.ts';
 import { starters } from '../../src/design/starters/index.ts';
 import { textOfLink } from '../../src/export/link.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import type { Result } from '../../src/result/types.ts';
 import { expectAccessible } from './accessible.ts';
+import { fakeFile } from './fake-file.ts';
 import { button, until } from './heard.ts';
 
 const { design } = starters[0];
@@ -111,6 +113,89 @@ describe('taking something away', () => {
     });
     button(element, 'Design file').click();
     await until('the remark', () => remark().includes('the disk is full'));
+  });
+});
+
+describe('saving back to the file that a design was opened from', () => {
+  const named = (name: string) => (): never => {
+    throw new DOMException('no', name);
+  };
+
+  it('writes the design there, and again after that', async () => {
+    const disk = fakeFile('cap.json', 'old');
+    const file = new OpenedFile(disk.handle, await disk.handle.getFile());
+    for (const text of ['one', 'two']) expect(await file.write(Promise.resolve(new Blob([text])))).to.deep.equal({ kind: 'written', said: 'Saved to cap.json.' });
+    expect(disk.text).to.equal('two');
+  });
+
+  it('asks for leave once, and writes nothing without it', async () => {
+    const disk = fakeFile('cap.json', 'old');
+    disk.handle.queryPermission = async () => 'prompt';
+    disk.handle.requestPermission = async () => 'denied';
+    const file = new OpenedFile(disk.handle, await disk.handle.getFile());
+    const outcome = await file.write(Promise.resolve(new Blob(['new'])));
+    expect(outcome.kind).to.equal('refused');
+    expect(outcome.said).to.include('not allowed to write cap.json');
+    expect(disk.text).to.equal('old');
+    disk.handle.requestPermission = async () => 'granted';
+    expect((await file.write(Promise.resolve(new Blob(['new'])))).kind).to.equal('written');
+  });
+
+  it('does not write over what another program changed, unless told to', async () => {
+    const disk = fakeFile('cap.json', 'old');
+    const file = new OpenedFile(disk.handle, await disk.handle.getFile());
+    disk.change('of another program');
+    const outcome = await file.write(Promise.resolve(new Blob(['new'])));
+    expect(outcome.kind).to.equal('changed');
+    expect(disk.text).to.equal('of another program');
+    expect((await file.write(Promise.resolve(new Blob(['new'])), true)).kind).to.equal('written');
+    expect(disk.text).to.equal('new');
+    expect((await file.write(Promise.resolve(new Blob(['newer'])))).kind).to.equal('written');
+  });
+
+  it('says so where the file is gone, write-protected, or the disk fails, and leaves the file as it was', async () => {
+    const gone = fakeFile('cap.json', 'old');
+    const away = new OpenedFile(gone.handle, await gone.handle.getFile());
+    gone.handle.getFile = async () => named('NotFoundError')();
+    expect(await away.write(Promise.resolve(new Blob(['new'])))).to.include({ kind: 'gone' });
+    const locked = fakeFile('cap.json', 'old');
+    locked.handle.createWritable = async () => named('NoModificationAllowedError')();
+    expect(await new OpenedFile(locked.handle, await locked.handle.getFile()).write(Promise.resolve(new Blob(['new'])))).to.include({ kind: 'refused' });
+    const full = fakeFile('cap.json', 'old');
+    full.fails = new DOMException('the disk is full', 'QuotaExceededError');
+    const outcome = await new OpenedFile(full.handle, await full.handle.getFile()).write(Promise.resolve(new Blob(['new'])));
+    expect(outcome.kind).to.equal('failed');
+    expect(outcome.said).to.include('the disk is full');
+    expect([full.text, full.aborted]).to.deep.equal(['old', 1]);
+    const unmade = fakeFile('cap.json', 'old');
+    expect((await new OpenedFile(unmade.handle, await unmade.handle.getFile()).write(Promise.reject(new Error('no design')))).kind).to.equal('failed');
+    expect(unmade.text).to.equal('old');
+  });
+
+  it('is one press, and where it fails the dialog offers a new file and, of a changed one, to write over it', async () => {
+    const disk = fakeFile('cap.halfmark.json', 'old');
+    const page = document.createElement('hm-leave');
+    Object.assign(page, { design, result, plateLook: {}, file: new OpenedFile(disk.handle, await disk.handle.getFile()) });
+    document.body.append(page);
+    await page.updateComplete;
+    try {
+      expect(await page.saveDesign()).to.equal('Saved to cap.halfmark.json.');
+      expect(JSON.parse(disk.text)).to.deep.equal(JSON.parse(JSON.stringify(design)));
+      expect(page.shadowRoot!.querySelector('hm-dialog')!.open).to.equal(false);
+      disk.change('of another program');
+      expect(await page.saveDesign()).to.include('changed by something else');
+      await until('an open dialog', () => page.shadowRoot!.querySelector('hm-dialog')!.open);
+      await page.updateComplete;
+      expect(page.shadowRoot!.querySelector('.remark')!.textContent).to.include('changed by something else');
+      expect(button(page, 'Design file').disabled).to.equal(false);
+      await expectAccessible(page);
+      button(page, 'Write over cap.halfmark.json').click();
+      await until('the file', () => disk.text.startsWith('{'));
+      await until('the word', () => page.shadowRoot!.querySelector('.remark')!.textContent === 'Saved to cap.halfmark.json.');
+      expect([...page.shadowRoot!.querySelectorAll('button')].some((b) => b.textContent!.includes('Write over'))).to.equal(false);
+    } finally {
+      page.remove();
+    }
   });
 });
 
