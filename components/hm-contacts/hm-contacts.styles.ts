@@ -30,10 +30,11 @@ export const styles = css`
     display: grid;
     grid-template-columns: max-content minmax(0, 1fr);
     gap: 2px 12px;
-    align-items: baseline;
     margin: 0.5rem 0;
   }
   dt {
+    /* Beside the first line of a figure, whose button is taller than its words. */
+    padding-block: 3px;
     color: var(--faint);
   }
   dd {

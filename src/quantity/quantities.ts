@@ -51,7 +51,7 @@ export const QUANTITIES = {
     source: { field: 'barrier_source', heading: 'Barrier', words: 'where the barrier comes from', unit: '', kind: 'words' },
     rhoC: { field: 'rho_c_ohm_cm2', heading: 'Contact resistivity', words: 'specific contact resistivity at zero bias through the solved barrier, both carriers', unit: 'Ω cm²', kind: 'figure' },
     rhoCClosed: { field: 'rho_c_closed_form_ohm_cm2', heading: 'Closed form', words: 'contact resistivity by the textbook’s closed form of the regime: majority alone, depletion approximation, no image force', unit: 'Ω cm²', kind: 'figure' },
-    closedRatio: { field: 'rho_c_closed_form_ohm_cm2', heading: 'Solved / closed form', words: 'how many times the solved contact resistivity is that of the closed form: how wrong the textbook would be', unit: '', kind: 'figure' },
+    closedRatio: { field: 'rho_c_closed_form_ohm_cm2', heading: 'Solved / closed', words: 'how many times the solved contact resistivity is that of the closed form: how wrong the textbook would be', unit: '', kind: 'figure' },
     rhoCFloor: { field: 'rho_c_floor_ohm_cm2', heading: 'Its floor', words: 'least contact resistivity that the majority carriers allow, without any barrier (ballistic limit)', unit: 'Ω cm²', kind: 'figure' },
     rhoCn: { field: 'rho_c_n_ohm_cm2', heading: 'of electrons', words: 'contact resistivity of electrons alone', unit: 'Ω cm²', kind: 'figure' },
     rhoCp: { field: 'rho_c_p_ohm_cm2', heading: 'of holes', words: 'contact resistivity of holes alone', unit: 'Ω cm²', kind: 'figure' },

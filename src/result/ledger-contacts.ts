@@ -24,7 +24,7 @@ function decimals(value: number | null): Cell {
 /** The closed form, with the regime that chose it. */
 function closedForm(c: ContactResult): Cell {
   const cell = figure(c.rho_c_closed_form_ohm_cm2);
-  return c.rho_c_closed_form_ohm_cm2 === null || c.closed_form === null ? cell : { ...cell, note: `${c.closed_form} emission` };
+  return c.rho_c_closed_form_ohm_cm2 === null || c.closed_form === null ? cell : { ...cell, note: c.closed_form };
 }
 
 /** What the solved contact resistivity is times that of the closed form; null where one of the two is missing. */

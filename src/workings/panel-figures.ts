@@ -7,7 +7,7 @@ import type { PanelColumn } from '../quantity/panel-quantities.ts';
 import { writeNumber } from '../quantity/write-quantity.ts';
 import type { SizedAnswer } from '../requirements/size.ts';
 import { sizingSet } from '../requirements/sized-value.ts';
-import { standingFigure, standingWords, worstWords } from '../requirements/verdict.ts';
+import { BLOCKS, standingFigure, standingWords, worstWords } from '../requirements/verdict.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
 import { decimalText, figureText } from '../result/figure-text.ts';
 import type { RequirementResult } from '../result/types.ts';
@@ -62,7 +62,7 @@ export function metalFigures(design: Design, { side, temperature_K }: Pick<Ranki
     const number = metalFigure(column, row, value);
     const blocks = column === 'worst' && row.blocks !== null;
     if (number === null && !blocks) return [];
-    const text = blocks ? 'blocks' : column === 'barrierN' || column === 'barrierP' ? decimalText(number) : figureText(number, column === 'rho' || column === 'worst' ? 3 : 2);
+    const text = blocks ? BLOCKS : column === 'barrierN' || column === 'barrierP' ? `${decimalText(number)} eV` : column === 'e00OverKt' ? figureText(number, 2) : `${figureText(number, column === 'rho' || column === 'worst' ? 3 : 2)} Ω cm²`;
     return [{ asked: { table: 'metal' as const, column, design, side, temperature_K, row, value, tolerances }, text, value: blocks ? null : number }];
   });
 }
@@ -76,7 +76,7 @@ export function nearContactFigures(design: Design, contact: CloseUp): (PanelFigu
 export function spreadFigures(result: VariationResult, figure: VariedFigureResult): PanelFigure<SpreadAsked>[] {
   const at = (p: number): number | null => figure.quantiles.find((q) => q.p === p)?.value ?? null;
   const list: [PanelColumn<'spread'>, number | null][] = [['mean', figure.mean], ['sd', figure.sd], ['low', at(0.025)], ['median', at(0.5)], ['high', at(0.975)]];
-  return list.flatMap(([column, value]) => (value === null ? [] : [{ asked: { table: 'spread' as const, column, result, figure }, text: writeNumber(Number(value.toPrecision(4))), value }]));
+  return list.flatMap(([column, value]) => (value === null ? [] : [{ asked: { table: 'spread' as const, column, result, figure }, text: `${writeNumber(Number(value.toPrecision(4)))} ${figure.unit}`.trim(), value }]));
 }
 
 /** Share of the variations that meet a requirement, and the range of the true share. @param figure  null: all requirements together */

@@ -49,6 +49,9 @@ export function requirementFigure(context: Context, row: Pick<RequirementResult,
   const figure = known('x', `${quantity.words} of ${row.of}`, value * scale, unit, WORKED, { scale });
   const parts = partsOf(context, name, target);
   if (parts === null) return null;
+  // Where the ledger's own last line is the figure in the very unit, nothing is left to say.
+  const last = lastResult(parts.found);
+  if (last !== null && parts.figure.kind === 'known' && parts.figure.of === last && last.scale === scale) return { figure: last, found: { ...parts.found, simpler: null } };
   return { figure, found: { ...parts.found, steps: [...parts.found.steps, step(figure, parts.figure, parts.note ?? '')], simpler: null } };
 }
 
@@ -180,5 +183,5 @@ function depleted(context: Context, index: number, name: 'depletedShare' | 'full
 }
 
 /** What tells a layer that is just depleted from one that just is not: the smallest step beside 1. */
-const tiny = known('δ', 'smallest step beside 1 that a number of the program holds', Number.EPSILON, '', { from: 'constant' });
+const tiny = known('δ', 'smallest step beside 1 that a number of the program holds', Number.EPSILON, '', WORKED);
 

@@ -51,7 +51,7 @@ function yieldSteps(column: 'yield' | 'yieldLow' | 'yieldHigh', { met, of, share
   const p = known('p', 'share that meets it', share, '%', WORKED, { scale: 0.01 });
   const steps = [step(p, formula`${m} / ${n}`)];
   if (column === 'yield') return { steps, accuracy: `The true share lies between ${Number((100 * low).toPrecision(4))} and ${Number((100 * high).toPrecision(4))} % in 95 of 100 cases (Wilson, J. Am. Stat. Assoc. 22, 209, 1927).` };
-  const z = known('z', 'two-sided 95 % of a normal distribution', Z, '', { from: 'constant' });
+  const z = known('z', 'two-sided 95 % of a normal distribution', Z, '', WORKED);
   const isLow = column === 'yieldLow';
   const end = known(isLow ? 'p_low' : 'p_high', isLow ? 'lower end of the true share' : 'upper end of the true share', isLow ? low : high, '%', WORKED, { scale: 0.01 });
   // With none or all met the formula comes to 0 or 1 but for rounding.

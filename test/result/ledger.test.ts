@@ -90,7 +90,7 @@ describe('the ledger', () => {
     const { rho_c_ohm_cm2: rho, rho_c_closed_form_ohm_cm2: closed } = schottky.contacts[0];
     expect(rho).toBeGreaterThan(0);
     expect(top.cells.rhoC).toEqual({ lines: [figureText(rho)], value: rho });
-    expect(top.cells.rhoCClosed).toEqual({ lines: [figureText(closed)], value: closed, note: 'thermionic emission' });
+    expect(top.cells.rhoCClosed).toEqual({ lines: [figureText(closed)], value: closed, note: 'thermionic' });
     expect(top.cells.closedRatio).toEqual({ lines: [figureText(rho! / closed!)], value: rho! / closed! });
     const blocked = ledgerTables({ ...schottky, contacts: [{ ...schottky.contacts[0], rho_c_ohm_cm2: null }] }).at(-1)!.rows[0];
     expect(blocked.cells.closedRatio).toEqual({ lines: ['–'], value: null });
