@@ -11,6 +11,7 @@ import { readSizedVariable, shownText, type SizedVariable } from './sized-variab
 import { SizingStudy, type Look } from './sizing-study.ts';
 import type { Tolerances, Uncertainty } from './uncertainties.ts';
 import { requirementWords } from './verdict.ts';
+import { verifiedIntervals } from './verified-intervals.ts';
 import { cornerWords, temperatureWriter } from './words.ts';
 import type { Progress } from './worst-case.ts';
 
@@ -127,6 +128,11 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Size
     confirmed = !(yield* judgeAll(toJudge(found)));
     if (confirmed || round + 1 >= MOST_ROUNDS) break;
   }
+  const judge = function* (value: number): Generator<Progress, RequirementResult[] | null> {
+    yield* judgeAll([value]);
+    return study.rows(value);
+  };
+  found = { ...found, intervals: yield* verifiedIntervals(found, (value) => study.rows(value), judge) };
   return answerOf(found, study, { variable, requirements, confirmed, tolerance: tolerance ?? TOLERANCE, writeTemperature: temperatureWriter(design) });
 }
 
