@@ -1,4 +1,4 @@
-import { decimalText, fieldText, figureText } from '../../src/result/figure-text.ts';
+import { decimalText, densityText, fieldText, figureText } from '../../src/result/figure-text.ts';
 import type { ProfileResult, Result } from '../../src/result/types.ts';
 
 /** What the diagram says at one depth. Energies eV, densities cm^-3. */
@@ -72,8 +72,8 @@ export function readingParts(r: Reading): ReadingPart[] {
   return [
     { symbol: 'Ec − EF', figure: decimalText(r.ec_minus_ef_eV), unit: 'eV' },
     { symbol: 'EF − Ev', figure: decimalText(r.ef_minus_ev_eV), unit: 'eV' },
-    { symbol: 'n', figure: figureText(r.n_cm3), unit: 'cm⁻³' },
-    { symbol: 'p', figure: figureText(r.p_cm3), unit: 'cm⁻³' },
+    { symbol: 'n', figure: densityText(r.n_cm3), unit: 'cm⁻³' },
+    { symbol: 'p', figure: densityText(r.p_cm3), unit: 'cm⁻³' },
     { symbol: 'ψ', figure: decimalText(r.potential_V), unit: 'V' },
     { symbol: 'field', figure: fieldText(r.field_V_cm), unit: 'kV/cm' },
   ];

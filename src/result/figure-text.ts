@@ -12,6 +12,14 @@ export function figureText(value: number | null, digits = 3): string {
   return withMinus(value.toExponential(digits - 1).replace('e+', 'e'));
 }
 
+/** Zero of a density is one below the smallest number that a computer holds, not none. */
+export const BELOW_NUMBERS = '< 1e−300';
+
+/** A density of carriers, which is never nothing: what underflows is said to lie below 1e-300. */
+export function densityText(value: number | null, digits = 3): string {
+  return value === 0 ? BELOW_NUMBERS : figureText(value, digits);
+}
+
 /**
  * Text with a fixed count of decimals, for figures that are compared by their difference (energies): columns of it line up at the point.
  *

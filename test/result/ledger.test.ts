@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import type { Design } from '../../src/design/types.ts';
 import { starters } from '../../src/design/starters/index.ts';
-import { differenceText, decimalText, fieldText, figureText, percentText } from '../../src/result/figure-text.ts';
+import { densityText, differenceText, decimalText, fieldText, figureText, percentText } from '../../src/result/figure-text.ts';
 import { regimeWords, textbookError_meV } from '../../src/result/ledger-layers.ts';
 import { ledgerTables, qualityLine, sortedRows, tableTsv, type LedgerTable } from '../../src/result/ledger.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
@@ -67,6 +68,26 @@ describe('the ledger', () => {
     expect(error).toBeGreaterThan(250);
     expect(textbookError_meV(degenerate)).toBe(error);
     expect(layers.rows[2].cells.textbook).toEqual({ lines: [`${differenceText(error)} meV`], value: error, note: `${decimalText(degenerate.boltzmann.ec_minus_ef_eV)} eV` });
+  });
+
+  it('tells carriers below the smallest number as a power of ten, and says where none are left to screen or to conduct', () => {
+    const cold: Design = {
+      format: 'halfmark-design/1', title: 'cold', conditions: { temperature: '4 K' }, top: { kind: 'neutral' }, bottom: { kind: 'neutral' },
+      layers: [
+        { name: 'p', material: 'Si', thickness: '200 nm', dopants: [{ dopant: 'B', concentration: '1e17 cm^-3' }] },
+        { name: 'i', material: 'Si', thickness: '200 nm' },
+      ],
+    };
+    const answer = solveDesign(cold);
+    if (answer.kind !== 'result') throw new Error(JSON.stringify(answer));
+    const [p, i] = ledgerTables(answer.result)[0].rows.map(({ cells }) => cells);
+    // kT ln10 at 4 K is 0.79369 meV; Ec - EF of 1.167 eV and Nc(4 K) near 4e16 cm^-3 give -1470.7 + 16.6.
+    expect(p.n.lines).toEqual([expect.stringMatching(/^≈ 1e−145[3-5]$/)]);
+    expect(p.n.value).toBe(0);
+    expect(p.p.lines[0]).toMatch(/^\d\.\d\de12$/);
+    expect(i.debye).toEqual({ lines: ['–'], value: null, note: 'over 1 m: hardly a free carrier' });
+    expect(i.resistivity).toEqual({ lines: ['–'], value: null, note: 'no free carriers' });
+    expect([densityText(0), densityText(1e-200), densityText(null)]).toEqual(['< 1e−300', '1.00e−200', '–']);
   });
 
   it('gives the regime in words, full depletion and insulators included', () => {
