@@ -62,7 +62,7 @@ export const styles = css`
   }
   th.words:not(:first-child),
   td.words {
-    min-width: 9rem;
+    min-width: 8rem;
     padding-inline-start: 18px;
   }
   td span {
