@@ -181,6 +181,11 @@ export class HmSweeps extends LitElement {
     this.cursor = cursorAt(this.asked!.plan, this.picture!, event.offsetX, event.offsetY);
   }
 
+  /** A finger that is lifted leaves its reading, and with it the button under the picture. */
+  private leave(event: PointerEvent): void {
+    if (event.pointerType !== 'touch') this.cursor = null;
+  }
+
   private press(event: PointerEvent): void {
     this.point(event);
     // A finger reads; it has the button for the rest.
@@ -262,7 +267,7 @@ export class HmSweeps extends LitElement {
     return html`<div class=${stale ? 'found stale' : 'found'}>
       ${stale ? html`<p class="stale-mark">Of the design before the last change: run the sweep again.</p>` : nothing}
       ${two && plan.figures.length > 1 ? select({ id: 'shown', label: 'Map of', value: plan.figures[this.shown].path, options: plan.figures.map(({ path, words }) => ({ value: path, text: words })), onChoice: (path) => this.remember({ shown: path }) }) : nothing}
-      <div class="picture" @pointerleave=${() => (this.cursor = null)}>
+      <div class="picture" @pointerleave=${this.leave}>
         <svg width=${drawing.width} height=${drawing.height} viewBox="0 0 ${drawing.width} ${drawing.height}" role="img" aria-label=${drawing.title}>
           ${guard([drawing], () => drawn(drawing))} ${cursor === null ? nothing : cursorShapes(plan, result, picture!, cursor)}
         </svg>

@@ -57,6 +57,19 @@ export const styles = css`
     min-width: 6rem;
     text-align: start;
   }
+  @media (max-width: 40rem) {
+    .inputs {
+      --field-width: 4.5rem;
+    }
+    .inputs th,
+    .inputs td {
+      padding-inline: 6px;
+    }
+    .inputs td:nth-child(3) {
+      white-space: normal;
+      min-width: 6rem;
+    }
+  }
   .inputs hm-field {
     display: inline-block;
     vertical-align: middle;

@@ -97,6 +97,13 @@ describe('sweeps', function () {
     await element.updateComplete;
     expect(shadow().querySelectorAll('[data-role=crosshair] circle')).to.have.length(1);
     surface().dispatchEvent(new PointerEvent('pointerdown', { ...at, pointerType: 'touch' }));
+    // A lifted finger leaves its reading, with the button under it; the mouse takes it along.
+    shadow().querySelector('.picture')!.dispatchEvent(new PointerEvent('pointerleave', { pointerType: 'touch' }));
+    await settled(element);
+    expect(shadow().querySelector('.reading button')).to.not.equal(null);
+    shadow().querySelector('.picture')!.dispatchEvent(new PointerEvent('pointerleave', { pointerType: 'mouse' }));
+    await settled(element);
+    expect(shadow().querySelector('.reading button')).to.equal(null);
     expect(edits).to.have.length(0);
     surface().dispatchEvent(new PointerEvent('pointerdown', at));
     expect(edits[0].next.variables!.find(({ name }) => name === 'Ndrift')!.value).to.equal('1e17 cm^-3');
