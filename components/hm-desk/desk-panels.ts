@@ -103,7 +103,7 @@ export const DESK_PANELS: readonly DeskPanel[] = [
     load: () => import('../hm-parameters/hm-parameters.ts'),
     draw: ({ design, complaints }) => html`<hm-parameters .design=${design} .complaints=${complaints}></hm-parameters>`,
     remark: ({ design: { custom = {} } }) => {
-      const own = (custom.materials?.length ?? 0) + (custom.dopants?.length ?? 0) + (custom.metals?.length ?? 0);
+      const own = (custom.materials?.length ?? 0) + (custom.dopants?.length ?? 0) + (custom.metals?.length ?? 0) + (custom.offsets?.length ?? 0);
       return own === 0 ? null : { text: own === 1 ? '1 own entry' : `${own} own entries`, trouble: false };
     },
   },

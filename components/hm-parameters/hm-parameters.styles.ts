@@ -68,9 +68,23 @@ export const styles = css`
     flex-wrap: wrap;
     gap: 4px;
   }
-  hm-value-form {
+  hm-value-form,
+  .form {
     grid-column: 1 / -1;
     margin: 0.25rem 0;
+  }
+  .rival {
+    grid-column: 1 / -1;
+    display: flex;
+    flex-wrap: wrap;
+    gap: 0.1rem 0.5rem;
+    align-items: baseline;
+    padding-left: 1rem;
+    overflow-wrap: anywhere;
+  }
+  .rival .checked {
+    display: inline;
+    flex: 1 1 16rem;
   }
   .row {
     margin-top: 0.5rem;
@@ -91,7 +105,9 @@ export const styles = css`
       grid-column: 1 / -1;
       order: 4;
     }
-    hm-value-form {
+    hm-value-form,
+    .form,
+    .rival {
       order: 5;
     }
     .figure {

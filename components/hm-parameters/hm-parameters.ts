@@ -1,15 +1,16 @@
 import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
-import { catalogueOf, type Catalogue } from '../../src/design/catalogue.ts';
+import { catalogueOf, presetCatalogue, type Catalogue } from '../../src/design/catalogue.ts';
 import type { Complaint } from '../../src/design/complaint.ts';
 import { keyText, sameKey, type EntryKey } from '../../src/design/entry-key.ts';
 import { placeOfPath } from '../../src/design/entry-path.ts';
-import type { Design } from '../../src/design/types.ts';
-import { allKeys, checkedWords, entryOf, keysInUse, presetOf, shownEntry, type ShownEntry, type ShownValue } from '../../src/parameters/entry-view.ts';
-import { valueComplaint } from '../../src/parameters/check-value.ts';
-import { valueKind } from '../../src/parameters/value-kind.ts';
+import type { Design, MetalInput } from '../../src/design/types.ts';
+import { allKeys, checkedWords, entryOf, keysInUse, kindOf, presetOf, shownEntry, type ShownEntry, type ShownValue } from '../../src/parameters/entry-view.ts';
+import { formulaPreview, valueComplaint } from '../../src/parameters/check-value.ts';
+import { chooseRival, rivalsOf, type Rival } from '../../src/parameters/rivals.ts';
+import { formulaOver, valueKind } from '../../src/parameters/value-kind.ts';
 import { parameterWords } from '../../src/sheet/parameter-words.ts';
-import { resetCustomValue, setCustomValue } from '../../src/state/commands/index.ts';
+import { addBarrier, resetCustomValue, setCustomValue } from '../../src/state/commands/index.ts';
 import { complaintsWithin } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';
 import { formLook } from '../shared/form-look.ts';
@@ -17,6 +18,10 @@ import { look } from '../shared/look.ts';
 import { copied, freeId, LISTS, ownKeys, removed } from './entry-acts.ts';
 import type { HmField } from '../hm-field/hm-field.ts';
 import '../hm-field/hm-field.ts';
+import type { BarrierReady } from './hm-barrier-form.ts';
+import './hm-barrier-form.ts';
+import './hm-offsets.ts';
+import './hm-shelf.ts';
 import type { HmValueForm } from './hm-value-form.ts';
 import './hm-value-form.ts';
 import { styles } from './hm-parameters.styles.ts';
@@ -69,7 +74,7 @@ export class HmParameters extends LitElement {
     return html`<p class="quiet">Published values, each with where it stands and how that was checked. A value that you change counts in this design alone, and travels with its file.</p>
       ${this.renderOwnValues()}
       <h3>In this design</h3>
-      ${shown(used)} ${own.length === 0 ? nothing : html`<h3>Own entries, not in use</h3>${shown(own)}`} ${more.length === 0 ? nothing : html`<h3>Looked up</h3>${shown(more)}`} ${this.renderRequest([...used, ...own, ...more])}`;
+      ${shown(used)} <hm-offsets .design=${design}></hm-offsets> ${own.length === 0 ? nothing : html`<h3>Own entries, not in use</h3>${shown(own)}`} ${more.length === 0 ? nothing : html`<h3>Looked up</h3>${shown(more)}`} ${this.renderRequest([...used, ...own, ...more])} <hm-shelf .design=${design}></hm-shelf>`;
   }
 
   /** All that the design says differently, in one place. */
@@ -85,7 +90,7 @@ export class HmParameters extends LitElement {
     return html`<section class="own" aria-label="Own values in use">
       <h3>Own values</h3>
       <ul>${rows}</ul>
-      ${offsets ? html`<p class="quiet">A published band offset belongs to the published material: at its interfaces a changed material lines up by its natural scale or its affinity, unless the interface gives an offset.</p>` : nothing}
+      ${offsets ? html`<p class="quiet">A published band offset belongs to the published material: at its interfaces a changed material lines up by its natural scale or its affinity, unless the interface gives an offset, or the design an own one of the pair.</p>` : nothing}
     </section>`;
   }
 
@@ -108,11 +113,54 @@ export class HmParameters extends LitElement {
       ${this.editing !== null && sameKey(this.editing.key, key) && !entry.values.some(({ path }) => path === this.editing!.path) ? this.renderForm(key, this.editing.path, parameterWords(this.editing.path), '') : nothing}
       <div class="row">
         ${entry.missing.length === 0 ? nothing : html`<label class="select"><span class="label">Put in a value of ${entry.text}</span><select @change=${(e: Event) => this.putIn(key, e.target as HTMLSelectElement)}><option value="">choose</option>${entry.missing.map(({ path, words }) => html`<option value=${path}>${words}</option>`)}</select></label>`}
+        ${entry.formulas.length === 0 ? nothing : html`<label class="select"><span class="label">Write by a formula in ${entry.text}</span><select @change=${(e: Event) => this.putIn(key, e.target as HTMLSelectElement)}><option value="">choose</option>${entry.formulas.map(({ path, words }) => html`<option value=${path}>${words}</option>`)}</select></label>`}
         <hm-field label="Name of a copy of ${entry.text}" .value=${freeId(this.catalogue, key)} .complaint=${this.nameTrouble?.of === name(key) ? this.nameTrouble.words : null}></hm-field>
         <button type="button" class="press" @click=${(e: Event) => this.copy(key, (e.currentTarget as HTMLElement).previousElementSibling as HmField)}>Copy<span class="spoken"> ${entry.text}</span> as a new ${LISTS[key.list].one}</button>
+        ${entry.own ? html`<button type="button" class="press" @click=${() => this.renderRoot.querySelector('hm-shelf')!.put(key)}>Put on your shelf<span class="spoken">: ${entry.text}</span></button>` : nothing}
         ${entry.own ? html`<button type="button" class="press" @click=${() => this.takeOut(key)}>${entry.preset ? `All published values of ${entry.text} again` : `Take out ${entry.text}${inUse ? ' (in use)' : ''}`}</button>` : nothing}
       </div>
+      ${key.list === 'metals' ? html`<hm-barrier-form .metal=${entry.text} .materials=${this.hosts} .judge=${(text: string) => this.heightComplaint(key, text)} @barrier-ready=${(e: CustomEvent<BarrierReady>) => this.putBarrier(key, e.detail)}></hm-barrier-form>` : nothing}
     </div>`;
+  }
+
+  /** Materials that a contact can be on, those of the design first. */
+  private get hosts(): string[] {
+    const known = [...this.catalogue.materials.values()].filter(({ entry }) => !entry.insulator).map(({ entry }) => entry.id);
+    return [...new Set([...this.design!.layers.map(({ material }) => material).filter((id) => known.includes(id)), ...known])];
+  }
+
+  private heightComplaint(key: EntryKey, text: string): string | null {
+    return valueComplaint(this.design!, key, entryOf(this.catalogue, key)!.entry, 'workFunction', text, false);
+  }
+
+  private putBarrier(key: EntryKey, barrier: BarrierReady): void {
+    const words = `barrier of ${key.id} on ${barrier.material}`;
+    tell(this, 'hm-edit', { next: addBarrier(this.design!, key, entryOf(this.catalogue, key)!.entry as MetalInput, barrier), label: words });
+    tell(this, 'hm-say', { text: `The ${words} is ${barrier.height} in this design.` });
+  }
+
+  private renderRival(key: EntryKey, rival: Rival): TemplateResult {
+    const values = rival.values.map(({ path, text }) => (rival.values.length === 1 && !path.endsWith('.formula') ? text : `${parameterWords(path)} ${text}`)).join(', ');
+    const how = { page: 'seen in print', memory: 'from memory of the cited work', computed: 'derived from the cited work' }[rival.checked];
+    if (rival.chosen) return this.renderPreset(key, rival);
+    return html`<span class="rival">Also published: <strong>${values}</strong> <span class="checked">${rival.work}; ${how}${rival.note === '' ? '' : `; ${rival.note}`}</span>
+      <button type="button" @click=${() => this.choose(key, rival, values)}>Use it<span class="spoken">: ${values} for ${keyText(key)}</span></button></span>`;
+  }
+
+  /** Beside a rival that is in use: what it took the place of, and the way back. */
+  private renderPreset(key: EntryKey, { values }: Rival): TemplateResult {
+    const preset = presetOf(key)!;
+    const of = (path: string): string => path.replace(/\.formula$/, '');
+    const rows = (shownEntry(presetCatalogue, key)?.values ?? []).filter((row) => values.some(({ path }) => row.path === path || row.path === of(path) || row.path.startsWith(`${of(path)}.`)));
+    const words = rows.map(({ words, text }) => (rows.length === 1 ? text : `${words} ${text}`)).join(', ');
+    const back = (): void => tell(this, 'hm-edit', { next: values.reduce((design, { path }) => resetCustomValue(design, key, preset, path), this.design!), label: `preset values of ${keyText(key)}` });
+    return html`<span class="rival">The preset has <strong>${words === '' ? 'the rule between its ends' : words}</strong> <span class="checked">${[...new Set(rows.map(({ work }) => work))].join('; ')}</span>
+      <button type="button" @click=${back}>Back to it<span class="spoken">: ${words} for ${keyText(key)}</span></button></span>`;
+  }
+
+  private choose(key: EntryKey, rival: Rival, values: string): void {
+    tell(this, 'hm-edit', { next: chooseRival(this.design!, key, entryOf(this.catalogue, key)!.entry, rival), label: `another published value of ${keyText(key)}` });
+    tell(this, 'hm-say', { text: `${keyText(key)} has ${values} in this design.` });
   }
 
   private renderValue(entry: ShownEntry, value: ShownValue): TemplateResult {
@@ -129,6 +177,7 @@ export class HmParameters extends LitElement {
         <button type="button" aria-expanded=${editing} data-path=${value.path} @click=${() => (editing ? this.leave() : this.edit(key, value.path))}>Change${what}</button>
         ${value.own && entry.preset ? html`<button type="button" @click=${() => this.reset(key, value)}>Reset${what}</button>` : nothing}
       </span>
+      ${rivalsOf(key, found.entry).filter((rival) => shownAt(rival, entry) === value.path).map((rival) => this.renderRival(key, rival))}
       ${editing ? this.renderForm(key, value.path, value.words, value.edited) : nothing}
     </li>`;
   }
@@ -140,6 +189,8 @@ export class HmParameters extends LitElement {
       .words=${words}
       .kind=${valueKind(path)}
       .value=${text}
+      .preview=${path.endsWith('.formula') ? (typed: string) => formulaPreview(this.design!, key, entry, path, typed) : null}
+      .over=${formulaOver(kindOf(key, entry), path)}
       .judge=${(typed: string) => valueComplaint(this.design!, key, entry, path, typed, list)}
       @value-ready=${(e: CustomEvent<{ text: string; source: string }>) => this.put(key, path, words, e.detail)}
       @value-drop=${this.leave}
@@ -214,6 +265,12 @@ export class HmParameters extends LitElement {
     if (typeof outcome === 'string') tell(this, 'hm-say', { text: outcome, urgent: true });
     else tell(this, 'hm-edit', { next: outcome, label: `own ${LISTS[key.list].one} ${keyText(key)} taken out` });
   }
+}
+
+/** The row that a rival stands in: that of its value, or of the law that it would take the place of. */
+function shownAt({ path }: Rival, { values }: ShownEntry): string | undefined {
+  const law = path.split('.')[0];
+  return (values.find((value) => value.path === path) ?? values.find((value) => value.path === `${law}.formula`) ?? values.find((value) => value.path.startsWith(law) || value.path.endsWith(`.${law}`)))?.path;
 }
 
 const name = (key: EntryKey): string => `${key.list} ${keyText(key)}`;

@@ -1,4 +1,5 @@
 import type { Design } from '../../src/design/types.ts';
+import type { ShelfItem } from '../../src/storage/shelf.ts';
 
 /**
  * What elements tell of a person's acts. They bubble and cross shadow roots; setting a property from code is silent.
@@ -22,6 +23,8 @@ export interface HalfmarkEvents {
   'hm-project': ProjectAct;
   /** an act on one of the variants of the open project */
   'hm-variant': VariantAct;
+  /** what lies on the person's shelf, after what was asked has been done */
+  'hm-shelf': ShelfWish;
   /** open a starter as a project of its own */
   'hm-starter': { id: string };
   /** something that the page should say: politely, or at once */
@@ -43,6 +46,9 @@ export type ProjectAct =
   | { act: 'rescue' | 'forget'; /** of a damaged record */ key: number };
 
 export type VariantAct = { act: 'add'; name: string } | { act: 'rename'; id: string; name: string } | { act: 'open' | 'remove' | 'take-back' | 'delete'; id: string };
+
+/** `answer` hears the whole shelf; null where the browser keeps none. */
+export type ShelfWish = ({ act: 'look' } | { act: 'put'; entries: readonly Pick<ShelfItem, 'list' | 'entry'>[] } | { act: 'drop'; key: string }) & { answer(items: readonly ShelfItem[] | null): void };
 
 /** The one way an element speaks. */
 export function tell<K extends keyof HalfmarkEvents>(from: EventTarget, name: K, detail: HalfmarkEvents[K]): void {

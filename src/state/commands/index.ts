@@ -34,3 +34,4 @@ export { setTemperatureRange } from './set-temperature-range.ts';
 export { setThickness } from './set-thickness.ts';
 export { setTitle } from './set-title.ts';
 export { setVariable } from './set-variable.ts';
+export { takeEntries } from './take-entries.ts';
