@@ -27,13 +27,12 @@ export const styles = css`
     grid-column: 2;
     min-width: 0;
   }
-  .givens {
+  .assumed {
     grid-column: 2;
     min-width: 0;
-    display: grid;
-    gap: 1rem;
     margin-top: 0.25rem;
   }
+  .variables,
   .figures {
     grid-column: 1 / -1;
     min-width: 0;
@@ -68,11 +67,9 @@ export const styles = css`
     .under {
       grid-row: 2;
     }
-    .givens {
+    .assumed {
       grid-column: 1;
       grid-row: 4;
-      grid-template-columns: repeat(auto-fit, minmax(15rem, 1fr));
-      align-items: start;
     }
   }
   @media print {

@@ -7,6 +7,7 @@ import type { PlateView } from '../hm-plate/plate-view.ts';
 import type { Verdicts } from '../hm-requirements/hm-requirements.ts';
 import '../hm-assumptions/hm-assumptions.ts';
 import '../hm-desk/hm-desk.ts';
+import '../hm-notes/hm-notes.ts';
 import '../hm-plate/hm-plate.ts';
 import '../hm-rail/hm-rail.ts';
 import '../hm-strip/hm-strip.ts';
@@ -54,10 +55,9 @@ export function workArea({ session, project, axes, plateView, style, stale, fram
         .metals=${choices.metals}
       ></hm-strip>
     </div>
-    <div class="givens">
-      <hm-variables .design=${design} .complaints=${complaints}></hm-variables>
-      <hm-assumptions .design=${design}></hm-assumptions>
-    </div>
+    <div class="assumed"><hm-assumptions .design=${design}></hm-assumptions>
+      <hm-notes .design=${design}></hm-notes></div>
+    <div class="variables"><hm-variables .design=${design} .complaints=${complaints}></hm-variables></div>
     <div class="figures">
       <h2 class="spoken">Figures, requirements, sizing</h2>
       ${keyed(

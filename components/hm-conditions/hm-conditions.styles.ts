@@ -39,7 +39,9 @@ export const styles = css`
     margin: 0.1rem 0 0;
     font-size: 0.8125rem;
     color: var(--faint);
-    max-width: 26rem;
+    /* However long the words are, the head keeps its places. */
+    width: 0;
+    min-width: 100%;
   }
   .saving.failed,
   .saving.conflict {

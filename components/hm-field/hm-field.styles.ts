@@ -41,10 +41,22 @@ export const styles = css`
     display: block;
     color: var(--trouble);
     font-size: 0.8125rem;
-    width: 0;
-    min-width: max(100%, 15rem);
+    /* Takes no width from its row: what stands beside the field keeps its place, and the sentence runs on under it. */
+    width: var(--complaint-width, 15rem);
+    max-width: 88vw;
+    margin-inline-end: -88vw;
+    position: relative;
+    z-index: 1;
+    background: var(--ground);
   }
   .complaint::before {
     content: '▲ ';
+  }
+  @media (max-width: 40rem) {
+    .complaint {
+      width: 0;
+      min-width: 100%;
+      margin: 0;
+    }
   }
 `;

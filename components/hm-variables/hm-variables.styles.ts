@@ -1,11 +1,17 @@
 import { css } from 'lit';
 
 export const styles = css`
+  .head {
+    display: flex;
+    align-items: baseline;
+    gap: 0.75rem;
+    border-bottom: 1px solid var(--ink);
+    padding-bottom: 0.2rem;
+  }
   h2 {
     font-size: 0.9375rem;
     font-weight: 600;
-    margin: 0 0 0.25rem;
-    border-bottom: 1px solid var(--ink);
+    margin: 0;
   }
   p {
     margin: 0.2rem 0 0.4rem;
@@ -13,12 +19,17 @@ export const styles = css`
   }
   ul {
     list-style: none;
-    margin: 0 0 0.4rem;
+    margin: 0;
     padding: 0;
+    display: grid;
+    /* As many beside each other as there is room for: a tall column would leave the paper beside it blank. */
+    grid-template-columns: repeat(auto-fill, minmax(15.5rem, 1fr));
+    column-gap: 1.5rem;
   }
   li {
     padding: 0.3rem 0;
     border-bottom: 1px solid var(--line);
+    --complaint-width: 8rem;
   }
   .row {
     display: flex;

@@ -6,6 +6,7 @@ import { complaintAt } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { unitOf } from '../shared/typed-text.ts';
+import type { HmField } from '../hm-field/hm-field.ts';
 import '../hm-field/hm-field.ts';
 import { STEPS, sliderOf, textAt } from './slider.ts';
 import { styles } from './hm-variables.styles.ts';
@@ -23,10 +24,20 @@ export class HmVariables extends LitElement {
 
   /** counts the pulls, so that each is one step of undo */ private pulls = 0;
 
+  /** how many variables there will be once the one that was asked for is in the design */ private awaited: number | null = null;
+
   constructor() {
     super();
     this.design = null;
     this.complaints = [];
+  }
+
+  protected override updated(): void {
+    const { length } = this.design?.variables ?? [];
+    if (this.awaited !== length) return;
+    this.awaited = null;
+    // What a new variable needs first is a name that says something.
+    void this.renderRoot.querySelector<HmField>('li:last-child hm-field')?.edit();
   }
 
   private set(i: number, change: Partial<Omit<Variable, 'name'>>, label: string, join?: string): void {
@@ -49,15 +60,15 @@ export class HmVariables extends LitElement {
     const { variables = [] } = this.design!;
     // Names in expressions hold no space: v, v2, v3.
     const name = freeName('v', variables.map((variable) => variable.name.replace(/^v(\d+)$/, 'v $1'))).replace(' ', '');
+    this.awaited = variables.length + 1;
     tell(this, 'hm-edit', { next: addVariable(this.design!, { name, value: '1e17 cm^-3' }), label: `new variable ${name}` });
   }
 
   override render(): TemplateResult | typeof nothing {
     if (this.design === null) return nothing;
     const { variables = [] } = this.design;
-    return html`<h2>Variables</h2>
-      ${variables.length === 0 ? html`<p>Give a value a name, and use the name in place of figures: <code>2*Ncap</code>.</p>` : html`<ul>${variables.map((variable, i) => this.renderVariable(variable, i))}</ul>`}
-      <button type="button" @click=${this.add}>Add a variable</button>`;
+    return html`<div class="head"><h2>Variables</h2> <button type="button" @click=${this.add}>Add a variable</button></div>
+      ${variables.length === 0 ? html`<p>Give a value a name, and use the name in place of figures: <code>2*Ncap</code>.</p>` : html`<ul>${variables.map((variable, i) => this.renderVariable(variable, i))}</ul>`}`;
   }
 
   private renderVariable(variable: Variable, i: number): TemplateResult {

@@ -27,8 +27,11 @@ export const controlLook = css`
   .complaint {
     color: var(--trouble);
     font-size: 0.8125rem;
+  }
+  /* Takes no width from its row, as under a field. */
+  .select .complaint {
     width: 0;
-    min-width: max(100%, 15rem);
+    min-width: 100%;
   }
   .complaint::before {
     content: '▲ ';

@@ -47,6 +47,14 @@ describe('the head of the page', () => {
     expect(edits[1].next.conditions).not.to.have.property('temperatureRange');
   });
 
+  it('keeps its places, however long the words about saving are', async () => {
+    const place = (): number => field('Temperature').getBoundingClientRect().left;
+    const before = place();
+    element.saving = { kind: 'conflict', other: null };
+    await element.updateComplete;
+    expect(place()).to.equal(before);
+  });
+
   it('says that only equilibrium is solved, and lets a bias be taken back', async () => {
     expect(element.shadowRoot!.textContent).to.contain('only equilibrium is solved');
     element.design = { ...designFixture(), conditions: { temperature: '300 K', bias: '1 V' } };

@@ -79,6 +79,29 @@ describe('the variables of a design', () => {
     expect(edits[2].next.variables!.map(({ name }) => name)).to.deep.equal(['v']);
   });
 
+  it('put the cursor into the name of one that was added', async () => {
+    const edits = heard(element, 'hm-edit');
+    button(element, 'Add a variable').click();
+    element.design = edits[0].next;
+    await element.updateComplete;
+    const name = [...element.shadowRoot!.querySelectorAll('hm-field')].filter(({ label }) => label === 'Name').at(-1)!;
+    await name.updateComplete;
+    const box = name.shadowRoot!.querySelector('input')!;
+    expect(name.shadowRoot!.activeElement).to.equal(box);
+    expect([box.value, box.selectionStart, box.selectionEnd]).to.deep.equal(['v', 0, 1]);
+  });
+
+  it('show what is wrong without moving what stands beside it', async () => {
+    const name = field('Name').getBoundingClientRect();
+    const before = field('Value of Ncap').getBoundingClientRect();
+    element.complaints = [{ path: 'variables[0].name', message: 'this is a name that no expression could ever use, since it holds a space and a sign' }];
+    await element.updateComplete;
+    await field('Name').updateComplete;
+    expect(field('Value of Ncap').getBoundingClientRect().left).to.equal(before.left);
+    expect(field('Value of Ncap').shadowRoot!.querySelector('input')!.getBoundingClientRect().width).to.be.greaterThan(100);
+    expect(field('Name').getBoundingClientRect().width).to.equal(name.width);
+  });
+
   it('show what is wrong where it is wrong', async () => {
     element.complaints = [{ path: 'variables[0].value', message: 'is no density' }];
     await element.updateComplete;
