@@ -1,7 +1,8 @@
 import { SCRIPT_SIZE } from '../drawing/glyph-widths.ts';
-import type { Drawing, Gradient, Shape, TextShape } from '../drawing/shapes.ts';
+import type { Drawing, Gradient, Part, Shape, TextShape } from '../drawing/shapes.ts';
 import { pdfNumber as n } from './pdf-objects.ts';
 import { printable } from './printable.ts';
+import type { PdfStructure } from './pdf-structure.ts';
 import type { PdfTypeface } from './pdf-typeface.ts';
 
 /** pt per px: a drawing's px is 1/96 inch. */
@@ -24,13 +25,17 @@ export interface PdfPage {
 /**
  * The marks of one drawing as a page's content (ISO 32000-1:2008, 8 and 9). One matrix turns px with y down into pt with y up; all figures stay those of the drawing.
  *
+ * @param of  the structure that the page's parts belong to, and the page's number in it
  * @throws {RangeError} path data other than absolute M, L, C, Z; a paint that names no gradient of the drawing
  */
-export function pageOf(drawing: Drawing, faces: Faces): PdfPage {
+export function pageOf(drawing: Drawing, faces: Faces, of: { structure: PdfStructure; page: number }): PdfPage {
   const opacities = new Map<string, string>();
   const used = new Map<string, Gradient>();
-  const marks = drawing.shapes.map((shape) => {
-    let before = 'q\n';
+  let last: Part | undefined;
+  const marks = drawing.shapes.map((shape, i) => {
+    const turn = shape.part === last ? '' : `EMC\n${of.structure.begin(shape.part, of.page)}`;
+    last = shape.part;
+    let before = `${turn}q\n`;
     const clip = shape.clip === undefined ? undefined : drawing.clips.find((c) => c.id === shape.clip);
     if (clip) before += `${n(clip.x)} ${n(clip.y)} ${n(clip.w)} ${n(clip.h)} re W n\n`;
     if (shape.opacity !== undefined && shape.opacity < 1) {
@@ -38,13 +43,13 @@ export function pageOf(drawing: Drawing, faces: Faces): PdfPage {
       if (!opacities.has(value)) opacities.set(value, `O${opacities.size + 1}`);
       before += `/${opacities.get(value)} gs\n`;
     }
-    return `${before}${shape.kind === 'text' ? textMarks(shape, faces) : outlineMarks(shape, drawing, used)}Q\n`;
+    return `${before}${shape.kind === 'text' ? textMarks(shape, faces, goesOn(shape, drawing.shapes[i + 1])) : outlineMarks(shape, drawing, used)}Q\n`;
   });
   const ground = `${colour(drawing.background, 'rg')}0 0 ${n(drawing.width)} ${n(drawing.height)} re f\n`;
   const shadings = [...used].map(([name, gradient]) => `/${name} ${axial(gradient)}`).join(' ');
   const states = [...opacities].map(([value, name]) => `/${name} << /ca ${value} /CA ${value} >>`).join(' ');
   return {
-    content: `${n(PT_PER_PX)} 0 0 ${n(-PT_PER_PX)} 0 ${n(drawing.height * PT_PER_PX)} cm\n${ground}${marks.join('')}`,
+    content: `${n(PT_PER_PX)} 0 0 ${n(-PT_PER_PX)} 0 ${n(drawing.height * PT_PER_PX)} cm\n/Artifact BMC\n${ground}${marks.join('')}EMC\n`,
     resources: `${shadings === '' ? '' : `/Shading << ${shadings} >> `}${states === '' ? '' : `/ExtGState << ${states} >>`}`,
   };
 }
@@ -96,8 +101,12 @@ function pathMarks(d: string): string {
   return out;
 }
 
+function goesOn({ part }: Shape, next: Shape | undefined): boolean {
+  return part !== undefined && part.as !== 'figure' && next?.kind === 'text' && next.part === part;
+}
+
 /** Each run is placed by itself, so that scripts stand off the line; an upright matrix undoes the page's turned one. */
-function textMarks(shape: TextShape, faces: Faces): string {
+function textMarks(shape: TextShape, faces: Faces, goesOn: boolean): string {
   const face = shape.weight === 'bold' ? faces.bold : faces.normal;
   const name = shape.weight === 'bold' ? 'F2' : 'F1';
   const runs = shape.runs
@@ -118,6 +127,8 @@ function textMarks(shape: TextShape, faces: Faces): string {
     out += `/${name} ${n(run.size)} Tf\n${n(cos, 6)} ${n(sin, 6)} ${n(slant * cos + sin, 6)} ${n(slant * sin - cos, 6)} ${n(x)} ${n(y)} Tm\n${face.coded(run.text)} Tj\n`;
     along += face.width(run.text) * run.size;
   }
+  // Lines of one thing are read on without running together.
+  if (goesOn) out += `${face.coded(' ')} Tj\n`;
   return `${out}ET\n`;
 }
 

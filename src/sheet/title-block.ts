@@ -1,4 +1,4 @@
-import type { Shape } from '../drawing/shapes.ts';
+import type { Part, Shape } from '../drawing/shapes.ts';
 import { brokenLines, lineWidth, oneLine } from './lines.ts';
 import type { SheetLook } from './look.ts';
 
@@ -45,10 +45,13 @@ export function titleBlock(of: TitleBlock, look: SheetLook): Shape[] {
   const [upper, lower] = rowHeights(look);
   const [top, middle] = [height - margin - upper - lower, height - margin - lower];
   const lines = cautionLines(look, of.caution);
+  // What stands on every page is told once.
+  const told = (as: 'title' | 'paragraph'): { part?: Part } => (of.page === 1 ? { part: { as } } : {});
+  const caution = told('paragraph');
   const rule = (x1: number, y1: number, x2: number, y2: number, w = 0.6): Shape => ({ kind: 'line', role: 'block-rule', x1, y1, x2, y2, stroke: style.ink, width: w });
   const shapes: Shape[] = [
     { kind: 'rect', role: 'frame', x: margin, y: margin, w: full, h: height - 2 * margin, fill: 'none', stroke: style.ink, width: 1 },
-    ...lines.map((line, i): Shape => ({ kind: 'text', role: 'caution', x: margin + PAD, y: top - 5 - (lines.length - 1 - i) * 1.3 * block.label, size: block.label, anchor: 'start', runs: [{ text: line }], fill: style.ink })),
+    ...lines.map((line, i): Shape => ({ kind: 'text', role: 'caution', ...caution, x: margin + PAD, y: top - 5 - (lines.length - 1 - i) * 1.3 * block.label, size: block.label, anchor: 'start', runs: [{ text: line }], fill: style.ink })),
     rule(margin, top, margin + full, top, 1),
     rule(margin, middle, margin + full, middle),
   ];
@@ -76,14 +79,15 @@ export function titleBlock(of: TitleBlock, look: SheetLook): Shape[] {
     let x = margin;
     boxes.forEach((box, i) => {
       if (i > 0) shapes.push(rule(x, y, x, y + h));
-      shapes.push({ kind: 'text', role: 'block-label', x: x + PAD, y: y + 1.25 * block.label, size: block.label, anchor: 'start', runs: [{ text: box.label }], fill: style.faint });
+      const part = told(box.label === 'title' ? 'title' : 'paragraph');
+      shapes.push({ kind: 'text', role: 'block-label', ...(box.label === 'title' ? {} : part), x: x + PAD, y: y + 1.25 * block.label, size: block.label, anchor: 'start', runs: [{ text: box.label }], fill: style.faint });
       const room = box.w - 2 * PAD;
       const fits = y !== top || lineWidth(box.text, size, box.bold) <= room;
       // What is too long for the line takes two smaller ones.
       const s = fits ? size : 0.75 * size;
       const values = fits ? [oneLine(box.text, s, room, box.bold)] : brokenLines(box.text, s, room, 2, box.bold);
       values.forEach((value, l) => {
-        if (value !== '') shapes.push({ kind: 'text', role: `block-${box.label.replaceAll(' ', '-')}`, x: x + PAD, y: y + h - 0.45 * s - (values.length - 1 - l) * 1.25 * s, size: s, anchor: 'start', ...(box.bold ? { weight: 'bold' as const } : {}), runs: [{ text: value }], fill: style.ink });
+        if (value !== '') shapes.push({ kind: 'text', role: `block-${box.label.replaceAll(' ', '-')}`, ...part, x: x + PAD, y: y + h - 0.45 * s - (values.length - 1 - l) * 1.25 * s, size: s, anchor: 'start', ...(box.bold ? { weight: 'bold' as const } : {}), runs: [{ text: value }], fill: style.ink });
       });
       x += box.w;
     });

@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import type { Drawing, Shape } from '../../src/drawing/shapes.ts';
+import type { Drawing, Part, Shape } from '../../src/drawing/shapes.ts';
 import { readFont } from '../../src/export/pdf-font.ts';
 import { pdfOf } from '../../src/export/pdf.ts';
 import { FONTS } from './fonts.ts';
-import { objectsOf, readPdf } from './read-pdf.ts';
+import { objectsOf, readPdf, structureOf } from './read-pdf.ts';
 
 const PROPERTIES = { title: 'a title', author: 'an author', subject: '', creator: 'a program' };
 
@@ -88,6 +88,28 @@ describe('a PDF of drawings', () => {
     const bytes = pdfOf([drawing([words(name)])], FONTS, { ...PROPERTIES, title: name, author: '\u202e>> endobj' });
     expect(readPdf(bytes)[0].texts[0].text).toBe(') Tj ET Q /JavaScript <</S/URI>>  (\\');
     expect(Buffer.from(bytes).toString('latin1')).not.toContain('JavaScript');
+  });
+
+  it('tells programs that read aloud what its marks are: title first, headings, tables by rows and cells, pictures by words; ornament is none of it', () => {
+    const table = { columns: 2, heads: 1 };
+    const cell = (row: number, column: number): Part => ({ as: 'cell', table, row, column });
+    const [figure, heading, title] = [{ as: 'figure', alt: 'a band (picture)' }, { as: 'heading' }, { as: 'title' }] as Part[];
+    const split = cell(1, 1);
+    const bytes = pdf([
+      words('Heading', { part: heading }), { kind: 'line', role: 'l', x1: 0, y1: 0, x2: 1, y2: 1, stroke: '#000000', part: figure },
+      words('h0', { part: cell(0, 0) }), words('h1', { part: cell(0, 1) }), words('a', { part: cell(1, 0) }), words('first', { part: split }), words('second', { part: split }),
+      words('b', { part: cell(2, 1) }), words('ornament'), words('Title', { part: title }),
+    ]);
+    const tree = structureOf(bytes);
+    expect(tree).toEqual([
+      ['H1', 'Title'], ['H2', 'Heading'], ['Figure', 'a band (picture)'],
+      ['Table', [['TR', [['TH', 'h0'], ['TH', 'h1']]], ['TR', [['TD', 'a'], ['TD', 'first second']]], ['TR', [['TD', ''], ['TD', 'b']]]]],
+    ]);
+    expect(found([words('Heading', { part: heading })]).content).toMatch(/^[^\n]*cm\n\/Artifact BMC\n[^]*EMC\n\/H2 << \/MCID 0 >> BDC\n[^]*EMC\n$/);
+    const text = Buffer.from(bytes).toString('latin1');
+    expect(text).toContain('/Marked true');
+    expect(text).toContain('/Lang (en)');
+    expect(Buffer.from(pdf([words('no parts')])).toString('latin1')).not.toContain('StructTreeRoot');
   });
 
   it('refuses what it cannot write rather than leave it out', () => {

@@ -11,7 +11,7 @@ import { reviewSheet, type SheetInput } from '../../src/sheet/review-sheet.ts';
 import { workingsOf } from '../../src/workings/workings-of.ts';
 import { wellFormed } from '../drawing/well-formed.ts';
 import { FONTS } from '../export/fonts.ts';
-import { readPdf } from '../export/read-pdf.ts';
+import { readPdf, structureOf, type Told } from '../export/read-pdf.ts';
 import { outside, overlaps } from './layout-checks.ts';
 import { allText, inputOf, solved, solvedStarter, starter, textsOf } from './sheets.ts';
 
@@ -75,6 +75,26 @@ describe('the sections that a sheet can have besides', () => {
     expect(Buffer.from(one).equals(Buffer.from(two))).toBe(true);
     const words = readPdf(one).flatMap((p) => p.texts.map((t) => t.text)).join(' ');
     for (const text of ['lighter cap', 'As drawn'.toLowerCase(), 'From near: Ti on cap', 'Workings: Ec − EF of cap', 'At the worst corner']) expect(words).toContain(text);
+  });
+});
+
+describe('a sheet as it is heard', () => {
+  it('has its title first, every heading once, tables with as many cells in each row as columns, and words for its pictures', () => {
+    const pages = reviewSheet(whole());
+    const tree = structureOf(sheetPdf(pages, FONTS, { title: 't', author: 'a', provenance: inputOf('graded-cap').result.provenance }));
+    expect(tree[0]).toEqual(['H1', starter('graded-cap').title]);
+    const headings = tree.flatMap(([type, words]) => (type === 'H2' ? [words] : []));
+    expect(headings).toEqual(pages.flatMap((p) => textsOf(p).filter((t) => t.role === 'section').map((t) => plainText(t.runs))).filter((words) => !words.endsWith(', continued')));
+    const pictures = tree.flatMap(([type, words]) => (type === 'Figure' ? [words as string] : []));
+    expect(pictures.filter((words) => /conduction/i.test(words)).length).toBeGreaterThanOrEqual(3);
+    for (const [type, rows] of tree) {
+      if (type !== 'Table') continue;
+      const counts = (rows as Told[]).map(([, cells]) => cells.length);
+      expect(new Set(counts).size).toBe(1);
+    }
+    const layers = tree[headings.indexOf('Layers, from the top down') < 0 ? 0 : tree.findIndex(([, words]) => words === 'Layers, from the top down') + 1];
+    expect(JSON.stringify(layers)).toContain('"cap"');
+    expect(JSON.stringify(layers)).toContain('GaAs-InAs x = 0.95');
   });
 });
 
