@@ -6,7 +6,7 @@ import { carrierShown, closeUpTable, closeUpTitle, errorText, transmissionWords 
 import { drawCloseUp } from '../../src/drawing/contact-closeup.ts';
 import { decimalText, figureText } from '../../src/result/figure-text.ts';
 import type { Result } from '../../src/result/types.ts';
-import { nearContactFigures } from '../../src/workings/panel-figures.ts';
+import { comparedFigures, nearContactFigures } from '../../src/workings/panel-figures.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import { JobController } from '../hm-desk/job-controller.ts';
 import '../hm-metals/hm-metals.ts';
@@ -149,7 +149,7 @@ export class HmContacts extends LitElement {
     return html`<p class="state">Contact resistivity by kind of transmission, Ω cm², and how far the quadrature may be off. The design uses ${transmissionWords(answer.contacts[0].transmission)}.</p>
       <div class="compare" role="region" aria-label="Comparison" tabindex="0"><table aria-label="Transmissions compared">
       <thead><tr><th scope="col">Contact</th>${kinds.map(({ transmission }) => html`<th scope="col">${transmissionWords(transmission)}</th>`)}</tr></thead>
-      <tbody>${compared.map((contact) => html`<tr><th scope="row">${closeUpTitle(contact)}</th>${(contact.compared ?? []).map(({ rho_c_ohm_cm2, error }) => html`<td>${figureText(rho_c_ohm_cm2)}${error === null ? nothing : html`<span class="off">${errorText(error)}</span>`}</td>`)}</tr>`)}</tbody>
+      <tbody>${compared.map((contact) => html`<tr><th scope="row">${closeUpTitle(contact)}</th>${(contact.compared ?? []).map(({ rho_c_ohm_cm2, error }, i) => html`<td>${how(comparedFigures(value!.input.design, contact)[i], { content: figureText(rho_c_ohm_cm2) })}${error === null ? nothing : html`<span class="off">${errorText(error)}</span>`}</td>`)}</tr>`)}</tbody>
     </table></div>`;
   }
 }

@@ -72,6 +72,11 @@ export function nearContactFigures(design: Design, contact: CloseUp): (PanelFigu
   return closeUpFigures(contact).map(({ column, name, text, value, note }) => ({ asked: { table: 'nearContact' as const, column, design, contact }, name, text, value, ...(note === undefined ? {} : { note }) }));
 }
 
+/** The contact resistivity by each kind of transmission that was compared: of the same design with another assumption. */
+export function comparedFigures(design: Design, contact: CloseUp): PanelFigure<NearContactAsked>[] {
+  return (contact.compared ?? []).map(({ transmission, rho_c_ohm_cm2: rho }) => ({ asked: { table: 'nearContact' as const, column: 'rhoC' as const, design: { ...design, assumptions: { ...design.assumptions, transmission } }, contact }, text: rho === null ? '–' : `${figureText(rho)} Ω cm²`, value: rho }));
+}
+
 /** Mean, deviation and percentiles of a figure over the variations. */
 export function spreadFigures(result: VariationResult, figure: VariedFigureResult): PanelFigure<SpreadAsked>[] {
   const at = (p: number): number | null => figure.quantiles.find((q) => q.p === p)?.value ?? null;
