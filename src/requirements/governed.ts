@@ -4,6 +4,17 @@ import { readVariables } from '../design/variables.ts';
 
 /** The variables that any text of the design uses, requirements' limits aside, directly or through the values of other variables. */
 export function variablesUsed(design: Design, set: Readonly<Record<string, string>>): ReadonlySet<string> {
+  const { layers, top, bottom, interfaces, custom } = design;
+  return usedIn(design, set, { layers, top, bottom, interfaces, custom });
+}
+
+/** Whether anything at all uses a variable, limits of requirements and the conditions among it. */
+export function isUsed(design: Design, set: Readonly<Record<string, string>>, name: string): boolean {
+  const { variables: _, title: _t, notes: _n, ...rest } = design;
+  return usedIn(design, set, rest).has(name);
+}
+
+function usedIn(design: Design, set: Readonly<Record<string, string>>, parts: object): ReadonlySet<string> {
   const rows = design.variables ?? [];
   const { temperature: _, ...overrides } = set;
   const { scope } = readVariables(rows, overrides);
@@ -14,8 +25,7 @@ export function variablesUsed(design: Design, set: Readonly<Record<string, strin
     used.add(name);
     for (const other of namesIn(texts.get(name) ?? '', scope)) take(other);
   };
-  const { layers, top, bottom, interfaces, custom } = design;
-  for (const text of textsIn({ layers, top, bottom, interfaces, custom })) for (const name of namesIn(text, scope)) take(name);
+  for (const text of textsIn(parts)) for (const name of namesIn(text, scope)) take(name);
   return used;
 }
 
