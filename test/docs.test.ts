@@ -74,7 +74,19 @@ describe('the help', () => {
       ['Fields', 'components/hm-field/hm-field.ts', /event\.key === '([^']+)'/g, 2],
       ['The whole page', 'components/hm-help/help-door.ts', /event\.key !== '([^']+)'/g, 1],
       ['The whole page', 'components/hm-app/keys.ts', /key === '([a-z])'/g, 4],
+      ['The panels under the plate', 'components/shared/how.ts', /(?<=[{,] )(Arrow\w+|Home|End)(?=: )/g, 6],
+      ['Fields', 'components/shared/settled-choice.ts', /key [!=]== '(Enter|Escape)'/g, 2],
+      ['The panels under the plate', 'components/hm-workings/hm-workings.ts', /event\.key !== '([^']+)'/g, 1],
+      ['Sweeps', 'components/hm-sweeps/sweep-cursor.ts', /(?<=[{,] )(Arrow\w+|Home|End)(?=: \[|: rows)/g, 6],
+      ['Sweeps', 'components/hm-sweeps/hm-sweeps.ts', /event\.key === '([^']+)'/g, 2],
+      ['The temperature film', 'components/hm-sweeps/hm-film.ts', /(?:(?<=[ ,{]) ?(Arrow\w+|Page\w+|Home|End|Escape)|'( )'): \(\) =>/g, 10],
+      ['The regime map', 'components/hm-map/hm-map.ts', /(?:event\.key === '([^']+)'|(?<=[{,] )(Arrow\w+|Page\w+|Home|End)(?=: \[))/g, 9],
     ];
+    // Whoever listens to a key stands in the list above, or hands it on to one that does.
+    const handsOn = ['components/hm-strip/hm-strip.ts'];
+    const listeners = readdirSync(join(ROOT, 'components'), { recursive: true, encoding: 'utf8' }).map((name) => join('components', name)).filter((name) => name.endsWith('.ts') && /event\.key\b|\bkey [!=]== '|\be\.key\b|case 'Arrow/.test(text(name)));
+    const known = [...listens.map(([, file]) => file), ...handsOn, 'components/hm-sheet/hm-sheet.ts', 'components/hm-profile-form/hm-profile-form.ts'];
+    expect(listeners.filter((file) => !known.includes(file))).toEqual([]);
     for (const [where, file, pattern, least] of listens) {
       const keys = [...text(file).matchAll(pattern)].map((m) => m[1] ?? m[2]);
       expect(keys.length, file).toBeGreaterThanOrEqual(least);

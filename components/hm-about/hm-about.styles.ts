@@ -19,26 +19,7 @@ export const styles = css`
     border-inline-start: 3px solid var(--choice);
     padding-inline-start: 0.6rem;
   }
-  dl {
-    margin: 0;
-  }
-  dl div {
-    display: flex;
-    flex-wrap: wrap;
-    gap: 0 0.75rem;
-    padding: 0.15rem 0;
-    border-top: 1px solid var(--line);
-  }
-  dt {
-    min-width: 12rem;
-  }
-  dd {
-    margin: 0;
-  }
-  kbd {
-    font: inherit;
-    border: 1px solid var(--edge);
-    border-radius: 2px;
-    padding: 0 0.3rem;
+  .print {
+    overflow-wrap: anywhere;
   }
 `;
