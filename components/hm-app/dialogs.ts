@@ -34,7 +34,7 @@ export function pageDialogs({ design, result, stale, plateLook, requirements, va
     <hm-starters></hm-starters>
     <hm-leave .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook} .file=${file}></hm-leave>
     <hm-sheet .design=${design} .result=${result} .stale=${stale} .plateLook=${plateLook} .requirements=${requirements} .others=${variants.list.filter(({ id, removed }) => id !== variants.open && !removed)} .ownName=${variants.list.find(({ id }) => id === variants.open)?.name ?? ''}></hm-sheet>
-    <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''}></hm-about>
+    <hm-about .program=${result?.provenance.program ?? ''} .model=${result?.provenance.model ?? ''} .presets=${result?.provenance.presets ?? ''}></hm-about>
     <hm-help-door></hm-help-door>
     <hm-dialog id="unsaved" heading="Not saved" @hm-closed=${unsaved.closed}>
       <p>What is on this page could not be saved. Opening another project now would lose it.</p>
