@@ -96,6 +96,20 @@ describe('the tolerance run', () => {
     expect(element.shadowRoot!.querySelector('table')!.textContent).to.equal(first);
   });
 
+  it('can be asked how each yield and each spread comes about', async () => {
+    await put();
+    await run();
+    const told = heard(element, 'hm-view');
+    for (const details of element.shadowRoot!.querySelectorAll('details')) details.open = true;
+    await settled(element);
+    const figures = [...element.shadowRoot!.querySelectorAll<HTMLButtonElement>('tbody button.how')];
+    for (const figure of figures) expect(figure.getBoundingClientRect().height).to.be.at.least(24);
+    figures.forEach((figure) => figure.click());
+    const columns = new Set(told.map(({ change }) => (change.workings as { asked: { column: string } }).asked.column));
+    expect([...columns].sort()).to.deep.equal(['high', 'low', 'mean', 'median', 'sd', 'yield', 'yieldHigh', 'yieldLow']);
+    await expectAccessible(element);
+  });
+
   it('draws the figures that are chosen, and has them all in the table and the text', async () => {
     await put({ view: { count: '40', tolerances: 'stated', shown: ['layers.n.sheet_ohm'] } });
     await run();
