@@ -58,6 +58,15 @@ describe('the help', () => {
     }
   });
 
+  it('gives each hard method a picture, and takes every picture by the script', () => {
+    for (const page of ['first-five-minutes.md', 'mesh.md', 'contact-integral.md', 'sizing.md', 'tolerance.md']) {
+      expect(readMarkdown(text(join(FOLDER, page))).some((block) => block.kind === 'picture'), page).toBe(true);
+    }
+    const taken = [...text('src/tools/pictures.mjs').matchAll(/\{ name: '([\w-]+)', width/g)].map((m) => `pictures/${m[1]}.png`);
+    expect(Object.keys(HELP_PICTURES).sort()).toEqual(taken.sort());
+    expect(readdirSync(join(ROOT, FOLDER, 'pictures')).map((name) => `pictures/${name}`).sort()).toEqual(taken.sort());
+  });
+
   it('names every key that the code listens to, in the table of its place', () => {
     const tables: Record<string, string> = {};
     let place = '';

@@ -14,4 +14,8 @@ export const HELP_PICTURES: Readonly<Record<string, string>> = {
   'pictures/plate.png': new URL('./pictures/plate.png', import.meta.url).href,
   'pictures/narrow.png': new URL('./pictures/narrow.png', import.meta.url).href,
   'pictures/dark.png': new URL('./pictures/dark.png', import.meta.url).href,
+  'pictures/mesh.png': new URL('./pictures/mesh.png', import.meta.url).href,
+  'pictures/contact.png': new URL('./pictures/contact.png', import.meta.url).href,
+  'pictures/sizing.png': new URL('./pictures/sizing.png', import.meta.url).href,
+  'pictures/tolerance.png': new URL('./pictures/tolerance.png', import.meta.url).href,
 };
