@@ -2,6 +2,7 @@ import { html, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
 import type { Variant } from '../../src/drawing/marks/variants.ts';
+import { ownRows, type OwnRows } from '../../src/parameters/own-entries.ts';
 import type { Result } from '../../src/result/types.ts';
 import type { RunJob } from '../../src/workers/job-client.ts';
 import type { LedgerView } from '../hm-ledger/hm-ledger.ts';
@@ -39,12 +40,21 @@ export interface DeskPanel {
   /** a short remark behind the title, for what must be seen while another tab is open */ remark?(context: DeskContext): { text: string; trouble: boolean } | null;
 }
 
+const known = new WeakMap<Design, OwnRows>();
+
+/** The same object for the same design: the ledger is not drawn anew at every move of the pointer. */
+function rowsOfOwn(design: Design): OwnRows {
+  const rows = known.get(design) ?? ownRows(design);
+  known.set(design, rows);
+  return rows;
+}
+
 export const DESK_PANELS: readonly DeskPanel[] = [
   {
     id: 'ledger',
     title: 'Ledger',
     load: () => import('../hm-ledger/hm-ledger.ts'),
-    draw: ({ result, view, chosen, stale, against }) => html`<hm-ledger .result=${result} .against=${against} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale} .workings=${true}></hm-ledger>`,
+    draw: ({ design, result, view, chosen, stale, against }) => html`<hm-ledger .result=${result} .own=${rowsOfOwn(design)} .against=${against} .view=${(view.ledger ?? {}) as LedgerView} .chosen=${chosen} .stale=${stale} .workings=${true}></hm-ledger>`,
   },
   {
     id: 'requirements',

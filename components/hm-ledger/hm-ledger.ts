@@ -1,7 +1,9 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import { ledgerTables, qualityLine, sortedRows, tableTsv, type LedgerColumn, type LedgerRow, type LedgerTable, type Order, type TableId } from '../../src/result/ledger.ts';
 import { cellDifference, loneRows, partnerRow } from '../../src/result/ledger-difference.ts';
+import type { OwnRows } from '../../src/parameters/own-entries.ts';
 import type { Result } from '../../src/result/types.ts';
+import { OWN_WORDS, ownMark } from '../shared/own-mark.ts';
 import { look } from '../shared/look.ts';
 import { sortedTableLook } from '../shared/table-look.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
@@ -34,6 +36,7 @@ export class HmLedger extends LitElement {
     stale: { type: Boolean, reflect: true },
     workings: { type: Boolean },
     against: { attribute: false },
+    own: { attribute: false },
     choosing: { state: true },
     at: { state: true },
   };
@@ -44,6 +47,7 @@ export class HmLedger extends LitElement {
   declare stale: boolean;
   declare workings: boolean;
   /** another result whose figures are set under these where they differ */ declare against: { name: string; result: Result } | null;
+  /** what of the design's own stands behind a row, by the row's name: ownRows of src/parameters */ declare own: OwnRows | null;
   /** the table whose columns are being chosen */ declare private choosing: TableId | null;
   /** the figure that the arrows stand on */ declare private at: { table: TableId; row: number; column: number };
 
@@ -57,6 +61,7 @@ export class HmLedger extends LitElement {
     this.stale = false;
     this.workings = false;
     this.against = null;
+    this.own = null;
     this.choosing = null;
     this.at = { table: 'layers', row: 0, column: 0 };
   }
@@ -68,6 +73,7 @@ export class HmLedger extends LitElement {
       ${this.stale ? html`<p class="stale-mark">Figures of the stack before the last change.</p>` : nothing}
       ${this.workings ? html`<p class="hint">How does a figure come about? Press it, or walk to it with the arrows and press Enter.</p>` : nothing}
       ${this.renderAgainst(result)} ${ledgerTables(result).map((table) => this.renderTable(table))}
+      ${this.own !== null && Object.values(this.own).some(({ size }) => size > 0) ? html`<p class="hint">${OWN_WORDS}</p>` : nothing}
       <p class="quality">${qualityLine(result)}</p>
     `;
   }
@@ -154,8 +160,9 @@ export class HmLedger extends LitElement {
 
   private renderRow(table: LedgerTable, columns: LedgerColumn[], row: LedgerRow, r: number): TemplateResult {
     const isChosen = this.chosen?.kind === KIND_OF[table.id] && this.chosen.index === row.index;
+    const own = this.own?.[table.id].get(row.name);
     return html`<tr class=${isChosen ? 'chosen' : ''} aria-current=${isChosen ? 'true' : nothing}>
-      <th scope="row"><button type="button" aria-label="choose ${row.name}" @click=${() => tell(this, 'hm-choose', { kind: KIND_OF[table.id], index: row.index })}>${row.name}</button></th>
+      <th scope="row"><button type="button" aria-label="choose ${row.name}" @click=${() => tell(this, 'hm-choose', { kind: KIND_OF[table.id], index: row.index })}>${row.name}</button>${own === undefined ? nothing : ownMark(own)}</th>
       ${columns.map((column, c) => this.renderCell(table, column, row, r, c))}
     </tr>`;
   }

@@ -3,6 +3,8 @@ import type { ContactResult, IonisedResult, LayerResult } from '../../src/result
 import { textWidth } from '../../src/drawing/glyph-widths.ts';
 import { decimalText } from '../../src/result/figure-text.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
+import type { OwnOfLayer } from '../../src/parameters/own-entries.ts';
+import { OWN_SIGN } from '../shared/own-mark.ts';
 import { shortText } from '../shared/graded.ts';
 import { unitOf } from '../shared/typed-text.ts';
 
@@ -48,11 +50,14 @@ const PADDING = 12;
 const MOST_LINES = 5;
 const BOLD = 1.12;
 
-/** A layer's lines in words, as its column shows them. */
-export function layerLines(layer: LayerInput, i: number, solved?: LayerResult): string[] {
-  const dopants = (layer.dopants ?? []).map((row, r) => `${dopantText(row)}${dopantWorth(row, solved?.ionised[r])}`);
+const NOTHING_OWN: OwnOfLayer = { material: false, dopants: [] };
+const signed = (own: boolean | undefined): string => (own ? ` ${OWN_SIGN}` : '');
+
+/** A layer's lines in words, as its column shows them, with a sign where they rest on the design's own values. */
+export function layerLines(layer: LayerInput, i: number, solved?: LayerResult, own: OwnOfLayer = NOTHING_OWN): string[] {
+  const dopants = (layer.dopants ?? []).map((row, r) => `${dopantText(row)}${dopantWorth(row, solved?.ionised[r])}${signed(own.dopants[r])}`);
   return [
-    `${i + 1} ${layer.name}`, `${materialText(layer)}${worth(layer.x, solved?.x, '')}`, `${readable(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}`,
+    `${i + 1} ${layer.name}`, `${materialText(layer)}${worth(layer.x, solved?.x, '')}${signed(own.material)}`, `${readable(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}`,
     ...(dopants.length === 0 ? ['undoped'] : dopants),
   ];
 }

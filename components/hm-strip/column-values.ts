@@ -4,6 +4,7 @@ import type { Design, LayerInput } from '../../src/design/types.ts';
 import type { LayerResult } from '../../src/result/types.ts';
 import { complaintsWithin } from '../shared/complaint-at.ts';
 import type { DopantChoice } from '../shared/menus.ts';
+import { ownOfLayer } from '../../src/parameters/own-entries.ts';
 import { layerLines } from './column-text.ts';
 
 /**
@@ -15,7 +16,7 @@ export function columnValues(design: Design, i: number, solved: LayerResult | un
   const layer = design.layers[i];
   const wrong = (path: string): string => (complaintsWithin(complaints, `layers[${i}].${path}`).length > 0 ? 'wrong' : '');
   const dopants = layer.dopants ?? [];
-  const [, material, thickness, ...doping] = layerLines(layer, i, solved);
+  const [, material, thickness, ...doping] = layerLines(layer, i, solved, ownOfLayer(design.custom, layer));
   return html`<span class="name"><span class="number">${i + 1}</span> ${layer.name}</span>
     <span class="value ${wrong('material')} ${wrong('x')}" data-value="material">${material}</span>
     <span class="value ${wrong('thickness')}" data-value="thickness">${thickness}</span>

@@ -4,10 +4,12 @@ import type { Design } from '../../src/design/types.ts';
 import type { DepthAxis } from '../../src/drawing/depth-axis.ts';
 import type { LayerResult, Result } from '../../src/result/types.ts';
 import { setConcentration, setThickness, type Side } from '../../src/state/commands/index.ts';
+import { ownOfContact, ownOfLayer, ownRows } from '../../src/parameters/own-entries.ts';
 import { complaintAt, complaintsWithin } from '../shared/complaint-at.ts';
 import { tell, type HalfmarkEvents } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import type { DopantChoice, MaterialChoice, MetalChoice } from '../shared/menus.ts';
+import { OWN_WORDS, ownMark } from '../shared/own-mark.ts';
 import { WidthController } from '../shared/width-controller.ts';
 import { plainThickness } from '../shared/typed-text.ts';
 import type { HmField } from '../hm-field/hm-field.ts';
@@ -125,8 +127,14 @@ export class HmStrip extends LitElement implements StripSurface {
       </div>
       ${interfaceLane(design, g.edges, this.room.width, this.chosen?.kind === 'interface' ? this.chosen.index : null, this.complaints, (index) => this.choose({ kind: 'interface', index }, 'form'))}
       ${cards(g.layers, this.slim(g), this.room.width, this.chosen?.kind === 'layer' ? this.chosen.index : null, (i) => this.renderValues(i), this.pressed)}
-      ${this.renderEditor()}
+      ${this.renderOwn(design)} ${this.renderEditor()}
     `;
+  }
+
+  /** What the sign behind a material, a dopant or a metal means; nothing where there is none. */
+  private renderOwn(design: Design): TemplateResult | typeof nothing {
+    const { layers, contacts } = ownRows(design);
+    return layers.size + contacts.size === 0 ? nothing : html`<p class="hint">${OWN_WORDS}</p>`;
   }
 
   private renderContact(side: Side, g: StripGeometry): TemplateResult {
@@ -146,7 +154,7 @@ export class HmStrip extends LitElement implements StripSurface {
       title=${away ? 'beyond the part of the depth in view' : nothing}
       tabindex=${isChosen ? 0 : -1}
     >
-      <span class="spoken">${side} contact: </span><span class="lines"><span class="name">${away && side === 'top' ? '‹ ' : ''}${lines[0]}${away && side === 'bottom' ? ' ›' : ''}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span><span class="spoken">${wrong.join('; ')}</span>
+      <span class="spoken">${side} contact: </span><span class="lines"><span class="name">${away && side === 'top' ? '‹ ' : ''}${lines[0]}${ownOfContact(this.design!.custom, this.design![side]) ? ownMark(lines[0]) : nothing}${away && side === 'bottom' ? ' ›' : ''}</span>${lines.slice(1).map((line) => html`<span class="value">${line}</span>`)}</span><span class="spoken">${wrong.join('; ')}</span>
     </div>`;
   }
 
@@ -159,6 +167,7 @@ export class HmStrip extends LitElement implements StripSurface {
     const width = g.layers[i].right - g.layers[i].left;
     const fits = this.fits(i, g);
     const kind = dopingKind(layers[i], this.solved(i), this.dopants);
+    const own = ownRows(this.design!).layers.get(layers[i].name);
     return html`<div
       role="option"
       class="column layer ${kind} ${i === layers.length - 1 ? 'last' : ''} ${width < 1.5 ? 'gone' : fits ? '' : 'slim'} ${wrong.length > 0 ? 'wrong' : ''} ${this.pointer.lifted?.from === i ? 'lifted' : ''}"
@@ -166,7 +175,7 @@ export class HmStrip extends LitElement implements StripSurface {
       aria-selected=${isChosen}
       tabindex=${inReach ? 0 : -1}
     >
-      ${fits ? html`${this.renderValues(i)}<span class="spoken">${wrong.join('; ')}</span>` : html`${width >= 12 ? html`<span class="number" aria-hidden="true">${i + 1}</span>` : nothing}<span class="spoken">${layerSentence(layers[i], i, layers.length, wrong)}</span>`}
+      ${fits ? html`${this.renderValues(i)}<span class="spoken">${wrong.join('; ')}</span>` : html`${width >= 12 ? html`<span class="number" aria-hidden="true">${i + 1}</span>` : nothing}<span class="spoken">${layerSentence(layers[i], i, layers.length, wrong)}</span>`}${own === undefined ? nothing : html`<span class="spoken">; own values of ${own}</span>`}
     </div>`;
   }
 
@@ -184,7 +193,7 @@ export class HmStrip extends LitElement implements StripSurface {
   }
 
   private fits(i: number, g: StripGeometry): boolean {
-    return fitsColumn(layerLines(this.design!.layers[i], i, this.stale ? undefined : this.solved(i)), g.layers[i].right - g.layers[i].left);
+    return fitsColumn(layerLines(this.design!.layers[i], i, this.stale ? undefined : this.solved(i), ownOfLayer(this.design!.custom, this.design!.layers[i])), g.layers[i].right - g.layers[i].left);
   }
 
   private renderInPlace(): TemplateResult | typeof nothing {

@@ -26,6 +26,14 @@ describe('hm-ledger', () => {
     expect(l.renderRoot.querySelector('.quality')!.textContent).to.match(/^Accepted: mesh error [\d.]+ mV on \d+ nodes/);
   });
 
+  it('marks a row that rests on own values by a sign with words, and says what it means', async () => {
+    const l = await ledger({ own: { layers: new Map([['drift', 'Si']]), junctions: new Map(), contacts: new Map() } });
+    expect(names(l)[1].replace(/\s+/g, ' ')).to.equal('drift † (own values of Si)');
+    expect(names(l)[0]).to.equal('anode');
+    expect(l.renderRoot.textContent).to.contain('† with values of this design');
+    await expectAccessible(l);
+  });
+
   it('sorts by a heading, the other way at a second press, and gives the order of the stack back at a third', async () => {
     const l = await ledger();
     const views = heard(l, 'hm-view');

@@ -71,6 +71,15 @@ describe('hm-strip', () => {
     expect(column(s, 0).textContent).to.include('undoped');
   });
 
+  it('marks what rests on own values by a sign, in words for readers too, and says below what it means', async () => {
+    const own = { ...design, custom: { materials: [{ id: 'AlGaAs' }] } } as unknown as Design;
+    const { s } = await strip({ design: own });
+    expect(column(s, 1).textContent).to.match(/AlGaAs, x = 0\.3 †/).and.to.contain('own values of AlGaAs');
+    expect(column(s, 0).textContent).not.to.contain('†');
+    expect(s.renderRoot.textContent).to.contain('† with values of this design');
+    await expectAccessible(s);
+  });
+
   it('writes layers that are too narrow under the strip, with a line to their column', async () => {
     const narrow = { ...axis, edges: [125, 125.5, 150, 158, 800] };
     const { s } = await strip({ axis: narrow });
