@@ -26,8 +26,6 @@ interface Cell {
   /** cell of the path's nodes in which it begins */ mesh: number;
 }
 
-/** Every so many nodes of the mesh, which is made to follow the bands, a cell begins. */
-const NODES_PER_CELL = 4;
 const MOST_HALVINGS = 40;
 
 /**
@@ -46,7 +44,9 @@ export interface BarrierShape {
   /** where it lies, from the metal, cm */ topAt: number;
   /** band edge of the neutral layer: nothing passes below it */ edge: number;
   kT: number;
+  /** what is left of the bending where the way ends, eV, and the length in which it dies away, cm; zero where the way ends at the edge */ tail: { height: number; length: number; mass: number };
   /** U inside a cell, eV */ at(s: number, cell: number): number;
+  /** dU/ds there, eV/cm */ slope(s: number, cell: number): number;
   /** tunnelling mass inside a cell, m0; NaN where it is not known */ mass(s: number, cell: number): number;
   /** gap inside a cell, eV */ gap(s: number, cell: number): number;
 }
@@ -61,11 +61,12 @@ export function highestEdge(path: ContactPath, carrier: Carrier): number {
 
 /**
  * @param imageForce  adds -q/(16 pi eps_hf s), with the permittivity of the layer at s
+ * @param fineness    cells as many times finer than usual
  *
  * Between the mesh nodes psi is the cubic through both values and both fields. With the image force the path starts where it has pulled the band down to the
  * neutral edge (`deep`: to the bottom of the metal's band); nearer to the metal it is no barrier.
  */
-export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, imageForce: boolean, deep = false): BarrierShape {
+export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, imageForce: boolean, deep = false, fineness = 1): BarrierShape {
   const kT = BOLTZMANN * stack.temperature;
   const electron = carrier === 'electron';
   const edge = electron ? path.ecMinusEf : path.efMinusEv;
@@ -76,19 +77,28 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
   const places = layersOf(stack, path);
   const image = places.map((p) => (imageForce ? ELEMENTARY_CHARGE / (16 * Math.PI * p.bands(0).permittivityHighFrequency * EPSILON_0) : 0));
 
-  const inCell = (i: number, s: number): number => {
+  // U without the image force in every mesh cell as a cubic in t from 0 to 1 [4 coefficients].
+  const cubic = new Float64Array(4 * Math.max(0, last));
+  for (let i = 0; i < last; i++) {
+    const h = z[i + 1] - z[i];
+    const [a, b, rise] = [h * slope[i], h * slope[i + 1], psi[i + 1] - psi[i]];
+    cubic[4 * i] = sign * (flat[i] - psi[i]);
+    cubic[4 * i + 1] = sign * (flat[i + 1] - flat[i] - a);
+    cubic[4 * i + 2] = -sign * (3 * rise - 2 * a - b);
+    cubic[4 * i + 3] = -sign * (a + b - 2 * rise);
+  }
+  /** U at s, in mesh cell i. */
+  const heightAt = (s: number, i: number): number => {
+    const t = (s - z[i]) / (z[i + 1] - z[i]);
+    const c = image[path.layer[i]];
+    return cubic[4 * i] + t * (cubic[4 * i + 1] + t * (cubic[4 * i + 2] + t * cubic[4 * i + 3])) - (c > 0 ? c / s : 0);
+  };
+  /** dU/ds there, eV/cm. */
+  const slopeAt = (s: number, i: number): number => {
     const h = z[i + 1] - z[i];
     const t = (s - z[i]) / h;
-    const r = 1 - t;
-    const bent = r * r * (1 + 2 * t) * psi[i] + t * t * (3 - 2 * t) * psi[i + 1] + h * t * r * (r * slope[i] - t * slope[i + 1]);
-    return sign * (r * flat[i] + t * flat[i + 1] - bent);
-  };
-  /** U at s, in the layer of mesh cell `hint` or a later one of it. */
-  const heightAt = (s: number, hint: number): number => {
-    let i = hint;
-    while (i + 2 <= last && s > z[i + 1] && path.layer[i + 2] === path.layer[hint]) i++;
-    const c = image[path.layer[hint]];
-    return inCell(i, s) - (c > 0 ? c / s : 0);
+    const c = image[path.layer[i]];
+    return (cubic[4 * i + 1] + t * (2 * cubic[4 * i + 2] + t * 3 * cubic[4 * i + 3])) / h + (c > 0 ? c / (s * s) : 0);
   };
 
   const highest = highestEdge(path, carrier);
@@ -97,6 +107,9 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
 
   const cells: Cell[] = [];
   const offset = 0.01 * kT;
+  const share = CELL_SHARE / fineness;
+  const ratio = CELL_RATIO ** (1 / fineness);
+  const imageRatio = IMAGE_RATIO ** (1 / fineness);
   const smooth = (mesh: number, from: number, to: number): boolean => {
     const c = image[path.layer[mesh]];
     const pull = (s: number): number => (c > 0 ? c / s : 0);
@@ -106,10 +119,10 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
     const b = Math.max(least, heightAt(to, mesh) + pull(to));
     const m = Math.max(least, heightAt(0.5 * (from + to), mesh) + pull(0.5 * (from + to)));
     if (a === least && b === least && m === least) return true;
-    if (pull(from) - pull(to) > 0.1 * kT && to > IMAGE_RATIO * from) return false;
-    if (Math.abs(a - b) > CELL_SHARE * range || Math.abs(m - 0.5 * (a + b)) > 0.5 * CELL_SHARE * range) return false;
+    if (pull(from) - pull(to) > 0.1 * kT && to > imageRatio * from) return false;
+    if (Math.abs(a - b) > share * range || Math.abs(m - 0.5 * (a + b)) > 0.5 * share * range) return false;
     const [low, high] = a < b ? [a, b] : [b, a];
-    return high - edge + offset < CELL_RATIO * Math.max(low - edge + offset, offset);
+    return high - edge + offset < ratio * Math.max(low - edge + offset, offset);
   };
   const divide = (mesh: number, from: number, to: number, depth: number): void => {
     if (depth >= MOST_HALVINGS || smooth(mesh, from, to)) {
@@ -117,7 +130,7 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
       return;
     }
     const c = image[path.layer[mesh]];
-    const middle = c > 0 && to > IMAGE_RATIO * IMAGE_RATIO * from ? Math.sqrt(from * to) : 0.5 * (from + to);
+    const middle = c > 0 && to > imageRatio * imageRatio * from ? Math.sqrt(from * to) : 0.5 * (from + to);
     divide(mesh, from, middle, depth + 1);
     divide(mesh, middle, to, depth + 1);
   };
@@ -126,16 +139,16 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
       i++;
       continue;
     }
-    let j = i + 1;
-    while (j < last && j - i < NODES_PER_CELL && path.layer[j + 1] === path.layer[i]) j++;
-    if (z[j] > start) divide(i, Math.max(z[i], start), z[j], 0);
-    i = j;
+    // Between two nodes psi is one cubic; where two meet its second derivative may jump, and no cell goes across.
+    if (z[i + 1] > start) divide(i, Math.max(z[i], start), z[i + 1], 0);
+    i++;
   }
 
   const shape: BarrierShape = {
     carrier, edges: new Float64Array(0), layer: new Int32Array(0), before: new Float64Array(0), after: new Float64Array(0), height: new Float64Array(0), weight: new Float64Array(0),
-    top: edge, topAt: z[last], edge, kT,
+    top: edge, topAt: z[last], edge, kT, tail: { height: 0, length: 0, mass: 0 },
     at: (s, cell) => heightAt(s, cells[cell].mesh),
+    slope: (s, cell) => slopeAt(s, cells[cell].mesh),
     mass: (s, cell) => places[path.layer[cells[cell].mesh]].mass(s, carrier),
     gap: (s, cell) => places[path.layer[cells[cell].mesh]].bands(s).gap,
   };
@@ -145,7 +158,17 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
     if (shape.before[k] > shape.top) [shape.top, shape.topAt] = [shape.before[k], shape.edges[k]];
     if (shape.after[k] > shape.top) [shape.top, shape.topAt] = [shape.after[k], shape.edges[k + 1]];
   }
+  if (cells.length > 0) shape.tail = tailOf(shape);
   return shape;
+}
+
+/** The bands settle exponentially, so the height and slope at the way's end tell the rest. */
+function tailOf(shape: BarrierShape): BarrierShape['tail'] {
+  const k = shape.layer.length - 1;
+  const end = shape.edges[k + 1];
+  const height = shape.after[k] - shape.edge;
+  const length = -height / shape.slope(end, k);
+  return height > 0 && height < shape.kT && length > 0 && length < end ? { height, length, mass: shape.mass(end, k) } : { height: 0, length: 0, mass: 0 };
 }
 
 interface Place {

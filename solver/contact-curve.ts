@@ -1,11 +1,13 @@
 import type { BarrierShape } from './barrier-shape.ts';
 import { contactPath, type ContactPath } from './contact-path.ts';
 import type { Carrier } from './carrier-constants.ts';
-import { carrierBarrier, logOccupancy, logTransmission, type ResistivityOptions, type Transmission } from './contact-resistivity.ts';
+import { logOccupancy } from './contact-integral.ts';
+import { carrierBarrier, type ResistivityOptions } from './contact-resistivity.ts';
 import { spaceChargeOf } from './depletion.ts';
 import { GAUSS_3 } from './quadrature.ts';
 import type { Profiles } from './solution.ts';
 import type { Stack } from './stack.ts';
+import { logTransmission, type Transmission } from './transmission.ts';
 
 /** How one carrier passes a contact, energy by energy. Energies are the electron's, eV, zero at EF: a hole's band lies below. */
 export interface CarrierCurve {

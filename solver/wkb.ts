@@ -1,5 +1,5 @@
-import type { BarrierShape } from './barrier-shape.ts';
-import { GAUSS_3, GAUSS_5, type GaussRule } from './quadrature.ts';
+import { WAVE, type BarrierShape } from './barrier-shape.ts';
+import { GAUSS_3, GAUSS_5 } from './quadrature.ts';
 
 export type Dispersion = 'one-band' | 'two-band';
 
@@ -46,7 +46,16 @@ export function wkbExponent(shape: BarrierShape, energy: number, dispersion: Dis
       if (!alone) k = next;
     }
   }
-  return sum;
+  return sum + tailPart(shape, energy);
+}
+
+/** Behind the way's end U - edge = h exp(-s/l): 2 Int kappa ds in closed form; the other band is far. */
+function tailPart({ tail, edge }: BarrierShape, energy: number): number {
+  const free = energy - edge;
+  const depth = tail.height - free;
+  if (!(depth > 0)) return 0;
+  const root = Math.sqrt(depth);
+  return 4 * Math.sqrt(WAVE * tail.mass) * tail.length * (free > 0 ? root - Math.sqrt(free) * Math.atan(root / Math.sqrt(free)) : root);
 }
 
 function root(shape: BarrierShape, depth: number, dispersion: Dispersion, cell: number): number {
@@ -68,21 +77,28 @@ function smoothPart(shape: BarrierShape, energy: number, dispersion: Dispersion,
   return sum * factor(shape, cell) * (to - from);
 }
 
-/** From a crossing in `cell` to a place on its upper side, in this or a neighbouring cell of the layer. */
+/** From a crossing in `cell` to a place on its upper side, in this or a neighbouring cell of the layer. At the border of the two the barrier may bend, so each has points of its own. */
 function rootPart(shape: BarrierShape, energy: number, dispersion: Dispersion, cell: number, crossingAt: number, to: number, halved: boolean): number {
   const length = to - crossingAt;
-  const part = (rule: GaussRule, from: number, width: number): number => {
+  const part = (owner: number, from: number, width: number): number => {
     let sum = 0;
-    for (let g = 0; g < rule.nodes.length; g++) {
-      const u = from + width * rule.nodes[g];
-      const s = crossingAt + length * u * u;
-      const owner = s < shape.edges[cell] ? cell - 1 : s > shape.edges[cell + 1] ? cell + 1 : cell;
-      const depth = shape.at(s, owner) - energy;
-      if (depth > 0) sum += rule.weights[g] * 2 * u * root(shape, depth, dispersion, owner) * factor(shape, owner);
+    for (let g = 0; g < GAUSS_5.nodes.length; g++) {
+      const u = from + width * GAUSS_5.nodes[g];
+      const depth = shape.at(crossingAt + length * u * u, owner) - energy;
+      if (depth > 0) sum += GAUSS_5.weights[g] * 2 * u * root(shape, depth, dispersion, owner);
     }
-    return sum * width;
+    return sum * width * factor(shape, owner);
   };
-  return Math.abs(length) * (halved ? part(GAUSS_5, 0, 0.5) + part(GAUSS_5, 0.5, 0.5) : part(GAUSS_5, 0, 1));
+  const over = (owner: number, from: number, upTo: number): number => {
+    const width = upTo - from;
+    return halved ? part(owner, from, 0.5 * width) + part(owner, from + 0.5 * width, 0.5 * width) : part(owner, from, width);
+  };
+  const inward = length > 0;
+  const border = shape.edges[inward ? cell + 1 : cell];
+  const share = (border - crossingAt) / length;
+  if (share >= 1) return Math.abs(length) * over(cell, 0, 1);
+  const u = Math.sqrt(Math.max(0, share));
+  return Math.abs(length) * (over(cell, 0, u) + over(inward ? cell + 1 : cell - 1, u, 1));
 }
 
 /** Where U = E in a cell whose ends lie on both sides of it: secants kept inside the bracket (Illinois). */

@@ -234,7 +234,7 @@ describe('the integral', () => {
         }
       }
     }
-  });
+  }, 60_000);
 
   it('WKB overstates the resistivity of the wave equation by 1.2 to 2.3 in field emission and understates it where waves turn back at an abrupt top', () => {
     const over = (N: number, height: number, imageForce: boolean): number => {
@@ -279,13 +279,13 @@ describe('the integral', () => {
     expect(Number.isFinite(conductance(s).log)).toBe(true);
   });
 
-  it('costs about as much as ten thousand exponentials, a tenth of a millisecond', () => {
+  it('costs some twenty thousand exponentials where it is dear, two tenths of a millisecond', () => {
     const s = contactOn(SILICON, 1e19, 0.6, { imageForce: true });
     const path = contactPath(s.stack, s.profiles, spaceChargeOf(s.stack, s.profiles), 'top');
     if (!path) throw new Error('no path');
     const timeOf = (f: () => void): number => {
       let best = Infinity;
-      for (let round = 0; round < 15; round++) {
+      for (let round = 0; round < 40; round++) {
         const start = performance.now();
         for (let i = 0; i < 10; i++) f();
         best = Math.min(best, performance.now() - start);
@@ -296,7 +296,7 @@ describe('the integral', () => {
     const exponential = timeOf(() => { for (let i = 0; i < 10000; i++) sum += Math.exp(-i * 1e-4); });
     const integral = timeOf(() => { const c = carrierConductance(s.stack, path, 'electron'); if (!isMissing(c)) sum += c.log; });
     expect(sum).not.toBe(0);
-    // In units of 10,000 exponentials (0.1 ms): 1.0 when it was measured alone; room for a busy machine.
+    // In units of 10,000 exponentials (0.1 ms): 1.8 when it was measured alone, with the image force on a mesh for 1 uV; 0.5 in the median of contacts. Room for a busy machine, and rounds enough for its compiler.
     expect(integral / exponential).toBeLessThan(6);
   });
 });
