@@ -19,6 +19,9 @@ export const styles = css`
     border-inline-start: 3px solid var(--choice);
     padding-inline-start: 0.6rem;
   }
+  a {
+    color: inherit;
+  }
   .print {
     overflow-wrap: anywhere;
   }

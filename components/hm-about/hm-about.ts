@@ -49,7 +49,7 @@ export class HmAbout extends LitElement {
       <h3>Where your work is</h3>
       <p>
         In this browser, on this machine. Nothing is sent anywhere. A browser can be told to forget what a page has saved: take a backup from the list of projects when the work
-        matters.
+        matters; it holds your shelf of own materials, dopants and metals as well.
       </p>
       <h3>Help and keys</h3>
       <p>F1 opens the help from anywhere: the first five minutes, a page for each method, and every key. <button type="button" @click=${() => this.help()}>Open the help</button></p>

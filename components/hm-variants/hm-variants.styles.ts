@@ -17,7 +17,7 @@ export const styles = css`
     gap: 0.3rem 1rem;
     padding: 0.3rem 0.4rem;
     border-bottom: 1px solid var(--line);
-    --field-width: 11rem;
+    --field-width: clamp(11rem, 28vw, 26rem);
   }
   .list > li.open {
     box-shadow: inset 3px 0 0 var(--choice);
