@@ -1,3 +1,4 @@
+import { deflateRawSync } from 'node:zlib';
 import { afterEach, describe, expect, it } from 'vitest';
 import { readDesign } from '../../src/design/read.ts';
 import { toStack } from '../../src/design/stack.ts';
@@ -102,10 +103,21 @@ describe('a hostile design file', () => {
 
 describe('a hostile link', () => {
   it('is refused in words whatever stands in it', async () => {
-    for (const text of ['', '=', '%00', '../../etc', '<script>', 'A', 'AA', '𝒳', '_'.repeat(1e6), '%E0%A4%A']) {
+    for (const text of ['', '=', '%00', '../../etc', 'A'.repeat(10e6), '<script>', 'A', 'AA', '𝒳', '_'.repeat(1e6), '%E0%A4%A']) {
       await expect(textOfLink(`http://localhost/#design=${text}`), text.slice(0, 20)).rejects.toThrow(/^The link /);
     }
   });
+
+  it('unpacks to no more than a design has, and holds no more memory than that, however it was packed', async () => {
+    for (const fill of [0x20, 0x5b]) {
+      // 200 MB in some 200 kB.
+      const bomb = deflateRawSync(Buffer.alloc(200e6, fill), { level: 6 }).toString('base64url');
+      expect(bomb.length).toBeLessThan(1e6);
+      const floor = process.memoryUsage().rss;
+      await expect(textOfLink(`http://localhost/#design=${bomb}`)).rejects.toThrow('more than any design has');
+      expect(process.memoryUsage().rss - floor).toBeLessThan(100e6);
+    }
+  }, 60_000);
 });
 
 describe('a hostile project in the database or in a backup', () => {
@@ -153,6 +165,47 @@ describe('a hostile project in the database or in a backup', () => {
   });
 });
 
+describe('a backup that was edited by a hostile hand', () => {
+  const record = (name: string, view: object = {}) => ({ id: name, name, created: 1, changed: 1, revision: 1, designText: good, history: { past: [], future: [] }, view, binned: null });
+
+  it('loses no whole project beside one that is nested beyond all depth', () => {
+    for (const depth of [1000, 20_000, 400_000]) {
+      for (const [open, close] of [['[', ']'], ['{"a":', '}']]) {
+        const text = writeBackup([record('first'), record('odd', { odd: '@' }), record('last')], 0).replace('"@"', `${open.repeat(depth)}1${close.repeat(depth)}`);
+        const reading = quickly(() => readBackup(text));
+        expect(reading.ok && reading.projects.map(({ name }) => name)).toEqual(['first', 'last']);
+        expect(reading.ok && reading.refused.map(({ name }) => name)).toEqual(['odd']);
+      }
+    }
+  }, 60_000);
+
+  it('notices every change of a letter, project by project', () => {
+    const text = writeBackup([record('first'), record('second')], 0);
+    const places = [...text.matchAll(/[A-Za-z0-9]/g)].map(({ index }) => index).filter((_, i) => i % 7 === 0);
+    const whole = readBackup(text);
+    expect(whole.ok && whole.projects).toHaveLength(2);
+    for (const place of places) {
+      const reading = quickly(() => readBackup(`${text.slice(0, place)}${text[place] === 'x' ? 'y' : 'x'}${text.slice(place + 1)}`));
+      // Either the file says that it is none, or what came through is word for word what was written.
+      if (reading.ok) for (const project of reading.projects) expect([JSON.stringify(whole.ok && whole.projects[0]), JSON.stringify(whole.ok && whole.projects[1])]).toContain(JSON.stringify(project));
+    }
+  }, 60_000);
+
+  it('gives back every project that stands whole before the cut, wherever it is cut', () => {
+    const text = writeBackup([record('first'), record('second'), record('third')], 0);
+    let most = 0;
+    for (let at = 0; at < text.length; at += 23) {
+      const reading = quickly(() => readBackup(text.slice(0, at)));
+      const names = reading.ok ? reading.projects.map(({ name }) => name) : [];
+      expect(names).toEqual(['first', 'second', 'third'].slice(0, names.length));
+      // The farther the cut, the more comes back.
+      expect(names.length).toBeGreaterThanOrEqual(most);
+      most = names.length;
+    }
+    expect(most).toBe(3);
+  }, 60_000);
+});
+
 const NAMES = [
   '<script>alert(1)</script>', '"><img src=x onerror=alert(1)>', "'><svg/onload=alert(1)>", ']]><script>1</script>', '<!--', '--><b>', '&lt;script&gt;', '&#x3c;script&#x3e;', '{{7*7}}${7*7}',
   '=HYPERLINK("http://x","y")', '+1+1', '-1+1', '@SUM(A1)', '\t=1+1', '\r\n=1+1', '＝1+1', '"=1+1', ',=1+1', ';=1+1', "=cmd|' /C calc'!A0", 'a\u0000b', 'a\u202egnp.exe', 'a\ud800b', 'a\nb\tc',
@@ -191,7 +244,7 @@ describe('markup, formulas and controls in names', () => {
       }
     }
     for (const name of looks) expect(['svg', 'title', 'desc', 'defs', 'linearGradient', 'stop', 'clipPath', 'rect', 'path', 'line', 'text', 'tspan', 'g']).toContain(name);
-  });
+  }, 60_000);
 
   it('are no formulas in the tables', () => {
     const formula = /^\s*[=+\-@＝＋－＠]/;
@@ -202,7 +255,7 @@ describe('markup, formulas and controls in names', () => {
       const widths = new Set(readCsv(profileCsv(result)).map((row) => row.length));
       expect(widths.size, name).toBe(1);
     }
-  });
+  }, 60_000);
 
   it('stay text in the review sheet, as SVG and as PDF', () => {
     for (const { name, design, result } of results.filter((_, i) => i % 3 === 0)) {
