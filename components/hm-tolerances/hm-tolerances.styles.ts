@@ -65,14 +65,37 @@ export const styles = css`
     .inputs td {
       padding-inline: 6px;
     }
+    /* Room for the sentence under the field, which has no more width than it. */
+    .inputs .refused {
+      --field-width: 11rem;
+    }
     .inputs td:nth-child(3) {
       white-space: normal;
       min-width: 6rem;
     }
   }
+  .inputs tbody th,
+  .inputs tbody td {
+    vertical-align: top;
+    line-height: 1.3;
+    padding-block: 7px 3px;
+  }
+  .inputs select,
+  .inputs button,
   .inputs hm-field {
-    display: inline-block;
-    vertical-align: middle;
+    margin-block-start: -5px;
+    vertical-align: top;
+  }
+  .inputs button {
+    color: var(--ink);
+  }
+  .inputs thead th {
+    /* Above a complaint that runs out of its cell. */
+    z-index: 2;
+  }
+  .inputs hm-field {
+    white-space: normal;
+    --complaint-width: 24rem;
   }
   pre {
     margin: 0;

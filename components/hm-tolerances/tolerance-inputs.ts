@@ -30,11 +30,11 @@ function inputRow(row: InputRow, distribution: Distribution, complaint: string |
   const { label, variable, tolerance, changed, usual, span } = row;
   return html`<tr>
     <th scope="row">${label}</th>
-    <td class="words">
+    <td class=${complaint === null ? 'words' : 'words refused'}>
       <hm-field label-hidden label="Tolerance of ${label}" .value=${tolerance} .complaint=${complaint} @field-accept=${(e: CustomEvent<string>) => wishes.tolerance(row, e.detail.trim() === '' ? null : e.detail)}></hm-field>
       <span class="doc">${variable !== null ? 'stated' : changed ? html`this run <button type="button" aria-label="Tolerance of ${label} back to ${usual}" @click=${() => wishes.tolerance(row, null)}>back to ${usual}</button>` : 'default'}</span>
     </td>
-    <td class="words">${span === null ? 'stays where it is' : `${span[0]} to ${span[1]}`}</td>
+    <td class="words">${complaint !== null ? '–' : span === null ? 'stays where it is' : `${span[0]} to ${span[1]}`}</td>
     <td class="words">
       <select aria-label="How ${label} is drawn" @change=${(e: Event) => wishes.distribution(row, chosen((e.target as HTMLSelectElement).value))}>
         <option value="" .selected=${row.distribution === null}>${distribution}, as above</option>
