@@ -9,7 +9,7 @@ import { fileName, saveFile } from '../shared/save-file.ts';
 import type { HmDialog } from '../hm-dialog/hm-dialog.ts';
 import '../hm-dialog/hm-dialog.ts';
 import { styles } from './hm-leave.styles.ts';
-import { csvBlob, designBlob, pngBlob, svgBlob, tsvBlob, type PlateLook } from './takeaways.ts';
+import { csvBlob, designBlob, plateSvg, pngBlob, svgBlob, tsvBlob, type PlateLook } from './takeaways.ts';
 
 const STYLES: [StyleName, string][] = [
   ['light', 'as on a light screen'],
@@ -125,7 +125,22 @@ export class HmLeave extends LitElement {
     const copy = async (): Promise<string> => {
       if (typeof ClipboardItem === 'undefined' || navigator.clipboard?.write === undefined) return 'This browser lets no page put pictures on the clipboard: take the PNG as a file.';
       await navigator.clipboard.write([new ClipboardItem({ 'image/png': pngBlob(result, this.plateLook, this.plateStyle) })]);
-      return 'The plate is on the clipboard.';
+      return 'The plate is on the clipboard as PNG.';
+    };
+    void this.run(copy());
+  }
+
+  /** The file's text as a picture where the browser's clipboard takes one, and as text, which drawing programs read as a drawing. */
+  private copySvg(): void {
+    const { result } = this;
+    if (result === null) return;
+    const copy = async (): Promise<string> => {
+      if (typeof ClipboardItem === 'undefined' || navigator.clipboard?.write === undefined) return 'This browser lets no page put drawings on the clipboard: take the SVG as a file.';
+      const svg = plateSvg(result, this.plateLook, this.plateStyle);
+      const as = (type: string): Promise<Blob> => svg.then((text) => new Blob([text], { type }));
+      const picture = (ClipboardItem as { supports?(type: string): boolean }).supports?.('image/svg+xml') === true;
+      await navigator.clipboard.write([new ClipboardItem({ 'text/plain': as('text/plain'), ...(picture ? { 'image/svg+xml': as('image/svg+xml') } : {}) })]);
+      return picture ? 'The plate is on the clipboard as SVG, as a drawing and as text.' : 'The plate is on the clipboard as the text of its SVG.';
     };
     void this.run(copy());
   }
@@ -172,7 +187,8 @@ export class HmLeave extends LitElement {
         <div class="row">
           <button type="button" ?disabled=${!ready} @click=${() => this.save('.svg', 'image/svg+xml', (r) => svgBlob(r, this.plateLook, this.plateStyle))}>SVG, vector</button>
           <button type="button" ?disabled=${!ready} @click=${() => this.save('.png', 'image/png', (r) => pngBlob(r, this.plateLook, this.plateStyle))}>PNG, double size</button>
-          <button type="button" ?disabled=${!ready} @click=${this.copyPicture}>To the clipboard</button>
+          <button type="button" ?disabled=${!ready} @click=${this.copyPicture}>Copy as PNG</button>
+          <button type="button" ?disabled=${!ready} @click=${this.copySvg}>Copy as SVG</button>
         </div>
       </section>
       <section aria-labelledby="of-figures">

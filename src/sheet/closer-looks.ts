@@ -16,7 +16,7 @@ import { tableSection } from './table.ts';
 
 /** Of the room of a page, what a further picture takes. */
 const SHARE = 0.62;
-/** Letters of a slide need more. */
+/** Letters of a slide need more; so does a picture that nothing stands below. */
 const WHOLE = 0.9;
 /** A picture above its table: least share of the page. */
 const LEAST = 0.45;
@@ -45,7 +45,7 @@ export function cornerSection({ requirement, result }: Corner, nominal: Result, 
   const { worst } = requirement;
   const figure = worst === null || typeof worst === 'boolean' ? '' : ` There it is ${figureText(worst)}${requirement.unit === '' ? '' : ` ${printedUnits(requirement.unit)}`}; margin ${printedUnits(marginWords(requirement))}, ${verdictWords(requirement)}.`;
   const drawing = drawPlate({ ...result, title: `At the worst corner: ${words}` }, {
-    ...plate, variants: [{ name: 'nominal', result: nominal }], base: 'worst corner', style: look.plate, width: room.width, height: heightOf(look, room), frame: 'full', prefix: 'sheet-corner',
+    ...plate, variants: [{ name: 'nominal', result: nominal }], base: 'worst corner', style: look.plate, width: room.width, height: WHOLE * room.height, frame: 'full', prefix: 'sheet-corner',
     remarks: [`Worst corner of “${printedUnits(requirementWords(requirement))}”: ${words}.${figure}`],
   });
   return { title: 'The plate at the worst corner of the requirements', pieces: [picturePiece(drawing)] };
@@ -62,9 +62,10 @@ export function closeUpSections(closeUps: readonly CloseUp[], room: Room, look: 
     const title = `From near: ${closeUpTitle(closeUp)}`;
     const left = room.height - sectionHeight({ ...table, title }, room, look) - 24;
     // Where its table leaves too little, the picture has a page of its own.
-    const height = left < LEAST * room.height ? heightOf(look, room) : Math.min(left, heightOf(look, room));
+    const apart = left < LEAST * room.height;
+    const height = apart ? heightOf(look, room) : Math.min(left, heightOf(look, room));
     const notes = closeUp.notes.map((text) => paragraph(printedUnits(text), look, room.width, { lead: '–' }));
     const drawing = drawCloseUp(closeUp, { width: room.width, height, style: look.plate, prefix: `sheet-closeup-${closeUp.side}` });
-    return [{ title, pieces: [picturePiece(drawing)] }, { ...table, pieces: [...table.pieces, ...notes] }];
+    return [{ title, pieces: [picturePiece(drawing)] }, { ...table, title: apart ? `Figures of ${closeUpTitle(closeUp)}` : '', pieces: [...table.pieces, ...notes] }];
   });
 }

@@ -99,10 +99,43 @@ describe('taking something away', () => {
     }
   });
 
+  it('puts the plate on the clipboard in one press, as PNG and as SVG', async () => {
+    const items: ClipboardItem[] = [];
+    Object.defineProperty(navigator, 'clipboard', { value: { write: async (list: ClipboardItem[]) => void items.push(...list) }, configurable: true });
+    try {
+      button(element, 'Copy as PNG').click();
+      await until('the picture', () => items.length === 1);
+      const bitmap = await createImageBitmap(await items[0].getType('image/png'));
+      expect([bitmap.width, bitmap.height]).to.deep.equal([2560, 1440]);
+      button(element, 'Copy as SVG').click();
+      await until('the drawing', () => items.length === 2);
+      const text = await (await items[1].getType('text/plain')).text();
+      expect(new DOMParser().parseFromString(text, 'image/svg+xml').documentElement.textContent).to.contain(design.title);
+      const picture = items[1].types.includes('image/svg+xml');
+      if (picture) expect(await (await items[1].getType('image/svg+xml')).text()).to.equal(text);
+      await until('the remark', () => remark().includes('clipboard as'));
+    } finally {
+      delete (navigator as unknown as { clipboard?: unknown }).clipboard;
+    }
+  });
+
+  it('says so where the clipboard refuses or there is none', async () => {
+    Object.defineProperty(navigator, 'clipboard', { value: { write: async () => Promise.reject(new DOMException('no leave', 'NotAllowedError')) }, configurable: true });
+    try {
+      button(element, 'Copy as PNG').click();
+      await until('the reason', () => remark().includes('no leave'));
+      Object.defineProperty(navigator, 'clipboard', { value: undefined, configurable: true });
+      button(element, 'Copy as SVG').click();
+      await until('another way', () => remark().includes('take the SVG as a file'));
+    } finally {
+      delete (navigator as unknown as { clipboard?: unknown }).clipboard;
+    }
+  });
+
   it('gives no figures of an earlier design away, but always the design', async () => {
     element.stale = true;
     await element.updateComplete;
-    expect(['SVG', 'PNG', 'To the clipboard', 'Profiles', 'Ledger'].every((words) => button(element, words).disabled)).to.equal(true);
+    expect(['SVG', 'PNG', 'Copy as PNG', 'Copy as SVG', 'Profiles', 'Ledger'].every((words) => button(element, words).disabled)).to.equal(true);
     expect(button(element, 'Design file').disabled).to.equal(false);
     expect(element.shadowRoot!.textContent).to.contain('only its file can be taken');
   });
