@@ -166,7 +166,7 @@ describe('a hostile project in the database or in a backup', () => {
 });
 
 describe('a backup that was edited by a hostile hand', () => {
-  const record = (name: string, view: object = {}) => ({ id: name, name, created: 1, changed: 1, revision: 1, designText: good, history: { past: [], future: [] }, view, binned: null });
+  const record = (name: string, view: Record<string, unknown> = {}) => ({ id: name, name, created: 1, changed: 1, revision: 1, designText: good, history: { past: [], future: [] }, view, binned: null });
 
   it('loses no whole project beside one that is nested beyond all depth', () => {
     for (const depth of [1000, 20_000, 400_000]) {
