@@ -102,7 +102,10 @@ function evenTicks(axis: DepthAxis, edges_nm: number[], textSize: number): Depth
     if (placed.some((other) => Math.abs(other.x - x) < other.half + half + TICK_GAP * textSize)) return;
     placed.push({ z, x, label, half });
   };
-  for (const z of [from, to, ...edges_nm]) if (z >= from && z <= to) place(z);
+  // The ends of a part that was dragged into view are no round figures: as many digits as a thousandth of the part.
+  const grain = 10 ** (Math.floor(Math.log10(to - from)) - 3);
+  for (const end of [from, to]) place(edges_nm.includes(end) ? end : Math.min(Math.max(Math.round(end / grain) * grain, from), to));
+  for (const z of edges_nm) if (z >= from && z <= to) place(z);
   const first = [...placed].sort((a, b) => a.x - b.x);
   for (let i = 0; i + 1 < first.length; i++) {
     const [left, right] = [first[i].x, first[i + 1].x];
@@ -155,7 +158,8 @@ function depthLabel(z_nm: number): string {
   return z_nm >= 1e4 ? `${plainNumber(z_nm / 1000)} µm` : plainNumber(z_nm);
 }
 
-/** Four significant digits, without trailing zeros or exponents. */
+/** Seven significant digits tell 50 nm apart below a wafer of 300 µm; a round figure is as short as it is. Without trailing zeros or exponents. */
+const DIGITS = 7;
 function plainNumber(value: number): string {
-  return String(Number(value.toPrecision(4)) + 0);
+  return String(Number(value.toPrecision(DIGITS)) + 0);
 }

@@ -54,6 +54,18 @@ describe('the depth axis', () => {
     });
   }
 
+  it('tells neighbouring depths apart below a thick wafer', () => {
+    const result = inventedResult();
+    result.layers[0].thickness_nm = 300_000;
+    result.profile.z_nm = result.profile.z_nm.map((z, i) => (result.profile.layer[i] === 0 ? z * 3000 : z + 299_900));
+    const part: [number, number] = [299_990, 300_050];
+    for (const axis of [depthAxis(result, { mode: 'even', range: [0, 1200] }), ...MODES.map((mode) => depthAxis(result, { mode, range: [0, 1200], window: part }))]) {
+      const labels = axis.ticks.map(({ label }) => label);
+      expect(new Set(labels).size, labels.join(' | ')).toBe(labels.length);
+      expect(labels.length).toBeGreaterThan(4);
+    }
+  });
+
   it('sets the figures of an uneven axis at much the same distances between two boundaries', () => {
     const axis = depthAxis(inventedResult(), { mode: 'even', range: [0, 1200] });
     for (let l = 0; l < axis.edges.length - 1; l++) {
