@@ -60,7 +60,9 @@ export class HmSheetSections extends LitElement {
   }
 
   private change(part: Partial<SectionsChosen>): void {
-    this.dispatchEvent(new CustomEvent('sections-change', { detail: { ...this.chosen, ...part } satisfies SectionsChosen }));
+    // Kept at once: a second press may come before the sheet has handed the first one back.
+    this.chosen = { ...this.chosen, ...part };
+    this.dispatchEvent(new CustomEvent('sections-change', { detail: this.chosen }));
   }
 
   private box(words: string, of: { checked: boolean; able: boolean; why?: string; set(on: boolean): void }): TemplateResult {
@@ -77,7 +79,7 @@ export class HmSheetSections extends LitElement {
     const all = tables.flatMap((table) => table.rows.map((row) => ({ table, row })));
     const at = all.find(({ table, row }) => keyOf(table, row) === this.row) ?? all[0];
     const { columns } = at.table;
-    return { ...at, columns, column: columns.find(({ id }) => id === this.column) ?? columns[0] };
+    return { ...at, columns, column: columns.find(({ id }) => id === this.column) ?? columns.find(({ kind, usual }) => kind === 'figure' && usual) ?? columns[0] };
   }
 
   private add(): void {
