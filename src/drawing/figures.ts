@@ -1,4 +1,4 @@
-import { decimalText } from '../result/figure-text.ts';
+import { decimalText, figureText } from '../result/figure-text.ts';
 import type { TextRun } from './shapes.ts';
 
 /** How figures are written in drawings. The minus is the true one, digits are those of the face. */
@@ -10,6 +10,12 @@ export function powerOfTen(value: number): TextRun[] {
   const short = mantissa.replace(/\.0$/, '').replace('-', '−');
   const power: TextRun[] = [{ text: '10' }, { text: String(Number(exponent)).replace('-', '−'), script: 'super' }];
   return short === '1' ? power : [{ text: `${short}\u2009×\u2009` }, ...power];
+}
+
+/** A density of carriers: plain where a power of ten would be the longer way to say it; what underflows is below every number, not nothing. */
+export function densityRuns(value: number): TextRun[] {
+  if (value === 0) return [{ text: '< ' }, ...powerOfTen(1e-300)];
+  return value >= 0.01 && value < 1000 ? [{ text: figureText(value, 2) }] : powerOfTen(value);
 }
 
 /** Thickness with the unit that keeps it short. */

@@ -4,7 +4,7 @@ import { energyDistribution, statesDistribution } from './band-filling.ts';
 import { polyline, thinned, type Points } from './curve.ts';
 import { layerEdges } from './depth-axis.ts';
 import type { EnergyAxis } from './energy-axis.ts';
-import { energyText, lengthText, powerOfTen, spoken } from './figures.ts';
+import { densityRuns, energyText, lengthText, spoken } from './figures.ts';
 import { runsWidth, textWidth } from './glyph-widths.ts';
 import { fermi } from './marks/occupancy.ts';
 import { px, type Drawing, type Shape, type TextRun, type TextShape } from './shapes.ts';
@@ -182,7 +182,7 @@ function fermiMark(r: Rail, here: Here): Shape[] {
 function figures(r: Rail, here: Here, z: number, height: number): Shape[] {
   const { style, small } = r;
   const text = (role: string, x: number, y: number, anchor: 'start' | 'middle' | 'end', runs: TextRun[], fill = style.ink): TextShape => ({ kind: 'text', role, x, y, size: small, anchor, runs, fill });
-  const density = (letter: string, value: number): TextRun[] => [{ text: letter, italic: true }, { text: ' ' }, ...powerOfTen(value), { text: ' cm' }, { text: '−3', script: 'super' }];
+  const density = (letter: string, value: number): TextRun[] => [{ text: letter, italic: true }, { text: ' ' }, ...densityRuns(value), { text: ' cm' }, { text: '−3', script: 'super' }];
   const grounded = (shape: TextShape): Shape[] => {
     const w = runsWidth(shape.runs, small) + 4;
     return [{ kind: 'rect', role: 'rail-figure-ground', x: shape.x - w + 2, y: shape.y - 1.1 * small, w, h: 1.4 * small, fill: style.ground, opacity: 0.85 }, shape];

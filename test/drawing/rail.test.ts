@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { BOLTZMANN } from '../../solver/constants.ts';
 import { energyAxis } from '../../src/drawing/energy-axis.ts';
+import { densityRuns } from '../../src/drawing/figures.ts';
 import { drawRail } from '../../src/drawing/rail.ts';
 import { plainText, type Drawing, type LineShape, type PathShape, type TextShape } from '../../src/drawing/shapes.ts';
 import { inventedResult } from './invented-result.ts';
@@ -17,6 +18,14 @@ const text = (d: Drawing, role: string): string => plainText((d.shapes.find((s) 
 const ROOM = 200;
 
 describe('the rail', () => {
+  it('writes a small density plain, and one below the smallest number as such', () => {
+    const words = (value: number): string => plainText(densityRuns(value));
+    expect(words(3.96)).toBe('4.0');
+    expect(words(13)).toBe('13');
+    expect(words(2e15)).toMatch(/^2\u2009×\u200910.*15$/);
+    expect(words(0)).toMatch(/^< 10.*−300$/);
+  });
+
   it('draws f(E) from 0 to 1 over its width', () => {
     for (const T of [4, 300, 1000]) {
       const result = inventedResult();
