@@ -27,7 +27,12 @@ const FIELD = 0.9;
  *   edge, with the slope c1 at kT above it: k^2/A exp(exponent there) (1 - c1 kT)/kT exp(c1 kT + edge/kT);
  * - thermionic-field, else: the parabola at the energy edge + psi/cosh^2(E00/kT), where the slope is 1/kT:
  *   k^2/A cosh(E00/kT)/(2 sqrt(pi E00 psi tanh(E00/kT))) exp(psi/E0 + edge/kT), E0 = E00 coth(E00/kT).
- * The parabola's integral is done in full here; as Yu prints the thermionic-field form (from memory), it is twice this.
+ * Why the thermionic-field form is not the one in print. With b the exponent, T f falls as exp(-b(E) - E/kT); b' = -artanh(s)/E00 with s = sqrt(1 - z), so the peak has s = tanh r,
+ * r = E00/kT, and there b'' = cosh^2 r/(2 E00 psi tanh r). The Gauss integral over it, sqrt(2 pi/b''), is 2 sqrt(pi E00 psi tanh r)/cosh r, which gives the form above, since dJ/dV at V = 0 is
+ * exactly (A/k^2) Int T f dE: both currents count, and T may move with V without moving them apart. As Padovani and Stratton's current J = A T sqrt(pi E00 psi)/(k cosh r) exp(-psi/E0 - edge/kT)
+ * stands in print (from memory), the Gauss integral is taken as half of that, with tanh r = 1; and Yu's resistivity kT/(A T^2) sqrt(E00/(pi psi)) cosh r coth r exp(..) (from memory) comes of its forward
+ * part alone, which grows as exp(V/E0), not as exp(V/kT). So it is 2 r/sqrt(tanh r) times this, 1.5 at r = 0.5 and 4.1 at r = 2. The integral through the parabola decides
+ * (test/solver/checks-rho-c.test.ts): this form lies within 0.7 to 1 of it.
  */
 export function closedFormResistivity(barrier: number, edge: number, e00: number, constant: number, temperature: number): ClosedForm {
   const kT = BOLTZMANN * temperature;
