@@ -1,4 +1,5 @@
 import assert from 'node:assert/strict';
+import { readFileSync } from 'node:fs';
 import { deflateRawSync } from 'node:zlib';
 import type { Page } from 'puppeteer-core';
 import { scenario } from './harness.ts';
@@ -61,6 +62,13 @@ scenario('The policy of the page allows no inline script, no inline style, no co
   await open();
   await untilSolved(page);
   assert.deepEqual(await breaches(), []);
+});
+
+scenario('The licences of what ships are there to be read beside the page', async ({ page, url }) => {
+  const answer = await page.goto(`${url}licences.txt`);
+  assert.equal(answer!.status(), 200);
+  assert.equal(answer!.headers()['content-type'], 'text/plain; charset=utf-8');
+  assert.equal(await answer!.text(), readFileSync('src/help/licences.txt', 'utf8'));
 });
 
 scenario('Markup in every name of a design stays text on the page and in every file, and breaks no rule', async ({ page, open }) => {

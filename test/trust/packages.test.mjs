@@ -31,6 +31,29 @@ describe('the packages that ship', () => {
     for (const name of Object.keys(devDependencies)) if (!(name in dependencies)) expect(names).not.toContain(name);
   });
 
+  it('are fixed to one version each, held by a hash, need nothing that is not listed, and run nothing when they are installed', () => {
+    const { packages } = JSON.parse(readFileSync(join(ROOT, 'package-lock.json'), 'utf8'));
+    const manifest = JSON.parse(readFileSync(join(ROOT, 'package.json'), 'utf8'));
+    for (const [name, version] of Object.entries({ ...manifest.dependencies, ...manifest.devDependencies })) expect(version, name).toMatch(/^\d+\.\d+\.\d+$/);
+    const shipped = shippedPackages();
+    const reached = new Set();
+    const follow = (name) => {
+      if (reached.has(name)) return;
+      reached.add(name);
+      for (const next of Object.keys(packages[`node_modules/${name}`]?.dependencies ?? {})) follow(next);
+    };
+    Object.keys(manifest.dependencies).forEach(follow);
+    // What is listed is what is needed, no more and no less.
+    expect(shipped.map(({ name }) => name)).toEqual([...reached].sort());
+    for (const { name, version } of shipped) {
+      const entry = packages[`node_modules/${name}`];
+      expect(entry.version, name).toBe(version);
+      expect(entry.integrity, name).toMatch(/^sha512-/);
+      expect(entry.hasInstallScript, name).toBe(undefined);
+      expect(JSON.parse(readFileSync(join(ROOT, 'node_modules', name, 'package.json'), 'utf8')).version, name).toBe(version);
+    }
+  });
+
   it('have no known hole by the registry, where one answers', { timeout: 60_000 }, (context) => {
     const { stdout } = spawnSync(process.platform === 'win32' ? 'npm.cmd' : 'npm', ['audit', '--omit=dev', '--json', '--fetch-retries=0', '--fetch-timeout=10000'], { cwd: ROOT, encoding: 'utf8', timeout: 30_000, shell: process.platform === 'win32' });
     let report;
