@@ -3,7 +3,7 @@ import { solveByBox } from './poisson-box.ts';
 import { solveByCompact } from './poisson-compact.ts';
 import { coldStart, setEnds } from './poisson-guess.ts';
 import type { PoissonLayer, PoissonProblem } from './poisson-system.ts';
-import { PoissonWork } from './poisson-work.ts';
+import { mostLooks, PoissonWork } from './poisson-work.ts';
 import { ACCEPTANCE } from './quality.ts';
 import type { Profiles, Quality, Refusal } from './solution.ts';
 import type { SolveOptions } from './stack.ts';
@@ -20,6 +20,13 @@ export interface PoissonGoal {
   /** accepted estimate of the mesh error, V */ accuracy: number;
   maxNodes: number;
 }
+
+const MOST_NODES = 40000;
+/** Many layers may have more: a graded one begins with some hundred. */
+const MOST_NODES_A_LAYER = 200;
+/** Shares of the work that are gone at most when a warm start, and then the compact scheme, give up: the box scheme must have its turn. */
+const WARM_SHARE = 0.25;
+const COMPACT_SHARE = 0.7;
 
 /** Where an iteration begins. */
 export interface PoissonStart {
@@ -38,11 +45,12 @@ export interface PoissonStart {
  */
 export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}): PoissonSolution | Refusal {
   const problem: PoissonProblem = { ...given, layers: given.layers.map(askedOnce) };
-  const goal: PoissonGoal = { accuracy: options.accuracy ?? ACCEPTANCE.meshError, maxNodes: options.maxNodes ?? 40000 };
+  const goal: PoissonGoal = { accuracy: options.accuracy ?? ACCEPTANCE.meshError, maxNodes: options.maxNodes ?? Math.max(MOST_NODES, MOST_NODES_A_LAYER * problem.layers.length) };
   const warm = options.warmStart ? warmStart(problem, options.warmStart) : null;
-  const work = new PoissonWork();
+  const work = new PoissonWork(mostLooks(problem.layers.length));
   let updates = 0;
   for (const first of warm ? [warm, null] : [null]) {
+    work.allow(first ? WARM_SHARE : COMPACT_SHARE);
     const compact = solveByCompact(problem, first ?? coldStart(problem, work), goal, work);
     updates += compact.updates;
     if (compact.solution) {
@@ -50,6 +58,7 @@ export function solvePoisson(given: PoissonProblem, options: SolveOptions = {}):
       return compact.solution;
     }
   }
+  work.allow(1);
   return solveByBox(problem, coldStart(problem, work), goal, updates, work);
 }
 

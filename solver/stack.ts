@@ -239,7 +239,7 @@ export interface Stack {
 
 export interface SolveOptions {
   /** accepted estimated mesh error in psi, V; default 1e-4 */ accuracy?: number;
-  /** most mesh nodes; default 40000 */ maxNodes?: number;
+  /** most mesh nodes; default 40000, or 200 a layer where that is more */ maxNodes?: number;
   /** whether contact resistivities are worked out; default true */ contacts?: boolean;
   /** Start from an earlier solution of a similar stack (same number of layers): its mesh and its potential. */
   warmStart?: import('./solution.ts').Profiles;

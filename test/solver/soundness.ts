@@ -21,8 +21,12 @@ export function faultsOf(answer: Solution, accuracy: number = ACCEPTANCE.meshErr
   if (faults.length > 0) return faults;
   const tops = stack.layers.map((_, l) => profiles.z[profiles.layer.indexOf(l)]);
   const bandsOf = (s: number) => localCharge(stack.layers[profiles.layer[s]], profiles.z[s] - tops[profiles.layer[s]], stack.temperature, stack.assumptions).bands;
-  return [...carrierFaults(answer, bandsOf), ...gaussFaults(answer, (s) => bandsOf(s).permittivity * EPSILON_0), ...bulkFaults(answer)];
+  return [...carrierFaults(answer, bandsOf), ...gaussFaults(answer, (s) => bandsOf(s).permittivity * EPSILON_0), ...bulkFaults(answer), ...boundFaults(answer, tops), ...figureFaults(answer)];
 }
+
+const EPSILON = 2.2e-16;
+/** Change of a band edge through a graded layer, eV. */
+const STEEPEST = 5;
 
 /** A flat Fermi level: wherever the bands are, the carriers are those of EF = 0 (parabolic bands, Fermi-Dirac statistics). */
 function carrierFaults({ profiles, stack }: Solution, bandsOf: (s: number) => ReturnType<typeof localCharge>['bands']): string[] {
@@ -33,8 +37,11 @@ function carrierFaults({ profiles, stack }: Solution, bandsOf: (s: number) => Re
     if (bands.insulator) continue;
     for (const [density, states, eta] of [[profiles.n[s], bands.nc, -profiles.ec[s] / bands.kT], [profiles.p[s], bands.nv, profiles.ev[s] / bands.kT]]) {
       // Below 1e-250 only the exponent is left to compare; ec - gap and ev differ by rounding, which exp(eta) magnifies.
-      // In a graded alloy the composition is asked anew at the printed depth, which under a thick stack has lost the digits of a thin layer.
-      const limit = (stack.layers[profiles.layer[s]].x.kind === 'constant' ? 1e-11 : 1e-9) * Math.max(1, 4 / bands.kT / 1e3);
+      // In a graded alloy the composition is asked anew at the printed depth, which under a thick stack has lost the digits of a thin layer: edges that move by up to
+      // some eV over a tenth of it are off by so much.
+      const { thickness, x } = stack.layers[profiles.layer[s]];
+      const lost = x.kind === 'constant' ? 0 : (EPSILON * profiles.z[s] * 10 * STEEPEST) / thickness / bands.kT;
+      const limit = (x.kind === 'constant' ? 1e-11 : 1e-9) * Math.max(1, 4 / bands.kT / 1e3) + lost;
       if (density > 1e-250 && !(Math.abs(density / (states * fermiHalf(eta)) - 1) < limit)) faults.push(`carriers at node ${s}`);
     }
   }
@@ -55,7 +62,8 @@ function gaussFaults({ profiles, stack, quality }: Solution, epsAt: (s: number) 
     const first = profiles.layer.indexOf(l);
     const last = profiles.layer.lastIndexOf(l);
     const [z, rho] = [profiles.z.subarray(first, last + 1), profiles.charge.subarray(first, last + 1)];
-    const charge = ELEMENTARY_CHARGE * (quality.method === 'box' ? byTrapezoids : byParabolas)(z, rho);
+    const graded = stack.layers[l].x.kind !== 'constant';
+    const charge = ELEMENTARY_CHARGE * (quality.method === 'box' ? byTrapezoids(z, rho) : graded ? inStretchedDepth(stack, l, z, rho) : byParabolas(z, rho));
     let doped = 0;
     for (let s = first; s < last; s++) {
       const h = profiles.z[s + 1] - profiles.z[s];
@@ -119,6 +127,65 @@ function endDoubt(z: Float64Array, rho: Float64Array): number {
     return 2 * Math.abs(byParabolas(zs, rhos) - byTrapezoids(zs, rhos)) + steep;
   };
   return doubt(0) + doubt(m - 3);
+}
+
+/**
+ * In a graded crystal the parabolas are those of rho eps against the stretched depth, dx = dz eps(0)/eps: only there is the equation one of even eps. Depths come
+ * from the printed z, eps between them from the crystal itself, dz/eps by Simpson's rule.
+ */
+function inStretchedDepth(stack: Solution['stack'], l: number, z: Float64Array, rho: Float64Array): number {
+  const layer = stack.layers[l];
+  const eps = (at: number): number => localCharge(layer, Math.min(layer.thickness, Math.max(0, at - z[0])), stack.temperature, stack.assumptions).bands.permittivity;
+  const first = eps(z[0]);
+  const x = new Float64Array(z.length);
+  const source = Float64Array.from(rho, (v, k) => (v * eps(z[k])) / first);
+  for (let k = 1; k < z.length; k++) x[k] = x[k - 1] + ((z[k] - z[k - 1]) * first * (1 / eps(z[k - 1]) + 4 / eps(0.5 * (z[k - 1] + z[k])) + 1 / eps(z[k]))) / 6;
+  return byParabolas(x, source);
+}
+
+/**
+ * Densities within what is there, and the maximum principle: where no positive sheet and no positive end lifts it, psi stays below the highest of what the ends
+ * and local neutrality ask for; likewise from below (charge falls with psi).
+ */
+function boundFaults({ profiles, stack, quality }: Solution, tops: number[]): string[] {
+  const faults: string[] = [];
+  let [least, most] = [Infinity, -Infinity];
+  for (let s = 0; s < profiles.z.length; s++) {
+    const layer = stack.layers[profiles.layer[s]];
+    const depth = Math.min(layer.thickness, Math.max(0, profiles.z[s] - tops[profiles.layer[s]]));
+    const c = localCharge(layer, depth, stack.temperature, stack.assumptions);
+    let [donors, acceptors] = [0, 0];
+    for (const level of c.levels) if (level.donor) donors += level.density; else acceptors += level.density;
+    // Steep tails move by some 1e-9 of themselves with the rounding of the depth.
+    const within = (value: number, active: number): boolean => value >= 0 && value <= active * (1 + 1e-7);
+    if (!within(profiles.ionisedDonors[s], c.bands.insulator ? 0 : donors) || !within(profiles.ionisedAcceptors[s], c.bands.insulator ? 0 : acceptors)) faults.push(`more ionised than there is at node ${s}`);
+    if (profiles.n[s] < 0 || profiles.p[s] < 0) faults.push(`negative carriers at node ${s}`);
+    if (c.bands.insulator) continue;
+    const psi = profiles.ec[s] + profiles.psi[s] - neutralLevel(c).ecMinusEf;
+    least = Math.min(least, psi);
+    most = Math.max(most, psi);
+  }
+  const sheets = [...polarisationSheets(stack)];
+  for (const row of stack.interfaces) sheets[row.index] += row.sheetCharge;
+  const last = profiles.psi.length - 1;
+  for (const [end, s] of [[stack.top, 0], [stack.bottom, last]] as const) {
+    if (end.kind === 'open') sheets.push(end.sheetCharge);
+    else {
+      least = Math.min(least, profiles.psi[s]);
+      most = Math.max(most, profiles.psi[s]);
+    }
+  }
+  const slack = quality.meshError + 1e-9;
+  for (let s = 0; s <= last; s++) {
+    if (!sheets.some((v) => v > 0) && profiles.psi[s] > most + slack) faults.push(`psi at node ${s} is ${profiles.psi[s] - most} V above all that asks for it`);
+    if (!sheets.some((v) => v < 0) && profiles.psi[s] < least - slack) faults.push(`psi at node ${s} is ${least - profiles.psi[s]} V below all that asks for it`);
+  }
+  return faults;
+}
+
+/** No figure of a layer, a junction or a contact is NaN. */
+function figureFaults({ layers, junctions, contacts }: Solution): string[] {
+  return [...layers, ...junctions, ...contacts].flatMap((row, i) => Object.entries(row).filter(([, v]) => typeof v === 'number' && Number.isNaN(v)).map(([key]) => `${key} of row ${i} is NaN`));
 }
 
 function byTrapezoids(z: Float64Array, rho: Float64Array): number {
