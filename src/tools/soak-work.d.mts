@@ -10,5 +10,5 @@ export const MOST_A_ROUND: Counted;
 export function soak(
   browser: Browser,
   url: string,
-  asked: { edits: number; undos: number; starters: number; exports: number; rounds: number },
+  asked: { edits: number; undos: number; starters: number; sweeps: number; exports: number; rounds: number },
 ): Promise<{ rounds: (Counted & { seconds: number })[]; problems: string[]; growth: Counted }>;

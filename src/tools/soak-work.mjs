@@ -5,7 +5,7 @@ export const MOST_A_ROUND = { heap_MB: 0.5, elements: 5, listeners: 5 };
 
 /**
  * @param {import('puppeteer-core').Browser} browser
- * @param {{edits: number, undos: number, starters: number, exports: number, rounds: number}} asked shared out over the rounds
+ * @param {{edits: number, undos: number, starters: number, sweeps: number, exports: number, rounds: number}} asked shared out over the rounds
  */
 export async function soak(browser, url, asked) {
   const problems = [];
@@ -23,7 +23,7 @@ export async function soak(browser, url, asked) {
     const rounds = [];
     for (let round = 0; round < asked.rounds; round++) {
       const started = Date.now();
-      await page.evaluate(work, { round, edits: share(asked.edits), undos: share(asked.undos), starters: share(asked.starters), exports: share(asked.exports) });
+      await page.evaluate(work, { round, edits: share(asked.edits), undos: share(asked.undos), starters: share(asked.starters), sweeps: share(asked.sweeps), exports: share(asked.exports) });
       // Two collections: what the first one's finalisers let go of is free only in the second.
       for (let i = 0; i < 2; i++) await session.send('HeapProfiler.collectGarbage');
       const { metrics } = await session.send('Performance.enable').then(() => session.send('Performance.getMetrics'));
@@ -54,7 +54,7 @@ function prepare() {
 }
 
 /** Runs in the page: one round. */
-async function work({ round, edits, undos, starters, exports }) {
+async function work({ round, edits, undos, starters, sweeps, exports }) {
   const app = document.querySelector('hm-app').shadowRoot;
   const part = (name) => app.querySelector(name);
   const until = async (what, holds) => {
@@ -96,6 +96,20 @@ async function work({ round, edits, undos, starters, exports }) {
     if (i % 3 === 0) tell(part('hm-conditions'), 'hm-act', { act: 'redo' });
     await until('an answer', solved);
   }
+
+  const desk = part('hm-desk');
+  const openTab = (words) => [...desk.renderRoot.querySelectorAll('[role=tab]')].find((tab) => tab.textContent.trim().startsWith(words)).click();
+  openTab('Sweeps');
+  await until('the panel of sweeps', () => (desk.renderRoot.querySelector('hm-sweeps')?.renderRoot?.childElementCount ?? 0) > 0);
+  const swept = desk.renderRoot.querySelector('hm-sweeps');
+  for (let i = 0; i < sweeps; i++) {
+    const run = () => [...swept.renderRoot.querySelectorAll('button')].find((button) => button.textContent.trim() === 'Run the sweep');
+    await until('a sweep that can be run', () => run() !== undefined && !run().disabled);
+    const rows = swept.renderRoot.querySelector('tbody');
+    run().click();
+    await until('its figures', () => !run().disabled && swept.renderRoot.querySelector('progress') === null && swept.renderRoot.querySelectorAll('tbody tr').length > 5 && (i === 0 || rows !== null));
+  }
+  openTab('Ledger');
 
   tell(part('hm-conditions'), 'hm-act', { act: 'leave' });
   const leave = part('hm-leave');

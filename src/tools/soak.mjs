@@ -1,11 +1,11 @@
-// `npm run soak`: an hour's work in a minute or two against the built page: edits, undos, designs opened, files taken away, a few rounds of each. What is counted
-// at the end of a round must not grow from the second to the last: memory after a collection, elements, listeners. `--edits N --undos N --starters N --exports N --rounds N`.
+// `npm run soak`: an hour's work in a minute or two against the built page: edits, undos, designs opened, sweeps, files taken away, a few rounds of each. What is counted
+// at the end of a round must not grow from the second to the last: memory after a collection, elements, listeners. `--edits N --undos N --starters N --sweeps N --exports N --rounds N`.
 import { openBrowser } from './browser.mjs';
 import { buildIfStale } from './build.mjs';
 import { serve } from './serve.mjs';
 import { soak } from './soak-work.mjs';
 
-const asked = { edits: 500, undos: 50, starters: 20, exports: 10, rounds: 5 };
+const asked = { edits: 500, undos: 50, starters: 20, sweeps: 20, exports: 10, rounds: 5 };
 for (let i = 2; i < process.argv.length; i += 2) {
   const name = process.argv[i].replace(/^--/, '');
   const value = Number(process.argv[i + 1]);

@@ -258,16 +258,16 @@ function muteDrawings(page: Page, where: string): Promise<string[]> {
 }
 
 const PARTS: [what: string, states: readonly State[]][] = [
-  ['What the page says, and each of its forms,', SAID],
-  ['Verdicts, sizes and contacts', RESULTS],
-  ['Rankings, sweeps, maps of them and films', LONG_RESULTS],
-  ['Regime maps, spreads, variants, parameters and workings', MORE_RESULTS],
-  ['Dialogs, and what is still empty,', DIALOGS],
+  ['what the page says, and each of its forms,', SAID],
+  ['verdicts, sizes and contacts,', RESULTS],
+  ['rankings, sweeps, maps of them and films,', LONG_RESULTS],
+  ['regime maps, spreads, variants, parameters and workings,', MORE_RESULTS],
+  ['dialogs, and what is still empty,', DIALOGS],
 ];
 
 for (const [look, appearance] of APPEARANCES) {
   for (const [what, states] of PARTS) {
-    scenario(`${what} are accessible ${look}, with words and a table for each drawing`, async ({ page, open }) => {
+    scenario(`With words and a table for each drawing, all accessible: ${what} ${look}`, async ({ page, open }) => {
       await show(page, appearance);
       await open();
       await untilSolved(page);
