@@ -29,7 +29,7 @@ const heightOf = (look: SheetLook, room: Room): number => (look.plateShare[0] ==
 export function comparisonSections(base: { name: string; design: Design; result: Result }, variants: readonly SheetVariant[], plate: PlateLook, room: Room, look: SheetLook): Section[] {
   const drawing = drawPlate({ ...base.result, title: '' }, {
     // Where lines are compared, the tint of one of the designs and its dimensions would speak for all.
-    ...plate, shading: 'none', levels: false, variants: variants.map(({ name, result }) => ({ name, result })), base: base.name, style: look.plate, width: room.width, height: heightOf(look, room), frame: 'full', prefix: 'sheet-overlay',
+    ...plate, shading: 'none', levels: false, variants: variants.map(({ name, result }) => ({ name, result })), base: base.name, remarks: [`Layers, temperature and dimensions are those of ${base.name}.`], style: look.plate, width: room.width, height: heightOf(look, room), frame: 'full', prefix: 'sheet-overlay',
   });
   return [
     { title: 'Variants laid over each other', pieces: [picturePiece(drawing)] },

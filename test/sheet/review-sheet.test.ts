@@ -4,6 +4,7 @@ import { plainText, type Drawing } from '../../src/drawing/shapes.ts';
 import { svgText } from '../../src/drawing/svg-text.ts';
 import { sheetPdf } from '../../src/export/sheet-files.ts';
 import { decimalText } from '../../src/result/figure-text.ts';
+import { furtherSections } from '../../src/sheet/further.ts';
 import { PAPERS, SHEET_STYLES } from '../../src/sheet/look.ts';
 import { reviewSheet } from '../../src/sheet/review-sheet.ts';
 import { wellFormed } from '../drawing/well-formed.ts';
@@ -14,6 +15,12 @@ import { allText, inputOf, sheetOf, solved, starter, tenLayers, textsOf } from '
 
 // Judging the requirements of a starter takes seconds where other tests run beside this one.
 vi.setConfig({ testTimeout: 60_000 });
+
+/** Of this process's own work since then: other tests run beside this one. */
+function seconds(since: NodeJS.CpuUsage): number {
+  const { user, system } = process.cpuUsage(since);
+  return (user + system) / 1e6;
+}
 
 const roleText = (page: Drawing, role: string): string[] => textsOf(page).filter((t) => t.role === role).map((t) => plainText(t.runs));
 
@@ -102,13 +109,27 @@ describe('the review sheet', () => {
   it('has every layer of ten on it, in less than two seconds with its PDF', () => {
     const design = tenLayers();
     const result = solved(design);
-    const before = performance.now();
+    const before = process.cpuUsage();
     const pages = reviewSheet({ ...inputOf('pn-diode'), design, result, requirements: [] });
     const bytes = sheetPdf(pages, FONTS, { title: design.title, author: '', provenance: result.provenance });
-    expect(performance.now() - before).toBeLessThan(2000);
+    expect(seconds(before)).toBeLessThan(2);
     const text = readPdf(bytes).flatMap((p) => p.texts.map((t) => t.text));
     for (const layer of design.layers) expect(text).toContain(layer.name);
     for (const page of pages) expect(overlaps(page)).toEqual([]);
+  });
+
+  it('of ten layers takes less than two seconds with another design over it, its contact from near and a figure’s workings', () => {
+    const design = tenLayers();
+    const other = { ...tenLayers(), title: 'thinner' };
+    other.layers = other.layers.map((layer) => ({ ...layer, thickness: '40 nm' }));
+    const result = solved(design);
+    const before = process.cpuUsage();
+    const { sections, missing } = furtherSections(design, result, null, { over: [{ name: 'thinner', design: other }], base: 'base', corner: false, contacts: true, workings: [{ table: 'layers', index: 0, column: 'ecMinusEf' }] });
+    const pages = reviewSheet({ ...inputOf('pn-diode'), design, result, requirements: [], ...sections });
+    sheetPdf(pages, FONTS, { title: design.title, author: '', provenance: result.provenance });
+    expect(seconds(before)).toBeLessThan(2);
+    expect(missing).toEqual([]);
+    for (const page of pages) expect([...overlaps(page), ...outside(page)]).toEqual([]);
   });
 
   it('splits a layer of fifty dopants over rows that fit a page, and leaves none out', () => {
