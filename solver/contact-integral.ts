@@ -26,7 +26,7 @@ const COLD = 60;
 const COARSER = 4;
 /** Cells of the barrier at most so many times finer than usual. */
 const MOST_FINENESS = 16;
-/** Places at which the window is looked for, and how far below the peak it ends, in natural logarithms. */
+/** Places at which the stretch of energies that counts is looked for, and how far below the peak it ends, in natural logarithms. */
 const SCAN = 18;
 const DEPTH = 18;
 /** Panels that an integral may take. A wave kept between two steps of a thick undoped layer rings in energy more finely than can be followed: the error says so. */
@@ -63,9 +63,9 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
   const climbs = top - edge > NO_BARRIER * kT;
   const axis = climbs ? energyAxis(shape, kind === 'exact' ? [] : bendsOf(shape)) : null;
   const rough: LogTransmission = (energy) => (energy >= top ? 0 : -wkbExponent(shape, energy, dispersion));
-  const window = axis ? windowOf(axis, rough, above, kT) : { from: 0, to: 0, place: 0, peak: above, energies: [top], lowest: top };
-  const { transmission, error: depthError } = settled(shape, finer, kind, dispersion, kind === 'exact' ? [window.lowest, ...window.energies] : window.energies, Math.min(1, accuracy / ACCURACY));
-  const shift = window.peak;
+  const stretch = axis ? stretchOf(axis, rough, above, kT) : { from: 0, to: 0, place: 0, peak: above, energies: [top], lowest: top };
+  const { transmission, error: depthError } = settled(shape, finer, kind, dispersion, kind === 'exact' ? [stretch.lowest, ...stretch.energies] : stretch.energies, Math.min(1, accuracy / ACCURACY));
+  const shift = stretch.peak;
   let sum = 0;
   let error = 0;
   if (axis) {
@@ -75,11 +75,11 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
       dear: (x: number): number => transmission(axis.energy(x)) - rootAt(x),
       cheap: (x: number): number => axis.logShare(x, kT) + rootAt(x),
     };
-    const from = kind === 'exact' ? Math.max(window.from, 1e-7) : window.from;
-    const inner = [...axis.ends, window.place].filter((x) => x > from && x < window.to).sort((a, b) => a - b);
+    const from = kind === 'exact' ? Math.max(stretch.from, 1e-7) : stretch.from;
+    const inner = [...axis.ends, stretch.place].filter((x) => x > from && x < stretch.to).sort((a, b) => a - b);
     const bottom = Math.exp(above - shift);
-    const below = integratePeaked(integrand, [from, ...inner, window.to], top - edge > SHARP * kT ? KNEE.map((u) => axis.place(u * kT)) : [], shift, accuracy, kind === 'wkb' ? bottom : 0, MOST_PANELS[kind] + inner.length);
-    const direct = kind === 'exact' && below.error > RINGING * below.value ? integrate((x) => Math.exp(integrand.dear(x) + integrand.cheap(x) - shift), [from, ...inner, window.to], accuracy, 0, MOST_RINGING) : below;
+    const below = integratePeaked(integrand, [from, ...inner, stretch.to], top - edge > SHARP * kT ? KNEE.map((u) => axis.place(u * kT)) : [], shift, accuracy, kind === 'wkb' ? bottom : 0, MOST_PANELS[kind] + inner.length);
+    const direct = kind === 'exact' && below.error > RINGING * below.value ? integrate((x) => Math.exp(integrand.dear(x) + integrand.cheap(x) - shift), [from, ...inner, stretch.to], accuracy, 0, MOST_RINGING) : below;
     const { value, error: off } = direct.error < below.error ? direct : below;
     sum += value;
     error += off;
@@ -152,7 +152,7 @@ function bendsOf(shape: BarrierShape): number[] {
   return apart.slice(0, MOST_BENDS);
 }
 
-interface Window {
+interface Stretch {
   from: number;
   to: number;
   /** of the peak */ place: number;
@@ -161,7 +161,7 @@ interface Window {
   /** where it begins, eV */ lowest: number;
 }
 
-function windowOf(axis: EnergyAxis, rough: LogTransmission, above: number, kT: number): Window {
+function stretchOf(axis: EnergyAxis, rough: LogTransmission, above: number, kT: number): Stretch {
   const pieces = axis.ends.length - 1;
   const each = Math.ceil(SCAN / pieces) + (pieces > 1 ? 3 : 0);
   const places = Array.from({ length: pieces * each }, (_, j) => (j + 0.5) / each);
