@@ -11,7 +11,7 @@ import { contactRows } from './contact-rows.ts';
 import { longRows } from './long-runs.ts';
 import type { BenchRow, Ratio } from './ratio.ts';
 import { starterRows } from './starter-rows.ts';
-import { wholeRun } from './whole-run.ts';
+import { wholeRuns } from './whole-run.ts';
 
 const ARGUMENTS = Float64Array.from({ length: 4096 }, (_, i) => -30 + (80 * ((i * 2654435761) % 4096)) / 4096);
 const VALUES = ARGUMENTS.map((eta) => fermiHalf(eta));
@@ -72,7 +72,7 @@ const rows: BenchRow[] = [
   { name: '30 layers, cold, 0.1 mV', ...ratio(4, () => { for (let k = 0; k < 4; k++) sink += solved(thirty).quality.meshNodes; }) },
   { name: 'five-layer stack, warm, one doping moved', ...ratio(10, () => { for (let k = 0; k < 10; k++) sink += solved(nudged, first).quality.meshNodes; }) },
 ];
-rows.push(...starterRows(ratio), ...contactRows(ratio), ...longRows(ratio), wholeRun(ratio));
+rows.push(...starterRows(ratio), ...contactRows(ratio), ...longRows(ratio), ...wholeRuns(ratio));
 for (const row of rows) console.log(`${row.name.padEnd(60)} ${row.timesExp.toPrecision(3).padStart(10)} x Math.exp ${timeText(row.ns).padStart(9)}${row.goal === undefined ? '' : `  goal ${row.goal.toExponential(0)}`}`);
 console.log(JSON.stringify({ rows, cold: first.quality, tight: tight.quality, wafer: solved(thick).quality, finite: Number.isFinite(sink) }));
 

@@ -8,7 +8,7 @@ describe('the rail as figures', () => {
     for (const make of Object.values(STACKS)) {
       const result = make();
       const depth = result.layers[0].thickness_nm / 2;
-      const { ec, ev, ef } = hereAt(result, depth);
+      const { ec, ev } = hereAt(result, depth);
       const rows = railRows(result, depth, [-3, 3]);
       for (const share of [0.9, 0.5, 0.1]) expect(Math.min(...rows.map(({ occupancy }) => Math.abs(occupancy - share)))).toBeLessThan(1e-12);
       expect(rows.map(({ energy_eV }) => energy_eV)).toEqual(rows.map(({ energy_eV }) => energy_eV).sort((a, b) => b - a));
