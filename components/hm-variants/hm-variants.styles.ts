@@ -44,6 +44,20 @@ export const styles = css`
     --field-width: 11rem;
     margin-top: 0.5rem;
   }
+  .ends,
+  .end {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: flex-end;
+    gap: 0.4rem 0.6rem;
+  }
+  .ends {
+    gap: 0.4rem 1.5rem;
+  }
+  .end select {
+    max-width: min(20rem, 84vw);
+    text-overflow: ellipsis;
+  }
   .log li {
     overflow-wrap: anywhere;
   }

@@ -1,16 +1,16 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
-import { changeLog } from '../../src/state/change-log.ts';
 import type { Variant } from '../../src/state/variants.ts';
 import '../hm-field/hm-field.ts';
 import { tell, type VariantAct } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { panelLook } from '../shared/panel-look.ts';
+import './hm-change-log.ts';
 import { MOST_OVER, NO_VARIANTS, type VariantsShown, type VariantsView } from './variants-shown.ts';
 import { styles } from './hm-variants.styles.ts';
 
 /**
- * The variants of the project: copied, named, opened, put away and taken back; laid over the plate; compared in the ledger; and what was changed between two, in words.
+ * The variants of the project: copied, named, opened, put away and taken back; laid over the plate; compared in the ledger; below them what was changed between two of them or of their revisions.
  *
  * @fires hm-variant  an act on one of them
  * @fires hm-view     { variants: VariantsView }
@@ -53,7 +53,7 @@ export class HmVariants extends LitElement {
         <hm-field label="name of the next" .hint=${'such as "thin cap"'} .value=${this.wish} @field-accept=${(e: CustomEvent<string>) => (this.wish = e.detail)}></hm-field>
         <button type="button" @click=${() => this.add()}>Copy what is on the page as a variant</button>
       </div>
-      ${this.renderLog()} ${away.length === 0 ? nothing : this.renderAway(away)}
+      <hm-change-log .shown=${this.shown}></hm-change-log> ${away.length === 0 ? nothing : this.renderAway(away)}
       <p class="spoken" role="status">${over.length === 0 && against === null ? '' : this.spoken()}</p>`;
   }
 
@@ -77,17 +77,6 @@ export class HmVariants extends LitElement {
       ${count < 2 ? nothing : html`<button type="button" @click=${() => this.act({ act: 'remove', id })}>Put away<span class="spoken"> ${name}</span></button>`}
       ${known?.status === 'pending' ? html`<span class="doc">being solved</span>` : known?.status === 'refused' ? html`<span class="wrong">no result: ${known.reason}</span>` : nothing}
     </li>`;
-  }
-
-  /** From the one compared with, or else the first other one, to the one on the page. */
-  private renderLog(): TemplateResult | typeof nothing {
-    const { all, against } = this.shown;
-    const here = all.list.find(({ id }) => id === all.open)!;
-    const other = all.list.find(({ id }) => id === against) ?? all.list.find(({ id, removed }) => id !== all.open && !removed);
-    if (other === undefined) return nothing;
-    const changes = changeLog(other.design, here.design);
-    return html`<h3>What leads from ${other.name} to ${here.name}</h3>
-      ${changes.length === 0 ? html`<p>Nothing: the two are equal.</p>` : html`<ul class="log">${changes.map((sentence) => html`<li>${sentence}</li>`)}</ul>`}`;
   }
 
   private renderAway(away: readonly Variant[]): TemplateResult {

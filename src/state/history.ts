@@ -95,7 +95,7 @@ export class History {
 
   /** Takes up what an earlier visit remembered; something else than a record of steps leaves it empty. */
   restore(record: unknown): void {
-    const { past, future } = isRecord(record) ? record : { past: [], future: [] };
+    const { past, future } = readHistory(record);
     this.#past = [...past];
     this.#future = [...future];
     this.#burst = null;
@@ -129,6 +129,11 @@ export class History {
     }
     if (keep < this.#past.length) this.#past = this.#past.slice(this.#past.length - keep);
   }
+}
+
+/** @returns what an earlier visit kept, or an empty history where that is something else than a record of steps */
+export function readHistory(record: unknown): HistoryRecord {
+  return isRecord(record) ? record : { past: [], future: [] };
 }
 
 function isRecord(value: unknown): value is HistoryRecord {

@@ -7,7 +7,7 @@ import type { HmPlate } from '../../components/hm-plate/hm-plate.ts';
 import type { HmVariants } from '../../components/hm-variants/hm-variants.ts';
 import { heldVariants, type VariantsShown } from '../../components/hm-variants/variants-shown.ts';
 import { setTemperature, setThickness } from '../../src/state/commands/index.ts';
-import { addVariant, loneVariant, openVariant, parked, removeVariant, type VariantList } from '../../src/state/variants.ts';
+import { addVariant, loneVariant, parked, removeVariant, type VariantList } from '../../src/state/variants.ts';
 import { expectAccessible } from './accessible.ts';
 import { button, heard } from './heard.ts';
 import { mounted, sample, settled, solved } from './sample.ts';
@@ -60,14 +60,6 @@ describe('the variants of a project', () => {
     expect(text(element)).to.contain('no result: it is too cold');
     expect(heldVariants({ over: ['b', 'b', 'c', 'gone', 7], against: 'c' }, three)).to.deep.equal({ over: ['b'], against: null });
     expect(heldVariants('nonsense', three)).to.deep.equal({ over: [], against: null });
-  });
-
-  it('tell in words what leads from one to the other', async () => {
-    const element = await put({ against: 'b' });
-    expect(text(element)).to.contain('What leads from cold to thick').and.to.match(/Thickness of anode: 900 nm, was /);
-    element.shown = shown({ all: openVariant(three, 'b'), against: 'base' });
-    await settled(element);
-    expect(text(element)).to.contain('the two are equal');
   });
 
   it('are usable from 360 px', async () => {
