@@ -1,4 +1,4 @@
-import { isRefusal, solveStack } from '../../solver/index.ts';
+import { isRefusal, solveStack, type Profiles, type Solution, type Stack } from '../../solver/index.ts';
 import { complaintLine } from '../design/complaint.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
@@ -6,7 +6,8 @@ import { resultOf } from '../result/from-solution.ts';
 import { provenanceOf } from '../result/provenance.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
-import { uncertaintiesOf, type Tolerances } from './uncertainties.ts';
+import { CORNER_ACCURACY } from './point.ts';
+import { uncertaintiesOf, type Tolerances, type Uncertainty } from './uncertainties.ts';
 
 /** A requirement with the stack solved where it is at its worst. */
 export interface Corner {
@@ -35,28 +36,73 @@ function difficulty(row: RequirementResult): number {
   return row.met ? score : Math.min(score, 0);
 }
 
+/** A temperature, and how far each tolerance is moved there as a signed count of its whole: what a judgement tells of a corner. */
+export interface CornerPlace {
+  temperature_K: number;
+  tolerances: readonly { name: string; count: number; words?: string }[];
+}
+
+/** One tolerance that is moved at a corner, with the stack before and after it. */
+export interface CornerMove {
+  of: Uncertainty;
+  count: number;
+  before: Stack;
+  after: Stack;
+}
+
 /**
- * The stack at the worst case of a requirement: its temperature, and each tolerance moved as far as it was there.
+ * The stack at a corner, its tolerances moved one after the other.
+ *
+ * @returns why there is none, in words
+ */
+export function cornerStack(design: Design, place: CornerPlace, set: Readonly<Record<string, string>>, tolerances: Tolerances): { stack: Stack; moves: CornerMove[] } | string {
+  const left = uncertaintiesOf(design, set, tolerances);
+  const moved: { of: Uncertainty; count: number }[] = [];
+  for (const { name, count, words } of place.tolerances) {
+    // A variable may be called as a tolerance of the stack is: the words tell them apart, else their order, and none is moved twice.
+    const i = left.findIndex((u) => u.label === name && (words === undefined || u.words(count) === words));
+    if (i < 0) return 'it was judged over other tolerances';
+    moved.push({ of: left.splice(i, 1)[0], count });
+  }
+  const reading = toStack(design, set, Object.fromEntries(moved.flatMap(({ of, count }) => (of.variable === null ? [] : [[of.variable, count]]))));
+  if (!reading.ok) return complaintLine(reading.complaints[0]);
+  let stack: Stack = { ...reading.stack, temperature: place.temperature_K };
+  const moves = moved.map(({ of, count }): CornerMove => {
+    const before = stack;
+    stack = of.apply(stack, count);
+    return { of, count, before, after: stack };
+  });
+  return { stack, moves };
+}
+
+/**
+ * A corner's stack, solved as exactly as the search for worst cases does.
+ *
+ * @returns why there is no accepted answer, in words
+ */
+export function solveCornerStack(stack: Stack, warmStart?: Profiles): Solution | string {
+  try {
+    let solution = solveStack(stack, { accuracy: CORNER_ACCURACY, ...(warmStart ? { warmStart } : {}) });
+    if (isRefusal(solution) && warmStart) solution = solveStack(stack, { accuracy: CORNER_ACCURACY });
+    return isRefusal(solution) ? solution.reason : solution;
+  } catch (error) {
+    // What the solver refuses at its door, such as a gap that closes at this temperature.
+    if (!(error instanceof RangeError)) throw error;
+    return error.message;
+  }
+}
+
+/**
+ * The result at the worst case of a requirement: its temperature, and each tolerance moved as far as it was there.
  *
  * @param row  of a judgement of this very design with the same `set` and tolerances
  */
 export function solveCorner(design: Design, row: RequirementResult, options: { set?: Readonly<Record<string, string>>; tolerances?: Tolerances } = {}): CornerAnswer {
   const { set = {}, tolerances = 'all' } = options;
   if (row.at === null) return { kind: 'none', reason: 'the requirement has no worst case' };
-  const uncertainties = uncertaintiesOf(design, set, tolerances);
-  // By label and words: a variable may be called as a tolerance of the stack is.
-  const counts = row.at.tolerances.map(({ name, count, words }) => ({ count, of: uncertainties.find((u) => u.label === name && u.words(count) === words) }));
-  if (counts.some(({ of }) => of === undefined)) return { kind: 'none', reason: 'the requirement was judged over other tolerances' };
-  const moves = Object.fromEntries(counts.flatMap(({ of, count }) => (of!.variable === null ? [] : [[of!.variable, count]])));
-  const reading = toStack(design, set, moves);
-  if (!reading.ok) return { kind: 'none', reason: complaintLine(reading.complaints[0]) };
-  const stack = counts.reduce((moved, { of, count }) => of!.apply(moved, count), { ...reading.stack, temperature: row.at.temperature_K });
-  try {
-    const solution = solveStack(stack);
-    if (isRefusal(solution)) return { kind: 'none', reason: solution.reason };
-    return { kind: 'corner', corner: { requirement: row, result: resultOf(solution, design.title, provenanceOf(design, set)) } };
-  } catch (error) {
-    if (!(error instanceof RangeError)) throw error;
-    return { kind: 'none', reason: error.message };
-  }
+  const at = cornerStack(design, row.at, set, tolerances);
+  if (typeof at === 'string') return { kind: 'none', reason: at };
+  const solution = solveCornerStack(at.stack);
+  if (typeof solution === 'string') return { kind: 'none', reason: solution };
+  return { kind: 'corner', corner: { requirement: row, result: resultOf(solution, design.title, provenanceOf(design, set)) } };
 }

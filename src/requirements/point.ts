@@ -23,7 +23,7 @@ export interface Reading {
 }
 
 /** Accepted estimate of the mesh error in psi, V: 4e-4 of kT at 300 K, so that corners can be told apart. */
-const ACCURACY = 1e-5;
+export const CORNER_ACCURACY = 1e-5;
 
 /**
  * Solves a design at points of its temperature range and tolerances. No point is solved twice. Every solve starts from the first accepted
@@ -66,9 +66,9 @@ export class PointSolver {
     const stack = this.#stackAt(point);
     if (typeof stack === 'string') return refused(stack);
     try {
-      let bands = solveBands(stack, { accuracy: ACCURACY, ...(this.#start ? { warmStart: this.#start } : {}) });
+      let bands = solveBands(stack, { accuracy: CORNER_ACCURACY, ...(this.#start ? { warmStart: this.#start } : {}) });
       // A start from far away must not cost an answer.
-      if (isRefusal(bands) && this.#start) bands = solveBands(stack, { accuracy: ACCURACY });
+      if (isRefusal(bands) && this.#start) bands = solveBands(stack, { accuracy: CORNER_ACCURACY });
       if (isRefusal(bands)) return refused(bands.reason);
       this.#start ??= bands.profiles;
       const solved = { result: askedResult(bands), stack };

@@ -1,31 +1,23 @@
-import { isRefusal, solveStack, type Profiles, type Stack } from '../../solver/index.ts';
+import type { Profiles, Stack } from '../../solver/index.ts';
 import { align } from '../../solver/alignment.ts';
-import { complaintLine } from '../design/complaint.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import { readVariables } from '../design/variables.ts';
 import { KINDS, type KindName } from '../quantity/kinds.ts';
 import { inUnit, type Value } from '../quantity/units.ts';
-import { uncertaintiesOf, type Tolerances, type Uncertainty } from '../requirements/uncertainties.ts';
+import { cornerStack, solveCornerStack, type CornerPlace } from '../requirements/corner.ts';
+import type { Tolerances, Uncertainty } from '../requirements/uncertainties.ts';
 import { resultOf } from '../result/from-solution.ts';
 import { contextAt, type BarrierShift, type Context, type Shifts } from './context.ts';
 import { formula } from './formula.ts';
 import { DESIGN, known, WORKED, type Known, type Origin } from './known.ts';
 import { step, type Step } from './step.ts';
 
-/** A temperature and tolerances by name, each as a signed count of its whole: what a judgement tells of a corner. */
-export interface CornerPlace {
-  temperature_K: number;
-  tolerances: readonly { name: string; count: number }[];
-}
-
-export interface SolvedCorner {
+interface CornerWorkings {
   context: Context;
   /** a line a tolerance that is moved */ steps: Step[];
 }
 
-/** Accepted estimate of the mesh error in psi, V: that of the search for worst cases. */
-const ACCURACY = 1e-5;
 const NO_PROVENANCE = { program: '', model: '', presets: '', design: '' } as const;
 /** Where a default tolerance stands, as src/requirements/uncertainties.ts has it. */
 const DEFAULT: Origin = { from: 'usual tolerance' };
@@ -36,32 +28,18 @@ const DEFAULT: Origin = { from: 'usual tolerance' };
  * @param judged  start from where a judgement of all requirements starts, so that the figures are its own to the last digit
  * @returns why there is no answer there, in words
  */
-export function solvedCorner(design: Design, place: CornerPlace, set: Readonly<Record<string, string>> = {}, tolerances: Tolerances = 'all', judged = false): SolvedCorner | string {
-  const all = uncertaintiesOf(design, set, tolerances);
-  const moved = place.tolerances.map(({ name, count }) => ({ count, of: pick(all, name, place, count) }));
-  if (moved.some(({ of }) => of === undefined)) return 'it was judged over other tolerances';
-  const moves = moved as { of: Uncertainty; count: number }[];
-  const byVariable = Object.fromEntries(moves.flatMap(({ of, count }) => (of.variable === null ? [] : [[of.variable, count]])));
-  const reading = toStack(design, set, byVariable);
-  if (!reading.ok) return complaintLine(reading.complaints[0]);
+export function cornerContext(design: Design, place: CornerPlace, set: Readonly<Record<string, string>> = {}, tolerances: Tolerances = 'all', judged = false): CornerWorkings | string {
+  const at = cornerStack(design, place, set, tolerances);
+  if (typeof at === 'string') return at;
+  const { stack, moves } = at;
   const shifts = { barriers: {} as Shifts['barriers'], offsets: new Map<number, { stack: Stack; amount: number }>() };
-  let stack: Stack = { ...reading.stack, temperature: place.temperature_K };
-  for (const { of, count } of moves) {
-    const next = of.apply(stack, count);
-    if (of.default?.of === 'barrier') shifts.barriers[of.default.at === 0 ? 'top' : 'bottom'] = barrierShift(design, of, count, stack);
-    if (of.default?.of === 'offset') shifts.offsets.set(of.default.at, { stack, amount: align(next).interfaces[of.default.at].deltaEc - align(stack).interfaces[of.default.at].deltaEc });
-    stack = next;
+  for (const { of, count, before, after } of moves) {
+    if (of.default?.of === 'barrier') shifts.barriers[of.default.at === 0 ? 'top' : 'bottom'] = barrierShift(design, of, count, before);
+    if (of.default?.of === 'offset') shifts.offsets.set(of.default.at, { stack: before, amount: align(after).interfaces[of.default.at].deltaEc - align(before).interfaces[of.default.at].deltaEc });
   }
-  try {
-    const warmStart = judged ? startOf(design, set, place) : undefined;
-    let solution = solveStack(stack, { accuracy: ACCURACY, ...(warmStart ? { warmStart } : {}) });
-    if (isRefusal(solution) && warmStart) solution = solveStack(stack, { accuracy: ACCURACY });
-    if (isRefusal(solution)) return solution.reason;
-    return { context: contextAt(design, stack, resultOf(solution, design.title, NO_PROVENANCE), shifts), steps: moves.map(({ of, count }) => moveStep(design, set, of, count)) };
-  } catch (error) {
-    if (!(error instanceof RangeError)) throw error;
-    return error.message;
-  }
+  const solution = solveCornerStack(stack, judged ? startOf(design, set, place) : undefined);
+  if (typeof solution === 'string') return solution;
+  return { context: contextAt(design, stack, resultOf(solution, design.title, NO_PROVENANCE), shifts), steps: moves.map(({ of, count }) => moveStep(design, set, of, count)) };
 }
 
 /** The first point that a judgement solves, from which all others start; none where the corner is that point itself, or it has no answer. */
@@ -71,15 +49,8 @@ function startOf(design: Design, set: Readonly<Record<string, string>>, place: C
   const { requirements, stack, temperatureRange } = reading;
   const temperature = temperatureRange === null || requirements.some(({ over }) => over === 'temperature') ? stack.temperature : temperatureRange[0];
   if (place.tolerances.length === 0 && place.temperature_K === temperature) return undefined;
-  const first = solveStack({ ...stack, temperature }, { accuracy: ACCURACY });
-  return isRefusal(first) ? undefined : first.profiles;
-}
-
-/** Two tolerances may bear one name, a variable's and a default's: then the one of this place in the list. */
-function pick(all: readonly Uncertainty[], name: string, { tolerances }: CornerPlace, count: number): Uncertainty | undefined {
-  const same = all.filter(({ label }) => label === name);
-  const before = tolerances.filter((t) => t.name === name);
-  return same[Math.max(0, before.findIndex((t) => t.count === count))] ?? same[0];
+  const first = solveCornerStack({ ...stack, temperature });
+  return typeof first === 'string' ? undefined : first.profiles;
 }
 
 function barrierShift(design: Design, { default: of }: Uncertainty, count: number, stack: Stack): BarrierShift {

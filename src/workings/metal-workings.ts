@@ -5,7 +5,7 @@ import type { PanelColumn } from '../quantity/panel-quantities.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
 import { contactWorkings } from './contact-workings.ts';
 import type { Context } from './context.ts';
-import { againWords, solvedCorner } from './corner.ts';
+import { againWords, cornerContext } from './corner.ts';
 import { metalFigure } from './panel-figures.ts';
 import type { Found } from './workings.ts';
 
@@ -28,7 +28,7 @@ export function metalWorkings({ column, design, side, temperature_K, row, value,
   const nominal: MetalPoint = { temperature_K, tolerances: [] };
   const place = column === 'least' || column === 'most' || column === 'worst' ? row.points[column] : nominal;
   if (place === null) return { context: null, found: { steps: [], remarks: [`There is no figure: ${row.reason ?? 'it could not be worked out'}.`], rests: [] } };
-  const corner = solvedCorner({ ...design, [side]: (value ?? row).contact, requirements: [] }, place, {}, tolerances);
+  const corner = cornerContext({ ...design, [side]: (value ?? row).contact, requirements: [] }, place, {}, tolerances);
   if (typeof corner === 'string') return { context: null, found: { steps: [], remarks: [`There is no figure: ${corner}.`], rests: [] } };
   const { context, steps } = corner;
   const index = context.result.contacts.findIndex((c) => c.side === side);

@@ -6,7 +6,7 @@ import type { Tolerances } from '../requirements/uncertainties.ts';
 import type { RequirementResult } from '../result/types.ts';
 import type { PanelColumn } from '../quantity/panel-quantities.ts';
 import type { Context } from './context.ts';
-import { againWords, solvedCorner } from './corner.ts';
+import { againWords, cornerContext } from './corner.ts';
 import { formula } from './formula.ts';
 import { CM_PER_NM } from '../../solver/units.ts';
 import { DESIGN, known, WORKED, type Known } from './known.ts';
@@ -29,7 +29,7 @@ export interface RequirementAsked {
 export function requirementWorkings({ column, design, row, index, tolerances, set = {} }: RequirementAsked): { found: Found; context: Context | null } {
   if (column === 'limit') return { context: null, found: { steps: typeof row.limit === 'boolean' ? [] : [step(known('L', 'limit', row.limit * scaleOf(row), row.unit, WORKED, { scale: scaleOf(row) }), formula`${limitOf(design, row, index)}`)], remarks: [limitRemark(design, row, index)], rests: [] } };
   if (row.at === null) return { context: null, found: { steps: [], remarks: [`There is no figure: ${row.unanswered?.reason ?? 'no point has an answer'}.`], rests: [] } };
-  const corner = solvedCorner(design, row.at, set, tolerances, Object.keys(set).length === 0);
+  const corner = cornerContext(design, row.at, set, tolerances, Object.keys(set).length === 0);
   if (typeof corner === 'string') return { context: null, found: { steps: [], remarks: [`The corner could not be solved once more: ${corner}.`], rests: [] } };
   const { context, steps } = corner;
   const remarks = cornerRemarks(row);

@@ -8,7 +8,7 @@ import { sizingSet } from '../requirements/sized-value.ts';
 import type { Tolerances } from '../requirements/uncertainties.ts';
 import type { RequirementResult } from '../result/types.ts';
 import type { Context } from './context.ts';
-import { solvedCorner } from './corner.ts';
+import { cornerContext } from './corner.ts';
 import type { Expression } from './expression.ts';
 import { formula } from './formula.ts';
 import { mi, mn, mo, mrow, signOf, type MathNode } from './math.ts';
@@ -70,7 +70,7 @@ function closing(answer: SizedAnswer, at: Known, beyond: Known): Step {
 
 /** The requirement at one side of an edge, at the corner that ends the interval: its figure, and the score that comes of it. */
 function side(design: Design, answer: SizedAnswer, row: RequirementResult, index: number, tolerances: Tolerances, { value, mark }: { value: number; mark: 'in' | 'out' }): { steps: Step[]; context: Context | null } {
-  const corner = solvedCorner(design, row.at!, sizingSet(answer, value), tolerances);
+  const corner = cornerContext(design, row.at!, sizingSet(answer, value), tolerances);
   const v = valueOf(answer, `v_${mark}`, `${answer.variable} on the ${mark === 'in' ? 'inner' : 'outer'} side`, value);
   if (typeof corner === 'string') return { context: null, steps: [] };
   const figure = requirementFigure(corner.context, row);

@@ -168,7 +168,7 @@ describe('the worst corner', () => {
     if (answer.kind !== 'corner') throw new Error(answer.reason);
     const { result } = answer.corner;
     expect(result.conditions.temperature_K).toBe(row.at!.temperature_K);
-    expect(result.contacts[0].rho_c_ohm_cm2! / (row.worst as number)).toBeCloseTo(1, 2);
+    expect(result.contacts[0].rho_c_ohm_cm2! / (row.worst as number)).toBeCloseTo(1, 4);
   });
 
   it('is named in the caption of its plate, with what it comes to there', () => {
@@ -182,7 +182,7 @@ describe('the worst corner', () => {
 
   it('is refused where the row is of another judgement', () => {
     const { design, requirements } = inputOf('graded-cap');
-    expect(solveCorner(design, requirements![0], { tolerances: 'none' })).toEqual({ kind: 'none', reason: 'the requirement was judged over other tolerances' });
+    expect(solveCorner(design, requirements![0], { tolerances: 'none' })).toEqual({ kind: 'none', reason: 'it was judged over other tolerances' });
   });
 });
 
