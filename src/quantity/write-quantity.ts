@@ -1,4 +1,4 @@
-import type { KindName } from './kinds.ts';
+import { KINDS, type KindName } from './kinds.ts';
 
 /**
  * Writes a number as an engineer would read it: digits without trailing zeros, an exponent where it is shorter.
@@ -20,13 +20,9 @@ function trimmed(text: string): string {
   return text.includes('.') ? text.replace(/\.?0+$/, '') : text;
 }
 
-/** Units that a value may be written in, from the solver's unit of its kind: the largest one that it fills. */
+/** Units that a value may be written in: the largest one that it fills. Kinds that are not here are written in the solver's unit. */
 const SCALES: Partial<Record<KindName, readonly { unit: string; size: number }[]>> = {
   length: [{ unit: 'cm', size: 1 }, { unit: 'mm', size: 0.1 }, { unit: 'um', size: 1e-4 }, { unit: 'nm', size: 1e-7 }],
-  energy: [{ unit: 'eV', size: 1 }],
-  density: [{ unit: 'cm^-3', size: 1 }],
-  sheetDensity: [{ unit: 'cm^-2', size: 1 }],
-  temperature: [{ unit: 'K', size: 1 }],
 };
 
 /**
@@ -36,8 +32,7 @@ const SCALES: Partial<Record<KindName, readonly { unit: string; size: number }[]
  * @param unit   keep this unit, if the kind has it
  */
 export function writeQuantity(value: number, kind: KindName, digits = 4, unit?: string): string {
-  const scales = SCALES[kind];
-  if (!scales) throw new RangeError(`no way to write ${kind}`);
+  const scales = SCALES[kind] ?? [{ unit: KINDS[kind].unit, size: 1 }];
   const scale = scales.find((s) => s.unit === unit) ?? scales.find((s) => Math.abs(value) >= s.size * 0.9999) ?? scales[scales.length - 1];
-  return `${writeNumber(value / scale.size, digits)} ${scale.unit}`;
+  return `${writeNumber(value / scale.size, digits)} ${scale.unit}`.trimEnd();
 }

@@ -6,8 +6,7 @@ import type { SizedAnswer } from './size.ts';
 /** A value that a sizing looked at, as text for the variable: the unit that people use, so many digits. */
 export function valueText({ unit }: Pick<SizedAnswer, 'unit'>, value: number, digits = 4): string {
   const kind = (Object.keys(KINDS) as KindName[]).find((name) => KINDS[name].unit === unit);
-  if (kind === 'length' || kind === 'energy' || kind === 'density' || kind === 'sheetDensity' || kind === 'temperature') return writeQuantity(value, kind, digits);
-  return unit === '' ? writeNumber(value, digits) : `${writeNumber(value, digits)} ${unit}`;
+  return kind === undefined ? `${writeNumber(value, digits)} ${unit}` : writeQuantity(value, kind, digits);
 }
 
 /** Digits of an exact number in print. */

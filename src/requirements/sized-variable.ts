@@ -4,7 +4,7 @@ import { evaluate, ExpressionError, type Scope } from '../quantity/expression.ts
 import { KINDS, type KindName } from '../quantity/kinds.ts';
 import { inUnit, type Value } from '../quantity/units.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
-import { writeNumber, writeQuantity } from '../quantity/write-quantity.ts';
+import { writeQuantity } from '../quantity/write-quantity.ts';
 
 /** The variable to size, in the solver's unit of its kind. */
 export interface SizedVariable {
@@ -75,10 +75,8 @@ export function exactText({ unit }: SizedVariable, value: number): string {
 }
 
 /** A value for people: "23 nm". */
-export function shownText({ kind, unit }: SizedVariable, value: number, digits = 4): string {
-  const written: readonly KindName[] = ['length', 'energy', 'density', 'sheetDensity', 'temperature'];
-  if (written.includes(kind)) return writeQuantity(value, kind, digits);
-  return unit === '' ? writeNumber(value, digits) : `${writeNumber(value, digits)} ${unit}`;
+export function shownText({ kind }: SizedVariable, value: number, digits = 4): string {
+  return writeQuantity(value, kind, digits);
 }
 
 /** The first kind whose unit the value has. */
