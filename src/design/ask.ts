@@ -11,6 +11,7 @@ export interface Bounds {
   most?: [number, string];
   /** what it bounds, with its article: "a thickness"; by default the kind's words */ of?: string;
   /** zero is refused as well as what lies below */ positive?: boolean;
+  /** where a tolerance carries a value past `least` or `most` that lies within them by itself, it ends there: no more than all atoms are active */ holds?: boolean;
 }
 
 /**
@@ -19,7 +20,9 @@ export interface Bounds {
  */
 export class Asker {
   readonly complaints: Complaint[] = [];
-  constructor(readonly scope: Scope) {}
+
+  /** @param unmoved  where `scope` has values moved within their tolerances: the same without a move */
+  constructor(readonly scope: Scope, readonly unmoved: (() => Scope) | null = null) {}
 
   quantity(text: unknown, kind: KindName, path: string, bounds: Bounds = {}): number {
     const reading = readQuantity(text, kind, this.scope);
@@ -27,9 +30,16 @@ export class Asker {
     const { value } = reading;
     const refuse = (limit: string): number => this.wrong(path, `${capital(bounds.of ?? (kind === 'number' ? 'this' : KINDS[kind].words))} must be ${limit}; ${quoted(text)} was given`);
     if (bounds.positive && !(value > 0)) return refuse('above zero');
-    if (bounds.least && !(value >= bounds.least[0] * (1 - Math.sign(bounds.least[0]) * 1e-12))) return refuse(`at least ${bounds.least[1]}`);
-    if (bounds.most && !(value <= bounds.most[0] * (1 + Math.sign(bounds.most[0]) * 1e-12))) return refuse(`at most ${bounds.most[1]}`);
+    if (bounds.least && below(value, bounds.least[0])) return this.#ends(text, kind, bounds) ? bounds.least[0] : refuse(`at least ${bounds.least[1]}`);
+    if (bounds.most && above(value, bounds.most[0])) return this.#ends(text, kind, bounds) ? bounds.most[0] : refuse(`at most ${bounds.most[1]}`);
     return value;
+  }
+
+  /** Whether it is a tolerance alone that carries the value past its bounds, and ends at them. */
+  #ends(text: unknown, kind: KindName, { holds = false, least, most }: Bounds): boolean {
+    if (!holds || this.unmoved === null) return false;
+    const reading = readQuantity(text, kind, this.unmoved());
+    return reading.ok && !(least && below(reading.value, least[0])) && !(most && above(reading.value, most[0]));
   }
 
   /** undefined stays undefined */
@@ -42,6 +52,9 @@ export class Asker {
     return NaN;
   }
 }
+
+const below = (value: number, least: number): boolean => !(value >= least * (1 - Math.sign(least) * 1e-12));
+const above = (value: number, most: number): boolean => !(value <= most * (1 + Math.sign(most) * 1e-12));
 
 function capital(words: string): string {
   return words[0].toUpperCase() + words.slice(1);

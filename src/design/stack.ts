@@ -27,7 +27,7 @@ const THICKNESS = { of: 'a thickness', least: [1e-9, '0.01 nm'] as [number, stri
 export function toStack(design: Design, set: Readonly<Record<string, string>> = {}, moves: Readonly<Record<string, number>> = {}): StackReading {
   const { temperature: setTemperature, ...overrides } = set;
   const variables = readVariables(design.variables ?? [], overrides, moves);
-  const ask = new Asker(variables.scope);
+  const ask = new Asker(variables.scope, Object.values(moves).some((count) => count !== 0) ? () => readVariables(design.variables ?? [], overrides).scope : null);
   ask.complaints.push(...variables.complaints);
   const catalogue = catalogueOf(design.custom, ask.complaints);
   const { conditions } = design;

@@ -13,6 +13,7 @@ export type Tolerance = { kind: 'share'; share: number } | { kind: 'amount'; amo
  */
 export function readTolerance(text: string, value: Value, scope: Scope): Tolerance {
   const plain = normalise(text).replace(/^(?:±|\+\/-|\+-)\s*/, '');
+  if (plain.startsWith('-')) throw new ExpressionError('is negative; a tolerance counts to both sides, write it without the sign');
   const percent = /^(\d+\.?\d*|\.\d+)\s*%$/.exec(plain);
   if (percent) {
     const share = Number(percent[1]) / 100;
@@ -27,7 +28,7 @@ export function readTolerance(text: string, value: Value, scope: Scope): Toleran
     throw new ExpressionError("is not of the kind of the variable's value; write a share such as \"10 %\", or an amount in the unit of the value");
   }
   if (isUnitValue(value) !== isUnitValue(amount)) throw new ExpressionError("is not of the kind of the variable's value; write a share such as \"10 %\", or an amount in the unit of the value");
-  if (sizeOf(amount) < 0) throw new ExpressionError('is negative; a tolerance counts to both sides');
+  if (sizeOf(amount) < 0) throw new ExpressionError('is negative; a tolerance counts to both sides, write it without the sign');
   return { kind: 'amount', amount };
 }
 

@@ -71,7 +71,8 @@ export class MovedStacks {
   #partly(moves: Readonly<Record<string, number>>): Stack | null {
     const { design, nominal } = this;
     if (!this.#variables) return null;
-    const ask = new Asker(this.#variables(moves));
+    const variables = this.#variables;
+    const ask = new Asker(variables(moves), () => variables({}));
     const layers = nominal.layers.map((layer, l) => this.#layer(layer, l, ask));
     if (ask.complaints.length > 0 || layers.some(({ thickness }) => !(thickness > PLAIN_THICKNESS[0] && thickness < PLAIN_THICKNESS[1]))) return null;
     const last = layers.length - 1;

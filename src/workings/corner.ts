@@ -78,9 +78,11 @@ function moveStep(design: Design, set: Readonly<Record<string, string>>, of: Unc
   const path = `variables ${name}`;
   const sign = name.replace(/_/g, '');
   const v = known(sign, `${name} as the design has it`, value, unit, DESIGN, { path });
-  const result = known(`${sign}_c`, `${name} at this corner`, plain(there.scope.value(name) as Value)[0], unit, WORKED);
-  if (tolerance.kind === 'share') return step(result, formula`${v} * (1 + ${c} * ${known('t', `tolerance of ${name}`, tolerance.share, '%', DESIGN, { scale: 0.01, path: `${path}.tolerance` })})`);
-  return step(result, formula`${v} + ${c} * ${known('t', `tolerance of ${name}`, plain(tolerance.amount)[0], unit, DESIGN, { path: `${path}.tolerance` })}`);
+  const at = plain(there.scope.value(name) as Value)[0];
+  const result = known(`${sign}_c`, `${name} at this corner`, at, unit, WORKED);
+  const note = unit === '' && (at < 0 || at > 1) ? 'An active or compensated share ends at 0 and at 1.' : '';
+  if (tolerance.kind === 'share') return step(result, formula`${v} * (1 + ${c} * ${known('t', `tolerance of ${name}`, tolerance.share, '%', DESIGN, { scale: 0.01, path: `${path}.tolerance` })})`, note);
+  return step(result, formula`${v} + ${c} * ${known('t', `tolerance of ${name}`, plain(tolerance.amount)[0], unit, DESIGN, { path: `${path}.tolerance` })}`, note);
 }
 
 /** A value in the solver's unit of its kind. */

@@ -27,6 +27,7 @@ describe('complaints', () => {
     ['a bare number in quotes', (d) => { d.layers[0].thickness = '200'; }, /^layers\[0\]\.thickness: '200' has no unit; a length is wanted here/],
     ['a negative thickness', (d) => { d.layers[0].thickness = '-5 nm'; }, /^layers\[0\]\.thickness: A thickness must be at least 0\.01 nm; '-5 nm' was given$/],
     ['a thickness of kilometres', (d) => { d.layers[0].thickness = '1e5 m'; }, /A thickness must be at most 10 cm/],
+    ['a tolerance with a sign', (d) => { d.variables = [{ name: 'N', value: '1e17 cm^-3', tolerance: '-20 %' }]; }, /^variables\[0\]\.tolerance: '-20 %' is negative; a tolerance counts to both sides, write it without the sign$/],
     ['an unknown material', (d) => { d.layers[0].material = 'Sii'; }, /^layers\[0\]\.material: there is no material 'Sii'; did you mean Si/],
     ['an unknown dopant', (d) => { d.layers[0].dopants[0].dopant = 'Mg'; }, /^layers\[0\]\.dopants\[0\]\.dopant: there is no dopant 'Mg' in Si; in Si there are P, /],
     ['an unknown metal', (d) => { d.top = { kind: 'barrier', metal: 'Tii' }; }, /^top\.metal: there is no metal 'Tii'; did you mean Ti/],

@@ -216,6 +216,19 @@ describe('the worst case of a design', () => {
     expect(missing.unanswered?.reason).toMatch(/no saturation current density of bottom/);
   });
 
+  it('ends a tolerance of an active share at all atoms, and does not take a share beyond that for one', () => {
+    const design = contactDesign((d) => {
+      d.variables = [{ name: 'active', value: '0.9', tolerance: '20 %' }];
+      d.layers[0] = { name: 'cap', material: 'Si', thickness: '60 nm', dopants: [{ dopant: 'P', concentration: '1e20 cm^-3', activation: 'active' }] };
+    });
+    const over: Requirement = { quantity: 'electronDensity', of: 'cap', max: '5e19 cm^-3' };
+    const [row] = rowsOf(design, [over], { tolerances: 'stated' });
+    expect([row.unanswered, row.at?.words]).toEqual([null, '26.9 degC, active +20 %']);
+    expect(row.worst).toBe(resultOf({ ...design, variables: [] , layers: [{ ...design.layers[0], dopants: [{ dopant: 'P', concentration: '1e20 cm^-3' }] }, design.layers[1]] }).layers[0].n_cm3);
+    const wrong = judge({ ...design, requirements: [over] }, { set: { active: '1.1' }, tolerances: 'stated' });
+    expect(wrong).toMatchObject({ kind: 'complaints', complaints: [{ path: 'layers[0].dopants[0].activation' }] });
+  });
+
   it('tells where the solver refuses: a gap that closes on the way to the hot end', () => {
     const design = contactDesign((d) => {
       d.custom = { materials: [{ id: 'closing', gap: { law: 'linear', at300K: '0.3 eV', slope: '4 meV/K' }, affinity: '4 eV', permittivity: 12, electronMass: 1, holeMass: 1, source: 'invented' }] };

@@ -121,6 +121,17 @@ describe('a tolerance run', { timeout: 60_000 }, () => {
     expect(result.yield!.of).toBe(150);
   });
 
+  it('ends the draws of an active share at all atoms', async () => {
+    const design = structuredClone(toleranced);
+    design.variables = [...design.variables!, { name: 'active', value: '0.95', tolerance: '20 %' }];
+    const doped = design.layers.find(({ dopants = [] }) => dopants.length > 0)!;
+    doped.dopants = [{ ...doped.dopants![0], concentration: '1e18 cm^-3', activation: 'active' }];
+    const { result } = await varied(planned(design, { count: 60, tolerances: 'stated', figures: [`layers.${doped.name}.ionised.0.concentration_cm3`] }));
+    expect(result.gaps).toEqual([]);
+    expect(result.figures[0].most).toBe(1e18);
+    expect(result.inputs.find(({ label }) => label === 'active')).toMatchObject({ span: ['0.76', '1.14'] });
+  });
+
   it('covers every variation once', () => {
     const plan = planned(toleranced, { count: 101 });
     const job = variationJob(plan);
