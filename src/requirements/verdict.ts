@@ -14,20 +14,21 @@ export function requirementWords({ quantity, of, bound, limit, unit }: Pick<Requ
   return `${words} of ${of} at ${bound === 'max' ? 'most' : 'least'} ${withUnit(limit, unit)}`;
 }
 
-/** "2.5 times" or "0.12 eV"; of a requirement that is not met what is lacking, as a share of the limit or a negative difference. */
-export function marginWords({ margin, margin_kind, margin_unit, met, blocks }: RequirementResult): string {
+/** How far a requirement is from its limit, as a cell under "margin": "1.5 times" or "0.12 eV" where it is met, "missed by a factor 6.0e4" or "missed by 0.12 eV" where it is not. */
+export function marginWords(row: RequirementResult): string {
+  const { margin, margin_kind, margin_unit, met, blocks } = row;
   if (blocks) return met ? 'without end' : 'none, however high the limit';
   if (margin === null) return met ? 'without end' : 'none';
-  return margin_kind === 'ratio' ? `${rounded(margin, 3)} times` : withUnit(margin, margin_unit, 3);
+  const missed = verdictWords(row) === 'not met';
+  if (margin_kind === 'difference') return missed && margin < 0 ? `missed by ${withUnit(-margin, margin_unit, 3)}` : withUnit(margin, margin_unit, 3);
+  if (missed && margin === 0) return 'missed by more than any factor';
+  return missed && margin < 1 ? `missed by a factor ${rounded(1 / margin, 3)}` : `${rounded(margin, 3)} times`;
 }
 
-/** How far a requirement is from its limit, as a part of a sentence: "margin 1.5 times" where it is met, "missed by a factor 6.0e4" or "missed by 0.12 eV" where it is not. */
+/** The same as a part of a sentence: "margin 1.5 times", "missed by 0.12 eV". */
 export function standingWords(row: RequirementResult): string {
-  const { margin, margin_kind, margin_unit, blocks } = row;
-  if (verdictWords(row) !== 'not met' || blocks || margin === null) return `margin ${marginWords(row)}`;
-  if (margin_kind === 'difference') return margin < 0 ? `missed by ${withUnit(-margin, margin_unit, 3)}` : `margin ${marginWords(row)}`;
-  if (margin === 0) return 'missed by more than any factor';
-  return margin < 1 ? `missed by a factor ${rounded(1 / margin, 3)}` : `margin ${marginWords(row)}`;
+  const words = marginWords(row);
+  return words.startsWith('missed') ? words : `margin ${words}`;
 }
 
 /** The number that standingWords tells, in its unit: what it is missed by where it is not met; null of words. */

@@ -3,7 +3,7 @@ import { closeUpFigures, closeUpTitle } from '../drawing/contact-closeup-words.t
 import { drawCloseUp } from '../drawing/contact-closeup.ts';
 import { drawPlate, type PlateOptions } from '../drawing/plate.ts';
 import type { Corner } from '../requirements/corner.ts';
-import { marginWords, requirementWords, verdictWords } from '../requirements/verdict.ts';
+import { requirementWords, standingWords, verdictWords } from '../requirements/verdict.ts';
 import type { Design } from '../design/types.ts';
 import { figureText } from '../result/figure-text.ts';
 import type { Result } from '../result/types.ts';
@@ -43,7 +43,7 @@ export function comparisonSections(base: { name: string; design: Design; result:
 export function cornerSection({ requirement, result }: Corner, nominal: Result, plate: PlateLook, room: Room, look: SheetLook): Section {
   const words = printedUnits(requirement.at!.words);
   const { worst } = requirement;
-  const figure = worst === null || typeof worst === 'boolean' ? '' : ` There it is ${figureText(worst)}${requirement.unit === '' ? '' : ` ${printedUnits(requirement.unit)}`}; margin ${printedUnits(marginWords(requirement))}, ${verdictWords(requirement)}.`;
+  const figure = worst === null || typeof worst === 'boolean' ? '' : ` There it is ${figureText(worst)}${requirement.unit === '' ? '' : ` ${printedUnits(requirement.unit)}`}; ${printedUnits(standingWords(requirement))}, ${verdictWords(requirement)}.`;
   const drawing = drawPlate({ ...result, title: `At the worst corner: ${words}` }, {
     ...plate, variants: [{ name: 'nominal', result: nominal }], base: 'worst corner', style: look.plate, width: room.width, height: WHOLE * room.height, frame: 'full', prefix: 'sheet-corner',
     remarks: [`Worst corner of “${printedUnits(requirementWords(requirement))}”: ${words}.${figure}`],
