@@ -22,10 +22,6 @@ export interface LocalBands {
 /** Reference temperature of affinities, K. */
 const T_AFFINITY = 300;
 
-export function materialId(m: Material): string {
-  return m.id;
-}
-
 /**
  * Gap by the law that the material names, eV. @param T  K, > 0
  *

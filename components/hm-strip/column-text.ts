@@ -23,7 +23,7 @@ export function dopantName(row: DopantRow): string {
   return row.dopant ?? row.kind ?? 'dopant';
 }
 
-export function dopantText(row: DopantRow): string {
+function dopantText(row: DopantRow): string {
   return `${dopantName(row)} ${readable(shortText(row.concentration))}`;
 }
 

@@ -1,7 +1,7 @@
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
 import type { VariationResult, VariedFigureResult } from '../../src/tolerance/result.ts';
 import { strongestInputs } from '../../src/tolerance/result.ts';
-import { sharePercent as percent, type Yield } from '../../src/tolerance/statistics.ts';
+import { sharePercent as percent } from '../../src/tolerance/statistics.ts';
 
 export { percent };
 
@@ -10,10 +10,6 @@ const LEAST_SHARE = 1e-3;
 
 /** A figure to four digits, a dash where there is none. */
 export const figureWord = (value: number | null): string => (value === null ? '–' : writeNumber(Number(value.toPrecision(4))));
-
-export function yieldWords({ met, of, share, low, high }: Yield): string {
-  return `${percent(share)} (${met} of ${of}; true share ${percent(low)} to ${percent(high)} in 95 of 100 cases)`;
-}
 
 /** What the run came to, in one or two sentences. */
 export function runWords(result: VariationResult, stopped: boolean): string {

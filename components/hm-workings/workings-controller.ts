@@ -10,7 +10,7 @@ const TABLES: readonly unknown[] = ['layers', 'junctions', 'contacts'];
 export type AskedFigure = Asked | PanelFigure;
 
 /** Whether what an element told is a question for a figure's workings. */
-export function isAsked(told: unknown): told is AskedFigure {
+function isAsked(told: unknown): told is AskedFigure {
   if (typeof told !== 'object' || told === null) return false;
   if ('asked' in told && 'text' in told) return true;
   const { table, index, column } = told as Record<string, unknown>;

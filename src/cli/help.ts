@@ -1,7 +1,7 @@
 import type { Command } from './command.ts';
 
 /** Options that every command which prints takes besides its own. */
-export const EVERY = ['-o OUT, --output OUT', 'write what would be printed into a file, whole or not at all; - prints it'] as const;
+const EVERY = ['-o OUT, --output OUT', 'write what would be printed into a file, whole or not at all; - prints it'] as const;
 
 /** The list of all commands. */
 export function helpText(commands: readonly Command[]): string {

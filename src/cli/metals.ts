@@ -54,7 +54,7 @@ function ranked(design: Design, options: RankOptions, streams: Streams): RankAns
 }
 
 /** The ranking as a table in a terminal's fixed pitch, and the reasons of those without a figure. */
-export function rankingText(ranking: Ranking): string {
+function rankingText(ranking: Ranking): string {
   const { rows, majority } = ranking;
   const heading = ['metal', `phi_B${majority} (eV)`, 'rho_c (ohm cm^2)', 'least ... most', 'worst', 'regime', 'barrier', 'worst at'];
   const known = rows.filter(({ reason }) => reason === null);

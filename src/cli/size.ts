@@ -96,7 +96,7 @@ function pointsOf(text: string): number {
 }
 
 /** The answer in lines: each interval with what ends it, the best point with its margins, or the nearest miss with what blocks it. */
-export function sizedText(answer: SizedAnswer): string {
+function sizedText(answer: SizedAnswer): string {
   const { variable, intervals, best, blockers } = answer;
   const lines: string[] = [];
   for (const { from, to } of intervals) lines.push(`${variable} from ${from.text} to ${to.text} meets every requirement`, `  lower end: ${edgeWords(from)}`, `  upper end: ${edgeWords(to)}`);

@@ -84,7 +84,7 @@ interface Found {
 }
 
 /** Formulas of a material and of the ends that it is made of. */
-export function formulasOf(material: Material): Found[] {
+function formulasOf(material: Material): Found[] {
   const own = Object.entries(material.formulas ?? {}).map(([key, formula]): Found => ({ id: material.id, key, place: key, formula: formula as Formula }));
   if (isAlloy(material)) return [...own, ...formulasOf(material.first), ...formulasOf(material.second)];
   const gaps = [{ gap: material.gap, place: 'gap' }, ...(material.otherValleys ?? []).map(({ gap }, i) => ({ gap, place: `otherValleys[${i}].gap` }))];

@@ -64,7 +64,7 @@ export function closeUpFigures(c: CloseUp): CloseUpFigure[] {
 }
 
 /** "0.12 eV above EF; 80 % between 0.05 and 0.2 eV" */
-export function passageWords(c: CloseUp): string | null {
+function passageWords(c: CloseUp): string | null {
   const { words, curve } = carrierShown(c);
   if (curve === null || curve.peak_eV === null || curve.from_eV === null || curve.to_eV === null) return null;
   const [low, high] = [Math.min(curve.from_eV, curve.to_eV), Math.max(curve.from_eV, curve.to_eV)];

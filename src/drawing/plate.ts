@@ -57,7 +57,7 @@ export interface Plate extends Drawing {
   dimensions: PlateDimension[];
 }
 
-export const PLATE_DEFAULTS = {
+const PLATE_DEFAULTS = {
   width: 960, height: 540, depth: 'even', shading: 'occupancy', style: 'light', vacuum: false, levels: true, frame: 'bare', prefix: 'plate',
 } as const satisfies Partial<PlateOptions>;
 

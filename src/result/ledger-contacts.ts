@@ -33,7 +33,7 @@ export function closedFormRatio({ rho_c_ohm_cm2: solved, rho_c_closed_form_ohm_c
   return ratio !== null && Number.isFinite(ratio) && ratio > 0 ? ratio : null;
 }
 
-export function contactWords(contact: ContactResult): string {
+function contactWords(contact: ContactResult): string {
   return contact.kind === 'barrier' && contact.metal !== null ? contact.metal : KIND_WORDS[contact.kind];
 }
 

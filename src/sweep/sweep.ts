@@ -118,7 +118,7 @@ function chainRange(plan: SweepPlan, chunk: number): [from: number, to: number] 
 }
 
 /** The points of one chain, one at a time. */
-export function* chainPoints(plan: SweepPlan, chunk: number): Generator<SweepPoint, void, void> {
+function* chainPoints(plan: SweepPlan, chunk: number): Generator<SweepPoint, void, void> {
   const [from, to] = chainRange(plan, chunk);
   let last: Profiles | undefined;
   for (let index = from; index < to; index++) {

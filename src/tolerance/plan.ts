@@ -37,7 +37,7 @@ export interface VariationPlan {
   /** K: the design's own first, then the ends of its range where a requirement is held over it */ temperatures: number[];
 }
 
-export const MOST_VARIATIONS = 200_000;
+const MOST_VARIATIONS = 200_000;
 
 /**
  * Reads a tolerance run and says all that is wrong with it before anything is solved; a tolerance whose own ends the design does not take is wrong as well. Complaints have the paths "count", "seed", "figure",

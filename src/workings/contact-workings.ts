@@ -26,7 +26,7 @@ export interface End {
   /** +donors less acceptors, cm^-3 */ net: number;
 }
 
-export function endOf(context: Context, index: number): End {
+function endOf(context: Context, index: number): End {
   const row = context.result.contacts[index];
   const l = row.side === 'top' ? 0 : context.stack.layers.length - 1;
   const point = pointOf(context, l, row.side === 'top' ? 0 : context.stack.layers[l].thickness);

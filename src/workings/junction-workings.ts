@@ -28,7 +28,7 @@ export interface Sides {
   below: Point;
 }
 
-export function sidesOf(context: Context, index: number): Sides {
+function sidesOf(context: Context, index: number): Sides {
   return { above: pointOf(context, index, context.stack.layers[index].thickness), below: pointOf(context, index + 1, 0) };
 }
 
@@ -163,7 +163,7 @@ const fieldStep = (sides: Sides, a: Approximation): Step => {
 };
 
 /** Nodes of the solved profile that lie in the two layers of a junction: where a figure was read. */
-export function nodeOfField(context: Context, from: number, to: number, size: number): number {
+function nodeOfField(context: Context, from: number, to: number, size: number): number {
   const { profiles } = context;
   let found = from;
   for (let s = from; s <= to; s++) if (Math.abs(Math.abs(profiles.field[s]) - size) < Math.abs(Math.abs(profiles.field[found]) - size)) found = s;

@@ -51,7 +51,7 @@ export function offsetSteps(context: Context, index: number, sides: Sides): Offs
 }
 
 /** The published offset of a pair, and whether its second material lies below. */
-export function publishedRow(sides: Sides): { row: PublishedOffset; second: boolean } | null {
+function publishedRow(sides: Sides): { row: PublishedOffset; second: boolean } | null {
   const [a, b] = [sides.above.layer.material.id, sides.below.layer.material.id];
   const row = OFFSETS.find((o) => (o.first === a && o.second === b) || (o.first === b && o.second === a));
   return row ? { row, second: row.second === b } : null;
