@@ -48,7 +48,7 @@ const formulaDesign: Design = {
   layers: [{ name: 'only', material: 'own', thickness: '1 um', dopants: [{ dopant: 'D', concentration: '1e17 cm^-3' }] }],
 };
 
-describe('bad input on the command line', { timeout: 60_000 }, () => {
+describe('bad input on the command line', () => {
   it('is refused where a sweep is empty, runs down, has no points, or is of nothing', async () => {
     await expectRefusal(sweep(good, '300 K', '300 K'), /--to: .*an empty sweep; move one end/);
     await expectRefusal(sweep(good, '400 K', '300 K'), /--from: runs down .* put the lower end first: from '300 K' to '400 K'/);

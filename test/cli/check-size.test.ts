@@ -1,15 +1,12 @@
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, describe, expect, it, vi } from 'vitest';
+import { afterAll, describe, expect, it } from 'vitest';
 import { run } from '../../src/cli/run.ts';
 import type { Design, Requirement } from '../../src/design/types.ts';
 import type { SizedAnswer } from '../../src/requirements/size.ts';
 import type { Result } from '../../src/result/types.ts';
 import { contactDesign } from '../requirements/designs.ts';
-
-// Hundreds of solves: a second on a free machine, several on a busy one.
-vi.setConfig({ testTimeout: 30_000 });
 
 const folder = mkdtempSync(join(tmpdir(), 'halfmark-check-'));
 afterAll(() => rmSync(folder, { recursive: true }));

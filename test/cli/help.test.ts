@@ -18,7 +18,7 @@ async function call(...args: string[]): Promise<{ code: number; out: string; err
 }
 const optionsIn = (text: string): string[] => [...new Set(text.match(/(?<![\w-])--?[a-z][a-z-]*2?(?![\w-])/g) ?? [])].sort();
 
-describe('help of the command line', { timeout: 60_000 }, () => {
+describe('help of the command line', () => {
   for (const [name, command] of Object.entries(COMMANDS)) {
     it(`explains every option of ${name}, and none that it has not`, async () => {
       const { code, out, error } = await call(name, '--help');
@@ -50,7 +50,7 @@ describe('help of the command line', { timeout: 60_000 }, () => {
   });
 });
 
-describe('-o', { timeout: 60_000 }, () => {
+describe('-o', () => {
   it('writes what would be printed, whole, and leaves nothing beside it', async () => {
     const printed = (await call('check', fixture)).out;
     const into = join(folder, 'verdicts.txt');

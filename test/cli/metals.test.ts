@@ -1,13 +1,10 @@
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, describe, expect, it, vi } from 'vitest';
+import { afterAll, describe, expect, it } from 'vitest';
 import { run } from '../../src/cli/run.ts';
 import type { Ranking } from '../../src/contacts/rank-metals.ts';
 import type { Design } from '../../src/design/types.ts';
-
-// Some hundred solves: a second on a free machine, several on a busy one.
-vi.setConfig({ testTimeout: 30_000 });
 
 const folder = mkdtempSync(join(tmpdir(), 'halfmark-metals-'));
 afterAll(() => rmSync(folder, { recursive: true }));

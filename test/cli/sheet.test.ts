@@ -51,7 +51,7 @@ describe('halfmark sheet', () => {
     expect([code, error]).toEqual([0, '']);
     const words = wordsOf(at('more.pdf'));
     for (const text of ['Changes from graded-cap to lighter', 'At the worst corner', 'From near: Ti on cap', 'Workings: Ec − EF of cap', 'Workings: n of cap']) expect(words).toContain(text);
-  }, 30_000);
+  });
 
   it('writes an SVG a page', async () => {
     expect((await call([fixture, '-o', at('e.svg'), '--tolerances', 'none'])).code).toBe(0);

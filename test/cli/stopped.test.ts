@@ -27,7 +27,7 @@ async function stopped(args: string[]): Promise<{ code: number; out: string; err
 }
 const along = ['sweep', fixture, '--variable', 'temperature', '--from', '250 K', '--to', '350 K', '--points', '80', '--figure', 'layers.n.n_cm3'];
 
-describe('a long command that Ctrl-C stops', { timeout: 60_000 }, () => {
+describe('a long command that Ctrl-C stops', () => {
   it('prints the points of a sweep that it has, marked as partial', async () => {
     const { code, out, error } = await stopped(along);
     const result = JSON.parse(out) as SweepResult;

@@ -27,7 +27,7 @@ function expectRefusal(answer: { code: number; out: string; error: string }, lin
 }
 const along = ['sweep', fixture, '--variable', 'Nn', '--from', '1e17 cm^-3', '--to', '1e18 cm^-3', '--points', '20', '--log'];
 
-describe('halfmark sweep', { timeout: 60_000 }, () => {
+describe('halfmark sweep', () => {
   it('prints a table that says what single solves say', async () => {
     const { code, out, error } = await call([...along, '--csv', '--figure', 'layers.n.n_cm3', '--figure=junctions.0.builtin_V']);
     expect([code, error]).toEqual([0, '']);
@@ -70,7 +70,7 @@ describe('halfmark sweep', { timeout: 60_000 }, () => {
   });
 });
 
-describe('halfmark vary', { timeout: 60_000 }, () => {
+describe('halfmark vary', () => {
   const base = ['vary', fixture, '--count', '40', '--seed', '9'];
 
   it('takes another tolerance and distribution of an input', async () => {

@@ -1,4 +1,4 @@
-import { describe, expect, it, vi } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { originWords, valueWords } from '../../src/contacts/metal-words.ts';
 import { rankMetals, type MetalRow, type RankOptions, type Ranking } from '../../src/contacts/rank-metals.ts';
 import { starters } from '../../src/design/starters/index.ts';
@@ -6,9 +6,6 @@ import type { Design, MetalInput } from '../../src/design/types.ts';
 import { judge } from '../../src/requirements/judge.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
 import { setContact } from '../../src/state/commands/index.ts';
-
-// Hundreds of solves: a second on a free machine, several on a busy one.
-vi.setConfig({ testTimeout: 30_000 });
 
 /** n-type silicon under a metal, two layers, over a range of temperatures. */
 function design(change: Partial<Design> = {}, metals: MetalInput[] = []): Design {

@@ -1,11 +1,8 @@
-import { describe, expect, it, vi } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { judge } from '../../src/requirements/judge.ts';
 import { size, sizeSteps, type SizedAnswer, type SizeOptions } from '../../src/requirements/size.ts';
 import type { Design } from '../../src/design/types.ts';
 import { contactDesign } from './designs.ts';
-
-// Hundreds of solves: a second on a free machine, several on a busy one.
-vi.setConfig({ testTimeout: 30_000 });
 
 /** Cap doping against two sides: a contact resistivity and a sheet resistance from below, the published solubility from above. */
 const sized = (): Design => contactDesign((d) => {

@@ -8,7 +8,7 @@ import { figuresOf } from '../../src/sweep/figures.ts';
 
 const NO_PROVENANCE = { program: '', model: '', presets: '', design: '' };
 
-describe('a result whose rows are worked out when they are read', { timeout: 60_000 }, () => {
+describe('a result whose rows are worked out when they are read', () => {
   for (const { id, design } of starters) {
     it(`has every figure of the whole result to the last bit: ${id}`, () => {
       const reading = toStack(design);

@@ -1,4 +1,4 @@
-import { describe, expect, it, vi } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { closeUps } from '../../src/contacts/close-up.ts';
 import { plainText, type Drawing } from '../../src/drawing/shapes.ts';
 import { svgText } from '../../src/drawing/svg-text.ts';
@@ -14,8 +14,6 @@ import { FONTS } from '../export/fonts.ts';
 import { readPdf, structureOf, type Told } from '../export/read-pdf.ts';
 import { outside, overlaps } from './layout-checks.ts';
 import { allText, inputOf, solved, solvedStarter, starter, textsOf } from './sheets.ts';
-
-vi.setConfig({ testTimeout: 60_000 });
 
 const variantOf = (name: string, change: (design: ReturnType<typeof starter>) => void, id = 'graded-cap'): SheetVariant => {
   const design = starter(id);

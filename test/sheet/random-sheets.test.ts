@@ -33,4 +33,4 @@ it('a sheet of random stacks has every text in its place, every layer in its tab
     for (const layer of answer.result.layers) for (const figure of [decimalText(layer.ec_minus_ef_eV), ...(layer.insulator ? [] : [figureText(layer.n_cm3), figureText(layer.p_cm3)])]) expect(words, `stack ${i}`).toContain(figure);
   }
   expect(drawn).toBe(SHEETS);
-}, 60_000);
+});

@@ -1,4 +1,4 @@
-import { describe, expect, it, vi } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { starters } from '../../src/design/starters/index.ts';
 import { plainText, type Drawing } from '../../src/drawing/shapes.ts';
 import { svgText } from '../../src/drawing/svg-text.ts';
@@ -12,9 +12,6 @@ import { FONTS } from '../export/fonts.ts';
 import { readPdf } from '../export/read-pdf.ts';
 import { outside, overlaps } from './layout-checks.ts';
 import { allText, inputOf, sheetOf, solved, starter, tenLayers, textsOf } from './sheets.ts';
-
-// Judging the requirements of a starter takes seconds where other tests run beside this one.
-vi.setConfig({ testTimeout: 60_000 });
 
 const roleText = (page: Drawing, role: string): string[] => textsOf(page).filter((t) => t.role === role).map((t) => plainText(t.runs));
 

@@ -186,7 +186,7 @@ describe('the compact scheme', () => {
       }),
       { numRuns: 60, seed: 20261202 },
     );
-  }, 60000);
+  });
 });
 
 describe('Poisson over a stack', () => {

@@ -234,5 +234,5 @@ describe('random sensible stacks', () => {
       }),
       { numRuns: 500, seed: 20261201 },
     );
-  }, 120000);
+  });
 });

@@ -122,7 +122,7 @@ describe('a pool of workers', () => {
   });
 });
 
-describe('threads of Node', { timeout: 60_000 }, () => {
+describe('threads of Node', () => {
   const folder = mkdtempSync(join(tmpdir(), 'halfmark-pool-'));
   const script = join(folder, 'thread.mjs');
   const exits: Promise<number>[] = [];
