@@ -1,10 +1,11 @@
-import type { Profiles } from '../../solver/index.ts';
+import type { Profiles, Stack } from '../../solver/index.ts';
 import type { Complaint } from '../design/complaint.ts';
 import { requirementQuantity } from '../design/requirement-quantities.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import type { RequirementResult } from '../result/types.ts';
+import { absenceOf } from './absence.ts';
 import { marginOf } from './margin.ts';
 import { PointSolver } from './point.ts';
 import { uncertaintiesOf, type Tolerances, type Uncertainty } from './uncertainties.ts';
@@ -38,7 +39,7 @@ export function* judging(design: Design, options: JudgeOptions = {}): Generator<
   const solver = new PointSolver(design, set, requirements, uncertaintiesOf(design, set, tolerances), warmStart);
   const cases = yield* casesOf(solver, stack.temperature, temperatureRange, options);
   const words = temperatureWriter(design);
-  return { kind: 'judged', requirements: requirements.map((r, i) => requirementResult(r, i, cases[i], solver.uncertainties, words)), evaluations: solver.evaluations };
+  return { kind: 'judged', requirements: requirements.map((r, i) => requirementResult(r, i, cases[i], stack, solver.uncertainties, words)), evaluations: solver.evaluations };
 }
 
 /** The worst case of every requirement of the solver's list, those at the design's own temperature first. */
@@ -57,10 +58,10 @@ export function* casesOf(solver: PointSolver, temperature: number, range: readon
   return out;
 }
 
-/** A row of the result from the worst case that was found. */
-export function requirementResult(requirement: ReadRequirement, index: number, found: WorstCase, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): RequirementResult {
+/** A row of the result from the worst case that was found. @param stack  of the design with no tolerance moved */
+export function requirementResult(requirement: ReadRequirement, index: number, found: WorstCase, stack: Stack, uncertainties: readonly Uncertainty[], writeTemperature: (T: number) => string): RequirementResult {
   const { quantity, of, bound, limit, over } = requirement;
-  const { kind, unit, margin, marginUnit, words: noun } = requirementQuantity(quantity);
+  const { kind, unit, margin, marginUnit } = requirementQuantity(quantity);
   const { reading, unanswered } = found;
   const score = reading === null ? null : (reading.scores[index] as number);
   const figure = reading === null ? null : (reading.figures[index] as number);
@@ -85,7 +86,7 @@ export function requirementResult(requirement: ReadRequirement, index: number, f
       points: unanswered.length,
       temperature_K: blank.point.temperature,
       words: cornerWords(blank.point, uncertainties, writeTemperature),
-      reason: blank.refusal ?? `the result has no ${noun} of ${of} there`,
+      reason: blank.refusal ?? absenceOf(requirement, stack),
     },
   };
 }

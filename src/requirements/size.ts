@@ -155,8 +155,9 @@ function prepare(design: Design, { variable: name, from, to, scale, set = {} }: 
   const { temperature: _, ...overrides } = set;
   const { scope } = readVariables(design.variables ?? [], overrides);
   const ask = new Asker(scope);
+  const row = (design.variables ?? []).findIndex((v) => v.name === name);
   if (Object.hasOwn(overrides, name)) ask.wrong(`--set ${name}`, `gives ${name} a value, while it is to be sized; leave it out`);
-  else if (design.variables?.some((v) => v.name === name) && !isUsed(design, set, name)) ask.wrong('variables', `has ${quoted(name)}, which nothing in this design uses: no value of it would change anything; write it where it belongs, such as in a thickness`);
+  else if (row >= 0 && !isUsed(design, set, name)) ask.wrong(`variables[${row}]`, `is ${quoted(name)}, which nothing in this design uses: no value of it would change anything; write it where it belongs, such as in a thickness`);
   if (reading.requirements.length === 0) ask.wrong('requirements', 'there are none; a size is found for what the design has to meet, so give it a requirement');
   const variable = ask.complaints.length > 0 ? null : readSizedVariable(design, name, scope, { ...(from === undefined ? {} : { from }), ...(to === undefined ? {} : { to }), ...(scale === undefined ? {} : { scale }) }, ask);
   return variable === null ? { complaints: ask.complaints } : { variable, requirements: reading.requirements };

@@ -44,10 +44,10 @@ export function readSizedVariable(design: Design, name: string, scope: Scope, en
   const end = (own: string | undefined, i: 0 | 1): number => {
     const text = own ?? row.range?.[i];
     const at = own === undefined ? `${path}.range` : i === 0 ? '--from' : '--to';
-    if (text === undefined) return ask.wrong(at, `is missing; to size ${name} there must be a range to search, such as ["${KINDS[kind].example.split(' or ')[0]}", ...]`);
+    if (text === undefined) return ask.wrong(at, `is missing; to size ${name} there must be a range to search, such as ["${KINDS[kind].example.split(' or ')[0]}", ...], or ends for this run`);
     try {
-      const read = inUnit(evaluate(text, scope), KINDS[kind].unit);
-      return read ?? ask.wrong(at, `${quoted(text)} is not of the kind of ${name}; write it such as "${KINDS[kind].example}"`);
+      const found = evaluate(text, scope);
+      return inUnit(found, KINDS[kind].unit) ?? ask.wrong(at, `${quoted(text)} ${typeof found === 'number' ? 'has no unit' : `is not of the kind of ${name}`}; write it such as "${KINDS[kind].example}"`);
     } catch (error) {
       if (!(error instanceof ExpressionError)) throw error;
       return ask.wrong(at, `${quoted(text)} ${error.message}`);

@@ -1,8 +1,10 @@
+import type { Stack } from '../../solver/index.ts';
 import { complaintLine } from '../design/complaint.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import type { RequirementResult } from '../result/types.ts';
+import { absenceOf } from './absence.ts';
 import { casesOf, requirementResult } from './judge.ts';
 import { PointSolver, type Point } from './point.ts';
 import { exactText, type SizedVariable } from './sized-variable.ts';
@@ -29,6 +31,7 @@ export interface Look {
 interface At {
   solver: PointSolver;
   requirements: readonly ReadRequirement[];
+  stack: Stack;
   temperature: number;
   range: [number, number] | null;
 }
@@ -71,7 +74,7 @@ export class SizingStudy {
         if (score !== null && least !== null && score >= least) continue;
         [least, corner, found] = [score, c, point];
         if (score !== null) continue;
-        out.refusal ??= reading.refusal;
+        out.refusal ??= reading.refusal ?? absenceOf(at.requirements[i], at.stack);
         break;
       }
       out.scores.push(least);
@@ -92,7 +95,7 @@ export class SizingStudy {
     const before = this.look(value).scores;
     const cases = yield* casesOf(at.solver, at.temperature, at.range, options);
     const words = temperatureWriter(this.design);
-    this.#rows.set(value, at.requirements.map((r, i) => requirementResult(r, i, cases[i], this.uncertainties, words)));
+    this.#rows.set(value, at.requirements.map((r, i) => requirementResult(r, i, cases[i], at.stack, this.uncertainties, words)));
     let grown = false;
     cases.forEach(({ reading, effects, unanswered }, i) => {
       const over = (T: number): number | null => (at.requirements[i].over === 'temperature' ? null : T);
@@ -131,7 +134,7 @@ export class SizingStudy {
     if (at === undefined) {
       const set = { ...this.set, [this.variable.name]: exactText(this.variable, value) };
       const reading = toStack(this.design, set);
-      at = reading.ok ? { solver: new PointSolver(this.design, set, reading.requirements, this.uncertainties), requirements: reading.requirements, temperature: reading.stack.temperature, range: reading.temperatureRange } : complaintLine(reading.complaints[0]);
+      at = reading.ok ? { solver: new PointSolver(this.design, set, reading.requirements, this.uncertainties), requirements: reading.requirements, stack: reading.stack, temperature: reading.stack.temperature, range: reading.temperatureRange } : complaintLine(reading.complaints[0]);
       this.#at.set(value, at);
     }
     return at;
