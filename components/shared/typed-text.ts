@@ -10,14 +10,19 @@ export function unitOf(text: string): string | null {
   return WITH_UNIT.exec(text.trim())?.[2] ?? null;
 }
 
+/** No doping has so few atoms per cubic centimetre: such a number is meant as something else, a share or a composition. */
+const LEAST_DENSITY = 1e3;
+
 /**
  * A bare number gets the unit of the text that it replaces, else the usual unit of its kind: "3e17" for a doping becomes "3e17 cm^-3". Everything else stays
- * as typed.
+ * as typed, and so does what can be no density: a variable that was one becomes a pure number by typing one.
  */
 export function completed(typed: string, usualUnit: string, replaced: string = ''): string {
   const text = typed.trim();
   if (usualUnit === '' || !BARE.test(text)) return text;
-  return `${text} ${unitOf(replaced) ?? usualUnit}`;
+  const unit = unitOf(replaced) ?? usualUnit;
+  const size = Math.abs(Number(text));
+  return unit === 'cm^-3' && size > 0 && size < LEAST_DENSITY ? text : `${text} ${unit}`;
 }
 
 /** Units of length that a dragged thickness keeps, in nm. */

@@ -17,6 +17,11 @@ describe('a typed text', () => {
     expect(completed('0.3', '')).toBe('0.3');
   });
 
+  it('stays bare where it can be no doping, so that a variable becomes a share by typing one', () => {
+    expect(['0.9', '12', '1e-3'].map((text) => completed(text, 'cm^-3', '1e17 cm^-3'))).toEqual(['0.9', '12', '1e-3']);
+    expect(['0', '1e3', '5e14'].map((text) => completed(text, 'cm^-3'))).toEqual(['0 cm^-3', '1e3 cm^-3', '5e14 cm^-3']);
+  });
+
   it('has a unit only if it is a plain value', () => {
     expect(['0.35um', '80 nm', '1e17 cm^-3', '5 µm', '2*tcap', '12', 'tcap'].map(unitOf)).toEqual(['um', 'nm', 'cm^-3', 'µm', null, null, null]);
   });
