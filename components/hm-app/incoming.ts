@@ -1,4 +1,5 @@
 import type { ReactiveController, ReactiveControllerHost } from 'lit';
+import { fileTooLarge } from '../../src/storage/backup-bounds.ts';
 import { droppedHandle, OpenedFile, pickedHandle, type FileHandle } from '../shared/opened-file.ts';
 
 /** A text that came to the page, and what it came as. */
@@ -7,9 +8,6 @@ export interface Incoming {
   /** name of the file; empty for a text that was pasted */ name: string;
   /** the file itself, where the browser lets it be written back */ file?: OpenedFile;
 }
-
-/** Files above this are not even read: the reader refuses them anyway. Bytes. */
-const LARGEST = 50e6;
 
 /**
  * Files dropped on the page, texts pasted into it (not into a field), files chosen by a picker, and designs inside the page's address.
@@ -112,7 +110,9 @@ export class IncomingController implements ReactiveController {
 
   async #read(file: File | undefined, handle: FileHandle | null = null): Promise<void> {
     if (file === undefined) return;
-    if (file.size > LARGEST) return this.#refuse(`${file.name} has ${Math.round(file.size / 1e6)} MB: that is no design and no backup.`);
+    // It is not even read: the reader would refuse it anyway.
+    const tooLarge = fileTooLarge(file);
+    if (tooLarge !== null) return this.#refuse(tooLarge);
     try {
       this.#take({ text: await file.text(), name: file.name, ...(handle === null ? {} : { file: new OpenedFile(handle, file) }) });
     } catch (error) {

@@ -18,6 +18,9 @@ export interface DeskOutcome {
   regardless?: () => Promise<DeskOutcome>;
 }
 
+/** Refusals of a backup that are told one by one. */
+const MOST_TOLD = 8;
+
 /** Carries out what a person does with projects and files: knows the store and the keeper, and no element. */
 export class ProjectDesk {
   entries: ProjectEntry[] = [];
@@ -122,12 +125,21 @@ export class ProjectDesk {
   async #backup(): Promise<DeskOutcome> {
     await this.#keeper.flush();
     const now = new Date();
-    const make = async (): Promise<Blob> => {
-      const [{ writeBackup }, records, shelf] = await Promise.all([import('../../src/storage/backup.ts'), this.#store.all(), this.#store.shelf()]);
-      return new Blob([writeBackup(records, now.getTime(), shelf)], { type: 'application/json' });
-    };
-    const outcome = await saveFile(`halfmark-backup-${now.toISOString().slice(0, 10)}.json`, 'application/json', make());
-    return { said: outcome === 'given up' ? 'No backup was written.' : 'The backup holds every project, those in the bin too, and your shelf.' };
+    const writing = this.#writtenBackup(now.getTime());
+    const outcome = await saveFile(`halfmark-backup-${now.toISOString().slice(0, 10)}.json`, 'application/json', writing.then(({ text }) => new Blob([text], { type: 'application/json' })));
+    if (outcome === 'given up') return { said: 'No backup was written.' };
+    const { lacking } = await writing;
+    return { said: `The backup holds every project, those in the bin too, and your shelf${lacking}.`, ...(lacking === '' ? {} : { urgent: true }) };
+  }
+
+  /** The text of a backup that can be read back: one that would be too large for that is written without the steps of undo. */
+  async #writtenBackup(now: number): Promise<{ text: string; lacking: string }> {
+    const [{ writeBackup, withoutUndo, LARGEST_FILE }, records, shelf] = await Promise.all([import('../../src/storage/backup.ts'), this.#store.all(), this.#store.shelf()]);
+    const whole = writeBackup(records, now, shelf);
+    if (whole.length <= LARGEST_FILE) return { text: whole, lacking: '' };
+    const text = writeBackup(records.map(withoutUndo), now, shelf);
+    const limit = `${LARGEST_FILE / 1e6} MB`;
+    return { text, lacking: `, without the steps of undo: with them it would have more than the ${limit} that can be read back${text.length > LARGEST_FILE ? ', and without them it still has; empty the bin, or keep large projects as files of their own' : ''}` };
   }
 
   /** Adds what the backup holds; nothing that is here is replaced. */
@@ -144,7 +156,8 @@ export class ProjectDesk {
     await this.#store.shelve(fresh);
     const kept = reading.shelf.length - fresh.length;
     const shelf = `${fresh.length === 0 ? '' : ` ${fresh.length} put on your shelf.`}${kept === 0 ? '' : ` ${kept} of the shelf ${kept === 1 ? 'was' : 'were'} there already and stayed as ${kept === 1 ? 'it is' : 'they are'}.`}`;
-    const refused = reading.refused.map(({ name, why }) => ` ${name} was left out: ${why}.`).join('');
+    const more = reading.refused.length - MOST_TOLD;
+    const refused = `${reading.refused.slice(0, MOST_TOLD).map(({ name, why }) => ` ${name} was left out: ${why}.`).join('')}${more > 0 ? ` ${more} more were left out.` : ''}`;
     return { said: `${reading.projects.length === 1 ? 'One project' : `${reading.projects.length} projects`} added from the backup.${shelf}${refused}`, ...(refused === '' ? {} : { urgent: true }) };
   }
 

@@ -1,4 +1,5 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
+import { fileTooLarge } from '../../src/storage/backup-bounds.ts';
 import type { ProjectEntry } from '../../src/storage/record.ts';
 import type { Damaged } from '../../src/storage/project-store.ts';
 import { tell, type ProjectAct } from '../shared/events.ts';
@@ -68,6 +69,8 @@ export class HmProjects extends LitElement {
     const file = input.files?.[0];
     input.value = '';
     if (file === undefined) return;
+    const tooLarge = fileTooLarge(file);
+    if (tooLarge !== null) return tell(this, 'hm-say', { text: tooLarge, urgent: true });
     try {
       this.act({ act: 'restore-backup', text: await file.text() });
     } catch (error) {

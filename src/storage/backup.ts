@@ -1,5 +1,8 @@
 import { sha256 } from '@noble/hashes/sha2';
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils';
+import { MOST_CHARACTERS } from '../design/read.ts';
+import { backupTooLarge, MOST_ENTRIES } from './backup-bounds.ts';
+import type { KeptVariant } from './kept-variants.ts';
 import { recordFault, type ProjectRecord } from './record.ts';
 import { keyOfItem, shelfFault, shelfKey, type ShelfItem } from './shelf.ts';
 
@@ -10,6 +13,10 @@ import { keyOfItem, shelfFault, shelfKey, type ShelfItem } from './shelf.ts';
 export const BACKUP_FORMAT = 'halfmark-backup/3';
 /** Those that can be read: in version 1 a project had no variants, before version 3 there was no shelf. */
 const READABLE = ['halfmark-backup/1', 'halfmark-backup/2', BACKUP_FORMAT];
+
+export { LARGEST_FILE } from './backup-bounds.ts';
+/** Characters of a name in a sentence. */
+const MOST_NAME = 80;
 
 type Shelved = Pick<ShelfItem, 'list' | 'entry'>;
 type Kept = Omit<ProjectRecord, 'id' | 'revision'>;
@@ -27,8 +34,17 @@ export function writeBackup(records: readonly ProjectRecord[], written: number, 
   return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects, shelf: shelf.map(({ list, entry }) => ({ list, entry, check: checkOfEntry({ list, entry }) })) }, null, 1)}\n`;
 }
 
+/** A project whose variants are what they are and lead nowhere back: for a backup that would be too large to be read. */
+export function withoutUndo(record: ProjectRecord): ProjectRecord {
+  const history = { past: [], future: [] };
+  const variants = record.variants?.map((variant): KeptVariant => (variant.kept === null ? variant : { ...variant, kept: { ...variant.kept, history } }));
+  return { ...record, history, ...(variants === undefined ? {} : { variants }) };
+}
+
 /** Reads a backup. What is whole is given back, what is not is named with the reason. */
 export function readBackup(text: string): BackupReading {
+  const tooLarge = backupTooLarge(text);
+  if (tooLarge !== null) return { ok: false, message: tooLarge };
   let file: unknown;
   const refused: { name: string; why: string }[] = [];
   try {
@@ -45,11 +61,12 @@ export function readBackup(text: string): BackupReading {
   if (version === null) return { ok: false, message: 'This is no backup file: it does not say "halfmark-backup" as its format.' };
   if (!READABLE.includes(version[0])) return { ok: false, message: `This backup is of version ${version[1]}, and this page reads versions 1 to 3. Reload the page to get its newest version.` };
   if (!Array.isArray(projects)) return { ok: false, message: 'This backup holds no list of projects.' };
+  if (projects.length > MOST_ENTRIES || (Array.isArray(shelf) && shelf.length > MOST_ENTRIES)) return { ok: false, message: `This is no backup file: it lists more than ${MOST_ENTRIES} projects or entries of a shelf.` };
   const good: Kept[] = [];
   for (const [i, entry] of projects.entries()) {
-    const fault = recordFault(typeof entry === 'object' && entry !== null ? { ...entry, id: '', revision: 1 } : entry);
+    const fault = designTooLong(entry) ?? recordFault(typeof entry === 'object' && entry !== null ? { ...entry, id: '', revision: 1 } : entry);
     const { check, ...kept } = fields(entry);
-    const name = typeof kept.name === 'string' ? kept.name : `number ${i + 1}`;
+    const name = typeof kept.name === 'string' ? short(kept.name) : `number ${i + 1}`;
     if (fault !== null) refused.push({ name, why: fault });
     else if (!fits(check, () => checkOf(kept))) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
     else good.push(kept);
@@ -62,7 +79,7 @@ function readShelf(shelf: unknown, refused: { name: string; why: string }[]): Sh
   for (const row of Array.isArray(shelf) ? (shelf as unknown[]) : []) {
     const { list, entry, check } = (row ?? {}) as Partial<Shelved & { check: string }>;
     const id: unknown = (entry as { id?: unknown } | undefined)?.id;
-    const name = `${typeof id === 'string' ? id : 'an entry'} of the shelf`;
+    const name = `${typeof id === 'string' ? short(id) : 'an entry'} of the shelf`;
     const fault = shelfFault({ key: typeof id === 'string' && list !== undefined ? shelfKey(keyOfItem({ list, entry: entry! })) : '', list, entry, kept: 0 });
     if (fault !== null) refused.push({ name, why: fault });
     else if (!fits(check, () => checkOfEntry({ list: list!, entry: entry! }))) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
@@ -70,6 +87,15 @@ function readShelf(shelf: unknown, refused: { name: string; why: string }[]): Sh
   }
   return good;
 }
+
+/** What stands in quotes was not counted with the values of the file: it is held to the length of a design before it is parsed in its turn. */
+function designTooLong(entry: unknown): string | null {
+  const { designText, variants } = fields(entry);
+  const texts: unknown[] = [designText, ...(Array.isArray(variants) ? variants.map((variant) => (variant as KeptVariant | null)?.kept?.designText) : [])];
+  return texts.some((text) => typeof text === 'string' && text.length > MOST_CHARACTERS) ? 'its design is longer than any that is read' : null;
+}
+
+const short = (name: string): string => (name.length <= MOST_NAME ? name : `${name.slice(0, MOST_NAME)}…`);
 
 /** What is nested too deeply to be written as text again was not written by this program. */
 function fits(check: unknown, own: () => string): boolean {

@@ -32,6 +32,8 @@ export type DatabaseMoment =
 export function openDatabase(name: string, told: (moment: DatabaseMoment) => void, migrations: readonly Migration[] = MIGRATIONS): Promise<Database> {
   return openDB<HalfmarkDB>(name, migrations.length, {
     async upgrade(db, from, to, transaction) {
+      // Its failure is that of the opening, and told there.
+      transaction.done.catch(() => undefined);
       try {
         for (let version = from; version < (to ?? migrations.length); version++) await migrations[version](db, transaction);
       } catch (error) {

@@ -64,6 +64,20 @@ describe('the list of projects', () => {
     expect(acts).to.deep.equal([{ act: 'rename', id: 'a', name: 'better' }]);
   });
 
+  it('does not even read a file that is too large, and says so', async () => {
+    const acts = heard(element, 'hm-project');
+    const words = heard(element, 'hm-say');
+    const input = element.shadowRoot!.querySelector<HTMLInputElement>('[type=file]')!;
+    const file = new File(['{}'], 'film.json');
+    let read = 0;
+    Object.defineProperties(file, { size: { value: 60e6 }, text: { value: async () => (read++, '{}') } });
+    Object.defineProperty(input, 'files', { value: [file] });
+    input.dispatchEvent(new Event('change'));
+    await until('words', () => words.length > 0);
+    expect(words).to.deep.equal([{ text: 'film.json has 60 MB: that is no design and no backup.', urgent: true }]);
+    expect([acts.length, read]).to.deep.equal([0, 0]);
+  });
+
   it('reads a backup file that is chosen', async () => {
     const acts = heard(element, 'hm-project');
     const input = element.shadowRoot!.querySelector<HTMLInputElement>('[type=file]')!;

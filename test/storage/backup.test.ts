@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { readBackup, writeBackup } from '../../src/storage/backup.ts';
+import { LARGEST_FILE, readBackup, withoutUndo, writeBackup } from '../../src/storage/backup.ts';
 import type { ProjectRecord } from '../../src/storage/record.ts';
 import { designFixture } from '../state/design-fixture.ts';
 
@@ -59,6 +59,43 @@ describe('a backup', () => {
       }),
       { numRuns: 300, seed: 5 },
     );
+  });
+
+  it('that is too large to be read is refused before it is parsed, and so is one packed to fill the memory', () => {
+    const head = '{"format":"halfmark-backup/3","projects":';
+    const started = performance.now();
+    const floor = process.memoryUsage().rss;
+    expect(readBackup(`${head}["${'A'.repeat(LARGEST_FILE)}"]}`)).toMatchObject({ ok: false, message: expect.stringMatching(/^This is no backup file: it has 50 MB, and more than 50 MB are not read\.$/) });
+    for (const packed of [`[${'[],'.repeat(9e6)}0]`, `[${'0,'.repeat(9e6)}0]`, `${'['.repeat(9e6)}${']'.repeat(9e6)}`, `[{"a":${'{"a":'.repeat(9e6)}`, `[],"shelf":[${'{},'.repeat(9e6)}0]`]) {
+      expect(readBackup(`${head}${packed}}`)).toMatchObject({ ok: false, message: expect.stringContaining('more single values than any backup') });
+    }
+    // Parsed, each of them would take hundreds of megabytes: its text alone has up to 45.
+    expect(process.memoryUsage().rss - floor).toBeLessThan(300e6);
+    expect(performance.now() - started).toBeLessThan(10_000);
+    expect(readBackup(`${head}[${'0,'.repeat(20_000)}0]}`)).toMatchObject({ ok: false, message: expect.stringContaining('more than 10000 projects') });
+    expect(readBackup(`${head}[],"shelf":[${'0,'.repeat(20_000)}0]}`)).toMatchObject({ ok: false, message: expect.stringContaining('more than 10000 projects') });
+    // Brackets inside quotes are text: a design of any length in it is held to that of a design.
+    expect(readBackup(writeBackup([{ ...record('long'), designText: `{"notes":"${'['.repeat(6e6)}"}` }, record('one')], 0))).toMatchObject({ ok: true, projects: [{ name: 'one' }], refused: [{ name: 'long', why: expect.stringContaining('longer') }] });
+    const named = readBackup(file.replace('"name": "one"', `"name": "${'A'.repeat(1e6)}"`));
+    expect(named.ok && named.refused[0].name.length).toBeLessThan(100);
+  });
+
+  it('as large as any is written by this program is read back', () => {
+    const step = { label: 'a', changes: [{ path: ['layers', 0, 'thickness'], before: '1 nm', after: '2 nm' }] };
+    const long = { ...record('long'), history: { past: Array.from({ length: 1000 }, () => step), future: [] } };
+    const text = writeBackup(Array.from({ length: 225 }, () => long), 0);
+    expect(text.length).toBeGreaterThan(0.9 * LARGEST_FILE);
+    expect(text.length).toBeLessThan(LARGEST_FILE);
+    const reading = readBackup(text);
+    expect(reading.ok && [reading.projects.length, reading.refused.length]).toEqual([225, 0]);
+  });
+
+  it('can be written without undo, variants and all else as they are', () => {
+    const kept = { designText: JSON.stringify(designFixture()), history: record('x').history };
+    const two = { ...record('one'), variants: [{ id: 'a', name: 'a', removed: false, kept: null }, { id: 'b', name: 'b', removed: false, kept }] };
+    const none = { past: [], future: [] };
+    expect(withoutUndo(two)).toEqual({ ...two, history: none, variants: [two.variants[0], { ...two.variants[1], kept: { ...kept, history: none } }] });
+    expect(readBackup(writeBackup([withoutUndo(two), withoutUndo(record('three'))], 0))).toMatchObject({ ok: true, refused: [] });
   });
 
   it('is refused in words when it is something else, or newer', () => {

@@ -202,6 +202,45 @@ describe('the database', () => {
     db.close();
   });
 
+  it('says so when the browser cuts the connection, and the next call opens another', async () => {
+    const moments: DatabaseMoment[] = [];
+    const store = open((moment) => moments.push(moment));
+    const { id } = await store.create('cell', content());
+    // The connection that is in use, found by the next transaction on it.
+    const transaction = IDBDatabase.prototype.transaction;
+    let connection: IDBDatabase | undefined;
+    IDBDatabase.prototype.transaction = function (this: IDBDatabase, ...given: Parameters<IDBDatabase['transaction']>) {
+      connection = this;
+      return transaction.apply(this, given);
+    } as IDBDatabase['transaction'];
+    try {
+      await store.get(id);
+    } finally {
+      IDBDatabase.prototype.transaction = transaction;
+    }
+    connection!.close();
+    connection!.dispatchEvent(new Event('close'));
+    expect(moments).to.deep.equal(['terminated']);
+    expect(await store.save(id, 1, content('after the cut'))).to.deep.equal({ kind: 'saved', revision: 2 });
+  });
+
+  it('that fails on its climb stays as it was, and every project in it', async () => {
+    const store = open();
+    const { id } = await store.create('cell', content());
+    await store.close();
+    const half: Migration = async (db, transaction) => {
+      void (db as unknown as IDBDatabase).createObjectStore('half');
+      await transaction.objectStore('projects').delete(id);
+      throw new TypeError('a fault of the climb');
+    };
+    const outcome = await openDatabase(name, () => {}, [...MIGRATIONS, half]).then(
+      (db) => (db.close(), 'opened'),
+      () => 'refused',
+    );
+    expect(outcome).to.equal('refused');
+    expect(await store.get(id)).to.have.property('name', 'cell');
+  });
+
   it('says so when an older page holds it and does not let go', async () => {
     const holder = await openDB(name, MIGRATIONS.length, { upgrade: (db) => void db.createObjectStore('projects') });
     const moments: DatabaseMoment[] = [];

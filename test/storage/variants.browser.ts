@@ -94,6 +94,21 @@ describe('the variants of a kept project', () => {
     expect(titles(three.session)).to.deep.equal(['base: in the last second', '*unsaved changes: never saved', 'other: three layers']);
   });
 
+  it('get back an edit by a dead tab that was in another variant than the one saved as open', async () => {
+    const one = tab();
+    await one.keeper.create('cell', designFixture());
+    one.session.changeVariants(addVariant(one.session.variants, 'other', 'b'));
+    await one.keeper.flush();
+    one.session.changeVariants(openVariant(one.session.variants, 'base'));
+    one.retitle('in the last second');
+    // Its last words are there; its save never comes: the page is gone.
+    await new Promise((done) => setTimeout(done, 120));
+    await one.store.close();
+    const two = tab();
+    expect(await two.keeper.openLast()).to.deep.equal({ ok: true, recovered: true });
+    expect(titles(two.session)).to.deep.equal(['*base: in the last second', 'other: three layers']);
+  });
+
   it('are one in a database of the first version, which is lifted without losing anything', async () => {
     const old = await openDB(name, 1, {
       upgrade(db, _from, _to, transaction) {
