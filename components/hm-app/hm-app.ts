@@ -215,6 +215,7 @@ export class HmApp extends LitElement implements Page {
       plateLook: session.view as PlateView,
       requirements: verdicts.status === 'complete' && !verdicts.stale ? verdicts.rows : null,
       variants: session.variants,
+      run: this.jobs.run,
       file: this.files.get(keeper?.project.id ?? '') ?? null,
       entries: desk?.entries ?? [],
       damaged: desk?.damaged ?? [],

@@ -5,6 +5,7 @@ import type { RequirementResult, Result } from '../../src/result/types.ts';
 import type { Paper, SheetStyle } from '../../src/sheet/look.ts';
 import type { SheetInput, SheetPlate } from '../../src/sheet/review-sheet.ts';
 import type { SheetForm } from '../../src/sheet/takeaway.ts';
+import type { RunJob } from '../../src/workers/job-client.ts';
 import { tell } from '../shared/events.ts';
 import { look } from '../shared/look.ts';
 import { fileName, saveFile } from '../shared/save-file.ts';
@@ -30,6 +31,9 @@ const FORMS: Record<SheetForm, { words: string; ending: string; type: string }> 
 };
 /** ms from the last letter typed to the next picture of the page */
 const PAUSE = 200;
+/** ms after which the page says that it is still working on the sections */
+const SLOW = 400;
+const WORKING = 'Working out the further sections';
 const AUTHOR_KEY = 'halfmark:author';
 
 /**
@@ -48,6 +52,7 @@ export class HmSheet extends LitElement {
     others: { attribute: false, hasChanged: (next: readonly OtherDesign[], before?: readonly OtherDesign[]) => !sameOthers(next, before) },
     ownName: { attribute: false },
     plateLook: { attribute: false },
+    run: { attribute: false },
     stale: { type: Boolean },
     sections: { state: true },
     block: { state: true },
@@ -64,6 +69,7 @@ export class HmSheet extends LitElement {
   /** judged rows; null while they are not known */ declare requirements: readonly RequirementResult[] | null;
   /** variants of the project that are not on the page */ declare others: readonly OtherDesign[];
   /** of the variant on the page */ declare ownName: string;
+  /** starts what the further sections have to have solved; without it they are left out */ declare run: RunJob | null;
   declare private sections: SectionsChosen;
   /** how the plate looks on the page */ declare plateLook: SheetPlate;
   /** the result is of an earlier design */ declare stale: boolean;
@@ -75,6 +81,7 @@ export class HmSheet extends LitElement {
   declare private remark: string;
   declare private busy: boolean;
   /** address of the page shown */ private picture = '';
+  /** what the remark says of sections that cannot be had */ private lacking = '';
   private timer = 0;
   private call = 0;
 
@@ -87,6 +94,7 @@ export class HmSheet extends LitElement {
     this.ownName = '';
     this.sections = NOTHING_CHOSEN;
     this.plateLook = {};
+    this.run = null;
     this.stale = false;
     this.block = { title: '', author: '', date: '', revision: '' };
     this.sheetStyle = 'screen';
@@ -130,27 +138,33 @@ export class HmSheet extends LitElement {
     };
   }
 
-  /** With the sections that are switched on; says of those that cannot be had why not. */
-  private async whole(): Promise<SheetInput | null> {
-    const { input, sections } = this;
-    if (input === null || sections === NOTHING_CHOSEN) return input;
-    const { furtherSections } = await import('../../src/sheet/further.ts');
+  /** With the sections that are switched on, and of those that cannot be had why not. */
+  private async whole(): Promise<{ input: SheetInput | null; missing: string }> {
+    const { input, sections, run, requirements } = this;
+    if (input === null || run === null || sections === NOTHING_CHOSEN) return { input, missing: '' };
     const { over, corner, contacts } = sections;
-    const { ledgerTables } = await import('../../src/result/ledger.ts');
+    const others = this.others.filter(({ id }) => over.includes(id));
+    const base = this.ownName || 'this design';
+    const [{ furtherSections }, { sheetSolver }, { ledgerTables }] = await Promise.all([import('../../src/sheet/further.ts'), import('./sheet-solver.ts'), import('../../src/result/ledger.ts')]);
     const tables = ledgerTables(input.result);
     // A layer that is gone since takes its figures along.
     const workings = sections.workings.filter(({ table, index }) => tables.some(({ id, rows }) => id === table && rows.some((row) => row.index === index)));
-    const { sections: further, missing } = furtherSections(input.design, input.result, this.requirements, { over: this.others.filter(({ id }) => over.includes(id)), base: this.ownName || 'this design', corner, contacts, workings });
-    if (missing.length > 0) this.remark = missing.join(' ');
-    return { ...input, ...further };
+    const { sections: further, missing } = await furtherSections(input.design, input.result, requirements, { over: others, base, corner, contacts, workings }, sheetSolver(run));
+    return { input: { ...input, ...further }, missing: missing.join(' ') };
   }
 
   /** The picture of the pages. What draws them comes with the first one. */
   private async draw(): Promise<void> {
     const call = ++this.call;
+    const slow = window.setTimeout(() => {
+      if (call === this.call && !this.busy) this.remark = WORKING;
+    }, SLOW);
     try {
-      const input = await this.whole();
+      const { input, missing } = await this.whole();
       if (call !== this.call) return;
+      if (missing !== '') this.remark = missing;
+      else if (this.remark === WORKING || this.remark === this.lacking) this.remark = '';
+      this.lacking = missing;
       if (input === null) {
         this.pages = null;
         return;
@@ -163,6 +177,8 @@ export class HmSheet extends LitElement {
       this.requestUpdate();
     } catch (error) {
       if (call === this.call) this.remark = `The sheet cannot be drawn (${words(error)}).`;
+    } finally {
+      clearTimeout(slow);
     }
   }
 
@@ -188,8 +204,8 @@ export class HmSheet extends LitElement {
     if (input === null || this.busy) return;
     const { ending, type } = FORMS[form];
     const name = fileName(this.block.title, ending);
-    await this.run(async () => {
-      const file = Promise.all([import('../../src/sheet/takeaway.ts'), this.whole()]).then(([{ sheetTakeaway }, whole]) => sheetTakeaway(form, whole ?? input));
+    await this.making(async () => {
+      const file = Promise.all([import('../../src/sheet/takeaway.ts'), this.whole()]).then(([{ sheetTakeaway }, whole]) => sheetTakeaway(form, whole.input ?? input));
       // Where the person gives the file up, nobody asks any more whether it could be made.
       file.catch(() => undefined);
       const outcome = await saveFile(name, type, file);
@@ -200,14 +216,14 @@ export class HmSheet extends LitElement {
   private async print(): Promise<void> {
     const { input } = this;
     if (input === null || this.busy) return;
-    await this.run(async () => {
+    await this.making(async () => {
       const [{ reviewSheet }, { svgText }, { printPages }, whole] = await Promise.all([import('../../src/sheet/review-sheet.ts'), import('../../src/drawing/svg-text.ts'), import('./print-pages.ts'), this.whole()]);
-      printPages(reviewSheet(whole ?? input).map(svgText), input.paper);
+      printPages(reviewSheet(whole.input ?? input).map(svgText), input.paper);
       return 'Handed to the printer’s dialog.';
     });
   }
 
-  private async run(work: () => Promise<string>): Promise<void> {
+  private async making(work: () => Promise<string>): Promise<void> {
     this.busy = true;
     this.remark = 'Making it';
     try {

@@ -1,8 +1,6 @@
-import { closeUps, type CloseUp } from '../contacts/close-up.ts';
-import { complaintLine } from '../design/complaint.ts';
+import type { CloseUp } from '../contacts/close-up.ts';
 import type { Design } from '../design/types.ts';
-import { hardest, solveCorner, type Corner } from '../requirements/corner.ts';
-import { solveDesign } from '../result/solve-design.ts';
+import { hardest, type Corner } from '../requirements/corner.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
 import { workingsOf } from '../workings/workings-of.ts';
 import type { Asked } from '../workings/workings.ts';
@@ -18,27 +16,34 @@ export interface FurtherWish {
   workings: readonly Asked[];
 }
 
+/** Who solves what the sections show; the page asks its workers. Text says why there is none, without a full stop. */
+export interface FurtherSolver {
+  result(design: Design): Promise<Result | string>;
+  corner(design: Design, row: RequirementResult): Promise<Corner | string>;
+  contacts(design: Design): Promise<readonly CloseUp[] | string>;
+}
+
 /** What is known once stays known while the design is the same object. */
-const solvedDesigns = new WeakMap<Design, Result | string>();
-const corners = new WeakMap<RequirementResult, Corner | string>();
-const contacts = new WeakMap<Design, readonly CloseUp[] | string>();
+const results = new WeakMap<Design, Promise<Result | string>>();
+const corners = new WeakMap<RequirementResult, Promise<Corner | string>>();
+const contacts = new WeakMap<Design, Promise<readonly CloseUp[] | string>>();
 
 /**
- * Solves what the further sections show.
+ * What the further sections show, solved one after the other.
  *
  * @returns the sections for the sheet, and of those that cannot be had why not, a sentence each
  */
-export function furtherSections(design: Design, result: Result, requirements: readonly RequirementResult[] | null, wish: FurtherWish): { sections: Pick<SheetInput, 'comparison' | 'corner' | 'closeUps' | 'workings'>; missing: string[] } {
+export async function furtherSections(design: Design, result: Result, requirements: readonly RequirementResult[] | null, wish: FurtherWish, solver: FurtherSolver): Promise<{ sections: Pick<SheetInput, 'comparison' | 'corner' | 'closeUps' | 'workings'>; missing: string[] }> {
   const missing: string[] = [];
-  const variants = wish.over.flatMap(({ name, design: other }): SheetVariant[] => {
-    const found = solvedOf(other);
-    if (typeof found !== 'string') return [{ name, design: other, result: found }];
-    missing.push(`${name} has no result: ${found}.`);
-    return [];
-  });
+  const variants: SheetVariant[] = [];
+  for (const { name, design: other } of wish.over) {
+    const found = await known(results, other, () => solver.result(other));
+    if (typeof found === 'string') missing.push(`${name} has no result: ${found}.`);
+    else variants.push({ name, design: other, result: found });
+  }
   const row = wish.corner && requirements ? hardest(requirements) : null;
-  const corner = row ? known(corners, row, () => cornerOf(design, row)) : null;
-  const near = wish.contacts ? known(contacts, design, () => contactsOf(design)) : [];
+  const corner = row ? await known(corners, row, () => solver.corner(design, row)) : null;
+  const near = wish.contacts ? await known(contacts, design, () => solver.contacts(design)) : [];
   if (typeof corner === 'string') missing.push(`The worst corner has no picture: ${corner}.`);
   if (typeof near === 'string') missing.push(`The contacts have no picture: ${near}.`);
   return {
@@ -52,24 +57,17 @@ export function furtherSections(design: Design, result: Result, requirements: re
   };
 }
 
-function known<K extends object, V>(store: WeakMap<K, V>, key: K, make: () => V): V {
-  if (!store.has(key)) store.set(key, make());
-  return store.get(key)!;
-}
-
-function solvedOf(design: Design): Result | string {
-  return known(solvedDesigns, design, () => {
-    const answer = solveDesign(design);
-    return answer.kind === 'result' ? answer.result : answer.kind === 'refused' ? answer.reason : complaintLine(answer.complaints[0]);
-  });
-}
-
-function cornerOf(design: Design, row: RequirementResult): Corner | string {
-  const answer = solveCorner(design, row);
-  return answer.kind === 'corner' ? answer.corner : answer.reason;
-}
-
-function contactsOf(design: Design): readonly CloseUp[] | string {
-  const answer = closeUps(design);
-  return answer.kind === 'seen' ? answer.contacts : answer.kind === 'refused' ? answer.reason : complaintLine(answer.complaints[0]);
+/** A solver that failed, a worker that was stopped, is asked again the next time. */
+async function known<K extends object, V>(store: WeakMap<K, Promise<V | string>>, key: K, make: () => Promise<V | string>): Promise<V | string> {
+  let making = store.get(key);
+  if (making === undefined) {
+    making = make();
+    store.set(key, making);
+  }
+  try {
+    return await making;
+  } catch (error) {
+    store.delete(key);
+    return error instanceof Error ? error.message : String(error);
+  }
 }

@@ -1,8 +1,10 @@
 import type { CloseUpAnswer, CloseUpOptions } from '../contacts/close-up.ts';
 import type { MetalRow, RankAnswer, RankOptions } from '../contacts/rank-metals.ts';
 import type { Design } from '../design/types.ts';
+import type { CornerAnswer } from '../requirements/corner.ts';
 import type { JudgeOptions, Judgement } from '../requirements/judge.ts';
 import type { LookedAt, SearchedRange, SizeOptions, SizeResult } from '../requirements/size.ts';
+import type { Answer, RequirementResult } from '../result/types.ts';
 
 /**
  * The long computations that a panel of the page can start. A further kind is a row here and a row in job-kinds.ts. Everything in it survives a structured
@@ -13,6 +15,8 @@ export interface Jobs {
   size: { input: { design: Design; options: SizeOptions }; value: SizeResult; seen: LookedAt | SearchedRange };
   metals: { input: { design: Design; options: RankOptions }; value: RankAnswer; seen: MetalRow };
   closeUp: { input: { design: Design; options?: CloseUpOptions }; value: CloseUpAnswer; seen: never };
+  /** a design beside the page's own, such as a variant for the review sheet */ result: { input: { design: Design }; value: Answer; seen: never };
+  corner: { input: { design: Design; row: RequirementResult }; value: CornerAnswer; seen: never };
 }
 
 export type JobKind = keyof Jobs;

@@ -2,11 +2,14 @@ import { expect } from 'chai';
 import '../../components/hm-sheet/hm-sheet.ts';
 import type { HmSheet } from '../../components/hm-sheet/hm-sheet.ts';
 import { printPages } from '../../components/hm-sheet/print-pages.ts';
+import { JobClient, type RunJob } from '../../src/workers/job-client.ts';
+import { startJobWorker } from '../../src/workers/job-start.ts';
 import { expectAccessible } from './accessible.ts';
 import { button, heard, until } from './heard.ts';
 import { sample } from './sample.ts';
 
 const of = sample('pn-diode');
+const jobs = new JobClient(startJobWorker);
 let element: HmSheet;
 /** Files that would have been downloaded. */
 let files: { name: string; blob: Promise<Blob> }[];
@@ -37,7 +40,7 @@ describe('the review sheet in its dialog', () => {
     };
     Object.defineProperty(window, 'showSaveFilePicker', { value: undefined, configurable: true, writable: true });
     element = document.createElement('hm-sheet');
-    Object.assign(element, { ...of, plateLook: { depth: 'true' } });
+    Object.assign(element, { ...of, plateLook: { depth: 'true' }, run: jobs.run });
     document.body.append(element);
     await element.updateComplete;
     element.show();
@@ -135,6 +138,29 @@ describe('the review sheet in its dialog', () => {
     await element.updateComplete;
     await sections.updateComplete;
     expect(sections.chosen.workings).to.have.length(0);
+  });
+
+  it('solves nothing on the page: it asks a worker, says so while that takes long, and asks anew after a worker that failed', async () => {
+    const asked: string[] = [];
+    let fail!: () => void;
+    element.run = ((kind: string) => {
+      asked.push(kind);
+      return asked.length === 1 ? { outcome: new Promise((end) => (fail = () => end({ kind: 'fault', message: 'out of memory' }))), cancel: () => undefined } : jobs.run(kind as 'result', { design: of.design });
+    }) as unknown as RunJob;
+    const other = structuredClone(of.design);
+    element.others = [{ id: 'b', name: 'another', design: other }];
+    await element.updateComplete;
+    const sections = inside<HTMLElementTagNameMap['hm-sheet-sections']>('hm-sheet-sections')!;
+    await sections.updateComplete;
+    const remark = (): string => inside<HTMLElement>('.remark')!.textContent!;
+    sections.shadowRoot!.querySelector('input')!.click();
+    await until('a word while it takes long', () => remark().includes('Working out'));
+    expect(asked).to.deep.equal(['result']);
+    fail();
+    await until('the reason', () => remark().includes('another has no result: out of memory'));
+    type('revision', 'rev 8');
+    await until('no reason any more', () => remark() === '' && asked.length === 2);
+    await until('a page of the other', () => / of [4-9]/.test(inside<HTMLElement>('[role=group] span')!.textContent!));
   });
 
   it('says why another design has no place on the sheet, and draws the rest', async () => {

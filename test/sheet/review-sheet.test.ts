@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { closeUps } from '../../src/contacts/close-up.ts';
 import { starters } from '../../src/design/starters/index.ts';
 import { plainText, type Drawing } from '../../src/drawing/shapes.ts';
 import { svgText } from '../../src/drawing/svg-text.ts';
@@ -108,12 +109,14 @@ describe('the review sheet', () => {
     for (const page of pages) expect(overlaps(page)).toEqual([]);
   });
 
-  it('of ten layers has room for another design over it, its contact from near and a figure’s workings', () => {
+  it('of ten layers has room for another design over it, its contact from near and a figure’s workings', async () => {
     const design = tenLayers();
     const other = { ...tenLayers(), title: 'thinner' };
     other.layers = other.layers.map((layer) => ({ ...layer, thickness: '40 nm' }));
     const result = solved(design);
-    const { sections, missing } = furtherSections(design, result, null, { over: [{ name: 'thinner', design: other }], base: 'base', corner: false, contacts: true, workings: [{ table: 'layers', index: 0, column: 'ecMinusEf' }] });
+    const { sections, missing } = await furtherSections(design, result, null, { over: [{ name: 'thinner', design: other }], base: 'base', corner: false, contacts: true, workings: [{ table: 'layers', index: 0, column: 'ecMinusEf' }] }, {
+      result: async (design) => solved(design), corner: async () => 'none is asked for', contacts: async (design) => { const answer = closeUps(design); return answer.kind === 'seen' ? answer.contacts : answer.kind; },
+    });
     const pages = reviewSheet({ ...inputOf('pn-diode'), design, result, requirements: [], ...sections });
     sheetPdf(pages, FONTS, { title: design.title, author: '', provenance: result.provenance });
     expect(missing).toEqual([]);
