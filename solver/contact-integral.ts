@@ -1,6 +1,6 @@
-import type { BarrierShape } from './barrier-shape.ts';
+import { METAL_BAND, type BarrierShape } from './barrier-shape.ts';
 import { waveStepsFor, waveTransmission } from './exact-transmission.ts';
-import { integratePeaked } from './peaked-integral.ts';
+import { integratePeaked, type PeakedResult } from './peaked-integral.ts';
 import { integrate } from './quadrature.ts';
 import { logTransmission, type LogTransmission, type Transmission } from './transmission.ts';
 import { wkbExponent, type Dispersion } from './wkb.ts';
@@ -29,13 +29,21 @@ const MOST_FINENESS = 16;
 /** Places at which the stretch of energies that counts is looked for, and how far below the peak it ends, in natural logarithms. */
 const SCAN = 18;
 const DEPTH = 18;
+/** A place of that stretch whose neighbour lies so much lower is too far from it; and how often they are halved at most. */
+const FAR = 60;
+const MOST_NARROWINGS = 60;
 /** Panels that an integral may take. A wave kept between two steps of a thick undoped layer rings in energy more finely than can be followed: the error says so. */
 const MOST_PANELS = { wkb: 24, kemble: 24, exact: 14 };
 /** Above this error T itself is summed, for an average over its ringing comes out better than its logarithm; and the panels that this may take. */
 const RINGING = 1e-3;
 const MOST_RINGING = 14;
+/** Errors beyond which there is no figure: of T by its steps, and of the whole, which may still tell the decade. */
+const LOST = 1;
+const LOST_DECADE = 9;
 /** With T = 1 above the top, a part so small that T is not looked at there. */
 const NEXT_TO_NOTHING = 1e-8;
+/** The smallest root of (E - edge)/kT that is looked at where there is no barrier. */
+const SMALLEST_ROOT = 1e-4;
 /** A barrier below this many kT is none. */
 const NO_BARRIER = 1e-3;
 /** Reach above the top and above EF, kT. */
@@ -49,7 +57,7 @@ const MOST_BENDS = 6;
 const NEAR = 1e-4;
 
 /**
- * ln of Int T f dE/kT above the neutral edge, with its relative error: of the integral over energy, and of that over depth.
+ * ln of Int T f dE/kT above the neutral edge, with its relative error: of the integral over energy, and of that over depth. Infinite where waves cannot be followed well enough for a figure.
  *
  * @param finer  the same barrier in cells as many times finer
  *
@@ -65,7 +73,10 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
   const rough: LogTransmission = (energy) => (energy >= top ? 0 : -wkbExponent(shape, energy, dispersion));
   const stretch = axis ? stretchOf(axis, rough, above, kT) : { from: 0, to: 0, place: 0, peak: above, energies: [top], lowest: top };
   const { transmission, error: depthError } = settled(shape, finer, kind, dispersion, kind === 'exact' ? [stretch.lowest, ...stretch.energies] : stretch.energies, Math.min(1, accuracy / ACCURACY));
+  if (!(depthError < LOST)) return { log: -Infinity, error: Infinity };
   const shift = stretch.peak;
+  // The metal's band holds holes no deeper than its bottom.
+  const ceiling = kind === 'exact' && shape.carrier === 'hole' ? METAL_BAND - NO_BARRIER * kT : Infinity;
   let sum = 0;
   let error = 0;
   if (axis) {
@@ -76,10 +87,11 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
       cheap: (x: number): number => axis.logShare(x, kT) + rootAt(x),
     };
     const from = kind === 'exact' ? Math.max(stretch.from, 1e-7) : stretch.from;
-    const inner = [...axis.ends, stretch.place].filter((x) => x > from && x < stretch.to).sort((a, b) => a - b);
+    const to = Math.min(stretch.to, axis.place(ceiling));
+    const inner = [...axis.ends, stretch.place].filter((x) => x > from && x < to).sort((a, b) => a - b);
     const bottom = Math.exp(above - shift);
-    const below = integratePeaked(integrand, [from, ...inner, stretch.to], top - edge > SHARP * kT ? KNEE.map((u) => axis.place(u * kT)) : [], shift, accuracy, kind === 'wkb' ? bottom : 0, MOST_PANELS[kind] + inner.length);
-    const direct = kind === 'exact' && below.error > RINGING * below.value ? integrate((x) => Math.exp(integrand.dear(x) + integrand.cheap(x) - shift), [from, ...inner, stretch.to], accuracy, 0, MOST_RINGING) : below;
+    const below = integratePeaked(integrand, [from, ...inner, to], top - edge > SHARP * kT ? KNEE.map((u) => axis.place(u * kT)) : [], shift, accuracy, kind === 'wkb' ? bottom : 0, MOST_PANELS[kind] + inner.length);
+    const direct = kind === 'exact' && below.error > RINGING * below.value ? integrate((x) => Math.exp(integrand.dear(x) + integrand.cheap(x) - shift), [from, ...inner, to], accuracy, 0, MOST_RINGING) : below;
     const { value, error: off } = direct.error < below.error ? direct : below;
     sum += value;
     error += off;
@@ -87,18 +99,34 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
   const rest = Math.exp(above - shift);
   if (kind === 'wkb' || rest < NEXT_TO_NOTHING * sum) sum += rest;
   else {
-    const first = Math.max(top, edge);
-    const start = kind === 'exact' ? first + 1e-9 * kT : first;
-    // Kemble's exponent bends where it stops to mirror the barrier.
-    const mirrored = kind === 'kemble' ? [top + (top - edge)] : [];
-    const last = Math.max(first, 0) + REACH * kT;
-    const ends = [start, ...[Math.max(first, 0) + 4 * kT, ...mirrored].filter((e) => e > start && e < last).sort((a, b) => a - b), last];
-    const integrand = { dear: transmission, cheap: (energy: number): number => logOccupancy(energy / kT) - Math.log(kT) };
-    const over = integratePeaked(integrand, ends, KNEE.map((u) => u * kT), shift, accuracy, sum, MOST_PANELS[kind]);
+    const over = overTheTop(shape, transmission, kind, shift, accuracy, sum, ceiling);
     sum += over.value;
     error += over.error;
   }
-  return { log: shift + Math.log(sum), error: CAUTION * (error / sum + depthError) };
+  // In the metal's band there are no holes so deep: nothing passes at all.
+  if (sum === 0) return { log: -Infinity, error: depthError };
+  const off = CAUTION * (error / sum + depthError);
+  return Number.isFinite(sum) && off < LOST_DECADE ? { log: shift + Math.log(sum), error: off } : { log: -Infinity, error: Infinity };
+}
+
+/** The part above the barrier's top, or above the edge where there is no barrier. @param known  the part below, on the same scale */
+function overTheTop(shape: BarrierShape, transmission: LogTransmission, kind: Transmission, shift: number, accuracy: number, known: number, ceiling: number): PeakedResult {
+  const { edge, top, kT } = shape;
+  const first = Math.max(top, edge);
+  const last = Math.min(ceiling, Math.max(first, 0) + REACH * kT);
+  if (!(last > first)) return { value: 0, error: 0, evaluations: 0 };
+  if (kind === 'exact' && first === edge) {
+    // From the neutral edge on the wave's T grows as the root w of (E - edge)/kT, and is smooth in w.
+    const end = Math.sqrt((last - first) / kT);
+    const integrand = { dear: (w: number): number => transmission(first + kT * w * w) - Math.log(w), cheap: (w: number): number => logOccupancy(first / kT + w * w) + Math.log(2 * w * w) };
+    const ends = [SMALLEST_ROOT, ...[0.5, 2].filter((w) => w < end), end];
+    return integratePeaked(integrand, ends, KNEE.filter((u) => u > first / kT).map((u) => Math.sqrt(u - first / kT)), shift, accuracy, known, MOST_PANELS.exact);
+  }
+  // Kemble's exponent bends where it stops to mirror the barrier.
+  const mirrored = kind === 'kemble' ? [top + (top - edge)] : [];
+  const ends = [first, ...[Math.max(first, 0) + 4 * kT, ...mirrored].filter((e) => e > first && e < last).sort((a, b) => a - b), last];
+  const integrand = { dear: transmission, cheap: (energy: number): number => logOccupancy(energy / kT) - Math.log(kT) };
+  return integratePeaked(integrand, ends, KNEE.map((u) => u * kT), shift, accuracy, known, MOST_PANELS[kind]);
 }
 
 /** Energies from the edge to the top by a coordinate that runs through one unit a piece. */
@@ -171,7 +199,9 @@ function stretchOf(axis: EnergyAxis, rough: LogTransmission, above: number, kT: 
     if (x > 0 && x < pieces) places.push(x);
   }
   places.sort((a, b) => a - b);
-  const logs = places.map((x) => rough(axis.energy(x)) + axis.logShare(x, kT));
+  const logAt = (x: number): number => rough(axis.energy(x)) + axis.logShare(x, kT);
+  const logs = places.map(logAt);
+  narrow(places, logs, logAt, above);
   const best = logs.indexOf(Math.max(...logs));
   const peak = Math.max(above, logs[best]);
   const kept = logs.map((v, j) => (v > peak - DEPTH ? j : -1)).filter((j) => j >= 0);
@@ -184,12 +214,38 @@ function stretchOf(axis: EnergyAxis, rough: LogTransmission, above: number, kT: 
   return { from, place: places[best], to: last + 1 < places.length ? places[last + 1] : pieces, peak, energies: [...new Set(energies)], lowest: axis.energy(from) };
 }
 
+/**
+ * Adds places to a scan until none next to the peak, nor next to where the integrand ends, lies far below its neighbour: a thick barrier in the cold moves it by thousands from one place to the
+ * next, and the peak between two of them would be beyond the largest number on the scale of either.
+ *
+ * @param places  rising, with their logarithms in `logs`; both grow
+ * @param above   ln of the part that is not scanned
+ */
+function narrow(places: number[], logs: number[], logAt: (x: number) => number, above: number): void {
+  const halve = (j: number): boolean => {
+    const x = 0.5 * (places[j] + places[j + 1]);
+    if (!(x > places[j] && x < places[j + 1])) return false;
+    places.splice(j + 1, 0, x);
+    logs.splice(j + 1, 0, logAt(x));
+    return true;
+  };
+  for (let step = 0; step < MOST_NARROWINGS; step++) {
+    const peak = Math.max(above, ...logs);
+    // A place of the integrand's stretch whose neighbour lies far below it.
+    const far = (j: number): boolean => Math.max(logs[j], logs[j + 1]) > peak - DEPTH && Math.abs(logs[j + 1] - logs[j]) > FAR;
+    let moved = false;
+    for (let j = places.length - 2; j >= 0; j--) if (far(j)) moved = halve(j) || moved;
+    if (!moved) return;
+  }
+}
+
 /** The transmission with cells or steps as fine as its accuracy needs, and how far off it is in depth at the energies that count, relative. */
 function settled(shape: BarrierShape, finer: (fineness: number) => BarrierShape, kind: Transmission, dispersion: Dispersion, energies: readonly number[], strictness: number): { transmission: LogTransmission; error: number } {
   const { edge, top, kT } = shape;
   if (kind === 'exact') {
-    // The edge itself passes nothing.
-    const steps = waveStepsFor(shape, energies.map((energy) => Math.max(energy, edge + 0.1 * kT)), strictness * WAVE_ACCURACY);
+    // The edge itself passes nothing, and up to a tenth of kT above it little goes.
+    const least = edge + 0.1 * kT;
+    const steps = waveStepsFor(shape, energies.map((energy) => Math.max(energy, least)), strictness * WAVE_ACCURACY, energies.some((energy) => energy < least));
     return { transmission: (energy) => waveTransmission(steps, energy), error: steps.error + strictness * WAVE_ACCURACY };
   }
   const exponentsOf = (barrier: BarrierShape, halved: boolean): number[] => energies.map((energy) => (energy < top ? wkbExponent(barrier, energy, dispersion, halved) : 0));

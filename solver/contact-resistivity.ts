@@ -23,7 +23,7 @@ export interface CarrierConductance {
   transmission: Transmission;
 }
 
-/** A carrier that cannot be computed, and which constant is missing, for a sentence. */
+/** A carrier that cannot be computed, and what is missing, for a sentence. */
 export interface MissingConstant {
   missing: string;
 }
@@ -39,7 +39,7 @@ const NO_BARRIER = 1e-3;
  * 1/rho_c of one carrier at zero bias: (A/k^2) Int T(E) f(E) dE, from the band edge of the neutral layer upwards. Padovani and Stratton, Solid-State Electron. 9, 695
  * (1966); Chang, Fang and Sze, Solid-State Electron. 14, 541 (1971). A is that of the neutral layer, from which the carriers come.
  *
- * @returns what is missing where the layer has no Richardson constant, or a layer on the way no tunnelling mass (asked for only where there is a barrier)
+ * @returns what is missing where the layer has no Richardson constant, a layer on the way no tunnelling mass (asked for only where there is a barrier), or the way is too long for a wave
  *
  * How the integral is done: contact-integral.ts. A carrier without a barrier has T = 1, but in the exact transmission, where the step to the metal's band throws some back.
  */
@@ -63,6 +63,7 @@ export function carrierConductance(stack: Stack, path: ContactPath, carrier: Car
     return 'missing' in fine ? shape : fine;
   };
   const { log, error } = logIntegral(shape, finer, kind, options.dispersion ?? 'one-band', options.accuracy ?? ACCURACY);
+  if (error === Infinity) return { missing: `steps enough to follow ${carrier} waves on their way ("wkb" has no such trouble)` };
   return { log: front + log, error, logFloor, transmission: kind };
 }
 

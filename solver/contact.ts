@@ -91,7 +91,12 @@ function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 
   // The exact way is long for carriers that hardly count: those by WKB.
   let minority = carrierConductance(stack, path, path.electrons ? 'hole' : 'electron', { transmission: 'wkb' });
   const known = isMissing(majority) ? -Infinity : majority.log;
-  if (stack.assumptions.transmission !== 'wkb' && !isMissing(minority) && minority.logFloor > known + Math.log(NEGLIGIBLE)) minority = carrierConductance(stack, path, path.electrons ? 'hole' : 'electron');
+  const counting = known + Math.log(NEGLIGIBLE);
+  if (stack.assumptions.transmission !== 'wkb' && !isMissing(minority) && minority.logFloor > counting) {
+    const asAsked = carrierConductance(stack, path, path.electrons ? 'hole' : 'electron');
+    // Where its waves cannot be followed, WKB must do if by that it does not count.
+    if (!isMissing(asAsked) || minority.log > counting) minority = asAsked;
+  }
   const kT = BOLTZMANN * stack.temperature;
   const edge = path.electrons ? path.efMinusEv : path.ecMinusEf;
   const bound = Math.log(LARGEST_RICHARDSON / BOLTZMANN ** 2) + Math.log(kT) + logOccupancyAbove(edge / kT);
@@ -99,19 +104,17 @@ function conduction(stack: Stack, profiles: Profiles, space: SpaceCharge, side: 
   if (!isMissing(n)) out.rhoCn = Math.exp(-n.log);
   if (!isMissing(p)) out.rhoCp = Math.exp(-p.log);
   if (!isMissing(majority)) out.rhoCFloor = Math.exp(-majority.logFloor);
-  const counts = isMissing(minority) ? bound > known + Math.log(NEGLIGIBLE) : true;
+  const counts = isMissing(minority) ? bound > counting : true;
   const missing = [majority, ...(counts ? [minority] : [])].flatMap((c) => (isMissing(c) ? [c.missing] : []));
   if (missing.length > 0) out.rhoCNotes.push(`no contact resistivity, for want of ${missing.join(' and ')}`);
   if (out.rhoCNotes.length > 0 || isMissing(majority)) return out;
   out.transmission = majority.transmission;
-  const share = isMissing(minority) ? 0 : Math.exp(minority.log - majority.log);
-  out.rhoC = Math.exp(-majority.log) / (1 + share);
-  out.rhoError = (majority.error + (isMissing(minority) ? 0 : share * minority.error)) / (1 + share);
-  // Beyond the largest number, or both shares of an overflow: the better of the two stands for the sum.
-  if (!Number.isFinite(share) && !isMissing(minority)) {
-    out.rhoC = Math.exp(-minority.log);
-    out.rhoError = minority.error;
-  }
+  const both = isMissing(minority) ? [majority] : [majority, minority];
+  const most = Math.max(...both.map((c) => c.log));
+  const weights = both.map((c) => (most === -Infinity ? 1 : Math.exp(c.log - most)));
+  const total = weights.reduce((sum, w) => sum + w);
+  out.rhoC = Math.exp(-most) / total;
+  out.rhoError = both.reduce((sum, c, i) => sum + weights[i] * c.error, 0) / total;
   if (out.rhoC === Infinity) {
     out.blocks = true;
     out.rhoCNotes.push('its resistivity is beyond the largest number: it blocks');

@@ -31,6 +31,10 @@ const MOST_STEPS = 8000;
 /** Where one step and two halves differ by more, the order of the method does not show yet. */
 const ASYMPTOTIC = 0.02;
 const ORDER = 6;
+/** Of waves below the lowest energy: the slowest looked at, as a share of it above the edge, and what all of them carry at most, as a share of the current. */
+const SLOWEST = 0.01;
+const SLOW_SHARE = 0.05;
+const ROUNDING = 1e-9;
 
 /** Steps of equal number in each cell, all the way. */
 export function waveSteps(shape: BarrierShape, division: number): WaveSteps {
@@ -42,30 +46,34 @@ export function waveSteps(shape: BarrierShape, division: number): WaveSteps {
  *
  * @param energies  of the wave, eV, above the neutral edge; the lowest tells where the way begins. One beginning for all keeps T(E) smooth.
  * @param accuracy  relative, of the transmission
+ * @param slower    whether waves below the lowest energy are asked for too: those begin in the neutral layer, and carry little
  */
-export function waveStepsFor(shape: BarrierShape, energies: readonly number[], accuracy: number): WaveSteps {
+export function waveStepsFor(shape: BarrierShape, energies: readonly number[], accuracy: number, slower = false): WaveSteps {
   const cells = shape.layer.length;
   const lowest = Math.min(...energies);
   const start = lastRough(shape, lowest, accuracy);
   // ln T moves by twice as much as the wave.
   const tolerance = accuracy / 2 / cells;
   let error = 0;
+  const slow = [lowest, shape.edge + SLOWEST * (lowest - shape.edge)];
   const parts = Array.from({ length: cells }, (_, k) => {
-    if (k > start) return 1;
+    if (k > start && !slower) return 1;
     let n = 1;
     let off = 0;
     for (;;) {
-      off = halvingError(shape, k, n, energies);
+      off = halvingError(shape, k, n, k > start ? slow : energies);
       if (off <= ASYMPTOTIC || n >= MOST_PARTS / 4) break;
       n *= 4;
     }
-    const finer = Math.max(1, Math.ceil((off / tolerance) ** (1 / ORDER)));
+    const share = k > start ? SLOW_SHARE : 1;
+    const finer = Math.max(1, Math.ceil(((share * off) / tolerance) ** (1 / ORDER)));
     const most = Math.max(n, Math.min(MOST_PARTS, Math.floor(MOST_STEPS / cells)));
     const chosen = Math.min(most, n * finer);
-    error += 2 * off * (n / chosen) ** ORDER;
+    error += 2 * share * off * (n / chosen) ** ORDER;
     return chosen;
   });
-  return stepsOf(shape, parts, error, start, start < cells - 1 ? lowest : -Infinity);
+  // An energy that is the lowest but for rounding begins there as well.
+  return stepsOf(shape, parts, error, start, start < cells - 1 ? lowest - ROUNDING * (lowest - shape.edge) : -Infinity);
 }
 
 function emptySteps(steps: number, cells: number, sign: number, error: number): WaveSteps {

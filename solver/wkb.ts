@@ -80,6 +80,8 @@ function smoothPart(shape: BarrierShape, energy: number, dispersion: Dispersion,
 /** From a crossing in `cell` to a place on its upper side, in this or a neighbouring cell of the layer. At the border of the two the barrier may bend, so each has points of its own. */
 function rootPart(shape: BarrierShape, energy: number, dispersion: Dispersion, cell: number, crossingAt: number, to: number, halved: boolean): number {
   const length = to - crossingAt;
+  // An energy within rounding of a cell's end crosses at that end, and nothing lies above it.
+  if (length === 0) return 0;
   const part = (owner: number, from: number, width: number): number => {
     let sum = 0;
     for (let g = 0; g < GAUSS_5.nodes.length; g++) {
