@@ -127,11 +127,13 @@ describe('contacts', () => {
   const tunnelling: CrystalMaterial = { ...CRYSTAL, tunnellingMass: { electron: 0.26 } };
   const metal: Boundary = { kind: 'barrier', source: { from: 'workFunction', workFunction: 4.6, slope: 'material' }, metal: 'M', imageForce: false };
 
-  it('say where the doping leaves the image force no meaning', () => {
-    expect(one([doped('donor', 5e20, 0, 'complete')], tunnelling, { top: barrier(0.6) })).toEqual([expect.stringMatching(/^top contact: so heavily doped that the image-force/)]);
+  it('say where the field leaves the image force no meaning, however cold it is', () => {
+    expect(one([doped('donor', 5e20, 0, 'complete')], tunnelling, { top: barrier(0.6) })).toEqual([expect.stringMatching(/^top contact: the field is so high that the image-force .* highest 0\.\d\d nm from the metal, less than atoms lie apart$/)]);
     expect(one([doped('donor', 5e20, 0, 'complete')], tunnelling, { bottom: barrier(0.6) })).toEqual([expect.stringMatching(/^bottom contact/)]);
     expect(one([doped('donor', 1e19, 0, 'complete')], tunnelling, { top: barrier(0.6) })).toEqual([]);
     expect(one([doped('donor', 5e20, 0, 'complete')], tunnelling, { top: { ...barrier(0.6), imageForce: false } as Boundary })).toEqual([]);
+    // E00 is many kT there, but the field is that of any light doping.
+    expect(one([doped('donor', 1e16, 0, 'complete')], tunnelling, { top: barrier(0.6), T: 4.2 })).toEqual([]);
     // A barrier below the band fills the surface: nothing is lowered there.
     expect(one([doped('donor', 5e20, 0, 'complete')], tunnelling, { top: barrier(-0.6) })).toEqual([]);
   });
