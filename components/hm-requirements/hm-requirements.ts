@@ -4,6 +4,7 @@ import { requirementQuantity, type RequirementQuantityName } from '../../src/des
 import type { Design, Requirement } from '../../src/design/types.ts';
 import { quantityOf, quantityWords } from '../../src/requirements/limits.ts';
 import { standingWords, verdictWords } from '../../src/requirements/verdict.ts';
+import { MOBILITY_NOTE, restsOnMobility } from '../../src/result/mobility-note.ts';
 import type { RequirementResult } from '../../src/result/types.ts';
 import { requirementFigures } from '../../src/workings/panel-figures.ts';
 import { addRequirement, removeRequirement, setRequirement, setRequirementQuantity } from '../../src/state/commands/index.ts';
@@ -101,6 +102,7 @@ export class HmRequirements extends LitElement {
         })}
       </ol>
       ${requirements.length === 0 ? nothing : html`<p class="doc">Bars: the limit in the middle, met to the right of it; half a bar is a factor of ten, or a difference as large as the limit.</p>`}
+      ${requirements.some(({ quantity, over }) => over === 'temperatureRange' && restsOnMobility(quantity)) ? html`<p class="doc">${MOBILITY_NOTE}</p>` : nothing}
       ${this.renderAdd()}`;
   }
 

@@ -2,6 +2,7 @@ import { LitElement, html, nothing, svg, type PropertyValues, type TemplateResul
 import { guard } from 'lit/directives/guard.js';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
+import { MOBILITY_NOTE, restsOnMobility } from '../../src/result/mobility-note.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawContourMap, type ContourMap } from '../../src/drawing/contour-map.ts';
 import { lineCode } from '../../src/drawing/margin-plot.ts';
@@ -277,6 +278,7 @@ export class HmSweeps extends LitElement {
       ${this.renderReading()}
       ${two ? nothing : this.renderKey()}
       <p id="summary" class="faint">${drawing.description}</p>
+      ${plan.axes.some(({ place }) => place.kind === 'temperature') && plan.figures.some(({ path }) => restsOnMobility(path)) ? html`<p class="doc">${MOBILITY_NOTE}</p>` : nothing}
       ${gapLines(plan, result).map((line) => html`<p class="wrong">${line}</p>`)}
       <div class="row"><button type="button" @click=${() => this.save('.csv')}>CSV</button><button type="button" @click=${() => this.save('.svg')}>SVG</button></div>
       ${this.renderTable()}

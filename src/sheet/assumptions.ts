@@ -2,8 +2,9 @@ import { readAssumptions } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import { DEFAULT_TOLERANCES, type Tolerances } from '../requirements/uncertainties.ts';
 import { qualityLine } from '../result/ledger.ts';
+import { MOBILITY_NOTE } from '../result/mobility-note.ts';
 import type { Result } from '../result/types.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 
 /** Stand on every page of a sheet: an estimate without them is taken for more than it is. */
 export const CAUTIONS = [
@@ -24,6 +25,7 @@ export function assumptionSentences(design: Design, result: Result, of: { set: R
     a.statistics === 'fermi-dirac' ? 'Fermi–Dirac statistics; dopants ionise incompletely by their own law (dilute, merging with the band, screened, or all ionised), as the table of layers says.' : 'Boltzmann statistics, as asked for: wrong in degenerate layers.',
     a.nonParabolic ? 'Bands are non-parabolic where a material has a parameter for it.' : 'Parabolic bands.',
     a.narrowing ? 'The gap narrows with doping by each material’s own law.' : 'No narrowing of the gap by doping.',
+    MOBILITY_NOTE,
     a.alignment === 'offsets' ? 'Bands line up by published offsets, else by natural valence edges, else by affinities; the table of junctions says which. An own offset wins.' : 'Bands line up by the affinity rule, as asked for.',
     ...(design.crystal ? [`Polar crystal: ${design.crystal.face === 'N' ? 'N' : 'metal'} face up, ${design.crystal.strain}${design.crystal.template === undefined ? '' : ` on ${design.crystal.template}`}; polarisation charge at every step of it.`] : []),
     ...(barrier ? [`Tunnelling through contacts by ${{ wkb: 'the WKB transmission', kemble: 'the uniform transmission of Kemble', exact: 'the exact transmission of the solved barrier' }[a.transmission]}.`] : []),

@@ -63,6 +63,16 @@ describe('sweeps', function () {
     await expectAccessible(element);
   });
 
+  it('says what a mobility leaves out where a figure rests on one and the temperature is swept', async () => {
+    await put({ view: { first: { ...temperature, points: '3' }, figures: ['layers.drift.n_cm3'] } });
+    await ran();
+    expect(text()).not.to.contain('Mobilities are those of 300 K');
+    element.view = { first: { ...temperature, points: '3' }, figures: ['layers.drift.sheet_ohm'] };
+    await settled(element);
+    await ran();
+    expect(text()).to.contain('Mobilities are those of 300 K');
+  });
+
   it('reads a point by arrow keys and puts it into the design with Enter, as one undoable edit', async () => {
     await put();
     await ran();
