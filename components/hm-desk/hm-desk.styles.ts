@@ -27,6 +27,12 @@ export const styles = css`
     box-shadow: inset 0 3px 0 var(--choice);
   }
   .remark {
+    display: inline-block;
+    max-width: 16rem;
+    overflow: hidden;
+    white-space: nowrap;
+    text-overflow: ellipsis;
+    vertical-align: bottom;
     font-weight: 400;
     font-size: 0.8125rem;
   }

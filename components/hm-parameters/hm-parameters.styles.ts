@@ -88,10 +88,6 @@ export const styles = css`
   }
   .row {
     margin-top: 0.5rem;
-    align-items: flex-end;
-  }
-  .row .press {
-    margin-top: 0;
   }
   @media (max-width: 720px) {
     .values > li {

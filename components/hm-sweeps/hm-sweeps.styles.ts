@@ -3,7 +3,6 @@ import { css } from 'lit';
 /** What sweeps, film and map share beyond every panel: a picture that is read by a cursor. */
 export const plotLook = css`
   .ask {
-    align-items: flex-start;
     --field-width: 7.5rem;
   }
   .ask + .ask {

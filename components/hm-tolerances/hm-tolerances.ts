@@ -198,7 +198,7 @@ export class HmTolerances extends LitElement {
 
   private renderWrong(): TemplateResult | typeof nothing {
     const rest = this.job.complaints.filter(({ path }) => path !== 'count' && path !== 'seed' && path !== 'figure');
-    return rest.length === 0 ? nothing : html`<div role="alert">${rest.map(({ path, message }) => html`<p class="wrong">${path}: ${message}.</p>`)}</div>`;
+    return rest.length === 0 ? nothing : html`<div role="alert">${rest.map(({ path, message }) => html`<p class="wrong">${path.replace(/^inputs\./, '')}: ${message}.</p>`)}</div>`;
   }
 
   private renderFound(found: Found): TemplateResult {

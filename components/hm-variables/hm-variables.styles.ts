@@ -34,7 +34,7 @@ export const styles = css`
   .row {
     display: flex;
     flex-wrap: wrap;
-    align-items: flex-end;
+    align-items: flex-start;
     gap: 0.25rem 0.5rem;
     --field-width: 5.75rem;
   }
@@ -55,6 +55,8 @@ export const styles = css`
   }
   .remove {
     min-height: 28px;
+    /* As low as the fields beside it, which have their labels above. */
+    margin-top: 1.15rem;
   }
   .note {
     font-size: 0.8125rem;

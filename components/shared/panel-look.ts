@@ -19,12 +19,16 @@ export const panelLook = css`
     font-size: 0.875rem;
     max-width: min(100%, 23rem);
   }
-  /* Choices before a run: label above its control, feet in line. */
+  /* Choices before a run: label above its control. Heads in line: a complaint under one field must not push it up over its neighbours, which then could not be clicked. */
   .ask {
     display: flex;
     flex-wrap: wrap;
-    align-items: flex-end;
+    align-items: flex-start;
     gap: 0.4rem 0.75rem;
+  }
+  /* As low as the controls beside it, which have their labels above. */
+  .ask > button {
+    margin-top: 1.15rem;
   }
   .ask label:not(.check) {
     display: flex;

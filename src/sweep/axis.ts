@@ -40,7 +40,7 @@ export function readAxis(design: Design, request: AxisRequest, set: Readonly<Rec
   const wrong = (path: string, message: string): void => void complaints.push({ path, message });
   const place = findPlace(design, request.variable);
   const { points, scale = 'linear' } = request;
-  if (!Number.isInteger(points) || points < 2) wrong('points', `is ${quoted(points)}; a sweep takes 2 points or more (one point is what "compute --set" solves)`);
+  if (!Number.isInteger(points) || points < 2) wrong('points', `is ${quoted(points)}; a sweep takes 2 points or more`);
   else if (points > MOST_POINTS) wrong('points', `is ${points}, more than the ${MOST_POINTS} that are taken; ask for fewer, or for several sweeps`);
   if (isComplaint(place)) return { ok: false, complaints: [place, ...complaints] };
   const { temperature: _, ...overrides } = set;
@@ -51,7 +51,7 @@ export function readAxis(design: Design, request: AxisRequest, set: Readonly<Rec
     return reading.ok ? reading.value : NaN;
   });
   const [from, to] = ends;
-  if (from === to) wrong('to', `is ${quoted(request.to)}, the same as the beginning: an empty sweep; move one end, or solve the one point with "compute --set"`);
+  if (from === to) wrong('to', `is ${quoted(request.to)}, the same as the beginning: an empty sweep; move one end`);
   if (from > to) wrong('from', `runs down from ${quoted(request.from)} to ${quoted(request.to)}; put the lower end first: from ${quoted(request.to)} to ${quoted(request.from)}`);
   if (scale === 'log' && from <= 0) wrong('from', `is ${quoted(request.from)}; a logarithmic sweep begins above zero: give a small positive value, or sweep on a linear scale`);
   if (complaints.length > 0) return { ok: false, complaints };

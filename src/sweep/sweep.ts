@@ -79,7 +79,9 @@ function endComplaints(plan: SweepPlan): Complaint[] {
       const { design, set } = putAt(plan, [axis.place.put(plan.design, axis.texts[at])]);
       const reading = toStack(design, set);
       if (reading.ok) return [];
-      const { message } = reading.complaints[0];
+      const { path, message: why } = reading.complaints[0];
+      // What stands elsewhere in the design, such as a formula that has no value there, is named.
+      const message = path.startsWith('custom.') ? `the design cannot be solved there: ${path} ${why}` : why;
       return [{ path: `${a === 0 ? '' : 'second.'}${at === 0 ? 'from' : 'to'}`, message }];
     }),
   );

@@ -47,8 +47,8 @@ export function planVariations(design: Design, request: VariationRequest): { ok:
   const { count, seed, distribution = 'normal', tolerances = 'all', set = {}, inputs: choices = {} } = request;
   const varied = withChosenTolerances(design, choices);
   const complaints: Complaint[] = [];
-  if (!Number.isInteger(count) || count < 1 || count > MOST_VARIATIONS) complaints.push({ path: 'count', message: `is ${String(count)}; a whole number from 1 to ${MOST_VARIATIONS} would do, such as 1000` });
-  if (!Number.isSafeInteger(seed) || seed < 0) complaints.push({ path: 'seed', message: `is ${String(seed)}; a whole number from 0 up would do, such as 1` });
+  if (!Number.isInteger(count) || count < 1 || count > MOST_VARIATIONS) complaints.push({ path: 'count', message: `is ${Number.isNaN(count) ? 'no number' : String(count)}; a whole number from 1 to ${MOST_VARIATIONS} would do, such as 1000` });
+  if (!Number.isSafeInteger(seed) || seed < 0) complaints.push({ path: 'seed', message: `is ${Number.isNaN(seed) ? 'no number' : String(seed)}; a whole number from 0 up would do, such as 1` });
   const reading = toStack(varied, set);
   if (!reading.ok) return { ok: false, complaints: [...complaints, ...reading.complaints.map((c) => ofInput(design, choices, c))] };
   const figures = findFigures(design, request.figures ?? []);

@@ -62,6 +62,20 @@ async function run(): Promise<void> {
 describe('the tolerance run', () => {
   afterEach(() => element.remove());
 
+  it('leaves the fields beside a complaint where they are, free to be clicked', async () => {
+    await put({ view: { count: '', tolerances: 'stated' } });
+    element.style.cssText = 'display: block; width: 1400px';
+    button(element, 'Draw the variations').click();
+    await settled(element);
+    const [count, seed] = element.shadowRoot!.querySelectorAll('hm-field');
+    expect(count.complaint).to.contain('is no number');
+    await count.updateComplete;
+    const boxes = [count, seed].map((field) => field.shadowRoot!.querySelector('input')!.getBoundingClientRect());
+    expect(boxes[1].top).to.be.closeTo(boxes[0].top, 1);
+    expect(count.shadowRoot!.querySelector('.complaint')!.getBoundingClientRect().top).to.be.at.least(boxes[1].bottom - 1);
+    expect(button(element, 'Draw the variations').getBoundingClientRect().bottom).to.be.closeTo(boxes[1].bottom, 3);
+  });
+
   it('asks for as many variations as typed, with seed and distribution, and remembers them in the view', async () => {
     await put();
     const views = heard(element, 'hm-view');

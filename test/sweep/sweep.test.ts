@@ -122,6 +122,19 @@ describe('a sweep', () => {
     expect(!first.done && first.value && first.value.progress).toEqual({ done: 16, total: 40 });
   });
 
+  it('is refused at an end where a formula of the design has no value, and names the formula', () => {
+    const design = structuredClone(schottky);
+    const { material } = design.layers[0];
+    const own = { id: material, gap: { formula: '1.12 eV + 1e-9 eV*K/(T - 350 K)' }, affinity: '4.05 eV', affinityShare: 0.5, permittivity: 11.7, permittivityHighFrequency: 11.7, electronMass: 1.09, holeMass: 1.15, source: 'invented' };
+    design.custom = { materials: [own] };
+    delete design.conditions.temperatureRange;
+    delete design.requirements;
+    const ends = (from: string, to: string) => planSweep(design, { axis: { variable: 'temperature', from, to, points: 3 } });
+    const reading = ends('300 K', '350 K');
+    expect(!reading.ok && reading.complaints).toEqual([{ path: 'to', message: expect.stringMatching(/^the design cannot be solved there: custom\.materials\[0\]\.gap\.formula has no finite value at 350 K.*Mend the formula/) }]);
+    expect(ends('300 K', '400 K').ok).toBe(true);
+  });
+
   it('is refused with place and mend before anything is solved', () => {
     const refusal = (change: Partial<SweepRequest['axis']>, more: Partial<SweepRequest> = {}): string => {
       const reading = planSweep(schottky, { axis: { ...doping, ...change }, ...more });

@@ -150,6 +150,7 @@ describe('a tolerance run', () => {
       return reading.complaints.map((c) => `${c.path}: ${c.message}`).join('\n');
     };
     expect(refusal({ count: 0 })).toMatch(/^count: .*from 1 to/);
+    expect(refusal({ count: Number.NaN })).toMatch(/^count: is no number; a whole number from 1 to/);
     expect(refusal({ seed: -1 })).toMatch(/^seed: /);
     expect(refusal({ figures: ['layers.n.m_cm3'] })).toMatch(/^figure: .*did you mean/);
     expect(refusal({ tolerances: 'none' })).toMatch(/nothing has a tolerance/);
