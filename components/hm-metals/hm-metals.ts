@@ -205,7 +205,7 @@ export class HmMetals extends LitElement {
     const barrier = shown(majority === 'n' ? 'barrierN' : 'barrierP', decimalText(majorityBarrier(row, majority)));
     const contact = this.design![side];
     const present = contact.kind === 'barrier' && contact.metal === row.metal;
-    const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack</b>` : nothing}</span></th>`;
+    const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack${contact.barrier === undefined ? '' : `, barrier given as ${contact.barrier}`}</b>` : nothing}</span></th>`;
     const open = this.open === row.metal;
     const value = valueOf(row);
     const acts = html`<td class="figure">${row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`}</td>`;

@@ -1,7 +1,7 @@
 import { bandWords, majorityBarrier, rankingSentence, regimeOf, valueOf, valueWords } from '../contacts/metal-words.ts';
 import { rankMetals, type RankAnswer, type RankOptions, type Ranking } from '../contacts/rank-metals.ts';
 import { InputError } from '../design/complaint.ts';
-import type { Design } from '../design/types.ts';
+import type { ContactInput, Design } from '../design/types.ts';
 import { quoted } from '../quantity/wording.ts';
 import { onOneLine } from '../requirements/verdict.ts';
 import { decimalText, figureText } from '../result/figure-text.ts';
@@ -23,9 +23,10 @@ export const metals: Command = {
   async run(args, streams) {
     const { file, set, options } = parseArguments(args, usage, { '--side': 'side', '--tolerances': 'tolerances' }, { '--json': 'json' });
     const design = await readDesignFile(file, streams);
-    const answer = ranked(design, { side: sideOf(options.side, design), set, tolerances: tolerancesOf(options.tolerances) }, streams);
+    const side = sideOf(options.side, design);
+    const answer = ranked(design, { side, set, tolerances: tolerancesOf(options.tolerances) }, streams);
     if (answer.kind === 'complaints') throw new InputError(answer.complaints);
-    streams.out(options.json === undefined ? rankingText(answer) : `${JSON.stringify(answer, null, 1)}\n`);
+    streams.out(options.json === undefined ? rankingText(answer, design[side]) : `${JSON.stringify(answer, null, 1)}\n`);
     return answer.rows.some(({ worst_ohm_cm2, blocks }) => worst_ohm_cm2 !== null || blocks !== null) ? EXIT.done : EXIT.noAnswer;
   },
 };
@@ -53,8 +54,8 @@ function ranked(design: Design, options: RankOptions, streams: Streams): RankAns
   }
 }
 
-/** The ranking as a table in a terminal's fixed pitch, and the reasons of those without a figure. */
-function rankingText(ranking: Ranking): string {
+/** The ranking as a table in a terminal's fixed pitch, and the reasons of those without a figure. @param there  what is on this end now */
+function rankingText(ranking: Ranking, there: ContactInput): string {
   const { rows, majority } = ranking;
   const heading = ['metal', `phi_B${majority} (eV)`, 'rho_c (ohm cm^2)', 'least ... most', 'worst', 'regime', 'barrier', 'worst at'];
   const known = rows.filter(({ reason }) => reason === null);
@@ -66,7 +67,7 @@ function rankingText(ranking: Ranking): string {
   const line = (cells: string[]): string => cells.map((cell, i) => (i === cells.length - 1 ? cell : cell.padEnd(widths[i]))).join('  ').trimEnd();
   return `${[
     onOneLine(rankingSentence(ranking)), '', line(heading), ...table.map(line),
-    ...(known.some(({ present }) => present) ? ['', '* on the stack now'] : []),
+    ...(known.some(({ present }) => present) ? ['', onOneLine(`* on the stack now${there.kind === 'barrier' && there.barrier !== undefined ? `, but with a barrier given as ${there.barrier}, which this table leaves out` : ''}`)] : []),
     ...(known.length < rows.length ? ['', 'without a figure:', ...rows.filter(({ reason }) => reason !== null).map(({ metal, reason }) => onOneLine(`  ${metal}: ${reason}`))] : []),
     ...ranking.notes.map((note) => onOneLine(`note: ${note}`)),
   ].join('\n')}\n`;

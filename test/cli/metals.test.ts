@@ -49,6 +49,12 @@ describe('halfmark metals', () => {
     expect(progress.length === 0 || progress[progress.length - 1] === '').toBe(true);
   });
 
+  it('says where the metal of the stack has a barrier of its own, which the table leaves out', async () => {
+    const { out } = await call('metals', file({ top: { kind: 'barrier', metal: 'Ti', barrier: '0.55 eV' } }));
+    expect(out).toContain('\n* on the stack now, but with a barrier given as 0.55 eV, which this table leaves out\n');
+    expect((await call('metals', file())).out).toContain('\n* on the stack now\n');
+  });
+
   it('writes the ranking as JSON, with values of variables for this run', async () => {
     const plain = JSON.parse((await call('metals', file(), '--json')).out) as Ranking;
     const more = JSON.parse((await call('metals', file(), '--json', '--set', 'Ncap=2e20 cm^-3')).out) as Ranking;
