@@ -9,7 +9,7 @@ import { allKeys, checkedWords, entryOf, keysInUse, kindOf, presetOf, shownEntry
 import { formulaPreview, valueComplaint } from '../../src/parameters/check-value.ts';
 import { chooseRival, rivalsOf, type Rival } from '../../src/parameters/rivals.ts';
 import { formulaOver, valueKind } from '../../src/parameters/value-kind.ts';
-import { parameterWords } from '../../src/sheet/parameter-words.ts';
+import { parameterWords } from '../../src/parameters/parameter-words.ts';
 import { addBarrier, resetCustomValue, setCustomValue } from '../../src/state/commands/index.ts';
 import { complaintsWithin } from '../shared/complaint-at.ts';
 import { tell } from '../shared/events.ts';

@@ -3,8 +3,8 @@ import { presetCatalogue, type Catalogue } from '../design/catalogue.ts';
 import { keyText, type AnyEntry, type EntryKey } from '../design/entry-key.ts';
 import { textAtPath } from '../design/entry-path.ts';
 import type { Design, DopantInput, MaterialInput, MetalInput } from '../design/types.ts';
-import { entryValues, origin, type ValueOrigin } from '../sheet/entry-values.ts';
-import { parameterWords } from '../sheet/parameter-words.ts';
+import { entryValues, origin, type ValueOrigin } from './entry-values.ts';
+import { parameterWords } from './parameter-words.ts';
 import { missingFormulas, missingValues, valueKind } from './value-kind.ts';
 import type { KindName } from '../quantity/kinds.ts';
 

@@ -1,7 +1,7 @@
 import { presetCatalogue } from '../design/catalogue.ts';
 import type { EntryKey } from '../design/entry-key.ts';
 import type { MetalInput } from '../design/types.ts';
-import { entryValues, type EntryValue } from '../sheet/entry-values.ts';
+import { entryValues, type EntryValue } from './entry-values.ts';
 
 /**
  * Which values of a design's own entry are its own: an entry that was made to change one value keeps the published ones, with where they stand.

@@ -9,7 +9,7 @@ import { figureText } from '../result/figure-text.ts';
 import type { Result } from '../result/types.ts';
 import { changeSentences, differenceTable, originTable, type SheetVariant } from './comparison.ts';
 import { paragraph, sectionHeight, type Room, type Section } from './flow.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import type { SheetLook } from './look.ts';
 import { picturePiece } from './pictures.ts';
 import { tableSection } from './table.ts';

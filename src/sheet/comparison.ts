@@ -4,7 +4,8 @@ import { cellDifference, loneRows, partnerRow } from '../result/ledger-differenc
 import { ledgerTables, type LedgerTable } from '../result/ledger.ts';
 import type { Result } from '../result/types.ts';
 import { changeLog } from '../state/change-log.ts';
-import { heldTogether, printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
+import { heldTogether } from './lines.ts';
 import type { Cell, SheetTable } from './table.ts';
 
 /** Another design laid beside the sheet's own: a variant of the project, or a file. */

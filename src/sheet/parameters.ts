@@ -5,7 +5,7 @@ import type { ContactInput, Design, DopantInput, DopantRow } from '../design/typ
 import { isPair } from '../design/offset.ts';
 import { isOwnBarrier, ownValues } from '../parameters/own-value.ts';
 import type { Result } from '../result/types.ts';
-import { entryValues, origin, type EntryValue, type ValueOrigin } from './entry-values.ts';
+import { entryValues, origin, type EntryValue, type ValueOrigin } from '../parameters/entry-values.ts';
 
 /** Values of one entry that share where they stand. */
 export interface ParameterRow {

@@ -4,7 +4,8 @@ import { requirementQuantity, type RequirementQuantityName } from '../design/req
 import { writeNumber } from '../quantity/write-quantity.ts';
 import { BLOCKS, marginWords, unansweredWords, verdictWords } from '../requirements/verdict.ts';
 import type { RequirementResult, Result } from '../result/types.ts';
-import { heldTogether, printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
+import { heldTogether } from './lines.ts';
 import type { Cell, SheetTable } from './table.ts';
 
 /** Columns of the ledger that say more than its usual ones do, for a review. */

@@ -10,7 +10,7 @@ import { assumptionSentences, CAUTIONS } from './assumptions.ts';
 import { closeUpSections, comparisonSections, cornerSection } from './closer-looks.ts';
 import { MOST_VARIANTS, type SheetVariant } from './comparison.ts';
 import { pagesOf, paragraph, sectionHeight, type Piece, type Room, type Section } from './flow.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import { sheetLook, type Paper, type SheetLook, type SheetStyle } from './look.ts';
 import { picturePiece } from './pictures.ts';
 import { requirementTable, resultTables } from './result-tables.ts';

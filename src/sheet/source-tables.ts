@@ -1,8 +1,8 @@
 import type { Design } from '../design/types.ts';
 import type { Result } from '../result/types.ts';
-import { parameterWords } from './parameter-words.ts';
+import { parameterWords } from '../parameters/parameter-words.ts';
 import { parametersInUse, type ParameterRow } from './parameters.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import { inParts, type Cell, type SheetTable } from './table.ts';
 
 const CHECKED = { page: 'seen in print', memory: 'from memory of the work', computed: 'computed' } as const;

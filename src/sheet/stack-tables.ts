@@ -6,7 +6,7 @@ import { percentText } from '../result/figure-text.ts';
 import { regimeWords } from '../result/ledger-layers.ts';
 import type { Result } from '../result/types.ts';
 import { layerSpreads, spreadText, type Spread } from './layer-tolerances.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import { inParts, type Cell, type SheetTable } from './table.ts';
 
 const words = (text: string): Cell => [{ text }];

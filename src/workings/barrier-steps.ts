@@ -1,6 +1,6 @@
 import { barrierHeights, pinningSlope } from '../../solver/barrier.ts';
 import { isAlloy } from '../../solver/index.ts';
-import { origin } from '../sheet/entry-values.ts';
+import { origin } from '../parameters/entry-values.ts';
 import { affinitySteps, composition, gapSteps } from './bands-steps.ts';
 import type { End } from './contact-workings.ts';
 import { NO_SHIFTS, type BarrierShift, type Context } from './context.ts';

@@ -1,5 +1,5 @@
 import { BOLTZMANN, ELECTRON_MASS, ELEMENTARY_CHARGE, EPSILON_0, PLANCK } from '../../solver/constants.ts';
-import { printedUnits } from '../sheet/lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 
 /** Where a value comes from. */
 export type Origin =

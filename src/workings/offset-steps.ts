@@ -3,7 +3,7 @@ import { isAlloy } from '../../solver/index.ts';
 import { OFFSETS, type PublishedOffset } from '../design/catalogue.ts';
 import { isPair } from '../design/offset.ts';
 import { decimalText } from '../result/figure-text.ts';
-import { entryValues } from '../sheet/entry-values.ts';
+import { entryValues } from '../parameters/entry-values.ts';
 import { affinitySteps, composition, mixed, pureBands, type Worked } from './bands-steps.ts';
 import type { Context, Point } from './context.ts';
 import { formula } from './formula.ts';

@@ -2,7 +2,7 @@ import { sources } from '../../presets/index.ts';
 import type { Catalogue, Entry } from '../design/catalogue.ts';
 import type { EntryKey } from '../design/entry-key.ts';
 import { ownValues } from '../parameters/own-value.ts';
-import { entryValues, type ValueOrigin } from '../sheet/entry-values.ts';
+import { entryValues, type ValueOrigin } from '../parameters/entry-values.ts';
 import { known, type Known, type Origin } from './known.ts';
 
 /** Where a value of an entry stands, as the workings tell it. */

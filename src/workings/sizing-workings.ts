@@ -1,5 +1,5 @@
 import { CM_PER_NM } from '../../solver/units.ts';
-import { printedUnits } from '../sheet/lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import { requirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import type { Design } from '../design/types.ts';
 import type { PanelColumn } from '../quantity/panel-quantities.ts';

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { brokenLines, heldTogether, lineWidth, oneLine, printedUnits } from '../../src/sheet/lines.ts';
+import { printedUnits } from '../../src/quantity/printed-units.ts';
+import { brokenLines, heldTogether, lineWidth, oneLine } from '../../src/sheet/lines.ts';
 
 describe('lines of a text', () => {
   it('break at spaces and none is wider than the room', () => {
