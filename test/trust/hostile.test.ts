@@ -21,6 +21,7 @@ import { FONTS } from '../export/fonts.ts';
 import { objectsOf, readPdf } from '../export/read-pdf.ts';
 import { readCsv } from '../export/read-csv.ts';
 import { designFixture } from '../state/design-fixture.ts';
+import { NAMES } from './hostile-names.ts';
 
 /** Longest that a hostile text may hold the reader up, ms. A person would not notice a tenth of it; a busy machine is slower. */
 const PATIENCE = 3000;
@@ -206,11 +207,6 @@ describe('a backup that was edited by a hostile hand', () => {
   }, 60_000);
 });
 
-const NAMES = [
-  '<script>alert(1)</script>', '"><img src=x onerror=alert(1)>', "'><svg/onload=alert(1)>", ']]><script>1</script>', '<!--', '--><b>', '&lt;script&gt;', '&#x3c;script&#x3e;', '{{7*7}}${7*7}',
-  '=HYPERLINK("http://x","y")', '+1+1', '-1+1', '@SUM(A1)', '\t=1+1', '\r\n=1+1', '＝1+1', '"=1+1', ',=1+1', ';=1+1', "=cmd|' /C calc'!A0", 'a\u0000b', 'a\u202egnp.exe', 'a\ud800b', 'a\nb\tc',
-  ') Tj ET /JS (app.alert(1)) BT (', '\\) >> endobj 1 0 obj << /OpenAction', '%PDF-', 'javascript:alert(1)', 'url(http://x)', '\u2028\u2029', 'A'.repeat(3000),
-];
 const designs = NAMES.map((name): { name: string; design: Design } => {
   const design = designFixture();
   design.title = name;
