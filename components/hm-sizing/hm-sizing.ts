@@ -65,6 +65,7 @@ export class HmSizing extends LitElement {
   declare styleName: 'light' | 'dark';
   /** key of the choice in the menu; null: what the view remembers */ declare private key: string | null;
   /** range typed for a value that is no variable yet */ declare private ends: [string, string] | null;
+  /** what was last searched: a range about the value stays when a found value is put in */ private searched: { name: string; ends: [string, string] } | null = null;
   /** value typed to be put into the design; null: the best one */ declare private other: string | null;
 
   private readonly job = new JobController(this, 'size');
@@ -116,7 +117,8 @@ export class HmSizing extends LitElement {
   private range({ choice }: ChoiceOption): [string, string] {
     if (choice.kind === 'place') return this.ends ?? rangeAbout(textAtPlace(this.design!, choice.place) ?? '') ?? ['', ''];
     const row = this.variable(choice.name);
-    return row?.range ?? rangeAbout(row?.value ?? '') ?? ['', ''];
+    const searched = this.searched?.name === choice.name ? this.searched.ends : undefined;
+    return row?.range ?? searched ?? rangeAbout(row?.value ?? '') ?? ['', ''];
   }
 
   private setEnd(option: ChoiceOption, end: 0 | 1, text: string): void {
@@ -140,6 +142,7 @@ export class HmSizing extends LitElement {
       this.choose(`v ${name}`);
     }
     this.other = null;
+    this.searched = { name, ends: [from, to] };
     void this.job.start(this.run!, { design, options: { variable: name, from, to, ...(this.view.scale === undefined ? {} : { scale: this.view.scale }), ...(this.view.tolerances === undefined ? {} : { tolerances: this.view.tolerances }) } });
   }
 

@@ -195,6 +195,24 @@ describe('sizing', () => {
     expect(edits[1].next.variables![1].value).to.equal('77 nm');
   });
 
+  it('keeps the range that was searched when a value is put in, where the variable has none of its own', async () => {
+    const bare = design((d) => { delete d.variables![1].range; });
+    await put({ design: bare, view: { variable: 'tcap' } });
+    const ends = (): string[] => [field('from').value, field('to').value];
+    const searched = ends();
+    expect(Number.parseFloat(searched[0])).to.be.greaterThan(0);
+    button(element, 'Find the values').click();
+    await answered();
+    const edits = heard(element, 'hm-edit');
+    type('or another value', '150 nm');
+    await element.updateComplete;
+    button(element, 'Put it in').click();
+    element.design = edits[0].next;
+    await settled(element);
+    expect(element.design.variables![1].value).to.equal('150 nm');
+    expect(ends()).to.deep.equal(searched);
+  });
+
   it('says that what it found is of an earlier design once something else changed', async () => {
     await put({ view: { variable: 'tcap' } });
     button(element, 'Find the values').click();
