@@ -5,7 +5,7 @@ import { shown, type ShownStep, type Step } from '../workings/step.ts';
 import { originText } from '../workings/text.ts';
 import type { Workings } from '../workings/workings.ts';
 import { paragraph, type Piece, type Room, type Section } from './flow.ts';
-import { printedUnits } from './lines.ts';
+import { printedUnits } from '../quantity/printed-units.ts';
 import type { SheetLook } from './look.ts';
 import { mathBox, type MathBox } from './set-math.ts';
 import { tableSection, type SheetTable } from './table.ts';
