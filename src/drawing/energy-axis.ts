@@ -11,6 +11,7 @@ export interface EnergyAxis {
   title: string;
 }
 
+const LEAST_TICKS = 3;
 /** Room above and below the curves, as a share of their span. */
 const MARGIN = 0.08;
 /** How far an insulator's edges may stretch the axis up and down, as shares of the semiconductors' span: more for the barrier of electrons, the one asked for most. */
@@ -32,8 +33,10 @@ export function energyAxis(
   if (!(domain[1] > domain[0])) throw new RangeError(`no energy window: ${domain.join(' to ')} eV`);
   const perEv = (range[1] - range[0]) / (domain[1] - domain[0]);
   const y = (e: number): number => range[0] + (e - domain[0]) * perEv;
-  const wanted = Math.max(2, Math.floor(Math.abs(range[1] - range[0]) / 55));
-  const values = niceTicks(domain[0], domain[1], wanted);
+  let wanted = Math.max(2, Math.floor(Math.abs(range[1] - range[0]) / 55));
+  let values = niceTicks(domain[0], domain[1], wanted);
+  // Round steps are few in a low picture; one tick is no scale.
+  while (values.length < LEAST_TICKS) values = niceTicks(domain[0], domain[1], ++wanted);
   return {
     range, domain, y,
     energy: (at) => domain[0] + (at - range[0]) / perEv,

@@ -26,6 +26,14 @@ describe('the energy axis', () => {
     expect(1.12 / (domain[1] - domain[0])).toBeGreaterThan(0.15);
   });
 
+  it('has a scale in a low picture too: three ticks or more', () => {
+    for (const [low, high] of [[-0.95, 0.7], [-0.4, 0.9], [-3.9, 0.9], [0.1001, 0.1004]]) {
+      const { ticks } = energyAxis(inventedResult(), { range: [130, 0], window: [low, high] });
+      expect(ticks.length, `${low} to ${high}`).toBeGreaterThanOrEqual(3);
+      expect(new Set(ticks.map(({ label }) => label)).size).toBe(ticks.length);
+    }
+  });
+
   it('makes room for the vacuum level when asked', () => {
     const result = inventedResult();
     expect(energyAxis(result, { range: [500, 20] }).domain[1]).toBeLessThan(2);
