@@ -2,18 +2,12 @@ import type { ContactInput, DopantRow, LayerInput } from '../../src/design/types
 import type { ContactResult, IonisedResult, LayerResult } from '../../src/result/types.ts';
 import { textWidth } from '../../src/drawing/glyph-widths.ts';
 import { decimalText } from '../../src/result/figure-text.ts';
+import { raisedPowers } from '../../src/quantity/printed-units.ts';
 import { writeNumber } from '../../src/quantity/write-quantity.ts';
 import type { OwnOfLayer } from '../../src/parameters/own-entries.ts';
 import { OWN_SIGN } from '../shared/own-mark.ts';
 import { shortText } from '../shared/graded.ts';
 import { unitOf } from '../shared/typed-text.ts';
-
-/** Units as they are read, not as they are typed: cm^-3 gives cm⁻³. */
-export function readable(text: string): string {
-  return text.replace(/\^(-?\d+)/g, (_, power: string) => [...power].map((c) => SUPERSCRIPT[c] ?? c).join(''));
-}
-
-const SUPERSCRIPT: Record<string, string> = { '-': '⁻', '0': '⁰', '1': '¹', '2': '²', '3': '³', '4': '⁴', '5': '⁵', '6': '⁶', '7': '⁷', '8': '⁸', '9': '⁹' };
 
 export function materialText(layer: LayerInput): string {
   return layer.x === undefined ? layer.material : `${layer.material}, x = ${shortText(layer.x)}`;
@@ -24,7 +18,7 @@ export function dopantName(row: DopantRow): string {
 }
 
 function dopantText(row: DopantRow): string {
-  return `${dopantName(row)} ${readable(shortText(row.concentration))}`;
+  return `${dopantName(row)} ${raisedPowers(shortText(row.concentration))}`;
 }
 
 /** An expression says what it comes to: "2*Ncap" gives " = 2e18 cm⁻³". Plain values and shapes give nothing. */
@@ -36,9 +30,9 @@ export function worth(text: unknown, solved: number | null | undefined, unit: st
 /** One or two short lines for a contact: what it is, and its barrier for the majority carrier of the layer beside it, where the result has one. */
 export function contactText(contact: ContactInput, solved: ContactResult | undefined, type: 'n' | 'p' | 'i' = 'n'): string[] {
   if (contact.kind === 'neutral') return ['neutral'];
-  if (contact.kind === 'pinned') return ['pinned', readable(contact.level)];
-  if (contact.kind === 'open') return contact.sheetCharge === undefined ? ['open'] : ['open', readable(contact.sheetCharge)];
-  if (contact.barrier !== undefined) return ['barrier', readable(contact.barrier)];
+  if (contact.kind === 'pinned') return ['pinned', raisedPowers(contact.level)];
+  if (contact.kind === 'open') return contact.sheetCharge === undefined ? ['open'] : ['open', raisedPowers(contact.sheetCharge)];
+  if (contact.barrier !== undefined) return ['barrier', raisedPowers(contact.barrier)];
   if (solved?.kind !== 'barrier' || solved.metal !== contact.metal) return [contact.metal ?? 'metal'];
   const [symbol, barrier] = type === 'p' ? ['φBp', solved.barrier_p_eV] : ['φBn', solved.barrier_n_eV];
   return [contact.metal ?? 'metal', ...(barrier === null ? [] : [`${symbol} ${decimalText(barrier, 2)}\u00a0eV`])];
@@ -57,7 +51,7 @@ const signed = (own: boolean | undefined): string => (own ? ` ${OWN_SIGN}` : '')
 export function layerLines(layer: LayerInput, i: number, solved?: LayerResult, own: OwnOfLayer = NOTHING_OWN): string[] {
   const dopants = (layer.dopants ?? []).map((row, r) => `${dopantText(row)}${dopantWorth(row, solved?.ionised[r])}${signed(own.dopants[r])}`);
   return [
-    `${i + 1} ${layer.name}`, `${materialText(layer)}${worth(layer.x, solved?.x, '')}${signed(own.material)}`, `${readable(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}`,
+    `${i + 1} ${layer.name}`, `${materialText(layer)}${worth(layer.x, solved?.x, '')}${signed(own.material)}`, `${raisedPowers(layer.thickness)}${worth(layer.thickness, solved?.thickness_nm, 'nm')}`,
     ...(dopants.length === 0 ? ['undoped'] : dopants),
   ];
 }

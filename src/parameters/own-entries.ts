@@ -1,3 +1,4 @@
+import { isPair } from '../design/offset.ts';
 import type { ContactInput, Custom, Design, LayerInput } from '../design/types.ts';
 
 /** Which entries behind a layer are the design's own, in place of the published ones or beside them. */
@@ -31,8 +32,8 @@ export function ownRows(design: Design): OwnRows {
     if (words.length > 0) rows.layers.set(layer.name, words.join(', '));
   }
   layers.slice(1).forEach((below, i) => {
-    const pair = [layers[i].material, below.material];
-    if (custom.offsets?.some(({ first, second }) => pair.includes(first) && pair.includes(second) && first !== second)) rows.junctions.set(`${layers[i].name} / ${below.name}`, `offset of ${pair.join(' and ')}`);
+    const above = layers[i];
+    if (custom.offsets?.some((row) => isPair(row, above.material, below.material))) rows.junctions.set(`${above.name} / ${below.name}`, `offset of ${above.material} and ${below.material}`);
   });
   for (const side of ['top', 'bottom'] as const) {
     const contact = design[side];

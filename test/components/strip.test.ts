@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import fc from 'fast-check';
 import { carriedDopants } from '../../components/hm-layer-form/carried-dopants.ts';
-import { worth, contactText, fitsColumn, readable } from '../../components/hm-strip/column-text.ts';
+import { worth, contactText, fitsColumn } from '../../components/hm-strip/column-text.ts';
+import { raisedPowers } from '../../src/quantity/printed-units.ts';
 import { draggedThickness, scaledThickness, startEdgeDrag } from '../../components/hm-strip/edge-drag.ts';
 import { copied, inserted, removed } from '../../components/hm-strip/strip-acts.ts';
 import { landing, spread, stripGeometry } from '../../components/hm-strip/strip-geometry.ts';
@@ -82,7 +83,7 @@ describe('an edge that is dragged', () => {
 
 describe('texts of a column', () => {
   it('show powers as they are read', () => {
-    expect(readable('5e17 cm^-3')).toBe('5e17 cm⁻³');
+    expect(raisedPowers('5e17 cm^-3')).toBe('5e17 cm⁻³');
   });
 
   it('say what an expression comes to, and nothing for a plain value', () => {
