@@ -1,19 +1,6 @@
 import { css } from 'lit';
 
 export const styles = css`
-  h2 {
-    font-size: 0.9375rem;
-    font-weight: 600;
-    margin: 0;
-    display: inline;
-  }
-  summary {
-    border-bottom: 1px solid var(--ink);
-    margin-bottom: 0.25rem;
-  }
-  .inforce {
-    color: var(--faint);
-  }
   label {
     display: flex;
     flex-wrap: wrap;

@@ -2,6 +2,7 @@ import { LitElement, html, nothing, type TemplateResult } from 'lit';
 import type { AssumptionsInput, Design } from '../../src/design/types.ts';
 import { setAssumption } from '../../src/state/commands/index.ts';
 import { tell } from '../shared/events.ts';
+import { foldLook } from '../shared/fold-look.ts';
 import { look } from '../shared/look.ts';
 import { styles } from './hm-assumptions.styles.ts';
 
@@ -25,7 +26,7 @@ const TRANSMISSION: [NonNullable<AssumptionsInput['transmission']>, string][] = 
  * @fires hm-edit
  */
 export class HmAssumptions extends LitElement {
-  static override styles = [look, styles];
+  static override styles = [look, foldLook, styles];
   static override properties = { design: { attribute: false } };
 
   declare design: Design | null;

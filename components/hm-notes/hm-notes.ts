@@ -3,6 +3,7 @@ import type { Design } from '../../src/design/types.ts';
 import { setNotes } from '../../src/state/commands/index.ts';
 import '../hm-field/hm-field.ts';
 import { tell } from '../shared/events.ts';
+import { foldLook } from '../shared/fold-look.ts';
 import { look } from '../shared/look.ts';
 
 /**
@@ -12,21 +13,8 @@ import { look } from '../shared/look.ts';
 export class HmNotes extends LitElement {
   static override styles = [
     look,
+    foldLook,
     css`
-      h2 {
-        font-size: 0.9375rem;
-        font-weight: 600;
-        margin: 0;
-        display: inline;
-      }
-      summary {
-        border-bottom: 1px solid var(--ink);
-        margin-bottom: 0.25rem;
-        overflow-wrap: anywhere;
-      }
-      .first {
-        color: var(--faint);
-      }
       hm-field {
         display: block;
         --field-width: 100%;
@@ -51,7 +39,7 @@ export class HmNotes extends LitElement {
     const { notes = '' } = this.design;
     const [first] = notes.trim().split('\n');
     return html`<details>
-      <summary><h2>Notes</h2> <span class="first">${first === '' ? 'none' : first.length > 60 ? `${first.slice(0, 59)}…` : first}</span></summary>
+      <summary><h2>Notes</h2> <span class="inforce">${first === '' ? 'none' : first.length > 60 ? `${first.slice(0, 59)}…` : first}</span></summary>
       <hm-field label="Notes of this design, printed on the review sheet" lines .value=${notes} @field-accept=${(e: CustomEvent<string>) => this.accept(e.detail)}></hm-field>
     </details>`;
   }
