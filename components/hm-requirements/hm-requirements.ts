@@ -125,7 +125,7 @@ export class HmRequirements extends LitElement {
     if (status === 'error') return `${reason}${older}`;
     if (status !== 'complete') return `Not judged yet.${older}`;
     const met = rows.filter((row) => row.met).length;
-    const count = met < rows.length ? `${met} of ${rows.length} met` : met === 1 ? 'The one there is is met' : `All ${met} met`;
+    const count = met < rows.length ? `${met} of ${rows.length} met` : met === 1 ? 'The only one is met' : `All ${met} met`;
     return `${count}, judged in the worst case over temperatures and tolerances.`;
   }
 

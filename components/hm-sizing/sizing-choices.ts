@@ -55,5 +55,7 @@ export function rangeAbout(text: string): [string, string] | null {
   // Degrees Celsius and what is not above zero have no factors.
   if (!(value > 0) || /C$/.test(unit)) return null;
   const span = Object.hasOwn(SPANS, unit) ? SPANS[unit] : SPAN;
-  return [value / span, value * span].map((end) => `${writeNumber(Number(end.toPrecision(3)), 6)}${unit === '' ? '' : ` ${unit}`}`) as [string, string];
+  // A pure number up to one is a share in a design: of atoms, of a mixture, of pinning.
+  const most = unit === '' && value <= 1 ? 1 : Infinity;
+  return [value / span, Math.min(value * span, most)].map((end) => `${writeNumber(Number(end.toPrecision(3)), 6)}${unit === '' ? '' : ` ${unit}`}`) as [string, string];
 }

@@ -53,7 +53,8 @@ describe('what can be sized', () => {
   it('is searched about its value: a doping over decades, a thickness by factors', () => {
     expect(rangeAbout('1e17 cm^-3')).toEqual(['1e16 cm^-3', '1e18 cm^-3']);
     expect(rangeAbout('40 nm')).toEqual(['10 nm', '160 nm']);
-    expect(rangeAbout('0.3')).toEqual(['0.075', '1.2']);
+    // A share ends at the whole.
+    expect(['0.2', '0.3', '1', '1.2'].map(rangeAbout)).toEqual([['0.05', '0.8'], ['0.075', '1'], ['0.25', '1'], ['0.3', '4.8']]);
     for (const text of ['2*Ncap', '25 degC', '-0.2 eV', '0 nm', '', 'rubbish']) expect(rangeAbout(text)).toBe(null);
   });
 });
