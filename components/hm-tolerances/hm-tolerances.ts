@@ -136,7 +136,7 @@ export class HmTolerances extends LitElement {
         <option value="uniform" .selected=${distribution === 'uniform'}>uniform between the ends of the tolerance</option>
       </select></label>
       <label>tolerances <select @change=${(e: Event) => this.remember({ tolerances: (e.target as HTMLSelectElement).value === 'stated' ? 'stated' : 'all' })}>
-        <option value="all" .selected=${tolerances === 'all'}>stated, and defaults for the rest</option>
+        <option value="all" .selected=${tolerances === 'all'}>stated, and usual ones for the rest</option>
         <option value="stated" .selected=${tolerances === 'stated'}>only those that the design states</option>
       </select></label>
       <button type="button" class="go" ?disabled=${this.job.progress !== null || this.complaints.length > 0} @click=${() => this.start()}>Draw the variations</button>

@@ -32,7 +32,7 @@ function inputRow(row: InputRow, distribution: Distribution, complaint: string |
     <th scope="row">${label}</th>
     <td class=${complaint === null ? 'words' : 'words refused'}>
       <hm-field label-hidden label="Tolerance of ${label}" .value=${tolerance} .complaint=${complaint} @field-accept=${(e: CustomEvent<string>) => wishes.tolerance(row, e.detail.trim() === '' ? null : e.detail)}></hm-field>
-      <span class="doc">${variable !== null ? 'stated' : changed ? html`this run <button type="button" aria-label="Tolerance of ${label} back to ${usual}" @click=${() => wishes.tolerance(row, null)}>back to ${usual}</button>` : 'default'}</span>
+      <span class="doc">${variable !== null ? 'stated' : changed ? html`this run <button type="button" aria-label="Tolerance of ${label} back to ${usual}" @click=${() => wishes.tolerance(row, null)}>back to ${usual}</button>` : 'usual'}</span>
     </td>
     <td class="words">${complaint !== null ? '–' : span === null ? 'stays where it is' : `${span[0]} to ${span[1]}`}</td>
     <td class="words">
