@@ -17,7 +17,7 @@ export function logOccupancyAbove(u: number): number {
 
 /** Relative error asked of the integral over energy, and of T at one energy. */
 export const ACCURACY = 2e-6;
-const DEPTH_ACCURACY = 1e-6;
+const DEPTH_ACCURACY = 1.5e-6;
 const WAVE_ACCURACY = 1e-6;
 /** What is reported, over the estimates: of 1,600 random contacts between 4 and 600 K, 1 in 50 was off by more than its estimate, and none by more than three times. */
 const CAUTION = 2.5;
@@ -56,6 +56,12 @@ const SHARP = 40;
 const MOST_BENDS = 6;
 const NEAR = 1e-4;
 
+export interface LogIntegral {
+  log: number;
+  /** relative */ error: number;
+  /** energies times depths that T was looked at for */ work: number;
+}
+
 /**
  * ln of Int T f dE/kT above the neutral edge, with its relative error: of the integral over energy, and of that over depth. Infinite where waves cannot be followed well enough for a figure.
  *
@@ -65,15 +71,20 @@ const NEAR = 1e-4;
  * roots at both ends. The peak of T f is looked for first; what lies e^-18 below it is left out. ln T is smooth between the bends and is interpolated
  * (peaked-integral.ts), so that the occupancy may be as sharp as the cold makes it.
  */
-export function logIntegral(shape: BarrierShape, finer: (fineness: number) => BarrierShape, kind: Transmission, dispersion: Dispersion, accuracy: number): { log: number; error: number } {
+export function logIntegral(shape: BarrierShape, finer: (fineness: number) => BarrierShape, kind: Transmission, dispersion: Dispersion, accuracy: number): LogIntegral {
   const { edge, top, kT } = shape;
   const above = logOccupancyAbove(top / kT);
   const climbs = top - edge > NO_BARRIER * kT;
   const axis = climbs ? energyAxis(shape, kind === 'exact' ? [] : bendsOf(shape)) : null;
   const rough: LogTransmission = (energy) => (energy >= top ? 0 : -wkbExponent(shape, energy, dispersion));
   const stretch = axis ? stretchOf(axis, rough, above, kT) : { from: 0, to: 0, place: 0, peak: above, energies: [top], lowest: top };
-  const { transmission, error: depthError } = settled(shape, finer, kind, dispersion, kind === 'exact' ? [stretch.lowest, ...stretch.energies] : stretch.energies, Math.min(1, accuracy / ACCURACY));
-  if (!(depthError < LOST)) return { log: -Infinity, error: Infinity };
+  const { transmission: each, error: depthError, places } = settled(shape, finer, kind, dispersion, kind === 'exact' ? [stretch.lowest, ...stretch.energies] : stretch.energies, Math.min(1, accuracy / ACCURACY));
+  if (!(depthError < LOST)) return { log: -Infinity, error: Infinity, work: 0 };
+  let work = 0;
+  const transmission: LogTransmission = (energy) => {
+    work += places;
+    return each(energy);
+  };
   const shift = stretch.peak;
   // The metal's band holds holes no deeper than its bottom.
   const ceiling = kind === 'exact' && shape.carrier === 'hole' ? METAL_BAND - NO_BARRIER * kT : Infinity;
@@ -104,9 +115,9 @@ export function logIntegral(shape: BarrierShape, finer: (fineness: number) => Ba
     error += over.error;
   }
   // In the metal's band there are no holes so deep: nothing passes at all.
-  if (sum === 0) return { log: -Infinity, error: depthError };
+  if (sum === 0) return { log: -Infinity, error: depthError, work };
   const off = CAUTION * (error / sum + depthError);
-  return Number.isFinite(sum) && off < LOST_DECADE ? { log: shift + Math.log(sum), error: off } : { log: -Infinity, error: Infinity };
+  return Number.isFinite(sum) && off < LOST_DECADE ? { log: shift + Math.log(sum), error: off, work } : { log: -Infinity, error: Infinity, work };
 }
 
 /** The part above the barrier's top, or above the edge where there is no barrier. @param known  the part below, on the same scale */
@@ -240,13 +251,13 @@ function narrow(places: number[], logs: number[], logAt: (x: number) => number, 
 }
 
 /** The transmission with cells or steps as fine as its accuracy needs, and how far off it is in depth at the energies that count, relative. */
-function settled(shape: BarrierShape, finer: (fineness: number) => BarrierShape, kind: Transmission, dispersion: Dispersion, energies: readonly number[], strictness: number): { transmission: LogTransmission; error: number } {
+function settled(shape: BarrierShape, finer: (fineness: number) => BarrierShape, kind: Transmission, dispersion: Dispersion, energies: readonly number[], strictness: number): { transmission: LogTransmission; error: number; /** depths that one value of it looks at */ places: number } {
   const { edge, top, kT } = shape;
   if (kind === 'exact') {
     // The edge itself passes nothing, and up to a tenth of kT above it little goes.
     const least = edge + 0.1 * kT;
     const steps = waveStepsFor(shape, energies.map((energy) => Math.max(energy, least)), strictness * WAVE_ACCURACY, energies.some((energy) => energy < least));
-    return { transmission: (energy) => waveTransmission(steps, energy), error: steps.error + strictness * WAVE_ACCURACY };
+    return { transmission: (energy) => waveTransmission(steps, energy), error: steps.error + strictness * WAVE_ACCURACY, places: 3 * steps.drift.length };
   }
   const exponentsOf = (barrier: BarrierShape, halved: boolean): number[] => energies.map((energy) => (energy < top ? wkbExponent(barrier, energy, dispersion, halved) : 0));
   const apart = (a: number[], b: number[]): number => Math.max(...a.map((v, i) => Math.abs(v - b[i])));
@@ -255,7 +266,7 @@ function settled(shape: BarrierShape, finer: (fineness: number) => BarrierShape,
   let exponents = exponentsOf(fine, false);
   // Over the top the exponent counts only where it is small, and so is its error.
   const error = apart(exponents, exponentsOf(fine, true));
-  if (top - edge < COLD * kT && error < enough) return { transmission: logTransmission(fine, kind, dispersion), error };
+  if (top - edge < COLD * kT && error < enough) return { transmission: logTransmission(fine, kind, dispersion), error, places: fine.height.length };
   // In the cold the carriers pass near the foot of a barrier of many cells, where only other cells tell how far off these are.
   for (let fineness = 2; ; fineness *= 2) {
     fine = finer(fineness);
@@ -263,6 +274,6 @@ function settled(shape: BarrierShape, finer: (fineness: number) => BarrierShape,
     const off = apart(exponents, next);
     exponents = next;
     // The finer cells are better than the difference, by more than this in most places.
-    if (off / COARSER < enough || fineness >= MOST_FINENESS) return { transmission: logTransmission(fine, kind, dispersion), error: off / COARSER };
+    if (off / COARSER < enough || fineness >= MOST_FINENESS) return { transmission: logTransmission(fine, kind, dispersion), error: off / COARSER, places: fine.height.length };
   }
 }

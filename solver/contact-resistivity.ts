@@ -21,6 +21,7 @@ export interface CarrierConductance {
   /** relative, of the integrals over energy and depth */ error: number;
   /** the same with T = 1 above the neutral edge */ logFloor: number;
   transmission: Transmission;
+  /** energies times depths that the transmission was looked at for */ work: number;
 }
 
 /** A carrier that cannot be computed, and what is missing, for a sentence. */
@@ -53,18 +54,18 @@ export function carrierConductance(stack: Stack, path: ContactPath, carrier: Car
   const front = Math.log(constant / BOLTZMANN ** 2) + Math.log(kT);
   const logFloor = front + logOccupancyAbove(edge / kT);
   const kind = options.transmission ?? stack.assumptions.transmission;
-  if (highestEdge(path, carrier) <= edge + NO_BARRIER * kT && kind !== 'exact') return { log: logFloor, error: 0, logFloor, transmission: kind };
+  if (highestEdge(path, carrier) <= edge + NO_BARRIER * kT && kind !== 'exact') return { log: logFloor, error: 0, logFloor, transmission: kind, work: 0 };
   const shape = carrierBarrier(stack, path, carrier, kind, options.imageForce);
   if ('missing' in shape) return shape;
   // The image force may have taken the whole barrier.
-  if (shape.layer.length === 0 || (kind !== 'exact' && shape.top <= edge + NO_BARRIER * kT)) return { log: logFloor, error: 0, logFloor, transmission: kind };
+  if (shape.layer.length === 0 || (kind !== 'exact' && shape.top <= edge + NO_BARRIER * kT)) return { log: logFloor, error: 0, logFloor, transmission: kind, work: 0 };
   const finer = (fineness: number): BarrierShape => {
     const fine = carrierBarrier(stack, path, carrier, kind, options.imageForce, fineness);
     return 'missing' in fine ? shape : fine;
   };
-  const { log, error } = logIntegral(shape, finer, kind, options.dispersion ?? 'one-band', options.accuracy ?? ACCURACY);
+  const { log, error, work } = logIntegral(shape, finer, kind, options.dispersion ?? 'one-band', options.accuracy ?? ACCURACY);
   if (error === Infinity) return { missing: `steps enough to follow ${carrier} waves on their way ("wkb" has no such trouble)` };
-  return { log: front + log, error, logFloor, transmission: kind };
+  return { log: front + log, error, logFloor, transmission: kind, work };
 }
 
 /** The barrier of a carrier as one kind of transmission needs it; image force by default as the boundary says. @param fineness  cells as many times finer than usual */
