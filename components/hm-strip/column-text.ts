@@ -56,9 +56,10 @@ export function layerLines(layer: LayerInput, i: number, solved?: LayerResult, o
   ];
 }
 
-/** What a concentration comes to. With an activation the result's is another figure, so nothing is said. */
+/** What a concentration comes to. The result knows the active one: with an active share of its own the row says so. */
 function dopantWorth(row: DopantRow, solved: IonisedResult | undefined): string {
-  return row.activation === undefined ? worth(row.concentration, solved?.concentration_cm3, 'cm⁻³') : '';
+  const comesTo = worth(row.concentration, solved?.concentration_cm3, 'cm⁻³');
+  return comesTo === '' || row.activation === undefined ? comesTo : `${comesTo} active`;
 }
 
 /** Whether the lines of a column can be read in it. An upper bound of their widths serves: no page is measured. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import fc from 'fast-check';
 import { carriedDopants } from '../../components/hm-layer-form/carried-dopants.ts';
-import { worth, contactText, fitsColumn } from '../../components/hm-strip/column-text.ts';
+import { worth, contactText, fitsColumn, layerLines } from '../../components/hm-strip/column-text.ts';
 import { raisedPowers } from '../../src/quantity/printed-units.ts';
 import { draggedThickness, scaledThickness, startEdgeDrag } from '../../components/hm-strip/edge-drag.ts';
 import { copied, inserted, removed } from '../../components/hm-strip/strip-acts.ts';
@@ -11,7 +11,7 @@ import { complaintAt, complaintsWithin } from '../../components/shared/complaint
 import { leadingText, pointsFrom, pointsText, reshaped, shapeOf, shortText } from '../../components/shared/graded.ts';
 import { completed } from '../../components/shared/typed-text.ts';
 import { starters } from '../../src/design/starters/index.ts';
-import type { ContactResult } from '../../src/result/types.ts';
+import type { ContactResult, LayerResult } from '../../src/result/types.ts';
 
 const { design } = starters.find((s) => s.id === 'modulation-doped')!;
 
@@ -91,6 +91,13 @@ describe('texts of a column', () => {
     expect(worth('xAl', 0.25, '')).toBe(' = 0.25');
     for (const plain of ['80 nm', '1e17 cm^-3', '0.3', 0.3, { from: '0', to: '1', shape: 'linear' }]) expect(worth(plain, 1, 'nm')).toBe('');
     expect(worth('tcap', null, 'nm')).toBe('');
+  });
+
+  it('say of a doping with an active share how much of it is active', () => {
+    const solved = { ionised: [{ concentration_cm3: 1.8e20 }, { concentration_cm3: 2e19 }, { concentration_cm3: 4e19 }] } as LayerResult;
+    const layer = { name: 'pocket', material: 'Si', thickness: '10 nm', dopants: [{ dopant: 'P', concentration: 'Nsd', activation: 'aSd' }, { dopant: 'B', concentration: '2*Nwell' }, { dopant: 'As', concentration: '5e19 cm^-3', activation: 0.8 }] };
+    expect(layerLines(layer, 0, solved).slice(3)).toEqual(['P Nsd = 1.8e20 cm⁻³ active', 'B 2*Nwell = 2e19 cm⁻³', 'As 5e19 cm⁻³']);
+    expect(layerLines(layer, 0).slice(3), 'nothing is solved yet').toEqual(['P Nsd', 'B 2*Nwell', 'As 5e19 cm⁻³']);
   });
 
   it('give a metal its barrier for the carriers of the layer beside it', () => {
