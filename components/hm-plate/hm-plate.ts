@@ -54,6 +54,7 @@ export class HmPlate extends LitElement {
     dark: { state: true },
     holding: { state: true },
     overFigure: { state: true },
+    live: { state: true },
   };
 
   declare result: Result | null;
@@ -67,6 +68,7 @@ export class HmPlate extends LitElement {
   declare private dark: boolean;
   declare private holding: boolean;
   declare private overFigure: boolean;
+  /** the view while something is dragged: whoever draws this element anew meanwhile hands over the one before */ declare private live: PlateView | null;
 
   private plate: Plate | null = null;
   private readonly ids = `plate-${++plates}`;
@@ -90,6 +92,7 @@ export class HmPlate extends LitElement {
     this.dark = false;
     this.holding = false;
     this.overFigure = false;
+    this.live = null;
   }
 
   override connectedCallback(): void {
@@ -101,6 +104,10 @@ export class HmPlate extends LitElement {
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.darkness.removeEventListener('change', this.followDarkness);
+  }
+
+  private get seen(): PlateView {
+    return this.live ?? this.view;
   }
 
   /** Of the picture as it stands; null while there is none. */
@@ -117,7 +124,7 @@ export class HmPlate extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues): void {
-    const drawnFrom = ['result', 'view', 'stale', 'dark', 'variants'];
+    const drawnFrom = ['result', 'view', 'live', 'stale', 'dark', 'variants'];
     if (this.room.width === this.drawnWidth && !drawnFrom.some((name) => changed.has(name))) return;
     this.drawnWidth = this.room.width;
     this.plate = this.draw();
@@ -125,7 +132,7 @@ export class HmPlate extends LitElement {
 
   private draw(): Plate | null {
     if (!this.result || this.room.width < LEAST_WIDTH) return null;
-    const view = heldView(this.view);
+    const view = heldView(this.seen);
     return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, variants: [...this.variants], width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
   }
 
@@ -143,7 +150,7 @@ export class HmPlate extends LitElement {
     const { plate, result } = this;
     const reading = result && this.depth_nm !== null ? readingAt(result, this.depth_nm) : null;
     const input: ToolsInput = {
-      view: this.view, dimensions: plate?.dimensions ?? [], open: this.open, zoomedIn: this.view.window !== undefined || this.view.energyWindow !== undefined,
+      view: this.seen, dimensions: plate?.dimensions ?? [], open: this.open, zoomedIn: this.seen.window !== undefined || this.seen.energyWindow !== undefined,
       change: (change) => this.change(change), zoom: (factor) => this.zoom(factor), whole: () => this.whole(), toggle: (panel) => (this.open = { ...this.open, [panel]: !this.open[panel] }),
     };
     return html`
@@ -330,10 +337,10 @@ export class HmPlate extends LitElement {
     const { offsetX: x, offsetY: y } = event;
     if (hold?.kind === 'figure') {
       // Live, and told once it is let go: a drag is one change of the view.
-      this.view = { ...this.view, moved: { ...this.view.moved, [hold.id]: [hold.from[0] + x - hold.x, hold.from[1] + y - hold.y] } };
+      this.live = { ...this.seen, moved: { ...this.seen.moved, [hold.id]: [hold.from[0] + x - hold.x, hold.from[1] + y - hold.y] } };
       this.holding = true;
-    } else if (hold?.kind === 'pan' && this.view.window && this.plate && (hold.started || Math.abs(x - hold.x) > 4)) {
-      this.view = { ...this.view, window: panned(this.plate.axes.depth, this.total, hold.x - x) };
+    } else if (hold?.kind === 'pan' && this.seen.window && this.plate && (hold.started || Math.abs(x - hold.x) > 4)) {
+      this.live = { ...this.seen, window: panned(this.plate.axes.depth, this.total, hold.x - x) };
       Object.assign(hold, { x, started: true });
       this.holding = true;
     } else {
@@ -347,8 +354,9 @@ export class HmPlate extends LitElement {
     this.hold = null;
     if (!this.holding) return;
     this.holding = false;
-    if (hold?.kind === 'figure') tell(this, 'hm-view', { change: { moved: this.view.moved } });
-    else tell(this, 'hm-view', { change: { window: this.view.window } });
+    const { moved, window } = this.seen;
+    this.live = null;
+    this.change(hold?.kind === 'figure' ? { moved } : { window });
   }
 
   private pointerLeft(event: PointerEvent): void {
