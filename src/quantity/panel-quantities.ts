@@ -1,3 +1,5 @@
+import { columnOf } from './quantities.ts';
+
 /**
  * The figures that stand in panels beside the ledger, each once: its heading and what it means. The panels, the workings and the tests that hold both against each other go through these
  * tables, so that a figure is either in all of them or in none. Units come with the value: a requirement's are those of its quantity.
@@ -5,6 +7,12 @@
 export interface PanelQuantity {
   heading: string;
   words: string;
+}
+
+/** A figure of a contact that the ledger has too bears the ledger's words. */
+function ledger(id: 'barrierN' | 'barrierP' | 'rhoC' | 'rhoCn' | 'rhoCp' | 'saturation' | 'e00'): PanelQuantity {
+  const { heading, words } = columnOf('contacts', id);
+  return { heading, words };
 }
 
 export const PANEL_QUANTITIES = {
@@ -23,8 +31,8 @@ export const PANEL_QUANTITIES = {
   },
   /** of a metal on a surface */
   metal: {
-    barrierN: { heading: 'φBn', words: 'barrier for electrons, without the image-force lowering' },
-    barrierP: { heading: 'φBp', words: 'barrier for holes, without the image-force lowering' },
+    barrierN: ledger('barrierN'),
+    barrierP: ledger('barrierP'),
     rho: { heading: 'Contact resistivity', words: 'at the design’s temperature, nothing moved' },
     least: { heading: 'Least', words: 'least contact resistivity within the tolerances, at the design’s temperature' },
     most: { heading: 'Most', words: 'largest contact resistivity within the tolerances, at the design’s temperature' },
@@ -33,18 +41,18 @@ export const PANEL_QUANTITIES = {
   },
   /** of a contact seen from near */
   nearContact: {
-    barrierN: { heading: 'φBn', words: 'barrier for electrons, without the image-force lowering' },
-    barrierP: { heading: 'φBp', words: 'barrier for holes, without the image-force lowering' },
+    barrierN: ledger('barrierN'),
+    barrierP: ledger('barrierP'),
     lowering: { heading: 'Image-force lowering', words: 'what the image force takes off the barrier, by the closed form' },
     transport: { heading: 'Regime', words: 'how carriers pass the barrier' },
-    e00: { heading: 'E00', words: 'characteristic energy of tunnelling' },
-    rhoC: { heading: 'Contact resistivity', words: 'specific contact resistivity at zero bias through the solved barrier, both carriers' },
-    rhoCn: { heading: 'of electrons', words: 'contact resistivity of electrons alone' },
-    rhoCp: { heading: 'of holes', words: 'contact resistivity of holes alone' },
+    e00: ledger('e00'),
+    rhoC: ledger('rhoC'),
+    rhoCn: ledger('rhoCn'),
+    rhoCp: ledger('rhoCp'),
     rhoCFloor: { heading: 'Its floor', words: 'least contact resistivity that the majority carriers allow, without any barrier' },
     rhoCClosed: { heading: 'Closed form', words: 'the textbook’s closed form of the regime' },
     closedRatio: { heading: 'Solved / closed form', words: 'how wrong the closed form would be' },
-    saturation: { heading: 'Saturation current', words: 'thermionic emission of the majority carriers over the lowered barrier' },
+    saturation: ledger('saturation'),
     passage: { heading: 'Passes at', words: 'energy at which most of the current passes' },
   },
   /** of a figure over the variations of a tolerance run */

@@ -4,14 +4,14 @@ import { profileAt } from '../../solver/profile.ts';
 import type { Stack } from '../../solver/index.ts';
 import { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantity, type RequirementQuantityName } from '../design/requirement-quantities.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
-import type { Asked } from '../result/asked-result.ts';
+import type { AskedResult } from '../result/asked-result.ts';
 import type { ContactResult, JunctionResult, LayerResult } from '../result/types.ts';
 
 export { REQUIREMENT_QUANTITIES, requirementQuantity, type RequirementQuantity, type RequirementQuantityName };
 
 /** What a figure is read from: the result, and the stack of which it is. */
 export interface Solved {
-  result: Asked;
+  result: AskedResult;
   stack: Stack;
 }
 

@@ -3,7 +3,7 @@ import { contactResult, junctionResult, layerResult } from './from-solution.ts';
 import type { ContactResult, JunctionResult, ProfileResult, Result } from './types.ts';
 
 /** What figures are read from: a result's rows and the run of its conduction edge. A whole result is one. */
-export type Asked = Pick<Result, 'conditions' | 'layers' | 'junctions' | 'contacts'> & { profile: Pick<ProfileResult, 'ec_eV'> };
+export type AskedResult = Pick<Result, 'conditions' | 'layers' | 'junctions' | 'contacts'> & { profile: Pick<ProfileResult, 'ec_eV'> };
 
 /** What is known of a contact before anybody asks what it conducts. */
 const CHEAP: readonly (keyof ContactResult)[] = ['side', 'kind', 'metal', 'barrier_n_eV', 'barrier_p_eV', 'barrier_source', 'lowering_eV', 'surface_field_V_cm', 'e00_meV', 'transport', 'depletion_nm'];
@@ -14,7 +14,7 @@ const CHEAP: readonly (keyof ContactResult)[] = ['side', 'kind', 'metal', 'barri
  *
  * @throws {RangeError} not here but where a row is read that the solver cannot work out
  */
-export function askedResult(bands: SolvedBands): Asked {
+export function askedResult(bands: SolvedBands): AskedResult {
   const { stack, profiles } = bands;
   const capacitances = once(() => capacitancesOf(bands));
   return {

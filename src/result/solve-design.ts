@@ -3,7 +3,7 @@ import type { Complaint } from '../design/complaint.ts';
 import { placeOf } from '../design/place.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
-import { askedResult, type Asked } from './asked-result.ts';
+import { askedResult, type AskedResult } from './asked-result.ts';
 import { resultOf } from './from-solution.ts';
 import { provenanceOf } from './provenance.ts';
 import type { Answer, Result } from './types.ts';
@@ -35,7 +35,7 @@ export function solveDesign(design: Design, options: SolveDesignOptions = {}): S
 }
 
 /** The same for a run of many points: only what `read` reads of the answer is worked out, and it bears no provenance. */
-export function solveFigures<T>(design: Design, options: SolveDesignOptions, read: (rows: Asked) => T): NoAnswer | { kind: 'figures'; figures: T; profiles: Profiles } {
+export function solveFigures<T>(design: Design, options: SolveDesignOptions, read: (rows: AskedResult) => T): NoAnswer | { kind: 'figures'; figures: T; profiles: Profiles } {
   return answered(design, options, (stack, asked) => {
     const bands = solveBands(stack, asked);
     return isRefusal(bands) ? bands : { kind: 'figures', figures: read(askedResult(bands)), profiles: bands.profiles };

@@ -2,7 +2,7 @@ import { isRefusal, solveBands, type Profiles, type SolveOptions, type SolvedBan
 import type { Job } from '../batch/job.ts';
 import { scoreOf } from '../requirements/margin.ts';
 import { figureOf } from '../requirements/quantities.ts';
-import { askedResult, type Asked } from '../result/asked-result.ts';
+import { askedResult, type AskedResult } from '../result/asked-result.ts';
 import { drawCounts, reachOf, type Distribution } from './draw.ts';
 import { MovedStacks } from './moved-stacks.ts';
 import type { VariationPlan } from './plan.ts';
@@ -122,7 +122,7 @@ class VariationRunner {
 }
 
 interface SolvedStack {
-  result: Asked;
+  result: AskedResult;
   stack: Stack;
 }
 
