@@ -73,11 +73,8 @@ describe('reading a quantity', () => {
     }
   });
 
-  it('burns no time on hostile text', () => {
-    const started = Date.now();
+  it('comes to an end on hostile text, where a hang would run into the limit of every test', () => {
     for (const hostile of ['9^9^9^9', '('.repeat(400), '1' + '+1'.repeat(240), '-'.repeat(490) + '1', '2^'.repeat(200) + '2', 'x'.repeat(5e6), '1e999', '1/0', 'sqrt(-1)', 'log(0)']) expect(readQuantity(hostile, 'number').ok, hostile.slice(0, 40)).toBe(false);
-    // A hang would be seconds; this is no speed figure.
-    expect(Date.now() - started).toBeLessThan(5000);
   });
 
   it('does not read an hour, a bit or a kilotesla into a design', () => {
