@@ -14,6 +14,16 @@ export function isUsed(design: Design, set: Readonly<Record<string, string>>, na
   return usedIn(design, set, rest).has(name);
 }
 
+/** Whether a variable is a share of atoms and nothing else: every text that uses it is an active or a compensated share by itself. Such a share ends at 0 and at 1, whatever its tolerance. */
+export function isShareOfAtoms(design: Design, set: Readonly<Record<string, string>>, name: string): boolean {
+  const bare = (text: unknown): boolean => typeof text === 'string' && text.trim() === name;
+  const layers = design.layers.map((layer) => ({
+    ...layer,
+    dopants: (layer.dopants ?? []).map(({ activation = 1, compensation = 0, ...row }) => ({ ...row, activation: bare(activation) ? 1 : activation, compensation: bare(compensation) ? 0 : compensation })),
+  }));
+  return isUsed(design, set, name) && !isUsed({ ...design, layers }, set, name);
+}
+
 function usedIn(design: Design, set: Readonly<Record<string, string>>, parts: object): ReadonlySet<string> {
   const rows = design.variables ?? [];
   const { temperature: _, ...overrides } = set;

@@ -8,6 +8,7 @@ import { inUnit } from '../quantity/units.ts';
 import { didYouMean, quoted } from '../quantity/wording.ts';
 import { writeNumber, writeQuantity } from '../quantity/write-quantity.ts';
 import { energyText, shareText } from '../requirements/amount-text.ts';
+import { isShareOfAtoms } from '../requirements/governed.ts';
 import { uncertaintiesOf, type Tolerances, type Uncertainty } from '../requirements/uncertainties.ts';
 import { moved, readTolerance } from '../design/tolerance.ts';
 import { kindOf } from '../sweep/places.ts';
@@ -24,7 +25,7 @@ export type InputChoices = Readonly<Record<string, InputChoice>>;
 /** Something that a tolerance run moves. */
 export interface VariedInput extends Uncertainty {
   distribution: Distribution;
-  /** its ends as values, "285 nm" and "315 nm"; as changes where the value is none by itself */ span: [low: string, high: string];
+  /** its ends as values, "285 nm" and "315 nm", no further than it is drawn; as changes where the value is none by itself */ span: [low: string, high: string];
 }
 
 /** The design with the tolerances of this run in its variables. */
@@ -111,10 +112,11 @@ function spanOf(u: Uncertainty, design: Design, set: Readonly<Record<string, str
     if (value === undefined) return changes;
     const tolerance = readTolerance(u.tolerance, value, scope);
     const kind = kindOf(value);
+    const drawn = isShareOfAtoms(design, set, u.variable) ? (number: number): number => Math.min(Math.max(number, 0), 1) : (number: number): number => number;
     const text = (count: number): string | null => {
       const at = moved(value, tolerance, count);
       const number = kind === null ? null : inUnit(at, KINDS[kind].unit);
-      return kind === null || number === null ? null : writeQuantity(number, kind);
+      return kind === null || number === null ? null : writeQuantity(drawn(number), kind);
     };
     const ends = [text(-1), text(1)];
     return ends[0] === null || ends[1] === null ? changes : [ends[0], ends[1]];

@@ -37,6 +37,20 @@ describe('inputs of a tolerance run', () => {
     });
   });
 
+  it('end a share of atoms where it is drawn to, and no other number', () => {
+    const { dopants: [boron] = [], ...rest } = plain.layers.find(({ name }) => name === 'p')!;
+    const withShare = (row: object, more: Partial<Design> = {}): Design => ({ ...plain, ...more, variables: [...plain.variables!, { name: 'a', value: '0.9', tolerance: '20 %' }], layers: plain.layers.map((layer) => (layer.name === 'p' ? { ...rest, dopants: [{ ...boron, ...row }] } : layer)) });
+    const span = (design: Design): string => /, (\S+ to \S+), stated$/.exec(rows(planned({ tolerances: 'stated' }, design)).a)![1];
+    expect(span(withShare({ activation: 'a' }))).toBe('0.72 to 1');
+    expect(span(withShare({ activation: ' a ', compensation: 'a' }))).toBe('0.72 to 1');
+    // What is made of it may end elsewhere, so the number itself goes as far as its tolerance.
+    expect(span(withShare({ activation: 'a/2' }))).toBe('0.72 to 1.08');
+    expect(span(withShare({ concentration: 'a * 1e16 cm^-3', activation: 'a' }))).toBe('0.72 to 1.08');
+    const low = withShare({ compensation: 'a' });
+    low.variables![low.variables!.length - 1] = { name: 'a', value: '0.1', tolerance: '0.2' };
+    expect(span(low)).toBe('0 to 0.3');
+  });
+
   it('take another tolerance and another distribution one by one, and leave the design alone', () => {
     const plan = planned({ inputs: { tcore: { tolerance: '3 nm' }, 'p thickness': { tolerance: '20 nm', distribution: 'uniform' }, 'p B': { tolerance: '0 %' }, barrier: { tolerance: '20 meV' }, Nn: { distribution: 'uniform' } } });
     expect(rows(plan)).toEqual({
