@@ -1,4 +1,5 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
+import { isPair } from '../../src/design/offset.ts';
 import type { Design } from '../../src/design/types.ts';
 import { offsetComplaint, shownPairs, type ShownPair } from '../../src/parameters/pairs.ts';
 import { removePairOffset, setPairOffset } from '../../src/state/commands/index.ts';
@@ -21,6 +22,7 @@ interface Editing {
 /**
  * Band offsets of the pairs of materials that meet in the design: the published one, rivals to choose from, and one of the design's own with its source.
  * @fires hm-edit
+ * @fires offset-shelve  detail: an own offset to be put on the person's shelf
  */
 export class HmOffsets extends LitElement {
   static override styles = [look, formLook, styles];
@@ -51,7 +53,8 @@ export class HmOffsets extends LitElement {
       <span class="work">${pair.work}</span>
       <span class="acts">
         <button type="button" aria-expanded=${editing} @click=${() => (editing ? (this.editing = null) : void this.edit(pair))}>Change${spoken}</button>
-        ${pair.own ? html`<button type="button" @click=${() => this.change(removePairOffset(this.design!, pair.first, pair.second), `offset of ${name} as published`)}>Reset${spoken}</button>` : nothing}
+        ${pair.own ? html`<button type="button" @click=${() => this.change(removePairOffset(this.design!, pair.first, pair.second), `offset of ${name} as published`)}>Reset${spoken}</button>
+          <button type="button" @click=${() => this.shelve(pair)}>Put on your shelf<span class="spoken">: offset of ${name}</span></button>` : nothing}
       </span>
       ${pair.rivals.filter(({ chosen }) => !chosen).map(({ text, work, offset }) => html`<span class="rival">Also published: <strong>${text}</strong> <span class="checked">${work}</span><button type="button" @click=${() => this.change(setPairOffset(this.design!, offset), `another published offset of ${name}`)}>Use it<span class="spoken">: ${text} for ${name}</span></button></span>`)}
       ${editing ? this.renderForm(pair) : nothing}
@@ -86,6 +89,11 @@ export class HmOffsets extends LitElement {
     const step = { ...(constant.trim() === '' ? {} : { constant: constant.trim() }), ...(perX.trim() === '' ? {} : { perX: perX.trim() }) };
     this.editing = null;
     this.change(setPairOffset(this.design!, { first, second, [edge]: step, source: source.trim() }), `offset of ${first} to ${second}`);
+  }
+
+  private shelve({ first, second }: ShownPair): void {
+    const own = this.design!.custom?.offsets?.find((row) => isPair(row, first, second));
+    if (own !== undefined) this.dispatchEvent(new CustomEvent('offset-shelve', { detail: own }));
   }
 
   private change(next: Design, label: string): void {

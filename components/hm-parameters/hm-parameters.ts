@@ -4,7 +4,7 @@ import { catalogueOf, presetCatalogue, type Catalogue } from '../../src/design/c
 import type { Complaint } from '../../src/design/complaint.ts';
 import { keyText, sameKey, type EntryKey } from '../../src/design/entry-key.ts';
 import { placeOfPath } from '../../src/design/entry-path.ts';
-import type { Design, MetalInput } from '../../src/design/types.ts';
+import type { Design, MetalInput, OffsetInput } from '../../src/design/types.ts';
 import { allKeys, checkedWords, entryOf, keysInUse, kindOf, presetOf, shownEntry, type ShownEntry, type ShownValue } from '../../src/parameters/entry-view.ts';
 import { formulaPreview, valueComplaint } from '../../src/parameters/check-value.ts';
 import { chooseRival, rivalsOf, type Rival } from '../../src/parameters/rivals.ts';
@@ -74,7 +74,7 @@ export class HmParameters extends LitElement {
     return html`<p class="quiet">Published values, each with where it stands and how that was checked. A value that you change counts in this design alone, and travels with its file.</p>
       ${this.renderOwnValues()}
       <h3>In this design</h3>
-      ${shown(used)} <hm-offsets .design=${design}></hm-offsets> ${own.length === 0 ? nothing : html`<h3>Own entries, not in use</h3>${shown(own)}`} ${more.length === 0 ? nothing : html`<h3>Looked up</h3>${shown(more)}`} ${this.renderRequest([...used, ...own, ...more])} <hm-shelf .design=${design}></hm-shelf>`;
+      ${shown(used)} <hm-offsets .design=${design} @offset-shelve=${(e: CustomEvent<OffsetInput>) => this.renderRoot.querySelector('hm-shelf')!.putOffset(e.detail)}></hm-offsets> ${own.length === 0 ? nothing : html`<h3>Own entries, not in use</h3>${shown(own)}`} ${more.length === 0 ? nothing : html`<h3>Looked up</h3>${shown(more)}`} ${this.renderRequest([...used, ...own, ...more])} <hm-shelf .design=${design}></hm-shelf>`;
   }
 
   /** All that the design says differently, in one place. */

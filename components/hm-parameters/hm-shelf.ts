@@ -1,6 +1,7 @@
 import { LitElement, html, nothing, type TemplateResult } from 'lit';
-import { keyText, ownIndex, type AnyEntry, type EntryKey } from '../../src/design/entry-key.ts';
-import type { Design } from '../../src/design/types.ts';
+import { keyText, ownIndex, type EntryKey, type LooseEntry } from '../../src/design/entry-key.ts';
+import type { Design, OffsetInput } from '../../src/design/types.ts';
+import { isPair } from '../../src/design/offset.ts';
 import { asCustom, withCompanions } from '../../src/parameters/companions.ts';
 import { takeEntries } from '../../src/state/commands/index.ts';
 import { keyOfItem, type ShelfItem } from '../../src/storage/shelf.ts';
@@ -54,7 +55,13 @@ export class HmShelf extends LitElement {
     this.store(entries, `${keyText(key)} is on your shelf${more === 0 ? '' : `, with ${more} that ${more === 1 ? 'belongs' : 'belong'} to it`}.`);
   }
 
-  private store(entries: readonly { list: EntryKey['list']; entry: AnyEntry }[], said: string): void {
+  /** Puts an own offset of a pair there. */
+  putOffset(offset: OffsetInput): void {
+    const loose: LooseEntry = { list: 'offsets', entry: offset };
+    this.store([loose], `${nameOf(loose)} is on your shelf.`);
+  }
+
+  private store(entries: readonly LooseEntry[], said: string): void {
     tell(this, 'hm-shelf', {
       act: 'put', entries,
       answer: (items) => {
@@ -66,8 +73,8 @@ export class HmShelf extends LitElement {
   }
 
   private take(item: ShelfItem): void {
-    const entries = withCompanions(asCustom(this.items ?? []), keyOfItem(item));
-    const name = keyText(keyOfItem(item));
+    const entries: readonly LooseEntry[] = item.list === 'offsets' ? [{ list: item.list, entry: item.entry }] : withCompanions(asCustom(this.items ?? []), keyOfItem(item) as EntryKey);
+    const name = nameOf(item);
     tell(this, 'hm-edit', { next: takeEntries(this.design!, entries), label: `${name} from the shelf` });
     tell(this, 'hm-say', { text: `${name} is in this design now.` });
   }
@@ -84,10 +91,10 @@ export class HmShelf extends LitElement {
 
   /** How the design stands to what lies on the shelf. */
   private standing(item: ShelfItem): 'absent' | 'same' | 'other' {
-    const key = keyOfItem(item);
-    const at = ownIndex(this.design?.custom, key);
-    if (at < 0) return 'absent';
-    return JSON.stringify(this.design!.custom![key.list]![at]) === JSON.stringify(item.entry) ? 'same' : 'other';
+    const { custom } = this.design!;
+    const own = item.list === 'offsets' ? custom?.offsets?.find((row) => isPair(row, item.entry.first, item.entry.second)) : custom?.[item.list]?.[ownIndex(custom, keyOfItem(item) as EntryKey)];
+    if (own === undefined) return 'absent';
+    return JSON.stringify(own) === JSON.stringify(item.entry) ? 'same' : 'other';
   }
 
   override render(): TemplateResult | typeof nothing {
@@ -97,21 +104,25 @@ export class HmShelf extends LitElement {
       <h3>Your shelf</h3>
       <p class="quiet">Own entries kept in this browser beside all projects. A design that uses one carries a copy of its own; the backup of the projects holds the shelf too.</p>
       ${items === null ? html`<p>This browser keeps no shelf for this page.</p>` : items.length === 0 && gone === null ? html`<p>Nothing yet. An own entry is put here with the button beside it.</p>` : html`<ul>${items.map((item) => this.renderItem(item))}</ul>`}
-      ${gone === null ? nothing : html`<p role="status">${keyText(keyOfItem(gone))} was taken off the shelf. <button type="button" class="back" @click=${() => this.store([gone], `${keyText(keyOfItem(gone))} is on your shelf again.`)}>Put it back</button></p>`}
+      ${gone === null ? nothing : html`<p role="status">${nameOf(gone)} was taken off the shelf. <button type="button" class="back" @click=${() => this.store([gone], `${nameOf(gone)} is on your shelf again.`)}>Put it back</button></p>`}
     </section>`;
   }
 
   private renderItem(item: ShelfItem): TemplateResult {
-    const name = keyText(keyOfItem(item));
+    const name = nameOf(item);
     const standing = this.standing(item);
     return html`<li>
-      <span class="name"><strong>${name}</strong>${item.entry.name && item.entry.name !== name ? ` ${item.entry.name}` : ''}, ${LISTS[item.list].one}</span>
+      <span class="name"><strong>${name}</strong>${item.list !== 'offsets' && item.entry.name && item.entry.name !== name ? ` ${item.entry.name}` : ''}, ${item.list === 'offsets' ? 'band offset' : LISTS[item.list].one}</span>
       <span class="acts">
         ${standing === 'same' ? html`<span class="quiet">in this design</span>` : html`<button type="button" @click=${() => this.take(item)}>${standing === 'other' ? html`Take in place of the design's own` : html`Take into this design`}<span class="spoken">: ${name}</span></button>`}
         <button type="button" @click=${() => void this.drop(item)}>Take off the shelf<span class="spoken">: ${name}</span></button>
       </span>
     </li>`;
   }
+}
+
+function nameOf(item: LooseEntry): string {
+  return item.list === 'offsets' ? `${item.entry.first} to ${item.entry.second}` : keyText(keyOfItem(item));
 }
 
 customElements.define('hm-shelf', HmShelf);

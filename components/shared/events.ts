@@ -1,4 +1,5 @@
 import type { Design } from '../../src/design/types.ts';
+import type { LooseEntry } from '../../src/design/entry-key.ts';
 import type { ShelfItem } from '../../src/storage/shelf.ts';
 
 /**
@@ -48,7 +49,7 @@ export type ProjectAct =
 export type VariantAct = { act: 'add'; name: string } | { act: 'rename'; id: string; name: string } | { act: 'open' | 'remove' | 'take-back' | 'delete'; id: string };
 
 /** `answer` hears the whole shelf; null where the browser keeps none. */
-export type ShelfWish = ({ act: 'look' } | { act: 'put'; entries: readonly Pick<ShelfItem, 'list' | 'entry'>[] } | { act: 'drop'; key: string }) & { answer(items: readonly ShelfItem[] | null): void };
+export type ShelfWish = ({ act: 'look' } | { act: 'put'; entries: readonly LooseEntry[] } | { act: 'drop'; key: string }) & { answer(items: readonly ShelfItem[] | null): void };
 
 /** The one way an element speaks. */
 export function tell<K extends keyof HalfmarkEvents>(from: EventTarget, name: K, detail: HalfmarkEvents[K]): void {

@@ -1,8 +1,11 @@
-import type { Custom, Design, DopantInput, MaterialInput, MetalInput } from './types.ts';
+import type { Custom, Design, DopantInput, MaterialInput, MetalInput, OffsetInput } from './types.ts';
 
 /** The three lists of a design's own entries. */
 export type EntryList = 'materials' | 'dopants' | 'metals';
 export type AnyEntry = MaterialInput | DopantInput | MetalInput;
+
+/** An entry, or an offset of a pair, on its way from one design to another. */
+export type LooseEntry = { list: EntryList; entry: AnyEntry } | { list: 'offsets'; entry: OffsetInput };
 
 /** What an entry is found by. Dopants of two hosts may share an id. */
 export interface EntryKey {
@@ -16,7 +19,7 @@ export function sameKey(a: EntryKey, b: EntryKey): boolean {
 }
 
 /** "GaAs", "GaAs:Si". */
-export function keyText({ id, host }: EntryKey): string {
+export function keyText({ id, host }: Pick<EntryKey, 'id' | 'host'>): string {
   return host === undefined ? id : `${host}:${id}`;
 }
 

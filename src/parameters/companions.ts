@@ -1,7 +1,7 @@
-import { ownIndex, type AnyEntry, type EntryKey } from '../design/entry-key.ts';
+import { ownIndex, type EntryKey, type LooseEntry } from '../design/entry-key.ts';
 import type { Custom, DopantInput, MaterialInput } from '../design/types.ts';
 
-type Listed = { list: EntryKey['list']; entry: AnyEntry };
+type Listed = Exclude<LooseEntry, { list: 'offsets' }>;
 
 /**
  * An own entry with what it cannot do without: a material brings its own dopants and, where it is an alloy, its own ends with theirs.
@@ -19,8 +19,9 @@ export function withCompanions(custom: Custom, key: EntryKey): Listed[] {
   return [...ends, ...dopants, { list: 'materials', entry }];
 }
 
-/** Loose entries as the lists of a design. */
-export function asCustom(rows: readonly Listed[]): Custom {
+/** Loose entries as the lists of a design; offsets go their own way, as nothing else needs them. */
+export function asCustom(all: readonly LooseEntry[]): Custom {
+  const rows = all.filter((row): row is Listed => row.list !== 'offsets');
   return {
     materials: rows.filter(({ list }) => list === 'materials').map(({ entry }) => entry as MaterialInput),
     dopants: rows.filter(({ list }) => list === 'dopants').map(({ entry }) => entry as DopantInput),

@@ -1,10 +1,11 @@
 import { sha256 } from '@noble/hashes/sha2';
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils';
+import type { LooseEntry } from '../design/entry-key.ts';
 import { MOST_CHARACTERS } from '../design/read.ts';
 import { backupTooLarge, MOST_ENTRIES } from './backup-bounds.ts';
 import type { KeptVariant } from './kept-variants.ts';
 import { recordFault, type ProjectRecord } from './record.ts';
-import { keyOfItem, shelfFault, shelfKey, type ShelfItem } from './shelf.ts';
+import { keyOfItem, shelfFault, shelfKey } from './shelf.ts';
 
 /**
  * All projects in one file that a person can keep: JSON, each project with a check over its own text, so that a file cut short or altered is noticed
@@ -18,7 +19,7 @@ export { LARGEST_FILE } from './backup-bounds.ts';
 /** Characters of a name in a sentence. */
 const MOST_NAME = 80;
 
-type Shelved = Pick<ShelfItem, 'list' | 'entry'>;
+type Shelved = LooseEntry;
 type Kept = Omit<ProjectRecord, 'id' | 'revision'>;
 interface BackupEntry extends Kept {
   check: string;
@@ -31,7 +32,7 @@ export type BackupReading =
 /** @param written  ms since 1970 */
 export function writeBackup(records: readonly ProjectRecord[], written: number, shelf: readonly Shelved[] = []): string {
   const projects = records.map(({ id: _id, revision: _revision, ...kept }): BackupEntry => ({ ...kept, check: checkOf(kept) }));
-  return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects, shelf: shelf.map(({ list, entry }) => ({ list, entry, check: checkOfEntry({ list, entry }) })) }, null, 1)}\n`;
+  return `${JSON.stringify({ format: BACKUP_FORMAT, written: new Date(written).toISOString(), projects, shelf: shelf.map(({ list, entry }) => ({ list, entry, check: checkOfEntry({ list, entry } as Shelved) })) }, null, 1)}\n`;
 }
 
 /** A project whose variants are what they are and lead nowhere back: for a backup that would be too large to be read. */
@@ -77,13 +78,14 @@ export function readBackup(text: string): BackupReading {
 function readShelf(shelf: unknown, refused: { name: string; why: string }[]): Shelved[] {
   const good: Shelved[] = [];
   for (const row of Array.isArray(shelf) ? (shelf as unknown[]) : []) {
-    const { list, entry, check } = (row ?? {}) as Partial<Shelved & { check: string }>;
-    const id: unknown = (entry as { id?: unknown } | undefined)?.id;
+    const { list, entry, check } = (row ?? {}) as { list?: unknown; entry?: { id?: unknown; first?: unknown; second?: unknown } | null; check?: string };
+    const loose = { list, entry } as Shelved;
+    const id = list === 'offsets' ? (typeof entry?.first === 'string' && typeof entry.second === 'string' ? `${entry.first} to ${entry.second}` : undefined) : entry?.id;
     const name = `${typeof id === 'string' ? short(id) : 'an entry'} of the shelf`;
-    const fault = shelfFault({ key: typeof id === 'string' && list !== undefined ? shelfKey(keyOfItem({ list, entry: entry! })) : '', list, entry, kept: 0 });
+    const fault = shelfFault({ key: typeof id === 'string' && list !== undefined ? shelfKey(keyOfItem(loose)) : '', list, entry, kept: 0 });
     if (fault !== null) refused.push({ name, why: fault });
-    else if (!fits(check, () => checkOfEntry({ list: list!, entry: entry! }))) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
-    else good.push({ list: list!, entry: entry! });
+    else if (!fits(check, () => checkOfEntry(loose))) refused.push({ name, why: 'its check does not fit: it was changed or damaged' });
+    else good.push(loose);
   }
   return good;
 }

@@ -1,3 +1,4 @@
+import type { LooseEntry } from '../design/entry-key.ts';
 import { freeName } from '../state/commands/free-name.ts';
 import { openDatabase, type Database, type DatabaseMoment } from './database.ts';
 import { storageFailure, type StorageFailure } from './failure.ts';
@@ -180,9 +181,9 @@ export class ProjectStore {
   }
 
   /** Puts entries on the shelf, all or none; one of the same name gives way. */
-  async shelve(entries: readonly Pick<ShelfItem, 'list' | 'entry'>[]): Promise<void> {
+  async shelve(entries: readonly LooseEntry[]): Promise<void> {
     const kept = this.#now();
-    const items = entries.map(({ list, entry }): ShelfItem => ({ key: shelfKey(keyOfItem({ list, entry })), list, entry, kept }));
+    const items = entries.map((loose): ShelfItem => ({ key: shelfKey(keyOfItem(loose)), ...loose, kept }));
     await this.#with((db) =>
       written(db.transaction('shelf', 'readwrite'), async ({ store }) => {
         for (const item of items) await store.put(item);

@@ -41,7 +41,7 @@ async function put(design: Design): Promise<void> {
   element.addEventListener('hm-edit', (e) => (element.design = (e as CustomEvent<{ next: Design }>).detail.next));
   element.addEventListener('hm-shelf', (e) => {
     const wish = (e as CustomEvent<ShelfWish>).detail;
-    if (wish.act === 'put') for (const { list, entry: item } of wish.entries) kept = [...kept.filter(({ key }) => key !== shelfKey(keyOfItem({ list, entry: item }))), { key: shelfKey(keyOfItem({ list, entry: item })), list, entry: item, kept: 1 }];
+    if (wish.act === 'put') for (const item of wish.entries) kept = [...kept.filter(({ key }) => key !== shelfKey(keyOfItem(item))), { ...item, key: shelfKey(keyOfItem(item)), kept: 1 }];
     if (wish.act === 'drop') kept = kept.filter(({ key }) => key !== wish.key);
     wish.answer(kept);
   });
@@ -52,6 +52,25 @@ async function put(design: Design): Promise<void> {
 describe('own entries on the panel of parameters', () => {
   beforeEach(() => (kept = []));
   afterEach(() => element.remove());
+
+  it('keep an own offset of a pair on the shelf, for a design that has another or none', async () => {
+    const own = { first: 'AlGaAs', second: 'GaAs', deltaEv: { constant: '0.2 eV' }, source: 'measured here' };
+    await put({ ...designFixture(), custom: { offsets: [own] } });
+    const offsets = () => root().querySelector('hm-offsets')!.shadowRoot!;
+    button(offsets(), 'Put on your shelf').click();
+    await until('the shelf', () => shelf().querySelector('li') !== null);
+    expect(shelf().querySelector('li')!.textContent!.replace(/\s+/g, ' ')).to.contain('AlGaAs to GaAs').and.to.contain('band offset').and.to.contain('in this design');
+    expect(kept.map(({ key, list }) => [key, list])).to.deep.equal([['offsets AlGaAs and GaAs', 'offsets']]);
+    await expectAccessible(element);
+    element.design = { ...designFixture(), custom: { offsets: [{ ...own, first: 'GaAs', second: 'AlGaAs', source: 'another' }] } };
+    await until('the other design', () => shelf().textContent!.includes("Take in place of the design's own"));
+    button(shelf(), 'Take in place').click();
+    expect(element.design!.custom!.offsets).to.deep.equal([own]);
+    element.design = designFixture();
+    await until('the plain design', () => shelf().textContent!.includes('Take into this design'));
+    button(shelf(), 'Take into this design').click();
+    expect(element.design!.custom).to.deep.equal({ offsets: [own] });
+  });
 
   it('are written by a formula, refused with the temperature where it fails, and told what it comes to', async () => {
     await put({ ...designFixture(), requirements: [] });

@@ -25,11 +25,15 @@ describe('a backup', () => {
   it('holds the shelf, each entry with a check of its own, and leaves out what was altered or is no entry', () => {
     const metal = { list: 'metals' as const, entry: { id: 'M', workFunction: '4.2 eV', source: 'measured' } };
     const dopant = { list: 'dopants' as const, entry: { id: 'D', host: 'GaAs', kind: 'donor' as const, depth: '6 meV', source: 'measured' } };
+    const offset = { list: 'offsets' as const, entry: { first: 'A', second: 'B', deltaEc: { constant: '0.1 eV' }, source: 'measured' } };
     const kept = writeBackup([record('one')], 0, [metal, dopant]);
     expect(readBackup(kept)).toMatchObject({ ok: true, shelf: [metal, dopant], refused: [] });
+    const pairs = writeBackup([], 0, [offset]);
+    expect(readBackup(pairs)).toMatchObject({ ok: true, shelf: [offset], refused: [] });
+    expect(readBackup(pairs.replace('0.1 eV', '0.2 eV'))).toMatchObject({ ok: true, shelf: [], refused: [{ name: 'A to B of the shelf', why: expect.stringContaining('check') }] });
     expect(readBackup(kept.replace('4.2 eV', '4.3 eV'))).toMatchObject({ ok: true, shelf: [dopant], refused: [{ name: 'M of the shelf', why: expect.stringContaining('check') }] });
     expect(readBackup(kept.replace('"workFunction"', '"workfunction"'))).toMatchObject({ ok: true, shelf: [dopant], refused: [{ name: 'M of the shelf' }] });
-    for (const shelf of ['7', 'null', '[null]', '[{"list":"__proto__"}]', '[{"list":"metals","entry":{"id":"a"}}]']) {
+    for (const shelf of ['7', 'null', '[null]', '[{"list":"__proto__"}]', '[{"list":"metals","entry":{"id":"a"}}]', '[{"list":"offsets","entry":null}]', '[{"list":"offsets","entry":{"first":"A","second":7}}]']) {
       const reading = readBackup(`{"format":"halfmark-backup/3","projects":[],"shelf":${shelf}}`);
       expect(reading.ok && reading.shelf, shelf).toEqual([]);
     }
