@@ -148,9 +148,16 @@ const LONG_RESULTS: State[] = [
     await unfold(page, path);
     return path;
   } },
+];
+const MAPS_OF_SWEEPS: State[] = [
   { name: 'a sweep as a map', async bring(page) {
-    const path: Path = [...DESK, 'hm-sweeps'];
+    const path = await panel(page, 'Sweeps', 'hm-sweeps');
     await press(page, path, 'Sweep a second quantity');
+    // Few points: what is looked at is how they are shown, and the checks go through every cell of their table.
+    await at(page, path, (element) => {
+      const { view } = element as unknown as { view: { second: object } };
+      element.dispatchEvent(new CustomEvent('hm-view', { bubbles: true, composed: true, detail: { change: { sweeps: { ...view, second: { ...view.second, points: '5' } } } } }));
+    });
     await new Promise((done) => setTimeout(done, 100));
     await press(page, path, 'Run the sweep');
     await until('the map', async () => (await count(page, path, 'tbody tr')) > 100 && (await count(page, path, 'progress')) === 0, 40_000);
@@ -260,7 +267,8 @@ function muteDrawings(page: Page, where: string): Promise<string[]> {
 const PARTS: [what: string, states: readonly State[]][] = [
   ['what the page says, and each of its forms,', SAID],
   ['verdicts, sizes and contacts,', RESULTS],
-  ['rankings, sweeps, maps of them and films,', LONG_RESULTS],
+  ['rankings and sweeps,', LONG_RESULTS],
+  ['maps of sweeps and films,', MAPS_OF_SWEEPS],
   ['regime maps, spreads, variants, parameters and workings,', MORE_RESULTS],
   ['dialogs, and what is still empty,', DIALOGS],
 ];
