@@ -105,6 +105,7 @@ function sizedText(answer: SizedAnswer): string {
     for (const { words, met_somewhere } of blockers) lines.push(`  blocked by: ${words}, ${met_somewhere ? 'which other values meet' : 'which no value meets'}`);
   } else if (best !== null) lines.push(`best: ${best.text}, where the least margin is largest`);
   for (const row of best?.requirements ?? []) lines.push(`  ${row.met ? 'met' : 'not met'}: ${requirementWords(row)}, ${standingWords(row)}${row.at === null ? '' : ` at ${row.at.words}`}`);
+  for (const caution of best?.cautions ?? []) lines.push(`  caution: ${caution}`);
   if (answer.refusal !== null) lines.push(`some values have no answer: ${answer.refusal}`);
   if (!answer.confirmed) lines.push('not confirmed: a worse corner turned up at the last judgement; narrow the range');
   return `${lines.map(onOneLine).join('\n')}\n`;

@@ -1,15 +1,16 @@
 import { sizing, TOLERANCE, type Sizing, type SizingEdge } from '../../solver/sizing.ts';
 import { Asker } from '../design/ask.ts';
-import type { Complaint } from '../design/complaint.ts';
+import { complaintLine, type Complaint } from '../design/complaint.ts';
 import type { ReadRequirement } from '../design/requirements.ts';
 import { requirementQuantity } from '../design/requirement-quantities.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
 import { readVariables } from '../design/variables.ts';
 import { quoted } from '../quantity/wording.ts';
+import { solveDesign } from '../result/solve-design.ts';
 import type { RequirementResult } from '../result/types.ts';
 import { isUsed } from './governed.ts';
-import { readSizedVariable, shownText, type SizedVariable } from './sized-variable.ts';
+import { exactText, readSizedVariable, shownText, type SizedVariable } from './sized-variable.ts';
 import { SizingStudy, type Look } from './sizing-study.ts';
 import type { Tolerances, Uncertainty } from './uncertainties.ts';
 import { requirementWords } from './verdict.ts';
@@ -63,7 +64,7 @@ export interface SizedAnswer {
   from: number;
   to: number;
   intervals: { from: SizedEdge; to: SizedEdge }[];
-  /** where the least margin is largest; where nothing meets everything, the nearest miss */ best: { value: number; text: string; requirements: RequirementResult[] } | null;
+  /** where the least margin is largest; where nothing meets everything, the nearest miss */ best: { value: number; text: string; requirements: RequirementResult[]; /** that the figures carry there, with no tolerance moved */ cautions: string[] } | null;
   /** what stands against the nearest miss, and whether any value of the range meets it by itself */ blockers: { index: number; words: string; met_somewhere: boolean }[];
   /** the ends of the intervals, values inside them and the best point were judged in full, and no worse corner was left */ confirmed: boolean;
   /** values looked at, with the score of each requirement (0 at its limit, above where met; null without an answer) */ scan: LookedAt[];
@@ -135,7 +136,8 @@ export function* sizeSteps(design: Design, options: SizeOptions): Generator<Size
     return study.rows(value);
   };
   found = { ...found, intervals: yield* verifiedIntervals(found, (value) => study.rows(value), judge) };
-  return answerOf(found, study, { variable, requirements, confirmed, tolerance: tolerance ?? TOLERANCE, writeTemperature: temperatureWriter(design) });
+  const cautions = found.best === null ? [] : cautionsAt(design, { ...set, [variable.name]: exactText(variable, found.best.value) });
+  return answerOf(found, study, { cautions, variable, requirements, confirmed, tolerance: tolerance ?? TOLERANCE, writeTemperature: temperatureWriter(design) });
 }
 
 /** What is judged in full: the ends of each interval, two values inside it, and the best. */
@@ -163,7 +165,14 @@ function prepare(design: Design, { variable: name, from, to, scale, set = {} }: 
   return variable === null ? { complaints: ask.complaints } : { variable, requirements: reading.requirements };
 }
 
-function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, confirmed, tolerance, writeTemperature }: { variable: SizedVariable; requirements: readonly ReadRequirement[]; confirmed: boolean; tolerance: number; writeTemperature: (T: number) => string }): SizedAnswer {
+/** What a value that meets everything may still be: beyond what can be made, or where the laws are extrapolated. */
+function cautionsAt(design: Design, set: Readonly<Record<string, string>>): string[] {
+  const answer = solveDesign(design, { set });
+  if (answer.kind === 'result') return answer.result.warnings;
+  return [`there is no accepted answer with no tolerance moved: ${answer.kind === 'refused' ? answer.reason : complaintLine(answer.complaints[0])}`];
+}
+
+function answerOf(found: Sizing, study: SizingStudy, { cautions, variable, requirements, confirmed, tolerance, writeTemperature }: { cautions: string[]; variable: SizedVariable; requirements: readonly ReadRequirement[]; confirmed: boolean; tolerance: number; writeTemperature: (T: number) => string }): SizedAnswer {
   const words = (i: number): string => requirementWords({ ...requirements[i], unit: requirementQuantity(requirements[i].quantity).unit });
   const edge = ({ value, reason, binding, beyond }: SizingEdge): SizedEdge => {
     let at: string | null = null;
@@ -181,7 +190,7 @@ function answerOf(found: Sizing, study: SizingStudy, { variable, requirements, c
   return {
     kind: 'sized', variable: variable.name, unit: variable.unit, scale: variable.scale, from: variable.from, to: variable.to,
     intervals: found.intervals.map(({ from, to }) => ({ from: edge(from), to: edge(to) })),
-    best: best && { value: best.value, text: shownText(variable, best.value), requirements: study.rows(best.value) ?? [] },
+    best: best && { value: best.value, text: shownText(variable, best.value), requirements: study.rows(best.value) ?? [], cautions },
     blockers: found.blockers.map((index) => ({ index, words: words(index), met_somewhere: found.metSomewhere[index] })),
     confirmed,
     scan: found.nodes.map((node) => ({ value: node.value, scores: [...node.scores] })),

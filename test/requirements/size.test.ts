@@ -26,6 +26,17 @@ function allMet(design: Design, name: string, text: string): boolean {
 }
 
 describe('sizing a variable of a design', () => {
+  it('tells what is to be cautioned of at the best value, and only there', () => {
+    const resistance = (max: string): Design => contactDesign((d) => { d.requirements = [{ quantity: 'sheetResistance', of: 'cap', max }]; });
+    const quick = { variable: 'Ncap', tolerances: 'none', samples: 0, points: 9 } as const;
+    // The lower the resistance, the better: the best is the end of the range, 5e20, above what was published as reachable.
+    const above = answer(resistance('300 ohm'), quick).best!;
+    expect(above.value).toBeCloseTo(5e20, -18);
+    expect(above.cautions.join('; ')).toMatch(/cap: P at 5\.0e\+20 cm\^-3 lies above the \S+ cm\^-3 that was published as reachable/);
+    const below = answer(resistance('3000 ohm'), { ...quick, to: '1e20 cm^-3' }).best!;
+    expect(below.cautions.join('; ')).not.toMatch(/reachable/);
+  });
+
   it('finds the interval of a fine scan of full judgements', () => {
     const design = sized();
     const found = answer(design, { variable: 'Ncap', tolerances: 'stated', samples: 4, points: 13 });
