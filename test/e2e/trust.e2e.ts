@@ -25,6 +25,7 @@ function hostileDesign(): object {
       { name: `=HYPERLINK("http://x")${HOSTILE}`, material: 'GaAs', thickness: '300 nm', dopants: [{ kind: 'acceptor', depth: '5 meV', concentration: '1e17 cm^-3' }] },
     ],
     variables: [{ name: 'a', value: '1', note: HOSTILE }],
+    custom: { metals: [{ id: 'own', workFunction: '4.5 eV', source: HOSTILE }] },
     bottom: { kind: 'neutral' },
   };
 }
@@ -84,6 +85,17 @@ scenario('Markup in every name of a design stays text on the page and in every f
     await press(page, ['hm-app', 'hm-conditions'], act);
     await page.keyboard.press('Escape');
   }
+  // Its notes, its own entries and its variants, unfolded.
+  const desk = ['hm-app', 'hm-desk'];
+  for (const [name, tag] of [['Parameters', 'hm-parameters'], ['Variants', 'hm-variants'], ['Ledger', 'hm-ledger']]) {
+    await at(page, desk, (element, words) => [...element.shadowRoot!.querySelectorAll<HTMLElement>('[role=tab]')].find((tab) => tab.textContent!.trim().startsWith(words))!.click(), name);
+    await until(`the panel ${name}`, async () => (await at(page, [...desk, tag], (element) => element.shadowRoot!.childElementCount > 0)) === true);
+    if (name === 'Variants') await press(page, [...desk, tag], 'Copy what is on the page');
+    await at(page, [...desk, tag], (element) => [...element.shadowRoot!.querySelectorAll('details')].forEach((details) => (details.open = true)));
+  }
+  await at(page, ['hm-app', 'hm-notes'], (notes) => [...notes.shadowRoot!.querySelectorAll('details')].forEach((details) => (details.open = true)));
+  assert.equal(await at(page, ['hm-app', 'hm-notes', '.first'], (line) => line.textContent!.slice(0, 30)), HOSTILE.slice(0, 30));
+  await untilSolved(page);
   const after = await elements(page);
   assert.ok(!after.includes('img') || before.has('img'));
   assert.ok(!after.some((name) => name === 'script') || before.has('script'));
