@@ -14,6 +14,9 @@ const SMALLEST_STEP = 1e-7;
 const NEGLIGIBLE = 1e-13;
 /** A frozen layer's matrix can ask for 1e9 V; no sensible stack moves by more than this at once. */
 const MOST_VOLTS = 2;
+/** So many steps in a row below this share of what is allowed are a stall, though each passes its test: frozen layers between open ends ask for 1e11 V for ever. */
+const STALLED_STEPS = 10;
+const STALLED_SHARE = 1e-3;
 
 /**
  * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place. On return the system's residual and density are
@@ -37,6 +40,7 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
   let lambda = 1;
   let lastUpdate = Infinity;
   let convex = false;
+  let stalled = 0;
   if (!evaluated) system.evaluate(psi, true);
   while (updates < MOST_UPDATES) {
     if (system.work.exhausted) return { converged: false, updates, lastUpdate, reason: 'work exhausted' };
@@ -53,9 +57,11 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
       if (size > NEGLIGIBLE) system.evaluate(psi, false);
       return { converged: true, updates, lastUpdate: size, reason: 'small update' };
     }
+    const cap = Math.min(1, MOST_VOLTS / size);
     if (!convex) {
-      const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda), Math.min(1, MOST_VOLTS / size));
-      if (found > 0) lambda = found;
+      const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda), cap);
+      stalled = found < STALLED_SHARE * cap ? stalled + 1 : 0;
+      if (found > 0 && stalled < STALLED_STEPS) lambda = found;
       else {
         // The factors were of this very matrix, but the residual is of the last trial: back to psi before the second way.
         convex = true;
@@ -63,7 +69,7 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
       }
     }
     if (convex) {
-      lambda = convexStep(system, psi, step, trial, dot(step, system.residual));
+      lambda = convexStep(system, psi, step, trial, dot(step, system.residual), cap);
       if (!(lambda > 0)) return { converged: false, updates, lastUpdate: size, reason: 'no progress' };
       for (let i = 0; i < n; i++) trial[i] = psi[i] + lambda * step[i];
       system.evaluate(trial, true);
@@ -97,25 +103,25 @@ function monotoneStep(system: PoissonSystem, psi: Float64Array, step: Float64Arr
 }
 
 /** Step length at which the directional derivative has fallen to half or less in size (bracketing, then regula falsi with halving). */
-function convexStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, slope0: number): number {
+function convexStep(system: PoissonSystem, psi: Float64Array, step: Float64Array, trial: Float64Array, slope0: number, cap: number): number {
   const slopeAt = (lambda: number): number => {
     for (let i = 0; i < psi.length; i++) trial[i] = psi[i] + lambda * step[i];
     system.evaluate(trial, false);
     return dot(step, system.residual);
   };
   let low = 0;
-  let high = 1;
+  let high = cap;
   for (let tries = 0; tries < 60; tries++) {
     const slope = slopeAt(high);
     if (Math.abs(slope) <= 0.5 * Math.abs(slope0)) return high;
     if (slope * slope0 > 0) {
-      if (high >= 1) return high;
+      if (high >= cap) return high;
       low = high;
-      high = Math.min(1, low + 0.5 * (1 - low));
+      high = Math.min(cap, low + 0.5 * (cap - low));
     } else {
       high = 0.5 * (low + high);
     }
-    if (high - low < 1e-14) return low;
+    if (high - low < 1e-14 * cap) return low;
   }
   return low;
 }

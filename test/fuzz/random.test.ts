@@ -37,6 +37,10 @@ describe('random designs of presets and own materials, 1 to 12 layers, 4 to 1000
     expect(coverage.missing()).toEqual([]);
   });
 
+  it('are accepted with both ends open and every carrier frozen, where Newton asks for 1e11 V', () => {
+    expect(tryDesign(randomDesign(randomFrom(102_002_765)))).toMatchObject({ kind: 'accepted', method: 'compact' });
+  });
+
   it('are design documents, and the same for the same seed', () => {
     for (let i = 0; i < 50; i++) {
       const design = randomDesign(randomFrom(i));
