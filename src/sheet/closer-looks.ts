@@ -39,16 +39,33 @@ export function comparisonSections(base: { name: string; design: Design; result:
   ];
 }
 
-/** The plate where a requirement is at its worst, the nominal bands laid under it. */
+/** The plate where a requirement is at its worst, the nominal bands laid under it; all that is moved there stands below. */
 export function cornerSection({ requirement, result }: Corner, nominal: Result, plate: PlateLook, room: Room, look: SheetLook): Section {
-  const words = printedUnits(requirement.at!.words);
+  const { tolerances, words: told } = requirement.at!;
+  const words = printedUnits(cornerTitle(told, tolerances));
   const { worst } = requirement;
   const figure = worst === null || typeof worst === 'boolean' ? '' : ` There it is ${figureText(worst)}${requirement.unit === '' ? '' : ` ${printedUnits(requirement.unit)}`}; ${printedUnits(standingWords(requirement))}, ${verdictWords(requirement)}.`;
+  const all = tolerances.map(({ name, words: amount }) => `${name} ${printedUnits(amount)}`).join(', ');
+  const list = tolerances.length === 0 ? [] : [paragraph(`Moved within their tolerances in this picture: ${all}.`, look, room.width, { size: look.small })];
+  const title = 'The plate at the worst corner of the requirements';
+  const left = room.height - sectionHeight({ title, pieces: list }, room, look) - 12;
   const drawing = drawPlate({ ...result, title: `At the worst corner: ${words}` }, {
-    ...plate, variants: [{ name: 'nominal', result: nominal }], base: 'worst corner', style: look.plate, width: room.width, height: WHOLE * room.height, frame: 'full', prefix: 'sheet-corner',
+    ...plate, variants: [{ name: 'nominal', result: nominal }], base: 'worst corner', style: look.plate, width: room.width, height: Math.min(WHOLE * room.height, left), frame: 'full', prefix: 'sheet-corner',
     remarks: [`Worst corner of “${printedUnits(requirementWords(requirement))}”: ${words}.${figure}`],
   });
-  return { title: 'The plate at the worst corner of the requirements', pieces: [picturePiece(drawing)] };
+  return { title, pieces: [picturePiece(drawing), ...list] };
+}
+
+/**
+ * What is moved in the picture, short enough for a title: what moves the requirement by its name, the rest by their number.
+ *
+ * @param told   the words of the corner
+ * @param moved  all that is moved there
+ */
+export function cornerTitle(told: string, moved: readonly { name: string; words: string }[]): string {
+  const named = told.replace(/, and \d+ more$/, '');
+  const left = moved.filter(({ name, words }) => !`${named},`.includes(`, ${name} ${words},`)).length;
+  return left === 0 ? named : `${named}, and ${left} more (listed below)`;
 }
 
 /** Each metal contact from near, with its figures. */

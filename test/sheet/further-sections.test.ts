@@ -5,6 +5,7 @@ import { svgText } from '../../src/drawing/svg-text.ts';
 import { sheetPdf } from '../../src/export/sheet-files.ts';
 import { figureText } from '../../src/result/figure-text.ts';
 import { hardest, solveCorner } from '../../src/requirements/corner.ts';
+import { cornerTitle } from '../../src/sheet/closer-looks.ts';
 import { differenceTable, type SheetVariant } from '../../src/sheet/comparison.ts';
 import { PAPERS, SHEET_STYLES } from '../../src/sheet/look.ts';
 import { reviewSheet, type SheetInput } from '../../src/sheet/review-sheet.ts';
@@ -176,6 +177,24 @@ describe('the worst corner', () => {
     expect(at!.words).toMatch(/degC/);
     expect(captions).toContain('−40 °C, Ncap −20 %, barrier +50 meV');
     expect(captions).toContain(`There it is ${figureText(worst as number)} Ω cm²`);
+  });
+
+  it('names in its title what moves the requirement, counts the rest, and lists everything that is moved below', () => {
+    const at = hardest(inputOf('graded-cap').requirements!)!.at!;
+    const pages = reviewSheet(whole());
+    const page = pages.find((p) => textsOf(p).some((t) => t.role === 'section' && plainText(t.runs).startsWith('The plate at the worst corner')))!;
+    const said = textsOf(page).filter((t) => t.role === 'sentence').map((t) => plainText(t.runs)).join(' ');
+    for (const { name, words } of at.tolerances) expect(said.replaceAll('−', '-')).toContain(`${name} ${words}`);
+    const named = at.tolerances.filter(({ name, words }) => at.words.includes(`${name} ${words}`)).length;
+    expect(named).toBeLessThan(at.tolerances.length);
+    expect(textsOf(page).map((t) => plainText(t.runs)).join(' ')).toContain(`and ${at.tolerances.length - named} more (listed below)`);
+  });
+
+  it('counts each input once, and says nothing of a rest where there is none', () => {
+    const moved = [{ name: 'N', words: '-20 %' }, { name: 'cap', words: '+5 %' }, { name: 'cap thickness', words: '-3 %' }];
+    expect(cornerTitle('300 K, N -20 %, cap +5 %, cap thickness -3 %', moved)).toBe('300 K, N -20 %, cap +5 %, cap thickness -3 %');
+    expect(cornerTitle('300 K, N -20 %, and 1 more', moved)).toBe('300 K, N -20 %, and 2 more (listed below)');
+    expect(cornerTitle('300 K', [])).toBe('300 K');
   });
 
   it('is refused where the row is of another judgement', () => {
