@@ -48,7 +48,7 @@ export function closeUpFigures(c: CloseUp): CloseUpFigure[] {
   add('barrierN', 'Barrier for electrons', `${decimalText(c.barrier_n_eV)} eV`, c.barrier_n_eV, source);
   add('barrierP', 'Barrier for holes', `${decimalText(c.barrier_p_eV)} eV`, c.barrier_p_eV, source);
   add('lowering', 'Image-force lowering', c.lowering_eV === null ? 'off' : energyText(c.lowering_eV), c.lowering_eV, c.lowering_eV === null ? null : 'closed form, from the surface field');
-  add('transport', 'Regime', regimeWords(c.transport), null, c.e00_over_kT === null ? null : `E00/kT ${figureText(c.e00_over_kT, 2)}`);
+  add('transport', 'Transport', regimeWords(c.transport), null, c.e00_over_kT === null ? null : `E00/kT ${figureText(c.e00_over_kT, 2)}`);
   add('e00', 'E00', c.e00_meV === null ? '–' : `${figureText(c.e00_meV)} meV`, c.e00_meV);
   rho('rhoC', 'Contact resistivity', c.rho_c_ohm_cm2, c.rho_c_error === null ? null : `${transmissionWords(c.transmission)}; quadrature good to ${errorText(c.rho_c_error)}`);
   rho('rhoCn', 'of electrons', c.rho_c_n_ohm_cm2);

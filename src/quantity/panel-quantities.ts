@@ -10,7 +10,7 @@ export interface PanelQuantity {
 }
 
 /** A figure of a contact that the ledger has too bears the ledger's words. */
-function ledger(id: 'barrierN' | 'barrierP' | 'rhoC' | 'rhoCn' | 'rhoCp' | 'saturation' | 'e00'): PanelQuantity {
+function ledger(id: 'barrierN' | 'barrierP' | 'rhoC' | 'rhoCn' | 'rhoCp' | 'saturation' | 'e00' | 'transport'): PanelQuantity {
   const { heading, words } = columnOf('contacts', id);
   return { heading, words };
 }
@@ -44,7 +44,7 @@ export const PANEL_QUANTITIES = {
     barrierN: ledger('barrierN'),
     barrierP: ledger('barrierP'),
     lowering: { heading: 'Image-force lowering', words: 'what the image force takes off the barrier, by the closed form' },
-    transport: { heading: 'Regime', words: 'how carriers pass the barrier' },
+    transport: ledger('transport'),
     e00: ledger('e00'),
     rhoC: ledger('rhoC'),
     rhoCn: ledger('rhoCn'),

@@ -77,7 +77,7 @@ export function largest(profile: Profile): number {
   }
 }
 
-/** "± 10 %", "−5 % +12 %"; what is only assumed says so. */
+/** "± 10 %", "−5 % +12 %"; a usual one, which nobody stated, says so. */
 export function spreadText(spread: Spread): string {
   if (!spread) return 'not stated';
   if (spread.origin === 'unknown') return 'as its variables';
@@ -85,5 +85,5 @@ export function spreadText(spread: Spread): string {
   const { below, above, origin } = spread;
   if (below === 0 && above === 0) return 'exact';
   const text = Math.abs(below - above) <= 0.02 * Math.max(below, above) ? `± ${percent((below + above) / 2)} %` : `−${percent(below)} % +${percent(above)} %`;
-  return origin === 'default' ? `${text}, assumed` : text;
+  return origin === 'default' ? `${text}, usual` : text;
 }

@@ -87,7 +87,7 @@ describe('hm-contacts', () => {
     expect(picture.getAttribute('aria-label')).to.include('Barrier of electrons');
     expect(picture.querySelectorAll('[data-role="closeup-product"]').length).to.equal(1);
     const figures = new Map([...element.shadowRoot!.querySelectorAll('dt')].map((dt) => [dt.textContent, dt.nextElementSibling!.textContent!]));
-    expect(figures.get('Regime')).to.match(/^thermionic-field emission E00\/kT 2\.\d$/);
+    expect(figures.get('Transport')).to.match(/^thermionic-field emission E00\/kT 2\.\d$/);
     expect(figures.get('E00')).to.match(/^[\d.]+ meV$/);
     expect(figures.get('Contact resistivity')).to.match(/^8\.\d+e−6 Ω cm² WKB; quadrature good to better than 0\.001 %$/);
   });

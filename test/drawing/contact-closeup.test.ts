@@ -88,7 +88,7 @@ describe('the close-up of a contact', () => {
   it('says in figures and in a sentence what the picture shows', () => {
     const figures = Object.fromEntries(closeUpFigures(CONTACTS.holes).map(({ name, text }) => [name, text]));
     expect(figures['Contact resistivity']).toMatch(/^8\.\d+e−6 Ω cm²$/);
-    expect(figures.Regime).toBe('thermionic-field emission');
+    expect(figures.Transport).toBe('thermionic-field emission');
     expect(figures['Passes at']).toMatch(/^holes mostly 0\.\d+ eV below EF; 80 % of the current between −0\.\d+ and −0\.\d+ eV; all of it by tunnelling$/);
     expect(closeUpFigures(CONTACTS.pool).find(({ name }) => name === 'Passes at')!.text).toMatch(/\d+ % over the top, the rest by tunnelling$/);
     expect(describeCloseUp(CONTACTS.electrons)).toContain('Barrier of electrons 1.620 eV');
