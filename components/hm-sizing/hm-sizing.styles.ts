@@ -32,6 +32,14 @@ export const styles = css`
     margin: 0;
     padding-inline-start: 1.1rem;
   }
+  .cautions::before {
+    content: '▲ ';
+  }
+  .cautions + ul,
+  [role='status'] ul {
+    margin-block-end: 0.4rem;
+    overflow-wrap: anywhere;
+  }
   ol {
     list-style: none;
     margin: 0;

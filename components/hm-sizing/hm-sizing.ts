@@ -24,11 +24,13 @@ import { panelLook, verdictLook } from '../shared/panel-look.ts';
 import { tableLook } from '../shared/table-look.ts';
 import { unitOf } from '../shared/typed-text.ts';
 import { WidthController } from '../shared/width-controller.ts';
+import { cautionList, widerRemark } from './best-remarks.ts';
 import { choiceOptions, likelyVariable, nameForPlace, rangeAbout, type ChoiceOption } from './sizing-choices.ts';
 import { saveSizing, type SizingFile } from './sizing-files.ts';
 import { marginTable, pictureOf, type Known } from './sizing-picture.ts';
 import type { SizingView } from './sizing-view.ts';
 import { blockerWords, edgeWords, marginLine, outcomeWords } from './sizing-words.ts';
+import { WiderJudging } from './wider-judging.ts';
 import { styles } from './hm-sizing.styles.ts';
 
 const LEAST_WIDTH = 320;
@@ -69,6 +71,7 @@ export class HmSizing extends LitElement {
   /** value typed to be put into the design; null: the best one */ declare private other: string | null;
 
   private readonly job = new JobController(this, 'size');
+  private readonly wider = new WiderJudging(this);
   private readonly box = new WidthController(this);
 
   constructor() {
@@ -85,6 +88,11 @@ export class HmSizing extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues<this>): void {
+    const { value } = this.job;
+    this.wider.follow(this.run, value, () => {
+      const best = value?.value.kind === 'sized' ? this.putText(value.value) : null;
+      return best === null || value?.value.kind !== 'sized' ? null : { design: value.input.design, variable: value.value.variable, text: best, counted: this.counted };
+    });
     const row = this.wish === null ? undefined : this.design?.requirements?.[this.wish.requirement];
     if (!changed.has('wish') || row === undefined) return;
     const name = likelyVariable(this.design!, row.of);
@@ -334,14 +342,24 @@ export class HmSizing extends LitElement {
     return html`${verdictWords(row)}, ${figure('margin')}: worst ${figure('worst')}${row.at === null ? nothing : html` at ${figure('corner')}`}${row.unanswered === null ? nothing : `; ${unansweredWords(row, ['corner', 'corners'])}`}`;
   }
 
-  private renderPut(answer: SizedAnswer): TemplateResult | typeof nothing {
-    const { variable, best, intervals } = answer;
-    if (best === null) return nothing;
+  /** The best value as it is put into the design. */
+  private putText(answer: SizedAnswer): string | null {
+    const { best, intervals } = answer;
+    if (best === null) return null;
     const home = intervals.find(({ from, to }) => best.value >= from.value && best.value <= to.value);
-    const text = textWithin(answer, best.value, home === undefined ? [answer.from, answer.to] : [home.from.value, home.to.value]);
+    return textWithin(answer, best.value, home === undefined ? [answer.from, answer.to] : [home.from.value, home.to.value]);
+  }
+
+  private renderPut(answer: SizedAnswer): TemplateResult | typeof nothing {
+    const { variable, best } = answer;
+    const text = this.putText(answer);
+    if (best === null || text === null) return nothing;
+    const { rows, running } = this.wider;
     const other = this.other ?? '';
     return html`<h3>Put into the design</h3>
       <p class="put"><button type="button" @click=${() => this.put(variable, text)}>${variable} = ${text}</button></p>
+      <div role="status">${rows === null ? (running ? html`<p class="doc">Being judged with all tolerances.</p>` : nothing) : widerRemark(text, rows)}</div>
+      ${cautionList(best.text, best.cautions)}
       <p class="put"><hm-field label="or another value" .hint=${text} .unit=${unitOf(text) ?? ''} .value=${other} @field-accept=${(e: CustomEvent<string>) => (this.other = e.detail)}></hm-field>
         <button type="button" ?disabled=${other === ''} @click=${() => this.put(variable, other)}>Put it in</button></p>`;
   }

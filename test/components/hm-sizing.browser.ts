@@ -1,6 +1,7 @@
 import { expect } from 'chai';
 import '../../components/hm-sizing/hm-sizing.ts';
 import type { HmSizing } from '../../components/hm-sizing/hm-sizing.ts';
+import { judge, type Judgement } from '../../src/requirements/judge.ts';
 import { size, sizeSteps, type LookedAt, type SearchedRange } from '../../src/requirements/size.ts';
 import type { Design } from '../../src/design/types.ts';
 import type { JobOutcome, RunJob } from '../../src/workers/job-client.ts';
@@ -27,7 +28,14 @@ let asked: JobInput<'size'>[] = [];
 let tellProgress: (progress: JobProgress<'size'>) => void;
 let end: (outcome: JobOutcome<never>) => void;
 let cancelled = 0;
-const run = ((_: 'size', input: JobInput<'size'>, told: (progress: JobProgress<'size'>) => void) => {
+/** Designs that were to be judged with all tolerances. */
+let judged: Design[] = [];
+let tellVerdict: (outcome: JobOutcome<Judgement>) => void;
+const run = ((kind: 'size' | 'judge', input: JobInput<'size'>, told: (progress: JobProgress<'size'>) => void) => {
+  if (kind === 'judge') {
+    judged.push(input.design);
+    return { outcome: new Promise<JobOutcome<Judgement>>((resolve) => (tellVerdict = resolve)), cancel: () => tellVerdict({ kind: 'dropped' }) };
+  }
   asked.push(input);
   tellProgress = told;
   let settle!: (outcome: JobOutcome<never>) => void;
@@ -56,6 +64,7 @@ async function answered(): Promise<void> {
 
 async function put(change: Partial<HmSizing> = {}): Promise<void> {
   asked = [];
+  judged = [];
   cancelled = 0;
   element = Object.assign(document.createElement('hm-sizing'), { design: design(), run, ...change });
   document.body.append(element);
@@ -139,6 +148,36 @@ describe('sizing', () => {
     within.dispatchEvent(new Event('change'));
     await settled(element);
     expect(text()).to.contain('Found within other tolerances: find the values again');
+  });
+
+  it('judges a value that was sized within fewer tolerances with all of them, and says where it is not met', async () => {
+    await put({ design: design((d) => { d.requirements = [{ quantity: 'sheetResistance', of: 'cap', max: '250 ohm' }, { quantity: 'carrierDensity', of: 'cap', min: '4.9e19 cm^-3' }]; }), view: { variable: 'tcap', tolerances: 'none' } });
+    button(element, 'Find the values').click();
+    await answered();
+    expect(text()).to.contain('Everything is met').and.to.contain('Being judged with all tolerances');
+    expect(judged).to.have.length(1);
+    expect(judged[0].variables![1].value).to.equal(button(element, 'tcap =').textContent!.replace('tcap = ', ''));
+    // Ncap is known to 10 %: at its lower end there are fewer carriers than are asked for.
+    tellVerdict({ kind: 'done', value: judge(judged[0], { samples: 0 }) });
+    await until('the verdict', () => element.shadowRoot!.querySelector('[role="status"] .not-met') !== null);
+    expect(text()).to.match(/Judged with all tolerances, as under Requirements: not met at [\d.]+ nm\..*carrier density of cap at least 4\.9e19 cm\^-3: missed by a factor [\d.]+ at .*Ncap -10 %/);
+    await expectAccessible(element);
+  });
+
+  it('judges nothing more where all tolerances counted', async () => {
+    await put({ view: { variable: 'tcap' } });
+    button(element, 'Find the values').click();
+    await answered();
+    expect(judged).to.have.length(0);
+    expect(text()).to.not.contain('all tolerances:').and.to.not.contain('Being judged');
+  });
+
+  it('says next to the best value what is to be cautioned of there', async () => {
+    await put({ design: design((d) => { d.requirements = [{ quantity: 'sheetResistance', of: 'cap', max: '300 ohm' }]; }), view: { variable: 'Ncap' } });
+    button(element, 'Find the values').click();
+    await answered();
+    expect(text()).to.match(/cautions? at 5e20 cm\^-3:.*cap: P at 5\.0e\+20 cm\^-3 lies above the \S+ cm\^-3 that was published as reachable/);
+    await expectAccessible(element);
   });
 
   it('writes the picture and the margins as files', async () => {
