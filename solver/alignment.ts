@@ -60,13 +60,15 @@ export function align(stack: Stack): Alignment {
   };
   const shift = new Float64Array(layers.length);
   const interfaces: InterfaceAlignment[] = [];
+  // The first row of an interface counts.
+  const rows = new Map<number, Interface>();
+  for (const row of stack.interfaces) if (!rows.has(row.index)) rows.set(row.index, row);
   for (let l = 0; l + 1 < layers.length; l++) {
     const above = bandsAt(l, layers[l].thickness);
     const below = bandsAt(l + 1, 0);
     const ecAbove = bare(l, layers[l].thickness) + shift[l];
     const ecBelow = bare(l + 1, 0);
-    const row = stack.interfaces.find((i) => i.index === l);
-    const { deltaEc, source } = offset(stack, l, row, above, below);
+    const { deltaEc, source } = offset(stack, l, rows.get(l), above, below);
     shift[l + 1] = ecAbove + deltaEc - ecBelow;
     const deltaEv = deltaEc - below.gap + above.gap;
     const ec = ecAbove + deltaEc;

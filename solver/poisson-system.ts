@@ -313,16 +313,20 @@ export class PoissonSystem {
     const { mesh, problem, density, weights, lumped } = this;
     const out = new Float64Array(mesh.nodes);
     const compact = new Float64Array(3);
+    // One piece of memory for all layers: of a thousand, the allocations would cost more than the sums.
+    const longest = this.stretched.reduce((most, x) => Math.max(most, x.length), 0);
+    const own = new Float64Array(longest);
+    const source = new Float64Array(longest);
+    const spare = new Float64Array(2 * longest);
+    const [differences, fourth] = [spare.subarray(0, longest), spare.subarray(longest)];
     this.stretched.forEach((x, l) => {
       const first = mesh.first[l];
       const s0 = first + l;
       const m = x.length - 1;
       const { insulator, kT } = this.charges[s0].bands;
       if (insulator) return;
-      const own = new Float64Array(m + 1);
-      const source = new Float64Array(m + 1);
-      for (let k = 0; k <= m; k++) source[k] = density[s0 + k] * this.stretch[s0 + k];
-      compactDefects(x, source, own);
+      for (let k = 0; k <= m; k++) source[k] = differences[k] = density[s0 + k] * this.stretch[s0 + k];
+      compactDefects(x, differences, own, fourth);
       const top = steepening((psi[first + 1] - psi[first]) / kT);
       const bottom = steepening((psi[first + m] - psi[first + m - 1]) / kT);
       own[0] *= top;

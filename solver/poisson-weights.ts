@@ -40,16 +40,15 @@ export function compactHalfBelow(h1: number, h2: number, out: Float64Array): voi
  * What the parabolas of one layer miss of the charge of each row, from the cubic and quartic through five nodes, C/cm^2 per unit of `rho` in C/cm^3.
  *
  * @param z    [nodes], at least 5, rising
- * @param rho  [nodes]
- * @param out  [nodes]: defects of the compact rows, ends included
+ * @param rho  [nodes or more]; its divided differences are left in it
+ * @param out  [nodes or more]: defects of the compact rows, ends included
+ * @param fourth  [nodes or more]: memory for the fourth differences
  */
-export function compactDefects(z: Float64Array, rho: Float64Array, out: Float64Array): void {
+export function compactDefects(z: Float64Array, rho: Float64Array, out: Float64Array, fourth: Float64Array): void {
   const n = z.length;
   // Divided differences in place: after pass p, d[k] spans nodes k .. k + p.
-  const d = Float64Array.from(rho);
-  for (let p = 1; p <= 3; p++) for (let k = 0; k + p < n; k++) d[k] = (d[k + 1] - d[k]) / (z[k + p] - z[k]);
-  const third = d;
-  const fourth = new Float64Array(n - 4);
+  const third = rho;
+  for (let p = 1; p <= 3; p++) for (let k = 0; k + p < n; k++) third[k] = (third[k + 1] - third[k]) / (z[k + p] - z[k]);
   for (let k = 0; k + 4 < n; k++) fourth[k] = (third[k + 1] - third[k]) / (z[k + 4] - z[k]);
   for (let k = 1; k + 1 < n; k++) {
     const h1 = z[k] - z[k - 1];
