@@ -44,6 +44,7 @@ export interface BarrierShape {
   /** where it lies, from the metal, cm */ topAt: number;
   /** band edge of the neutral layer: nothing passes below it */ edge: number;
   kT: number;
+  /** tunnelling mass of the neutral layer where the way ends, m0; NaN where it is not known. The last cell may be another layer's: a neutral layer may begin where an insulator ends. */ massBehind: number;
   /** what is left of the bending where the way ends, eV, and the length in which it dies away, cm; zero where the way ends at the edge */ tail: { height: number; length: number; mass: number };
   /** U inside a cell, eV */ at(s: number, cell: number): number;
   /** dU/ds there, eV/cm */ slope(s: number, cell: number): number;
@@ -146,7 +147,7 @@ export function barrierShape(stack: Stack, path: ContactPath, carrier: Carrier, 
 
   const shape: BarrierShape = {
     carrier, edges: new Float64Array(0), layer: new Int32Array(0), before: new Float64Array(0), after: new Float64Array(0), height: new Float64Array(0), weight: new Float64Array(0),
-    top: edge, topAt: z[last], edge, kT, tail: { height: 0, length: 0, mass: 0 },
+    top: edge, topAt: z[last], edge, kT, massBehind: places[path.layer[last]].mass(z[last], carrier), tail: { height: 0, length: 0, mass: 0 },
     at: (s, cell) => heightAt(s, cells[cell].mesh),
     slope: (s, cell) => slopeAt(s, cells[cell].mesh),
     mass: (s, cell) => places[path.layer[cells[cell].mesh]].mass(s, carrier),

@@ -117,6 +117,7 @@ function stepsOf(shape: BarrierShape, parts: readonly number[], error: number, s
   // The way ends at the neutral edge itself, flat.
   out.after[cells - 1] = shape.edge;
   out.slope[cells - 1] = 0;
+  out.mass[cells - 1] = shape.massBehind;
   return out;
 }
 
@@ -233,6 +234,8 @@ function halvingError(shape: BarrierShape, cell: number, n: number, energies: re
 function lastRough(shape: BarrierShape, energy: number, accuracy: number): number {
   const { after, layer, edges, edge } = shape;
   let k = layer.length - 1;
+  // A neutral layer that begins at the end of another throws back there.
+  if (shape.mass(edges[k + 1], k) !== shape.massBehind) return k;
   for (; k > 0 && layer[k - 1] === layer[k]; k--) {
     const free = energy - after[k - 1];
     const left = Math.abs(after[k - 1] - edge);
