@@ -17,6 +17,8 @@ const MOST_VOLTS = 2;
 /** So many steps in a row below this share of what is allowed are a stall, though each passes its test: frozen layers between open ends ask for 1e11 V for ever. */
 const STALLED_STEPS = 10;
 const STALLED_SHARE = 1e-3;
+/** After so many updates the search that always makes progress takes over, whatever the steps: most solutions take fewer than 20. */
+const LONG_RUN = 60;
 
 /**
  * Damped Newton iteration of Poisson's equation; `psi` [nodes], V, is changed in place. On return the system's residual and density are
@@ -61,7 +63,7 @@ export function newton(system: PoissonSystem, psi: Float64Array, evaluated = fal
     if (!convex) {
       const found = monotoneStep(system, psi, step, trial, next, Math.min(1, 4 * lambda), cap);
       stalled = found < STALLED_SHARE * cap ? stalled + 1 : 0;
-      if (found > 0 && stalled < STALLED_STEPS) lambda = found;
+      if (found > 0 && stalled < STALLED_STEPS && updates < LONG_RUN) lambda = found;
       else {
         // The factors were of this very matrix, but the residual is of the last trial: back to psi before the second way.
         convex = true;

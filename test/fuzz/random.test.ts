@@ -37,8 +37,8 @@ describe('random designs of presets and own materials, 1 to 12 layers, 4 to 1000
     expect(coverage.missing()).toEqual([]);
   });
 
-  it('are accepted with both ends open and every carrier frozen, where Newton asks for 1e11 V', () => {
-    expect(tryDesign(randomDesign(randomFrom(102_002_765)))).toMatchObject({ kind: 'accepted', method: 'compact' });
+  it('are accepted with frozen layers, where Newton asks for 1e11 V, and where its steps wander', () => {
+    for (const seed of [102_002_765, 102_003_765, 102_004_554]) expect(tryDesign(randomDesign(randomFrom(seed)))).toMatchObject({ kind: 'accepted', method: 'compact' });
   });
 
   it('are design documents, and the same for the same seed', () => {
