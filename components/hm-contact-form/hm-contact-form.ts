@@ -1,4 +1,4 @@
-import { LitElement, html, nothing, type TemplateResult } from 'lit';
+import { LitElement, html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { ContactInput, Design } from '../../src/design/types.ts';
 import { setContact, type Side } from '../../src/state/commands/index.ts';
@@ -11,6 +11,8 @@ import { select } from '../shared/select.ts';
 import '../hm-field/hm-field.ts';
 
 type BarrierContact = Extract<ContactInput, { kind: 'barrier' }>;
+
+const START = { barrier: '0.7 eV', carrier: 'n' } as const;
 
 const KINDS = [
   { value: 'neutral', text: 'neutral (no bending)' },
@@ -33,12 +35,19 @@ export class HmContactForm extends LitElement {
   declare side: Side;
   declare metals: readonly MetalChoice[];
   declare complaints: readonly Complaint[];
+  /** the last barrier that was typed: a metal brings its own, and this one can be taken up again with the metal's name */ private typed: Pick<BarrierContact, 'barrier' | 'carrier'> = START;
 
   constructor() {
     super();
     this.side = 'top';
     this.metals = [];
     this.complaints = [];
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>): void {
+    if (changed.has('side')) this.typed = START;
+    const contact = this.design?.[this.side];
+    if (contact?.kind === 'barrier' && contact.barrier !== undefined) this.typed = { barrier: contact.barrier, carrier: contact.carrier ?? 'n' };
   }
 
   override render(): TemplateResult | typeof nothing {
@@ -54,10 +63,17 @@ export class HmContactForm extends LitElement {
 
   private renderBarrier(contact: BarrierContact): TemplateResult {
     const given = contact.barrier !== undefined;
-    const options = [{ value: '', text: 'barrier given outright' }, ...this.metals.map((m) => ({ value: m.id, text: m.id === m.name ? m.id : `${m.id}, ${m.name}` }))];
-    const { metal, barrier, carrier, pinning, ...rest } = contact;
+    // A barrier needs no metal, but may name the one that it is of; one that only this design's file names stays on the menu.
+    const named = this.metals.map((m) => ({ value: m.id, text: m.id === m.name ? m.id : `${m.id}, ${m.name}` }));
+    const { metal = '', barrier, carrier, pinning, ...rest } = contact;
+    const unlisted = given && metal !== '' && !this.metals.some(({ id }) => id === metal) ? [{ value: metal, text: metal }] : [];
+    const options = [{ value: '', text: given ? 'none named' : 'none, its barrier is given' }, ...unlisted, ...named];
+    const from = given ? 'given' : 'metal';
     return html`
-      ${select({ id: 'metal', label: 'metal', value: given ? '' : (metal ?? ''), options, complaint: complaintAt(this.complaints, `${this.side}.metal`), onChoice: (id) => this.edit(id === '' ? { ...rest, barrier: barrier ?? '0.7 eV', carrier: carrier ?? 'n' } : { ...rest, metal: id, pinning }, 'metal') })}
+      ${select({ id: 'metal', label: 'metal', value: metal, options, complaint: complaintAt(this.complaints, `${this.side}.metal`), onChoice: (id) => this.edit(id === '' ? { ...rest, ...this.typed } : { ...rest, metal: id, pinning }, 'metal') })}
+      ${metal === ''
+        ? nothing
+        : select({ id: 'from', label: 'its barrier', value: from, options: [{ value: 'metal', text: 'as known of the metal' }, { value: 'given', text: 'given here' }], onChoice: (choice) => this.edit(choice === 'given' ? { ...rest, metal, ...this.typed } : { ...rest, metal, pinning }, 'barrier') })}
       ${given
         ? html`${this.field('barrier', 'barrier height', barrier ?? '', 'eV', (text) => ({ ...contact, barrier: text }))}
             ${select({ id: 'carrier', label: 'for', value: carrier ?? 'n', options: [{ value: 'n', text: 'electrons' }, { value: 'p', text: 'holes' }], onChoice: (c) => this.edit({ ...contact, carrier: c as 'n' | 'p' }, 'barrier') })}`
@@ -85,7 +101,7 @@ export class HmContactForm extends LitElement {
 
   /** A contact to start from when another kind is chosen. */
   private startOf(kind: ContactInput['kind']): ContactInput {
-    if (kind === 'barrier') return this.metals.length > 0 ? { kind, metal: this.metals[0].id, imageForce: true } : { kind, barrier: '0.7 eV', carrier: 'n', imageForce: true };
+    if (kind === 'barrier') return this.metals.length > 0 ? { kind, metal: this.metals[0].id, imageForce: true } : { kind, ...START, imageForce: true };
     if (kind === 'pinned') return { kind, level: '0.7 eV' };
     return { kind };
   }

@@ -384,6 +384,39 @@ describe('hm-strip', () => {
     expect(edits.at(-1)!.detail.next.bottom).to.deep.equal({ kind: 'pinned', level: '0.7 eV' });
   });
 
+  it('holds the name of a metal together with a barrier that was typed', async () => {
+    const { s, edits } = await strip({ chosen: { kind: 'contact', index: 1 } });
+    const form = s.renderRoot.querySelector('hm-contact-form')!;
+    const choose = async (id: string, choice: string): Promise<void> => {
+      const menu = form.renderRoot.querySelector<HTMLSelectElement>(`#${id}`)!;
+      menu.value = choice;
+      menu.dispatchEvent(new Event('change'));
+      await settled(s);
+      await form.updateComplete;
+    };
+    const now = () => edits.at(-1)!.detail.next.bottom;
+    await choose('kind', 'barrier');
+    await choose('metal', 'Ti');
+    await choose('from', 'given');
+    expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ti', barrier: '0.7 eV', carrier: 'n' });
+    expect(form.renderRoot.querySelector<HTMLSelectElement>('#metal')!.value).to.equal('Ti');
+    const { input } = field(s, 'barrier height');
+    input.focus();
+    input.value = '0.61';
+    await sendKeys({ press: 'Enter' });
+    await settled(s);
+    expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ti', barrier: '0.61 eV', carrier: 'n' });
+    expect(s.renderRoot.querySelector('.contact.bottom')!.textContent).to.contain('Ti').and.to.contain('barrier 0.61 eV');
+    // Another metal comes with its own barrier; what was typed can be taken up again.
+    await choose('metal', 'Ni');
+    expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ni' });
+    await choose('from', 'given');
+    expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ni', barrier: '0.61 eV', carrier: 'n' });
+    await choose('metal', '');
+    expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, barrier: '0.61 eV', carrier: 'n' });
+    expect(form.renderRoot.querySelector('#from')).to.equal(null);
+  });
+
   it('grades a composition and implants a doping', async () => {
     const { s, edits } = await strip({ chosen: { kind: 'layer', index: 1 } });
     const form = s.renderRoot.querySelector('hm-layer-form')!;
