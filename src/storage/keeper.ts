@@ -264,12 +264,15 @@ export class Keeper extends EventTarget {
    */
   async #recover(record: ProjectRecord): Promise<boolean> {
     let recovered = false;
-    for (const { place, words } of hearLastWords(record.id)) {
+    let from: string | null = null;
+    for (const { place, tab, words } of hearLastWords(record.id)) {
       const reading = readDesign(words.designText);
       if (!reading.ok || words.designText === textOfVariant(record, words.variant)) forgetLastWords(place);
-      else if (words.revision === record.revision && !recovered) {
+      else if (words.revision === record.revision && (from ?? tab) === tab) {
+        // One tab may have left words of several variants.
+        from = tab;
         this.#toVariant(words.variant);
-        recovered = this.#session.edit(reading.design, 'changes just before the page was closed');
+        recovered = this.#session.edit(reading.design, 'changes just before the page was closed') || recovered;
         // They stay where they are until the design that holds them now is saved.
         this.#takenUp.push(place);
       } else await this.#rescue(record, place, words);

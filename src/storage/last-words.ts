@@ -10,38 +10,41 @@ export interface LastWords {
   /** of what was about to become a project of its own: the id that it gets in the database */ born?: string;
 }
 
-/** One place a project and a tab, so that two tabs that close together do not talk over each other. */
 const prefix = (id: string): string => `halfmark:unsaved:${id}:`;
+/** One place a project, a tab and a variant, so that neither two tabs that close together nor two variants of one tab talk over each other. */
+const placeOf = (id: string, tab: string, variant = ''): string => `${prefix(id)}${tab}:${variant}`;
+
+/** Counts what this tab has said, so that what it said last is known as such. */
+let turn = 0;
 
 /** @returns whether they were kept; a browser may refuse */
 export function leaveLastWords(words: LastWords, tab: string, store: Storage = localStorage): boolean {
-  return rewriteLastWords(prefix(words.id) + tab, words, store);
+  return write(placeOf(words.id, tab, words.variant), { ...words, turn: ++turn }, store);
 }
 
 /** Writes more into words where they stand. @returns whether they were kept */
 export function rewriteLastWords(place: string, words: LastWords, store: Storage = localStorage): boolean {
+  return write(place, words, store);
+}
+
+/** What a tab said of a project, in any of its variants, has been saved after all. */
+export function dropLastWords(id: string, tab: string, store: Storage = localStorage): void {
   try {
-    store.setItem(place, JSON.stringify(words));
-    return true;
+    for (const place of placesUnder(placeOf(id, tab), store)) store.removeItem(place);
   } catch {
-    return false;
+    // A browser that keeps nothing has nothing to forget.
   }
 }
 
-/** What they said has been saved after all. */
-export function dropLastWords(id: string, tab: string, store: Storage = localStorage): void {
-  forgetLastWords(prefix(id) + tab, store);
-}
-
-/** Those of one project, of whichever tab, each with the place where they stand. What cannot be read is removed and left out. */
-export function hearLastWords(id: string, store: Storage = localStorage): { place: string; words: LastWords }[] {
+/** Those of one project, of whichever tab, what it said last behind the rest, each with the place where they stand and the tab that left them. What cannot be read is removed and left out. */
+export function hearLastWords(id: string, store: Storage = localStorage): { place: string; tab: string; words: LastWords }[] {
   try {
-    const places = Array.from({ length: store.length }, (_, i) => store.key(i)!).filter((key) => key.startsWith(prefix(id)));
-    return places.flatMap((place) => {
-      const words = read(store.getItem(place) ?? '');
-      if (words === null) store.removeItem(place);
-      return words === null ? [] : [{ place, words }];
+    const heard = placesUnder(prefix(id), store).flatMap((place) => {
+      const said = read(store.getItem(place) ?? '');
+      if (said === null) store.removeItem(place);
+      return said === null ? [] : [{ place, tab: place.slice(prefix(id).length).split(':')[0], ...said }];
     });
+    return heard.sort((one, other) => one.turn - other.turn).map(({ place, tab, words }) => ({ place, tab, words }));
   } catch {
     return [];
   }
@@ -56,11 +59,25 @@ export function forgetLastWords(place: string, store: Storage = localStorage): v
   }
 }
 
-function read(text: string): LastWords | null {
+function placesUnder(start: string, store: Storage): string[] {
+  return Array.from({ length: store.length }, (_, i) => store.key(i)!).filter((key) => key.startsWith(start));
+}
+
+function write(place: string, said: LastWords & { turn?: number }, store: Storage): boolean {
   try {
-    const { id, revision, designText, variant, born } = JSON.parse(text) as Partial<LastWords>;
+    store.setItem(place, JSON.stringify(said));
+    return true;
+  } catch {
+    return false;
+  }
+}
+
+function read(text: string): { words: LastWords; turn: number } | null {
+  try {
+    const { id, revision, designText, variant, born, turn: said } = JSON.parse(text) as Partial<LastWords & { turn: number }>;
     if (typeof id !== 'string' || typeof revision !== 'number' || typeof designText !== 'string') return null;
-    return { id, revision, designText, ...(typeof variant === 'string' ? { variant } : {}), ...(typeof born === 'string' ? { born } : {}) };
+    const words = { id, revision, designText, ...(typeof variant === 'string' ? { variant } : {}), ...(typeof born === 'string' ? { born } : {}) };
+    return { words, turn: typeof said === 'number' ? said : 0 };
   } catch {
     return null;
   }

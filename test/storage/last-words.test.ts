@@ -33,6 +33,18 @@ describe('what was not saved when the page went away', () => {
     expect(heard('a', store)).toEqual([words(2)]);
   });
 
+  it('is there of each variant that a tab was in, and dropped with them all', () => {
+    const store = shelf();
+    for (const variant of ['base', 'b']) leaveLastWords({ ...words(3), variant }, 'one', store);
+    leaveLastWords({ ...words(4), variant: 'b' }, 'one', store);
+    expect(heard('a', store)).toEqual([{ ...words(3), variant: 'base' }, { ...words(4), variant: 'b' }]);
+    leaveLastWords({ ...words(5), variant: 'base' }, 'one', store);
+    expect(heard('a', store).map(({ variant }) => variant)).toEqual(['b', 'base']);
+    expect(hearLastWords('a', store).map(({ tab }) => tab)).toEqual(['one', 'one']);
+    dropLastWords('a', 'one', store);
+    expect(heard('a', store)).toEqual([]);
+  });
+
   it('is given up without harm when the browser refuses or gives back something else', () => {
     expect(leaveLastWords(words(3), 'one', shelf(true))).toBe(false);
     const store = shelf();

@@ -109,6 +109,25 @@ describe('the variants of a kept project', () => {
     expect(titles(two.session)).to.deep.equal(['*base: in the last second', 'other: three layers']);
   });
 
+  it('get back the edits by a dead tab in each of two variants', async () => {
+    const one = tab();
+    await one.keeper.create('cell', designFixture());
+    one.session.changeVariants(addVariant(one.session.variants, 'other', 'b'));
+    await one.keeper.flush();
+    await one.store.close();
+    // Nothing is saved from here on.
+    const spoken = () => new Promise((done) => setTimeout(done, 120));
+    one.retitle('edited there');
+    await spoken();
+    one.session.changeVariants(openVariant(one.session.variants, 'base'));
+    one.retitle('and here');
+    await spoken();
+    const two = tab();
+    expect(await two.keeper.openLast()).to.deep.equal({ ok: true, recovered: true });
+    expect(titles(two.session)).to.deep.equal(['*base: and here', 'other: edited there']);
+    expect((await two.store.list()).length).to.equal(1);
+  });
+
   it('are one in a database of the first version, which is lifted without losing anything', async () => {
     const old = await openDB(name, 1, {
       upgrade(db, _from, _to, transaction) {
