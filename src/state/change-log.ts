@@ -1,17 +1,21 @@
 import type { ContactInput, Design, DopantRow, LayerInput } from '../design/types.ts';
+import { interfaceChanges, ownEntryChanges } from './change-log-entries.ts';
+import { turned, valueText } from './change-sentences.ts';
 import { difference, same, type Json } from './difference.ts';
 
 /**
  * What leads from one design to another, in plain words for a review: layers that came, went, moved or were renamed, and each of their values; contacts, variables,
- * conditions, assumptions, requirements. Layers are the same ones by name; one whose name alone changed is known by all the rest. No words: the designs are equal.
+ * conditions, assumptions, requirements, interfaces, own entries. Layers are the same ones by name; one whose name alone changed is known by all the rest. No words: the designs are equal.
  */
 export function changeLog(before: Design, after: Design): string[] {
   return [
     ...layerChanges(before.layers, after.layers),
+    ...interfaceChanges(before.interfaces ?? [], after.interfaces ?? [], renames(before.layers, after.layers)),
     ...contactChange('top', before.top, after.top),
     ...contactChange('bottom', before.bottom, after.bottom),
     ...named('variable', before.variables ?? [], after.variables ?? [], (row) => row.name, (row) => row.value),
     ...listed('requirement', before.requirements ?? [], after.requirements ?? []),
+    ...ownEntryChanges(before.custom ?? {}, after.custom ?? {}),
     ...rest(before, after),
   ];
 }
@@ -118,28 +122,10 @@ const WORDS: Readonly<Record<string, string>> = {
 
 /** What the sentences above do not speak of. */
 function rest(before: Design, after: Design): string[] {
-  const others = ({ layers: _l, top: _t, bottom: _b, variables: _v, requirements: _r, ...more }: Design): Json => more as unknown as Json;
+  const others = ({ layers: _l, top: _t, bottom: _b, variables: _v, requirements: _r, interfaces: _i, custom: _c, ...more }: Design): Json => more as unknown as Json;
   return difference(others(before), others(after)).flatMap((change): string[] => {
     const path = change.path.join('.');
     const words = WORDS[path] ?? path;
     return 'at' in change ? [`The list ${words} was changed.`] : turned(words[0].toUpperCase() + words.slice(1), change.before, change.after);
   });
-}
-
-/** "Thickness of cap: 40 nm, was 30 nm." */
-function turned(what: string, before: unknown, after: unknown): string[] {
-  if (same(before as Json | undefined, after as Json | undefined)) return [];
-  const start = what[0].toUpperCase() + what.slice(1);
-  if (before === undefined) return [`${start}: ${valueText(after)}, was not given.`];
-  return after === undefined ? [`${start}: no longer given, was ${valueText(before)}.`] : [`${start}: ${valueText(after)}, was ${valueText(before)}.`];
-}
-
-function valueText(value: unknown): string {
-  if (typeof value === 'string') return value;
-  if (typeof value !== 'object' || value === null) return String(value);
-  const { from, to, shape, points, peak, depth } = value as Record<string, unknown>;
-  if (points !== undefined) return `${(points as unknown[]).length} points through the depth`;
-  if (peak !== undefined) return `${String(peak)} peak at ${String(depth)}`;
-  if (from !== undefined) return `${String(from)} to ${String(to)} (${String(shape)})`;
-  return JSON.stringify(value);
 }

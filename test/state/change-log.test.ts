@@ -56,4 +56,43 @@ describe('the change log between two designs', () => {
     expect(lines).toContain('The requirement "sheetResistance of cap at most 250 ohm over the temperature range" was put in.');
     expect(lines.filter((line) => line.startsWith('The variable'))).toEqual([expect.stringMatching(/: 9e18 cm\^-3, was /), expect.stringMatching(/has another tolerance/)]);
   });
+
+  it('tells which interface was given what, also where the layer above it was renamed', () => {
+    const given = edited((d) => { d.interfaces = [{ above: 'cap', sheetCharge: '3e12 cm^-2' }]; });
+    const before = given(designFixture());
+    expect(changeLog(edited((d) => { delete d.interfaces; })(before), before)).toEqual(['Sheet charge at the interface below cap: 3e12 cm^-2, was not given.']);
+    const other = edited((d) => { d.interfaces = [{ above: 'cap', sheetCharge: '4e12 cm^-2' }, { above: 'spacer', dEc: '0.2 eV' }]; })(before);
+    expect(changeLog(before, other)).toEqual(['Sheet charge at the interface below cap: 4e12 cm^-2, was 3e12 cm^-2.', 'Offset of the conduction band at the interface below spacer: 0.2 eV, was not given.']);
+    expect(changeLog(before, commands.renameLayer(before, 0, 'lid')).some((line) => line.includes('interface'))).toBe(false);
+    expect(changeLog(other, before)).toContain('Offset of the conduction band at the interface below spacer: no longer given, was 0.2 eV.');
+  });
+
+  it('tells which own entry came, went, or has another value', () => {
+    const given = edited((d) => {
+      d.custom = {
+        materials: [{ id: 'mine', gap: { zeroK: '1.5 eV', alpha: '5e-4 eV/K', beta: '200 K' }, source: 'own' }], dopants: [{ id: 'Si', host: 'mine', kind: 'donor', depth: '6 meV', source: 'own' }],
+        metals: [{ id: 'alloy', workFunction: '4.5 eV', source: 'own' }], offsets: [{ first: 'mine', second: 'GaAs', deltaEv: { constant: '0.1 eV' }, source: 'own' }],
+      };
+    });
+    expect(log(given)).toEqual(['The own material mine was put in.', 'The own dopant Si in mine was put in.', 'The own metal alloy was put in.', 'The own band offset mine to GaAs was put in.']);
+    const before = given(designFixture());
+    const after = edited((d) => {
+      d.custom!.materials![0].gap = { zeroK: '1.6 eV', alpha: '5e-4 eV/K', beta: '200 K' };
+      d.custom!.dopants = [];
+      d.custom!.metals!.push({ id: 'second', workFunction: '5 eV', source: 'own' });
+      d.custom!.metals![0].barriers = [{ material: 'GaAs', carrier: 'n', height: '0.8 eV', source: 'own' }];
+      d.custom!.offsets![0].deltaEv = { constant: '0.2 eV' };
+    })(before);
+    expect(changeLog(before, after)).toEqual([
+      'Gap.zeroK of the own material mine: 1.6 eV, was 1.5 eV.', 'The own dopant Si in mine was taken out.', 'Barriers of the own metal alloy: 1 in the list, was not given.', 'The own metal second was put in.',
+      'DeltaEv.constant of the own band offset mine to GaAs: 0.2 eV, was 0.1 eV.',
+    ]);
+    expect(changeLog(before, after).join(' ')).not.toMatch(/[{}[\]]/);
+  });
+
+  it('writes a range that was not there in words', () => {
+    const none = edited((d) => { delete d.conditions.temperatureRange; })(designFixture());
+    const ranged = edited((d) => { d.conditions.temperatureRange = ['-40 degC', '85 degC']; })(none);
+    expect(changeLog(none, ranged)).toEqual(['Temperature range: -40 degC to 85 degC, was not given.']);
+  });
 });
