@@ -31,6 +31,16 @@ describe('the help', () => {
     for (const { file, address } of HELP_PAGES) expect(address.endsWith(`/${FOLDER}/${file}`)).toBe(true);
   });
 
+  it('names the change log and its revisions by the words that the page has for them', () => {
+    const log = text('components/hm-variants/hm-change-log.ts');
+    const copy = text('components/hm-variants/hm-variants.ts');
+    const help = text(join(FOLDER, 'first-five-minutes.md'));
+    for (const [words, page] of [['What was changed', log], ['revision', log], ['Copy what is on the page as a variant', copy]]) {
+      expect(page).toContain(words);
+      expect(help).toContain(words);
+    }
+  });
+
   for (const page of pages) {
     it(`${page} has one heading of its own, links that lead to pages, and pictures that are there`, () => {
       const blocks = readMarkdown(text(join(FOLDER, page)));
