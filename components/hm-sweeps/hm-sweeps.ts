@@ -2,7 +2,6 @@ import { LitElement, html, nothing, svg, type PropertyValues, type TemplateResul
 import { guard } from 'lit/directives/guard.js';
 import type { Complaint } from '../../src/design/complaint.ts';
 import type { Design } from '../../src/design/types.ts';
-import { MOBILITY_NOTE, restsOnMobility } from '../../src/result/mobility-note.ts';
 import type { Result } from '../../src/result/types.ts';
 import { drawContourMap, type ContourMap } from '../../src/drawing/contour-map.ts';
 import { lineCode } from '../../src/drawing/margin-plot.ts';
@@ -27,7 +26,7 @@ import { BatchController, type Pool } from './batch-controller.ts';
 import './hm-film.ts';
 import { plotLook, styles } from './hm-sweeps.styles.ts';
 import { axisAbout, axisOptions, axisRequest, firstFigures, heldAxis, heldFilm, putIntoDesign, sweepBasis } from './sweep-choices.ts';
-import { figureText, gapLines, mapPicture, placeOf, placeWords, plotPicture, withUnit } from './sweep-picture.ts';
+import { figureText, gapLines, mapPicture, placeOf, placeWords, plotPicture, putText, withUnit } from './sweep-picture.ts';
 import { cursorAt, cursorMoved, cursorShapes } from './sweep-cursor.ts';
 import type { AxisView, SweepsView } from './sweeps-view.ts';
 
@@ -159,8 +158,8 @@ export class HmSweeps extends LitElement {
     const { plan } = this.asked!;
     if (this.stale || (this.swept!.figures.length > 0 && this.swept!.gaps.some((gap) => gap.index === index))) return;
     const parts = placeOf(plan, index);
-    const next = parts.reduce((design, { axis, at }) => putIntoDesign(design, axis.place, axis.texts[at]), this.design!);
-    const words = parts.map(({ axis, at }) => `${axis.place.words} ${axis.texts[at]}`).join(', ');
+    const next = parts.reduce((design, { axis, at }) => putIntoDesign(design, axis.place, putText(axis, at)), this.design!);
+    const words = parts.map(({ axis, at }) => `${axis.place.words} ${putText(axis, at)}`).join(', ');
     tell(this, 'hm-edit', { next, label: `${words}, from the sweep` });
     tell(this, 'hm-say', { text: `Now on the plate: ${words}. Undo takes it back.` });
   }
@@ -278,7 +277,7 @@ export class HmSweeps extends LitElement {
       ${this.renderReading()}
       ${two ? nothing : this.renderKey()}
       <p id="summary" class="faint">${drawing.description}</p>
-      ${plan.axes.some(({ place }) => place.kind === 'temperature') && plan.figures.some(({ path }) => restsOnMobility(path)) ? html`<p class="doc">${MOBILITY_NOTE}</p>` : nothing}
+      ${result.notes.map((note) => html`<p class="doc">${note}</p>`)}
       ${gapLines(plan, result).map((line) => html`<p class="wrong">${line}</p>`)}
       <div class="row"><button type="button" @click=${() => this.save('.csv')}>CSV</button><button type="button" @click=${() => this.save('.svg')}>SVG</button></div>
       ${this.renderTable()}

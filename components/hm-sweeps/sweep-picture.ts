@@ -36,6 +36,23 @@ export function mapPicture(plan: SweepPlan, { figures, gaps }: SweepResult, show
 
 export const withUnit = (value: number, unit: string): string => `${writeNumber(value, 4)}${unit === '' ? '' : ` ${unit}`}`;
 
+/** Digits that a point is read by; more only where its neighbours lie so near that it would move by more than this share of the way to them. */
+const READ_DIGITS = 4;
+const MOST_SHIFT = 0.05;
+
+/**
+ * A point of an axis as text for the design: an end as it was given, one between as the cursor reads it, with as many digits more as a fine sweep needs.
+ */
+export function putText({ values, unit, texts }: Pick<Axis, 'values' | 'unit' | 'texts'>, at: number): string {
+  if (at === 0 || at === values.length - 1) return texts[at];
+  const value = values[at];
+  const nearest = Math.min(value - values[at - 1], values[at + 1] - value);
+  let digits = READ_DIGITS;
+  while (digits < 15 && Math.abs(Number(value.toPrecision(digits)) - value) > MOST_SHIFT * nearest) digits++;
+  // Of 12 350 four digits are its value, five its text.
+  return `${writeNumber(Number(value.toPrecision(digits)), Math.max(digits, 5))}${unit === '' ? '' : ` ${unit}`}`;
+}
+
 /** Where each axis stands at a point. */
 export function placeOf(plan: SweepPlan, index: number): { axis: Axis; at: number }[] {
   let left = index;
