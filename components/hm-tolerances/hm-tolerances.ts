@@ -206,7 +206,7 @@ export class HmTolerances extends LitElement {
     const shown = this.shown(found);
     return html`<div class="found ${this.stale ? 'stale' : ''}">
       ${this.stale ? html`<p class="stale-mark">Drawn for the design before the last change: draw the variations again.</p>` : nothing}
-      ${yieldTable(result)} ${gapList(result)} ${this.renderChoice(found, shown)} ${shown.map((path, i) => this.renderPictures(found, path, i))}
+      ${yieldTable(result)} ${gapList(result)} ${result.notes.map((note) => html`<p class="doc">${note}</p>`)} ${this.renderChoice(found, shown)} ${shown.map((path, i) => this.renderPictures(found, path, i))}
       <details>
         <summary>All figures as a table, ${result.figures.length} rows</summary>
         ${spreadTable(result)}

@@ -1,3 +1,7 @@
+import { toStack } from '../design/stack.ts';
+import type { Design } from '../design/types.ts';
+import { mobilityNotes } from '../result/mobility-note.ts';
+import type { RequirementResult } from '../result/types.ts';
 import { verdictLine } from '../requirements/verdict.ts';
 import { parseArguments } from './arguments.ts';
 import { EXIT, SET, TOLERANCES, type Command } from './command.ts';
@@ -22,7 +26,16 @@ export const check: Command = {
     const rows = judged(design, set, tolerances);
     if (rows.length === 0) streams.error('halfmark: this design has no requirements; there is nothing to judge\n');
     for (const row of rows) streams.out(`${verdictLine(row)}\n`);
+    for (const note of notesOf(design, set, rows)) streams.error(`halfmark: ${note}\n`);
     if (rows.some((row) => row.judged && !row.met)) return EXIT.requirementNotMet;
     return rows.every((row) => row.met) ? EXIT.done : EXIT.noAnswer;
   },
 };
+
+/** What the judged figures leave out at their temperatures. */
+function notesOf(design: Design, set: Record<string, string>, rows: readonly RequirementResult[]): string[] {
+  const reading = toStack(design, set);
+  if (!reading.ok) return [];
+  const nominal = [reading.stack.temperature];
+  return mobilityNotes(rows.map(({ quantity, over }) => ({ name: quantity, temperatures_K: over === 'temperatureRange' ? (reading.temperatureRange ?? nominal) : nominal })));
+}

@@ -1,7 +1,7 @@
 import { allChunks, shardChunks, totalOf } from '../batch/job.ts';
 import { InputError, type Complaint } from '../design/complaint.ts';
 import { sweepCsvHeading, sweepCsvRows } from '../sweep/csv.ts';
-import { planSweep, pointsOf, sweepJob, sweepResult, type SweepPoint, type SweepRequest } from '../sweep/sweep.ts';
+import { planSweep, pointsOf, sweepJob, sweepNotes, sweepResult, type SweepPoint, type SweepRequest } from '../sweep/sweep.ts';
 import { parseArguments } from './arguments.ts';
 import { EXIT, SET, UsageError, type Command } from './command.ts';
 import { readDesignFile } from './design-file.ts';
@@ -66,6 +66,7 @@ export const sweep: Command = {
       const whole = pointsOf(plan, new Map(chunks.map((chunk) => [chunk, values.get(chunk) ?? Array.from({ length: job.size(chunk) }, () => NOT_REACHED)])));
       streams.out(`${shard && shard[0] > 1 ? '' : sweepCsvHeading(plan)}${sweepCsvRows(plan, whole)}`);
     } else streams.out(`${JSON.stringify(sweepResult(plan, values), null, 1)}\n`);
+    for (const note of sweepNotes(plan)) streams.error(`halfmark: ${note}\n`);
     if (gaps.length > 0) streams.error(`halfmark: ${gaps.length} of ${reached} points have no answer; the first: ${gaps[0].replace(/[\r\n\u2028\u2029]+/g, ' ')}\n`);
     if (stopped) {
       streams.error(`halfmark: stopped; this is partial: ${reached} of ${of} points\n`);

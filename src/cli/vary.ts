@@ -74,6 +74,8 @@ export const vary: Command = {
     const { values, stopped } = options.gather === undefined ? await longRun({ kind: 'variations', design, request }, job, allChunks(job), streams, workers) : { values: await gathered(plan, options.gather, streams), stopped: false };
     const result = variationResult(plan, values);
     streams.out(flags.has('--json') ? `${JSON.stringify(result, null, 1)}\n` : variationReport(result));
+    // The report holds the notes itself.
+    if (flags.has('--json')) for (const note of result.notes) streams.error(`halfmark: ${note}\n`);
     if (stopped) {
       streams.error(`halfmark: stopped; this is partial: ${result.done} of ${result.count} variations\n`);
       return EXIT.stopped;

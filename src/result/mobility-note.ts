@@ -8,3 +8,11 @@ const FIELDS: ReadonlySet<string> = new Set(['mobility_cm2_Vs', 'mobility_n_cm2_
 export function restsOnMobility(name: string): boolean {
   return FIELDS.has(name.slice(name.lastIndexOf('.') + 1));
 }
+
+/** K, what the mobilities are of. */
+const ROOM_K = 300;
+
+/** @returns the note, where one of the figures rests on a mobility and one of its temperatures (K) is another than room temperature */
+export function mobilityNotes(asked: readonly { name: string; temperatures_K: readonly number[] }[]): string[] {
+  return asked.some(({ name, temperatures_K }) => restsOnMobility(name) && temperatures_K.some((T) => T !== ROOM_K)) ? [MOBILITY_NOTE] : [];
+}

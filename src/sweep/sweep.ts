@@ -3,6 +3,7 @@ import type { Job } from '../batch/job.ts';
 import { complaintLine, type Complaint } from '../design/complaint.ts';
 import { toStack } from '../design/stack.ts';
 import type { Design } from '../design/types.ts';
+import { mobilityNotes } from '../result/mobility-note.ts';
 import { provenanceOf } from '../result/provenance.ts';
 import { solveFigures, type SolvedAnswer } from '../result/solve-design.ts';
 import type { Provenance } from '../result/types.ts';
@@ -37,6 +38,7 @@ export interface SweepResult {
   /** points without an answer, and why */ gaps: { index: number; reason: string }[];
   /** points that were solved or found to be gaps */ done: number;
   /** some were not reached */ partial: boolean;
+  /** what the figures leave out at their temperatures */ notes: string[];
   provenance: Provenance;
 }
 
@@ -169,6 +171,15 @@ export function sweepResult(plan: SweepPlan, chunks: ReadonlyMap<number, SweepPo
     gaps,
     done: points.size,
     partial: points.size < plan.points,
+    notes: sweepNotes(plan),
     provenance: provenanceOf(plan.design, plan.set),
   };
+}
+
+/** What the figures of a sweep leave out at its temperatures. */
+export function sweepNotes({ design, set, axes, figures }: SweepPlan): string[] {
+  const swept = axes.find(({ place }) => place.kind === 'temperature');
+  const base = toStack(design, set);
+  const temperatures_K = swept?.values ?? (base.ok ? [base.stack.temperature] : []);
+  return mobilityNotes(figures.map(({ path }) => ({ name: path, temperatures_K })));
 }

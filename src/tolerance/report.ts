@@ -25,6 +25,7 @@ export function variationReport(result: VariationResult): string {
     lines.push(`  ${yieldText(result.yield)}  all requirements`);
   }
   if (gaps.length > 0) lines.push('', `${gaps.length} variations have no answer (not met in the yields, not in the spreads); the first, number ${gaps[0].index}: ${gaps[0].reason}`);
+  if (result.notes.length > 0) lines.push('', ...result.notes);
   return `${lines.map((line) => line.replace(/[\r\n\u2028\u2029]+/g, ' ')).join('\n')}\n`;
 }
 

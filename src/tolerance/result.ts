@@ -1,4 +1,5 @@
 import { requirementQuantity } from '../design/requirement-quantities.ts';
+import { mobilityNotes } from '../result/mobility-note.ts';
 import { provenanceOf } from '../result/provenance.ts';
 import type { Provenance } from '../result/types.ts';
 import type { Distribution } from './draw.ts';
@@ -31,6 +32,7 @@ export interface VariationResult {
   figures: VariedFigureResult[];
   /** variations that meet every requirement; null without requirements */ yield: Yield | null;
   /** variations without an answer: not in the spreads, not met in the yields */ gaps: { index: number; reason: string }[];
+  /** what the figures leave out at their temperatures */ notes: string[];
   provenance: Provenance;
 }
 
@@ -65,6 +67,9 @@ export function variationResult(plan: VariationPlan, chunks: ReadonlyMap<number,
     figures,
     yield: requirements > 0 ? yieldOf(allMet, done) : null,
     gaps: drawn.flatMap(([, rows]) => rows.gaps),
+    notes: mobilityNotes(plan.columns.map((column) => (column.kind === 'figure'
+      ? { name: column.figure.path, temperatures_K: [plan.stack.temperature] }
+      : { name: column.requirement.quantity, temperatures_K: column.requirement.over === 'temperatureRange' ? plan.temperatures : [plan.stack.temperature] }))),
     provenance: provenanceOf(plan.design, plan.set),
   };
 }

@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
 import { run } from '../../src/cli/run.ts';
 import type { Design, Requirement } from '../../src/design/types.ts';
+import { MOBILITY_NOTE } from '../../src/result/mobility-note.ts';
 import type { SizedAnswer } from '../../src/requirements/size.ts';
 import type { Result } from '../../src/result/types.ts';
 import { contactDesign } from '../requirements/designs.ts';
@@ -39,11 +40,18 @@ const beyond = (d: Design): void => {
 describe('halfmark check', () => {
   it('prints one line a requirement, and ends with 0 where all are met', async () => {
     const { code, out, error } = await call('check', file([met, { quantity: 'degenerate', of: 'cap', min: true }]), '--tolerances', 'stated');
-    expect([code, error]).toEqual([0, '']);
+    expect([code, error]).toEqual([0, `halfmark: ${MOBILITY_NOTE}\n`]);
     const lines = out.trimEnd().split('\n');
     expect(lines).toHaveLength(2);
     expect(lines[0]).toMatch(/^met {8}sheet resistance of cap at most 1000 ohm; worst \d+(\.\d+)? ohm at (-40|125) degC, Ncap -10 %, tcap -3 nm; margin \d+(\.\d+)? times$/);
     expect(lines[1]).toMatch(/^met {8}cap degenerate; worst yes at .*; margin \d+(\.\d+)? kT$/);
+  });
+
+  it('says that mobilities are those of 300 K only where a figure rests on one away from it', async () => {
+    const room: Requirement = { quantity: 'sheetResistance', of: 'cap', max: '1 kohm' };
+    expect((await call('check', file([room]), '--tolerances', 'none')).error).toBe('');
+    expect((await call('check', file([room]), '--tolerances', 'none', '--set', 'temperature=350 K')).error).toBe(`halfmark: ${MOBILITY_NOTE}\n`);
+    expect((await call('check', file([{ quantity: 'degenerate', of: 'cap', min: true, over: 'temperatureRange' }]), '--tolerances', 'none')).error).toBe('');
   });
 
   it('ends with 1 where one is not met', async () => {

@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
 import { run } from '../../src/cli/run.ts';
 import { solveDesign } from '../../src/result/solve-design.ts';
+import { MOBILITY_NOTE } from '../../src/result/mobility-note.ts';
 import type { SweepResult } from '../../src/sweep/sweep.ts';
 import type { VariationResult } from '../../src/tolerance/result.ts';
 import { readCsv } from '../export/read-csv.ts';
@@ -46,6 +47,17 @@ describe('halfmark sweep', () => {
     expect(result.figures.find((f) => f.path === 'contacts.top.barrier_n_eV')!.values).toEqual([0.4, 0.4, 0.4, 0.6, 0.6, 0.6]);
   });
 
+  it('says that mobilities are those of 300 K where a figure rests on one away from it, in the notes and on standard error', async () => {
+    const over = (figure: string, ...more: string[]) => call(['sweep', fixture, '--variable', 'temperature', '--from=250 K', '--to', '350 K', '--points', '2', '--figure', figure, ...more]);
+    const resting = await over('layers.n.sheet_ohm');
+    expect([(JSON.parse(resting.out) as SweepResult).notes, resting.error]).toEqual([[MOBILITY_NOTE], `halfmark: ${MOBILITY_NOTE}\n`]);
+    const other = await over('layers.n.n_cm3');
+    expect([(JSON.parse(other.out) as SweepResult).notes, other.error]).toEqual([[], '']);
+    const room = [...along, '--figure', 'layers.n.sheet_ohm'];
+    expect((await call(room)).error).toBe('');
+    expect((await call([...room, '--set', 'temperature=77 K', '--csv'])).error).toBe(`halfmark: ${MOBILITY_NOTE}\n`);
+  });
+
   it('is put together from shards by laying them end to end', async () => {
     const whole = await call([...along, '--csv']);
     let parts = '';
@@ -72,6 +84,13 @@ describe('halfmark sweep', () => {
 
 describe('halfmark vary', () => {
   const base = ['vary', fixture, '--count', '40', '--seed', '9'];
+
+  it('says that mobilities are those of 300 K where a figure rests on one away from it', async () => {
+    const few = (...more: string[]) => call(['vary', fixture, '--count', '2', '--figure', 'layers.n.sheet_ohm', ...more]);
+    const cold = await few('--set', 'temperature=250 K', '--json');
+    expect([(JSON.parse(cold.out) as VariationResult).notes, cold.error]).toEqual([[MOBILITY_NOTE], `halfmark: ${MOBILITY_NOTE}\n`]);
+    expect((await few('--set', 'temperature=250 K')).out).toContain(`\n${MOBILITY_NOTE}\n`);
+  });
 
   it('takes another tolerance and distribution of an input', async () => {
     const { code, out } = await call(['vary', fixture, '--count', '4', '--tolerance', 'p thickness=3 %', '--draw=p thickness=uniform', '--tolerance', 'Nn=0 %', '--figure', 'layers.n.n_cm3']);

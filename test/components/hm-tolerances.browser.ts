@@ -3,6 +3,7 @@ import '../../components/hm-tolerances/hm-tolerances.ts';
 import type { HmTolerances } from '../../components/hm-tolerances/hm-tolerances.ts';
 import type { JobSpec } from '../../src/batch/spec.ts';
 import type { Design } from '../../src/design/types.ts';
+import { MOBILITY_NOTE } from '../../src/result/mobility-note.ts';
 import { poolReplies } from '../../src/workers/pool-replies.ts';
 import { WorkerPool, type PoolSide } from '../../src/workers/pool.ts';
 import { startPool } from '../../src/workers/start-pool.ts';
@@ -74,6 +75,12 @@ describe('the tolerance run', () => {
     expect(boxes[1].top).to.be.closeTo(boxes[0].top, 1);
     expect(count.shadowRoot!.querySelector('.complaint')!.getBoundingClientRect().top).to.be.at.least(boxes[1].bottom - 1);
     expect(button(element, 'Draw the variations').getBoundingClientRect().bottom).to.be.closeTo(boxes[1].bottom, 3);
+  });
+
+  it('says below the yield that mobilities are those of 300 K, where a figure away from it rests on one', async () => {
+    await put({ design: design((d) => { d.conditions.temperature = '320 K'; }), view: { count: '2', tolerances: 'stated', figures: [] } });
+    await run();
+    expect([...element.shadowRoot!.querySelectorAll('.found > .doc')].map((p) => p.textContent)).to.deep.equal([MOBILITY_NOTE]);
   });
 
   it('asks for as many variations as typed, with seed and distribution, and remembers them in the view', async () => {
