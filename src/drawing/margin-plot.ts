@@ -55,6 +55,8 @@ export function lineCode(index: number, style: Style): { dash?: string; width: n
 
 /** Below this width the curves' ends bear numbers and no words, px. */
 const NARROW = 620;
+/** Half the diamond at the best point, with its line, px: at the end of the range it reaches so far beyond the axis. */
+const DIAMOND = 7;
 /** Room for the axis on the right, of the text size. */
 const SECOND = 5.8;
 
@@ -72,14 +74,14 @@ export function drawMarginPlot(picture: MarginPicture, options: MarginPlotOption
   const small = style.smallSize;
   const narrow = width < NARROW * (style.textSize / 12);
   const measures = axesOf(curves);
-  const labelRoom = narrow ? 2.2 * small : Math.min(0.28 * width, 20 * small);
+  const labelRoom = narrow ? 2.2 * small + DIAMOND : Math.min(0.28 * width, 20 * small);
   const area = { left: 5.2 * small, right: width - labelRoom - (measures.length > 1 ? SECOND * small : 0.6 * small), top: (0.6 + 1.35 * rowsOver(narrow)) * small, bottom: height - 3.6 * small };
   if (!(area.right - area.left >= 60 && area.bottom - area.top >= 60)) throw new RangeError(`no room for a picture of margins: ${width} by ${height} px`);
   const scores = curves.flatMap(({ points }) => points.flatMap(({ score }) => (score === null ? [] : [score])));
   const window = scoreWindow(scores, picture.best?.score ?? null);
   const x = (value: number): number => area.left + (area.right - area.left) * (scale === 'log' ? Math.log(value / from) / Math.log(to / from) : (value - from) / (to - from));
   const y = (score: number): number => area.bottom - ((score - window[0]) / (window[1] - window[0])) * (area.bottom - area.top);
-  const frame: Frame = { picture, style, small, area, x, y, window, clip: `${prefix}-area`, narrow, labelX: area.right + (measures.length > 1 ? SECOND * small + 4 : 6), labelRoom: labelRoom - 8 };
+  const frame: Frame = { picture, style, small, area, x, y, window, clip: `${prefix}-area`, narrow, labelX: area.right + (measures.length > 1 ? SECOND * small + 4 : DIAMOND + 5), labelRoom: labelRoom - 8 - (measures.length > 1 ? 0 : DIAMOND - 1) };
   return {
     width, height, background: style.ground, font: style.font, gradients: [],
     clips: [{ id: frame.clip, x: area.left, y: area.top, w: area.right - area.left, h: area.bottom - area.top }],
@@ -230,7 +232,7 @@ function axes({ picture, style, small, area, x, y, window }: Frame, measures: re
       if (tick.at < window[0] || tick.at > window[1]) continue;
       const at = y(tick.at);
       shapes.push({ kind: 'line', ...line, x1: side, x2: side + 4 * out, y1: at, y2: at });
-      shapes.push(text('margin-tick', { x: side + 7 * out, y: at + 0.36 * small }, out < 0 ? 'end' : 'start', tick.runs));
+      shapes.push(text('margin-tick', { x: side + (DIAMOND + 3) * out, y: at + 0.36 * small }, out < 0 ? 'end' : 'start', tick.runs));
     }
     const title: TextRun[] = measure.kind === 'ratio' ? [{ text: 'margin, times' }] : [{ text: `margin${measure.unit === '' ? '' : ', '}` }, ...unitRuns(measure.unit)];
     shapes.push(text('margin-title', { x: i === 0 ? 1.1 * small : side + (SECOND - 0.6) * small, y: (area.top + area.bottom) / 2 }, 'middle', title, -90));

@@ -55,6 +55,25 @@ describe('the picture of margins', () => {
     expect(words(draw({}, 380), 'margin-label')).toEqual(['1', '2']);
   });
 
+  it('keeps words and ticks clear of the diamond, wherever the best point lies', () => {
+    const one = picture().curves.slice(0, 1);
+    for (const [curves, width] of [[one, 900], [one, 380], [picture().curves, 900], [picture().curves, 380]] as const) {
+      for (const value of [1e18, 1e20]) {
+        const d = draw({ curves, intervals: [], now: null, best: { value, text: String(value), score: 0 } }, width);
+        const xs = pathPoints(of<PathShape>(d, 'margin-best')[0].d).map(({ x }) => x);
+        // With half the line that it is drawn with.
+        const [left, right] = [Math.min(...xs) - 1, Math.max(...xs) + 1];
+        const labels = of<TextShape>(d, 'margin-label');
+        expect(labels).toHaveLength(curves.length);
+        for (const { x } of labels) expect(x).toBeGreaterThan(right + 2);
+        for (const { x, anchor } of of<TextShape>(d, 'margin-tick')) {
+          if (value === 1e18 && anchor === 'end') expect(x).toBeLessThan(left);
+          if (value === 1e20 && anchor === 'start') expect(x).toBeGreaterThan(right);
+        }
+      }
+    }
+  });
+
   it('tells lines apart without colour', () => {
     const style = styleOf('journal');
     const codes = Array.from({ length: 7 }, (_, i) => `${lineCode(i, style).dash} ${lineCode(i, style).width}`);
