@@ -38,6 +38,12 @@ export const styles = css`
     gap: 0.25rem 0.5rem;
     --field-width: 5.75rem;
   }
+  /* Both ends of a range stay beside each other, wherever the row breaks. */
+  .range {
+    display: flex;
+    align-items: flex-start;
+    gap: 0.5rem;
+  }
   .value {
     --field-width: 8rem;
   }

@@ -86,8 +86,10 @@ export class HmVariables extends LitElement {
         <summary>${tolerance === '' ? 'Tolerance, range' : `± ${tolerance}, range`}<span class="spoken"> of ${name}</span></summary>
         <div class="row">
           <hm-field label="Tolerance" hint="10 %" unit="%" .value=${tolerance} .complaint=${complaint('tolerance')} @field-accept=${(e: CustomEvent<string>) => this.set(i, { tolerance: e.detail === '' ? undefined : e.detail }, `tolerance of ${name}`)}></hm-field>
-          <hm-field label="Range, from" hint="none" .unit=${unit} .value=${range?.[0] ?? ''} .complaint=${complaint('range[0]') ?? complaint('range')} @field-accept=${(e: CustomEvent<string>) => this.setRange(i, 0, e.detail)}></hm-field>
-          <hm-field label="to" hint="none" .unit=${unit} .value=${range?.[1] ?? ''} .complaint=${complaint('range[1]')} @field-accept=${(e: CustomEvent<string>) => this.setRange(i, 1, e.detail)}></hm-field>
+          <div class="range">
+            <hm-field label="Range, from" hint="none" .unit=${unit} .value=${range?.[0] ?? ''} .complaint=${complaint('range[0]') ?? complaint('range')} @field-accept=${(e: CustomEvent<string>) => this.setRange(i, 0, e.detail)}></hm-field>
+            <hm-field label="to" hint="none" .unit=${unit} .value=${range?.[1] ?? ''} .complaint=${complaint('range[1]')} @field-accept=${(e: CustomEvent<string>) => this.setRange(i, 1, e.detail)}></hm-field>
+          </div>
           <button type="button" class="remove" @click=${() => tell(this, 'hm-edit', { next: removeVariable(this.design!, i), label: `variable ${name} taken out` })}>Take out<span class="spoken"> ${name}</span></button>
         </div>
         ${note === undefined ? nothing : html`<p class="note">${note}</p>`}

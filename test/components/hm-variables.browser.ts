@@ -45,6 +45,18 @@ describe('the variables of a design', () => {
     ]);
   });
 
+  it('keep both ends of a range beside each other, however narrow the column', async () => {
+    element.shadowRoot!.querySelector('details')!.open = true;
+    for (const width of [240, 280, 340, 420]) {
+      element.style.width = `${width}px`;
+      await element.updateComplete;
+      const [from, to] = ['Range, from', 'to'].map((label) => field(label).getBoundingClientRect());
+      expect(to.top, `${width} px`).to.equal(from.top);
+      expect(to.right, `${width} px`).to.be.at.most(element.getBoundingClientRect().right + 1);
+    }
+    element.style.width = '';
+  });
+
   it('are renamed in every expression that uses them', () => {
     const edits = heard(element, 'hm-edit');
     type('Name', 'Nc');
