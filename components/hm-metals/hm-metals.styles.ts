@@ -116,6 +116,9 @@ export const styles = css`
       width: 1%;
       max-width: 6.5rem;
     }
+    .at {
+      min-width: 5.5rem;
+    }
     .rivals ul {
       width: calc(100vw - 4.5rem);
     }

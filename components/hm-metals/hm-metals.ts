@@ -15,7 +15,9 @@ import { figureAt, focusedFigure, how, howLook, settleFigures, walkFigures } fro
 import { look } from '../shared/look.ts';
 import { panelLook, verdictLook } from '../shared/panel-look.ts';
 import { sortedTableLook, tableLook } from '../shared/table-look.ts';
+import { isNarrow, metalColumns, orderedCells, type MetalColumn } from './metal-columns.ts';
 import { resistivitySpan, spanScale, type SpanScale } from './resistivity-span.ts';
+import { WidthController } from '../shared/width-controller.ts';
 import { styles } from './hm-metals.styles.ts';
 
 /** What the project remembers of the ranking. */
@@ -60,6 +62,7 @@ export class HmMetals extends LitElement {
 
   private readonly job = new JobController<'metals'>(this, 'metals');
   private readonly again = new JobController<'metals'>(this, 'metals');
+  private readonly box = new WidthController(this);
   private taken: unknown = null;
 
   constructor() {
@@ -89,6 +92,10 @@ export class HmMetals extends LitElement {
   private get side(): Side {
     const { top, bottom } = this.design!;
     return this.view.side ?? (top.kind !== 'barrier' && bottom.kind === 'barrier' ? 'bottom' : 'top');
+  }
+
+  private get narrow(): boolean {
+    return isNarrow(this.box.width);
   }
 
   private get order(): MetalOrder {
@@ -162,23 +169,26 @@ export class HmMetals extends LitElement {
     const stale = rankingBasis(asked.design, side) !== rankingBasis(this.design!, side);
     const rows = orderedRows(shown.rows.map((row) => this.rivals.get(row.metal) ?? row), this.order, shown.majority);
     const scale = spanScale(rows, shown.limit);
+    const columns = metalColumns(this.narrow);
+    const headings: Record<MetalColumn, TemplateResult> = {
+      metal: this.heading('metal', 'Metal', ''),
+      barrier: this.heading('barrier', shown.majority === 'n' ? 'φBn' : 'φBp', 'eV'),
+      basis: html`<th scope="col">Barrier</th>`,
+      rho: this.heading('rho', 'Contact resistivity', 'Ω cm²'),
+      band: html`<th scope="col" class="figure">Least … most<span class="unit">Ω cm²</span></th>`,
+      worst: this.heading('worst', 'Worst', 'Ω cm²'),
+      drawn: html`<th scope="col"><span class="spoken">Drawn</span></th>`,
+      regime: this.heading('regime', 'Regime', ''),
+      acts: html`<th scope="col"><span class="spoken">Acts</span></th>`,
+    };
     return html`<div class=${stale ? 'stale' : ''}>
       ${stale ? html`<p class="stale-mark">Ranked for the design before the last change: rank again.</p>` : nothing}
       ${shown.ranking === null ? nothing : html`<p role="status">${rankingSentence(shown.ranking)}</p>`}
       ${(shown.ranking?.notes ?? []).map((note) => html`<p class="wrong">${note}.</p>`)}
+      ${this.narrow ? html`<p class="doc">Barriers, spans and regimes stand to the right: the table scrolls sideways.</p>` : nothing}
       <div class="scroll" role="region" aria-label="Metals, figures" tabindex="0">
         <table>
-          <thead><tr>
-            ${this.heading('metal', 'Metal', '')}
-            ${this.heading('barrier', shown.majority === 'n' ? 'φBn' : 'φBp', 'eV')}
-            <th scope="col">Barrier</th>
-            ${this.heading('rho', 'Contact resistivity', 'Ω cm²')}
-            <th scope="col" class="figure">Least … most<span class="unit">Ω cm²</span></th>
-            ${this.heading('worst', 'Worst', 'Ω cm²')}
-            <th scope="col"><span class="spoken">Drawn</span></th>
-            ${this.heading('regime', 'Regime', '')}
-            <th scope="col"><span class="spoken">Acts</span></th>
-          </tr></thead>
+          <thead><tr>${columns.map((column) => headings[column])}</tr></thead>
           <tbody @keydown=${walkFigures} @focusin=${focusedFigure}>${rows.map((row) => this.renderRow(row, shown, scale, asked, stale))}</tbody>
         </table>
       </div>
@@ -205,24 +215,22 @@ export class HmMetals extends LitElement {
     const barrier = shown(majority === 'n' ? 'barrierN' : 'barrierP', decimalText(majorityBarrier(row, majority)));
     const contact = this.design![side];
     const present = contact.kind === 'barrier' && contact.metal === row.metal;
-    const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack${contact.barrier === undefined ? '' : `, barrier given as ${contact.barrier}`}</b>` : nothing}</span></th>`;
     const open = this.open === row.metal;
     const value = valueOf(row);
-    const acts = html`<td class="figure">${row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`}</td>`;
+    const choice = row.reason !== null && row.rho_c_ohm_cm2 === null ? nothing : html`<button type="button" @click=${() => this.choose(row, side)} ?disabled=${stale}>Choose<span class="spoken"> ${row.metal}</span></button>`;
+    const name = html`<th scope="row">${row.metal}<span class="note">${row.own ? 'own entry' : row.name === row.metal ? '' : row.name}${present ? html` <b>on the stack${contact.barrier === undefined ? '' : `, barrier given as ${contact.barrier}`}</b>` : nothing}</span>${this.narrow ? choice : nothing}</th>`;
     const values = row.values.length === 0 ? nothing : html`<button type="button" class="plain" aria-expanded=${open} aria-controls=${open ? 'values-open' : nothing} @click=${() => (this.open = open ? null : row.metal)}>${row.values.length} ${row.values.length === 1 ? 'value' : 'values'}<span class="spoken"> of ${row.metal}</span> ${open ? '▾' : '▸'}</button>`;
-    const main = row.rho_c_ohm_cm2 === null
-      ? html`<tr class=${present ? 'present' : ''}>${name}<td class="figure">${barrier}</td><td>${value === null ? nothing : valueWords(value)} ${values}</td><td colspan="5">${row.blocks === null ? html`<span class="faint">No figure: ${row.reason}.</span>` : html`<span class="not-met">${row.reason}</span>`}</td>${acts}</tr>`
-      : html`<tr class=${present ? 'present' : ''}>
-          ${name}
-          <td class="figure">${barrier}</td>
-          <td>${value === null ? '–' : valueWords(value)} ${values}</td>
-          <td class="figure">${shown('rho', figureText(row.rho_c_ohm_cm2))}</td>
-          <td class="figure">${row.band_ohm_cm2 === null ? '–' : html`${shown('least', figureText(row.band_ohm_cm2[0], 2))} … ${shown('most', figureText(row.band_ohm_cm2[1], 2))}`}</td>
-          <td class="figure"><span class=${row.blocks !== null ? 'not-met' : limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${shown('worst', row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks')}</span><span class="note at">${row.blocks === null ? '' : 'no finite resistivity, '}${row.worst_at ?? row.reason}</span></td>
-          <td>${scale === null ? nothing : resistivitySpan(row, scale, limit)}</td>
-          <td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : html`E00/kT ${shown('e00OverKt', figureText(row.e00_over_kT, 2))}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>
-          ${acts}
-        </tr>`;
+    const common = { metal: name, barrier: html`<td class="figure">${barrier}</td>`, basis: html`<td>${value === null ? (row.rho_c_ohm_cm2 === null ? nothing : '–') : valueWords(value)} ${values}</td>`, acts: html`<td class="figure">${choice}</td>` };
+    const absence = row.rho_c_ohm_cm2 !== null ? null : row.blocks === null ? html`<span class="faint">No figure: ${row.reason}.</span>` : html`<span class="not-met">${row.reason}</span>`;
+    const cells = row.rho_c_ohm_cm2 === null ? common : {
+      ...common,
+      rho: html`<td class="figure">${shown('rho', figureText(row.rho_c_ohm_cm2))}</td>`,
+      band: html`<td class="figure">${row.band_ohm_cm2 === null ? '–' : html`${shown('least', figureText(row.band_ohm_cm2[0], 2))} … ${shown('most', figureText(row.band_ohm_cm2[1], 2))}`}</td>`,
+      worst: html`<td class="figure"><span class=${row.blocks !== null ? 'not-met' : limit === null || row.worst_ohm_cm2 === null ? '' : row.worst_ohm_cm2 <= limit ? 'met' : 'not-met'}>${shown('worst', row.blocks === null ? figureText(row.worst_ohm_cm2) : 'blocks')}</span><span class="note at">${row.blocks === null ? '' : 'no finite resistivity, '}${row.worst_at ?? row.reason}</span></td>`,
+      drawn: html`<td>${scale === null ? nothing : resistivitySpan(row, scale, limit)}</td>`,
+      regime: html`<td>${regimeOf(row)}<span class="note">${row.e00_over_kT === null ? nothing : html`E00/kT ${shown('e00OverKt', figureText(row.e00_over_kT, 2))}`}</span>${row.notes.map((note) => html`<span class="note">${note}</span>`)}</td>`,
+    };
+    const main = html`<tr class=${present ? 'present' : ''}>${orderedCells(metalColumns(this.narrow), cells, absence)}</tr>`;
     return html`${main}${open ? this.renderValues(row, asked, ranking, stale) : nothing}`;
   }
 
@@ -232,7 +240,7 @@ export class HmMetals extends LitElement {
       return figure === null ? text : how(figure, { content: text, walked: true });
     };
     const running = this.again.progress !== null;
-    return html`<tr class="rivals"><td colspan="9"><ul id="values-open" aria-label="Values of the barrier of ${row.metal}">
+    return html`<tr class="rivals"><td colspan=${metalColumns(this.narrow).length}><ul id="values-open" aria-label="Values of the barrier of ${row.metal}">
       ${row.values.map((value) => {
         const used = value.key === row.value;
         return html`<li>

@@ -107,6 +107,32 @@ describe('hm-contacts', () => {
     expect(told.at(-1)!.change.workings).to.deep.include({ text: figures[1].textContent, value: closeUps(design).kind === 'seen' ? (closeUps(design) as Extract<ReturnType<typeof closeUps>, { kind: 'seen' }>).contacts[0].barrier_p_eV : null });
   });
 
+  it('has resistivity, worst case and the choice of a metal in view first where the panel is narrow', async () => {
+    await setViewport({ width: 390, height: 844 });
+    try {
+      await withMetals();
+      await until('the narrow order', () => list().shadowRoot!.querySelectorAll('thead th')[1]?.textContent!.includes('resistivity'));
+      const frame = list().shadowRoot!.querySelector('.scroll')!.getBoundingClientRect();
+      const heads = [...list().shadowRoot!.querySelectorAll<HTMLElement>('thead th')];
+      expect(heads[1].textContent).to.contain('Contact resistivity');
+      expect(heads[2].textContent).to.contain('Worst');
+      expect(heads[2].getBoundingClientRect().right).to.be.at.most(frame.right + 0.5);
+      const row = list().shadowRoot!.querySelector('tbody tr')!;
+      expect(row.querySelector('td')!.textContent).to.match(/e−?\d/);
+      const choice = [...row.querySelectorAll('button')].find((candidate) => candidate.textContent!.startsWith('Choose'))!;
+      expect(choice.getBoundingClientRect().right).to.be.at.most(frame.right + 0.5);
+      // It stays there while the rest is scrolled to.
+      list().shadowRoot!.querySelector('.scroll')!.scrollLeft = 1e4;
+      expect(choice.getBoundingClientRect().left).to.be.within(frame.left, frame.right - 24);
+      expect(list().shadowRoot!.textContent).to.contain('the table scrolls sideways');
+      await expectAccessible(list());
+    } finally {
+      await setViewport({ width: 1200, height: 1000 });
+    }
+    await until('the wide order', () => list().shadowRoot!.querySelectorAll('thead th')[1].textContent!.includes('φB'));
+    expect(list().shadowRoot!.textContent).to.not.contain('scrolls sideways');
+  });
+
   it('asks the same of the ranked metals, row by row', async () => {
     await withMetals();
     const told = heard(element, 'hm-view');
