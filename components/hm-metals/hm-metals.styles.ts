@@ -43,6 +43,13 @@ export const styles = css`
     overflow-wrap: anywhere;
     font-weight: 600;
   }
+  tbody th button {
+    display: block;
+    white-space: nowrap;
+    overflow-wrap: normal;
+    margin-block-start: 4px;
+    padding-inline: 4px;
+  }
   thead th:first-child {
     z-index: 3;
   }

@@ -32,7 +32,7 @@ export function contactText(contact: ContactInput, solved: ContactResult | undef
   if (contact.kind === 'neutral') return ['neutral'];
   if (contact.kind === 'pinned') return ['pinned', raisedPowers(contact.level)];
   if (contact.kind === 'open') return contact.sheetCharge === undefined ? ['open'] : ['open', raisedPowers(contact.sheetCharge)];
-  if (contact.barrier !== undefined) return contact.metal === undefined ? ['barrier', raisedPowers(contact.barrier)] : [contact.metal, `barrier ${raisedPowers(contact.barrier)}`];
+  if (contact.barrier !== undefined) return contact.metal === undefined ? ['barrier', raisedPowers(contact.barrier)] : [contact.metal, `barrier ${raisedPowers(contact.barrier).replace(/ (?=\S+$)/, '\u00a0')}`];
   if (solved?.kind !== 'barrier' || solved.metal !== contact.metal) return [contact.metal ?? 'metal'];
   const [symbol, barrier] = type === 'p' ? ['φBp', solved.barrier_p_eV] : ['φBn', solved.barrier_n_eV];
   return [contact.metal ?? 'metal', ...(barrier === null ? [] : [`${symbol} ${decimalText(barrier, 2)}\u00a0eV`])];

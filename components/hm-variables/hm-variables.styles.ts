@@ -43,6 +43,7 @@ export const styles = css`
     display: flex;
     align-items: flex-start;
     gap: 0.5rem;
+    --field-width: 7.2rem;
   }
   .value {
     --field-width: 8rem;

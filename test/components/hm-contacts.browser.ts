@@ -121,6 +121,8 @@ describe('hm-contacts', () => {
       expect(row.querySelector('td')!.textContent).to.match(/e−?\d/);
       const choice = [...row.querySelectorAll('button')].find((candidate) => candidate.textContent!.startsWith('Choose'))!;
       expect(choice.getBoundingClientRect().right).to.be.at.most(frame.right + 0.5);
+      // On one line.
+      expect(choice.getBoundingClientRect().height).to.be.within(24, 36);
       // It stays there while the rest is scrolled to.
       list().shadowRoot!.querySelector('.scroll')!.scrollLeft = 1e4;
       expect(choice.getBoundingClientRect().left).to.be.within(frame.left, frame.right - 24);

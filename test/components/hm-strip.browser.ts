@@ -406,7 +406,7 @@ describe('hm-strip', () => {
     await sendKeys({ press: 'Enter' });
     await settled(s);
     expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ti', barrier: '0.61 eV', carrier: 'n' });
-    expect(s.renderRoot.querySelector('.contact.bottom')!.textContent).to.contain('Ti').and.to.contain('barrier 0.61 eV');
+    expect(s.renderRoot.querySelector('.contact.bottom')!.textContent).to.contain('Ti').and.to.contain('barrier 0.61\u00a0eV');
     // Another metal comes with its own barrier; what was typed can be taken up again.
     await choose('metal', 'Ni');
     expect(now()).to.deep.equal({ kind: 'barrier', imageForce: true, metal: 'Ni' });

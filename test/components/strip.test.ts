@@ -105,7 +105,7 @@ describe('texts of a column', () => {
     expect(contactText({ kind: 'barrier', metal: 'Ni' }, solved, 'p')).toEqual(['Ni', 'φBp 0.50\u00a0eV']);
     expect(contactText({ kind: 'barrier', metal: 'Ni' }, solved, 'n')).toEqual(['Ni', 'φBn 2.94\u00a0eV']);
     expect(contactText({ kind: 'barrier', metal: 'Ti' }, solved, 'n'), 'the result is of another metal').toEqual(['Ti']);
-    expect(contactText({ kind: 'barrier', metal: 'Ni', barrier: '0.6 eV' }, solved, 'n')).toEqual(['Ni', 'barrier 0.6 eV']);
+    expect(contactText({ kind: 'barrier', metal: 'Ni', barrier: '0.6 eV' }, solved, 'n')).toEqual(['Ni', 'barrier 0.6\u00a0eV']);
     expect(contactText({ kind: 'barrier', barrier: '0.6 eV' }, solved, 'n')).toEqual(['barrier', '0.6 eV']);
     expect(contactText({ kind: 'open', sheetCharge: '1e12 cm^-2' }, undefined)).toEqual(['open', '1e12 cm⁻²']);
   });
