@@ -178,7 +178,7 @@ export class HmMetals extends LitElement {
       band: html`<th scope="col" class="figure">Least … most<span class="unit">Ω cm²</span></th>`,
       worst: this.heading('worst', 'Worst', 'Ω cm²'),
       drawn: html`<th scope="col"><span class="spoken">Drawn</span></th>`,
-      regime: this.heading('regime', 'Regime', ''),
+      regime: this.heading('regime', 'Transport', ''),
       acts: html`<th scope="col"><span class="spoken">Acts</span></th>`,
     };
     return html`<div class=${stale ? 'stale' : ''}>
