@@ -39,7 +39,7 @@ export function workArea({ session, project, axes, plateView, style, stale, fram
   return html`<main>
     <div class="diagram">
       ${frame ? html`<p class="frame" role="status">The picture is a ${frame.words} of the film; close the film to see the design's own.</p>` : null}
-      <hm-plate .result=${frame?.result ?? result} .view=${plateView} .variants=${overlay.over} .stale=${stale} .depth_nm=${depth_nm} .chosen=${chosen} @plate-drawn=${plateDrawn}></hm-plate>
+      <hm-plate .result=${frame?.result ?? result} .view=${plateView} .variants=${overlay.over} .ownName=${overlay.shown.all.list.find(({ id }) => id === overlay.shown.all.open)?.name ?? ''} .stale=${stale} .depth_nm=${depth_nm} .chosen=${chosen} @plate-drawn=${plateDrawn}></hm-plate>
     </div>
     <div class="beside"><hm-rail .result=${frame?.result ?? result} .energy=${axes?.energy ?? null} .height=${axes?.height ?? 400} .depth_nm=${depth_nm} .styleName=${style} .stale=${stale}></hm-rail></div>
     <div class="under">

@@ -50,6 +50,7 @@ export class HmPlate extends LitElement {
     depth_nm: { attribute: false },
     chosen: { attribute: false },
     variants: { attribute: false },
+    ownName: {},
     open: { state: true },
     dark: { state: true },
     holding: { state: true },
@@ -64,6 +65,7 @@ export class HmPlate extends LitElement {
   /** where the reading cursor stands, nm; null: nowhere */ declare depth_nm: number | null;
   /** what is chosen in the strip: a zoom without a pointer goes there */ declare chosen: HalfmarkEvents['hm-choose'];
   /** other results to lay over this one */ declare variants: readonly Variant[];
+  /** what the plate's own result is called beside them; empty: it is not named */ declare ownName: string;
   declare private open: { dimensions: boolean; table: boolean };
   declare private dark: boolean;
   declare private holding: boolean;
@@ -88,6 +90,7 @@ export class HmPlate extends LitElement {
     this.depth_nm = null;
     this.chosen = null;
     this.variants = [];
+    this.ownName = '';
     this.open = { dimensions: false, table: false };
     this.dark = false;
     this.holding = false;
@@ -124,7 +127,7 @@ export class HmPlate extends LitElement {
   }
 
   protected override willUpdate(changed: PropertyValues): void {
-    const drawnFrom = ['result', 'view', 'live', 'stale', 'dark', 'variants'];
+    const drawnFrom = ['result', 'view', 'live', 'stale', 'dark', 'variants', 'ownName'];
     if (this.room.width === this.drawnWidth && !drawnFrom.some((name) => changed.has(name))) return;
     this.drawnWidth = this.room.width;
     this.plate = this.draw();
@@ -133,7 +136,7 @@ export class HmPlate extends LitElement {
   private draw(): Plate | null {
     if (!this.result || this.room.width < LEAST_WIDTH) return null;
     const view = heldView(this.seen);
-    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, variants: [...this.variants], width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
+    return drawPlate(this.result, { ...view, style: view.style ?? (this.dark ? 'dark' : 'light'), stale: this.stale, variants: [...this.variants], ...(this.ownName === '' ? {} : { base: this.ownName }), width: this.room.width, height: this.height, frame: 'bare', prefix: this.ids });
   }
 
   protected override updated(): void {

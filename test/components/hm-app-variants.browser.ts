@@ -43,6 +43,8 @@ describe('variants on the page', function () {
     await until('the difference in the ledger', () => (part('hm-desk').shadowRoot!.querySelector('hm-ledger')?.shadowRoot!.querySelectorAll('.change').length ?? 0) > 0, PATIENCE);
     expect(part('hm-plate').shadowRoot!.querySelectorAll('[data-role="variant-conduction-edge"]')).to.have.length(1);
 
+    expect([...part('hm-plate').shadowRoot!.querySelectorAll('[data-role="variant-name"]')].map((e) => e.textContent!.trim())).to.deep.equal(['cold', 'base']);
+
     act({ act: 'open', id: base.id });
     await until('the first one', () => design().conditions.temperature === before && solvedNow(), PATIENCE);
     // What was laid over is the one on the page now: it is not laid over itself.

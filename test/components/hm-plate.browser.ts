@@ -31,6 +31,12 @@ describe('hm-plate', () => {
     expect(roles).to.include.members(['conduction-edge', 'valence-edge', 'fermi-level']);
   });
 
+  it('names its own result at the head of the key of those laid over it', async () => {
+    const names = (p: HmPlate): string[] => [...p.renderRoot.querySelectorAll('[data-role="variant-name"]')].map((e) => e.textContent!.trim());
+    expect(names(await plate({ ownName: 'cold', variants: [{ name: 'base', result: result! }] }))).to.deep.equal(['cold', 'base']);
+    expect(names(await plate({ ownName: 'cold' }))).to.deep.equal([]);
+  });
+
   it('has no style attribute, which a strict content security policy would refuse', async () => {
     const p = await plate({ view: { vacuum: true } });
     expect(p.renderRoot.querySelectorAll('[style]').length).to.equal(0);
