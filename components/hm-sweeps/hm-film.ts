@@ -228,6 +228,7 @@ export class HmFilm extends LitElement {
           @keydown=${this.key} @pointerdown=${this.press} @pointermove=${(e: PointerEvent) => e.buttons === 1 && this.press(e)}></div>
       </div>
       <p class="reading" aria-hidden="true">${at === null ? nothing : words}</p>
+      ${this.frames.some((f) => f && 'regimes' in f && f.regimes.includes('degenerate')) ? html`<p class="doc">Degenerate: EF inside its band or within 3 kT of it. The regime map draws these two apart.</p>` : nothing}
       ${this.renderTable(plan)}
       ${[...new Set(this.frames.flatMap((f) => (f && 'gap' in f ? [f.gap] : [])))].map((reason) => html`<p class="wrong">Frames without an answer: ${reason.replace(/^no accepted answer: /, '')}.</p>`)}`;
   }

@@ -208,6 +208,9 @@ describe('the temperature film', function () {
     await made();
     const frames = heard(element, 'hm-frame');
     expect(film().shadowRoot!.querySelectorAll('[data-role="film-stretch"]').length).to.be.at.least(2);
+    // A word that the regime map uses for less is explained where it stands.
+    const degenerate = [...film().shadowRoot!.querySelectorAll('tbody td')].some((cell) => cell.textContent === 'degenerate');
+    expect(film().shadowRoot!.textContent!.includes('within 3 kT')).to.equal(degenerate);
     press(slider(), 'ArrowRight');
     press(slider(), 'ArrowRight');
     await film().updateComplete;
