@@ -99,7 +99,7 @@ function workOf(source: string, own: boolean): string {
 
 /** Where a value stands and how it was checked, in words. */
 export function checkedWords({ checked, confidence }: ValueOrigin, own: boolean): string {
-  if (own || checked === null) return own ? 'own value: as you entered it' : 'not said';
+  if (own || checked === null) return own ? 'own value of this design' : 'not said';
   const words = { page: 'seen in print', memory: 'from memory of the cited work', computed: 'derived from the cited work' }[checked];
   return confidence === '' ? words : `${words}; confidence ${confidence}`;
 }
