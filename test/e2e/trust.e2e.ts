@@ -94,7 +94,7 @@ scenario('Markup in every name of a design stays text on the page and in every f
     await at(page, [...desk, tag], (element) => [...element.shadowRoot!.querySelectorAll('details')].forEach((details) => (details.open = true)));
   }
   await at(page, ['hm-app', 'hm-notes'], (notes) => [...notes.shadowRoot!.querySelectorAll('details')].forEach((details) => (details.open = true)));
-  assert.equal(await at(page, ['hm-app', 'hm-notes', '.first'], (line) => line.textContent!.slice(0, 30)), HOSTILE.slice(0, 30));
+  assert.equal(await at(page, ['hm-app', 'hm-notes', '.inforce'], (line) => line.textContent!.slice(0, 30)), HOSTILE.slice(0, 30));
   await untilSolved(page);
   const after = await elements(page);
   assert.ok(!after.includes('img') || before.has('img'));
